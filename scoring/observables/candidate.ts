@@ -1,0 +1,31 @@
+import type { CurveRows } from '../geometry/curves.ts'
+import type { IntersectionNumbers } from '../geometry/intersectionNumbers.ts'
+import type { DivisorTopology } from '../geometry/divisors.ts'
+import type { Polytope } from '../geometry/polytope.ts'
+import type { ReferencePoint } from '../geometry/referencePoint.ts'
+import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
+import type { Volumes } from '../geometry/volumes.ts'
+import type { BasisSpectrum } from '../geometry/spectra.ts'
+
+/**
+ * One candidate as the observables see it: the canonical representative of a 2-face class, with every later
+ * stage computed on first use and kept. All cone and metric quantities are at scale 1 (at the reference point).
+ */
+export interface Candidate {
+  readonly polytope: Polytope
+  readonly symmetryOrder: number
+  readonly class: TwoFaceClass
+  readonly classKey: string
+  /** Stage "topology". */
+  numbers(): IntersectionNumbers
+  divisorTopology(): DivisorTopology
+  curves(): CurveRows
+  /** Stage "cone". */
+  reference(): ReferencePoint
+  volumes(): Volumes
+  /** Stage "metric". Largest eigenvalue of the divisor spectrum, by Lanczos. */
+  topEigenvalue(): number
+  /** All non-zero eigenvalues of the field-space metric over all prime toric divisors, ascending. */
+  divisorSpectrum(): Float64Array
+  basisSpectrum(): BasisSpectrum
+}
