@@ -25,7 +25,8 @@ export default tseslint.config(
     files: ['scoring/**'],
     rules: {
       ...forbid({
-        regex: '^(\\.\\./)+(shared|server|src)/|^(node:)?(fs|path|http|net|child_process|worker_threads)|^(express|typeorm|react)',
+        regex:
+          '^(\\.\\./)+(shared|server|src)/|^(node:)?(fs|path|http|net|child_process|worker_threads)|^(express|typeorm|react)',
         message: 'scoring/ is pure: no I/O, nothing from shared/, server/ or src/.',
       }),
       'no-restricted-properties': [
@@ -57,7 +58,10 @@ export default tseslint.config(
     files: ['server/**'],
     rules: forbid(
       { regex: '^(\\.\\./)+src/', message: 'server/ may not import the client.' },
-      { regex: '^(\\.\\./)+scoring/(?!index\\.ts)', message: "Import scoring's front door, scoring/index.ts." },
+      {
+        regex: '^(\\.\\./)+scoring/(?!index\\.ts)',
+        message: "Import scoring's front door, scoring/index.ts.",
+      },
     ),
   },
   {
@@ -67,7 +71,10 @@ export default tseslint.config(
       ...reactHooks.configs.recommended.rules,
       ...forbid(
         { regex: '^(\\.\\./)+server/', message: 'The client may not import the server.' },
-        { regex: '^(\\.\\./)+scoring/(?!index\\.ts)', message: "Import scoring's front door, scoring/index.ts." },
+        {
+          regex: '^(\\.\\./)+scoring/(?!index\\.ts)',
+          message: "Import scoring's front door, scoring/index.ts.",
+        },
       ),
     },
   },

@@ -7,7 +7,10 @@ import { fileURLToPath } from 'node:url'
 const root = fileURLToPath(new URL('../..', import.meta.url))
 const out = join(root, 'dist', 'node')
 rmSync(out, { recursive: true, force: true })
-const result = spawnSync('npx', ['tsc', '-p', 'server/setup/tsconfig.node.json'], { cwd: root, stdio: 'inherit' })
+const result = spawnSync('npx', ['tsc', '-p', 'server/setup/tsconfig.node.json'], {
+  cwd: root,
+  stdio: 'inherit',
+})
 if (result.status !== 0) process.exit(result.status ?? 1)
 cpSync(join(root, 'server/library/data'), join(out, 'server/library/data'), { recursive: true })
 writeFileSync(join(out, 'package.json'), '{ "type": "module" }\n')

@@ -44,14 +44,18 @@ function checkCompiler() {
     ['python3', 'python3'],
   ].filter(([command]) => !onPath(command))
   if (missing.length === 0) return
-  say(`setup: missing ${missing.map(([command]) => command).join(', ')}, needed to compile SQLite for Node. On Debian:`)
+  say(
+    `setup: missing ${missing.map(([command]) => command).join(', ')}, needed to compile SQLite for Node. On Debian:`,
+  )
   say(`  apt-get install -y ${missing.map(([, name]) => name).join(' ')}`)
   process.exit(1)
 }
 
 /** node_modules is current when it was installed from this very lock file. */
 function installPackages() {
-  const lock = createHash('sha256').update(readFileSync(join(root, 'package-lock.json'))).digest('hex')
+  const lock = createHash('sha256')
+    .update(readFileSync(join(root, 'package-lock.json')))
+    .digest('hex')
   const stamp = join(root, 'node_modules', '.installed-from')
   if (existsSync(stamp) && readFileSync(stamp, 'utf8') === lock) return
   checkCompiler()
@@ -82,7 +86,16 @@ function generateParser() {
 
 function buildApplication() {
   const stamp = join(root, 'dist', '.built')
-  const sources = ['src', 'server', 'shared', 'scoring', 'index.html', 'vite.config.ts', 'tailwind.config.ts', 'package.json']
+  const sources = [
+    'src',
+    'server',
+    'shared',
+    'scoring',
+    'index.html',
+    'vite.config.ts',
+    'tailwind.config.ts',
+    'package.json',
+  ]
   if (existsSync(stamp) && statSync(stamp).mtimeMs > newestChange(sources)) return
   say('setup: building ...')
   run('npm', ['run', '--silent', 'build'])

@@ -16,6 +16,8 @@ export default class ClosingLine implements Reporter {
       }
     }
     // After the default reporter's own summary, so that this is the last line.
-    process.on('exit', () => process.stdout.write(`\n${passed} passed, ${failed} failed, ${skipped} skipped\n`))
+    process.on('exit', () =>
+      process.stdout.write(`\n${passed} passed, ${failed} failed, ${skipped} skipped\n`),
+    )
   }
 }

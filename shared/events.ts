@@ -1,0 +1,26 @@
+import { z } from 'zod'
+import { previewSchema } from './targets.ts'
+import { searchProgressSchema, searchStates } from './searches.ts'
+import { nullSummarySchema } from './nullSamples.ts'
+
+/**
+ * GET /api/events?campaign=ID: server-sent events, one stream per tab. The event's name is its `kind`. The stream
+ * ends (with a `closed` event first) on sign-out or when the role in the campaign is lost.
+ */
+export const streamEventSchema = z.discriminatedUnion('kind', [
+  z.object({
+    kind: z.literal('search'),
+    id: z.string(),
+    state: z.enum(searchStates),
+    progress: searchProgressSchema,
+  }),
+  z.object({ kind: z.literal('null'), searchId: z.string(), summary: nullSummarySchema }),
+  z.object({ kind: z.literal('preview'), preview: previewSchema }),
+  z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
+  z.object({
+    kind: z.literal('changed'),
+    what: z.enum(['targets', 'searches', 'shortlists', 'verdicts', 'members']),
+  }),
+  z.object({ kind: z.literal('closed'), reason: z.enum(['signed-out', 'role-lost', 'shutting-down']) }),
+])
+export type StreamEvent = z.infer<typeof streamEventSchema>

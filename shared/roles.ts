@@ -1,0 +1,25 @@
+import { z } from 'zod'
+
+export const roles = ['lead', 'investigator', 'reviewer', 'reader'] as const
+export const roleSchema = z.enum(roles)
+export type Role = (typeof roles)[number]
+
+/** The one table of who may do what in a campaign; server and client both read it. */
+export const permissions = {
+  'campaign.read': ['lead', 'investigator', 'reviewer', 'reader'],
+  'campaign.edit': ['lead'],
+  'members.manage': ['lead'],
+  'polytopes.import': ['lead', 'investigator'],
+  'targets.edit': ['lead', 'investigator'],
+  'previews.run': ['lead', 'investigator', 'reviewer', 'reader'],
+  'searches.run': ['lead', 'investigator'],
+  'shortlists.edit': ['lead', 'investigator'],
+  'verdicts.give': ['lead', 'investigator', 'reviewer'],
+  'exports.read': ['lead', 'investigator', 'reviewer', 'reader'],
+} as const satisfies Record<string, readonly Role[]>
+
+export type Permission = keyof typeof permissions
+
+export function may(role: Role | null | undefined, permission: Permission): boolean {
+  return role != null && (permissions[permission] as readonly Role[]).includes(role)
+}

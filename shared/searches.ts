@@ -1,0 +1,84 @@
+import { z } from 'zod'
+import { scopeSchema } from './polytopes.ts'
+import { nullSummarySchema } from './nullSamples.ts'
+import { scoredRowSchema } from './outcomes.ts'
+
+export const searchStates = ['queued', 'running', 'paused', 'finished', 'cancelled', 'failed'] as const
+export type SearchState = (typeof searchStates)[number]
+
+/** POST /api/campaigns/:campaign/searches */
+export const createSearchSchema = z.object({
+  name: z.string().trim().max(80).optional(),
+  targetVersionId: z.string(),
+  scope: scopeSchema,
+  method: z.enum(['annealing', 'random']).default('annealing'),
+  /** Distinct evaluations, over all islands. */
+  budget: z.number().int().min(10).max(1_000_000),
+  seed: z
+    .number()
+    .int()
+    .min(0)
+    .max(2 ** 31),
+  islands: z.number().int().min(1).max(16).default(2),
+  /** How many of the best distinct candidates to keep. */
+  keep: z.number().int().min(1).max(500).default(100),
+})
+export type CreateSearch = z.infer<typeof createSearchSchema>
+
+export const searchProgressSchema = z.object({
+  evaluations: z.number().int(),
+  proposals: z.number().int(),
+  accepted: z.number().int(),
+  restarts: z.number().int(),
+  feasible: z.number().int(),
+  infeasible: z.number().int(),
+  undefined: z.number().int(),
+  best: z.number().nullable(),
+  bestKey: z.string().nullable(),
+  /** Best-so-far over evaluations (merged over islands), thinned to at most 400 steps. */
+  curve: z.array(z.tuple([z.number(), z.number()])),
+  /** Per island: [evaluations, best]. */
+  islands: z.array(
+    z.object({ evaluations: z.number().int(), best: z.number().nullable(), exhausted: z.boolean() }),
+  ),
+  exhausted: z.boolean(),
+  evaluationsPerSecond: z.number().nullable(),
+  secondsLeft: z.number().nullable(),
+})
+export type SearchProgress = z.infer<typeof searchProgressSchema>
+
+export const searchSummarySchema = z.object({
+  id: z.string(),
+  name: z.string(),
+  state: z.enum(searchStates),
+  method: z.string(),
+  targetId: z.string(),
+  targetName: z.string(),
+  targetVersion: z.number().int(),
+  polytopes: z.number().int(),
+  budget: z.number().int(),
+  seed: z.number().int(),
+  evaluations: z.number().int(),
+  best: z.number().nullable(),
+  createdAt: z.string(),
+  finishedAt: z.string().nullable(),
+  author: z.string(),
+})
+export type SearchSummary = z.infer<typeof searchSummarySchema>
+
+export const searchDetailSchema = searchSummarySchema.extend({
+  targetVersionId: z.string(),
+  rule: z.string(),
+  scoringHash: z.string(),
+  engineVersion: z.string(),
+  scope: scopeSchema,
+  islands: z.number().int(),
+  keep: z.number().int(),
+  progress: searchProgressSchema,
+  null: nullSummarySchema.nullable(),
+  /** Best distinct candidates so far, at most 20. */
+  top: z.array(scoredRowSchema),
+  failure: z.object({ code: z.string(), message: z.string() }).nullable(),
+  shortlists: z.array(z.object({ id: z.string(), name: z.string() })),
+})
+export type SearchDetail = z.infer<typeof searchDetailSchema>
