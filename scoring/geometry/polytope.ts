@@ -1,3 +1,12 @@
+import { facePlane } from './facePlane.ts'
+import type { Faces } from './faces.ts'
+import { facesOf } from './faces.ts'
+import { hodgeNumbers, latticeLength } from './hodge.ts'
+import { compareLexicographic } from './integers.ts'
+import type { LatticeCount } from './latticeCount.ts'
+import { countLatticePoints } from './latticeCount.ts'
+import { reflexiveHull } from './reflexiveHull.ts'
+
 /**
  * A reflexive polytope in Z^4 on the N side (the side whose points become divisors), with everything that
  * does not depend on a triangulation. Indices i, j, k run over `points` everywhere.
@@ -53,4 +62,125 @@ export interface TwoFace {
   readonly corners: Int32Array
   /** Normalised area: the number of triangles in every unimodular triangulation. */
   readonly area: number
+}
+
+/**
+ * The reflexive polytope that is the hull of the given points, in the coordinates given. A function of the hull
+ * alone: neither the order of the points nor points that are no vertices matter.
+ *
+ * @param rows integer points of N, 4 coordinates each; at least the vertices
+ * @throws InputError with one of the codes polytope.wrong-shape, .not-integers, .unsafe-integers,
+ *   .too-few-points, .not-four-dimensional, .coordinates-too-large, .too-many-vertices, .origin-not-interior,
+ *   .facet-distance; paths are relative to `rows`
+ */
+export function polytopeFromPoints(rows: readonly (readonly number[])[]): Polytope {
+  const found = reflexiveHull(rows)
+  const vertices = found.vertices.flat()
+  const facets = found.facets.flat()
+  const faces = facesOf(vertices, facets)
+  const own = countLatticePoints(vertices, facets, faces)
+  // In the dual, facets and vertices change places, and so do 2-faces and edges.
+  const dual = countLatticePoints(facets, vertices, { edges: faces.twoFaces, twoFaces: faces.edges })
+  return assemble(vertices, facets, faces, own, dual)
+}
+
+/** The dual polytope, on the M side: the hull of the facet normals. Its facet normals are this one's vertices. */
+export function dualPolytope(polytope: Polytope): Polytope {
+  const rows: number[][] = []
+  for (let a = 0; a < polytope.facetCount; a++) rows.push([...polytope.facets.subarray(4 * a, 4 * a + 4)])
+  return polytopeFromPoints(rows)
+}
+
+function assemble(
+  vertices: readonly number[],
+  facets: readonly number[],
+  faces: Faces,
+  own: LatticeCount,
+  dual: LatticeCount,
+): Polytope {
+  const vertexCount = vertices.length / 4
+  const inEdges = [...own.inEdges].sort((a, b) => compareLexicographic(a.point, b.point))
+  const inTwoFaces = [...own.inTwoFaces].sort((a, b) => compareLexicographic(a.point, b.point))
+  const edgePoints = vertexCount + inEdges.length
+  const points = Int32Array.from([...vertices, ...[...inEdges, ...inTwoFaces].flatMap(({ point }) => point)])
+  const pointCount = points.length / 4
+  const carrierDimension = new Uint8Array(pointCount).fill(1, vertexCount).fill(2, edgePoints)
+  const dualLengths = faces.twoFaces.map(({ ends }) => latticeLength(facets, ends[0], ends[1]))
+  const edgeLengths = faces.edges.map(({ ends }) => latticeLength(vertices, ends[0], ends[1]))
+
+  const dualInterior = new Int32Array(pointCount)
+  const components = new Int32Array(pointCount).fill(1)
+  dualInterior.set(dual.facetInterior)
+  inEdges.forEach(({ face }, i) => (dualInterior[vertexCount + i] = dual.twoFaceInterior[face]))
+  inTwoFaces.forEach(({ face }, i) => {
+    dualInterior[edgePoints + i] = dualLengths[face] - 1
+    components[edgePoints + i] = dualLengths[face]
+  })
+
+  const onEdge = faces.edges.map(({ ends }) => [...ends])
+  inEdges.forEach(({ face }, i) => onEdge[face].push(vertexCount + i))
+  const onTwoFace = pointsOfTwoFaces(faces, onEdge, vertexCount)
+  inTwoFaces.forEach(({ face }, i) => onTwoFace[face].push(edgePoints + i))
+
+  return {
+    points,
+    pointCount,
+    vertexCount,
+    carrierDimension,
+    dualInterior,
+    components,
+    facets: Int32Array.from(facets),
+    facetCount: facets.length / 4,
+    twoFaces: faces.twoFaces.map(({ ends, on }, f) => twoFace(points, ends, on, onTwoFace[f], dualLengths[f])),
+    edges: onEdge.map((members) => alongEdge(points, members)),
+    ...hodgeNumbers(faces, own, dual, dualLengths, edgeLengths),
+    latticePoints: own.total,
+    dualLatticePoints: dual.total,
+  }
+}
+
+/** Vertices and edge points of each 2-face, ascending. */
+function pointsOfTwoFaces(faces: Faces, onEdge: readonly (readonly number[])[], vertexCount: number): number[][] {
+  const edgesOfVertex: number[][] = Array.from({ length: vertexCount }, () => [])
+  faces.edges.forEach(({ ends }, e) => edgesOfVertex[ends[0]].push(e))
+  return faces.twoFaces.map(({ ends, on }) => {
+    const members = [...on]
+    for (const v of on) {
+      for (const e of edgesOfVertex[v]) {
+        const { on: facetsOfEdge } = faces.edges[e]
+        if (facetsOfEdge.includes(ends[0]) && facetsOfEdge.includes(ends[1])) members.push(...onEdge[e].slice(2))
+      }
+    }
+    return members.sort((i, j) => i - j)
+  })
+}
+
+function twoFace(
+  points: Int32Array,
+  facets: readonly [number, number],
+  vertices: readonly number[],
+  members: readonly number[],
+  dualLength: number,
+): TwoFace {
+  const coordinates = new Float64Array(4 * members.length)
+  members.forEach((i, position) => coordinates.set(points.subarray(4 * i, 4 * i + 4), 4 * position))
+  const { plane, corners, area } = facePlane(
+    coordinates,
+    vertices.map((v) => members.indexOf(v)),
+  )
+  return {
+    facets,
+    dualLength,
+    points: Int32Array.from(members),
+    plane,
+    corners: Int32Array.from(corners, (position) => members[position]),
+    area,
+  }
+}
+
+/** The points of an edge in order along it; the first two given are its ends. */
+function alongEdge(points: Int32Array, members: readonly number[]): Int32Array {
+  const [start, end] = members
+  const along = (i: number): number => latticeLength(points, start, i)
+  return Int32Array.from([start, ...members.slice(2).sort((i, j) => along(i) - along(j)), end])
 }

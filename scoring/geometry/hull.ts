@@ -1,0 +1,222 @@
+import { InvariantError } from '../errors.ts'
+import { compareLexicographic, gcd, gcdBig } from './integers.ts'
+
+/**
+ * A facet of a hull: <normal, x> + offset >= 0 on the hull, with equality on the facet. The normal is primitive,
+ * so for integer points the offset is the lattice distance of the facet from the origin (positive inside).
+ */
+export interface HullFacet {
+  readonly normal: readonly number[]
+  readonly offset: number
+  /** Positions in `Hull.vertices` of the facet's vertices, ascending. */
+  readonly vertices: readonly number[]
+}
+
+export interface Hull {
+  /** Indices of the vertices among the points given. */
+  readonly vertices: readonly number[]
+  readonly facets: readonly HullFacet[]
+}
+
+/** More vertices than this and the hull is given up: incidences are kept in two 32-bit words. */
+export const hullVertexLimit = 64
+
+/** Coordinates up to this size keep normals below 6 (2B)^3 and offsets below 192 B^4 < 2^53 exact in doubles. */
+export const hullCoordinateLimit = 2000
+
+interface WorkFacet {
+  /** Normal, then offset. */
+  readonly form: readonly number[]
+  readonly low: number
+  readonly high: number
+  checked: boolean
+}
+
+/**
+ * Convex hull in four dimensions, exact, by double description over the cone of (x, 1): facets are the extreme
+ * rays of the dual cone. Only vertices of the hull are ever inserted (each maximises a facet's violation, ties
+ * broken lexicographically), so points in faces cost one evaluation per facet.
+ *
+ * @param points integer points of size at most `hullCoordinateLimit`, pairwise distinct
+ * @returns the hull; `undefined` when it has more than `hullVertexLimit` vertices
+ * @throws InvariantError when the points do not span four dimensions affinely
+ */
+export function hull(points: readonly (readonly number[])[]): Hull | undefined {
+  const inserted = startSimplex(points)
+  let facets = simplexFacets(inserted.map((index) => points[index]))
+  for (;;) {
+    const open = facets.find((facet) => !facet.checked)
+    if (open === undefined) break
+    const outermost = mostViolating(open.form, points)
+    if (outermost === undefined) {
+      open.checked = true
+      continue
+    }
+    if (inserted.length === hullVertexLimit) return undefined
+    inserted.push(outermost)
+    facets = insert(facets, points[outermost], inserted.length - 1)
+  }
+  return {
+    vertices: inserted,
+    facets: facets.map((facet) => ({
+      normal: facet.form.slice(0, 4),
+      offset: facet.form[4],
+      vertices: inserted.map((_, position) => position).filter((position) => contains(facet, position)),
+    })),
+  }
+}
+
+/** Five affinely independent vertices of the hull: each maximises a functional that vanishes on those before. */
+function startSimplex(points: readonly (readonly number[])[]): number[] {
+  const chosen = [extreme(points, (p) => p[0]), extreme(points, (p) => -p[0])]
+  while (chosen.length < 5) {
+    const base = points[chosen[0]]
+    const directions = chosen.slice(1).map((index) => difference(points[index], base))
+    const functionals = annihilators(directions)
+    let found: number | undefined
+    for (const functional of functionals) {
+      const level = value4(functional, base)
+      for (const sign of [1, -1]) {
+        const index = extreme(points, (p) => sign * (value4(functional, p) - level))
+        if (value4(functional, points[index]) !== level) {
+          found = index
+          break
+        }
+      }
+      if (found !== undefined) break
+    }
+    if (found === undefined) throw new InvariantError('A hull was asked for points in a hyperplane.')
+    chosen.push(found)
+  }
+  return chosen
+}
+
+/** Index of the point that maximises the functional; ties go to the lexicographically greatest, a vertex. */
+function extreme(points: readonly (readonly number[])[], functional: (point: readonly number[]) => number): number {
+  let best = 0
+  let height = functional(points[0])
+  for (let i = 1; i < points.length; i++) {
+    const here = functional(points[i])
+    if (here > height || (here === height && compareLexicographic(points[i], points[best]) > 0)) {
+      best = i
+      height = here
+    }
+  }
+  return best
+}
+
+/** Functionals that span the annihilator of one to three independent directions. */
+function annihilators(directions: readonly (readonly number[])[]): number[][] {
+  const found: number[][] = []
+  const fill = Array.from({ length: 3 - directions.length }, () => 0)
+  // Completing by unit vectors in every way gives a spanning set: each is orthogonal to all rows it was made of.
+  const complete = (from: number, units: readonly number[]): void => {
+    if (units.length === fill.length) {
+      const rows = [...directions, ...units.map((axis) => [0, 1, 2, 3].map((i) => (i === axis ? 1 : 0)))]
+      const functional = orthogonalTo(rows)
+      if (functional.some((entry) => entry !== 0)) found.push(functional)
+      return
+    }
+    for (let axis = from; axis < 4; axis++) complete(axis + 1, [...units, axis])
+  }
+  complete(0, [])
+  return found
+}
+
+/** The vector of signed 3 x 3 minors of three rows: orthogonal to each of them. */
+function orthogonalTo(rows: readonly (readonly number[])[]): number[] {
+  const [a, b, c] = rows
+  const minor = (i: number, j: number, k: number): number =>
+    a[i] * (b[j] * c[k] - b[k] * c[j]) - a[j] * (b[i] * c[k] - b[k] * c[i]) + a[k] * (b[i] * c[j] - b[j] * c[i])
+  return [minor(1, 2, 3), -minor(0, 2, 3), minor(0, 1, 3), -minor(0, 1, 2)]
+}
+
+function simplexFacets(corners: readonly (readonly number[])[]): WorkFacet[] {
+  return corners.map((opposite, position) => {
+    const others = corners.filter((_, i) => i !== position)
+    const base = others[0]
+    const normal = primitive(orthogonalTo(others.slice(1).map((corner) => difference(corner, base))))
+    const offset = -value4(normal, base)
+    const sign = value4(normal, opposite) + offset > 0 ? 1 : -1
+    return { form: [...normal, offset].map((entry) => sign * entry), low: 31 & ~(1 << position), high: 0, checked: false }
+  })
+}
+
+function mostViolating(form: readonly number[], points: readonly (readonly number[])[]): number | undefined {
+  const [m0, m1, m2, m3, offset] = form
+  let best: number | undefined
+  let least = 0
+  for (let i = 0; i < points.length; i++) {
+    const point = points[i]
+    const here = m0 * point[0] + m1 * point[1] + m2 * point[2] + m3 * point[3] + offset
+    if (here > least || here === 0) continue
+    if (here < least || (best !== undefined && compareLexicographic(point, points[best]) > 0)) {
+      best = i
+      least = here
+    }
+  }
+  return best
+}
+
+function insert(facets: readonly WorkFacet[], point: readonly number[], position: number): WorkFacet[] {
+  const low = position < 32 ? 1 << position : 0
+  const high = position < 32 ? 0 : 1 << (position - 32)
+  const values = facets.map((facet) => value4(facet.form, point) + facet.form[4])
+  const kept: WorkFacet[] = []
+  facets.forEach((facet, i) => {
+    if (values[i] > 0) kept.push(facet)
+    else if (values[i] === 0) kept.push({ ...facet, low: facet.low | low, high: facet.high | high })
+  })
+  for (let i = 0; i < facets.length; i++) {
+    if (values[i] <= 0) continue
+    for (let j = 0; j < facets.length; j++) {
+      if (values[j] >= 0) continue
+      const sharedLow = facets[i].low & facets[j].low
+      const sharedHigh = facets[i].high & facets[j].high
+      if (bitCount(sharedLow) + bitCount(sharedHigh) < 3) continue
+      // Adjacent exactly when no third facet contains all that the two share.
+      const ridge = !facets.some(
+        (other, k) =>
+          k !== i && k !== j && (other.low & sharedLow) === sharedLow && (other.high & sharedHigh) === sharedHigh,
+      )
+      if (!ridge) continue
+      const form = combine(facets[i].form, values[i], facets[j].form, values[j])
+      kept.push({ form, low: sharedLow | low, high: sharedHigh | high, checked: false })
+    }
+  }
+  return kept
+}
+
+/** The primitive form through the ridge of two facets and the new point, where they take the values given. */
+function combine(inner: readonly number[], inside: number, outer: readonly number[], outside: number): number[] {
+  const common = gcd(inside, outside)
+  const a = inside / common
+  const b = -outside / common
+  const form = inner.map((entry, i) => a * outer[i] + b * entry)
+  const bound = inner.reduce((most, entry, i) => Math.max(most, a * Math.abs(outer[i]) + b * Math.abs(entry)), 0)
+  if (bound <= Number.MAX_SAFE_INTEGER) return primitive(form)
+  const exact = inner.map((entry, i) => BigInt(a) * BigInt(outer[i]) + BigInt(b) * BigInt(entry))
+  const divisor = exact.slice(0, 4).reduce(gcdBig, 0n)
+  return exact.map((entry) => Number(entry / divisor))
+}
+
+/** Divides by the gcd of the first four entries. */
+function primitive(form: readonly number[]): number[] {
+  const divisor = gcd(gcd(form[0], form[1]), gcd(form[2], form[3]))
+  return form.map((entry) => entry / divisor)
+}
+
+const value4 = (m: readonly number[], p: readonly number[]): number =>
+  m[0] * p[0] + m[1] * p[1] + m[2] * p[2] + m[3] * p[3]
+
+const difference = (a: readonly number[], b: readonly number[]): number[] => a.map((entry, i) => entry - b[i])
+
+function contains(facet: WorkFacet, position: number): boolean {
+  return position < 32 ? (facet.low & (1 << position)) !== 0 : (facet.high & (1 << (position - 32))) !== 0
+}
+
+function bitCount(word: number): number {
+  let bits = word - ((word >>> 1) & 0x55555555)
+  bits = (bits & 0x33333333) + ((bits >>> 2) & 0x33333333)
+  return (((bits + (bits >>> 4)) & 0x0f0f0f0f) * 0x01010101) >>> 24
+}

@@ -1,0 +1,120 @@
+import { InputError } from '../errors.ts'
+import { hull, hullCoordinateLimit, hullVertexLimit } from './hull.ts'
+import { compareLexicographic } from './integers.ts'
+import { applyBig, applyTransposed, reducedBasis } from './latticeReduction.ts'
+import { checkedPoints } from './polytopeInput.ts'
+
+/** Vertices and facet normals of a reflexive polytope in the coordinates given, each in lexicographic order. */
+export interface ReflexiveHull {
+  readonly vertices: readonly (readonly number[])[]
+  readonly facets: readonly (readonly number[])[]
+}
+
+/** Coordinates up to this size are taken as they are; larger ones go through a reduced basis first. */
+const plainLimit = 100
+
+/** What the integer arrays of a polytope can hold. */
+const coordinateLimit = 2 ** 31 - 1
+
+/**
+ * The hull of the points, certified to be reflexive: the origin inside and every facet at lattice distance 1.
+ *
+ * @throws InputError with the codes of `checkedPoints` and polytope.coordinates-too-large,
+ *   polytope.too-many-vertices, polytope.origin-not-interior, polytope.facet-distance; facets are named in the
+ *   coordinates given
+ */
+export function reflexiveHull(rows: readonly (readonly number[])[]): ReflexiveHull {
+  const points = checkedPoints(rows)
+  const { reduced, normalIn } = reducedPoints(points)
+  const found = hull(reduced)
+  if (found === undefined) {
+    throw new InputError(
+      'polytope.too-many-vertices',
+      `The hull has more than ${hullVertexLimit} vertices; a reflexive polytope in four dimensions has at most 36.`,
+    )
+  }
+  const facets = found.facets.map((facet) => ({
+    normal: normalIn(facet.normal),
+    offset: facet.offset,
+    vertices: facet.vertices.map((position) => points[found.vertices[position]]).sort(compareLexicographic),
+  }))
+  for (const facet of facets) if (facet.offset <= 0) throw originNotInterior(facet.normal, facet.offset)
+  for (const facet of facets) if (facet.offset !== 1) throw wrongDistance(facet)
+  return {
+    vertices: found.vertices.map((index) => points[index]).sort(compareLexicographic),
+    facets: facets.map((facet) => facet.normal.map(storable)).sort(compareLexicographic),
+  }
+}
+
+/** The points in a basis where the hull is exact in doubles, and the way back for normals. */
+function reducedPoints(points: readonly (readonly number[])[]): {
+  reduced: readonly (readonly number[])[]
+  normalIn: (normal: readonly number[]) => bigint[]
+} {
+  if (points.every((point) => point.every((entry) => Math.abs(entry) <= plainLimit))) {
+    return { reduced: points, normalIn: (normal) => normal.map(BigInt) }
+  }
+  const exact = points.map((point) => point.map(BigInt))
+  const { matrix } = reducedBasis(exact)
+  const reduced = exact.map((point) =>
+    applyBig(matrix, point).map((entry) => {
+      const size = entry < 0n ? -entry : entry
+      if (size > BigInt(hullCoordinateLimit)) throw tooLarge(`a coordinate of size ${size} is left`, hullCoordinateLimit)
+      return Number(entry)
+    }),
+  )
+  for (const point of points) for (const entry of point) storable(entry)
+  return { reduced, normalIn: (normal) => applyTransposed(matrix, normal.map(BigInt)) }
+}
+
+function storable(entry: number | bigint): number {
+  if (entry > coordinateLimit || entry < -coordinateLimit) {
+    throw new InputError(
+      'polytope.coordinates-too-large',
+      `A vertex or facet normal has a coordinate of ${entry}; at most ${coordinateLimit} in size can be kept. Give the points in a basis in which they are shorter.`,
+      '',
+      String(entry),
+    )
+  }
+  return Number(entry)
+}
+
+function tooLarge(what: string, limit: number): InputError {
+  return new InputError(
+    'polytope.coordinates-too-large',
+    `The coordinates are too large: in a reduced lattice basis ${what}, above ${limit}, where exact arithmetic would end.`,
+  )
+}
+
+function originNotInterior(normal: readonly bigint[], offset: number): InputError {
+  const place = offset === 0 ? 'lies on the boundary' : 'lies outside'
+  return new InputError(
+    'polytope.origin-not-interior',
+    `The origin ${place}: all points satisfy ${form(normal)} >= ${-offset}, so it is not in the interior.`,
+    '',
+    { normal: normal.map(String), atLeast: -offset },
+  )
+}
+
+function wrongDistance(facet: { normal: bigint[]; offset: number; vertices: number[][] }): InputError {
+  const vertices = facet.vertices.map((vertex) => `(${vertex.join(', ')})`).join(', ')
+  return new InputError(
+    'polytope.facet-distance',
+    `The facet with vertices ${vertices} and normal (${facet.normal.join(', ')}) is at lattice distance ${facet.offset} from the origin; in a reflexive polytope every facet is at distance 1.`,
+    '',
+    { normal: facet.normal.map(String), distance: facet.offset, vertices: facet.vertices },
+  )
+}
+
+/** A linear form in x1..x4 as text. */
+function form(normal: readonly bigint[]): string {
+  const terms = normal
+    .map((entry, i) => ({ entry, name: `x${i + 1}` }))
+    .filter(({ entry }) => entry !== 0n)
+    .map(({ entry, name }, i) => {
+      const size = entry < 0n ? -entry : entry
+      const sign = entry < 0n ? (i === 0 ? '-' : ' - ') : i === 0 ? '' : ' + '
+      return `${sign}${size === 1n ? '' : `${size} `}${name}`
+    })
+  return terms.join('')
+}
