@@ -1,7 +1,7 @@
 import type { Faces } from './faces.ts'
 import { facetsThrough } from './faces.ts'
 import { latticePointsOf } from './latticePoints.ts'
-import { applyBig, reducedBasis } from './latticeReduction.ts'
+import { reducedBasis, rowsOf, transform, transposed } from './latticeReduction.ts'
 
 /** Lattice points of a reflexive polytope, sorted by their carriers. */
 export interface LatticeCount {
@@ -71,32 +71,4 @@ export function countLatticePoints(
     inEdges: restore(inEdges),
     inTwoFaces: restore(inTwoFaces),
   }
-}
-
-const transposed = (rows: readonly (readonly bigint[])[]): bigint[][] =>
-  rows.map((_, column) => rows.map((row) => row[column]))
-
-function rowsOf(flat: ArrayLike<number>): bigint[][] {
-  const rows: bigint[][] = []
-  for (let i = 0; i < flat.length; i += 4) rows.push([0, 1, 2, 3].map((axis) => BigInt(flat[i + axis])))
-  return rows
-}
-
-/** Images of integer vectors, in doubles where every sum is provably below 2^53, in big integers elsewhere. */
-function transform(matrix: readonly (readonly bigint[])[], vectors: ArrayLike<number>): number[] {
-  let largestEntry = 0
-  for (const row of matrix) for (const entry of row) largestEntry = Math.max(largestEntry, Math.abs(Number(entry)))
-  let largest = 0
-  for (let i = 0; i < vectors.length; i++) largest = Math.max(largest, Math.abs(vectors[i]))
-  if (4 * largestEntry * largest > Number.MAX_SAFE_INTEGER) {
-    return rowsOf(vectors).flatMap((vector) => applyBig(matrix, vector).map(Number))
-  }
-  const rows = matrix.map((row) => row.map(Number))
-  const images: number[] = []
-  for (let i = 0; i < vectors.length; i += 4) {
-    for (const [a, b, c, d] of rows) {
-      images.push(a * vectors[i] + b * vectors[i + 1] + c * vectors[i + 2] + d * vectors[i + 3])
-    }
-  }
-  return images
 }

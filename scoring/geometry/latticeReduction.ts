@@ -65,6 +65,35 @@ export function applyTransposed(matrix: readonly (readonly bigint[])[], vector: 
   return matrix.map((_, column) => matrix.reduce((sum, row, i) => sum + row[column] * vector[i], 0n))
 }
 
+export const transposed = (rows: readonly (readonly bigint[])[]): bigint[][] =>
+  rows.map((_, column) => rows.map((row) => row[column]))
+
+/** Vectors of 4 coordinates, one after the other, as rows of big integers. */
+export function rowsOf(flat: ArrayLike<number>): bigint[][] {
+  const rows: bigint[][] = []
+  for (let i = 0; i < flat.length; i += 4) rows.push([0, 1, 2, 3].map((axis) => BigInt(flat[i + axis])))
+  return rows
+}
+
+/** Images of integer vectors (4 coordinates each), in doubles where every sum is provably below 2^53, in big integers elsewhere. */
+export function transform(matrix: readonly (readonly bigint[])[], vectors: ArrayLike<number>): number[] {
+  let largestEntry = 0
+  for (const row of matrix) for (const entry of row) largestEntry = Math.max(largestEntry, Math.abs(Number(entry)))
+  let largest = 0
+  for (let i = 0; i < vectors.length; i++) largest = Math.max(largest, Math.abs(vectors[i]))
+  if (4 * largestEntry * largest > Number.MAX_SAFE_INTEGER) {
+    return rowsOf(vectors).flatMap((vector) => applyBig(matrix, vector).map(Number))
+  }
+  const rows = matrix.map((row) => row.map(Number))
+  const images: number[] = []
+  for (let i = 0; i < vectors.length; i += 4) {
+    for (const [a, b, c, d] of rows) {
+      images.push(a * vectors[i] + b * vectors[i + 1] + c * vectors[i + 2] + d * vectors[i + 3])
+    }
+  }
+  return images
+}
+
 /** Leading minors of the Gram matrix (minors[0] = 1) and the integral Gram-Schmidt coefficients. */
 function orthogonalise(gram: readonly (readonly bigint[])[]): { lambda: bigint[][]; minors: bigint[] } {
   const lambda = zero()
