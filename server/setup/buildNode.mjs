@@ -14,3 +14,5 @@ const result = spawnSync('npx', ['tsc', '-p', 'server/setup/tsconfig.node.json']
 if (result.status !== 0) process.exit(result.status ?? 1)
 cpSync(join(root, 'server/library/data'), join(out, 'server/library/data'), { recursive: true })
 writeFileSync(join(out, 'package.json'), '{ "type": "module" }\n')
+// The last step of a build: tells the set-up script that dist/ is newer than the sources.
+writeFileSync(join(root, 'dist', '.built'), '')

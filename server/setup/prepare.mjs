@@ -99,7 +99,6 @@ function buildApplication() {
   if (existsSync(stamp) && statSync(stamp).mtimeMs > newestChange(sources)) return
   say('setup: building ...')
   run('npm', ['run', '--silent', 'build'])
-  writeFileSync(stamp, '')
 }
 
 function findBrowser() {
