@@ -157,18 +157,28 @@ export function meshOfClass(cls: TwoFaceClass): FaceMesh {
 /** The class with these triangles; the mesh must not be changed afterwards. */
 export function classOfMesh(mesh: FaceMesh): TwoFaceClass {
   const { sheets, from } = mesh
-  const { point, faceOfSlot, polytope } = sheets
+  const cls = classOfTriangles(
+    sheets.polytope,
+    from.map((corner) => sheets.point[corner]),
+    sheets.faceOfSlot,
+  )
+  meshes.set(cls, mesh)
+  return cls
+}
+
+/** Puts the triangles of a class in order. They are taken on trust: see `classFromTriangles`. */
+export function classOfTriangles(polytope: Polytope, unordered: Int32Array, faces: Int32Array): TwoFaceClass {
   const n = polytope.pointCount
   const faceCount = polytope.twoFaces.length
-  // One number per triangle, ordered as the triangles are; below 2^53 as n is below 1,000 or so.
-  const codes = new Float64Array(faceOfSlot.length)
+  // One number per triangle, ordered as the triangles are; far below 2^53 as n is below 1,000.
+  const codes = new Float64Array(faces.length)
   for (let t = 0; t < codes.length; t++) {
-    const p = point[from[3 * t]]
-    const q = point[from[3 * t + 1]]
-    const r = point[from[3 * t + 2]]
+    const p = unordered[3 * t]
+    const q = unordered[3 * t + 1]
+    const r = unordered[3 * t + 2]
     const low = Math.min(p, q, r)
     const high = Math.max(p, q, r)
-    codes[t] = ((low * n + (p + q + r - low - high)) * n + high) * faceCount + faceOfSlot[t]
+    codes[t] = ((low * n + (p + q + r - low - high)) * n + high) * faceCount + faces[t]
   }
   codes.sort()
   const triangles = new Int32Array(3 * codes.length)
@@ -182,9 +192,7 @@ export function classOfMesh(mesh: FaceMesh): TwoFaceClass {
     triangles[3 * t + 1] = pair - low * n
     triangles[3 * t + 2] = withoutFace - pair * n
   }
-  const cls: TwoFaceClass = { polytope, triangles, faceOf }
-  meshes.set(cls, mesh)
-  return cls
+  return { polytope, triangles, faceOf }
 }
 
 /** Writes the corners of a triangle counterclockwise to from[at..]; returns its signed area before ordering. */
