@@ -1,0 +1,100 @@
+import type { EliminationOrder } from './minimumDegree.ts'
+
+/**
+ * Sparse Cholesky factor P M P^T = L L^T of a positive definite matrix in a fixed elimination order. The
+ * values of L stand where `order.rows` says: write the lower triangle of P M P^T into `values` (zero where
+ * M has none), call `factorise`, then `solve` as often as wanted. Everything is allocated once.
+ */
+export class SparseCholesky {
+  readonly order: EliminationOrder
+  readonly values: Float64Array
+  private readonly column: Float64Array
+  private readonly permuted: Float64Array
+  /** First column in the list of those whose next row to be used is this one; then the next in the list. */
+  private readonly listHead: Int32Array
+  private readonly listNext: Int32Array
+  private readonly cursor: Int32Array
+
+  constructor(order: EliminationOrder) {
+    this.order = order
+    this.values = new Float64Array(order.rows.length)
+    this.column = new Float64Array(order.size)
+    this.permuted = new Float64Array(order.size)
+    this.listHead = new Int32Array(order.size)
+    this.listNext = new Int32Array(order.size)
+    this.cursor = new Int32Array(order.size)
+  }
+
+  /** Index into `values` of the entry that couples variables a and b; the pair must be in the pattern. */
+  entryOf(a: number, b: number): number {
+    const { positionOf, starts, rows } = this.order
+    const p = Math.min(positionOf[a], positionOf[b])
+    const row = Math.max(positionOf[a], positionOf[b])
+    let low = starts[p]
+    let high = starts[p + 1] - 1
+    while (low < high) {
+      const middle = (low + high) >> 1
+      if (rows[middle] < row) low = middle + 1
+      else high = middle
+    }
+    return low
+  }
+
+  /**
+   * Overwrites the matrix in `values` by its factor, column by column, each gathering the earlier columns that
+   * reach it. Returns false (with `values` spoilt) when a pivot is not positive.
+   */
+  factorise(): boolean {
+    const { order, values, column, listHead, listNext, cursor } = this
+    const { size, starts, rows } = order
+    listHead.fill(-1)
+    for (let j = 0; j < size; j++) {
+      const start = starts[j]
+      const end = starts[j + 1]
+      for (let q = start; q < end; q++) column[rows[q]] = values[q]
+      let k = listHead[j]
+      while (k >= 0) {
+        const following = listNext[k]
+        const from = cursor[k]
+        const stop = starts[k + 1]
+        const factor = values[from]
+        for (let q = from; q < stop; q++) column[rows[q]] -= factor * values[q]
+        this.enlist(k, from + 1, stop)
+        k = following
+      }
+      const pivot = column[j]
+      if (!(pivot > 0)) return false
+      const root = Math.sqrt(pivot)
+      values[start] = root
+      for (let q = start + 1; q < end; q++) values[q] = column[rows[q]] / root
+      this.enlist(j, start + 1, end)
+    }
+    return true
+  }
+
+  private enlist(k: number, next: number, stop: number): void {
+    if (next >= stop) return
+    const row = this.order.rows[next]
+    this.cursor[k] = next
+    this.listNext[k] = this.listHead[row]
+    this.listHead[row] = k
+  }
+
+  /** Solves M x = right; `x` may be `right` itself. */
+  solve(right: Float64Array, x: Float64Array): void {
+    const { order, values, permuted: y } = this
+    const { size, order: variables, starts, rows } = order
+    for (let p = 0; p < size; p++) y[p] = right[variables[p]]
+    for (let p = 0; p < size; p++) {
+      const value = y[p] / values[starts[p]]
+      y[p] = value
+      for (let q = starts[p] + 1; q < starts[p + 1]; q++) y[rows[q]] -= values[q] * value
+    }
+    for (let p = size - 1; p >= 0; p--) {
+      let value = y[p]
+      for (let q = starts[p] + 1; q < starts[p + 1]; q++) value -= values[q] * y[rows[q]]
+      y[p] = value / values[starts[p]]
+    }
+    for (let p = 0; p < size; p++) x[variables[p]] = y[p]
+  }
+}

@@ -1,0 +1,54 @@
+import { curveRows } from '../geometry/curves.ts'
+import { divisorTopology } from '../geometry/divisors.ts'
+import { intersectionNumbers } from '../geometry/intersectionNumbers.ts'
+import type { NormalForm } from '../geometry/normalForm.ts'
+import type { Polytope } from '../geometry/polytope.ts'
+import { referencePoint } from '../geometry/referencePoint.ts'
+import { basisSpectrum, divisorSpectrum, topEigenvalue } from '../geometry/spectra.ts'
+import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
+import { pairNumbers, volumes } from '../geometry/volumes.ts'
+import type { Candidate } from './candidate.ts'
+
+const topologies = new WeakMap<Polytope, ReturnType<typeof divisorTopology>>()
+
+/**
+ * The candidate of a canonical class: every stage is computed on first use and kept. What depends on the
+ * polytope alone is shared among its candidates.
+ *
+ * @param form normal form of the polytope
+ * @param canonical the representative that gave the class key, on `form.polytope`
+ */
+export function buildCandidate(form: NormalForm, canonical: TwoFaceClass, classKey: string): Candidate {
+  const { polytope } = form
+  const numbers = once(() => intersectionNumbers(canonical))
+  const curves = once(() => curveRows(canonical, numbers()))
+  const reference = once(() => referencePoint(canonical, numbers(), curves()))
+  const pairs = once(() => pairNumbers(numbers(), reference().weights))
+  const volume = once(() => volumes(numbers(), curves(), reference().weights, pairs()))
+  return {
+    polytope,
+    symmetryOrder: form.automorphisms.length,
+    class: canonical,
+    classKey,
+    numbers,
+    divisorTopology: () => topologyOf(polytope),
+    curves,
+    reference,
+    volumes: volume,
+    topEigenvalue: once(() => topEigenvalue(polytope, pairs(), volume()).value),
+    divisorSpectrum: once(() => divisorSpectrum(polytope, pairs(), volume())),
+    basisSpectrum: once(() => basisSpectrum(polytope, pairs(), volume())),
+  }
+}
+
+function topologyOf(polytope: Polytope): ReturnType<typeof divisorTopology> {
+  const known = topologies.get(polytope) ?? divisorTopology(polytope)
+  topologies.set(polytope, known)
+  return known
+}
+
+/** Computes a value on the first call and keeps it. */
+function once<T>(compute: () => T): () => T {
+  let kept: { readonly value: T } | undefined
+  return () => (kept ??= { value: compute() }).value
+}
