@@ -46,17 +46,25 @@ export function classFromHeights(
   heights: ArrayLike<number>,
   start?: TwoFaceClass,
 ): HeightsOutcome {
+  const cls = fineClass(polytope, heights, start)
+  if (cls !== undefined) return { fine: true, class: cls }
   const sheets = faceSheets(polytope)
-  const lifted = cornerHeights(sheets, checkedHeights(polytope, heights))
+  return { fine: false, ...lowerHull(sheets, cornerHeights(sheets, heights)) }
+}
+
+/** Like `classFromHeights`, without the account of what is unused: undefined when the heights are not fine. */
+export function fineClass(
+  polytope: Polytope,
+  heights: ArrayLike<number>,
+  start: TwoFaceClass = referenceClass(polytope),
+): TwoFaceClass | undefined {
+  if (start.polytope !== polytope) throw new InvariantError('The class to start from is of another polytope.')
+  const lifted = cornerHeights(faceSheets(polytope), checkedHeights(polytope, heights))
   const sign = circuitValue(lifted)
-  const from = start ?? referenceClass(polytope)
-  if (from.polytope !== polytope) throw new InvariantError('The class to start from is of another polytope.')
-  const mesh = copyMesh(meshOfClass(from))
+  const mesh = copyMesh(meshOfClass(start))
   const exchanges = regularise(mesh, sign)
-  if (exchanges < 0 || flattenedPoints(mesh, sign).length > 0) {
-    return { fine: false, ...lowerHull(sheets, lifted) }
-  }
-  return { fine: true, class: exchanges === 0 ? from : classOfMesh(mesh) }
+  if (exchanges < 0 || flattenedPoints(mesh, sign).length > 0) return undefined
+  return exchanges === 0 ? start : classOfMesh(mesh)
 }
 
 /**
