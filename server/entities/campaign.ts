@@ -1,0 +1,17 @@
+import { Column, Entity, PrimaryColumn } from 'typeorm'
+
+/** A team's hunt. */
+@Entity('campaign')
+export class Campaign {
+  @PrimaryColumn({ type: 'varchar' })
+  id!: string
+
+  @Column({ type: 'varchar' })
+  name!: string
+
+  @Column({ type: 'text' })
+  description!: string
+
+  @Column({ type: 'varchar' })
+  createdAt!: string
+}

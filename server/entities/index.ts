@@ -1,0 +1,40 @@
+import { Account } from './account.ts'
+import { Campaign } from './campaign.ts'
+import { CampaignPolytope } from './campaignPolytope.ts'
+import { CandidateRecord } from './candidate.ts'
+import { CandidateValue } from './candidateValue.ts'
+import { Find } from './find.ts'
+import { LibraryFile } from './libraryFile.ts'
+import { Membership } from './membership.ts'
+import { NullSample } from './nullSample.ts'
+import { PolytopeRecord } from './polytope.ts'
+import { Search } from './search.ts'
+import { SearchIsland } from './searchIsland.ts'
+import { SetUpLink } from './setUpLink.ts'
+import { Shortlist } from './shortlist.ts'
+import { ShortlistEntry } from './shortlistEntry.ts'
+import { Target } from './target.ts'
+import { TargetVersion } from './targetVersion.ts'
+import { Verdict } from './verdict.ts'
+
+/** Listed as classes, not found by file name: the same list serves source and compiled code. */
+export const entities = [
+  Account,
+  Campaign,
+  CampaignPolytope,
+  CandidateRecord,
+  CandidateValue,
+  Find,
+  LibraryFile,
+  Membership,
+  NullSample,
+  PolytopeRecord,
+  Search,
+  SearchIsland,
+  SetUpLink,
+  Shortlist,
+  ShortlistEntry,
+  Target,
+  TargetVersion,
+  Verdict,
+]

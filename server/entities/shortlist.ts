@@ -1,0 +1,53 @@
+import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryColumn, type Relation } from 'typeorm'
+import { Account } from './account.ts'
+import { Campaign } from './campaign.ts'
+import { TargetVersion } from './targetVersion.ts'
+
+/** A ranked, frozen list of candidates from searches of one target version. */
+@Entity('shortlist')
+export class Shortlist {
+  @PrimaryColumn({ type: 'varchar' })
+  id!: string
+
+  @Index()
+  @Column({ type: 'varchar' })
+  campaignId!: string
+
+  @ManyToOne(() => Campaign, { onDelete: 'CASCADE', nullable: false })
+  @JoinColumn({ name: 'campaignId' })
+  campaign?: Relation<Campaign>
+
+  @Column({ type: 'varchar' })
+  targetVersionId!: string
+
+  @ManyToOne(() => TargetVersion, { onDelete: 'CASCADE', nullable: false })
+  @JoinColumn({ name: 'targetVersionId' })
+  targetVersion?: Relation<TargetVersion>
+
+  @Column({ type: 'varchar' })
+  name!: string
+
+  /** The searches it was drawn from. */
+  @Column({ type: 'simple-json' })
+  searchIds!: string[]
+
+  /** Report columns in the rule's order. */
+  @Column({ type: 'simple-json' })
+  columns!: string[]
+
+  @Column({ type: 'varchar' })
+  scoringHash!: string
+
+  @Column({ type: 'varchar' })
+  engineVersion!: string
+
+  @Column({ type: 'varchar' })
+  authorId!: string
+
+  @ManyToOne(() => Account, { nullable: false })
+  @JoinColumn({ name: 'authorId' })
+  author?: Relation<Account>
+
+  @Column({ type: 'varchar' })
+  createdAt!: string
+}

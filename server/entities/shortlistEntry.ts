@@ -1,0 +1,38 @@
+import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryColumn, type Relation } from 'typeorm'
+import type { OutcomeView } from '../../shared/outcomes.ts'
+import { CandidateRecord } from './candidate.ts'
+import { Search } from './search.ts'
+import { Shortlist } from './shortlist.ts'
+
+/** One place of a shortlist, frozen with the outcome it had when the list was made. */
+@Entity('shortlist_entry')
+export class ShortlistEntry {
+  @PrimaryColumn({ type: 'varchar' })
+  shortlistId!: string
+
+  /** From 1. */
+  @PrimaryColumn({ type: 'integer' })
+  rank!: number
+
+  @ManyToOne(() => Shortlist, { onDelete: 'CASCADE', nullable: false })
+  @JoinColumn({ name: 'shortlistId' })
+  shortlist?: Relation<Shortlist>
+
+  @Index()
+  @Column({ type: 'varchar' })
+  candidateKey!: string
+
+  @ManyToOne(() => CandidateRecord, { nullable: false })
+  @JoinColumn({ name: 'candidateKey' })
+  candidate?: Relation<CandidateRecord>
+
+  @Column({ type: 'varchar' })
+  searchId!: string
+
+  @ManyToOne(() => Search, { onDelete: 'CASCADE', nullable: false })
+  @JoinColumn({ name: 'searchId' })
+  search?: Relation<Search>
+
+  @Column({ type: 'simple-json' })
+  outcome!: OutcomeView
+}

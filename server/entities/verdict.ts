@@ -1,0 +1,56 @@
+import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation } from 'typeorm'
+import type { VerdictValue } from '../../shared/verdicts.ts'
+import { Account } from './account.ts'
+import { Campaign } from './campaign.ts'
+import { CandidateRecord } from './candidate.ts'
+import { TargetVersion } from './targetVersion.ts'
+
+/** A person's word on a candidate for a target in a campaign. History is kept; the latest counts. */
+@Entity('verdict')
+@Index(['campaignId', 'candidateKey'])
+export class Verdict {
+  /** Counts up: the order of the history. */
+  @PrimaryGeneratedColumn('increment', { type: 'integer' })
+  id!: number
+
+  @Column({ type: 'varchar' })
+  campaignId!: string
+
+  @ManyToOne(() => Campaign, { onDelete: 'CASCADE', nullable: false })
+  @JoinColumn({ name: 'campaignId' })
+  campaign?: Relation<Campaign>
+
+  @Column({ type: 'varchar' })
+  candidateKey!: string
+
+  @ManyToOne(() => CandidateRecord, { nullable: false })
+  @JoinColumn({ name: 'candidateKey' })
+  candidate?: Relation<CandidateRecord>
+
+  @Column({ type: 'varchar' })
+  targetVersionId!: string
+
+  @ManyToOne(() => TargetVersion, { onDelete: 'CASCADE', nullable: false })
+  @JoinColumn({ name: 'targetVersionId' })
+  targetVersion?: Relation<TargetVersion>
+
+  @Column({ type: 'varchar' })
+  value!: VerdictValue
+
+  @Column({ type: 'text' })
+  reason!: string
+
+  /** Verified without a passing certificate for this scoring. */
+  @Column({ type: 'boolean' })
+  override!: boolean
+
+  @Column({ type: 'varchar' })
+  authorId!: string
+
+  @ManyToOne(() => Account, { nullable: false })
+  @JoinColumn({ name: 'authorId' })
+  author?: Relation<Account>
+
+  @Column({ type: 'varchar' })
+  createdAt!: string
+}
