@@ -1,0 +1,39 @@
+import type { RandomStream } from './randomStream.ts'
+
+export interface ReservoirState<Row> {
+  readonly capacity: number
+  /** How many rows have been offered. */
+  readonly offered: number
+  readonly rows: readonly Row[]
+}
+
+/**
+ * A uniform sample of all rows offered so far (Vitter's algorithm R): each of them is in it with the same
+ * probability. While no more rows than its capacity were offered it holds them all, in order.
+ */
+export class Reservoir<Row> {
+  private readonly capacity: number
+  private offered: number
+  private readonly rows: Row[]
+
+  constructor(state: ReservoirState<Row>) {
+    this.capacity = state.capacity
+    this.offered = state.offered
+    this.rows = [...state.rows]
+  }
+
+  state(): ReservoirState<Row> {
+    return { capacity: this.capacity, offered: this.offered, rows: [...this.rows] }
+  }
+
+  /** @param stream drawn from once, and only when the reservoir is full */
+  offer(row: Row, stream: RandomStream): void {
+    this.offered++
+    if (this.rows.length < this.capacity) {
+      this.rows.push(row)
+      return
+    }
+    const place = stream.below(this.offered)
+    if (place < this.capacity) this.rows[place] = row
+  }
+}
