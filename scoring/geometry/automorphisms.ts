@@ -22,12 +22,18 @@ export function automorphismsFrom(
   const image = new Float64Array(4)
   return orders
     .map((order) => {
-      const matrix = matrixTaking(inverse, frame.map((position) => coordinates(points, order[position])))
+      const matrix = matrixTaking(
+        inverse,
+        frame.map((position) => coordinates(points, order[position])),
+      )
       return Int32Array.from({ length: points.length / 4 }, (_, i) => {
         for (let axis = 0; axis < 4; axis++) {
           const row = matrix[axis]
           image[axis] =
-            row[0] * points[4 * i] + row[1] * points[4 * i + 1] + row[2] * points[4 * i + 2] + row[3] * points[4 * i + 3]
+            row[0] * points[4 * i] +
+            row[1] * points[4 * i + 1] +
+            row[2] * points[4 * i + 2] +
+            row[3] * points[4 * i + 3]
         }
         return index.find(image, 0)
       })
@@ -58,7 +64,8 @@ function matrixTaking(from: Inverse, to: readonly (readonly number[])[]): number
       let sum = 0
       for (let k = 0; k < 4; k++) sum += to[k][row] * from.adjugate[k][column]
       const entry = sum / from.determinant
-      if (!Number.isInteger(entry)) throw new InvariantError('An automorphism has a matrix that is not integral.')
+      if (!Number.isInteger(entry))
+        throw new InvariantError('An automorphism has a matrix that is not integral.')
       return entry
     }),
   )
@@ -77,9 +84,14 @@ function inverseOf(columns: readonly (readonly number[])[]): Inverse {
     return [0, 1, 2, 3].map((axis) => {
       const [p, q, r] = [0, 1, 2, 3].filter((other) => other !== axis)
       const minor =
-        a[p] * (b[q] * c[r] - b[r] * c[q]) - a[q] * (b[p] * c[r] - b[r] * c[p]) + a[r] * (b[p] * c[q] - b[q] * c[p])
+        a[p] * (b[q] * c[r] - b[r] * c[q]) -
+        a[q] * (b[p] * c[r] - b[r] * c[p]) +
+        a[r] * (b[p] * c[q] - b[q] * c[p])
       return (axis % 2 === 0 ? sign : -sign) * minor
     })
   })
-  return { adjugate, determinant: adjugate[0].reduce((sum, entry, axis) => sum + entry * columns[0][axis], 0) }
+  return {
+    adjugate,
+    determinant: adjugate[0].reduce((sum, entry, axis) => sum + entry * columns[0][axis], 0),
+  }
 }

@@ -47,7 +47,8 @@ export function facePlane(points: ArrayLike<number>, corners: readonly number[])
 
 /** The first two axes to which the plane projects injectively. */
 function independentAxes(points: ArrayLike<number>, corners: readonly number[]): [number, number] {
-  const at = (corner: number, axis: number): number => points[4 * corners[corner] + axis] - points[4 * corners[0] + axis]
+  const at = (corner: number, axis: number): number =>
+    points[4 * corners[corner] + axis] - points[4 * corners[0] + axis]
   for (let p = 0; p < 4; p++) {
     for (let q = p + 1; q < 4; q++) if (at(1, p) * at(2, q) !== at(1, q) * at(2, p)) return [p, q]
   }
@@ -86,7 +87,10 @@ function shiftToZero(plane: Int32Array): void {
 }
 
 /** Orders the corners of a convex polygon about the first one and measures twice its area. */
-function counterclockwise(plane: Int32Array, corners: readonly number[]): { corners: number[]; area: number } {
+function counterclockwise(
+  plane: Int32Array,
+  corners: readonly number[],
+): { corners: number[]; area: number } {
   const [first, ...rest] = corners
   const cross = (i: number, j: number): number =>
     (plane[2 * i] - plane[2 * first]) * (plane[2 * j + 1] - plane[2 * first + 1]) -

@@ -14,7 +14,13 @@ export interface Faces {
 }
 
 /** Facets (4 coordinates each) at which the point takes its least value: <m, point> = -1. Ascending. */
-export function facetsThrough(facets: ArrayLike<number>, x: number, y: number, z: number, w: number): number[] {
+export function facetsThrough(
+  facets: ArrayLike<number>,
+  x: number,
+  y: number,
+  z: number,
+  w: number,
+): number[] {
   const found: number[] = []
   for (let a = 0; 4 * a < facets.length; a++) {
     const b = 4 * a
@@ -45,7 +51,9 @@ export function facesOf(vertices: ArrayLike<number>, facets: ArrayLike<number>):
   }
 }
 
-function pairsSharingThree(members: readonly (readonly number[])[]): { ends: [number, number]; on: number[] }[] {
+function pairsSharingThree(
+  members: readonly (readonly number[])[],
+): { ends: [number, number]; on: number[] }[] {
   const pairs: { ends: [number, number]; on: number[] }[] = []
   for (let a = 0; a < members.length; a++) {
     for (let b = a + 1; b < members.length; b++) {

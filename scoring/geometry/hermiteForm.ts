@@ -55,7 +55,8 @@ function subtract(rows: Float64Array, width: number, target: number, source: num
   if (factor === 0) return
   for (let i = 0; i < width; i++) {
     const entry = rows[target * width + i] - factor * rows[source * width + i]
-    if (Math.abs(entry) > Number.MAX_SAFE_INTEGER) throw new InvariantError('A Hermite form left the safe integers.')
+    if (Math.abs(entry) > Number.MAX_SAFE_INTEGER)
+      throw new InvariantError('A Hermite form left the safe integers.')
     rows[target * width + i] = entry
   }
 }

@@ -30,7 +30,10 @@ export function hodgeNumbers(
   edgeLengths: ArrayLike<number>,
 ): { hodge: Hodge; favourable: boolean } {
   const missed = faces.twoFaces.reduce((sum, _, f) => sum + own.twoFaceInterior[f] * (dualLengths[f] - 1), 0)
-  const missedByDual = faces.edges.reduce((sum, _, e) => sum + dual.twoFaceInterior[e] * (edgeLengths[e] - 1), 0)
+  const missedByDual = faces.edges.reduce(
+    (sum, _, e) => sum + dual.twoFaceInterior[e] * (edgeLengths[e] - 1),
+    0,
+  )
   const h11 = own.total - 5 - total(own.facetInterior) + missed
   const h21 = dual.total - 5 - total(dual.facetInterior) + missedByDual
   return { hodge: { h11, h21, euler: 2 * (h11 - h21) }, favourable: missed === 0 }

@@ -13,50 +13,81 @@ export interface HullFacet {
 }
 
 export interface Hull {
+  readonly kind: 'hull'
   /** Indices of the vertices among the points given. */
   readonly vertices: readonly number[]
   readonly facets: readonly HullFacet[]
 }
 
+/** What stands in the way of a hull with the origin inside. */
+export type HullRefusal =
+  /** A facet of the hull that does not have the origin strictly inside: offset <= 0. */
+  | { readonly kind: 'origin-not-interior'; readonly normal: readonly number[]; readonly offset: number }
+  | { readonly kind: 'too-many-vertices' }
+  /** Exact arithmetic would leave the safe integers. */
+  | { readonly kind: 'too-large' }
+
 /** More vertices than this and the hull is given up: incidences are kept in two 32-bit words. */
 export const hullVertexLimit = 64
 
-/** Coordinates up to this size keep normals below 6 (2B)^3 and offsets below 192 B^4 < 2^53 exact in doubles. */
-export const hullCoordinateLimit = 2000
+/** Normal, then offset. */
+type Form = readonly number[]
 
 interface WorkFacet {
-  /** Normal, then offset. */
-  readonly form: readonly number[]
+  readonly form: Form
   readonly low: number
   readonly high: number
-  checked: boolean
+  /** No point lies beyond it. */
+  settled: boolean
 }
 
+class TooLarge extends Error {}
+
 /**
- * Convex hull in four dimensions, exact, by double description over the cone of (x, 1): facets are the extreme
- * rays of the dual cone. Only vertices of the hull are ever inserted (each maximises a facet's violation, ties
- * broken lexicographically), so points in faces cost one evaluation per facet.
+ * Convex hull in four dimensions of points around the origin, exact, by double description over the cone of
+ * (x, 1): facets are the extreme rays of the dual cone. Only vertices of the hull are ever inserted (each maximises
+ * a facet's violation, ties broken lexicographically), so points in faces cost one evaluation per facet. Facets that
+ * do not have the origin inside come first: the first of them that nothing lies beyond ends the work.
  *
- * @param points integer points of size at most `hullCoordinateLimit`, pairwise distinct
- * @returns the hull; `undefined` when it has more than `hullVertexLimit` vertices
+ * All arithmetic is in doubles below 2^53, checked as it goes; combinations of facets beyond that are made in big
+ * integers. Coordinates up to 2,000 in size always pass: normals stay below 6 (2B)^3, offsets below 192 B^4.
+ *
+ * @param points integer points, pairwise distinct
  * @throws InvariantError when the points do not span four dimensions affinely
  */
-export function hull(points: readonly (readonly number[])[]): Hull | undefined {
+export function hull(points: readonly (readonly number[])[]): Hull | HullRefusal {
+  const extent = [0, 0, 0, 0]
+  for (const point of points)
+    point.forEach((entry, axis) => (extent[axis] = Math.max(extent[axis], Math.abs(entry))))
+  try {
+    return hullWithin(points, extent)
+  } catch (error) {
+    if (error instanceof TooLarge) return { kind: 'too-large' }
+    throw error
+  }
+}
+
+function hullWithin(points: readonly (readonly number[])[], extent: readonly number[]): Hull | HullRefusal {
   const inserted = startSimplex(points)
   let facets = simplexFacets(inserted.map((index) => points[index]))
   for (;;) {
-    const open = facets.find((facet) => !facet.checked)
+    for (const facet of facets) requireExact(facet.form, extent)
+    const open =
+      facets.find(({ form, settled }) => !settled && form[4] <= 0) ?? facets.find(({ settled }) => !settled)
     if (open === undefined) break
     const outermost = mostViolating(open.form, points)
     if (outermost === undefined) {
-      open.checked = true
+      open.settled = true
+      const offset = open.form[4]
+      if (offset <= 0) return { kind: 'origin-not-interior', normal: open.form.slice(0, 4), offset }
       continue
     }
-    if (inserted.length === hullVertexLimit) return undefined
+    if (inserted.length === hullVertexLimit) return { kind: 'too-many-vertices' }
     inserted.push(outermost)
     facets = insert(facets, points[outermost], inserted.length - 1)
   }
   return {
+    kind: 'hull',
     vertices: inserted,
     facets: facets.map((facet) => ({
       normal: facet.form.slice(0, 4),
@@ -64,6 +95,12 @@ export function hull(points: readonly (readonly number[])[]): Hull | undefined {
       vertices: inserted.map((_, position) => position).filter((position) => contains(facet, position)),
     })),
   }
+}
+
+/** Every value of the form on the points is a sum of safe integers with a safe result. */
+function requireExact(form: Form, extent: readonly number[]): void {
+  const bound = extent.reduce((sum, size, axis) => sum + size * Math.abs(form[axis]), Math.abs(form[4]))
+  if (bound > Number.MAX_SAFE_INTEGER) throw new TooLarge()
 }
 
 /** Five affinely independent vertices of the hull: each maximises a functional that vanishes on those before. */
@@ -92,7 +129,10 @@ function startSimplex(points: readonly (readonly number[])[]): number[] {
 }
 
 /** Index of the point that maximises the functional; ties go to the lexicographically greatest, a vertex. */
-function extreme(points: readonly (readonly number[])[], functional: (point: readonly number[]) => number): number {
+function extreme(
+  points: readonly (readonly number[])[],
+  functional: (point: readonly number[]) => number,
+): number {
   let best = 0
   let height = functional(points[0])
   for (let i = 1; i < points.length; i++) {
@@ -126,8 +166,11 @@ function annihilators(directions: readonly (readonly number[])[]): number[][] {
 /** The vector of signed 3 x 3 minors of three rows: orthogonal to each of them. */
 function orthogonalTo(rows: readonly (readonly number[])[]): number[] {
   const [a, b, c] = rows
+  if (6 * largest(a) * largest(b) * largest(c) > Number.MAX_SAFE_INTEGER) throw new TooLarge()
   const minor = (i: number, j: number, k: number): number =>
-    a[i] * (b[j] * c[k] - b[k] * c[j]) - a[j] * (b[i] * c[k] - b[k] * c[i]) + a[k] * (b[i] * c[j] - b[j] * c[i])
+    a[i] * (b[j] * c[k] - b[k] * c[j]) -
+    a[j] * (b[i] * c[k] - b[k] * c[i]) +
+    a[k] * (b[i] * c[j] - b[j] * c[i])
   return [minor(1, 2, 3), -minor(0, 2, 3), minor(0, 1, 3), -minor(0, 1, 2)]
 }
 
@@ -138,11 +181,16 @@ function simplexFacets(corners: readonly (readonly number[])[]): WorkFacet[] {
     const normal = primitive(orthogonalTo(others.slice(1).map((corner) => difference(corner, base))))
     const offset = -value4(normal, base)
     const sign = value4(normal, opposite) + offset > 0 ? 1 : -1
-    return { form: [...normal, offset].map((entry) => sign * entry), low: 31 & ~(1 << position), high: 0, checked: false }
+    return {
+      form: [...normal, offset].map((entry) => sign * entry),
+      low: 31 & ~(1 << position),
+      high: 0,
+      settled: false,
+    }
   })
 }
 
-function mostViolating(form: readonly number[], points: readonly (readonly number[])[]): number | undefined {
+function mostViolating(form: Form, points: readonly (readonly number[])[]): number | undefined {
   const [m0, m1, m2, m3, offset] = form
   let best: number | undefined
   let least = 0
@@ -177,37 +225,50 @@ function insert(facets: readonly WorkFacet[], point: readonly number[], position
       // Adjacent exactly when no third facet contains all that the two share.
       const ridge = !facets.some(
         (other, k) =>
-          k !== i && k !== j && (other.low & sharedLow) === sharedLow && (other.high & sharedHigh) === sharedHigh,
+          k !== i &&
+          k !== j &&
+          (other.low & sharedLow) === sharedLow &&
+          (other.high & sharedHigh) === sharedHigh,
       )
       if (!ridge) continue
       const form = combine(facets[i].form, values[i], facets[j].form, values[j])
-      kept.push({ form, low: sharedLow | low, high: sharedHigh | high, checked: false })
+      kept.push({ form, low: sharedLow | low, high: sharedHigh | high, settled: false })
     }
   }
   return kept
 }
 
 /** The primitive form through the ridge of two facets and the new point, where they take the values given. */
-function combine(inner: readonly number[], inside: number, outer: readonly number[], outside: number): number[] {
+function combine(inner: Form, inside: number, outer: Form, outside: number): number[] {
   const common = gcd(inside, outside)
   const a = inside / common
   const b = -outside / common
   const form = inner.map((entry, i) => a * outer[i] + b * entry)
-  const bound = inner.reduce((most, entry, i) => Math.max(most, a * Math.abs(outer[i]) + b * Math.abs(entry)), 0)
+  const bound = inner.reduce(
+    (most, entry, i) => Math.max(most, a * Math.abs(outer[i]) + b * Math.abs(entry)),
+    0,
+  )
   if (bound <= Number.MAX_SAFE_INTEGER) return primitive(form)
   const exact = inner.map((entry, i) => BigInt(a) * BigInt(outer[i]) + BigInt(b) * BigInt(entry))
   const divisor = exact.slice(0, 4).reduce(gcdBig, 0n)
-  return exact.map((entry) => Number(entry / divisor))
+  return exact.map((entry) => {
+    const reduced = Number(entry / divisor)
+    if (!Number.isSafeInteger(reduced)) throw new TooLarge()
+    return reduced
+  })
 }
 
 /** Divides by the gcd of the first four entries. */
-function primitive(form: readonly number[]): number[] {
+function primitive(form: Form): number[] {
   const divisor = gcd(gcd(form[0], form[1]), gcd(form[2], form[3]))
   return form.map((entry) => entry / divisor)
 }
 
 const value4 = (m: readonly number[], p: readonly number[]): number =>
   m[0] * p[0] + m[1] * p[1] + m[2] * p[2] + m[3] * p[3]
+
+const largest = (row: readonly number[]): number =>
+  row.reduce((most, entry) => Math.max(most, Math.abs(entry)), 0)
 
 const difference = (a: readonly number[], b: readonly number[]): number[] => a.map((entry, i) => entry - b[i])
 

@@ -61,7 +61,10 @@ export function countLatticePoints(
   }
   const backwards = transposed(dual)
   const restore = (carried: { reduced: number[]; face: number }[]): CarriedPoint[] => {
-    const flat = transform(backwards, carried.flatMap(({ reduced }) => reduced))
+    const flat = transform(
+      backwards,
+      carried.flatMap(({ reduced }) => reduced),
+    )
     return carried.map(({ face }, i) => ({ point: flat.slice(4 * i, 4 * i + 4), face }))
   }
   return {

@@ -60,13 +60,8 @@ export function applyBig(matrix: readonly (readonly bigint[])[], vector: readonl
   return matrix.map((row) => row.reduce((sum, entry, i) => sum + entry * vector[i], 0n))
 }
 
-/** The image under the transpose. */
-export function applyTransposed(matrix: readonly (readonly bigint[])[], vector: readonly bigint[]): bigint[] {
-  return matrix.map((_, column) => matrix.reduce((sum, row, i) => sum + row[column] * vector[i], 0n))
-}
-
 export const transposed = (rows: readonly (readonly bigint[])[]): bigint[][] =>
-  rows.map((_, column) => rows.map((row) => row[column]))
+  rows[0].map((_, column) => rows.map((row) => row[column]))
 
 /** Vectors of 4 coordinates, one after the other, as rows of big integers. */
 export function rowsOf(flat: ArrayLike<number>): bigint[][] {
@@ -78,7 +73,8 @@ export function rowsOf(flat: ArrayLike<number>): bigint[][] {
 /** Images of integer vectors (4 coordinates each), in doubles where every sum is provably below 2^53, in big integers elsewhere. */
 export function transform(matrix: readonly (readonly bigint[])[], vectors: ArrayLike<number>): number[] {
   let largestEntry = 0
-  for (const row of matrix) for (const entry of row) largestEntry = Math.max(largestEntry, Math.abs(Number(entry)))
+  for (const row of matrix)
+    for (const entry of row) largestEntry = Math.max(largestEntry, Math.abs(Number(entry)))
   let largest = 0
   for (let i = 0; i < vectors.length; i++) largest = Math.max(largest, Math.abs(vectors[i]))
   if (4 * largestEntry * largest > Number.MAX_SAFE_INTEGER) {
@@ -105,7 +101,8 @@ function orthogonalise(gram: readonly (readonly bigint[])[]): { lambda: bigint[]
       if (j < i) lambda[i][j] = entry
       else minors[i + 1] = entry
     }
-    if (minors[i + 1] <= 0n) throw new InvariantError('Lattice reduction needs points that span four dimensions.')
+    if (minors[i + 1] <= 0n)
+      throw new InvariantError('Lattice reduction needs points that span four dimensions.')
   }
   return { lambda, minors }
 }

@@ -41,10 +41,15 @@ export function normalForm(polytope: Polytope): NormalForm {
   const columns = columnsOf(form, vertexCount)
   const short = reducedBasis(rowsOf(columns))
   const vertices = transform(short.matrix, columns)
-  const normal = polytopeFromPoints(Array.from({ length: vertexCount }, (_, v) => vertices.slice(4 * v, 4 * v + 4)))
+  const normal = polytopeFromPoints(
+    Array.from({ length: vertexCount }, (_, v) => vertices.slice(4 * v, 4 * v + 4)),
+  )
 
   const order = orders[0]
-  const carried = hermiteForm([0, 1, 2, 3].flatMap((axis) => bordered(reduced, order, axis)), vertexCount)
+  const carried = hermiteForm(
+    [0, 1, 2, 3].flatMap((axis) => bordered(reduced, order, axis)),
+    vertexCount,
+  )
   const toHermite = [0, 1, 2, 3].map((axis) => {
     const start = axis * (vertexCount + 4) + vertexCount
     return Array.from(carried.subarray(start, start + 4), BigInt)
@@ -86,7 +91,10 @@ function leastHermiteForm(
   let form: Float64Array | undefined
   let orders: (readonly number[])[] = []
   for (const order of candidates) {
-    const here = hermiteForm([0, 1, 2, 3].flatMap((axis) => order.map((v) => vertices[4 * v + axis])), vertexCount)
+    const here = hermiteForm(
+      [0, 1, 2, 3].flatMap((axis) => order.map((v) => vertices[4 * v + axis])),
+      vertexCount,
+    )
     const comparison = form === undefined ? -1 : compareLexicographic(here, form)
     if (comparison < 0) {
       form = here
@@ -108,6 +116,7 @@ const columnsOf = (form: Float64Array, count: number): number[] =>
 
 function keyOf(normal: Polytope): string {
   const vertices: string[] = []
-  for (let v = 0; v < normal.vertexCount; v++) vertices.push(normal.points.subarray(4 * v, 4 * v + 4).join(','))
+  for (let v = 0; v < normal.vertexCount; v++)
+    vertices.push(normal.points.subarray(4 * v, 4 * v + 4).join(','))
   return bytesToHex(sha256(utf8ToBytes(vertices.join(';')))).slice(0, 32)
 }

@@ -17,7 +17,8 @@ export class PointIndex {
   /** Index of the point with the coordinates `points[4 i .. 4 i + 3]`. */
   find(points: ArrayLike<number>, i: number): number {
     const index = this.indexOf.get(this.key(points, i))
-    if (index === undefined) throw new InvariantError('An image of a lattice point is no lattice point of the polytope.')
+    if (index === undefined)
+      throw new InvariantError('An image of a lattice point is no lattice point of the polytope.')
     return index
   }
 

@@ -131,7 +131,9 @@ function assemble(
     components,
     facets: Int32Array.from(facets),
     facetCount: facets.length / 4,
-    twoFaces: faces.twoFaces.map(({ ends, on }, f) => twoFace(points, ends, on, onTwoFace[f], dualLengths[f])),
+    twoFaces: faces.twoFaces.map(({ ends, on }, f) =>
+      twoFace(points, ends, on, onTwoFace[f], dualLengths[f]),
+    ),
     edges: onEdge.map((members) => alongEdge(points, members)),
     ...hodgeNumbers(faces, own, dual, dualLengths, edgeLengths),
     latticePoints: own.total,
@@ -140,7 +142,11 @@ function assemble(
 }
 
 /** Vertices and edge points of each 2-face, ascending. */
-function pointsOfTwoFaces(faces: Faces, onEdge: readonly (readonly number[])[], vertexCount: number): number[][] {
+function pointsOfTwoFaces(
+  faces: Faces,
+  onEdge: readonly (readonly number[])[],
+  vertexCount: number,
+): number[][] {
   const edgesOfVertex: number[][] = Array.from({ length: vertexCount }, () => [])
   faces.edges.forEach(({ ends }, e) => edgesOfVertex[ends[0]].push(e))
   return faces.twoFaces.map(({ ends, on }) => {
@@ -148,7 +154,8 @@ function pointsOfTwoFaces(faces: Faces, onEdge: readonly (readonly number[])[], 
     for (const v of on) {
       for (const e of edgesOfVertex[v]) {
         const { on: facetsOfEdge } = faces.edges[e]
-        if (facetsOfEdge.includes(ends[0]) && facetsOfEdge.includes(ends[1])) members.push(...onEdge[e].slice(2))
+        if (facetsOfEdge.includes(ends[0]) && facetsOfEdge.includes(ends[1]))
+          members.push(...onEdge[e].slice(2))
       }
     }
     return members.sort((i, j) => i - j)

@@ -37,7 +37,12 @@ export function checkedPoints(rows: readonly (readonly number[])[]): number[][] 
 function checkRow(row: readonly number[], index: number): void {
   if (!Array.isArray(row) || row.length !== 4) {
     const found = Array.isArray(row) ? `has ${row.length} coordinates` : 'is no list of coordinates'
-    throw new InputError('polytope.wrong-shape', `Point ${index + 1} ${found}; every point needs 4.`, `[${index}]`, row)
+    throw new InputError(
+      'polytope.wrong-shape',
+      `Point ${index + 1} ${found}; every point needs 4.`,
+      `[${index}]`,
+      row,
+    )
   }
   row.forEach((entry: unknown, axis) => {
     const place = `Coordinate ${axis + 1} of point ${index + 1}`
@@ -60,23 +65,26 @@ function checkRow(row: readonly number[], index: number): void {
   })
 }
 
-const describe = (entry: unknown): string => (typeof entry === 'string' ? `the text "${entry}"` : String(entry))
+const describe = (entry: unknown): string =>
+  typeof entry === 'string' ? `the text "${entry}"` : String(entry)
 
-/** Dimension of the affine hull of integer points, exact. */
-export function affineDimension(points: readonly (readonly number[])[]): number {
-  const width = points[0].length
+/** Dimension of the affine hull of integer points, exact; stops at the first points that span everything. */
+export function affineDimension(points: Iterable<readonly number[]>): number {
+  let base: readonly number[] | undefined
   const echelon: { pivot: number; row: bigint[] }[] = []
   for (const point of points) {
-    const rest = point.map((entry, i) => BigInt(entry) - BigInt(points[0][i]))
+    base ??= point
+    const origin = base
+    const rest = point.map((entry, i) => BigInt(entry) - BigInt(origin[i]))
     for (const { pivot, row } of echelon) {
       const factor = rest[pivot]
       if (factor === 0n) continue
-      for (let i = 0; i < width; i++) rest[i] = rest[i] * row[pivot] - factor * row[i]
+      for (let i = 0; i < rest.length; i++) rest[i] = rest[i] * row[pivot] - factor * row[i]
     }
     const pivot = rest.findIndex((entry) => entry !== 0n)
     if (pivot < 0) continue
     echelon.push({ pivot, row: rest })
-    if (echelon.length === width) break
+    if (echelon.length === Math.min(rest.length, 4)) break
   }
   return echelon.length
 }

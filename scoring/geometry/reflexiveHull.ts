@@ -1,7 +1,8 @@
 import { InputError } from '../errors.ts'
-import { hull, hullCoordinateLimit, hullVertexLimit } from './hull.ts'
+import { hull, hullVertexLimit } from './hull.ts'
 import { compareLexicographic } from './integers.ts'
-import { applyBig, applyTransposed, reducedBasis } from './latticeReduction.ts'
+import { applyBig, reducedBasis, transposed } from './latticeReduction.ts'
+import { linearForm } from './linearForm.ts'
 import { checkedPoints } from './polytopeInput.ts'
 
 /** Vertices and facet normals of a reflexive polytope in the coordinates given, each in lexicographic order. */
@@ -9,6 +10,9 @@ export interface ReflexiveHull {
   readonly vertices: readonly (readonly number[])[]
   readonly facets: readonly (readonly number[])[]
 }
+
+/** Largest coordinate in a reduced basis: the hull is exact up to here, whatever the points. */
+const reducedLimit = 2000
 
 /** Coordinates up to this size are taken as they are; larger ones go through a reduced basis first. */
 const plainLimit = 100
@@ -27,7 +31,9 @@ export function reflexiveHull(rows: readonly (readonly number[])[]): ReflexiveHu
   const points = checkedPoints(rows)
   const { reduced, normalIn } = reducedPoints(points)
   const found = hull(reduced)
-  if (found === undefined) {
+  if (found.kind === 'origin-not-interior') throw originNotInterior(normalIn(found.normal), found.offset)
+  if (found.kind === 'too-large') throw tooLarge('the hull has facets', Number.MAX_SAFE_INTEGER)
+  if (found.kind === 'too-many-vertices') {
     throw new InputError(
       'polytope.too-many-vertices',
       `The hull has more than ${hullVertexLimit} vertices; a reflexive polytope in four dimensions has at most 36.`,
@@ -38,7 +44,6 @@ export function reflexiveHull(rows: readonly (readonly number[])[]): ReflexiveHu
     offset: facet.offset,
     vertices: facet.vertices.map((position) => points[found.vertices[position]]).sort(compareLexicographic),
   }))
-  for (const facet of facets) if (facet.offset <= 0) throw originNotInterior(facet.normal, facet.offset)
   for (const facet of facets) if (facet.offset !== 1) throw wrongDistance(facet)
   return {
     vertices: found.vertices.map((index) => points[index]).sort(compareLexicographic),
@@ -59,12 +64,13 @@ function reducedPoints(points: readonly (readonly number[])[]): {
   const reduced = exact.map((point) =>
     applyBig(matrix, point).map((entry) => {
       const size = entry < 0n ? -entry : entry
-      if (size > BigInt(hullCoordinateLimit)) throw tooLarge(`a coordinate of size ${size} is left`, hullCoordinateLimit)
+      if (size > BigInt(reducedLimit)) throw tooLarge(`a coordinate of size ${size} is left`, reducedLimit)
       return Number(entry)
     }),
   )
   for (const point of points) for (const entry of point) storable(entry)
-  return { reduced, normalIn: (normal) => applyTransposed(matrix, normal.map(BigInt)) }
+  const back = transposed(matrix)
+  return { reduced, normalIn: (normal) => applyBig(back, normal.map(BigInt)) }
 }
 
 function storable(entry: number | bigint): number {
@@ -90,7 +96,7 @@ function originNotInterior(normal: readonly bigint[], offset: number): InputErro
   const place = offset === 0 ? 'lies on the boundary' : 'lies outside'
   return new InputError(
     'polytope.origin-not-interior',
-    `The origin ${place}: all points satisfy ${form(normal)} >= ${-offset}, so it is not in the interior.`,
+    `The origin ${place}: all points satisfy ${linearForm(normal, 'x')} >= ${-offset}, so it is not in the interior.`,
     '',
     { normal: normal.map(String), atLeast: -offset },
   )
@@ -104,17 +110,4 @@ function wrongDistance(facet: { normal: bigint[]; offset: number; vertices: numb
     '',
     { normal: facet.normal.map(String), distance: facet.offset, vertices: facet.vertices },
   )
-}
-
-/** A linear form in x1..x4 as text. */
-function form(normal: readonly bigint[]): string {
-  const terms = normal
-    .map((entry, i) => ({ entry, name: `x${i + 1}` }))
-    .filter(({ entry }) => entry !== 0n)
-    .map(({ entry, name }, i) => {
-      const size = entry < 0n ? -entry : entry
-      const sign = entry < 0n ? (i === 0 ? '-' : ' - ') : i === 0 ? '' : ' + '
-      return `${sign}${size === 1n ? '' : `${size} `}${name}`
-    })
-  return terms.join('')
 }

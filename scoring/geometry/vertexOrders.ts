@@ -11,7 +11,11 @@
  * @param pairing vertexCount x facetCount, a row per vertex
  * @returns orderings: the vertex in each position; never empty
  */
-export function vertexOrders(pairing: ArrayLike<number>, vertexCount: number, facetCount: number): number[][] {
+export function vertexOrders(
+  pairing: ArrayLike<number>,
+  vertexCount: number,
+  facetCount: number,
+): number[][] {
   const matrix = Int32Array.from(pairing)
   let level = [refine(matrix, new Int32Array(vertexCount), new Int32Array(facetCount))]
   while (level[0].cells < vertexCount) {
@@ -71,7 +75,10 @@ function refine(matrix: Int32Array, vertexColours: Int32Array, facetColours: Int
 }
 
 /** Splits cells by hashes: the new colour is the rank of (old colour, hash). */
-function split(colours: Int32Array, hashes: Int32Array): { colours: Int32Array; count: number; trace: number } {
+function split(
+  colours: Int32Array,
+  hashes: Int32Array,
+): { colours: Int32Array; count: number; trace: number } {
   const order = Array.from(colours.keys()).sort((i, j) => colours[i] - colours[j] || hashes[i] - hashes[j])
   const next = new Int32Array(colours.length)
   let count = 0
@@ -88,7 +95,9 @@ function split(colours: Int32Array, hashes: Int32Array): { colours: Int32Array; 
 function smallestCell(colours: Int32Array, cells: number): number[] {
   const members: number[][] = Array.from({ length: cells }, () => [])
   colours.forEach((colour, vertex) => members[colour].push(vertex))
-  return members.reduce((best, cell) => (cell.length > 1 && (best.length < 2 || cell.length < best.length) ? cell : best))
+  return members.reduce((best, cell) =>
+    cell.length > 1 && (best.length < 2 || cell.length < best.length) ? cell : best,
+  )
 }
 
 /** A 32-bit hash of two integers; the multipliers are odd numbers without small structure. */
