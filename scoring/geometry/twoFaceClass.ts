@@ -29,6 +29,26 @@ export type HeightsOutcome =
       readonly triangles: Int32Array
     }
 
+/** A class that keeps the half-edges it was read from, so that the next step need not pair them again. */
+class MeshedClass implements TwoFaceClass {
+  readonly polytope: Polytope
+  readonly triangles: Int32Array
+  readonly faceOf: Int32Array
+  readonly #mesh: FaceMesh
+
+  constructor({ polytope, triangles, faceOf }: TwoFaceClass, mesh: FaceMesh) {
+    this.polytope = polytope
+    this.triangles = triangles
+    this.faceOf = faceOf
+    this.#mesh = mesh
+  }
+
+  static meshOf(cls: TwoFaceClass): FaceMesh | undefined {
+    return cls instanceof MeshedClass ? cls.#mesh : undefined
+  }
+}
+
+/** Half-edges of classes that came without. */
 const meshes = new WeakMap<TwoFaceClass, FaceMesh>()
 const references = new WeakMap<Polytope, TwoFaceClass>()
 
@@ -146,7 +166,7 @@ export function classFromTriangles(polytope: Polytope, triangles: ArrayLike<numb
 
 /** The half-edges of a class. Not to be changed: copy first. */
 export function meshOfClass(cls: TwoFaceClass): FaceMesh {
-  let mesh = meshes.get(cls)
+  let mesh = MeshedClass.meshOf(cls) ?? meshes.get(cls)
   if (mesh === undefined) {
     const sheets = faceSheets(cls.polytope)
     const from = new Int32Array(cls.triangles.length)
@@ -165,13 +185,9 @@ export function meshOfClass(cls: TwoFaceClass): FaceMesh {
 /** The class with these triangles; the mesh must not be changed afterwards. */
 export function classOfMesh(mesh: FaceMesh): TwoFaceClass {
   const { sheets, from } = mesh
-  const cls = classOfTriangles(
-    sheets.polytope,
-    from.map((corner) => sheets.point[corner]),
-    sheets.faceOfSlot,
-  )
-  meshes.set(cls, mesh)
-  return cls
+  const points = new Int32Array(from.length)
+  for (let h = 0; h < from.length; h++) points[h] = sheets.point[from[h]]
+  return new MeshedClass(classOfTriangles(sheets.polytope, points, sheets.faceOfSlot), mesh)
 }
 
 /** Puts the triangles of a class in order. They are taken on trust: see `classFromTriangles`. */
@@ -184,8 +200,8 @@ export function classOfTriangles(polytope: Polytope, unordered: Int32Array, face
     const p = unordered[3 * t]
     const q = unordered[3 * t + 1]
     const r = unordered[3 * t + 2]
-    const low = Math.min(p, q, r)
-    const high = Math.max(p, q, r)
+    const low = p < q ? (p < r ? p : r) : q < r ? q : r
+    const high = p > q ? (p > r ? p : r) : q > r ? q : r
     codes[t] = ((low * n + (p + q + r - low - high)) * n + high) * faceCount + faces[t]
   }
   codes.sort()
