@@ -1,0 +1,53 @@
+import { type IntersectionNumbers, intersectionNumber } from '../geometry/intersectionNumbers.ts'
+import type { MemberLists } from './observable.ts'
+
+/** The points joined to each point by an edge of the class, ascending. */
+export function neighbours({ edges, pointCount }: IntersectionNumbers): MemberLists {
+  const starts = new Int32Array(pointCount + 1)
+  for (const point of edges) starts[point + 1]++
+  for (let point = 0; point < pointCount; point++) starts[point + 1] += starts[point]
+  const filled = starts.slice(0, pointCount)
+  const items = new Int32Array(edges.length)
+  for (let at = 0; at < edges.length; at += 2) {
+    items[filled[edges[at]]++] = edges[at + 1]
+    items[filled[edges[at + 1]]++] = edges[at]
+  }
+  return { starts, items }
+}
+
+/** 1 for every divisor with D^2 = 0 as a class: kappa_iij = 0 for all j, i included. */
+function squareZero({ edges, edgeNumbers, cubes }: IntersectionNumbers): Uint8Array {
+  const zero = Uint8Array.from(cubes, (cube) => (cube === 0 ? 1 : 0))
+  for (let at = 0; at < edgeNumbers.length; at++) if (edgeNumbers[at] !== 0) zero[edges[at]] = 0
+  return zero
+}
+
+/** 1 for every divisor that is a K3 fibre: D^2 = 0 and c2 . D = 24. (D^3 = 0 with c2 . D = 24 is not enough.) */
+export function k3Fibres(numbers: IntersectionNumbers): Uint8Array {
+  return squareZero(numbers).map((zero, i) => (zero === 1 && numbers.secondChern[i] === 24 ? 1 : 0))
+}
+
+/**
+ * Degree of every diagonal del Pezzo divisor, NaN for the others. Divisor i is one of degree k when
+ * kappa_iii = k with 1 <= k <= 9, chi(O) = 1, kappa_iij <= 0 for all j != i, and
+ * kappa_iii kappa_ijl = kappa_iij kappa_iil for all j, l. Without the condition on the signs, divisors of the
+ * quintic's free quotient would pass.
+ */
+export function diagonalDelPezzoDegrees(numbers: IntersectionNumbers, chi: ArrayLike<number>): Float64Array {
+  const { cubes, edges, edgeNumbers, pointCount } = numbers
+  const degrees = new Float64Array(pointCount).fill(NaN)
+  const possible = Uint8Array.from(cubes, (cube, i) => (cube >= 1 && cube <= 9 && chi[i] === 1 ? 1 : 0))
+  for (let at = 0; at < edgeNumbers.length; at++) if (edgeNumbers[at] > 0) possible[edges[at]] = 0
+  if (!possible.includes(1)) return degrees
+  const { starts, items } = neighbours(numbers)
+  for (let i = 0; i < pointCount; i++) {
+    if (possible[i] === 0) continue
+    const around = Array.from({ length: starts[i + 1] - starts[i] }, (_, at) => items[starts[i] + at])
+    const row = around.map((j) => intersectionNumber(numbers, i, i, j))
+    const factorises = around.every((j, a) =>
+      around.every((l, b) => b < a || cubes[i] * intersectionNumber(numbers, i, j, l) === row[a] * row[b]),
+    )
+    if (factorises) degrees[i] = cubes[i]
+  }
+  return degrees
+}

@@ -1,0 +1,57 @@
+import { InvariantError } from '../errors.ts'
+import type {
+  ElementField,
+  MembersField,
+  NumberSet,
+  RecordSet,
+  Relation,
+  ScalarObservable,
+  ValueField,
+} from '../observables/observable.ts'
+import type { Frame, Resource } from './frame.ts'
+
+/** What a program loads from a candidate: the registry's entries with a value of their own. */
+export type Loadable =
+  ScalarObservable | ValueField | ElementField | MembersField | NumberSet | RecordSet | Relation
+
+function scaled(values: ArrayLike<number>, factor: number): ArrayLike<number> {
+  if (factor === 1) return values
+  const result = new Float64Array(values.length)
+  for (let at = 0; at < result.length; at++) result[at] = values[at] * factor
+  return result
+}
+
+function read(entry: Loadable, frame: Frame): Resource {
+  const { candidate } = frame
+  switch (entry.kind) {
+    case 'scalar':
+      return { kind: 'values', values: [entry.read(candidate) * frame.power(entry.scaling)] }
+    case 'value':
+    case 'element':
+      return { kind: 'values', values: scaled(entry.column(candidate), frame.power(entry.scaling)) }
+    case 'numbers':
+      return { kind: 'values', values: scaled(entry.values(candidate), frame.power(entry.scaling)) }
+    case 'records':
+      return { kind: 'values', values: [entry.size(candidate)] }
+    case 'members':
+      return { kind: 'members', lists: entry.members(candidate) }
+    case 'relation':
+      return { kind: 'lookup', lookup: entry.bind(candidate) }
+  }
+}
+
+/**
+ * Loads an entry for this evaluation. A stage whose geometry breaks an identity makes the value undefined; any
+ * other exception is a bug and passes through.
+ */
+export function load(entry: Loadable, frame: Frame, index: number): Resource {
+  let resource: Resource
+  try {
+    resource = read(entry, frame)
+  } catch (error) {
+    if (!(error instanceof InvariantError)) throw error
+    resource = { kind: 'failed', message: error.message }
+  }
+  frame.resources[index] = resource
+  return resource
+}
