@@ -1,14 +1,15 @@
-import { latticeBasis } from './latticeBasis.ts'
 import type { Polytope } from './polytope.ts'
 import { reducedCoordinates } from './reducedCoordinates.ts'
 
 /**
- * The charge matrix Q, N x (N - 4), row-major: D_i = sum_a Q_ia D_basis(a) modulo the linear relations, for the
- * lattice basis of `latticeBasis`. The basis points have unit rows; the four others are solved from
- * sum_k <m, v_k> D_k = 0. Integral (modulo torsion).
+ * The charge matrix Q, N x (N - 4), row-major: D_i = sum_a Q_ia D_a modulo the linear relations, a over all points
+ * but the four excluded ones, whose vectors must be independent. The other points have unit rows; the excluded
+ * ones are solved from sum_k <m, v_k> D_k = 0. Integral when the determinant of the four is the index of the
+ * lattice that all points generate.
+ *
+ * @param excluded four points, ascending; `basis`: all others, ascending
  */
-export function chargeMatrix(polytope: Polytope): Float64Array {
-  const { basis, excluded } = latticeBasis(polytope)
+export function chargeMatrix(polytope: Polytope, excluded: Int32Array, basis: Int32Array): Float64Array {
   const points = reducedCoordinates(polytope)
   const rank = basis.length
   const charges = new Float64Array(polytope.pointCount * rank)

@@ -1,4 +1,4 @@
-import { orthonormalColumns } from './orthonormal.ts'
+import { innerProduct, orthonormalColumns, removeComponents } from './orthonormal.ts'
 import type { Polytope } from './polytope.ts'
 import { reducedCoordinates } from './reducedCoordinates.ts'
 import type { PairNumbers, Volumes } from './volumes.ts'
@@ -30,20 +30,55 @@ export function inverseMetric(pairs: PairNumbers, volumes: Volumes, points: Int3
   return packed
 }
 
-const known = new WeakMap<Polytope, readonly Float64Array[]>()
+/** What the metric over all points needs of the polytope alone. */
+export interface RelationSpace {
+  /** Orthonormal basis (four vectors over the points) of the linear relations: the kernel of the metric. */
+  readonly relations: readonly Float64Array[]
+  /** Four points whose vectors are independent, chosen far from dependent; and all others, ascending. */
+  readonly anchors: Int32Array
+  readonly others: Int32Array
+}
+
+const known = new WeakMap<Polytope, RelationSpace>()
 
 /**
- * Orthonormal basis (four vectors over the points) of the linear relations <m, v_k>, m in R^4: the kernel of the
- * metric over all points. Computed once per polytope.
+ * The linear relations <m, v_k>, m in R^4, over the points. A relation that vanishes on the four anchors is zero,
+ * so the metric over the other points is regular; the anchors are picked greedily by the largest part of their
+ * row in the relations that is orthogonal to the rows before (pivoted orthogonalisation), which keeps it well
+ * conditioned. Computed once per polytope.
  */
-export function linearRelations(polytope: Polytope): readonly Float64Array[] {
+export function relationSpace(polytope: Polytope): RelationSpace {
   const before = known.get(polytope)
   if (before) return before
   const points = reducedCoordinates(polytope)
+  const count = polytope.pointCount
   const columns = [0, 1, 2, 3].map((axis) =>
-    Float64Array.from({ length: polytope.pointCount }, (_, p) => points[4 * p + axis]),
+    Float64Array.from({ length: count }, (_, p) => points[4 * p + axis]),
   )
   const relations = orthonormalColumns(columns)
-  known.set(polytope, relations)
-  return relations
+  const anchors = Int32Array.from(independentRows(relations, count)).sort()
+  const others = Int32Array.from({ length: count }, (_, p) => p).filter((p) => !anchors.includes(p))
+  const space = { relations, anchors, others }
+  known.set(polytope, space)
+  return space
+}
+
+function independentRows(relations: readonly Float64Array[], count: number): number[] {
+  const rows = Array.from({ length: count }, (_, p) => Float64Array.from(relations, (column) => column[p]))
+  const chosen: number[] = []
+  while (chosen.length < relations.length) {
+    let best = -1
+    let length = 0
+    for (let p = 0; p < count; p++) {
+      const own = innerProduct(rows[p], rows[p])
+      if (own > length) {
+        best = p
+        length = own
+      }
+    }
+    chosen.push(best)
+    const direction = rows[best].map((entry) => entry / Math.sqrt(length))
+    for (const row of rows) removeComponents([direction], row)
+  }
+  return chosen
 }

@@ -59,7 +59,8 @@ function generatedLattice(points: Float64Array): number[][] {
       }
     }
   }
-  if (rows.some((row, axis) => row[axis] === 0)) throw new InvariantError('The points do not span four dimensions.')
+  if (rows.some((row, axis) => row[axis] === 0))
+    throw new InvariantError('The points do not span four dimensions.')
   return rows
 }
 

@@ -49,7 +49,8 @@ export class NormalMatrix {
     values.fill(0)
     for (let r = 0; r < rowCount(this.rows); r++) {
       const weight = diagonal[r]
-      for (let k = pairStarts[r]; k < pairStarts[r + 1]; k++) values[pairTargets[k]] += weight * pairProducts[k]
+      for (let k = pairStarts[r]; k < pairStarts[r + 1]; k++)
+        values[pairTargets[k]] += weight * pairProducts[k]
     }
     for (let p = 0; p < order.size; p++) values[order.starts[p]] += 1
     return this.factor.factorise()

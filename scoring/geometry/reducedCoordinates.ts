@@ -24,6 +24,7 @@ export function reducedCoordinates(polytope: Polytope): Float64Array {
 export function shortCoordinates(vectors: ArrayLike<number>): Float64Array {
   const reduced = Float64Array.from(transform(reducedBasis(rowsOf(vectors)).matrix, vectors))
   const largest = reduced.reduce((size, coordinate) => Math.max(size, Math.abs(coordinate)), 0)
-  if (largest > largestCoordinate) throw new InvariantError(`A reduced basis leaves the coordinate ${largest}.`)
+  if (largest > largestCoordinate)
+    throw new InvariantError(`A reduced basis leaves the coordinate ${largest}.`)
   return reduced
 }

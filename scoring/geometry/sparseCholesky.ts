@@ -8,6 +8,8 @@ import type { EliminationOrder } from './minimumDegree.ts'
 export class SparseCholesky {
   readonly order: EliminationOrder
   readonly values: Float64Array
+  /** 1 for the variables (by index, not position) that the last factorisation set aside. */
+  readonly aside: Uint8Array
   private readonly column: Float64Array
   private readonly permuted: Float64Array
   /** First column in the list of those whose next row to be used is this one; then the next in the list. */
@@ -18,6 +20,7 @@ export class SparseCholesky {
   constructor(order: EliminationOrder) {
     this.order = order
     this.values = new Float64Array(order.rows.length)
+    this.aside = new Uint8Array(order.size)
     this.column = new Float64Array(order.size)
     this.permuted = new Float64Array(order.size)
     this.listHead = new Int32Array(order.size)
@@ -45,9 +48,23 @@ export class SparseCholesky {
    * reach it. Returns false (with `values` spoilt) when a pivot is not positive.
    */
   factorise(): boolean {
-    const { order, values, column, listHead, listNext, cursor } = this
+    return this.eliminate(-1)
+  }
+
+  /**
+   * Factorises the principal submatrix without the variables whose pivot falls to `ratio` times the size of
+   * their diagonal entry or below: they are marked in `aside` and solutions are zero there. The rest is positive
+   * definite by construction, with bounded pivots.
+   */
+  factoriseSettingAside(ratio: number): void {
+    this.eliminate(ratio)
+  }
+
+  private eliminate(ratio: number): boolean {
+    const { order, values, column, listHead, listNext, cursor, aside } = this
     const { size, starts, rows } = order
     listHead.fill(-1)
+    aside.fill(0)
     for (let j = 0; j < size; j++) {
       const start = starts[j]
       const end = starts[j + 1]
@@ -63,7 +80,14 @@ export class SparseCholesky {
         k = following
       }
       const pivot = column[j]
-      if (!(pivot > 0)) return false
+      const least = ratio < 0 ? 0 : ratio * Math.abs(values[start])
+      if (!(pivot > least)) {
+        if (ratio < 0) return false
+        aside[order.order[j]] = 1
+        values[start] = 1
+        values.fill(0, start + 1, end)
+        continue
+      }
       const root = Math.sqrt(pivot)
       values[start] = root
       for (let q = start + 1; q < end; q++) values[q] = column[rows[q]] / root
@@ -82,7 +106,7 @@ export class SparseCholesky {
 
   /** Solves M x = right; `x` may be `right` itself. */
   solve(right: Float64Array, x: Float64Array): void {
-    const { order, values, permuted: y } = this
+    const { order, values, aside, permuted: y } = this
     const { size, order: variables, starts, rows } = order
     for (let p = 0; p < size; p++) y[p] = right[variables[p]]
     for (let p = 0; p < size; p++) {
@@ -91,7 +115,7 @@ export class SparseCholesky {
       for (let q = starts[p] + 1; q < starts[p + 1]; q++) y[rows[q]] -= values[q] * value
     }
     for (let p = size - 1; p >= 0; p--) {
-      let value = y[p]
+      let value = aside[variables[p]] ? 0 : y[p]
       for (let q = starts[p] + 1; q < starts[p + 1]; q++) value -= values[q] * y[rows[q]]
       y[p] = value / values[starts[p]]
     }

@@ -64,7 +64,8 @@ export function rowsBelow(rows: SparseRows, x: Float64Array, threshold: number):
 function selectedRows(rows: SparseRows, keep: Int32Array): SparseRows {
   const { starts, points, coefficients } = rows
   const newStarts = new Int32Array(keep.length + 1)
-  for (let k = 0; k < keep.length; k++) newStarts[k + 1] = newStarts[k] + starts[keep[k] + 1] - starts[keep[k]]
+  for (let k = 0; k < keep.length; k++)
+    newStarts[k + 1] = newStarts[k] + starts[keep[k] + 1] - starts[keep[k]]
   const newPoints = new Int32Array(newStarts[keep.length])
   const newCoefficients = new Float64Array(newStarts[keep.length])
   for (let k = 0; k < keep.length; k++) {

@@ -1,10 +1,11 @@
 import { Matrix, SVD } from 'ml-matrix'
 import { InvariantError } from '../errors.ts'
 import { chargeMatrix } from './chargeMatrix.ts'
-import { factoriseDense, solveDense } from './denseCholesky.ts'
-import { inverseMetric, linearRelations } from './fieldSpaceMetric.ts'
+import { factoriseDense } from './denseCholesky.ts'
+import { inverseMetric, relationSpace } from './fieldSpaceMetric.ts'
 import { largestEigenvalue, type TopEigenvalue } from './lanczos.ts'
 import { latticeBasis } from './latticeBasis.ts'
+import { MetricFactor } from './metricFactor.ts'
 import { removeComponents } from './orthonormal.ts'
 import type { Polytope } from './polytope.ts'
 import type { PairNumbers, Volumes } from './volumes.ts'
@@ -20,25 +21,24 @@ export const topEigenvalueTolerance = 1e-9
 
 /**
  * Largest eigenvalue of the divisor spectrum: of the inverse of M over all points on the complement of the
- * linear relations. M x = b with b in the complement is solved with the points of a lattice basis (a relation
- * that vanishes on the four others is zero, so M restricted to the basis is positive definite), then projected.
+ * linear relations. M x = b with b in the complement is solved over all points but four independent ones, then
+ * projected.
  * That the factorisation succeeds proves, with V > 0, that A has the signature (1, N - 5) beside its kernel:
  * M is positive on the complement of the direction of J, where it is -4 V A. Throws InvariantError otherwise.
  */
 export function topEigenvalue(polytope: Polytope, pairs: PairNumbers, volumes: Volumes): TopEigenvalue {
-  const { basis } = latticeBasis(polytope)
-  const relations = linearRelations(polytope)
-  const factor = choleskyOfMetric(pairs, volumes, basis)
-  const inner = new Float64Array(basis.length)
+  const { relations, others } = relationSpace(polytope)
+  const factor = new MetricFactor(others, pairs, volumes)
+  const inner = new Float64Array(others.length)
   return largestEigenvalue(
     polytope.pointCount,
     (x, y) => {
       y.set(x)
       removeComponents(relations, y)
-      for (let a = 0; a < basis.length; a++) inner[a] = y[basis[a]]
-      solveDense(basis.length, factor, inner)
+      for (let a = 0; a < others.length; a++) inner[a] = y[others[a]]
+      factor.solve(inner, inner)
       y.fill(0)
-      for (let a = 0; a < basis.length; a++) y[basis[a]] = inner[a]
+      for (let a = 0; a < others.length; a++) y[others[a]] = inner[a]
       removeComponents(relations, y)
     },
     topEigenvalueTolerance,
@@ -47,14 +47,18 @@ export function topEigenvalue(polytope: Polytope, pairs: PairNumbers, volumes: V
 
 /**
  * All N - 4 non-zero eigenvalues of M over all points, inverted, ascending: the generalised eigenvalues of G
- * against Q^T Q, Q the charge matrix. With M over the basis points = L L^T, M over all points is (Q L)(Q L)^T, and
+ * against Q^T Q, Q the charge matrix. With M over all points but four = L L^T, M over all points is (Q L)(Q L)^T, and
  * the eigenvalues are the squared singular values of Q L: small ones keep twice the digits that an eigenvalue
  * decomposition of M would leave them, and the kernel never enters.
  */
 export function divisorSpectrum(polytope: Polytope, pairs: PairNumbers, volumes: Volumes): Float64Array {
-  const { basis } = latticeBasis(polytope)
-  const lower = lowerTriangle(basis.length, choleskyOfMetric(pairs, volumes, basis))
-  const charges = Matrix.from1DArray(polytope.pointCount, basis.length, chargeMatrix(polytope))
+  const { anchors, others } = relationSpace(polytope)
+  const lower = lowerTriangle(others.length, choleskyOfMetric(pairs, volumes, others))
+  const charges = Matrix.from1DArray(
+    polytope.pointCount,
+    others.length,
+    chargeMatrix(polytope, anchors, others),
+  )
   return invertedSquares(singularValues(charges.mmul(lower)))
 }
 
@@ -68,7 +72,9 @@ export function basisSpectrum(polytope: Polytope, pairs: PairNumbers, volumes: V
 function choleskyOfMetric(pairs: PairNumbers, volumes: Volumes, points: Int32Array): Float64Array {
   const packed = inverseMetric(pairs, volumes, points)
   if (!factoriseDense(points.length, packed)) {
-    throw new InvariantError('The field-space metric is not positive definite: the point lies outside the cone.')
+    throw new InvariantError(
+      'The field-space metric is not positive definite: the point lies outside the cone.',
+    )
   }
   return packed
 }

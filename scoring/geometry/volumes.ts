@@ -71,7 +71,8 @@ export function volumes(
     total += divisors[i] * weights[i]
   }
   total /= 3
-  if (!(total > 0)) throw new InvariantError(`The volume ${total} is not positive: the point lies outside the cone.`)
+  if (!(total > 0))
+    throw new InvariantError(`The volume ${total} is not positive: the point lies outside the cone.`)
   const curveVolumes = new Float64Array(curves.starts.length - 1)
   timesColumn(curves, weights, curveVolumes)
   return { total, divisors, curves: curveVolumes }
