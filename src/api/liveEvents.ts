@@ -1,0 +1,86 @@
+import { useEffect, useState } from 'react'
+import { useQueryClient, type QueryClient } from '@tanstack/react-query'
+import { type CampaignDetail } from '../../shared/campaigns.ts'
+import { type StreamEvent } from '../../shared/events.ts'
+import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
+import { openEventStream, type StreamState } from './eventStream.ts'
+import { previewKey } from './previews.ts'
+import { apiUrl } from './request.ts'
+import { sessionKey } from './session.ts'
+
+/** What each event does to the cache of this tab. */
+export function applyEvent(client: QueryClient, campaign: string, event: StreamEvent): void {
+  switch (event.kind) {
+    case 'search':
+      return applySearch(client, campaign, event)
+    case 'null':
+      client.setQueryData<SearchDetail>(['search', event.searchId], (old) =>
+        old ? { ...old, null: event.summary } : old,
+      )
+      return
+    case 'preview':
+      client.setQueryData(previewKey(event.preview.id), event.preview)
+      return
+    case 'library':
+      void client.invalidateQueries({ queryKey: ['polytopes'] })
+      return
+    case 'changed': {
+      const keys = {
+        targets: ['targets', campaign],
+        searches: ['searches', campaign],
+        shortlists: ['shortlists', campaign],
+        verdicts: ['shortlist'],
+        members: ['campaigns'],
+      } as const
+      void client.invalidateQueries({ queryKey: keys[event.what] })
+      void client.invalidateQueries({ queryKey: ['campaign', campaign] })
+      if (event.what === 'verdicts')
+        void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
+      return
+    }
+    case 'closed':
+      if (event.reason === 'signed-out') void client.invalidateQueries({ queryKey: sessionKey })
+      if (event.reason === 'role-lost') void client.invalidateQueries()
+  }
+}
+
+function applySearch(client: QueryClient, campaign: string, event: StreamEvent & { kind: 'search' }): void {
+  const { id, state, progress } = event
+  const known = client.getQueryData<SearchDetail>(['search', id])
+  const moved = { state, evaluations: progress.evaluations, best: progress.best }
+  if (known) client.setQueryData<SearchDetail>(['search', id], { ...known, ...moved, progress })
+  const inList = (list: SearchSummary[]) => list.map((row) => (row.id === id ? { ...row, ...moved } : row))
+  client.setQueryData<SearchSummary[]>(['searches', campaign], (old) => old && inList(old))
+  client.setQueryData<CampaignDetail>(
+    ['campaign', campaign],
+    (old) => old && { ...old, searchList: inList(old.searchList) },
+  )
+  if (!known) return
+  const newBest = progress.bestKey !== null && progress.bestKey !== known.progress.bestKey
+  // The list of best candidates travels only with the whole record.
+  if (newBest || state !== known.state) void client.invalidateQueries({ queryKey: ['search', id] })
+}
+
+/** Keeps the tab's stream open for a campaign; returns its state. */
+export function useLiveEvents(campaign: string | null, enabled: boolean): StreamState {
+  const client = useQueryClient()
+  const [state, setState] = useState<StreamState>('connecting')
+  useEffect(() => {
+    if (!enabled || campaign === null) return
+    let lost = false
+    return openEventStream({
+      url: apiUrl('/events', { campaign }),
+      onEvent: (event) => applyEvent(client, campaign, event),
+      onState: (next) => {
+        setState(next)
+        if (next === 'waiting') lost = true
+        if (next === 'live' && lost) {
+          // What happened while the connection was down was not heard.
+          lost = false
+          void client.invalidateQueries({ predicate: (query) => query.queryKey[0] !== 'candidate' })
+        }
+      },
+    })
+  }, [client, campaign, enabled])
+  return state
+}

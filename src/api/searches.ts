@@ -1,0 +1,45 @@
+import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query'
+import { z } from 'zod'
+import { searchDetailSchema, searchSummarySchema, type CreateSearch } from '../../shared/searches.ts'
+import { request } from './request.ts'
+
+export const searchesQuery = (campaign: string) =>
+  queryOptions({
+    queryKey: ['searches', campaign] as const,
+    queryFn: ({ signal }) =>
+      request(`/campaigns/${campaign}/searches`, { schema: z.array(searchSummarySchema), signal }),
+  })
+
+export const searchQuery = (campaign: string, search: string) =>
+  queryOptions({
+    queryKey: ['search', search] as const,
+    queryFn: ({ signal }) =>
+      request(`/campaigns/${campaign}/searches/${search}`, { schema: searchDetailSchema, signal }),
+  })
+
+export const useSearches = (campaign: string) => useQuery(searchesQuery(campaign))
+export const useSearch = (campaign: string, search: string) => useQuery(searchQuery(campaign, search))
+
+export function useCreateSearch(campaign: string) {
+  const client = useQueryClient()
+  return useMutation({
+    mutationFn: (body: CreateSearch) =>
+      request(`/campaigns/${campaign}/searches`, { method: 'POST', body, schema: searchDetailSchema }),
+    onSuccess: (search) => {
+      client.setQueryData(searchQuery(campaign, search.id).queryKey, search)
+      void client.invalidateQueries({ queryKey: ['searches', campaign] })
+      void client.invalidateQueries({ queryKey: ['campaign', campaign] })
+    },
+  })
+}
+
+export type SearchCommand = 'pause' | 'resume' | 'cancel'
+
+export function useSearchCommand(campaign: string, search: string) {
+  const client = useQueryClient()
+  return useMutation({
+    mutationFn: (command: SearchCommand) =>
+      request(`/campaigns/${campaign}/searches/${search}/${command}`, { method: 'POST' }),
+    onSettled: () => client.invalidateQueries({ queryKey: searchQuery(campaign, search).queryKey }),
+  })
+}

@@ -1,0 +1,42 @@
+import { useMutation, useQueryClient, type QueryClient } from '@tanstack/react-query'
+import { type z } from 'zod'
+import { verdictSchema, type giveVerdictSchema, type Verdict } from '../../shared/verdicts.ts'
+import { type ShortlistDetail } from '../../shared/shortlists.ts'
+import { request } from './request.ts'
+
+export type GiveVerdict = z.infer<typeof giveVerdictSchema> & { key: string }
+
+/** Puts a verdict into every shortlist of this target version that is in the cache, with its counts. */
+export function placeVerdict(client: QueryClient, key: string, versionId: string, verdict: Verdict): void {
+  client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
+    if (!list || list.targetVersionId !== versionId) return list
+    const rows = list.rows.map((row) => (row.candidateKey === key ? { ...row, verdict } : row))
+    const count = (value: string) =>
+      rows.filter((row) => (row.verdict?.value ?? 'undecided') === value).length
+    return {
+      ...list,
+      rows,
+      undecided: count('undecided'),
+      verified: count('verified'),
+      rejected: count('rejected'),
+    }
+  })
+}
+
+export function useGiveVerdict(campaign: string) {
+  const client = useQueryClient()
+  return useMutation({
+    mutationFn: ({ key, ...body }: GiveVerdict) =>
+      request(`/campaigns/${campaign}/candidates/${key}/verdicts`, {
+        method: 'POST',
+        body,
+        schema: verdictSchema,
+      }),
+    onSuccess: (verdict, { key, targetVersionId }) => {
+      placeVerdict(client, key, targetVersionId, verdict)
+      void client.invalidateQueries({ queryKey: ['candidate-record', campaign, key] })
+      void client.invalidateQueries({ queryKey: ['campaign', campaign] })
+      void client.invalidateQueries({ queryKey: ['shortlists', campaign] })
+    },
+  })
+}

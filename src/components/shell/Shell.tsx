@@ -1,0 +1,172 @@
+import { Suspense, useEffect, useMemo, useState } from 'react'
+import { Link, NavLink, Navigate, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom'
+import { CircleHelp } from 'lucide-react'
+import { Toaster } from 'sonner'
+import { type CampaignSummary } from '../../../shared/campaigns.ts'
+import { type StreamState } from '../../api/eventStream.ts'
+import { useCampaigns } from '../../api/campaigns.ts'
+import { useLiveEvents } from '../../api/liveEvents.ts'
+import { useSession } from '../../api/session.ts'
+import { dispatchShortcut, useShortcut, useShortcutsOn } from '../../lib/shortcuts.ts'
+import { recall, remember } from '../../lib/remembered.ts'
+import { useTheme } from '../../lib/theme.ts'
+import { IconButton } from '../ui/Button.tsx'
+import { Failure, Loading } from '../ui/States.tsx'
+import { AccountMenu } from './AccountMenu.tsx'
+import { CurrentCampaign } from './currentCampaign.tsx'
+import { Mark } from './Mark.tsx'
+import { ShortcutDialog } from './ShortcutDialog.tsx'
+import { ThemeButton } from './ThemeButton.tsx'
+
+/** Frame of every page behind sign-in: session, campaign in hand, event stream, head line. */
+export function Shell() {
+  const session = useSession()
+  const location = useLocation()
+  if (session.isPending)
+    return (
+      <Centred>
+        <Loading what="your session" />
+      </Centred>
+    )
+  if (session.isError) {
+    return (
+      <Centred>
+        <Failure error={session.error} retry={() => void session.refetch()} />
+      </Centred>
+    )
+  }
+  if (!session.data.account) {
+    const to = location.pathname + location.search
+    return <Navigate to={`/sign-in${to === '/' ? '' : `?then=${encodeURIComponent(to)}`}`} replace />
+  }
+  return <SignedIn account={session.data.account} version={session.data.version} />
+}
+
+function Centred({ children }: { children: React.ReactNode }) {
+  return <main className="mx-auto max-w-[420px] px-4 pt-[20vh]">{children}</main>
+}
+
+function useCampaignInHand(): { campaign: CampaignSummary | null; settled: boolean } {
+  const campaigns = useCampaigns()
+  const params = useParams()
+  const [search] = useSearchParams()
+  const named = params.campaignId ?? search.get('campaign')
+  const campaign = useMemo(() => {
+    const list = campaigns.data ?? []
+    if (named) return list.find(({ id }) => id === named) ?? null
+    return list.find(({ id }) => id === recall('campaign')) ?? list[0] ?? null
+  }, [campaigns.data, named])
+  useEffect(() => {
+    if (campaign) remember('campaign', campaign.id)
+  }, [campaign])
+  return { campaign, settled: !campaigns.isPending }
+}
+
+function SignedIn({
+  account,
+  version,
+}: {
+  account: Parameters<typeof AccountMenu>[0]['account']
+  version: string
+}) {
+  const { campaign, settled } = useCampaignInHand()
+  const stream = useLiveEvents(campaign?.id ?? null, true)
+  const [helpOpen, setHelpOpen] = useState(false)
+  const [theme] = useTheme()
+  const [shortcutsOn] = useShortcutsOn()
+  useShortcut({ key: '?', does: 'Show this list', group: 'Everywhere' }, () => setHelpOpen(true))
+  useEffect(() => {
+    const listen = (event: KeyboardEvent) => {
+      if (shortcutsOn || event.key === '?') dispatchShortcut(event)
+    }
+    window.addEventListener('keydown', listen)
+    return () => window.removeEventListener('keydown', listen)
+  }, [shortcutsOn])
+
+  return (
+    <CurrentCampaign value={campaign}>
+      <a
+        href="#content"
+        className="sr-only focus:not-sr-only focus:absolute focus:z-50 focus:bg-sheet focus:p-2"
+      >
+        Skip to content
+      </a>
+      <header className="sticky top-0 z-30 bg-paper">
+        <div className="mx-auto flex max-w-[1440px] items-center gap-2 px-4 py-1.5 sm:gap-4">
+          <Link to="/campaigns" className="flex items-center gap-2 font-serif text-base font-semibold">
+            <Mark />
+            <span className="hidden sm:inline">Tessellary</span>
+            <span className="sr-only sm:hidden">Tessellary</span>
+          </Link>
+          <MainNavigation campaign={campaign} />
+          <div className="ml-auto flex items-center">
+            <StreamNote state={stream} quiet={campaign === null} />
+            <ThemeButton />
+            <IconButton label="Shortcuts" onClick={() => setHelpOpen(true)}>
+              <CircleHelp size={16} aria-hidden />
+            </IconButton>
+            <AccountMenu account={account} version={version} />
+          </div>
+        </div>
+        <div className="graduated" aria-hidden />
+      </header>
+      <main id="content" tabIndex={-1} className="mx-auto max-w-[1440px] px-4 pb-16 outline-none">
+        {settled ? (
+          <Suspense fallback={<Loading what="the page" />}>
+            <Outlet />
+          </Suspense>
+        ) : (
+          <Loading what="your campaigns" />
+        )}
+      </main>
+      <ShortcutDialog open={helpOpen} onOpenChange={setHelpOpen} />
+      <Toaster theme={theme} position="bottom-right" closeButton />
+    </CurrentCampaign>
+  )
+}
+
+function MainNavigation({ campaign }: { campaign: CampaignSummary | null }) {
+  const base = campaign ? `/campaigns/${campaign.id}` : null
+  const items: [string, string, boolean][] = [
+    ...(base && campaign
+      ? ([
+          [base, campaign.name, true],
+          [`${base}/targets`, 'Targets', false],
+          [`${base}/searches`, 'Searches', false],
+          [`${base}/shortlists`, 'Shortlists', false],
+        ] as [string, string, boolean][])
+      : []),
+    [base && campaign ? `/library?campaign=${campaign.id}` : '/library', 'Library', false],
+  ]
+  return (
+    <nav aria-label="Main" className="flex min-w-0 flex-1 gap-3 overflow-x-auto sm:gap-4">
+      {items.map(([to, label, end]) => (
+        <NavLink
+          key={to}
+          to={to}
+          end={end}
+          className={({ isActive }) =>
+            `inline-flex min-h-8 max-w-60 shrink-0 items-center border-b-2 ${isActive ? 'border-action font-medium text-ink' : 'border-transparent text-soft hover:text-ink'}`
+          }
+        >
+          <span className="truncate">{label}</span>
+        </NavLink>
+      ))}
+    </nav>
+  )
+}
+
+const notes: Partial<Record<StreamState, string>> = {
+  waiting: 'Connection lost; trying again',
+  closed: 'Live updates ended',
+}
+
+/** Says only when live updates are not arriving. */
+function StreamNote({ state, quiet }: { state: StreamState; quiet: boolean }) {
+  const note = quiet ? undefined : notes[state]
+  return (
+    <span role="status" className="text-xs text-rejected">
+      {note}
+    </span>
+  )
+}

@@ -1,0 +1,18 @@
+import { createContext, useContext } from 'react'
+import { type CampaignSummary } from '../../../shared/campaigns.ts'
+import { may, type Permission } from '../../../shared/roles.ts'
+
+/** The campaign a tab works in: named by the address, else the last one visited, else the first. */
+export const CurrentCampaign = createContext<CampaignSummary | null>(null)
+
+export function useCurrentCampaign(): CampaignSummary | null {
+  return useContext(CurrentCampaign)
+}
+
+/** false when the reader's role allows it, otherwise the reason it does not: for `unavailable` of a button. */
+export function useBarred(permission: Permission): string | false {
+  const campaign = useContext(CurrentCampaign)
+  if (!campaign) return 'You are not in a campaign yet.'
+  if (may(campaign.role, permission)) return false
+  return `Your role in this campaign, ${campaign.role}, does not include this. A lead can change it.`
+}

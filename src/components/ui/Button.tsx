@@ -1,0 +1,55 @@
+import { type ButtonHTMLAttributes } from 'react'
+import { Link, type LinkProps } from 'react-router-dom'
+
+export type ButtonKind = 'primary' | 'plain' | 'quiet' | 'danger'
+
+const shape =
+  'inline-flex items-center justify-center gap-1.5 rounded border px-3 min-h-8 text-sm font-medium whitespace-nowrap select-none transition-colors aria-disabled:cursor-not-allowed aria-disabled:opacity-60'
+const kinds: Record<ButtonKind, string> = {
+  primary: 'border-action bg-action text-on-action not-aria-disabled:hover:brightness-110',
+  plain: 'border-edge bg-sheet text-ink not-aria-disabled:hover:bg-action-wash',
+  quiet: 'border-transparent text-action not-aria-disabled:hover:bg-action-wash px-2',
+  danger: 'border-rejected bg-sheet text-rejected not-aria-disabled:hover:bg-rejected-wash',
+}
+
+export interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
+  kind?: ButtonKind
+  /** Why the button cannot be used now. It stays reachable by keyboard so that the reason can be read. */
+  unavailable?: string | false | null
+  busy?: boolean
+}
+
+export function Button({ kind = 'plain', unavailable, busy, className = '', onClick, ...rest }: ButtonProps) {
+  const off = Boolean(unavailable) || busy
+  return (
+    <button
+      type="button"
+      {...rest}
+      aria-disabled={off || undefined}
+      aria-busy={busy || undefined}
+      title={unavailable || rest.title}
+      className={`${shape} ${kinds[kind]} ${className}`}
+      onClick={(event) => {
+        if (off) event.preventDefault()
+        else onClick?.(event)
+      }}
+    />
+  )
+}
+
+export function ButtonLink({ kind = 'plain', className = '', ...rest }: LinkProps & { kind?: ButtonKind }) {
+  return <Link {...rest} className={`${shape} ${kinds[kind]} ${className}`} />
+}
+
+/** A square button that shows only a symbol; `label` is its name for everyone. */
+export function IconButton({ label, className = '', ...rest }: ButtonProps & { label: string }) {
+  return (
+    <Button
+      kind="quiet"
+      {...rest}
+      aria-label={label}
+      title={rest.title ?? label}
+      className={`w-8 px-0 ${className}`}
+    />
+  )
+}

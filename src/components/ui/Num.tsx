@@ -1,0 +1,33 @@
+import { formatNumber, numberParts } from '../../lib/numbers.ts'
+
+/** A number as typeset text; copying it gives the raw value. */
+export function Num({
+  value,
+  digits = 4,
+  className = '',
+}: {
+  value: number | null
+  digits?: number
+  className?: string
+}) {
+  if (value === null) return <span className="text-soft">–</span>
+  const { mantissa, exponent } = numberParts(value, digits)
+  return (
+    <span
+      data-raw={String(value)}
+      title={String(value)}
+      className={`whitespace-nowrap tabular-nums ${className}`}
+    >
+      {exponent === null ? (
+        mantissa
+      ) : (
+        <>
+          <span aria-hidden="true">
+            {mantissa} × 10<sup className="text-[0.75em]">{String(exponent).replace('-', '−')}</sup>
+          </span>
+          <span className="sr-only">{formatNumber(value, digits)}</span>
+        </>
+      )}
+    </span>
+  )
+}

@@ -1,0 +1,72 @@
+import { type ReactNode, type TdHTMLAttributes, type ThHTMLAttributes } from 'react'
+import { ArrowDown, ArrowUp } from 'lucide-react'
+
+/** A plain table with 32 px rows that scrolls sideways in its own frame. */
+export function Table({
+  label,
+  children,
+  className = '',
+}: {
+  label: string
+  children: ReactNode
+  className?: string
+}) {
+  return (
+    <div className="overflow-x-auto" tabIndex={0} role="region" aria-label={label}>
+      <table className={`w-full border-collapse text-sm ${className}`}>
+        <caption className="sr-only">{label}</caption>
+        {children}
+      </table>
+    </div>
+  )
+}
+
+interface CellProps {
+  /** Right-aligned with tabular figures. */
+  numeric?: boolean
+}
+
+const cell = 'h-8 px-2 first:pl-0 last:pr-0 border-b whitespace-nowrap'
+
+export function Th({
+  numeric,
+  className = '',
+  children,
+  ...rest
+}: CellProps & ThHTMLAttributes<HTMLTableCellElement>) {
+  return (
+    <th
+      scope="col"
+      {...rest}
+      className={`${cell} border-edge text-xs font-medium text-soft ${numeric ? 'text-right' : 'text-left'} ${className}`}
+    >
+      {children}
+    </th>
+  )
+}
+
+export function Td({ numeric, className = '', ...rest }: CellProps & TdHTMLAttributes<HTMLTableCellElement>) {
+  return (
+    <td {...rest} className={`${cell} ${numeric ? 'text-right tabular-nums' : 'text-left'} ${className}`} />
+  )
+}
+
+export function SortButton({
+  active,
+  order,
+  onClick,
+  children,
+}: {
+  active: boolean
+  order: 'asc' | 'desc'
+  onClick: () => void
+  children: ReactNode
+}) {
+  const Arrow = order === 'asc' ? ArrowUp : ArrowDown
+  return (
+    <button type="button" onClick={onClick} className="inline-flex items-center gap-0.5 hover:text-action">
+      {children}
+      {active && <Arrow size={12} aria-hidden />}
+    </button>
+  )
+}

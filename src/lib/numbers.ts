@@ -1,0 +1,86 @@
+/** How numbers are written on every page. Integers are exact; other numbers keep a few significant digits. */
+
+const superscripts: Record<string, string> = {
+  '-': '⁻',
+  '0': '⁰',
+  '1': '¹',
+  '2': '²',
+  '3': '³',
+  '4': '⁴',
+  '5': '⁵',
+  '6': '⁶',
+  '7': '⁷',
+  '8': '⁸',
+  '9': '⁹',
+}
+
+/** A number taken apart for display: `mantissa` alone, or mantissa × 10^exponent. */
+export interface NumberParts {
+  mantissa: string
+  exponent: number | null
+}
+
+const minus = (text: string) => text.replace('-', '−')
+
+/**
+ * Integers up to 10^15 in full with thin spaces between groups of three (from five digits on), other numbers
+ * with `digits` significant digits, as a × 10^n outside 10^-3 .. 10^5.
+ */
+export function numberParts(value: number, digits = 4): NumberParts {
+  if (Number.isNaN(value)) return { mantissa: 'undefined', exponent: null }
+  if (!Number.isFinite(value)) return { mantissa: value > 0 ? '∞' : '−∞', exponent: null }
+  if (Number.isInteger(value) && Math.abs(value) < 1e15) return { mantissa: grouped(value), exponent: null }
+  const [mantissa, power] = value.toExponential(digits - 1).split('e') as [string, string]
+  const exponent = Number(power)
+  if (exponent >= -3 && exponent < 5) {
+    return { mantissa: minus(value.toFixed(Math.max(0, digits - 1 - exponent))), exponent: null }
+  }
+  return { mantissa: minus(mantissa), exponent }
+}
+
+function grouped(value: number): string {
+  const text = String(Math.abs(value))
+  const body = text.length < 5 ? text : text.replace(/\B(?=(\d{3})+$)/g, '\u2009')
+  return value < 0 ? `−${body}` : body
+}
+
+/** The same as one line of text, for labels, titles and SVG. */
+export function formatNumber(value: number, digits = 4): string {
+  const { mantissa, exponent } = numberParts(value, digits)
+  if (exponent === null) return mantissa
+  return `${mantissa} × 10${[...String(exponent)].map((c) => superscripts[c] ?? c).join('')}`
+}
+
+/** A rate in per cent, with enough digits to tell small rates apart. */
+export function formatPercent(rate: number): string {
+  const percent = rate * 100
+  if (percent === 0) return '0 %'
+  if (percent < 0.01) return `${formatNumber(percent, 2)} %`
+  return `${percent.toFixed(percent < 1 ? 2 : percent < 10 ? 1 : 0)} %`
+}
+
+/** A stretch of time, in the two largest units that matter. */
+export function formatDuration(seconds: number): string {
+  if (seconds < 1) return 'under 1 s'
+  if (seconds < 90) return `${Math.round(seconds)} s`
+  const minutes = Math.round(seconds / 60)
+  if (minutes < 90) return `${minutes} min`
+  const hours = Math.floor(minutes / 60)
+  return hours < 36 ? `${hours} h ${minutes % 60} min` : `${Math.round(hours / 24)} days`
+}
+
+export function formatBytes(bytes: number): string {
+  return bytes < 1e6 ? `${Math.round(bytes / 1e3)} kB` : `${formatNumber(bytes / 1e6, 3)} MB`
+}
+
+const dayAndTime = new Intl.DateTimeFormat('en-GB', { dateStyle: 'medium', timeStyle: 'short' })
+
+export function formatTime(iso: string): string {
+  const time = new Date(iso)
+  return Number.isNaN(time.getTime()) ? iso : dayAndTime.format(time)
+}
+
+/** "1 polytope", "2 polytopes". */
+export function counted(count: number, one: string, many = `${one}s`): string {
+  return `${formatNumber(count)} ${count === 1 ? one : many}`
+}

@@ -1,0 +1,85 @@
+import { createBrowserRouter, Navigate, type RouteObject } from 'react-router-dom'
+import { type ComponentType } from 'react'
+import { Shell } from './components/shell/Shell.tsx'
+import { PageFailure } from './routes/not-found/PageFailure.tsx'
+import { NotFoundPage } from './routes/not-found/NotFoundPage.tsx'
+
+/** A page loaded when it is first visited. */
+const page = (load: () => Promise<ComponentType>) => async () => ({ Component: await load() })
+
+const signedIn: RouteObject[] = [
+  { index: true, element: <Navigate to="/campaigns" replace /> },
+  {
+    path: 'campaigns',
+    lazy: page(async () => (await import('./routes/campaigns/CampaignsPage.tsx')).CampaignsPage),
+  },
+  {
+    path: 'campaigns/:campaignId',
+    lazy: page(async () => (await import('./routes/campaign/CampaignPage.tsx')).CampaignPage),
+  },
+  {
+    path: 'campaigns/:campaignId/targets',
+    lazy: page(async () => (await import('./routes/targets/TargetsPage.tsx')).TargetsPage),
+  },
+  {
+    path: 'campaigns/:campaignId/targets/new',
+    lazy: page(async () => (await import('./routes/target/NewTargetPage.tsx')).NewTargetPage),
+  },
+  {
+    path: 'campaigns/:campaignId/targets/:targetId',
+    lazy: page(async () => (await import('./routes/target/TargetPage.tsx')).TargetPage),
+  },
+  {
+    path: 'campaigns/:campaignId/searches',
+    lazy: page(async () => (await import('./routes/searches/SearchesPage.tsx')).SearchesPage),
+  },
+  {
+    path: 'campaigns/:campaignId/searches/new',
+    lazy: page(async () => (await import('./routes/searches/new/NewSearchPage.tsx')).NewSearchPage),
+  },
+  {
+    path: 'campaigns/:campaignId/searches/:searchId',
+    lazy: page(async () => (await import('./routes/search/SearchPage.tsx')).SearchPage),
+  },
+  {
+    path: 'campaigns/:campaignId/shortlists',
+    lazy: page(async () => (await import('./routes/shortlists/ShortlistsPage.tsx')).ShortlistsPage),
+  },
+  {
+    path: 'campaigns/:campaignId/shortlists/:shortlistId',
+    lazy: page(async () => (await import('./routes/shortlist/ShortlistPage.tsx')).ShortlistPage),
+  },
+  {
+    path: 'library',
+    lazy: page(async () => (await import('./routes/library/LibraryPage.tsx')).LibraryPage),
+  },
+  {
+    path: 'library/:polytopeKey',
+    lazy: page(async () => (await import('./routes/polytope/PolytopePage.tsx')).PolytopePage),
+  },
+  {
+    path: 'candidates/:candidateKey',
+    lazy: page(async () => (await import('./routes/candidate/CandidatePage.tsx')).CandidatePage),
+  },
+  {
+    path: 'reference',
+    lazy: page(async () => (await import('./routes/reference/ReferencePage.tsx')).ReferencePage),
+  },
+  { path: '*', Component: NotFoundPage },
+]
+
+export const routes: RouteObject[] = [
+  {
+    errorElement: <PageFailure />,
+    children: [
+      {
+        path: 'sign-in',
+        lazy: page(async () => (await import('./routes/sign-in/SignInPage.tsx')).SignInPage),
+      },
+      { path: 'set-up', lazy: page(async () => (await import('./routes/set-up/SetUpPage.tsx')).SetUpPage) },
+      { Component: Shell, children: [{ errorElement: <PageFailure />, children: signedIn }] },
+    ],
+  },
+]
+
+export const createRouter = () => createBrowserRouter(routes)

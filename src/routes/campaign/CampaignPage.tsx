@@ -1,0 +1,106 @@
+import { Link, useParams } from 'react-router-dom'
+import { type CampaignDetail } from '../../../shared/campaigns.ts'
+import { may } from '../../../shared/roles.ts'
+import { useCampaign } from '../../api/campaigns.ts'
+import { ButtonLink } from '../../components/ui/Button.tsx'
+import { Caution } from '../../components/ui/Caution.tsx'
+import { PageHead, Section } from '../../components/ui/Layout.tsx'
+import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { SearchTable } from '../searches/SearchTable.tsx'
+import { ShortlistTable } from '../shortlists/ShortlistTable.tsx'
+import { TargetTable } from '../targets/TargetTable.tsx'
+import { Members } from './Members.tsx'
+
+export function CampaignPage() {
+  const { campaignId = '' } = useParams()
+  const campaign = useCampaign(campaignId)
+  return (
+    <QueryView query={campaign} what="the campaign">
+      {(detail) => <Campaign campaign={detail} />}
+    </QueryView>
+  )
+}
+
+function Campaign({ campaign }: { campaign: CampaignDetail }) {
+  const base = `/campaigns/${campaign.id}`
+  const active = campaign.searchList.filter(({ state }) => /^(running|queued|paused|failed)$/.test(state))
+  const running = campaign.searchList.filter(({ state }) => state === 'running' || state === 'queued').length
+  const open = campaign.shortlistList.filter(({ undecided }) => undecided > 0)
+  const finished = campaign.searchList.filter(({ state }) => state === 'finished').slice(0, 5)
+  return (
+    <>
+      <PageHead
+        title={campaign.name}
+        actions={
+          <>
+            {may(campaign.role, 'targets.edit') && (
+              <ButtonLink to={`${base}/targets/new`}>New target</ButtonLink>
+            )}
+            {may(campaign.role, 'searches.run') && (
+              <ButtonLink kind="primary" to={`${base}/searches/new`}>
+                New search
+              </ButtonLink>
+            )}
+          </>
+        }
+      >
+        {campaign.description}
+      </PageHead>
+
+      <Section
+        margin
+        title="To review"
+        note={
+          open.length > 0
+            ? `${open.reduce((sum, { undecided }) => sum + undecided, 0)} candidates wait for a verdict.`
+            : undefined
+        }
+      >
+        {open.length > 0 ? (
+          <ShortlistTable campaign={campaign.id} list={open} label="Shortlists with undecided candidates" />
+        ) : (
+          <Empty title="No candidate waits for a verdict.">
+            {campaign.shortlistList.length > 0 ? (
+              <Link className="text-action underline" to={`${base}/shortlists`}>
+                All shortlists
+              </Link>
+            ) : (
+              'Shortlists are made on the page of a search that has found candidates.'
+            )}
+          </Empty>
+        )}
+      </Section>
+
+      <Section margin title="Searches under way" note={running > 0 ? `${running} running now.` : undefined}>
+        {active.length > 0 ? (
+          <SearchTable campaign={campaign.id} list={active} label="Searches under way" />
+        ) : (
+          <Empty title="No search is running, paused or failed." />
+        )}
+      </Section>
+
+      {finished.length > 0 && (
+        <Section margin title="Finished lately">
+          <SearchTable campaign={campaign.id} list={finished} label="Searches finished lately" />
+        </Section>
+      )}
+
+      <Section margin title="Targets">
+        {campaign.targetList.length > 0 ? (
+          <TargetTable campaign={campaign.id} list={campaign.targetList} />
+        ) : (
+          <Empty title="No target has been written.">
+            {may(campaign.role, 'targets.edit')
+              ? 'Start with “New target”: a few lines that say what a good candidate is.'
+              : 'A lead or an investigator writes the first one.'}
+          </Empty>
+        )}
+      </Section>
+
+      <Section margin title="Members" note={`Your role: ${campaign.role}.`}>
+        <Members campaign={campaign} />
+      </Section>
+      <Caution />
+    </>
+  )
+}

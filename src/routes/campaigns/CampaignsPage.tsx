@@ -1,0 +1,125 @@
+import { useState, type FormEvent } from 'react'
+import { Link, useNavigate } from 'react-router-dom'
+import { Plus } from 'lucide-react'
+import { createCampaignSchema, type CampaignSummary } from '../../../shared/campaigns.ts'
+import { useCampaigns, useCreateCampaign } from '../../api/campaigns.ts'
+import { explain } from '../../api/request.ts'
+import { Button } from '../../components/ui/Button.tsx'
+import { Dialog } from '../../components/ui/Dialog.tsx'
+import { TextArea, TextField } from '../../components/ui/Field.tsx'
+import { PageHead } from '../../components/ui/Layout.tsx'
+import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { Table, Td, Th } from '../../components/ui/Table.tsx'
+import { formatNumber } from '../../lib/numbers.ts'
+
+export function CampaignsPage() {
+  const campaigns = useCampaigns()
+  const [creating, setCreating] = useState(false)
+  return (
+    <>
+      <PageHead
+        title="Campaigns"
+        actions={
+          <Button kind="primary" onClick={() => setCreating(true)}>
+            <Plus size={16} aria-hidden />
+            New campaign
+          </Button>
+        }
+      >
+        A campaign is one team’s hunt: its members, targets, searches and shortlists.
+      </PageHead>
+      <QueryView query={campaigns} what="your campaigns">
+        {(list) =>
+          list.length === 0 ? (
+            <Empty title="You are in no campaign yet.">
+              Start one with “New campaign”, or ask the lead of an existing campaign to add your e-mail
+              address.
+            </Empty>
+          ) : (
+            <CampaignTable list={list} />
+          )
+        }
+      </QueryView>
+      <NewCampaignDialog open={creating} onOpenChange={setCreating} />
+    </>
+  )
+}
+
+function CampaignTable({ list }: { list: CampaignSummary[] }) {
+  return (
+    <Table label="Campaigns">
+      <thead>
+        <tr>
+          <Th>Campaign</Th>
+          <Th>Your role</Th>
+          <Th numeric>Targets</Th>
+          <Th numeric>Searches</Th>
+          <Th numeric>Running</Th>
+          <Th numeric>Shortlists</Th>
+          <Th numeric>Undecided</Th>
+        </tr>
+      </thead>
+      <tbody>
+        {list.map((campaign) => (
+          <tr key={campaign.id} className="hover:bg-action-wash">
+            <Td className="max-w-[36rem] truncate">
+              <Link to={`/campaigns/${campaign.id}`} className="font-medium text-action hover:underline">
+                {campaign.name}
+              </Link>
+              {campaign.description && <span className="ml-3 text-soft">{campaign.description}</span>}
+            </Td>
+            <Td>{campaign.role}</Td>
+            <Td numeric>{formatNumber(campaign.targets)}</Td>
+            <Td numeric>{formatNumber(campaign.searches)}</Td>
+            <Td numeric>{formatNumber(campaign.runningSearches)}</Td>
+            <Td numeric>{formatNumber(campaign.shortlists)}</Td>
+            <Td numeric>{formatNumber(campaign.undecided)}</Td>
+          </tr>
+        ))}
+      </tbody>
+    </Table>
+  )
+}
+
+function NewCampaignDialog({ open, onOpenChange }: { open: boolean; onOpenChange: (open: boolean) => void }) {
+  const navigate = useNavigate()
+  const create = useCreateCampaign()
+  const [name, setName] = useState('')
+  const [description, setDescription] = useState('')
+  const [fault, setFault] = useState<string | null>(null)
+  const submit = (event: FormEvent) => {
+    event.preventDefault()
+    const parsed = createCampaignSchema.safeParse({ name, description })
+    if (!parsed.success) {
+      setFault('A campaign needs a name of 1 to 80 characters.')
+      return
+    }
+    setFault(null)
+    create.mutate(parsed.data, {
+      onSuccess: (campaign) => void navigate(`/campaigns/${campaign.id}`),
+      onError: (error) => setFault(explain(error)),
+    })
+  }
+  return (
+    <Dialog open={open} onOpenChange={onOpenChange} title="New campaign" description="You become its lead.">
+      <form onSubmit={submit} className="flex flex-col gap-4">
+        <TextField
+          label="Name"
+          value={name}
+          onChange={(event) => setName(event.target.value)}
+          error={fault}
+          autoFocus
+        />
+        <TextArea
+          label="What it hunts for"
+          rows={3}
+          value={description}
+          onChange={(event) => setDescription(event.target.value)}
+        />
+        <Button kind="primary" type="submit" busy={create.isPending} className="self-start">
+          Create the campaign
+        </Button>
+      </form>
+    </Dialog>
+  )
+}

@@ -1,0 +1,171 @@
+import { useCallback, useMemo, useState } from 'react'
+import { Link, useParams, useSearchParams } from 'react-router-dom'
+import { useQuery } from '@tanstack/react-query'
+import { type CandidateGeometry } from '../../../shared/candidates.ts'
+import { candidateQuery, candidateRecordQuery } from '../../api/candidates.ts'
+import { drawingsOf } from '../../components/geometry/faceDrawing.ts'
+import { FaceAtlas } from '../../components/geometry/FaceAtlas.tsx'
+import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
+import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
+import { Num } from '../../components/ui/Num.tsx'
+import { QueryView } from '../../components/ui/States.tsx'
+import { CurveTable } from './CurveTable.tsx'
+import { DivisorTable } from './DivisorTable.tsx'
+import { HighlightLine } from './HighlightLine.tsx'
+import { IntersectionTable } from './IntersectionTable.tsx'
+import { Provenance } from './Provenance.tsx'
+import { SpectrumSection } from './SpectrumSection.tsx'
+import { Steps } from './Steps.tsx'
+import { Verdicts } from './Verdicts.tsx'
+
+/** The dossier: geometry for everyone who may see the polytope, and what the campaign in hand knows of it. */
+export function CandidatePage() {
+  const { candidateKey = '' } = useParams()
+  const [search] = useSearchParams()
+  const campaign = useCurrentCampaign()
+  const geometry = useQuery(candidateQuery(candidateKey))
+  const record = useQuery({
+    ...candidateRecordQuery(campaign?.id ?? '', candidateKey),
+    enabled: campaign !== null,
+  })
+  const appearances = record.data?.appearances ?? []
+  const appearance =
+    appearances.find(({ shortlistId }) => shortlistId === search.get('shortlist')) ?? appearances[0]
+  return (
+    <QueryView query={geometry} what="the candidate">
+      {(detail) => (
+        <>
+          <PageHead
+            title={`Candidate ${detail.key.slice(0, 10)}`}
+            above={<Trail campaign={campaign?.id} geometry={detail} shortlist={appearance} />}
+            actions={campaign && appearance && <Steps campaign={campaign.id} appearance={appearance} />}
+          >
+            A 2-face class of{' '}
+            <Link
+              to={`/library/${detail.polytope.key}${campaign ? `?campaign=${campaign.id}` : ''}`}
+              className="text-action hover:underline"
+            >
+              {detail.polytope.name}
+            </Link>
+            , Hodge numbers ({detail.polytope.h11}, {detail.polytope.h21}).
+          </PageHead>
+          {campaign && (
+            <Verdicts
+              key={detail.key}
+              campaign={campaign.id}
+              candidate={detail.key}
+              record={record}
+              appearance={appearance}
+            />
+          )}
+          <Geometry geometry={detail} />
+          {campaign && <Provenance campaign={campaign.id} candidate={detail.key} record={record} />}
+        </>
+      )}
+    </QueryView>
+  )
+}
+
+function Trail({
+  campaign,
+  geometry,
+  shortlist,
+}: {
+  campaign?: string
+  geometry: CandidateGeometry
+  shortlist?: { shortlistId: string; shortlistName: string }
+}) {
+  if (!campaign || !shortlist) return <span className="font-mono break-all">{geometry.key}</span>
+  return (
+    <Link
+      to={`/campaigns/${campaign}/shortlists/${shortlist.shortlistId}?row=${geometry.key}`}
+      className="hover:underline"
+    >
+      {shortlist.shortlistName}
+    </Link>
+  )
+}
+
+function Geometry({ geometry }: { geometry: CandidateGeometry }) {
+  const [highlight, setHighlight] = useState<Highlight>(null)
+  const [chosen, setChosen] = useState<Highlight>(null)
+  const faces = useMemo(
+    () => drawingsOf(geometry.polytope.twoFaces, geometry.triangles, geometry.faceOf),
+    [geometry],
+  )
+  const onHighlight = useCallback((next: Highlight) => {
+    setHighlight((before) => (same(before, next) ? before : next))
+  }, [])
+  const onChoose = useCallback((next: Highlight) => {
+    setChosen((before) => (same(before, next) ? null : next))
+  }, [])
+  const shown = highlight ?? chosen
+  const { polytope, reference } = geometry
+  return (
+    <>
+      <Section
+        title="2-faces"
+        note="Each 2-face with its triangulation, to one scale. Pointing at a point or an edge shows it in every face that shares it; a click keeps it."
+      >
+        <HighlightLine geometry={geometry} highlight={shown} kept={chosen !== null && highlight === null} />
+        <FaceAtlas faces={faces} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
+      </Section>
+      <Section
+        title="Divisors"
+        note="Prime toric divisors at the reference point, scale 1. Volumes in Einstein frame, units 2π√α′ = 1, leading order."
+      >
+        <DivisorTable geometry={geometry} highlight={shown} onHighlight={onHighlight} />
+      </Section>
+      <div className="grid gap-x-8 lg:grid-cols-2">
+        <Section title="Intersection numbers" note="Non-zero κ with i ≤ j ≤ k.">
+          <IntersectionTable
+            intersections={geometry.intersections}
+            points={polytope.points}
+            onHighlight={onHighlight}
+          />
+        </Section>
+        <Section
+          title="Curves"
+          note="Primitive classes of the curves D_i · D_j, one per edge of the triangulation; volume at the reference point."
+        >
+          <CurveTable curves={geometry.curves} />
+        </Section>
+      </div>
+      <div className="grid gap-x-8 lg:grid-cols-2">
+        <Section
+          title="Reference point"
+          note="The point of the Kähler cone nearest to the origin at which every curve class counted has volume at least 1."
+        >
+          <Facts
+            rows={[
+              ['Volume of the threefold', <Num key="v" value={reference.volume} digits={6} />],
+              ['Norm of w', <Num key="v" value={reference.norm} digits={6} />],
+              [
+                'Least divisor volume',
+                <Num key="v" value={Math.min(...geometry.divisors.map(({ volume }) => volume))} digits={6} />,
+              ],
+              [
+                'Least curve volume',
+                <Num key="v" value={Math.min(...geometry.curves.map(({ volume }) => volume))} digits={6} />,
+              ],
+              [
+                'Cone',
+                reference.edgeCurvesSuffice
+                  ? 'edge curves alone give the point'
+                  : 'circuits were needed; the true cone may be larger',
+              ],
+              ['Euler number', <Num key="v" value={polytope.euler} />],
+              ['Favourable', polytope.favourable ? 'yes' : 'no: toric part only'],
+            ]}
+          />
+        </Section>
+        <Section title="Field-space metric">
+          <SpectrumSection geometry={geometry} />
+        </Section>
+      </div>
+    </>
+  )
+}
+
+const same = (a: Highlight, b: Highlight) => a?.[0] === b?.[0] && a?.[1] === b?.[1]

@@ -1,0 +1,90 @@
+import { Link } from 'react-router-dom'
+import { type UseQueryResult } from '@tanstack/react-query'
+import { type CandidateRecord } from '../../../shared/candidates.ts'
+import { Section } from '../../components/ui/Layout.tsx'
+import { Outcome } from '../../components/ui/Outcome.tsx'
+import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { Table, Td, Th } from '../../components/ui/Table.tsx'
+
+/** Where the candidate comes from: every shortlist of this campaign it stands in, down to seed and engine. */
+export function Provenance({
+  campaign,
+  candidate,
+  record,
+}: {
+  campaign: string
+  candidate: string
+  record: UseQueryResult<CandidateRecord>
+}) {
+  return (
+    <Section title="Provenance">
+      <QueryView query={record} what="the provenance">
+        {({ appearances }) =>
+          appearances.length === 0 ? (
+            <Empty title="In no shortlist of this campaign." />
+          ) : (
+            <Table label="Provenance">
+              <thead>
+                <tr>
+                  <Th>Shortlist</Th>
+                  <Th numeric>Rank</Th>
+                  <Th numeric>Score</Th>
+                  <Th>Target</Th>
+                  <Th>Search</Th>
+                  <Th numeric>Seed</Th>
+                  <Th>Engine</Th>
+                  <Th>Scoring hash</Th>
+                </tr>
+              </thead>
+              <tbody>
+                {appearances.map((row) => (
+                  <tr key={row.shortlistId}>
+                    <Td>
+                      <Link
+                        to={`/campaigns/${campaign}/shortlists/${row.shortlistId}?row=${candidate}`}
+                        className="text-action hover:underline"
+                      >
+                        {row.shortlistName}
+                      </Link>
+                    </Td>
+                    <Td numeric>
+                      {row.rank} of {row.size}
+                    </Td>
+                    <Td numeric>
+                      <Outcome outcome={row.outcome} />
+                    </Td>
+                    <Td>
+                      <Link
+                        to={`/campaigns/${campaign}/targets/${row.targetId}`}
+                        className="text-action hover:underline"
+                      >
+                        {row.targetName}
+                      </Link>{' '}
+                      v{row.targetVersion}
+                    </Td>
+                    <Td>
+                      <Link
+                        to={`/campaigns/${campaign}/searches/${row.searchId}`}
+                        className="text-action hover:underline"
+                      >
+                        {row.searchName}
+                      </Link>
+                    </Td>
+                    <Td numeric>{row.searchSeed}</Td>
+                    <Td>{row.engineVersion}</Td>
+                    <Td className="font-mono text-xs">
+                      <span data-raw={row.scoringHash} title={row.scoringHash}>
+                        {row.scoringHash.slice(0, 12)}
+                      </span>
+                    </Td>
+                  </tr>
+                ))}
+              </tbody>
+            </Table>
+          )
+        }
+      </QueryView>
+      <p className="mt-3 font-mono text-xs break-all text-soft">Permanent address: /candidates/{candidate}</p>
+    </Section>
+  )
+}

@@ -1,0 +1,194 @@
+import { useState } from 'react'
+import { type UseQueryResult } from '@tanstack/react-query'
+import { Check, Circle, X } from 'lucide-react'
+import { toast } from 'sonner'
+import { type CandidateRecord } from '../../../shared/candidates.ts'
+import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
+import { explain } from '../../api/request.ts'
+import { useGiveVerdict } from '../../api/verdicts.ts'
+import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { Button } from '../../components/ui/Button.tsx'
+import { Caution } from '../../components/ui/Caution.tsx'
+import { Section } from '../../components/ui/Layout.tsx'
+import { HitMark, Outcome, ReportCell } from '../../components/ui/Outcome.tsx'
+import { QueryView } from '../../components/ui/States.tsx'
+import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
+import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
+import { useShortcut } from '../../lib/shortcuts.ts'
+import { formatTime } from '../../lib/numbers.ts'
+
+type Appearance = CandidateRecord['appearances'][number]
+const shapes = { verified: Check, rejected: X, undecided: Circle }
+const actions: Record<VerdictValue, [word: string, key: string]> = {
+  verified: ['Verify…', 'v'],
+  rejected: ['Reject…', 'r'],
+  undecided: ['Undecided', 'u'],
+}
+
+/** Score and verdict for the target in hand, and every verdict this campaign has given. */
+export function Verdicts({
+  campaign,
+  candidate,
+  record,
+  appearance,
+}: {
+  campaign: string
+  candidate: string
+  record: UseQueryResult<CandidateRecord>
+  appearance?: Appearance
+}) {
+  return (
+    <Section
+      title="Score and verdict"
+      note={appearance && `For ${appearance.targetName}, version ${appearance.targetVersion}.`}
+    >
+      <QueryView query={record} what="what this campaign knows of the candidate">
+        {({ verdicts }) => (
+          <div className="grid gap-x-8 gap-y-4 lg:grid-cols-2">
+            <div>
+              {appearance ? (
+                <>
+                  <Score appearance={appearance} />
+                  <Decide
+                    campaign={campaign}
+                    candidate={candidate}
+                    appearance={appearance}
+                    current={verdicts.find(
+                      ({ targetId, targetVersion }) =>
+                        targetId === appearance.targetId && targetVersion === appearance.targetVersion,
+                    )}
+                  />
+                </>
+              ) : (
+                <p className="prose-line text-soft">
+                  The candidate is in no shortlist of this campaign, so there is no scoring to decide on. Make
+                  a shortlist from a search that found it.
+                </p>
+              )}
+              <Caution className="mt-4" />
+            </div>
+            <History verdicts={verdicts} />
+          </div>
+        )}
+      </QueryView>
+    </Section>
+  )
+}
+
+function Score({ appearance }: { appearance: Appearance }) {
+  const { outcome } = appearance
+  const report = outcome.kind === 'feasible' ? Object.entries(outcome.report) : []
+  return (
+    <dl className="mb-3 flex flex-wrap gap-x-6 gap-y-2">
+      <div>
+        <dt className="text-xs text-soft">score</dt>
+        <dd className="text-lg text-found">
+          <Outcome outcome={outcome} />
+        </dd>
+      </div>
+      <div>
+        <dt className="text-xs text-soft">hit</dt>
+        <dd className="leading-7">
+          <HitMark outcome={outcome} />
+        </dd>
+      </div>
+      {report.map(([name, cell]) => (
+        <div key={name}>
+          <dt className="text-xs text-soft">{name}</dt>
+          <dd className="leading-7">
+            <ReportCell cell={cell} />
+          </dd>
+        </div>
+      ))}
+    </dl>
+  )
+}
+
+function Decide({
+  campaign,
+  candidate,
+  appearance,
+  current,
+}: {
+  campaign: string
+  candidate: string
+  appearance: Appearance
+  current?: CandidateRecord['verdicts'][number]
+}) {
+  const barred = useBarred('verdicts.give')
+  const give = useGiveVerdict(campaign)
+  const [asked, setAsked] = useState<VerdictValue | null>(null)
+  const [fault, setFault] = useState<string | null>(null)
+  const send = (value: VerdictValue, reason: string) =>
+    give.mutate(
+      { key: candidate, targetVersionId: appearance.targetVersionId, value, reason },
+      {
+        onSuccess: () => {
+          setAsked(null)
+          toast(`Verdict: ${value}`)
+        },
+        onError: (error) => setFault(explain(error)),
+      },
+    )
+  const ask = (value: VerdictValue) => {
+    if (barred) return void toast.error(barred)
+    setFault(null)
+    if (value === 'undecided') send(value, '')
+    else setAsked(value)
+  }
+  useShortcut({ key: 'v', does: 'Verify (asks for the reason)', group: 'Dossier' }, () => ask('verified'))
+  useShortcut({ key: 'r', does: 'Reject', group: 'Dossier' }, () => ask('rejected'))
+  useShortcut({ key: 'u', does: 'Put back to undecided', group: 'Dossier' }, () => ask('undecided'))
+  return (
+    <div>
+      <p className="mb-2 flex items-center gap-2">
+        Verdict: <VerdictMark verdict={current ?? null} />
+      </p>
+      <div className="flex flex-wrap gap-2">
+        {verdictValues.map((value) => {
+          const Shape = shapes[value]
+          const [word, key] = actions[value]
+          return (
+            <Button key={value} unavailable={barred} busy={give.isPending} onClick={() => ask(value)}>
+              <Shape size={14} aria-hidden />
+              {word}
+              <kbd aria-hidden className="hidden rounded border px-1 font-mono text-xs text-soft md:inline">
+                {key}
+              </kbd>
+            </Button>
+          )
+        })}
+      </div>
+      <VerdictDialog
+        asked={asked && { value: asked, what: `Candidate ${candidate.slice(0, 10)}` }}
+        busy={give.isPending}
+        fault={fault}
+        onGive={(reason) => asked && send(asked, reason)}
+        onClose={() => setAsked(null)}
+      />
+    </div>
+  )
+}
+
+function History({ verdicts }: { verdicts: CandidateRecord['verdicts'] }) {
+  if (verdicts.length === 0) return <p className="text-soft">No verdict has been given in this campaign.</p>
+  return (
+    <ol aria-label="Verdicts, newest first">
+      {verdicts.map((verdict) => (
+        <li key={verdict.id} className="border-b py-2 first:pt-0 last:border-b-0">
+          <p className="flex flex-wrap items-center gap-x-3">
+            <VerdictMark verdict={verdict} />
+            <span>{verdict.author}</span>
+            <span className="text-soft">{formatTime(verdict.createdAt)}</span>
+            <span className="text-soft">
+              {verdict.targetName} v{verdict.targetVersion}
+            </span>
+          </p>
+          {verdict.reason && (
+            <p className="prose-line mt-1 break-words whitespace-pre-wrap">{verdict.reason}</p>
+          )}
+        </li>
+      ))}
+    </ol>
+  )
+}

@@ -1,0 +1,230 @@
+import { useState } from 'react'
+import { Link, useParams } from 'react-router-dom'
+import { toast } from 'sonner'
+import { type SearchDetail } from '../../../shared/searches.ts'
+import { explain } from '../../api/request.ts'
+import { useSearch, useSearchCommand, type SearchCommand } from '../../api/searches.ts'
+import { LiveCurve } from '../../components/charts/LiveCurve.tsx'
+import { describeScope } from '../../components/scope/scopeAddress.ts'
+import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { Button, ButtonLink } from '../../components/ui/Button.tsx'
+import { Caution } from '../../components/ui/Caution.tsx'
+import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
+import { Num } from '../../components/ui/Num.tsx'
+import { Progress } from '../../components/ui/Progress.tsx'
+import { ScoredTable } from '../../components/ui/ScoredTable.tsx'
+import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
+import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
+import { NullFacts } from './NullFacts.tsx'
+import { IslandTable } from './IslandTable.tsx'
+import { MakeShortlistDialog } from './MakeShortlistDialog.tsx'
+
+export function SearchPage() {
+  const { campaignId = '', searchId = '' } = useParams()
+  const search = useSearch(campaignId, searchId)
+  return (
+    <QueryView query={search} what="the search">
+      {(detail) => <Search campaign={campaignId} search={detail} />}
+    </QueryView>
+  )
+}
+
+function Search({ campaign, search }: { campaign: string; search: SearchDetail }) {
+  const { progress } = search
+  return (
+    <>
+      <PageHead
+        title={search.name}
+        above={
+          <Link to={`/campaigns/${campaign}/searches`} className="hover:underline">
+            Searches
+          </Link>
+        }
+        actions={<Commands campaign={campaign} search={search} />}
+      >
+        {search.method} over {describeScope(search.scope)} for{' '}
+        <Link
+          to={`/campaigns/${campaign}/targets/${search.targetId}`}
+          className="text-action hover:underline"
+        >
+          {search.targetName}
+        </Link>
+        , version {search.targetVersion}
+      </PageHead>
+      {search.failure && (
+        <div role="alert" className="mb-4 border-l-2 border-rejected pl-3">
+          <p className="font-medium">The search failed; what it had found until then is kept.</p>
+          <p className="prose-line">{search.failure.message}</p>
+          <p className="font-mono text-xs text-soft">{search.failure.code}</p>
+        </div>
+      )}
+      <StateLine search={search} />
+      <div className="grid gap-x-8 gap-y-4 border-t py-4 lg:grid-cols-[minmax(0,1fr)_300px]">
+        {progress.curve.length > 0 ? (
+          <LiveCurve
+            found={progress.curve}
+            expected={search.null?.expectedBest ?? []}
+            evaluations={progress.evaluations}
+            budget={search.budget}
+          />
+        ) : (
+          <Empty title="No feasible candidate yet.">
+            {search.state === 'queued'
+              ? 'The search waits for a free worker.'
+              : progress.evaluations > 0
+                ? `${counted(progress.evaluations, 'class', 'classes')} evaluated so far, none of which meets every require.`
+                : 'The curve appears with the first report of a worker.'}
+          </Empty>
+        )}
+        <Figures search={search} />
+      </div>
+      <Section title="Best candidates" note="The best distinct classes so far, at most 20.">
+        {search.top.length > 0 ? (
+          <ScoredTable ranked label="Best candidates" rows={search.top} campaign={campaign} />
+        ) : (
+          <Empty title="Nothing to show yet." />
+        )}
+        <Caution className="mt-3" />
+      </Section>
+      <div className="grid gap-x-8 lg:grid-cols-2">
+        <Section title="Null sample" note="The same rule on candidates nobody selected.">
+          <NullFacts summary={search.null} />
+        </Section>
+        <Section title="Islands">
+          <IslandTable islands={progress.islands} />
+        </Section>
+      </div>
+      <Section title="How it was run">
+        <div className="grid gap-x-8 gap-y-4 lg:grid-cols-2">
+          <Facts
+            rows={[
+              ['Seed', <Num key="v" value={search.seed} />],
+              ['Polytopes in scope', <Num key="v" value={search.polytopes} />],
+              ['Started', `${formatTime(search.createdAt)} by ${search.author}`],
+              ['Ended', search.finishedAt ? formatTime(search.finishedAt) : '–'],
+              ['Engine', search.engineVersion],
+              [
+                'Scoring hash',
+                <code key="v" className="font-mono text-xs break-all">
+                  {search.scoringHash}
+                </code>,
+              ],
+            ]}
+          />
+          <pre
+            tabIndex={0}
+            aria-label="The rule"
+            className="max-h-64 overflow-auto border-l-2 border-line pl-3 font-mono text-xs leading-5"
+          >
+            {search.rule}
+          </pre>
+        </div>
+      </Section>
+    </>
+  )
+}
+
+function StateLine({ search }: { search: SearchDetail }) {
+  const { progress } = search
+  return (
+    <div className="mb-4 flex flex-wrap items-center gap-x-6 gap-y-2">
+      <SearchStateMark state={search.state} />
+      <div className="flex min-w-60 flex-1 items-center gap-3">
+        <Progress value={progress.evaluations} most={search.budget} label="Evaluations" />
+        <span className="whitespace-nowrap">
+          {formatNumber(progress.evaluations)} of {formatNumber(search.budget)}
+        </span>
+      </div>
+      {search.state === 'running' && progress.secondsLeft !== null && (
+        <span className="text-soft">about {formatDuration(progress.secondsLeft)} left</span>
+      )}
+      {progress.exhausted && (
+        <span className="text-soft">The space is exhausted: no new class turns up any more.</span>
+      )}
+    </div>
+  )
+}
+
+function Figures({ search }: { search: SearchDetail }) {
+  const { progress } = search
+  const nullBest = search.null?.best ?? null
+  return (
+    <Facts
+      className="content-start"
+      rows={[
+        ['Best score', <Num key="v" value={progress.best} digits={6} className="font-medium text-found" />],
+        [
+          'Best of the null',
+          <span key="v" className="text-null">
+            <Num value={nullBest} digits={6} />
+            {search.null && nullBest !== null && ` of ${formatNumber(search.null.evaluated)}`}
+          </span>,
+        ],
+        ['Distinct classes', <Num key="v" value={progress.evaluations} />],
+        ['Feasible', <Num key="v" value={progress.feasible} />],
+        ['Infeasible', <Num key="v" value={progress.infeasible} />],
+        ['Undefined', <Num key="v" value={progress.undefined} />],
+        ['Proposals', <Num key="v" value={progress.proposals} />],
+        ['Acceptance', progress.proposals > 0 ? formatPercent(progress.accepted / progress.proposals) : '–'],
+        ['Restarts', <Num key="v" value={progress.restarts} />],
+        ['Evaluations per second', <Num key="v" value={progress.evaluationsPerSecond} digits={3} />],
+      ]}
+    />
+  )
+}
+
+const commandsOf: Record<SearchDetail['state'], readonly SearchCommand[]> = {
+  queued: ['cancel'],
+  running: ['pause', 'cancel'],
+  paused: ['resume', 'cancel'],
+  finished: [],
+  cancelled: [],
+  failed: [],
+}
+const words = { pause: 'Pause', resume: 'Resume', cancel: 'Cancel the search' }
+
+function Commands({ campaign, search }: { campaign: string; search: SearchDetail }) {
+  const barred = useBarred('searches.run')
+  const barredList = useBarred('shortlists.edit')
+  const send = useSearchCommand(campaign, search.id)
+  const [making, setMaking] = useState(false)
+  const run = (command: SearchCommand) => {
+    if (
+      command === 'cancel' &&
+      !window.confirm('Cancel this search? What it found is kept, but it cannot go on.')
+    )
+      return
+    send.mutate(command, { onError: (error) => toast.error(explain(error)) })
+  }
+  return (
+    <>
+      {commandsOf[search.state].map((command) => (
+        <Button
+          key={command}
+          kind={command === 'cancel' ? 'danger' : 'plain'}
+          unavailable={barred}
+          busy={send.isPending}
+          onClick={() => run(command)}
+        >
+          {words[command]}
+        </Button>
+      ))}
+      {search.shortlists.map((shortlist) => (
+        <ButtonLink key={shortlist.id} to={`/campaigns/${campaign}/shortlists/${shortlist.id}`}>
+          {shortlist.name}
+        </ButtonLink>
+      ))}
+      <Button
+        kind="primary"
+        unavailable={
+          barredList || (search.progress.feasible === 0 && 'No feasible candidate has been found yet.')
+        }
+        onClick={() => setMaking(true)}
+      >
+        Make a shortlist
+      </Button>
+      <MakeShortlistDialog campaign={campaign} search={search} open={making} onOpenChange={setMaking} />
+    </>
+  )
+}

@@ -1,0 +1,80 @@
+import { Link } from 'react-router-dom'
+import { type SearchSummary } from '../../../shared/searches.ts'
+import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
+import { Num } from '../../components/ui/Num.tsx'
+import { Progress } from '../../components/ui/Progress.tsx'
+import { Table, Td, Th } from '../../components/ui/Table.tsx'
+import { formatTime } from '../../lib/numbers.ts'
+
+export function SearchTable({
+  campaign,
+  list,
+  label,
+}: {
+  campaign: string
+  list: SearchSummary[]
+  label: string
+}) {
+  return (
+    <Table label={label}>
+      <thead>
+        <tr>
+          <Th>Search</Th>
+          <Th>State</Th>
+          <Th>Target</Th>
+          <Th numeric>Polytopes</Th>
+          <Th numeric>Evaluations</Th>
+          <Th numeric>Budget</Th>
+          <Th className="min-w-28">Progress</Th>
+          <Th numeric>Best score</Th>
+          <Th>Started</Th>
+          <Th>By</Th>
+        </tr>
+      </thead>
+      <tbody>
+        {list.map((search) => (
+          <tr key={search.id} className="hover:bg-action-wash">
+            <Td>
+              <Link
+                to={`/campaigns/${campaign}/searches/${search.id}`}
+                className="font-medium text-action hover:underline"
+              >
+                {search.name}
+              </Link>
+            </Td>
+            <Td>
+              <SearchStateMark state={search.state} />
+            </Td>
+            <Td>
+              <Link to={`/campaigns/${campaign}/targets/${search.targetId}`} className="hover:underline">
+                {search.targetName}
+              </Link>{' '}
+              <span className="text-soft">v{search.targetVersion}</span>
+            </Td>
+            <Td numeric>
+              <Num value={search.polytopes} />
+            </Td>
+            <Td numeric>
+              <Num value={search.evaluations} />
+            </Td>
+            <Td numeric>
+              <Num value={search.budget} />
+            </Td>
+            <Td>
+              <Progress
+                value={search.evaluations}
+                most={search.budget}
+                label={`Evaluations of ${search.name}`}
+              />
+            </Td>
+            <Td numeric className="text-found">
+              <Num value={search.best} />
+            </Td>
+            <Td>{formatTime(search.createdAt)}</Td>
+            <Td>{search.author}</Td>
+          </tr>
+        ))}
+      </tbody>
+    </Table>
+  )
+}

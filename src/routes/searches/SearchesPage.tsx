@@ -1,0 +1,48 @@
+import { useParams } from 'react-router-dom'
+import { Plus } from 'lucide-react'
+import { useSearches } from '../../api/searches.ts'
+import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { Button, ButtonLink } from '../../components/ui/Button.tsx'
+import { Caution } from '../../components/ui/Caution.tsx'
+import { PageHead } from '../../components/ui/Layout.tsx'
+import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { SearchTable } from './SearchTable.tsx'
+
+export function SearchesPage() {
+  const { campaignId = '' } = useParams()
+  const searches = useSearches(campaignId)
+  const barred = useBarred('searches.run')
+  return (
+    <>
+      <PageHead
+        title="Searches"
+        actions={
+          barred ? (
+            <Button unavailable={barred}>New search</Button>
+          ) : (
+            <ButtonLink kind="primary" to={`/campaigns/${campaignId}/searches/new`}>
+              <Plus size={16} aria-hidden />
+              New search
+            </ButtonLink>
+          )
+        }
+      >
+        A search runs a method over a scope of polytopes for one version of a target.
+      </PageHead>
+      <QueryView query={searches} what="the searches">
+        {(list) =>
+          list.length === 0 ? (
+            <Empty title="No search has been started.">
+              Write a target first, look at its preview, then start a search from there or with “New search”.
+            </Empty>
+          ) : (
+            <>
+              <SearchTable campaign={campaignId} list={list} label="Searches" />
+              <Caution className="mt-4" />
+            </>
+          )
+        }
+      </QueryView>
+    </>
+  )
+}

@@ -1,0 +1,218 @@
+import { useRef, useState } from 'react'
+import { Link, useNavigate } from 'react-router-dom'
+import { toast } from 'sonner'
+import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
+import { type VerdictValue } from '../../../shared/verdicts.ts'
+import { explain } from '../../api/request.ts'
+import { useGiveVerdict } from '../../api/verdicts.ts'
+import { ClassThumb } from '../../components/geometry/ClassThumb.tsx'
+import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { HitMark, Outcome, ReportCell } from '../../components/ui/Outcome.tsx'
+import { SortButton } from '../../components/ui/Table.tsx'
+import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
+import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
+import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
+import { useShortcut } from '../../lib/shortcuts.ts'
+import { DecisionBar } from './DecisionBar.tsx'
+import { nextKey, nextUndecided } from './shortlistView.ts'
+
+interface TriageProps {
+  campaign: string
+  shortlist: ShortlistDetail
+  rows: readonly ShortlistRow[]
+  sort: string
+  descending: boolean
+  onSort: (sort: string) => void
+  /** Key of the row in hand. */
+  current: string | null
+  onCurrent: (key: string | null) => void
+}
+
+const group = 'Triage'
+
+export function Triage({
+  campaign,
+  shortlist,
+  rows,
+  sort,
+  descending,
+  onSort,
+  current,
+  onCurrent,
+}: TriageProps) {
+  const navigate = useNavigate()
+  const barred = useBarred('verdicts.give')
+  const give = useGiveVerdict(campaign)
+  const [asked, setAsked] = useState<ShortlistRow | null>(null)
+  const [fault, setFault] = useState<string | null>(null)
+  const table = useRef<HTMLDivElement>(null)
+
+  const found = rows.findIndex((row) => row.candidateKey === current)
+  const at = found >= 0 ? found : 0
+  const row = rows[at]
+  const dossier = (key: string) => `/candidates/${key}?campaign=${campaign}&shortlist=${shortlist.id}`
+
+  const decide = (chosen: ShortlistRow, value: VerdictValue, reason = '') => {
+    const following = nextKey(rows, chosen.candidateKey)
+    const before = chosen.verdict
+    give.mutate(
+      { key: chosen.candidateKey, targetVersionId: shortlist.targetVersionId, value, reason },
+      {
+        onSuccess: () => {
+          setAsked(null)
+          onCurrent(following)
+          toast(`Rank ${chosen.rank}: ${value}`, {
+            action: {
+              label: 'Undo',
+              onClick: () =>
+                give.mutate({
+                  key: chosen.candidateKey,
+                  targetVersionId: shortlist.targetVersionId,
+                  value: before?.value ?? 'undecided',
+                  reason: before?.reason ?? '',
+                }),
+            },
+          })
+        },
+        onError: (error) => {
+          setFault(explain(error))
+          if (value !== 'verified') toast.error(explain(error))
+        },
+      },
+    )
+  }
+  const ask = (value: VerdictValue) => {
+    if (!row || barred) {
+      if (barred) toast.error(barred)
+      return
+    }
+    setFault(null)
+    if (value === 'verified') setAsked(row)
+    else decide(row, value)
+  }
+  const move = (step: number) => {
+    const next = rows[Math.min(rows.length - 1, Math.max(0, at + step))]
+    if (next) onCurrent(next.candidateKey)
+  }
+
+  useShortcut({ key: 'v', does: 'Verify (asks for the reason)', group }, () => ask('verified'))
+  useShortcut({ key: 'r', does: 'Reject and go on', group }, () => ask('rejected'))
+  useShortcut({ key: 'u', does: 'Put back to undecided and go on', group }, () => ask('undecided'))
+  useShortcut({ key: 'j', does: 'Next candidate', group }, () => move(1))
+  useShortcut({ key: 'k', does: 'Previous candidate', group }, () => move(-1))
+  useShortcut({ key: 'ArrowDown', does: 'Next candidate', group }, () => move(1))
+  useShortcut({ key: 'ArrowUp', does: 'Previous candidate', group }, () => move(-1))
+  useShortcut({ key: 'n', does: 'Next undecided', group }, () => {
+    const next = nextUndecided(rows, row?.candidateKey ?? null)
+    if (next) onCurrent(next)
+    else toast('No undecided candidate is left among those shown.')
+  })
+  useShortcut(
+    { key: 'o', does: 'Open the dossier', group },
+    () => row && void navigate(dossier(row.candidateKey)),
+  )
+
+  const sortable = (by: string, name: string) => ({
+    header: (
+      <SortButton active={by === sort} order={descending ? 'desc' : 'asc'} onClick={() => onSort(by)}>
+        {name}
+      </SortButton>
+    ),
+    sorted: by === sort ? (descending ? ('descending' as const) : ('ascending' as const)) : undefined,
+  })
+  const columns: Column<ShortlistRow>[] = [
+    {
+      key: 'rank',
+      numeric: true,
+      className: 'w-14',
+      ...sortable('rank', 'Rank'),
+      cell: (item) => (
+        <Link
+          to={dossier(item.candidateKey)}
+          className="text-action hover:underline"
+          aria-label={`Rank ${item.rank}, open the dossier`}
+        >
+          {item.rank}
+        </Link>
+      ),
+    },
+    { key: 'verdict', header: 'Verdict', cell: (item) => <VerdictMark verdict={item.verdict} /> },
+    {
+      key: 'score',
+      numeric: true,
+      ...sortable('score', 'Score'),
+      cell: (item) => <Outcome outcome={item.outcome} />,
+    },
+    { key: 'hit', header: 'Hit', cell: (item) => <HitMark outcome={item.outcome} /> },
+    ...shortlist.columns.map((name): Column<ShortlistRow> => ({
+      key: `report:${name}`,
+      numeric: true,
+      ...sortable(`report:${name}`, name),
+      cell: (item) => (
+        <ReportCell cell={item.outcome.kind === 'feasible' ? item.outcome.report[name] : undefined} />
+      ),
+    })),
+    {
+      key: 'picture',
+      header: 'Largest 2-faces',
+      cell: (item) => <ClassThumb candidate={item.candidateKey} />,
+    },
+    {
+      key: 'polytope',
+      header: 'Polytope',
+      cell: (item) => (
+        <Link to={`/library/${item.polytopeKey}?campaign=${campaign}`} className="hover:underline">
+          {item.polytopeName}
+        </Link>
+      ),
+    },
+    {
+      key: 'h11',
+      numeric: true,
+      ...sortable('h11', 'h11, h21'),
+      cell: (item) => (
+        <>
+          {item.h11}, {item.h21}
+        </>
+      ),
+    },
+  ]
+
+  return (
+    <div ref={table}>
+      <VirtualTable
+        label="Candidates"
+        className="max-h-[62vh]"
+        count={rows.length}
+        rowAt={(index) => rows[index]}
+        rowKey={(item) => item.candidateKey}
+        columns={columns}
+        current={current === null ? undefined : at}
+        rowProps={(item, index) => ({
+          className:
+            index === at ? 'bg-action-wash shadow-[inset_3px_0_0_var(--action)]' : 'hover:bg-action-wash',
+          'aria-current': index === at ? true : undefined,
+          onClick: () => onCurrent(item.candidateKey),
+        })}
+      />
+      {row && (
+        <DecisionBar
+          row={row}
+          place={`${at + 1} of ${rows.length} shown`}
+          barred={barred}
+          busy={give.isPending}
+          dossier={dossier(row.candidateKey)}
+          onDecide={ask}
+          onStep={move}
+        />
+      )}
+      <VerdictDialog
+        asked={asked && { value: 'verified', what: `The candidate of rank ${asked.rank}` }}
+        busy={give.isPending}
+        fault={fault}
+        onGive={(reason) => asked && decide(asked, 'verified', reason)}
+        onClose={() => setAsked(null)}
+      />
+    </div>
+  )
+}
