@@ -1,0 +1,121 @@
+/**
+ * `npm run bench`: medians of repeated runs beside the figures they must keep. Exit status 1 when one is above
+ * 1.5 times its figure.
+ */
+import { quadraticHeights } from './geometry/heights.ts'
+import { intersectionNumbers } from './geometry/intersectionNumbers.ts'
+import { classFromHeights } from './geometry/twoFaceClass.ts'
+import { polytopeFromWeights } from './geometry/weights.ts'
+import { evaluationMemory } from './bench/memory.ts'
+import { candidateOf, largest, small, workload } from './bench/workloads.ts'
+
+interface Measure {
+  readonly name: string
+  /** What the median may be; the bench fails above 1.5 times this. */
+  readonly figure: number
+  readonly unit: 'ms' | 'MB'
+  readonly runs: number
+  /** One measured value; `run` counts up from 0 and may serve as a seed. */
+  readonly measure: (run: number) => number
+}
+
+const tolerated = 1.5
+/** Runs before the measured ones, so that the code is compiled; as a share of the runs. */
+const warmUp = 0.5
+
+const large = workload(largest).form
+const little = workload(small).form
+
+const measures: readonly Measure[] = [
+  {
+    name: 'h11 = 491: polytope set-up',
+    figure: 50,
+    unit: 'ms',
+    runs: 20,
+    measure: () => milliseconds(() => polytopeFromWeights(largest, 'newton')),
+  },
+  {
+    name: 'h11 = 491: heights to triangles, intersection numbers, c2',
+    figure: 3,
+    unit: 'ms',
+    runs: 40,
+    measure: (run) => {
+      const heights = quadraticHeights(large.polytope, { seed: run, noise: 0.45 })
+      return milliseconds(() => {
+        const outcome = classFromHeights(large.polytope, heights)
+        return outcome.fine && intersectionNumbers(outcome.class)
+      })
+    },
+  },
+  {
+    name: 'h11 = 491: reference point',
+    figure: 200,
+    unit: 'ms',
+    runs: 20,
+    measure: (run) => {
+      const candidate = candidateOf(large, run)
+      candidate.numbers()
+      return milliseconds(() => candidate.reference())
+    },
+  },
+  {
+    name: 'h11 = 491: metric with top eigenvalue',
+    figure: 80,
+    unit: 'ms',
+    runs: 20,
+    measure: (run) => {
+      const candidate = candidateOf(large, run)
+      candidate.reference()
+      return milliseconds(() => candidate.topEigenvalue())
+    },
+  },
+  {
+    name: 'h11 = 10: heights to top eigenvalue',
+    figure: 1.5,
+    unit: 'ms',
+    runs: 400,
+    measure: (run) => milliseconds(() => candidateOf(little, run).topEigenvalue()),
+  },
+  {
+    name: 'h11 = 491: memory of an evaluation',
+    figure: 150,
+    unit: 'MB',
+    runs: 1,
+    measure: evaluationMemory,
+  },
+]
+
+function milliseconds(work: () => unknown): number {
+  const start = performance.now()
+  work()
+  return performance.now() - start
+}
+
+function median(values: readonly number[]): number {
+  const sorted = [...values].sort((a, b) => a - b)
+  return (sorted[(sorted.length - 1) >> 1] + sorted[sorted.length >> 1]) / 2
+}
+
+function medianOf({ runs, measure }: Measure): number {
+  for (let run = 0; run < Math.floor(warmUp * runs); run++) measure(run)
+  return median(Array.from({ length: runs }, (_, run) => measure(run)))
+}
+
+let slow = 0
+for (const measure of measures) {
+  const value = medianOf(measure)
+  const kept = value <= tolerated * measure.figure
+  if (!kept) slow++
+  const columns = [
+    measure.name.padEnd(60),
+    `${value.toFixed(2)} ${measure.unit}`.padStart(11),
+    `figure ${measure.figure} ${measure.unit}`.padStart(15),
+    `${measure.runs} runs`.padStart(10),
+    kept ? 'kept' : 'MISSED',
+  ]
+  process.stdout.write(`${columns.join('  ')}\n`)
+}
+if (slow > 0) {
+  process.stdout.write(`${slow} of ${measures.length} above ${tolerated} times the figure\n`)
+  process.exitCode = 1
+}
