@@ -53,7 +53,8 @@ export function readConfig(environment: Record<string, string | undefined>): Con
   const parsed = environmentSchema.safeParse(present)
   if (!parsed.success) {
     const lines = parsed.error.issues.map(
-      (issue) => `  ${issue.path.join('.')}: ${issue.message} (found "${present[String(issue.path[0])] ?? ''}")`,
+      (issue) =>
+        `  ${issue.path.join('.')}: ${issue.message} (found "${present[String(issue.path[0])] ?? ''}")`,
     )
     throw new StartError(`The configuration is wrong:\n${lines.join('\n')}`)
   }

@@ -27,8 +27,9 @@ export class NullSample {
   @Column({ type: 'text', nullable: true })
   state!: string | null
 
-  @Column({ type: 'simple-json' })
-  summary!: NullSummary
+  /** Null before the first piece. */
+  @Column({ type: 'simple-json', nullable: true })
+  summary!: NullSummary | null
 
   /** Reason why it cannot be completed, if so. */
   @Column({ type: 'text', nullable: true })

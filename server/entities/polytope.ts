@@ -53,8 +53,4 @@ export class PolytopeRecord {
   /** Vertices in normal-form coordinates. */
   @Column({ type: 'simple-json' })
   coordinates!: number[][]
-
-  /** Normal-form key of the dual polytope, whether or not that one is in the library. */
-  @Column({ type: 'varchar' })
-  dualKey!: string
 }

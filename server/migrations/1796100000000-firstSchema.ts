@@ -31,8 +31,7 @@ const tables = [
     "symmetryOrder" integer NOT NULL,
     "weights" text,
     "side" varchar,
-    "coordinates" text NOT NULL,
-    "dualKey" varchar NOT NULL
+    "coordinates" text NOT NULL
   )`,
   `CREATE TABLE "campaign_polytope" (
     "campaignId" varchar NOT NULL,
@@ -139,7 +138,7 @@ const tables = [
     "size" integer NOT NULL,
     "complete" boolean NOT NULL,
     "state" text,
-    "summary" text NOT NULL,
+    "summary" text,
     "failure" text,
     CONSTRAINT "UQ_404360069496af1c29c0a8c5fec" UNIQUE ("scopeHash", "scoringHash")
   )`,

@@ -78,7 +78,9 @@ describe('the write lock', () => {
 
   it('goes on after a failure', async () => {
     const writes = new WriteLock(source)
-    await expect(writes.transaction(() => Promise.reject(new Error('on purpose')))).rejects.toThrow('on purpose')
+    await expect(writes.transaction(() => Promise.reject(new Error('on purpose')))).rejects.toThrow(
+      'on purpose',
+    )
     await expect(writes.transaction(async () => 'fine')).resolves.toBe('fine')
   })
 

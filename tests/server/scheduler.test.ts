@@ -7,7 +7,12 @@ interface Script {
 }
 
 /** A source with a number of pieces, each ended by hand. */
-function source(name: string, campaignId: string, pieces: number, script: Script & { ends: (() => void)[] }): WorkSource {
+function source(
+  name: string,
+  campaignId: string,
+  pieces: number,
+  script: Script & { ends: (() => void)[] },
+): WorkSource {
   let left = pieces
   return {
     campaignId,

@@ -1,0 +1,82 @@
+import express, { type Express } from 'express'
+import helmet from 'helmet'
+import type session from 'express-session'
+import { sessionSecret } from './config.ts'
+import type { ServerContext } from './context.ts'
+import { answerProblem } from './http/answerProblem.ts'
+import { findClientFolder, serveClient } from './http/clientFiles.ts'
+import { noSuchRoute } from './http/endpoint.ts'
+import { ownOrigin } from './http/ownOrigin.ts'
+import { sessionCookie } from './http/sessions.ts'
+import { requestLog } from './logging.ts'
+import { campaignRoutes } from './routes/campaigns.ts'
+import { candidateRoutes } from './routes/candidates.ts'
+import { eventRoutes } from './routes/events.ts'
+import { healthRoutes } from './routes/health.ts'
+import { polytopeRoutes } from './routes/polytopes.ts'
+import { searchRoutes } from './routes/searches.ts'
+import { sessionRoutes } from './routes/session.ts'
+import { shortlistRoutes } from './routes/shortlists.ts'
+import { targetRoutes } from './routes/targets.ts'
+
+/**
+ * The Express application, built from its dependencies. Every route of the API is registered flat, under its full
+ * path, so that a test can list them.
+ */
+export function buildApp(context: ServerContext, sessions: session.Store): Express {
+  const { config, log } = context
+  const app = express()
+  app.disable('x-powered-by')
+  app.set('trust proxy', config.trustProxy)
+  app.use(requestLog(log))
+  app.use(securityHeaders(config.baseUrl.startsWith('https:')))
+  app.use('/api', (_request, response, next) => {
+    response.set('Cache-Control', 'no-store')
+    next()
+  })
+  app.use('/api', ownOrigin(config.baseUrl))
+  app.use('/api', sessionCookie(config, sessions, sessionSecret(config)))
+
+  healthRoutes(app, context)
+  sessionRoutes(app, context)
+  campaignRoutes(app, context)
+  polytopeRoutes(app, context)
+  targetRoutes(app, context)
+  searchRoutes(app, context)
+  shortlistRoutes(app, context)
+  candidateRoutes(app, context)
+  eventRoutes(app, context)
+
+  app.use('/api', noSuchRoute)
+  serveClient(app, findClientFolder())
+  app.use(answerProblem)
+  return app
+}
+
+/**
+ * Scripts only from ourselves. Styles also inline: the rule editor (CodeMirror) writes its themes into style
+ * elements, and typeset formulas (KaTeX) place their parts by style attributes.
+ */
+function securityHeaders(https: boolean) {
+  return helmet({
+    contentSecurityPolicy: {
+      useDefaults: false,
+      directives: {
+        defaultSrc: ["'self'"],
+        scriptSrc: ["'self'"],
+        styleSrc: ["'self'", "'unsafe-inline'"],
+        imgSrc: ["'self'", 'data:', 'blob:'],
+        fontSrc: ["'self'", 'data:'],
+        connectSrc: ["'self'"],
+        objectSrc: ["'none'"],
+        baseUri: ["'none'"],
+        formAction: ["'self'"],
+        frameAncestors: ["'none'"],
+        ...(https ? { upgradeInsecureRequests: [] } : {}),
+      },
+    },
+    strictTransportSecurity: https,
+    crossOriginEmbedderPolicy: false,
+    referrerPolicy: { policy: 'same-origin' },
+  })
+}

@@ -1,0 +1,98 @@
+import { fileURLToPath } from 'node:url'
+import Piscina from 'piscina'
+import type { Logger } from 'pino'
+import { Refusal } from '../problems.ts'
+import type { TaskAnswer, TaskInput, TaskName, TaskOutput } from './tasks.ts'
+
+export type ComputeFailureCode = 'worker-threw' | 'worker-died' | 'worker-stuck'
+
+/** Work that came to nothing through no fault of the caller. */
+export class ComputeFailure extends Error {
+  readonly code: ComputeFailureCode
+
+  constructor(code: ComputeFailureCode, message: string, options?: ErrorOptions) {
+    super(message, options)
+    this.name = 'ComputeFailure'
+    this.code = code
+  }
+}
+
+export interface PoolOptions {
+  readonly threads: number
+  /** Added to the threads' nice value, so that they yield to the web side. */
+  readonly nice: number
+  readonly log: Logger
+  /** Tests put a misbehaving worker here. */
+  readonly workerFile?: URL
+}
+
+/** The worker file lies beside the server's entry, in source (.ts) and in the build (.js). */
+const ownExtension = import.meta.url.endsWith('.ts') ? '.ts' : '.js'
+const ownWorker = new URL(`../worker${ownExtension}`, import.meta.url)
+
+/** How long a task may take before its thread is taken for stuck and ended. */
+export const taskLimitMilliseconds = 10 * 60 * 1000
+
+/** Worker threads that run named tasks of the engine. */
+export class ComputePool {
+  readonly threads: number
+  readonly #pool: Piscina
+  readonly #closing = new AbortController()
+
+  constructor({ threads, nice, log, workerFile = ownWorker }: PoolOptions) {
+    this.threads = threads
+    this.#pool = new Piscina({
+      filename: fileURLToPath(workerFile),
+      minThreads: 0,
+      maxThreads: threads,
+      idleTimeout: 60_000,
+      niceIncrement: nice,
+      // Source needs the loader that the server itself runs under; the build needs nothing.
+      execArgv: workerFile.pathname.endsWith('.ts') ? ['--import', import.meta.resolve('tsx')] : [],
+      // A worker's heap may grow to what the largest polytopes need, and no further.
+      resourceLimits: { maxOldGenerationSizeMb: 1024 },
+    })
+    // Without a listener a thread that fails while idle would end the server.
+    this.#pool.on('error', (error: unknown) => log.error({ err: error }, 'a worker thread failed while idle'))
+  }
+
+  /**
+   * Runs a task on a thread.
+   *
+   * @throws Refusal for a mistake in the input; ComputeFailure when the task threw, died or was stuck; the
+   *   signal's reason when the caller gave up
+   */
+  async run<Name extends TaskName>(
+    name: Name,
+    input: TaskInput<Name>,
+    signal?: AbortSignal,
+  ): Promise<TaskOutput<Name>> {
+    const limit = AbortSignal.timeout(taskLimitMilliseconds)
+    const signals = [this.#closing.signal, limit, ...(signal ? [signal] : [])]
+    let answer: TaskAnswer<TaskOutput<Name>>
+    try {
+      answer = (await this.#pool.run({ name, input }, { signal: AbortSignal.any(signals) })) as TaskAnswer<
+        TaskOutput<Name>
+      >
+    } catch (error) {
+      signal?.throwIfAborted()
+      this.#closing.signal.throwIfAborted()
+      if (limit.aborted)
+        throw new ComputeFailure('worker-stuck', 'The computation did not end in ten minutes.')
+      const reason = error instanceof Error ? error.message : String(error)
+      throw new ComputeFailure('worker-died', `The worker thread ended: ${reason}`, { cause: error })
+    }
+    if (answer.ok) return answer.value
+    if (answer.kind === 'input') {
+      const { code, message, path, found } = answer
+      throw new Refusal(422, code, message, { ...(path === '' ? {} : { path }), found })
+    }
+    throw new ComputeFailure('worker-threw', answer.message, { cause: answer.stack })
+  }
+
+  /** Ends all threads; running tasks are abandoned. */
+  async close(): Promise<void> {
+    this.#closing.abort(new Error('The server is shutting down.'))
+    await this.#pool.destroy()
+  }
+}

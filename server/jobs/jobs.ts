@@ -1,0 +1,69 @@
+import type { ComputedGeometry } from './compute/candidateGeometry.ts'
+import type { PolytopeShape } from './compute/polytopeShape.ts'
+import { RecentResults } from '../services/recentResults.ts'
+import { ComputePool } from './computePool.ts'
+import type { JobParts } from './jobParts.ts'
+import { NullSampler } from './nullSampler.ts'
+import { Previews } from './previews.ts'
+import { Scheduler } from './scheduler.ts'
+import { SearchRunner } from './searchRunner.ts'
+
+/** Everything that runs beside the requests. */
+export interface Jobs {
+  readonly scheduler: Scheduler
+  readonly background: ComputePool
+  readonly interactive: ComputePool
+  readonly searches: SearchRunner
+  readonly previews: Previews
+  /** What polytope pages show, by polytope key. */
+  readonly shapes: RecentResults<PolytopeShape>
+  /** Dossiers, by candidate key. */
+  readonly geometries: RecentResults<ComputedGeometry>
+  close(): Promise<void>
+}
+
+export interface JobOptions {
+  /** Worker file of the background threads (tests put a misbehaving one here). */
+  readonly backgroundWorker?: URL
+}
+
+/**
+ * Threads yield to the web side: on Linux a thread's nice value is its own. Interactive work yields less than
+ * searches do, so that a saturated pool does not hold up what somebody waits for.
+ */
+const backgroundNice = 15
+const interactiveNice = 5
+
+export function openJobs(
+  parts: Pick<JobParts, 'source' | 'writes' | 'streams' | 'log'> & { readonly workers: number },
+  options: JobOptions = {},
+): Jobs {
+  const { workers, ...shared } = parts
+  const { log } = shared
+  const closing = new AbortController()
+  const background = new ComputePool({
+    threads: workers,
+    nice: backgroundNice,
+    log,
+    ...(options.backgroundWorker ? { workerFile: options.backgroundWorker } : {}),
+  })
+  const interactive = new ComputePool({ threads: 1, nice: interactiveNice, log })
+  const scheduler = new Scheduler(workers)
+  const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
+  const searches = new SearchRunner(all, new NullSampler(all))
+  return {
+    scheduler,
+    background,
+    interactive,
+    searches,
+    previews: new Previews(all),
+    shapes: new RecentResults(200),
+    geometries: new RecentResults(60),
+    close: async () => {
+      closing.abort(new Error('The server is shutting down.'))
+      scheduler.stop()
+      searches.stop()
+      await Promise.all([background.close(), interactive.close()])
+    },
+  }
+}

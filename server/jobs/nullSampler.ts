@@ -1,0 +1,122 @@
+import {
+  commitNullChunk,
+  failNullSample,
+  openNullSample,
+  searchesAgainst,
+  type NullAddress,
+} from '../services/nullSamples.ts'
+import type { NullSample } from '../entities/nullSample.ts'
+import type { Search } from '../entities/search.ts'
+import type { JobParts } from './jobParts.ts'
+import type { NullProblem } from './nullChunk.ts'
+import { SegmentPace } from './pace.ts'
+import type { WorkSource } from './scheduler.ts'
+import type { ProblemPolytope } from './searchProblem.ts'
+
+/** All null samples are drawn with this seed: one sample per scope and rule, whoever asks for it. */
+const nullSeed = 1
+
+/** Candidates of a null sample. Fewer where each takes long: the largest polytopes need a quarter of a second. */
+export function nullSampleSize(pointsMax: number): number {
+  if (pointsMax <= 100) return 2_000
+  return pointsMax <= 250 ? 1_000 : 500
+}
+
+/** Draws the null samples that searches are compared with, in turn with the searches themselves. */
+export class NullSampler {
+  readonly #parts: JobParts
+  readonly #drawing = new Set<string>()
+
+  constructor(parts: JobParts) {
+    this.#parts = parts
+  }
+
+  /** Makes sure that the null sample of a search is complete or being drawn. */
+  async want(
+    search: Pick<Search, 'campaignId' | 'scopeHash' | 'scoringHash'>,
+    rule: string,
+    polytopes: readonly ProblemPolytope[],
+  ): Promise<void> {
+    const { writes, scheduler, closing } = this.#parts
+    const size = nullSampleSize(polytopes.reduce((most, { points }) => Math.max(most, points), 0))
+    const sample = await writes.transaction((manager) =>
+      openNullSample(manager, search, { seed: nullSeed, size }),
+    )
+    if (sample.complete || sample.failure !== null || this.#drawing.has(sample.id) || closing.aborted) return
+    this.#drawing.add(sample.id)
+    const problem = { rule, polytopes, seed: sample.seed, size: sample.size }
+    const source = new NullSource(search, sample, problem, this.#parts, () => {
+      scheduler.remove(source)
+      this.#drawing.delete(sample.id)
+    })
+    scheduler.add(source)
+  }
+}
+
+class NullSource implements WorkSource {
+  readonly campaignId: string
+  readonly #address: NullAddress
+  readonly #id: string
+  readonly #problem: NullProblem
+  readonly #parts: JobParts
+  readonly #ended: () => void
+  readonly #pace = new SegmentPace()
+  #state: string | null
+  #evaluated: number
+  #busy = false
+  #over = false
+
+  constructor(
+    search: Pick<Search, 'campaignId' | 'scopeHash' | 'scoringHash'>,
+    sample: NullSample,
+    problem: NullProblem,
+    parts: JobParts,
+    ended: () => void,
+  ) {
+    this.campaignId = search.campaignId
+    this.#address = search
+    this.#id = sample.id
+    this.#state = sample.state
+    this.#evaluated = sample.summary?.evaluated ?? 0
+    this.#problem = problem
+    this.#parts = parts
+    this.#ended = ended
+  }
+
+  next(): Promise<void> | null {
+    if (this.#busy || this.#over) return null
+    this.#busy = true
+    return this.#draw()
+      .catch((error: unknown) => this.#fail(error))
+      .finally(() => {
+        this.#busy = false
+      })
+  }
+
+  async #draw(): Promise<void> {
+    const { background, writes, source, streams } = this.#parts
+    const input = { problem: this.#problem, state: this.#state, evaluations: this.#pace.nextEvaluations }
+    const output = await background.run('null-chunk', input)
+    this.#pace.note(output.summary.evaluated - this.#evaluated, output.milliseconds, Date.now())
+    await writes.transaction((manager) => commitNullChunk(manager, this.#id, output))
+    this.#state = output.state
+    this.#evaluated = output.summary.evaluated
+    if (output.done) {
+      this.#over = true
+      this.#ended()
+    }
+    for (const { id, campaignId } of await searchesAgainst(source.manager, this.#address)) {
+      streams.toCampaign(campaignId, { kind: 'null', searchId: id, summary: output.summary })
+    }
+  }
+
+  async #fail(error: unknown): Promise<void> {
+    const { closing, log, writes } = this.#parts
+    this.#over = true
+    this.#ended()
+    if (closing.aborted) return
+    log.error({ err: error, nullSample: this.#id }, 'a null sample failed')
+    const reason = error instanceof Error ? error.message : String(error)
+    await writes.transaction((manager) => failNullSample(manager, this.#id, reason))
+  }
+}

@@ -1,0 +1,126 @@
+import { randomUUID } from 'node:crypto'
+import type { z } from 'zod'
+import type { Preview, previewRequestSchema } from '../../shared/targets.ts'
+import { notFound, Refusal } from '../problems.ts'
+import { requireSoundRule } from '../services/rules.ts'
+import { resolveScope } from '../services/scopes.ts'
+import { storeCandidates } from '../services/searchCommits.ts'
+import { ComputeFailure } from './computePool.ts'
+import type { JobParts } from './jobParts.ts'
+import type { NullProblem } from './nullChunk.ts'
+
+/** Work of one piece: other previews, imports and dossiers get their turn in between. */
+const pieceMilliseconds = 50
+
+/** Pause between two reports of one preview. */
+const reportMilliseconds = 120
+
+type PreviewRequest = z.infer<typeof previewRequestSchema>
+
+interface RunningPreview {
+  readonly accountId: string
+  readonly scoringHash: string
+  readonly problem: NullProblem
+  preview: Preview
+}
+
+/** Previews of rules on a null sample: one per account, a new one replaces the old. */
+export class Previews {
+  readonly #parts: JobParts
+  readonly #latest = new Map<string, RunningPreview>()
+
+  constructor(parts: JobParts) {
+    this.#parts = parts
+  }
+
+  async start(campaignId: string, accountId: string, request: PreviewRequest): Promise<Preview> {
+    this.stop(accountId)
+    const { scoringHash } = requireSoundRule(request.text)
+    const polytopes = await resolveScope(this.#parts.source.manager, campaignId, request.scope)
+    // Another request of the same account may have come in between.
+    this.stop(accountId)
+    const running: RunningPreview = {
+      accountId,
+      scoringHash,
+      problem: {
+        rule: request.text,
+        polytopes: polytopes.map(({ key, points, coordinates }) => ({ key, points, vertices: coordinates })),
+        seed: request.seed,
+        size: request.size,
+      },
+      preview: { ...emptyPreview, id: randomUUID(), size: request.size },
+    }
+    this.#latest.set(accountId, running)
+    void this.#run(running)
+    return running.preview
+  }
+
+  /** The account's latest preview. */
+  read(accountId: string, id: string): Preview {
+    const running = this.#latest.get(accountId)
+    if (running?.preview.id !== id) throw notFound('preview')
+    return running.preview
+  }
+
+  /** Ends the account's preview, if one is running; it gets no further than the piece in hand. */
+  stop(accountId: string): void {
+    const running = this.#latest.get(accountId)
+    if (running?.preview.state !== 'running') return
+    this.#report(running, { ...running.preview, state: 'replaced' })
+  }
+
+  async #run(running: RunningPreview): Promise<void> {
+    const { interactive, writes, closing, log } = this.#parts
+    let state: string | null = null
+    let reported = 0
+    try {
+      while (running.preview.state === 'running') {
+        const piece = { problem: running.problem, state, milliseconds: pieceMilliseconds }
+        const output = await interactive.run('preview-chunk', piece)
+        if (running.preview.state !== 'running') return
+        state = output.state
+        if (output.done) {
+          await writes.transaction((manager) => storeCandidates(manager, running.scoringHash, output.shown))
+        }
+        const preview = {
+          ...running.preview,
+          ...output.preview,
+          state: output.done ? 'done' : 'running',
+        } as const
+        if (output.done || Date.now() - reported >= reportMilliseconds) {
+          reported = Date.now()
+          this.#report(running, preview)
+        } else running.preview = preview
+      }
+    } catch (error) {
+      if (closing.aborted) return
+      if (!(error instanceof Refusal)) log.error({ err: error }, 'a preview failed')
+      const known = error instanceof Refusal || error instanceof ComputeFailure
+      const message = known ? error.message : 'The server made a mistake while it computed this preview.'
+      this.#report(running, { ...running.preview, state: 'failed', message })
+    }
+  }
+
+  #report(running: RunningPreview, preview: Preview): void {
+    running.preview = preview
+    this.#parts.streams.toAccount(running.accountId, { kind: 'preview', preview })
+  }
+}
+
+const emptyPreview: Omit<Preview, 'id' | 'size'> = {
+  state: 'running',
+  message: null,
+  evaluated: 0,
+  law: '',
+  feasible: 0,
+  infeasible: 0,
+  undefined: 0,
+  undefinedReasons: [],
+  requires: [],
+  histogram: null,
+  hit: null,
+  cost: { median: null, stages: [] },
+  best: [],
+  typical: [],
+  worst: [],
+}

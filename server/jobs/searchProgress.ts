@@ -1,0 +1,70 @@
+import { interleaved } from '../../scoring/index.ts'
+import type { SearchProgress } from '../../shared/searches.ts'
+import { compareCandidates } from '../services/finds.ts'
+import type { IslandFind } from '../services/searchCommits.ts'
+import type { IslandProgress, SegmentFind } from './segment.ts'
+
+export interface Pace {
+  readonly evaluationsPerSecond: number | null
+  readonly budget: number
+}
+
+/** The search's progress from that of its islands; the order in which these were reported does not matter. */
+export function mergeProgress(islands: readonly (IslandProgress | null)[], pace: Pace): SearchProgress {
+  const begun = islands.filter((island) => island !== null)
+  const total = (
+    name: 'evaluations' | 'proposals' | 'accepted' | 'restarts' | 'feasible' | 'infeasible' | 'undefined',
+  ) => begun.reduce((sum, island) => sum + island[name], 0)
+  let leader: IslandProgress | null = null
+  for (const island of begun) {
+    if (island.best !== null && (leader?.best == null || island.best > leader.best)) leader = island
+  }
+  const evaluations = total('evaluations')
+  const { evaluationsPerSecond, budget } = pace
+  return {
+    evaluations,
+    proposals: total('proposals'),
+    accepted: total('accepted'),
+    restarts: total('restarts'),
+    feasible: total('feasible'),
+    infeasible: total('infeasible'),
+    undefined: total('undefined'),
+    best: leader?.best ?? null,
+    bestKey: leader?.bestKey ?? null,
+    curve: interleaved(begun).map(([at, score]) => [at, score]),
+    islands: islands.map((island) => ({
+      evaluations: island?.evaluations ?? 0,
+      best: island?.best ?? null,
+      exhausted: island?.exhausted ?? false,
+    })),
+    exhausted: islands.every((island) => island?.exhausted === true),
+    evaluationsPerSecond,
+    secondsLeft: evaluationsPerSecond ? Math.max(0, budget - evaluations) / evaluationsPerSecond : null,
+  }
+}
+
+/**
+ * The best distinct candidates of all islands: what was known, with one island's list taken in. Since the lists
+ * of islands only improve, the outcome does not depend on the order in which they come.
+ */
+export function mergeFinds(
+  known: readonly IslandFind[],
+  island: number,
+  finds: readonly SegmentFind[],
+  keep: number,
+): IslandFind[] {
+  const best = new Map(known.map((find) => [find.candidateKey, find]))
+  for (const find of finds) {
+    const earlier = best.get(find.candidateKey)
+    if (!earlier || island < earlier.island) best.set(find.candidateKey, { ...find, island })
+  }
+  return [...best.values()].sort(compareCandidates).slice(0, keep)
+}
+
+/** Whether two lists name the same finds in the same order. */
+export function sameFinds(a: readonly IslandFind[], b: readonly IslandFind[]): boolean {
+  return (
+    a.length === b.length &&
+    a.every(({ candidateKey, island }, i) => candidateKey === b[i].candidateKey && island === b[i].island)
+  )
+}

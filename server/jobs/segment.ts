@@ -1,0 +1,44 @@
+import type { OutcomeView } from '../../shared/outcomes.ts'
+import type { SearchProblem } from './searchProblem.ts'
+
+/** A piece of one island's run. How a run is cut into segments never changes its result. */
+export interface SegmentInput {
+  readonly problem: SearchProblem
+  /** JSON text of the state after the segment before; null at the beginning. */
+  readonly state: string | null
+  /** Evaluations to make at most. */
+  readonly evaluations: number
+}
+
+export interface SegmentFind {
+  readonly candidateKey: string
+  readonly polytopeKey: string
+  readonly heights: readonly number[]
+  readonly outcome: OutcomeView
+}
+
+/** What is known of one island after a segment. */
+export interface IslandProgress {
+  readonly evaluations: number
+  readonly proposals: number
+  readonly accepted: number
+  readonly restarts: number
+  readonly feasible: number
+  readonly infeasible: number
+  readonly undefined: number
+  readonly best: number | null
+  readonly bestKey: string | null
+  /** Best so far over this island's evaluations. */
+  readonly curve: readonly (readonly [number, number])[]
+  readonly exhausted: boolean
+}
+
+export interface SegmentOutput {
+  readonly state: string
+  readonly progress: IslandProgress
+  readonly done: boolean
+  /** The island's best distinct candidates so far, best first. */
+  readonly finds: readonly SegmentFind[]
+  /** Time the segment took on its thread. */
+  readonly milliseconds: number
+}

@@ -1,0 +1,29 @@
+import type { candidateGeometry } from './compute/candidateGeometry.ts'
+import type { factsOfEach, factsOfWeights, pointBlocks } from './compute/importBlocks.ts'
+import type { polytopeShape } from './compute/polytopeShape.ts'
+
+/** The tasks of the worker threads: pure functions of plain data, by name. */
+export interface Tasks {
+  'point-blocks': typeof pointBlocks
+  'facts-of-each': typeof factsOfEach
+  'facts-of-weights': typeof factsOfWeights
+  'polytope-shape': typeof polytopeShape
+  'candidate-geometry': typeof candidateGeometry
+}
+
+export type TaskName = keyof Tasks
+export type TaskInput<Name extends TaskName> = Parameters<Tasks[Name]>[0]
+export type TaskOutput<Name extends TaskName> = ReturnType<Tasks[Name]>
+
+/** Thrown errors lose their code on the way between threads, so failures travel as values. */
+export type TaskAnswer<Value> =
+  | { readonly ok: true; readonly value: Value }
+  | {
+      readonly ok: false
+      readonly kind: 'input'
+      readonly code: string
+      readonly message: string
+      readonly path: string
+      readonly found: unknown
+    }
+  | { readonly ok: false; readonly kind: 'bug'; readonly message: string; readonly stack: string | undefined }

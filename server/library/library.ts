@@ -1,0 +1,119 @@
+import type { DataSource } from 'typeorm'
+import type { Logger } from 'pino'
+import type { FactsOrProblem } from '../jobs/compute/importBlocks.ts'
+import type { PolytopeFacts } from '../jobs/compute/polytopeFacts.ts'
+import type { ComputePool } from '../jobs/computePool.ts'
+import type { Scheduler, WorkSource } from '../jobs/scheduler.ts'
+import { loadedOf, storeBundled } from '../services/libraryRows.ts'
+import type { Streams } from '../streams.ts'
+import type { WriteLock } from '../writeLock.ts'
+import { readBundledFile, type BundledFile, type BundledPolytope } from './bundled.ts'
+
+const stretchLength = 40
+
+interface LibraryParts {
+  readonly source: DataSource
+  readonly writes: WriteLock
+  readonly streams: Streams
+  readonly scheduler: Scheduler
+  readonly pool: ComputePool
+  readonly log: Logger
+}
+
+/**
+ * The bundled polytopes. At first start their normal forms and Hodge numbers are computed in the worker threads,
+ * in turn with the searches; what the files say about them is checked, not trusted.
+ */
+export class Library {
+  readonly #parts: LibraryParts
+  #loaded = 0
+  #total = 0
+
+  constructor(parts: LibraryParts) {
+    this.#parts = parts
+  }
+
+  /** How far loading has come; null when there is nothing left to load. */
+  get loading(): { loaded: number; total: number } | null {
+    return this.#loaded < this.#total ? { loaded: this.#loaded, total: this.#total } : null
+  }
+
+  /** Announces files to be loaded, so that progress is told over all of them. */
+  async open(places: readonly URL[]): Promise<BundledFile[]> {
+    const files = places.map(readBundledFile)
+    for (const file of files) {
+      this.#total += file.polytopes.length
+      this.#loaded += await loadedOf(this.#parts.source.manager, file)
+    }
+    return files
+  }
+
+  /** Loads what is missing of files that were announced, one after the other. */
+  async load(files: readonly BundledFile[]): Promise<void> {
+    for (const file of files) {
+      const from = await loadedOf(this.#parts.source.manager, file)
+      if (from < file.polytopes.length) await this.#loadFrom(file, from)
+    }
+  }
+
+  #loadFrom(file: BundledFile, from: number): Promise<void> {
+    const { scheduler, pool, writes, streams, log } = this.#parts
+    let cursor = from
+    let failed = false
+    // Stretches may be computed side by side, but are stored in order: the stored count must have no gaps.
+    let stored: Promise<void> = Promise.resolve()
+    return new Promise((resolve, reject) => {
+      const end = (outcome: () => void) => {
+        scheduler.remove(source)
+        outcome()
+      }
+      const source: WorkSource = {
+        campaignId: 'library',
+        next: () => {
+          if (failed || cursor >= file.polytopes.length) return null
+          const stretch = file.polytopes.slice(cursor, cursor + stretchLength)
+          cursor += stretch.length
+          const loaded = cursor
+          const computed = pool.run('facts-of-each', { points: stretch.map(({ vertices }) => vertices) })
+          // Its failure is met below, after the stretches before it.
+          computed.catch(() => undefined)
+          const before = stored
+          stored = (async () => {
+            await before
+            const answers = await computed
+            const rows = stretch.map((source, i) => ({ source, facts: assertedFacts(source, answers[i]) }))
+            await writes.transaction((manager) => storeBundled(manager, file, rows, loaded))
+            this.#loaded += stretch.length
+            streams.toAll({ kind: 'library', loaded: this.#loaded, total: this.#total })
+            if (loaded === file.polytopes.length) end(resolve)
+          })()
+          stored.catch((error: unknown) => {
+            if (failed) return
+            failed = true
+            log.warn({ file: file.name, err: error }, 'loading the bundled library stopped')
+            end(() => reject(error))
+          })
+          return computed.then(
+            () => undefined,
+            () => undefined,
+          )
+        },
+      }
+      scheduler.add(source)
+    })
+  }
+}
+
+/** The engine's facts, after a comparison with what the file states. */
+function assertedFacts(stated: BundledPolytope, answer: FactsOrProblem): PolytopeFacts {
+  const { facts, problem } = answer
+  if (!facts) throw new Error(`Bundled polytope ${stated.id} is refused: ${problem.message}`)
+  for (const name of ['h11', 'h21', 'latticePoints', 'dualLatticePoints', 'favourable'] as const) {
+    if (stated[name] !== facts[name]) {
+      throw new Error(
+        `Bundled polytope ${stated.id}: ${name} is ${facts[name]}, the file says ${stated[name]}.`,
+      )
+    }
+  }
+  return facts
+}

@@ -1,0 +1,51 @@
+import type { NullSummary } from '../../shared/nullSamples.ts'
+import type { ScoredRow } from '../../shared/outcomes.ts'
+import type { SearchDetail, SearchSummary } from '../../shared/searches.ts'
+import type { Search } from '../entities/search.ts'
+
+/** @param search with author, target version and target loaded */
+export function presentSearchSummary(search: Search): SearchSummary {
+  const version = search.targetVersion
+  return {
+    id: search.id,
+    name: search.name,
+    state: search.state,
+    method: search.method,
+    targetId: version?.targetId ?? '',
+    targetName: version?.target?.name ?? '',
+    targetVersion: version?.number ?? 0,
+    polytopes: search.polytopeKeys.length,
+    budget: search.budget,
+    seed: search.seed,
+    evaluations: search.evaluations,
+    best: search.best,
+    createdAt: search.createdAt,
+    finishedAt: search.finishedAt,
+    author: search.author?.name ?? '',
+  }
+}
+
+export interface SearchSurroundings {
+  readonly nullSummary: NullSummary | null
+  readonly top: readonly ScoredRow[]
+  readonly shortlists: readonly { readonly id: string; readonly name: string }[]
+}
+
+export function presentSearch(search: Search, around: SearchSurroundings): SearchDetail {
+  return {
+    ...presentSearchSummary(search),
+    targetVersionId: search.targetVersionId,
+    rule: search.targetVersion?.text ?? '',
+    scoringHash: search.scoringHash,
+    engineVersion: search.engineVersion,
+    scope: search.scope,
+    islands: search.islands,
+    keep: search.keep,
+    progress: search.progress,
+    null: around.nullSummary,
+    top: [...around.top],
+    failure:
+      search.failureCode === null ? null : { code: search.failureCode, message: search.failureMessage ?? '' },
+    shortlists: around.shortlists.map(({ id, name }) => ({ id, name })),
+  }
+}

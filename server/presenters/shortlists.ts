@@ -1,0 +1,71 @@
+import type { ShortlistDetail, ShortlistRow, ShortlistSummary } from '../../shared/shortlists.ts'
+import type { Search } from '../entities/search.ts'
+import type { Shortlist } from '../entities/shortlist.ts'
+import type { ShortlistEntry } from '../entities/shortlistEntry.ts'
+import type { Verdict } from '../entities/verdict.ts'
+import { presentVerdict } from './verdicts.ts'
+
+export interface Tally {
+  readonly size: number
+  readonly verified: number
+  readonly rejected: number
+}
+
+/** @param shortlist with author, target version and target loaded */
+export function presentShortlistSummary(shortlist: Shortlist, tally: Tally): ShortlistSummary {
+  const version = shortlist.targetVersion
+  return {
+    id: shortlist.id,
+    name: shortlist.name,
+    targetId: version?.targetId ?? '',
+    targetName: version?.target?.name ?? '',
+    targetVersion: version?.number ?? 0,
+    targetVersionId: shortlist.targetVersionId,
+    size: tally.size,
+    undecided: tally.size - tally.verified - tally.rejected,
+    verified: tally.verified,
+    rejected: tally.rejected,
+    createdAt: shortlist.createdAt,
+    author: shortlist.author?.name ?? '',
+  }
+}
+
+export interface ShortlistContents {
+  readonly tally: Tally
+  readonly searches: readonly Search[]
+  /** By rank, with candidate and polytope loaded. */
+  readonly entries: readonly ShortlistEntry[]
+  /** The latest verdict per candidate key. */
+  readonly verdicts: ReadonlyMap<string, Verdict>
+  /** The campaign's own names of its imports, by polytope key. */
+  readonly names: ReadonlyMap<string, string>
+}
+
+export function presentShortlist(shortlist: Shortlist, contents: ShortlistContents): ShortlistDetail {
+  return {
+    ...presentShortlistSummary(shortlist, contents.tally),
+    rule: shortlist.targetVersion?.text ?? '',
+    scoringHash: shortlist.scoringHash,
+    engineVersion: shortlist.engineVersion,
+    columns: shortlist.columns,
+    searches: contents.searches.map(({ id, name, seed }) => ({ id, name, seed })),
+    rows: contents.entries.map((entry) => presentEntry(entry, contents)),
+  }
+}
+
+function presentEntry(entry: ShortlistEntry, { verdicts, names }: ShortlistContents): ShortlistRow {
+  const polytope = entry.candidate?.polytope
+  if (!polytope) throw new Error('A shortlist entry was presented without its polytope.')
+  const verdict = verdicts.get(entry.candidateKey)
+  return {
+    rank: entry.rank,
+    candidateKey: entry.candidateKey,
+    polytopeKey: polytope.key,
+    polytopeName: names.get(polytope.key) ?? polytope.name,
+    h11: polytope.h11,
+    h21: polytope.h21,
+    outcome: entry.outcome,
+    searchId: entry.searchId,
+    verdict: verdict ? presentVerdict(verdict) : null,
+  }
+}

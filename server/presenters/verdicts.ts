@@ -1,0 +1,18 @@
+import type { Verdict as VerdictView } from '../../shared/verdicts.ts'
+import type { Verdict } from '../entities/verdict.ts'
+
+/** @param verdict with author, target version and target loaded */
+export function presentVerdict(verdict: Verdict): VerdictView {
+  const version = verdict.targetVersion
+  return {
+    id: String(verdict.id),
+    value: verdict.value,
+    reason: verdict.reason,
+    override: verdict.override,
+    author: verdict.author?.name ?? '',
+    createdAt: verdict.createdAt,
+    targetId: version?.targetId ?? '',
+    targetName: version?.target?.name ?? '',
+    targetVersion: version?.number ?? 0,
+  }
+}

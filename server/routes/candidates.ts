@@ -1,0 +1,40 @@
+import type { Express } from 'express'
+import { candidateGeometrySchema, candidateRecordSchema } from '../../shared/candidates.ts'
+import { giveVerdictSchema, verdictSchema } from '../../shared/verdicts.ts'
+import type { ServerContext } from '../context.ts'
+import { endpoint } from '../http/endpoint.ts'
+import { presentVerdict } from '../presenters/verdicts.ts'
+import { readCandidateRecord } from '../services/candidates.ts'
+import { readCandidateGeometry } from '../services/geometry.ts'
+import { giveVerdict } from '../services/verdicts.ts'
+
+export function candidateRoutes(app: Express, context: ServerContext): void {
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/candidates/:key',
+    access: 'account',
+    answer: candidateGeometrySchema,
+    handle: ({ account, params }) => readCandidateGeometry(context, account.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/campaigns/:campaign/candidates/:key',
+    access: 'campaign.read',
+    answer: candidateRecordSchema,
+    handle: ({ campaign, params }) => readCandidateRecord(context.source.manager, campaign.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/candidates/:key/verdicts',
+    access: 'verdicts.give',
+    body: giveVerdictSchema,
+    answer: verdictSchema,
+    status: 201,
+    handle: async ({ campaign, account, params, body }) =>
+      presentVerdict(
+        await giveVerdict(context, { campaignId: campaign.id, candidateKey: params.key }, account.id, body),
+      ),
+  })
+}

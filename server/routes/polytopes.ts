@@ -1,0 +1,137 @@
+import type { Express } from 'express'
+import multer from 'multer'
+import {
+  hodgeCountsSchema,
+  importReportSchema,
+  importTextSchema,
+  importWeightsSchema,
+  pastedLimitBytes,
+  polytopeDetailSchema,
+  polytopePageSchema,
+  polytopeQuerySchema,
+  scopeSchema,
+  scopeSummarySchema,
+  uploadLimitBytes,
+} from '../../shared/polytopes.ts'
+import type { ServerContext } from '../context.ts'
+import { Membership } from '../entities/membership.ts'
+import { endpoint } from '../http/endpoint.ts'
+import { presentPolytopeRow } from '../presenters/polytopes.ts'
+import { notFound, Refusal, unprocessable } from '../problems.ts'
+import { readPolytopeDetail } from '../services/geometry.ts'
+import { importText, importWeights } from '../services/imports.ts'
+import { countByHodge, listPolytopes, type Viewer } from '../services/polytopes.ts'
+import { summariseScope } from '../services/scopes.ts'
+
+const upload = multer({
+  storage: multer.memoryStorage(),
+  limits: { fileSize: uploadLimitBytes, files: 1, fields: 4 },
+})
+
+const viewSchema = polytopeQuerySchema.pick({ campaign: true })
+
+/** A pasted text may grow when it is written as JSON: each line break takes two characters. */
+const pastedBodyLimit = 3 * pastedLimitBytes
+
+export function polytopeRoutes(app: Express, context: ServerContext): void {
+  const { manager } = context.source
+
+  /** The library beside one campaign's imports, or beside those of all the account's campaigns. */
+  const viewerOf = async (accountId: string, campaignId: string | undefined): Promise<Viewer> => {
+    if (campaignId === undefined) return { accountId }
+    const member = await manager.existsBy(Membership, { campaignId, accountId })
+    if (!member) throw notFound('campaign')
+    return { campaignId }
+  }
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/polytopes',
+    access: 'account',
+    query: polytopeQuerySchema,
+    answer: polytopePageSchema,
+    handle: async ({ account, query }) => {
+      const { campaign, sort, order, offset, limit, ...filter } = query
+      const viewer = await viewerOf(account.id, campaign)
+      const { total, rows } = await listPolytopes(manager, viewer, filter, { sort, order, offset, limit })
+      return { total, rows: rows.map(presentPolytopeRow) }
+    },
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/polytopes/hodge',
+    access: 'account',
+    query: polytopeQuerySchema,
+    answer: hodgeCountsSchema,
+    handle: async ({ account, query }) => {
+      const viewer = await viewerOf(account.id, query.campaign)
+      const counts = await countByHodge(manager, viewer, query)
+      const total = counts.reduce((sum, { count }) => sum + count, 0)
+      return { total, counts, loading: context.library.loading }
+    },
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/polytopes/:key',
+    access: 'account',
+    query: viewSchema,
+    answer: polytopeDetailSchema,
+    handle: async ({ account, params, query }) =>
+      readPolytopeDetail(context, await viewerOf(account.id, query.campaign), params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/polytopes',
+    access: 'polytopes.import',
+    body: importTextSchema,
+    bodyLimit: pastedBodyLimit,
+    answer: importReportSchema,
+    status: 201,
+    handle: ({ campaign, account, body }) =>
+      importText(context, campaign.id, account.id, body.text, body.name),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/polytopes/upload',
+    access: 'polytopes.import',
+    before: upload.single('file'),
+    answer: importReportSchema,
+    status: 201,
+    handle: ({ campaign, account, request }) => {
+      const { file } = request
+      if (!file) throw unprocessable('no-file', 'Send the file in the field "file".', { path: 'file' })
+      return importText(context, campaign.id, account.id, decode(file.buffer), undefined)
+    },
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/polytopes/weights',
+    access: 'polytopes.import',
+    body: importWeightsSchema,
+    answer: importReportSchema,
+    status: 201,
+    handle: ({ campaign, account, body }) => importWeights(context, campaign.id, account.id, body),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/scope',
+    access: 'campaign.read',
+    body: scopeSchema,
+    answer: scopeSummarySchema,
+    handle: ({ campaign, body }) => summariseScope(manager, campaign.id, body),
+  })
+}
+
+function decode(bytes: Buffer): string {
+  try {
+    return new TextDecoder('utf-8', { fatal: true }).decode(bytes)
+  } catch {
+    throw new Refusal(422, 'not-text', 'The file is not a text file in UTF-8.', { path: 'file' })
+  }
+}

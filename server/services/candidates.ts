@@ -1,0 +1,86 @@
+import { Brackets, type EntityManager } from 'typeorm'
+import type { CandidateRecord as CandidateRecordView } from '../../shared/candidates.ts'
+import { CandidateRecord } from '../entities/candidate.ts'
+import { ShortlistEntry } from '../entities/shortlistEntry.ts'
+import { presentVerdict } from '../presenters/verdicts.ts'
+import { notFound } from '../problems.ts'
+import type { Viewer } from './polytopes.ts'
+import { listVerdicts } from './verdicts.ts'
+
+/** A stored candidate on a polytope that the viewer may see, with the polytope loaded. */
+export async function readVisibleCandidate(
+  manager: EntityManager,
+  viewer: Viewer,
+  key: string,
+): Promise<CandidateRecord> {
+  const imports =
+    'campaignId' in viewer
+      ? 'SELECT i.polytopeKey FROM campaign_polytope i WHERE i.campaignId = :campaignId'
+      : `SELECT i.polytopeKey FROM campaign_polytope i JOIN membership m ON m.campaignId = i.campaignId
+         WHERE m.accountId = :accountId`
+  const candidate = await manager
+    .createQueryBuilder(CandidateRecord, 'candidate')
+    .innerJoinAndSelect('candidate.polytope', 'polytope')
+    .where('candidate.key = :key', { key })
+    .andWhere(
+      new Brackets((either) =>
+        either.where("polytope.origin = 'bundled'").orWhere(`polytope.key IN (${imports})`, viewer),
+      ),
+    )
+    .getOne()
+  if (candidate === null) throw notFound('candidate')
+  return candidate
+}
+
+export function readCampaignCandidate(
+  manager: EntityManager,
+  campaignId: string,
+  key: string,
+): Promise<CandidateRecord> {
+  return readVisibleCandidate(manager, { campaignId }, key)
+}
+
+/** What a campaign knows of a candidate: its places in shortlists and the verdicts on it. */
+export async function readCandidateRecord(
+  manager: EntityManager,
+  campaignId: string,
+  key: string,
+): Promise<CandidateRecordView> {
+  await readCampaignCandidate(manager, campaignId, key)
+  const entries = await manager.find(ShortlistEntry, {
+    where: { candidateKey: key, shortlist: { campaignId } },
+    relations: { shortlist: { targetVersion: { target: true } }, search: true },
+    order: { shortlist: { createdAt: 'DESC' } },
+  })
+  const appearances: CandidateRecordView['appearances'] = []
+  for (const entry of entries) {
+    const shortlist = entry.shortlist
+    const version = shortlist?.targetVersion
+    if (!shortlist || !version || !entry.search) continue
+    const keyAt = async (rank: number) => {
+      const neighbour = await manager.findOneBy(ShortlistEntry, { shortlistId: shortlist.id, rank })
+      return neighbour?.candidateKey ?? null
+    }
+    appearances.push({
+      shortlistId: shortlist.id,
+      shortlistName: shortlist.name,
+      rank: entry.rank,
+      size: await manager.countBy(ShortlistEntry, { shortlistId: shortlist.id }),
+      targetId: version.targetId,
+      targetName: version.target?.name ?? '',
+      targetVersion: version.number,
+      targetVersionId: version.id,
+      rule: version.text,
+      scoringHash: shortlist.scoringHash,
+      engineVersion: shortlist.engineVersion,
+      outcome: entry.outcome,
+      searchId: entry.searchId,
+      searchName: entry.search.name,
+      searchSeed: entry.search.seed,
+      previousKey: await keyAt(entry.rank - 1),
+      nextKey: await keyAt(entry.rank + 1),
+    })
+  }
+  const verdicts = await listVerdicts(manager, campaignId, key)
+  return { key, appearances, verdicts: verdicts.map(presentVerdict) }
+}

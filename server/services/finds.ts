@@ -1,0 +1,85 @@
+import { In, type EntityManager } from 'typeorm'
+import { compareOutcomes, type Infeasible, type Outcome } from '../../scoring/index.ts'
+import type { OutcomeView, ScoredRow } from '../../shared/outcomes.ts'
+import { CandidateValue } from '../entities/candidateValue.ts'
+import { Find } from '../entities/find.ts'
+import type { Search } from '../entities/search.ts'
+
+/** A find with its value; `candidate` and its polytope are loaded. */
+export interface RankedFind {
+  readonly searchId: string
+  readonly candidateKey: string
+  readonly outcome: OutcomeView
+  readonly find: Find
+}
+
+/** The order of candidates of the scoring language: negative when a is better. */
+export function compareCandidates(
+  a: { readonly candidateKey: string; readonly outcome: OutcomeView },
+  b: { readonly candidateKey: string; readonly outcome: OutcomeView },
+): number {
+  return compareOutcomes(comparable(a.outcome), a.candidateKey, comparable(b.outcome), b.candidateKey)
+}
+
+/** What the order looks at; reports and labels play no part in it. */
+function comparable(outcome: OutcomeView): Outcome {
+  if (outcome.kind === 'feasible') return { ...outcome, report: {} }
+  if (outcome.kind === 'infeasible')
+    return { ...outcome, stage: outcome.stage as Infeasible['stage'], failed: [] }
+  return { ...outcome, stage: outcome.stage as Infeasible['stage'] }
+}
+
+/** The distinct finds of searches with one scoring hash, best first; of equal finds the earlier search's. */
+export async function rankedFinds(
+  manager: EntityManager,
+  searches: readonly Search[],
+): Promise<RankedFind[]> {
+  const order = new Map(searches.map(({ id }, place) => [id, place]))
+  const finds = await manager.find(Find, {
+    where: { searchId: In([...order.keys()]) },
+    relations: { candidate: { polytope: true } },
+  })
+  finds.sort((a, b) => (order.get(a.searchId) ?? 0) - (order.get(b.searchId) ?? 0) || a.rank - b.rank)
+  const distinct = new Map<string, Find>()
+  for (const find of finds) if (!distinct.has(find.candidateKey)) distinct.set(find.candidateKey, find)
+  const outcomes = await outcomesOf(manager, searches[0].scoringHash, [...distinct.keys()])
+  return [...distinct.values()]
+    .flatMap((find) => {
+      const outcome = outcomes.get(find.candidateKey)
+      return outcome ? [{ searchId: find.searchId, candidateKey: find.candidateKey, outcome, find }] : []
+    })
+    .sort(compareCandidates)
+}
+
+/** The best finds of one search so far. */
+export async function topFinds(manager: EntityManager, search: Search, count: number): Promise<ScoredRow[]> {
+  const finds = await manager.find(Find, {
+    where: { searchId: search.id },
+    relations: { candidate: { polytope: true } },
+    order: { rank: 'ASC' },
+    take: count,
+  })
+  const keys = finds.map(({ candidateKey }) => candidateKey)
+  const outcomes = await outcomesOf(manager, search.scoringHash, keys)
+  return finds.flatMap(({ candidateKey, candidate }) => {
+    const outcome = outcomes.get(candidateKey)
+    const polytope = candidate?.polytope
+    if (!outcome || !polytope) return []
+    return [{ candidateKey, polytopeKey: polytope.key, h11: polytope.h11, h21: polytope.h21, outcome }]
+  })
+}
+
+async function outcomesOf(
+  manager: EntityManager,
+  scoringHash: string,
+  candidateKeys: readonly string[],
+): Promise<Map<string, OutcomeView>> {
+  const values = await manager.findBy(CandidateValue, { scoringHash, candidateKey: In([...candidateKeys]) })
+  return new Map(values.map(({ candidateKey, outcome }) => [candidateKey, outcome]))
+}
+
+/** A rule without `hit` counts what lies above the null's 99 % quantile, once that is known. */
+export function withNullHit(outcome: OutcomeView, hasHit: boolean, quantile99: number | null): OutcomeView {
+  if (outcome.kind !== 'feasible' || hasHit || quantile99 === null) return outcome
+  return { ...outcome, hit: outcome.score > quantile99 }
+}

@@ -1,0 +1,99 @@
+import type { EntityManager } from 'typeorm'
+import type { ImportReport } from '../../shared/polytopes.ts'
+import type { ServerContext } from '../context.ts'
+import { CampaignPolytope } from '../entities/campaignPolytope.ts'
+import { PolytopeRecord } from '../entities/polytope.ts'
+import type { PolytopeFacts } from '../jobs/compute/polytopeFacts.ts'
+import { unprocessable } from '../problems.ts'
+
+/** Polytopes in one pasted or uploaded text. */
+export const importLimit = 5_000
+
+/** Blocks per piece of work on the interactive thread, which previews share. */
+const stretchLength = 20
+
+interface Importer {
+  readonly campaignId: string
+  readonly authorId: string
+}
+
+type Imported = ImportReport['imported'][number]
+type Problem = ImportReport['problems'][number]
+
+/** Imports every reflexive polytope of a text and reports every block that is none, with its line. */
+export async function importText(
+  { jobs, writes }: ServerContext,
+  campaignId: string,
+  authorId: string,
+  text: string,
+  name: string | undefined,
+): Promise<ImportReport> {
+  const { polytopes: blocks, problems: unread } = await jobs.interactive.run('point-blocks', { text })
+  if (blocks.length > importLimit) {
+    throw unprocessable('too-many-polytopes', `At most ${importLimit} polytopes can be imported at once.`, {
+      path: 'text',
+      found: blocks.length,
+    })
+  }
+  if (blocks.length === 0 && unread.length === 0) {
+    throw unprocessable('no-points', 'The text holds no matrix of integer points.', { path: 'text' })
+  }
+  const imported: Imported[] = []
+  const problems: Problem[] = unread.map(({ line, code, message }) => ({ line, code, message }))
+  for (let from = 0; from < blocks.length; from += stretchLength) {
+    const stretch = blocks.slice(from, from + stretchLength)
+    const answers = await jobs.interactive.run('facts-of-each', { points: stretch.map(({ rows }) => rows) })
+    await writes.transaction(async (manager) => {
+      for (const [i, { facts, problem }] of answers.entries()) {
+        const { line } = stretch[i]
+        if (problem) {
+          problems.push({ line, ...problem })
+          continue
+        }
+        const number = blocks.length === 1 ? '' : ` ${from + i + 1}`
+        const wanted = name === undefined || name === '' ? undefined : `${name}${number}`
+        imported.push({ line, ...(await store(manager, { campaignId, authorId }, facts, wanted, null)) })
+      }
+    })
+  }
+  problems.sort((a, b) => (a.line ?? 0) - (b.line ?? 0))
+  return { imported, problems }
+}
+
+/** Imports the polytope of a weight system. Mistakes are refusals (422): there is nothing else to report on. */
+export async function importWeights(
+  { jobs, writes }: ServerContext,
+  campaignId: string,
+  authorId: string,
+  input: { weights: number[]; side: 'fan' | 'newton'; name?: string },
+): Promise<ImportReport> {
+  const { weights, side } = input
+  const facts = await jobs.interactive.run('facts-of-weights', { weights, side })
+  const name = input.name || `${weights.join(' ')} ${side}`
+  const imported = await writes.transaction((manager) =>
+    store(manager, { campaignId, authorId }, facts, name, { weights, side }),
+  )
+  return { imported: [{ line: null, ...imported }], problems: [] }
+}
+
+async function store(
+  manager: EntityManager,
+  { campaignId, authorId }: Importer,
+  facts: PolytopeFacts,
+  wanted: string | undefined,
+  origin: { weights: number[]; side: 'fan' | 'newton' } | null,
+): Promise<Omit<Imported, 'line'>> {
+  const { key, h11, h21 } = facts
+  const name = wanted ?? `(${h11}, ${h21}) ${key.slice(0, 6)}`
+  const existing = await manager.findOneBy(PolytopeRecord, { key })
+  if (existing?.origin === 'bundled') return { key, name: existing.name, h11, h21, known: true }
+  const own = await manager.findOneBy(CampaignPolytope, { campaignId, polytopeKey: key })
+  if (own !== null) return { key, name: own.name, h11, h21, known: true }
+  if (existing === null) {
+    const { weights, side } = origin ?? { weights: null, side: null }
+    await manager.insert(PolytopeRecord, { ...facts, name, origin: 'imported', weights, side })
+  }
+  const createdAt = new Date().toISOString()
+  await manager.insert(CampaignPolytope, { campaignId, polytopeKey: key, name, authorId, createdAt })
+  return { key, name, h11, h21, known: false }
+}

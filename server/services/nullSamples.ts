@@ -1,0 +1,62 @@
+import { randomUUID } from 'node:crypto'
+import type { EntityManager } from 'typeorm'
+import type { NullSummary } from '../../shared/nullSamples.ts'
+import { NullSample } from '../entities/nullSample.ts'
+import { Search } from '../entities/search.ts'
+import type { NullChunkOutput } from '../jobs/nullChunk.ts'
+
+/** Where a null sample lies: the same for all searches of one rule over one scope. */
+export type NullAddress = Pick<Search, 'scopeHash' | 'scoringHash'>
+
+/** The null sample of a search's scope and rule, as far as it has come; null before its first piece. */
+export async function readNullSummary(
+  manager: EntityManager,
+  { scopeHash, scoringHash }: NullAddress,
+): Promise<NullSummary | null> {
+  const sample = await manager.findOneBy(NullSample, { scopeHash, scoringHash })
+  return sample?.summary ?? null
+}
+
+/** The sample at an address, begun when there is none. */
+export async function openNullSample(
+  manager: EntityManager,
+  { scopeHash, scoringHash }: NullAddress,
+  { seed, size }: { readonly seed: number; readonly size: number },
+): Promise<NullSample> {
+  const known = await manager.findOneBy(NullSample, { scopeHash, scoringHash })
+  if (known !== null) return known
+  const sample = manager.create(NullSample, {
+    id: randomUUID(),
+    scopeHash,
+    scoringHash,
+    seed,
+    size,
+    complete: false,
+    state: null,
+    summary: null,
+    failure: null,
+  })
+  await manager.insert(NullSample, sample)
+  return sample
+}
+
+/** The state is dropped when the sample is complete: the summary is all that is used then. */
+export async function commitNullChunk(
+  manager: EntityManager,
+  id: string,
+  { state, summary, done }: NullChunkOutput,
+): Promise<void> {
+  await manager.update(NullSample, { id }, { state: done ? null : state, summary, complete: done })
+}
+
+export async function failNullSample(manager: EntityManager, id: string, failure: string): Promise<void> {
+  await manager.update(NullSample, { id }, { failure })
+}
+
+/** The searches that are compared with a null sample. */
+export function searchesAgainst(
+  manager: EntityManager,
+  { scopeHash, scoringHash }: NullAddress,
+): Promise<Search[]> {
+  return manager.find(Search, { select: { id: true, campaignId: true }, where: { scopeHash, scoringHash } })
+}

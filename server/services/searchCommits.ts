@@ -1,0 +1,156 @@
+import { In, type EntityManager } from 'typeorm'
+import type { SearchProgress } from '../../shared/searches.ts'
+import { CandidateRecord } from '../entities/candidate.ts'
+import { CandidateValue } from '../entities/candidateValue.ts'
+import { Find } from '../entities/find.ts'
+import { Search } from '../entities/search.ts'
+import { SearchIsland } from '../entities/searchIsland.ts'
+import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
+import type { SegmentFind, SegmentOutput } from '../jobs/segment.ts'
+
+/** A find of a search with the lowest island that made it. */
+export interface IslandFind extends SegmentFind {
+  readonly island: number
+}
+
+export interface SegmentCommit {
+  readonly searchId: string
+  readonly scoringHash: string
+  readonly island: number
+  /** Segments this island had committed when the segment began. */
+  readonly segment: number
+  readonly output: SegmentOutput
+  readonly progress: SearchProgress
+  /** The search's best distinct candidates, when they changed. */
+  readonly finds: readonly IslandFind[] | null
+  readonly finished: boolean
+}
+
+/**
+ * Commits a segment: the island's state, the search's progress and its finds, all or nothing. A segment that
+ * ended after the search was paused is kept, too; one of a cancelled search is not. Returns the search's state
+ * afterwards, or null when nothing was committed.
+ */
+export async function commitSegment(
+  manager: EntityManager,
+  commit: SegmentCommit,
+): Promise<Search['state'] | null> {
+  const { searchId, island, segment, output, progress, finds } = commit
+  const search = await manager.findOne(Search, { select: { id: true, state: true }, where: { id: searchId } })
+  if (search === null || search.state === 'cancelled') return null
+  const { affected } = await manager.update(
+    SearchIsland,
+    { searchId, number: island, segment },
+    {
+      segment: segment + 1,
+      state: output.state,
+      progress: JSON.stringify(output.progress),
+      done: output.done,
+    },
+  )
+  if (affected === 0) return null
+  if (finds !== null) await storeFinds(manager, commit.searchId, commit.scoringHash, finds)
+  const active = search.state === 'running' || search.state === 'queued'
+  const state = commit.finished ? 'finished' : active ? 'running' : search.state
+  const holding = state === 'running'
+  await manager.update(
+    Search,
+    { id: searchId },
+    {
+      state,
+      progress,
+      evaluations: progress.evaluations,
+      best: progress.best,
+      workMilliseconds: () => `workMilliseconds + ${Math.round(output.milliseconds)}`,
+      leaseOwner: holding ? thisProcess : null,
+      leaseUntil: holding ? Date.now() + leaseMilliseconds : null,
+      ...(state === 'finished' ? { finishedAt: new Date().toISOString() } : {}),
+    },
+  )
+  return state
+}
+
+/** Takes a queued or abandoned search for this process; false when it was paused or cancelled meanwhile. */
+export async function takeLease(manager: EntityManager, searchId: string): Promise<boolean> {
+  const { affected } = await manager.update(
+    Search,
+    { id: searchId, state: In(['queued', 'running']) },
+    { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
+  )
+  return affected !== 0
+}
+
+/** Keeps what was committed, and says why the search cannot go on. */
+export async function failSearch(
+  manager: EntityManager,
+  searchId: string,
+  failure: { readonly code: string; readonly message: string },
+): Promise<void> {
+  await manager.update(
+    Search,
+    { id: searchId, state: In(['queued', 'running']) },
+    {
+      state: 'failed',
+      failureCode: failure.code,
+      failureMessage: failure.message,
+      leaseOwner: null,
+      leaseUntil: null,
+      finishedAt: new Date().toISOString(),
+    },
+  )
+}
+
+async function storeFinds(
+  manager: EntityManager,
+  searchId: string,
+  scoringHash: string,
+  finds: readonly IslandFind[],
+): Promise<void> {
+  const before = await manager.find(Find, { where: { searchId } })
+  const known = new Set(before.map(({ candidateKey }) => candidateKey))
+  const fresh = finds.filter(({ candidateKey }) => !known.has(candidateKey))
+  await storeCandidates(manager, scoringHash, fresh)
+  await manager.delete(Find, { searchId })
+  for (let from = 0; from < finds.length; from += 200) {
+    await manager.insert(
+      Find,
+      finds.slice(from, from + 200).map(({ candidateKey, island }, place) => ({
+        searchId,
+        candidateKey,
+        rank: from + place + 1,
+        island,
+      })),
+    )
+  }
+}
+
+/** Candidates are stored once; their values once per scoring hash. */
+export async function storeCandidates(
+  manager: EntityManager,
+  scoringHash: string,
+  finds: readonly SegmentFind[],
+): Promise<void> {
+  for (let from = 0; from < finds.length; from += 100) {
+    const batch = finds.slice(from, from + 100)
+    await manager
+      .createQueryBuilder()
+      .insert()
+      .into(CandidateRecord)
+      .values(
+        batch.map(({ candidateKey: key, polytopeKey, heights }) => ({
+          key,
+          polytopeKey,
+          heights: [...heights],
+        })),
+      )
+      .orIgnore()
+      .execute()
+    await manager
+      .createQueryBuilder()
+      .insert()
+      .into(CandidateValue)
+      .values(batch.map(({ candidateKey, outcome }) => ({ candidateKey, scoringHash, outcome })))
+      .orIgnore()
+      .execute()
+  }
+}

@@ -1,0 +1,189 @@
+import { randomUUID } from 'node:crypto'
+import { In, type EntityManager } from 'typeorm'
+import type { CreateSearch, SearchDetail, SearchProgress, SearchState } from '../../shared/searches.ts'
+import type { ServerContext } from '../context.ts'
+import { Search } from '../entities/search.ts'
+import { SearchIsland } from '../entities/searchIsland.ts'
+import { Shortlist } from '../entities/shortlist.ts'
+import { presentSearch } from '../presenters/searches.ts'
+import { conflict, notFound } from '../problems.ts'
+import { topFinds } from './finds.ts'
+import { readNullSummary } from './nullSamples.ts'
+import { requireSoundRule } from './rules.ts'
+import { resolveScope, scopeHash } from './scopes.ts'
+import { readVersion } from './targets.ts'
+
+const withWords = { author: true, targetVersion: { target: true } } as const
+
+/** Newest first. */
+export function listSearches(manager: EntityManager, campaignId: string): Promise<Search[]> {
+  return manager.find(Search, {
+    where: { campaignId },
+    relations: withWords,
+    order: { createdAt: 'DESC', id: 'ASC' },
+  })
+}
+
+export async function readSearch(
+  manager: EntityManager,
+  campaignId: string,
+  searchId: string,
+): Promise<SearchDetail> {
+  const search = await manager.findOne(Search, { where: { campaignId, id: searchId }, relations: withWords })
+  if (search === null) throw notFound('search')
+  const shortlists = await manager.find(Shortlist, { where: { campaignId }, order: { createdAt: 'ASC' } })
+  return presentSearch(search, {
+    nullSummary: await readNullSummary(manager, search),
+    top: await topFinds(manager, search, 20),
+    shortlists: shortlists.filter(({ searchIds }) => searchIds.includes(search.id)),
+  })
+}
+
+/**
+ * Queues a search: its rule is checked, and the polytopes its scope holds now are written down. With the same
+ * polytopes, rule, method, budget, islands and seed it gives the same result.
+ */
+export async function createSearch(
+  context: ServerContext,
+  campaignId: string,
+  authorId: string,
+  input: CreateSearch,
+): Promise<SearchDetail> {
+  const { source, writes, streams, jobs } = context
+  const version = await readVersion(source.manager, campaignId, input.targetVersionId)
+  const { scoringHash, engineVersion } = requireSoundRule(version.text, 'targetVersionId')
+  const polytopes = await resolveScope(source.manager, campaignId, input.scope)
+  const polytopeKeys = polytopes.map(({ key }) => key)
+  const id = randomUUID()
+  await writes.transaction(async (manager) => {
+    const earlier = await manager.countBy(Search, { campaignId })
+    await manager.insert(Search, {
+      id,
+      campaignId,
+      targetVersionId: version.id,
+      name: input.name || `${version.target.name}, search ${earlier + 1}`,
+      method: input.method,
+      scope: input.scope,
+      polytopeKeys,
+      scopeHash: scopeHash(polytopeKeys),
+      budget: input.budget,
+      seed: input.seed,
+      islands: input.islands,
+      keep: input.keep,
+      scoringHash,
+      engineVersion,
+      state: 'queued',
+      failureCode: null,
+      failureMessage: null,
+      progress: emptyProgress(input.islands),
+      evaluations: 0,
+      best: null,
+      workMilliseconds: 0,
+      leaseOwner: null,
+      leaseUntil: null,
+      authorId,
+      createdAt: new Date().toISOString(),
+      finishedAt: null,
+    })
+    await manager.insert(
+      SearchIsland,
+      Array.from({ length: input.islands }, (_, number) => ({
+        searchId: id,
+        number,
+        segment: 0,
+        state: null,
+        progress: null,
+        done: false,
+      })),
+    )
+  })
+  streams.toCampaign(campaignId, { kind: 'changed', what: 'searches' })
+  jobs.searches.enqueue(id)
+  return readSearch(source.manager, campaignId, id)
+}
+
+export function emptyProgress(islands: number): SearchProgress {
+  return {
+    evaluations: 0,
+    proposals: 0,
+    accepted: 0,
+    restarts: 0,
+    feasible: 0,
+    infeasible: 0,
+    undefined: 0,
+    best: null,
+    bestKey: null,
+    curve: [],
+    islands: Array.from({ length: islands }, () => ({ evaluations: 0, best: null, exhausted: false })),
+    exhausted: false,
+    evaluationsPerSecond: null,
+    secondsLeft: null,
+  }
+}
+
+/** A running search keeps what it has committed and lets its slots go after the segments in hand. */
+export function pauseSearch(
+  context: ServerContext,
+  campaignId: string,
+  searchId: string,
+): Promise<SearchDetail> {
+  return move(context, campaignId, searchId, { from: ['queued', 'running'], to: 'paused', word: 'paused' })
+}
+
+/** Goes on from the last committed segment; also after a failure. */
+export async function resumeSearch(
+  context: ServerContext,
+  campaignId: string,
+  searchId: string,
+): Promise<SearchDetail> {
+  const from = ['paused', 'failed'] as const
+  await move(context, campaignId, searchId, { from, to: 'queued', word: 'resumed' })
+  context.jobs.searches.enqueue(searchId)
+  return readSearch(context.source.manager, campaignId, searchId)
+}
+
+/** Ends a search for good; what it found stays. */
+export function cancelSearch(
+  context: ServerContext,
+  campaignId: string,
+  searchId: string,
+): Promise<SearchDetail> {
+  const from = ['queued', 'running', 'paused', 'failed'] as const
+  return move(context, campaignId, searchId, { from, to: 'cancelled', word: 'cancelled' })
+}
+
+async function move(
+  { source, writes, streams, jobs }: ServerContext,
+  campaignId: string,
+  searchId: string,
+  step: { readonly from: readonly SearchState[]; readonly to: SearchState; readonly word: string },
+): Promise<SearchDetail> {
+  await writes.transaction(async (manager) => {
+    const search = await manager.findOneBy(Search, { campaignId, id: searchId })
+    if (search === null) throw notFound('search')
+    if (!step.from.includes(search.state)) {
+      throw conflict('wrong-state', `This search is ${search.state}; it cannot be ${step.word}.`)
+    }
+    await manager.update(
+      Search,
+      { id: searchId, state: In([...step.from]) },
+      {
+        state: step.to,
+        leaseOwner: null,
+        leaseUntil: null,
+        finishedAt: step.to === 'cancelled' ? new Date().toISOString() : null,
+        ...(step.to === 'queued' ? { failureCode: null, failureMessage: null } : {}),
+      },
+    )
+  })
+  if (step.to !== 'queued') jobs.searches.release(searchId)
+  const detail = await readSearch(source.manager, campaignId, searchId)
+  streams.toCampaign(campaignId, {
+    kind: 'search',
+    id: searchId,
+    state: detail.state,
+    progress: detail.progress,
+  })
+  streams.toCampaign(campaignId, { kind: 'changed', what: 'searches' })
+  return detail
+}

@@ -1,0 +1,31 @@
+import { InputError } from '../scoring/index.ts'
+import { candidateGeometry } from './jobs/compute/candidateGeometry.ts'
+import { factsOfEach, factsOfWeights, pointBlocks } from './jobs/compute/importBlocks.ts'
+import { polytopeShape } from './jobs/compute/polytopeShape.ts'
+import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
+
+const tasks: Tasks = {
+  'point-blocks': pointBlocks,
+  'facts-of-each': factsOfEach,
+  'facts-of-weights': factsOfWeights,
+  'polytope-shape': polytopeShape,
+  'candidate-geometry': candidateGeometry,
+}
+
+/** Entry of a worker thread: runs one named task and answers with its value or its failure. */
+export default function work<Name extends TaskName>(job: {
+  readonly name: Name
+  readonly input: TaskInput<Name>
+}): TaskAnswer<TaskOutput<Name>> {
+  try {
+    const task = tasks[job.name] as (input: TaskInput<Name>) => TaskOutput<Name>
+    return { ok: true, value: task(job.input) }
+  } catch (error) {
+    if (error instanceof InputError) {
+      const { code, message, path, found } = error
+      return { ok: false, kind: 'input', code, message, path, found }
+    }
+    if (error instanceof Error) return { ok: false, kind: 'bug', message: error.message, stack: error.stack }
+    return { ok: false, kind: 'bug', message: String(error), stack: undefined }
+  }
+}
