@@ -30,14 +30,11 @@ export async function listPolytopes(
   const direction = order === 'asc' ? 'ASC' : 'DESC'
   const query = visible(manager, viewer, filter)
   const total = await query.getCount()
-  const polytopes = await query
-    .clone()
-    .orderBy(`polytope.${sort}`, direction)
-    .addOrderBy('polytope.h21', 'ASC')
-    .addOrderBy('polytope.key', 'ASC')
-    .offset(offset)
-    .limit(limit)
-    .getMany()
+  const ordered = query.clone().orderBy(`polytope.${sort}`, direction)
+  for (const next of ['h11', 'h21', 'key'].filter((column) => column !== sort)) {
+    ordered.addOrderBy(`polytope.${next}`, 'ASC')
+  }
+  const polytopes = await ordered.offset(offset).limit(limit).getMany()
   const names = await ownNames(manager, viewer, polytopes)
   return {
     total,

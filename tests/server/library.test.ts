@@ -1,0 +1,107 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { LibraryFile } from '../../server/entities/libraryFile.ts'
+import { PolytopeRecord } from '../../server/entities/polytope.ts'
+import type { PolytopeRow } from '../../shared/polytopes.ts'
+import { bundledEntries, bundledFile, loadEntries } from './support/bundledSample.ts'
+import { openTestServer, type Agent, type TestServer } from './support/testServer.ts'
+
+let server: TestServer
+let reader: Agent
+
+beforeAll(async () => {
+  server = await openTestServer()
+  reader = await server.signIn('reader')
+  await loadEntries(
+    server,
+    bundledEntries('small', (id) => /^r[12]-/.test(id)),
+  )
+  await loadEntries(
+    server,
+    bundledEntries('large', (id) => /^w(1|101)-|^w11-491/.test(id)),
+    'large.json',
+  )
+})
+afterAll(() => server.close())
+
+const rows = async (query: string): Promise<PolytopeRow[]> => {
+  const { body } = await reader.get(`/api/polytopes?${query}`).expect(200)
+  return body.rows as PolytopeRow[]
+}
+
+describe('the bundled library', () => {
+  it('holds each polytope once, whatever the number of files that name it', async () => {
+    const { body } = await reader.get('/api/polytopes?limit=500').expect(200)
+    // 5 + 36 with h11 = 1, 2 (Kreuzer, Skarke), (101, 1), and (11, 491) of weights 1, 1, 12, 28, 42.
+    expect(body.total).toBe(43)
+    const quintic = (body.rows as PolytopeRow[]).filter(({ h11, h21 }) => h11 === 1 && h21 === 101)
+    expect(quintic.filter(({ weights }) => weights?.join() === '1,1,1,1,1')).toHaveLength(1)
+  })
+
+  it('is filtered and sorted', async () => {
+    expect((await rows('h11Min=2&h11Max=2')).every(({ h11 }) => h11 === 2)).toBe(true)
+    expect(await rows('h11Min=2&h11Max=2&limit=500')).toHaveLength(36)
+    // One of the polytopes with h11 = 2 is not favourable (arXiv:1411.1418: 36 and 35, counted up to h11 = 2).
+    const split = await rows('favourable=no')
+    expect(split.every(({ favourable }) => !favourable)).toBe(true)
+    const falling = (await rows('sort=h21&order=desc&limit=3')).map(({ h21 }) => h21)
+    expect(falling).toEqual([...falling].sort((a, b) => b - a))
+    expect(falling[0]).toBe(491)
+    expect((await rows('text=w11-491')).map(({ h21 }) => h21)).toEqual([491])
+    expect(await rows('text=%25')).toEqual([])
+    expect((await rows('offset=40&limit=100')).length).toBe(3)
+  })
+
+  it('refuses a query that makes no sense, naming the field', async () => {
+    const { status, body } = await reader.get('/api/polytopes?h11Min=many')
+    expect(status).toBe(422)
+    expect(body).toMatchObject({ code: 'invalid-request', path: 'h11Min' })
+  })
+
+  it('is counted by Hodge numbers', async () => {
+    const { body } = await reader.get('/api/polytopes/hodge').expect(200)
+    expect(body.total).toBe(43)
+    expect(body.loading).toBeNull()
+    // P^4[5] and its quotient by Z5 stand at (1, 101) and (1, 21) (Candelas, de la Ossa, Green, Parkes 1991).
+    expect(body.counts).toContainEqual({ h11: 1, h21: 101, count: 1 })
+    expect(body.counts).toContainEqual({ h11: 1, h21: 21, count: 1 })
+  })
+
+  it('shows a polytope with its faces and its mirror', async () => {
+    const [quintic] = await rows('h11Max=1&h21Min=101&h21Max=101')
+    const { body } = await reader.get(`/api/polytopes/${quintic.key}`).expect(200)
+    expect(body.pointCoordinates).toHaveLength(5)
+    expect(body.facetNormals).toHaveLength(5)
+    expect(body.twoFaces).toHaveLength(10)
+    const mirror = await reader.get(`/api/polytopes/${body.mirrorKey}`).expect(200)
+    expect(mirror.body).toMatchObject({ h11: 101, h21: 1, mirrorKey: quintic.key })
+    await reader.get('/api/polytopes/00000000000000000000000000000000').expect(404)
+  })
+
+  it('goes on where an interrupted start left off, and starts a changed file again', async () => {
+    const { library, source } = server.context
+    const entries = bundledEntries('small', (id) => /^r3-00/.test(id))
+    const place = bundledFile(server, 'later.json', entries)
+    const [file] = await library.open([place])
+    await server.context.writes.transaction((manager) =>
+      manager.insert(LibraryFile, {
+        name: file.name,
+        digest: file.digest,
+        loaded: 90,
+        total: entries.length,
+      }),
+    )
+    const before = await source.manager.count(PolytopeRecord)
+    await library.load([file])
+    expect((await source.manager.count(PolytopeRecord)) - before).toBe(entries.length - 90)
+    const [changed] = await library.open([bundledFile(server, 'later.json', entries.slice(0, 95))])
+    await library.load([changed])
+    expect((await source.manager.count(PolytopeRecord)) - before).toBe(entries.length - 90 + 90)
+  })
+
+  it('is not believed: a file that states a wrong Hodge number stops loading', async () => {
+    const [entry] = bundledEntries('small', (id) => id === 'r1-0002')
+    await expect(loadEntries(server, [{ ...entry, h21: 100 }], 'wrong.json')).rejects.toThrow(
+      /r1-0002: h21 is 101, the file says 100/,
+    )
+  })
+})

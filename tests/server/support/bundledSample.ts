@@ -1,0 +1,32 @@
+import { readFileSync, writeFileSync } from 'node:fs'
+import { join } from 'node:path'
+import { pathToFileURL } from 'node:url'
+import { z } from 'zod'
+import type { TestServer } from './testServer.ts'
+
+const fileSchema = z.object({ about: z.string(), polytopes: z.array(z.looseObject({ id: z.string() })) })
+
+const data = (name: string) => new URL(`../../../server/library/data/polytopes-${name}.json`, import.meta.url)
+
+/** The bundled polytopes of a file whose name passes. */
+export function bundledEntries(file: 'small' | 'large' | 'h11-5', wanted: (id: string) => boolean) {
+  const { polytopes } = fileSchema.parse(JSON.parse(readFileSync(data(file), 'utf8')))
+  return polytopes.filter(({ id }) => wanted(id))
+}
+
+/** Writes entries as a bundled file of its own into the server's folder. */
+export function bundledFile({ context }: TestServer, name: string, polytopes: readonly object[]): URL {
+  const path = join(context.config.dataDirectory, name)
+  writeFileSync(path, JSON.stringify({ about: 'a sample for a test', polytopes }))
+  return pathToFileURL(path)
+}
+
+/** Loads entries into the library of a test server, as the first start loads the bundled files. */
+export async function loadEntries(
+  server: TestServer,
+  polytopes: readonly object[],
+  name = 'sample.json',
+): Promise<void> {
+  const { library } = server.context
+  await library.load(await library.open([bundledFile(server, name, polytopes)]))
+}
