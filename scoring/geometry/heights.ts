@@ -9,8 +9,8 @@ export interface QuadraticHeightsOptions {
   /** Seed of the noise, an integer. Default 0. */
   readonly seed?: number
   /**
-   * Size of the noise in units of the quadratic form's step S, 0 <= noise < 1/2. Default 0, which stands for
-   * the least noise that breaks ties (`TIE_NOISE`).
+   * Size of the noise in units of the quadratic form's step S, 0 <= noise < 1/2. Default 0. There is always
+   * the little noise that breaks ties (`TIE_NOISE`), so that the class is determined.
    */
   readonly noise?: number
   /**
@@ -21,7 +21,7 @@ export interface QuadraticHeightsOptions {
 }
 
 /**
- * Noise used when none is asked for. A parallelogram's circuit takes the noise of four points, at most
+ * Least noise. A parallelogram's circuit takes the noise of four points, at most
  * 4 / 64 < 1 step, so it decides ties of the quadratic form and nothing else: the class refines the
  * subdivision that the form alone gives.
  */
@@ -69,7 +69,7 @@ export function quadraticHeights(polytope: Polytope, options: QuadraticHeightsOp
       largest,
     )
   }
-  const amplitude = Math.min(Math.floor(step * (noise === 0 ? TIE_NOISE : noise)), Math.ceil(step / 2) - 1)
+  const amplitude = Math.min(Math.floor(step * Math.max(noise, TIE_NOISE)), Math.ceil(step / 2) - 1)
   const generator = noiseGenerator(seed)
   return values.map((value) => step * value + uniformInt(generator, -amplitude, amplitude))
 }

@@ -138,8 +138,7 @@ export function classFromTriangles(polytope: Polytope, triangles: ArrayLike<numb
     if (f < 0) fail('triangles.not-on-a-face', 'does not lie on one 2-face')
     if (filled[f] === sheets.slot[f + 1])
       fail('triangles.overlap', `is one more than 2-face ${f} has room for`)
-    const at = 3 * filled[f]++
-    const turn = orient(sheets, f, i, j, k, from, at)
+    const turn = orient(sheets, f, i, j, k, from, 3 * filled[f]++)
     if (Math.abs(turn) !== 1) fail('triangles.not-unimodular', `has area ${Math.abs(turn)} in place of 1`)
   }
   let mesh: FaceMesh

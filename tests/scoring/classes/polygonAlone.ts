@@ -71,7 +71,10 @@ function cornersOf(points: readonly PlanePoint[]): number[] {
   const chain = (sorted: number[]): number[] => {
     const kept: number[] = []
     for (const p of sorted) {
-      while (kept.length > 1 && turn(points[kept[kept.length - 2]], points[kept[kept.length - 1]], points[p]) <= 0) {
+      while (
+        kept.length > 1 &&
+        turn(points[kept[kept.length - 2]], points[kept[kept.length - 1]], points[p]) <= 0
+      ) {
         kept.pop()
       }
       kept.push(p)
