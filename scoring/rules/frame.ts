@@ -36,6 +36,12 @@ export class StepLimitReached extends Error {
   }
 }
 
+/** How a quantity changes along the ray: divided by one number, times another. */
+export interface Move {
+  readonly divisor: number
+  readonly factor: number
+}
+
 /** How many of each thing a program keeps per evaluation. */
 export interface FrameLayout {
   readonly slots: number
@@ -68,7 +74,8 @@ export class Frame {
   end = 0
   items: ArrayLike<number> | null = null
   private readonly place: PlaceOnRay
-  private scaleFactor = NaN
+  /** The volume or the smallest divisor's volume at scale 1, when the place needs it. */
+  private measure: number | undefined
 
   constructor(
     readonly candidate: Candidate,
@@ -89,29 +96,30 @@ export class Frame {
   }
 
   /**
-   * The factor s that takes the reference point to the rule's place on its ray. With V the volume and tau the
-   * divisor volumes at scale 1: `at volume v` gives s = (v / V)^(1/3), `at smallest divisor t` gives
-   * s = sqrt(t / min tau).
+   * Takes a quantity that goes with a power of s from the reference point to the rule's place on its ray:
+   * `value / divisor * factor`. With V the volume and tau the divisor volumes at scale 1, `at volume v` means
+   * s = (v / V)^(1/3), `at smallest divisor t` means s = sqrt(t / min tau). Dividing first gives exactly v for
+   * the volume and exactly t for the smallest divisor.
    */
-  scale(): number {
-    if (this.scaleFactor === this.scaleFactor) return this.scaleFactor
+  move(scaling: number): Move {
+    if (scaling === 0) return STAY
     const { kind, value } = this.place
-    if (kind === 'scale') this.scaleFactor = value
-    else if (kind === 'volume') this.scaleFactor = Math.cbrt(value / this.candidate.volumes().total)
-    else {
-      let least = Infinity
-      for (const volume of this.candidate.volumes().divisors) if (volume < least) least = volume
-      this.scaleFactor = Math.sqrt(value / least)
-    }
-    if (!(this.scaleFactor > 0 && Number.isFinite(this.scaleFactor)))
+    if (kind === 'scale') return value === 1 ? STAY : { divisor: 1, factor: value ** scaling }
+    this.measure ??=
+      kind === 'volume' ? this.candidate.volumes().total : least(this.candidate.volumes().divisors)
+    if (!(this.measure > 0))
       throw new InvariantError(
-        `The scale for "at ${kind} ${value}" is ${this.scaleFactor}, which is no positive number.`,
+        `"at ${kind}" has no meaning here: the ${kind} measures ${this.measure} at scale 1.`,
       )
-    return this.scaleFactor
+    const power = scaling / (kind === 'volume' ? 3 : 2)
+    return { divisor: this.measure ** power, factor: value ** power }
   }
+}
 
-  /** Factor for a quantity that goes with the given power of s. */
-  power(scaling: number): number {
-    return scaling === 0 ? 1 : this.scale() ** scaling
-  }
+const STAY: Move = { divisor: 1, factor: 1 }
+
+function least(values: ArrayLike<number>): number {
+  let result = Infinity
+  for (let at = 0; at < values.length; at++) if (values[at] < result) result = values[at]
+  return result
 }

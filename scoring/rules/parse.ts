@@ -82,8 +82,10 @@ export function readRule(text: string): Reading {
     const keyword = segment.keyword as StatementKind
     const finding = explainSyntaxError(text, segment, next, drafts.length < RULE_LIMITS.issues)
     if (finding || spoilt) {
-      if (finding?.issue && !spoilt) drafts.push(finding.issue)
-      statements.push(broken(segment, keyword))
+      if (!spoilt) {
+        if (finding?.issue) drafts.push(finding.issue)
+        statements.push(broken(segment, keyword))
+      }
       spoilt = finding?.spoilsNext ?? false
       return
     }

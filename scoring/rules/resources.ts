@@ -8,16 +8,16 @@ import type {
   ScalarObservable,
   ValueField,
 } from '../observables/observable.ts'
-import type { Frame, Resource } from './frame.ts'
+import type { Frame, Move, Resource } from './frame.ts'
 
 /** What a program loads from a candidate: the registry's entries with a value of their own. */
 export type Loadable =
   ScalarObservable | ValueField | ElementField | MembersField | NumberSet | RecordSet | Relation
 
-function scaled(values: ArrayLike<number>, factor: number): ArrayLike<number> {
-  if (factor === 1) return values
+function moved(values: ArrayLike<number>, { divisor, factor }: Move): ArrayLike<number> {
+  if (divisor === 1 && factor === 1) return values
   const result = new Float64Array(values.length)
-  for (let at = 0; at < result.length; at++) result[at] = values[at] * factor
+  for (let at = 0; at < result.length; at++) result[at] = (values[at] / divisor) * factor
   return result
 }
 
@@ -25,12 +25,12 @@ function read(entry: Loadable, frame: Frame): Resource {
   const { candidate } = frame
   switch (entry.kind) {
     case 'scalar':
-      return { kind: 'values', values: [entry.read(candidate) * frame.power(entry.scaling)] }
+      return { kind: 'values', values: moved([entry.read(candidate)], frame.move(entry.scaling)) }
     case 'value':
     case 'element':
-      return { kind: 'values', values: scaled(entry.column(candidate), frame.power(entry.scaling)) }
+      return { kind: 'values', values: moved(entry.column(candidate), frame.move(entry.scaling)) }
     case 'numbers':
-      return { kind: 'values', values: scaled(entry.values(candidate), frame.power(entry.scaling)) }
+      return { kind: 'values', values: moved(entry.values(candidate), frame.move(entry.scaling)) }
     case 'records':
       return { kind: 'values', values: [entry.size(candidate)] }
     case 'members':
