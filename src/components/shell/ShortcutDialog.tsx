@@ -52,8 +52,8 @@ export function ShortcutDialog({
         Single-key shortcuts are on
       </label>
       <p className="mt-2 text-soft">
-        Everything else works with Tab, the arrow keys, Enter and Escape. In the rule editor, Tab indents;
-        press Escape first to leave it with Tab.
+        Everything else works with Tab, the arrow keys, Enter and Escape. In the rule editor, Ctrl-Space
+        completes, F8 goes to the next message and Ctrl-Shift-M lists them.
       </p>
     </Dialog>
   )

@@ -1,0 +1,143 @@
+import { useMemo, useState } from 'react'
+import { CornerDownLeft } from 'lucide-react'
+import { referenceEntries, type ReferenceEntry, type ReferenceKind } from '../../../scoring/index.ts'
+import { Formula } from '../formula/Formula.tsx'
+import { IconButton } from '../ui/Button.tsx'
+import { TextField } from '../ui/Field.tsx'
+import { Empty } from '../ui/States.tsx'
+import { Message } from './Message.tsx'
+
+const groups: readonly [title: string, kinds: readonly ReferenceKind[]][] = [
+  ['Statements', ['statement']],
+  ['Observables and sets', ['observable', 'set', 'field', 'relation']],
+  ['Folds over a set', ['fold']],
+  ['Functions', ['function']],
+  ['Operators and words', ['operator', 'keyword']],
+]
+
+const entries = referenceEntries()
+
+/** Entries in which every wanted word occurs; those where it starts the name come first. */
+export function findEntries(text: string): readonly ReferenceEntry[] {
+  const words = text.toLowerCase().split(/\s+/).filter(Boolean)
+  if (words.length === 0) return entries
+  const found = entries.filter((entry) => {
+    const all =
+      `${entry.id} ${entry.form} ${entry.type} ${entry.description} ${entry.observable?.stage ?? ''}`.toLowerCase()
+    return words.every((word) => all.includes(word))
+  })
+  const rank = (entry: ReferenceEntry) => (entry.id.toLowerCase().startsWith(words[0] ?? '') ? 0 : 1)
+  return [...found].sort((a, b) => rank(a) - rank(b))
+}
+
+/** Everything a rule can say, made from the registries of the language. */
+export function ReferenceList({ onInsert, open }: { onInsert?: (text: string) => void; open?: boolean }) {
+  const [text, setText] = useState('')
+  const found = useMemo(() => findEntries(text), [text])
+  return (
+    <div>
+      <TextField
+        label="Search the reference"
+        type="search"
+        value={text}
+        placeholder="volume, rigid, log10, …"
+        className="max-w-md"
+        onChange={(event) => setText(event.target.value)}
+      />
+      <p role="status" className="mt-1 text-xs text-soft">
+        {found.length} of {entries.length} entries
+      </p>
+      {found.length === 0 && (
+        <Empty title="Nothing in the language matches.">Try a word of the trade, or part of a name.</Empty>
+      )}
+      {groups.map(([title, kinds]) => {
+        const inGroup = found.filter((entry) => kinds.includes(entry.kind))
+        return (
+          inGroup.length > 0 && (
+            <section key={title} aria-label={title} className="mt-4">
+              <h3 className="border-b pb-1 text-sm">{title}</h3>
+              <ul>
+                {inGroup.map((entry) => (
+                  <Entry key={entry.id} entry={entry} onInsert={onInsert} open={open} />
+                ))}
+              </ul>
+            </section>
+          )
+        )
+      })}
+    </div>
+  )
+}
+
+function Entry({
+  entry,
+  onInsert,
+  open = false,
+}: {
+  entry: ReferenceEntry
+  onInsert?: (text: string) => void
+  open?: boolean
+}) {
+  const [shown, setShown] = useState(open)
+  return (
+    <li className="border-b py-1 [contain-intrinsic-size:auto_40px] [content-visibility:auto]">
+      <div className="flex items-start gap-1">
+        <details
+          className="min-w-0 flex-1"
+          open={shown}
+          onToggle={(event) => setShown(event.currentTarget.open)}
+        >
+          <summary className="list-outside py-0.5 leading-5">
+            <code className="font-mono text-xs font-semibold break-words">{entry.form}</code>
+            {entry.of && <span className="ml-2 text-xs text-soft">of {entry.of}</span>}
+            {entry.type && <span className="ml-2 text-xs text-soft">{entry.type}</span>}
+          </summary>
+          {shown && <EntryBody entry={entry} />}
+        </details>
+        {onInsert && (
+          <IconButton label={`Insert ${entry.form}`} onClick={() => onInsert(entry.form)}>
+            <CornerDownLeft size={14} aria-hidden />
+          </IconButton>
+        )}
+      </div>
+    </li>
+  )
+}
+
+function EntryBody({ entry }: { entry: ReferenceEntry }) {
+  const { observable } = entry
+  return (
+    <div className="pb-2 pl-4">
+      <p className="prose-line">
+        <Message text={entry.description} />
+      </p>
+      {entry.formula && (
+        <p className="my-1.5">
+          <Formula tex={entry.formula} />
+        </p>
+      )}
+      {observable && (
+        <dl className="mt-1 grid grid-cols-[max-content_minmax(0,1fr)] gap-x-3 text-xs text-soft">
+          {(
+            [
+              ['Unit', observable.unit],
+              ['Convention', observable.convention],
+              ['Stage', observable.stage],
+              ['Cost', observable.cost],
+              ['Under w → s w', observable.scaling === 0 ? 'unchanged' : `scales as s^${observable.scaling}`],
+              ['Undefined', observable.undefinedWhen ?? ''],
+              ['Source', observable.source],
+            ] as const
+          )
+            .filter(([, value]) => value)
+            .map(([name, value]) => (
+              <div key={name} className="contents">
+                <dt>{name}</dt>
+                <dd className="text-ink">{value}</dd>
+              </div>
+            ))}
+        </dl>
+      )}
+    </div>
+  )
+}

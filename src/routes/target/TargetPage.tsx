@@ -1,0 +1,90 @@
+import { useMemo, useState } from 'react'
+import { Link, useParams } from 'react-router-dom'
+import { useQuery } from '@tanstack/react-query'
+import { toast } from 'sonner'
+import { type TargetDetail } from '../../../shared/targets.ts'
+import { checkRule } from '../../../scoring/index.ts'
+import { explain } from '../../api/request.ts'
+import { targetQuery, useSaveVersion } from '../../api/targets.ts'
+import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { Button, ButtonLink } from '../../components/ui/Button.tsx'
+import { PageHead } from '../../components/ui/Layout.tsx'
+import { QueryView } from '../../components/ui/States.tsx'
+import { formatTime } from '../../lib/numbers.ts'
+import { LeaveDialog } from './LeaveDialog.tsx'
+import { useLeaveGuard } from './useLeaveGuard.ts'
+import { VersionList } from './VersionList.tsx'
+import { Workbench } from './Workbench.tsx'
+
+export function TargetPage() {
+  const { campaignId = '', targetId = '' } = useParams()
+  const target = useQuery(targetQuery(campaignId, targetId))
+  return (
+    <QueryView query={target} what="the target">
+      {(detail) => <Target key={detail.id} campaign={campaignId} target={detail} />}
+    </QueryView>
+  )
+}
+
+function Target({ campaign, target }: { campaign: string; target: TargetDetail }) {
+  const latest = target.versions[0]
+  const [text, setText] = useState(latest?.text ?? '')
+  const save = useSaveVersion(campaign, target.id)
+  const barred = useBarred('targets.edit')
+  const barredSearch = useBarred('searches.run')
+  const changed = text !== (latest?.text ?? '')
+  const sound = useMemo(() => checkRule(text).ok, [text])
+  const blocker = useLeaveGuard(changed && !barred)
+  const saveNow = () =>
+    save.mutate(text, {
+      onSuccess: (saved) => toast(`Version ${saved.versions[0]?.number ?? ''} is saved.`),
+      onError: (error) => toast.error(explain(error)),
+    })
+  return (
+    <>
+      <PageHead
+        title={target.name}
+        above={
+          <Link to={`/campaigns/${campaign}/targets`} className="hover:underline">
+            Targets
+          </Link>
+        }
+        actions={
+          <>
+            <Button
+              kind={changed ? 'primary' : 'plain'}
+              busy={save.isPending}
+              unavailable={
+                barred ||
+                (!changed && 'Nothing has changed since the last version.') ||
+                (!sound && 'The rule has errors; mend them first.')
+              }
+              onClick={saveNow}
+            >
+              Save as version {(latest?.number ?? 0) + 1}
+            </Button>
+            {barredSearch || changed ? (
+              <Button unavailable={barredSearch || 'Save this version first; a search runs a saved version.'}>
+                Search with it
+              </Button>
+            ) : (
+              <ButtonLink kind="primary" to={`/campaigns/${campaign}/searches/new?target=${target.id}`}>
+                Search with it
+              </ButtonLink>
+            )}
+          </>
+        }
+      >
+        {latest && `Version ${latest.number}, saved ${formatTime(latest.createdAt)} by ${latest.author}`}
+        {changed && <span className="text-found"> · changed since</span>}
+      </PageHead>
+      <Workbench
+        campaign={campaign}
+        text={text}
+        onText={setText}
+        versions={<VersionList campaign={campaign} target={target} text={text} onTake={setText} />}
+      />
+      <LeaveDialog blocker={blocker} />
+    </>
+  )
+}
