@@ -23,7 +23,9 @@ export function thinned(curve: Curve): Curve {
  * The curves of islands as one over the total of evaluations: evaluation e of island n comes after evaluation e
  * of the islands before it and before evaluation e of those after it; an island that has fewer drops out.
  */
-export function interleaved(islands: readonly { readonly curve: Curve; readonly evaluations: number }[]): Curve {
+export function interleaved(
+  islands: readonly { readonly curve: Curve; readonly evaluations: number }[],
+): Curve {
   const steps: { at: number; score: number }[] = []
   for (const [n, island] of islands.entries()) {
     for (const [e, score] of island.curve) {

@@ -57,7 +57,7 @@ export class RandomStream {
  * Each word passes through the finaliser of the SplitMix family, so that neighbouring seeds share nothing.
  */
 export function seededState(seed: number, ...path: number[]): GeneratorState {
-  let word = 0x9e3779b9 | 0
+  let word: number = 0x9e3779b9 | 0
   for (const part of [seed, ...path]) {
     word = mix(word ^ mix(part | 0))
     word = mix(word ^ mix(Math.floor(part / 2 ** 32) | 0))
@@ -68,7 +68,7 @@ export function seededState(seed: number, ...path: number[]): GeneratorState {
     state.push(mix(word))
   }
   // The all-zero state is a fixed point of the generator.
-  if (state.every((part) => part === 0)) state[0] = 1
+  if (!state.some(Boolean)) state[0] = 1
   return [state[0], state[1], state[2], state[3]]
 }
 

@@ -61,7 +61,10 @@ describe('table of classes seen', () => {
 })
 
 describe('histogram', () => {
-  const value = fc.oneof(fc.double({ min: -1e3, max: 1e3, noNaN: true }), fc.double({ min: -7, max: -5, noNaN: true }))
+  const value = fc.oneof(
+    fc.double({ min: -1e3, max: 1e3, noNaN: true }),
+    fc.double({ min: -7, max: -5, noNaN: true }),
+  )
 
   it('counts every value once, in the bin that holds it', () => {
     fc.assert(

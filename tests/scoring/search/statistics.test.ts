@@ -22,24 +22,29 @@ describe('expected best of n', () => {
   it('equals the mean over all subsets', () => {
     const scores = fc.array(fc.integer({ min: -50, max: 50 }), { minLength: 1, maxLength: 7 })
     fc.assert(
-      fc.property(scores, fc.integer({ min: 0, max: 3 }), fc.integer({ min: 1, max: 10 }), (values, missing, n) => {
-        const sorted = [...values].sort((a, b) => a - b)
-        const all: (number | null)[] = [...new Array<null>(missing).fill(null), ...sorted]
-        const size = all.length
-        let [draws, covered, sum] = [0, 0, 0]
-        for (let subset = 0; subset < 1 << size; subset++) {
-          const chosen = all.filter((_, i) => (subset >> i) & 1)
-          if (chosen.length !== n) continue
-          draws++
-          const scored = chosen.filter((value) => value !== null)
-          if (scored.length === 0) continue
-          covered++
-          sum += Math.max(...scored)
-        }
-        const expected = expectedBest(sorted, size, n)
-        if (draws === 0 || covered / draws < 0.5) expect(expected).toBeNull()
-        else expect(expected).toBeCloseTo(sum / covered, 9)
-      }),
+      fc.property(
+        scores,
+        fc.integer({ min: 0, max: 3 }),
+        fc.integer({ min: 1, max: 10 }),
+        (values, missing, n) => {
+          const sorted = [...values].sort((a, b) => a - b)
+          const all: (number | null)[] = [...new Array<null>(missing).fill(null), ...sorted]
+          const size = all.length
+          let [draws, covered, sum] = [0, 0, 0]
+          for (let subset = 0; subset < 1 << size; subset++) {
+            const chosen = all.filter((_, i) => (subset >> i) & 1)
+            if (chosen.length !== n) continue
+            draws++
+            const scored = chosen.filter((value) => value !== null)
+            if (scored.length === 0) continue
+            covered++
+            sum += Math.max(...scored)
+          }
+          const expected = expectedBest(sorted, size, n)
+          if (draws === 0 || covered / draws < 0.5) expect(expected).toBeNull()
+          else expect(expected).toBeCloseTo(sum / covered, 9)
+        },
+      ),
     )
   })
 })

@@ -1,0 +1,75 @@
+/**
+ * The front door of the engine: all that the server and the client may import. Pure TypeScript, no I/O; also
+ * runs in a browser.
+ */
+export { InputError, InvariantError } from './errors.ts'
+export { engineVersion } from './version.ts'
+export { caution } from './caution.ts'
+
+// Geometry: polytope -> normal form -> heights -> 2-face class -> numbers -> cone -> metric.
+export {
+  dualPolytope,
+  polytopeFromPoints,
+  type Hodge,
+  type Polytope,
+  type TwoFace,
+} from './geometry/polytope.ts'
+export { normalForm, type NormalForm } from './geometry/normalForm.ts'
+export { polytopeFromWeights } from './geometry/weights.ts'
+export { parsePointBlocks } from './geometry/pointBlocks.ts'
+export { quadraticHeights } from './geometry/heights.ts'
+export { classFromHeights, type TwoFaceClass } from './geometry/twoFaceClass.ts'
+export { canonicalClass } from './geometry/classKey.ts'
+export { intersectionNumbers, type IntersectionNumbers } from './geometry/intersectionNumbers.ts'
+export { buildCandidate } from './observables/buildCandidate.ts'
+export type { Candidate } from './observables/candidate.ts'
+
+// The scoring language.
+export * from './rules/index.ts'
+
+// The search: one primitive, `advance`, and what is made of it.
+export { advance, startState, type Segment, type SegmentOptions } from './search/advance.ts'
+export { interleaved, thinned, type Curve } from './search/curve.ts'
+export type { Find } from './search/find.ts'
+export { Histogram, type HistogramState, type HistogramView } from './search/histogram.ts'
+export type { Evaluated, IslandHooks } from './search/island.ts'
+export { mergeIslands, type MergedIslands } from './search/islands.ts'
+export {
+  checkedSettings,
+  JobSession,
+  previewChunk,
+  requiredRule,
+  segmentJob,
+  type JobError,
+  type PreviewInput,
+  type PreviewOutput,
+  type PreviewRow,
+  type SegmentInput,
+  type SegmentOutput,
+} from './search/jobs.ts'
+export { OutcomeMemo } from './search/memo.ts'
+export { isMethodName, methodNames, methods, type MethodName } from './search/methods.ts'
+export { nullProblem, nullSample, nullSizeLimit, nullSummary, type NullSummary } from './search/nullSample.ts'
+export {
+  FormCache,
+  polytopeSource,
+  type PolytopeEntry,
+  type PolytopeSource,
+} from './search/polytopeSource.ts'
+export { problemDigest, type SearchProblem } from './search/problem.ts'
+export {
+  mergedProgress,
+  progressOf,
+  type IslandProgress,
+  type SearchProgressReport,
+} from './search/progress.ts'
+export { nullLaw } from './search/sampling.ts'
+export {
+  islandBudget,
+  searchSettingsSchema,
+  stateLimitBytes,
+  type SearchSettings,
+} from './search/settings.ts'
+export { timedCandidate, type Clock, type StageCosts } from './search/stageClock.ts'
+export type { Json, RunEnd, SampleRow, SearchCounts, SearchState } from './search/state.ts'
+export { expectedBest, medianOf, quantileOf, rateOf, type Rate } from './search/statistics.ts'

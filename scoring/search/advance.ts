@@ -1,0 +1,81 @@
+import { findOf, type Find } from './find.ts'
+import { emptyHistogram } from './histogram.ts'
+import { Island, type IslandHooks, requireSameProblem } from './island.ts'
+import { problemDigest, type SearchProblem } from './problem.ts'
+import { progressOf, type IslandProgress } from './progress.ts'
+import { seededState } from './randomStream.ts'
+import { SeenTable } from './seenTable.ts'
+import { islandBudget, seenCapacity } from './settings.ts'
+import type { SearchState } from './state.ts'
+
+/** The state of an island before its first step. Islands of one seed have unrelated random streams. */
+export function startState(problem: SearchProblem, seed: number, island = 0): SearchState {
+  const { settings, polytopes } = problem
+  // Room is reckoned with the largest polytope that occurs; a scope of many is only looked at where it begins.
+  const pointCount = polytopes.count === 1 ? polytopes.at(0).polytope.pointCount : 500
+  return {
+    schema: 'tessellary.state/1',
+    problem: problemDigest(problem),
+    method: problem.method,
+    seed,
+    island,
+    budget: islandBudget(settings, island),
+    evaluations: 0,
+    proposals: 0,
+    accepted: 0,
+    restarts: 0,
+    feasible: 0,
+    infeasible: 0,
+    undefined: 0,
+    hits: 0,
+    hitsUndefined: 0,
+    generator: seededState(seed, island),
+    stalled: 0,
+    ended: null,
+    reasons: [],
+    failures: [],
+    curve: [],
+    histogram: emptyHistogram,
+    sample: { capacity: settings.sample, offered: 0, rows: [] },
+    top: [],
+    seen: new SeenTable(seenCapacity(settings, island, pointCount)).state(),
+    chain: null,
+  }
+}
+
+export interface SegmentOptions extends IslandHooks {
+  /** End the segment after so many proposals too, whether or not they were new. */
+  readonly proposals?: number
+}
+
+export interface Segment {
+  readonly state: SearchState
+  /** Candidates that entered the list of the best in this segment and are still on it, best first. */
+  readonly finds: readonly Find[]
+  readonly progress: IslandProgress
+}
+
+/**
+ * Carries one island on: at most `evaluations` more classes are scored, never beyond the island's share of the
+ * budget. Pure and deterministic; the generator's state is in the state. Cutting a run into segments, of
+ * whatever sizes, and passing the state through JSON in between give the same final state to the bit.
+ *
+ * @throws InputError when the state belongs to another problem
+ */
+export function advance(
+  problem: SearchProblem,
+  state: SearchState,
+  evaluations: number,
+  options: SegmentOptions = {},
+): Segment {
+  requireSameProblem(state, problemDigest(problem))
+  const island = new Island(problem, state, options)
+  const lastEvaluation = Math.min(island.budget, island.evaluations + evaluations)
+  const lastProposal = island.proposals + (options.proposals ?? Infinity)
+  while (island.ended === null && island.evaluations < lastEvaluation && island.proposals < lastProposal) {
+    island.chain.step()
+  }
+  const next = island.state()
+  const finds = next.top.filter((row) => island.newcomers.has(row.classKey)).map(findOf)
+  return { state: next, finds, progress: progressOf(next) }
+}

@@ -1,0 +1,239 @@
+import { InputError } from '../errors.ts'
+import { canonicalClass } from '../geometry/classKey.ts'
+import type { NormalForm } from '../geometry/normalForm.ts'
+import { transportHeights } from '../geometry/transport.ts'
+import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
+import type { Candidate } from '../observables/candidate.ts'
+import { buildCandidate } from '../observables/buildCandidate.ts'
+import { evaluatePolytopeStage, evaluateRule } from '../rules/evaluate.ts'
+import type { Outcome } from '../rules/outcome.ts'
+import { withStep, type Curve } from './curve.ts'
+import { codeOfHeights } from './heightsCode.ts'
+import { Histogram } from './histogram.ts'
+import type { OutcomeMemo } from './memo.ts'
+import { meritOf } from './merit.ts'
+import type { Chain, Judgement, Run } from './method.ts'
+import { methods } from './methods.ts'
+import type { SearchProblem } from './problem.ts'
+import { RandomStream } from './randomStream.ts'
+import { Reservoir } from './reservoir.ts'
+import { SeenTable, seenKey } from './seenTable.ts'
+import type { RunEnd, SampleRow, SearchState } from './state.ts'
+import { TopList } from './topList.ts'
+import { witnessHeights } from './witness.ts'
+
+const mostReasons = 20
+
+/** What may look on while an island works. None of it can alter a result. */
+export interface IslandHooks {
+  /** Outcomes known from elsewhere under the same rule: spares time. */
+  readonly memo?: OutcomeMemo
+  /** Told of every evaluation. */
+  readonly observe?: (evaluated: Evaluated) => void
+  /** Puts a candidate with the same values in the place of each one that is evaluated, to time its stages. */
+  readonly instrument?: (candidate: Candidate) => Candidate
+}
+
+/** One evaluation, as it happens. */
+export interface Evaluated {
+  readonly form: NormalForm
+  readonly classKey: string
+  readonly outcome: Outcome
+  /** Integer heights that give the canonical class. */
+  heights(): Float64Array
+}
+
+/** An island at work: a state opened up, which the chain of its method drives. */
+export class Island implements Run {
+  readonly stream: RandomStream
+  readonly polytopeCount: number
+  readonly budget: number
+  readonly patience: number
+  evaluations: number
+  proposals: number
+  stalled: number
+  ended: RunEnd | null
+  private accepted: number
+  private restarts: number
+  private feasible: number
+  private infeasible: number
+  private undefined: number
+  private hits: number
+  private hitsUndefined: number
+  private readonly reasons: Map<string, number>
+  private readonly failures: Map<string, number>
+  private curve: Curve
+  private readonly histogram: Histogram
+  private readonly sample: Reservoir<SampleRow>
+  private readonly top: TopList
+  private readonly seen: SeenTable
+  private readonly entered = new Set<string>()
+  private readonly passes = new Map<number, boolean>()
+  readonly chain: Chain
+
+  constructor(
+    private readonly problem: SearchProblem,
+    private readonly given: SearchState,
+    private readonly hooks: IslandHooks = {},
+  ) {
+    this.stream = new RandomStream(given.generator)
+    this.polytopeCount = problem.polytopes.count
+    this.budget = given.budget
+    this.patience = problem.settings.patience
+    this.evaluations = given.evaluations
+    this.proposals = given.proposals
+    this.stalled = given.stalled
+    this.ended = given.ended
+    this.accepted = given.accepted
+    this.restarts = given.restarts
+    this.feasible = given.feasible
+    this.infeasible = given.infeasible
+    this.undefined = given.undefined
+    this.hits = given.hits
+    this.hitsUndefined = given.hitsUndefined
+    this.reasons = new Map(given.reasons)
+    this.failures = new Map(given.failures)
+    this.curve = given.curve
+    this.histogram = new Histogram(given.histogram)
+    this.sample = new Reservoir(given.sample)
+    this.top = new TopList(problem.settings.keep, given.top)
+    this.seen = SeenTable.restore(given.seen)
+    this.chain = methods[problem.method].open(this, given.chain)
+  }
+
+  state(): SearchState {
+    return {
+      schema: 'tessellary.state/1',
+      problem: this.given.problem,
+      method: this.given.method,
+      seed: this.given.seed,
+      island: this.given.island,
+      budget: this.budget,
+      evaluations: this.evaluations,
+      proposals: this.proposals,
+      accepted: this.accepted,
+      restarts: this.restarts,
+      feasible: this.feasible,
+      infeasible: this.infeasible,
+      undefined: this.undefined,
+      hits: this.hits,
+      hitsUndefined: this.hitsUndefined,
+      generator: this.stream.state(),
+      stalled: this.stalled,
+      ended: this.ended,
+      reasons: [...this.reasons],
+      failures: [...this.failures],
+      curve: this.curve,
+      histogram: this.histogram.state(),
+      sample: this.sample.state(),
+      top: [...this.top.list()],
+      seen: this.seen.state(),
+      chain: this.chain.state(),
+    }
+  }
+
+  /** Class keys of the candidates that entered the list of the best since this island was opened. */
+  get newcomers(): ReadonlySet<string> {
+    return this.entered
+  }
+
+  form(polytope: number): NormalForm {
+    return this.problem.polytopes.at(polytope)
+  }
+
+  polytopePasses(polytope: number): boolean {
+    let passes = this.passes.get(polytope)
+    if (passes === undefined) {
+      const form = this.form(polytope)
+      const view = { polytope: form.polytope, symmetryOrder: form.automorphisms.length }
+      passes = evaluatePolytopeStage(this.problem.rule, view) === null
+      this.passes.set(polytope, passes)
+    }
+    return passes
+  }
+
+  judge(polytope: number, cls: TwoFaceClass, heights: ArrayLike<number>): Judgement {
+    const form = this.form(polytope)
+    const canonical = canonicalClass(form, cls)
+    const [high, low] = seenKey(form.key, canonical.key)
+    this.proposals++
+    const known = this.seen.find(high, low)
+    if (known !== null) {
+      this.stalled++
+      return { merit: known, isNew: false }
+    }
+    const outcome = this.outcome(form, canonical.class, canonical.key)
+    const witness = (): Float64Array => transportHeights(witnessHeights(cls, heights), canonical.relabelling)
+    const merit = meritOf(outcome)
+    this.stalled = 0
+    this.evaluations++
+    this.seen.add(high, low, merit.kind, merit.value)
+    this.count(outcome)
+    this.sample.offer({ polytopeKey: form.key, classKey: canonical.key, ...merit }, this.stream)
+    if (this.top.admits(outcome, canonical.key)) {
+      this.entered.add(canonical.key)
+      this.top.insert({
+        polytopeKey: form.key,
+        classKey: canonical.key,
+        outcome,
+        heights: codeOfHeights(witness()),
+      })
+    }
+    this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness })
+    return { merit, isNew: true }
+  }
+
+  countAccepted(): void {
+    this.accepted++
+  }
+
+  countRestart(): void {
+    this.restarts++
+  }
+
+  end(reason: RunEnd): void {
+    this.ended = reason
+  }
+
+  private outcome(form: NormalForm, canonical: TwoFaceClass, key: string): Outcome {
+    const { memo, instrument } = this.hooks
+    const remembered = memo?.get(key)
+    if (remembered !== undefined) return remembered
+    const candidate = buildCandidate(form, canonical, key)
+    const outcome = evaluateRule(this.problem.rule, instrument?.(candidate) ?? candidate)
+    memo?.set(key, outcome)
+    return outcome
+  }
+
+  private count(outcome: Outcome): void {
+    switch (outcome.kind) {
+      case 'feasible':
+        this.feasible++
+        if (outcome.hit === true) this.hits++
+        if (outcome.hitUndefined !== undefined) this.hitsUndefined++
+        this.histogram.add(outcome.score)
+        if (this.curve.length === 0 || outcome.score > this.curve[this.curve.length - 1][1])
+          this.curve = withStep(this.curve, this.evaluations, outcome.score)
+        break
+      case 'infeasible':
+        this.infeasible++
+        for (const { label } of outcome.failed) this.failures.set(label, (this.failures.get(label) ?? 0) + 1)
+        break
+      case 'undefined':
+        this.undefined++
+        if (this.reasons.has(outcome.reason) || this.reasons.size < mostReasons)
+          this.reasons.set(outcome.reason, (this.reasons.get(outcome.reason) ?? 0) + 1)
+    }
+  }
+}
+
+/** @throws InputError when the state belongs to another problem */
+export function requireSameProblem(state: SearchState, digest: string): void {
+  if (state.problem === digest) return
+  throw new InputError(
+    'state.other-problem',
+    'This state belongs to another search: scope, rule, method, settings or the engine version differ.',
+    'state',
+    state.problem,
+  )
+}

@@ -1,0 +1,51 @@
+import type { NormalForm } from '../geometry/normalForm.ts'
+import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
+import type { Merit } from './merit.ts'
+import type { RandomStream } from './randomStream.ts'
+import type { Json, RunEnd } from './state.ts'
+
+/** What the run says of a proposed class. */
+export interface Judgement {
+  readonly merit: Merit
+  /** True when it was scored now: one evaluation of the budget. */
+  readonly isNew: boolean
+}
+
+/** What a method may see and use of its run. Randomness comes from `stream` only. */
+export interface Run {
+  readonly stream: RandomStream
+  readonly polytopeCount: number
+  /** The island's share of the budget, and how much of it is used. */
+  readonly budget: number
+  readonly evaluations: number
+  readonly patience: number
+  /** Proposals in a row without a new class. */
+  readonly stalled: number
+  form(polytope: number): NormalForm
+  /** False when the rule's requirements on the polytope alone fail: no candidate on it can be feasible. */
+  polytopePasses(polytope: number): boolean
+  /**
+   * Proposes a class with heights inside it: looked up among the classes seen, else scored. A step of a method
+   * calls this at most once, since a segment may end after any evaluation.
+   */
+  judge(polytope: number, cls: TwoFaceClass, heights: ArrayLike<number>): Judgement
+  countAccepted(): void
+  countRestart(): void
+  end(reason: RunEnd): void
+}
+
+/** A method at work on one island. */
+export interface Chain {
+  /** One step: at most one call of `Run.judge`. All that the next step depends on is in `state()`. */
+  step(): void
+  state(): Json
+}
+
+/** A way to search. One file per method; `methods.ts` lists them. */
+export interface Method {
+  readonly name: string
+  /** One line, for people. */
+  readonly description: string
+  /** A chain from its stored state; null: at its start. */
+  open(run: Run, state: Json | null): Chain
+}

@@ -1,0 +1,90 @@
+import { interleaved, type Curve } from './curve.ts'
+import type { RunEnd, SearchCounts, SearchState } from './state.ts'
+
+/** How far an island is. */
+export interface IslandProgress extends SearchCounts {
+  readonly island: number
+  readonly budget: number
+  readonly best: number | null
+  readonly bestKey: string | null
+  readonly curve: Curve
+  readonly ended: RunEnd | null
+  /** Budget used up, or ended before. */
+  readonly done: boolean
+}
+
+export function progressOf(state: SearchState): IslandProgress {
+  const best = bestOf(state)
+  return {
+    island: state.island,
+    budget: state.budget,
+    evaluations: state.evaluations,
+    proposals: state.proposals,
+    accepted: state.accepted,
+    restarts: state.restarts,
+    feasible: state.feasible,
+    infeasible: state.infeasible,
+    undefined: state.undefined,
+    hits: state.hits,
+    hitsUndefined: state.hitsUndefined,
+    best: best?.score ?? null,
+    bestKey: best?.key ?? null,
+    curve: state.curve,
+    ended: state.ended,
+    done: state.ended !== null || state.evaluations >= state.budget,
+  }
+}
+
+/** Score and key of the best feasible candidate. */
+function bestOf(state: SearchState): { score: number; key: string } | null {
+  const [first] = state.top
+  return first?.outcome.kind === 'feasible' ? { score: first.outcome.score, key: first.classKey } : null
+}
+
+/** Islands as one search. */
+export interface SearchProgressReport extends SearchCounts {
+  readonly budget: number
+  readonly best: number | null
+  readonly bestKey: string | null
+  /** Best so far over the evaluations of all islands, taken in turn. */
+  readonly curve: Curve
+  readonly islands: readonly Pick<IslandProgress, 'island' | 'evaluations' | 'best' | 'ended' | 'done'>[]
+  readonly done: boolean
+  /** Every island ended because the space holds nothing new. */
+  readonly exhausted: boolean
+}
+
+/** @param islands one state per island, in order */
+export function mergedProgress(islands: readonly SearchState[]): SearchProgressReport {
+  const parts = islands.map(progressOf)
+  const total = (pick: (part: IslandProgress) => number): number =>
+    parts.reduce((sum, part) => sum + pick(part), 0)
+  const leader = parts.reduce<IslandProgress | null>(
+    (best, part) => (part.best !== null && (best?.best == null || part.best > best.best) ? part : best),
+    null,
+  )
+  return {
+    budget: total((part) => part.budget),
+    evaluations: total((part) => part.evaluations),
+    proposals: total((part) => part.proposals),
+    accepted: total((part) => part.accepted),
+    restarts: total((part) => part.restarts),
+    feasible: total((part) => part.feasible),
+    infeasible: total((part) => part.infeasible),
+    undefined: total((part) => part.undefined),
+    hits: total((part) => part.hits),
+    hitsUndefined: total((part) => part.hitsUndefined),
+    best: leader?.best ?? null,
+    bestKey: leader?.bestKey ?? null,
+    curve: interleaved(parts),
+    islands: parts.map(({ island, evaluations, best, ended, done }) => ({
+      island,
+      evaluations,
+      best,
+      ended,
+      done,
+    })),
+    done: parts.every((part) => part.done),
+    exhausted: parts.length > 0 && parts.every((part) => part.ended === 'space-exhausted'),
+  }
+}

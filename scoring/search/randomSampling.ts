@@ -1,0 +1,22 @@
+import type { Method } from './method.ts'
+import { drawNull, nullLaw } from './sampling.ts'
+
+/**
+ * Independent draws by the null's law: what a search is compared with. Polytopes that the rule turns away stay
+ * in: nobody selected the candidates.
+ */
+export const randomSampling: Method = {
+  name: 'random',
+  description: `Independent random candidates. ${nullLaw.description}`,
+  open(run) {
+    return {
+      step() {
+        const polytope = run.stream.below(run.polytopeCount)
+        const { class: cls, heights } = drawNull(run.form(polytope).polytope, run.stream)
+        run.judge(polytope, cls, heights)
+        if (run.stalled >= run.patience) run.end('space-exhausted')
+      },
+      state: () => null,
+    }
+  },
+}

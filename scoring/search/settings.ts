@@ -1,0 +1,47 @@
+import { z } from 'zod'
+import { heightCodeBytes } from './heightsCode.ts'
+import { seenSlotBytes } from './seenTable.ts'
+
+/**
+ * Settings of a run. They are part of what a result depends on, together with scope, rule, method, seed and
+ * engine version; how a run is cut into segments or spread over threads is not.
+ */
+export const searchSettingsSchema = z.strictObject({
+  /** Distinct evaluations over all islands. */
+  budget: z.number().int().min(1).max(10_000_000),
+  /** Independent chains; each has its share of the budget. */
+  islands: z.number().int().min(1).max(64).default(1),
+  /** How many of the best distinct candidates an island keeps. */
+  keep: z.number().int().min(1).max(500).default(100),
+  /** Proposals in a row without a new class after which a polytope counts as exhausted. */
+  patience: z.number().int().min(10).max(1_000_000).default(2000),
+  /** Rows of the uniform sample of all evaluations that an island keeps. */
+  sample: z.number().int().min(0).max(10_000).default(256),
+})
+export type SearchSettings = z.infer<typeof searchSettingsSchema>
+
+/** The part of the budget that belongs to one island: shares differ by one at most. */
+export function islandBudget(
+  { budget, islands }: Pick<SearchSettings, 'budget' | 'islands'>,
+  island: number,
+): number {
+  return Math.floor(budget / islands) + (island < budget % islands ? 1 : 0)
+}
+
+/** What a state may weigh as JSON, per island. */
+export const stateLimitBytes = 2_000_000
+
+const mostSlots = 2 ** 16
+const fewestSlots = 2 ** 8
+
+/**
+ * Slots of the table of classes seen: a power of two at least twice the island's budget, so that nothing is
+ * forgotten, within 2^16 and within what the kept candidates leave of `stateLimitBytes`.
+ */
+export function seenCapacity(settings: SearchSettings, island: number, pointCount: number): number {
+  const keptBytes = settings.keep * (pointCount * heightCodeBytes + 600) + settings.sample * 120 + 60_000
+  let slots = fewestSlots
+  while (slots < mostSlots && slots < 2 * islandBudget(settings, island)) slots *= 2
+  while (slots > fewestSlots && slots * seenSlotBytes + keptBytes > stateLimitBytes) slots /= 2
+  return slots
+}
