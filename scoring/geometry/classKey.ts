@@ -57,30 +57,28 @@ export function classKey(form: NormalForm, canonical: TwoFaceClass): string {
  */
 function leastImage(form: NormalForm, cls: TwoFaceClass): Int32Array {
   const group = form.automorphisms
-  if (group.length === 1) return group[0]
-  const moving = movingTriangles(cls)
+  const moving = group.length === 1 ? new Int32Array(0) : movingTriangles(cls)
   if (moving.length === 0) return group[0]
+  const n = form.polytope.pointCount
+  const codes = new Int32Array(moving.length / 3)
   let best = group[0]
-  let bestCodes = imageCodes(moving, best, form.polytope.pointCount).sort()
+  imageCodes(moving, best, n, codes)
+  let least = new CodeSet(codes)
   for (let g = 1; g < group.length; g++) {
-    const codes = imageCodes(moving, group[g], form.polytope.pointCount)
-    let first = codes[0]
-    for (let t = 1; t < codes.length; t++) if (codes[t] < first) first = codes[t]
-    if (first > bestCodes[0]) continue
-    codes.sort()
-    let t = 0
-    while (t < codes.length && codes[t] === bestCodes[t]) t++
-    if (t < codes.length && codes[t] < bestCodes[t]) {
+    imageCodes(moving, group[g], n, codes)
+    if (!least.precedes(codes)) {
       best = group[g]
-      bestCodes = codes
+      least = new CodeSet(codes)
     }
   }
   return best
 }
 
-/** One number per triangle's image, in the lexicographic order of sorted triangles. */
-function imageCodes(triangles: Int32Array, image: Int32Array, n: number): Float64Array {
-  const codes = new Float64Array(triangles.length / 3)
+/**
+ * One number per triangle's image, in the lexicographic order of sorted triangles. It stays below 2^31: no
+ * four-dimensional reflexive polytope has more than 680 lattice points (Kreuzer, Skarke, hep-th/0002240).
+ */
+function imageCodes(triangles: Int32Array, image: Int32Array, n: number, codes: Int32Array): void {
   for (let t = 0; t < codes.length; t++) {
     const p = image[triangles[3 * t]]
     const q = image[triangles[3 * t + 1]]
@@ -89,7 +87,50 @@ function imageCodes(triangles: Int32Array, image: Int32Array, n: number): Float6
     const high = p > q ? (p > r ? p : r) : q > r ? q : r
     codes[t] = (low * n + (p + q + r - low - high)) * n + high
   }
-  return codes
+}
+
+/** A set of numbers, sorted and hashed, to compare with others of the same size without sorting them. */
+class CodeSet {
+  private readonly sorted: Int32Array
+  /** Open addressing: position in `sorted` plus one, 0 where empty. */
+  private readonly table: Int32Array
+  private readonly seen: Int32Array
+  private round = 0
+
+  constructor(codes: Int32Array) {
+    this.sorted = codes.slice().sort()
+    this.seen = new Int32Array(codes.length)
+    this.table = new Int32Array(2 ** Math.ceil(Math.log2(4 * codes.length)))
+    for (let t = 0; t < this.sorted.length; t++) {
+      let slot = this.slot(this.sorted[t])
+      while (this.table[slot] !== 0) slot = (slot + 1) & (this.table.length - 1)
+      this.table[slot] = t + 1
+    }
+  }
+
+  private slot(code: number): number {
+    const mixed = Math.imul(code, 0x9e3779b1)
+    return (mixed ^ (mixed >>> 15)) & (this.table.length - 1)
+  }
+
+  /** True when this set, sorted, comes before the other or is equal to it. */
+  precedes(codes: Int32Array): boolean {
+    const { sorted, table, seen } = this
+    const round = ++this.round
+    let foreign = Infinity
+    for (let t = 0; t < codes.length; t++) {
+      const code = codes[t]
+      if (code >= foreign) continue
+      let slot = this.slot(code)
+      while (table[slot] !== 0 && sorted[table[slot] - 1] !== code) slot = (slot + 1) & (table.length - 1)
+      if (table[slot] === 0) foreign = code
+      else seen[table[slot] - 1] = round
+    }
+    // Elements above the least foreign one need not be known: they cannot be the least difference.
+    let own = 0
+    while (own < sorted.length && seen[own] === round) own++
+    return own === sorted.length || sorted[own] < foreign
+  }
 }
 
 const movable = new WeakMap<TwoFaceClass['polytope'], Uint8Array>()
