@@ -29,11 +29,10 @@ function plain(entry: ReferenceEntry): Completion {
   return { label: entry.name, kind: entry.kind, detail, info: entry.description }
 }
 
-function callable(entry: ReferenceEntry): Completion {
-  const insert =
-    entry.kind === 'fold' && entry.name !== 'quantile' ? `${entry.name}(x in  : )` : `${entry.name}()`
-  const cursor =
-    entry.kind === 'fold' && entry.name !== 'quantile' ? insert.indexOf('in ') + 3 : insert.length - 1
+function callable(entry: ReferenceEntry, variable: string): Completion {
+  const order = entry.name === 'quantile' ? '0.5, ' : ''
+  const insert = entry.kind === 'fold' ? `${entry.name}(${order}${variable} in  : )` : `${entry.name}()`
+  const cursor = entry.kind === 'fold' ? insert.indexOf(' in ') + 4 : insert.length - 1
   return { label: entry.name, kind: entry.kind, detail: entry.form, info: entry.description, insert, cursor }
 }
 
@@ -92,6 +91,8 @@ function operands(around: Surroundings): Completion[] {
     detail: set ? `runs through ${set.name}` : 'variable',
     info: 'The variable of a fold around this place.',
   }))
+  const used = new Set([...around.variables.keys(), ...around.lets])
+  const free = ['x', 'y', 'z', 'u', 'v', 'w'].find((letter) => !used.has(letter)) ?? 'x1'
   const lets = around.lets.map((label): Completion => ({
     label,
     kind: 'name',
@@ -104,7 +105,7 @@ function operands(around: Surroundings): Completion[] {
     ...ENTRIES.filter((entry) => entry.kind === 'observable').map(plain),
     ...ENTRIES.filter(
       (entry) => entry.kind === 'fold' || entry.kind === 'function' || entry.kind === 'relation',
-    ).map(callable),
+    ).map((entry) => callable(entry, free)),
     ...words('not', 'true', 'false'),
   ]
 }

@@ -4,6 +4,8 @@ export const RULE_LIMITS = {
   textLength: 20_000,
   /** Nodes of the syntax tree, all statements together. */
   nodes: 2_000,
+  /** Operators of one statement. */
+  operators: 250,
   /** Parentheses, calls, signs and exponents inside each other. */
   nesting: 100,
   /** Quantifiers and folds inside each other. */

@@ -6,6 +6,7 @@ import { RULE_LIMITS } from './limits.ts'
 import { nearestName } from './nearest.ts'
 import { cutIntoSegments, type Segment } from './segments.ts'
 import { explainSyntaxError } from './syntaxErrors.ts'
+import { statementTooLarge } from './size.ts'
 import { STATEMENT_KEYWORDS } from './words.ts'
 
 /** A statement that could not be read. A `let` still declares its name, so that its uses bring no second error. */
@@ -80,6 +81,12 @@ export function readRule(text: string): Reading {
     waiting = segment.after.filter((comment) => comment.from >= lineEnd).map(commentText)
     previousEnd = trailing[0]?.to ?? segment.to
     const keyword = segment.keyword as StatementKind
+    const tooLarge = statementTooLarge(segment)
+    if (tooLarge) {
+      drafts.push(tooLarge)
+      statements.push(broken(segment, keyword))
+      return
+    }
     const finding = explainSyntaxError(text, segment, next, drafts.length < RULE_LIMITS.issues)
     if (finding || spoilt) {
       if (!spoilt) {

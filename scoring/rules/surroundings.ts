@@ -47,7 +47,8 @@ export function surroundingsAt(text: string, position: number): Surroundings {
   const all = tokenise(text.slice(0, position))
   const last = all[all.length - 1]
   const openText =
-    last?.kind === 'comment' || (last?.text === '"' && !text.slice(last.from, position).includes('\n'))
+    last?.kind === 'comment' ||
+    all.some((token) => token.text === '"' && !text.slice(token.from, position).includes('\n'))
   const unfinished = last?.kind === 'word' && last.to === position
   const before = all.filter((token) => token.kind !== 'comment' && !(unfinished && token === last))
   const lets: string[] = []
