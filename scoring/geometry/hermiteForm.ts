@@ -42,7 +42,7 @@ function clearBelow(rows: Float64Array, width: number, column: number, pivot: nu
     for (let i = 0; i < width && (smallest !== pivot || sign < 0); i++) {
       const entry = rows[smallest * width + i]
       rows[smallest * width + i] = rows[pivot * width + i]
-      rows[pivot * width + i] = sign * entry
+      rows[pivot * width + i] = sign * entry + 0
     }
     if (nonZero === 1) return true
     for (let row = pivot + 1; row < 4; row++) {

@@ -37,7 +37,11 @@ export function normalForm(polytope: Polytope): NormalForm {
   const { vertexCount, pointCount } = polytope
   const basis = reducedBasis(rowsOf(polytope.points.subarray(0, 4 * vertexCount)))
   const reduced = transform(basis.matrix, polytope.points)
-  const { form, orders } = leastHermiteForm(reduced, vertexCount, vertexOrdersOf(polytope))
+  const { form, orders } = leastHermiteForm(
+    reduced,
+    vertexCount,
+    vertexOrdersOf(reduced, vertexCount, transform(basis.dual, polytope.facets)),
+  )
   const columns = columnsOf(form, vertexCount)
   const short = reducedBasis(rowsOf(columns))
   const vertices = transform(short.matrix, columns)
@@ -69,8 +73,12 @@ export function normalForm(polytope: Polytope): NormalForm {
   }
 }
 
-function vertexOrdersOf(polytope: Polytope): number[][] {
-  const { points, facets, vertexCount, facetCount } = polytope
+function vertexOrdersOf(
+  points: readonly number[],
+  vertexCount: number,
+  facets: readonly number[],
+): number[][] {
+  const facetCount = facets.length / 4
   const pairing = new Int32Array(vertexCount * facetCount)
   for (let v = 0; v < vertexCount; v++) {
     for (let a = 0; a < facetCount; a++) {

@@ -1,10 +1,12 @@
+import { InputError } from '../errors.ts'
 import { facePlane } from './facePlane.ts'
 import type { Faces } from './faces.ts'
 import { facesOf } from './faces.ts'
 import { hodgeNumbers, latticeLength } from './hodge.ts'
 import { compareLexicographic } from './integers.ts'
-import type { LatticeCount } from './latticeCount.ts'
+import type { CarriedPoint, LatticeCount } from './latticeCount.ts'
 import { countLatticePoints } from './latticeCount.ts'
+import { applyBig, reducedBasis, rowsOf, transform, transposed } from './latticeReduction.ts'
 import { reflexiveHull } from './reflexiveHull.ts'
 
 /**
@@ -74,14 +76,24 @@ export interface TwoFace {
  *   .facet-distance; paths are relative to `rows`
  */
 export function polytopeFromPoints(rows: readonly (readonly number[])[]): Polytope {
-  const found = reflexiveHull(rows)
-  const vertices = found.vertices.flat()
-  const facets = found.facets.flat()
-  const faces = facesOf(vertices, facets)
-  const own = countLatticePoints(vertices, facets, faces)
-  // In the dual, facets and vertices change places, and so do 2-faces and edges.
-  const dual = countLatticePoints(facets, vertices, { edges: faces.twoFaces, twoFaces: faces.edges })
-  return assemble(vertices, facets, faces, own, dual)
+  const { vertices, facets } = reflexiveHull(rows)
+  return assemble(vertices.map(storable), facets.map(storable))
+}
+
+/**
+ * The same polytope in a reduced basis, where its coordinates are small: for points whose coordinates as given are
+ * too large to keep (up to 2^53), when only the class under GL(4,Z) matters.
+ *
+ * @throws InputError as `polytopeFromPoints`, naming facets in the coordinates given
+ */
+export function reducedPolytope(rows: readonly (readonly number[])[]): Polytope {
+  const { vertices, facets } = reflexiveHull(rows)
+  const exact = vertices.map((vertex) => vertex.map(BigInt))
+  const { matrix, dual } = reducedBasis(exact)
+  return assemble(
+    exact.map((vertex) => storable(applyBig(matrix, vertex))),
+    facets.map((normal) => storable(applyBig(dual, normal))),
+  )
 }
 
 /** The dual polytope, on the M side: the hull of the facet normals. Its facet normals are this one's vertices. */
@@ -91,22 +103,49 @@ export function dualPolytope(polytope: Polytope): Polytope {
   return polytopeFromPoints(rows)
 }
 
-function assemble(
-  vertices: readonly number[],
-  facets: readonly number[],
-  faces: Faces,
-  own: LatticeCount,
-  dual: LatticeCount,
-): Polytope {
+/** What the integer arrays of a polytope can hold. */
+const coordinateLimit = 2 ** 31 - 1
+
+function storable(vector: readonly (number | bigint)[]): number[] {
+  for (const entry of vector) {
+    if (entry <= coordinateLimit && entry >= -coordinateLimit) continue
+    throw new InputError(
+      'polytope.coordinates-too-large',
+      `The coordinates are too large: the vertex or facet normal (${vector.join(', ')}) goes beyond ${coordinateLimit}. Give the points in a lattice basis in which they are shorter.`,
+      '',
+      vector.map(String),
+    )
+  }
+  return vector.map(Number)
+}
+
+/** A point interior to an edge or 2-face: coordinates as given and in the reduced basis. */
+interface CarriedTwice extends CarriedPoint {
+  readonly given: readonly number[]
+}
+
+function assemble(vertexRows: number[][], facetRows: number[][]): Polytope {
+  const vertices = vertexRows.sort(compareLexicographic).flat()
+  const facets = facetRows.sort(compareLexicographic).flat()
+  const basis = reducedBasis(rowsOf(vertices))
+  const shortVertices = transform(basis.matrix, vertices)
+  const shortFacets = transform(basis.dual, facets)
+  const faces = facesOf(shortVertices, shortFacets)
+  const own = countLatticePoints(shortVertices, shortFacets, faces)
+  const dual = countDualPoints(shortVertices, shortFacets, faces)
+
+  const back = transposed(basis.dual)
+  const inEdges = inOrder(own.inEdges, back)
+  const inTwoFaces = inOrder(own.inTwoFaces, back)
   const vertexCount = vertices.length / 4
-  const inEdges = [...own.inEdges].sort((a, b) => compareLexicographic(a.point, b.point))
-  const inTwoFaces = [...own.inTwoFaces].sort((a, b) => compareLexicographic(a.point, b.point))
   const edgePoints = vertexCount + inEdges.length
-  const points = Int32Array.from([...vertices, ...[...inEdges, ...inTwoFaces].flatMap(({ point }) => point)])
+  const carried = [...inEdges, ...inTwoFaces]
+  const points = Int32Array.from([...vertices, ...carried.flatMap(({ given }) => given)])
+  const short = Float64Array.from([...shortVertices, ...carried.flatMap(({ point }) => point)])
   const pointCount = points.length / 4
   const carrierDimension = new Uint8Array(pointCount).fill(1, vertexCount).fill(2, edgePoints)
-  const dualLengths = faces.twoFaces.map(({ ends }) => latticeLength(facets, ends[0], ends[1]))
-  const edgeLengths = faces.edges.map(({ ends }) => latticeLength(vertices, ends[0], ends[1]))
+  const dualLengths = faces.twoFaces.map(({ ends }) => latticeLength(shortFacets, ends[0], ends[1]))
+  const edgeLengths = faces.edges.map(({ ends }) => latticeLength(shortVertices, ends[0], ends[1]))
 
   const dualInterior = new Int32Array(pointCount)
   const components = new Int32Array(pointCount).fill(1)
@@ -131,14 +170,30 @@ function assemble(
     components,
     facets: Int32Array.from(facets),
     facetCount: facets.length / 4,
-    twoFaces: faces.twoFaces.map(({ ends, on }, f) =>
-      twoFace(points, ends, on, onTwoFace[f], dualLengths[f]),
-    ),
-    edges: onEdge.map((members) => alongEdge(points, members)),
+    twoFaces: faces.twoFaces.map(({ ends, on }, f) => twoFace(short, ends, on, onTwoFace[f], dualLengths[f])),
+    edges: onEdge.map((members) => alongEdge(short, members)),
     ...hodgeNumbers(faces, own, dual, dualLengths, edgeLengths),
     latticePoints: own.total,
     dualLatticePoints: dual.total,
   }
+}
+
+/** In the dual, facets and vertices change places, and so do 2-faces and edges. */
+function countDualPoints(vertices: readonly number[], facets: readonly number[], faces: Faces): LatticeCount {
+  const { matrix, dual } = reducedBasis(rowsOf(facets))
+  const dualFaces = { edges: faces.twoFaces, twoFaces: faces.edges }
+  return countLatticePoints(transform(matrix, facets), transform(dual, vertices), dualFaces)
+}
+
+/** Points with their coordinates as given, in lexicographic order of these. */
+function inOrder(carried: readonly CarriedPoint[], back: readonly (readonly bigint[])[]): CarriedTwice[] {
+  const flat = transform(
+    back,
+    carried.flatMap(({ point }) => point),
+  )
+  return carried
+    .map(({ point, face }, i) => ({ point, face, given: flat.slice(4 * i, 4 * i + 4) }))
+    .sort((a, b) => compareLexicographic(a.given, b.given))
 }
 
 /** Vertices and edge points of each 2-face, ascending. */
@@ -163,7 +218,7 @@ function pointsOfTwoFaces(
 }
 
 function twoFace(
-  points: Int32Array,
+  points: Float64Array,
   facets: readonly [number, number],
   vertices: readonly number[],
   members: readonly number[],
@@ -186,7 +241,7 @@ function twoFace(
 }
 
 /** The points of an edge in order along it; the first two given are its ends. */
-function alongEdge(points: Int32Array, members: readonly number[]): Int32Array {
+function alongEdge(points: Float64Array, members: readonly number[]): Int32Array {
   const [start, end] = members
   const along = (i: number): number => latticeLength(points, start, i)
   return Int32Array.from([start, ...members.slice(2).sort((i, j) => along(i) - along(j)), end])

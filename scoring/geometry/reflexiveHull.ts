@@ -5,10 +5,11 @@ import { applyBig, reducedBasis, transposed } from './latticeReduction.ts'
 import { linearForm } from './linearForm.ts'
 import { checkedPoints } from './polytopeInput.ts'
 
-/** Vertices and facet normals of a reflexive polytope in the coordinates given, each in lexicographic order. */
+/** Vertices and primitive inner facet normals of a reflexive polytope, in the coordinates given. */
 export interface ReflexiveHull {
+  /** Lexicographic order. */
   readonly vertices: readonly (readonly number[])[]
-  readonly facets: readonly (readonly number[])[]
+  readonly facets: readonly (readonly bigint[])[]
 }
 
 /** Largest coordinate in a reduced basis: the hull is exact up to here, whatever the points. */
@@ -16,9 +17,6 @@ const reducedLimit = 2000
 
 /** Coordinates up to this size are taken as they are; larger ones go through a reduced basis first. */
 const plainLimit = 100
-
-/** What the integer arrays of a polytope can hold. */
-const coordinateLimit = 2 ** 31 - 1
 
 /**
  * The hull of the points, certified to be reflexive: the origin inside and every facet at lattice distance 1.
@@ -47,7 +45,7 @@ export function reflexiveHull(rows: readonly (readonly number[])[]): ReflexiveHu
   for (const facet of facets) if (facet.offset !== 1) throw wrongDistance(facet)
   return {
     vertices: found.vertices.map((index) => points[index]).sort(compareLexicographic),
-    facets: facets.map((facet) => facet.normal.map(storable)).sort(compareLexicographic),
+    facets: facets.map(({ normal }) => normal),
   }
 }
 
@@ -68,21 +66,8 @@ function reducedPoints(points: readonly (readonly number[])[]): {
       return Number(entry)
     }),
   )
-  for (const point of points) for (const entry of point) storable(entry)
   const back = transposed(matrix)
   return { reduced, normalIn: (normal) => applyBig(back, normal.map(BigInt)) }
-}
-
-function storable(entry: number | bigint): number {
-  if (entry > coordinateLimit || entry < -coordinateLimit) {
-    throw new InputError(
-      'polytope.coordinates-too-large',
-      `A vertex or facet normal has a coordinate of ${entry}; at most ${coordinateLimit} in size can be kept. Give the points in a basis in which they are shorter.`,
-      '',
-      String(entry),
-    )
-  }
-  return Number(entry)
 }
 
 function tooLarge(what: string, limit: number): InputError {
