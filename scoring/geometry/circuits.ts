@@ -1,5 +1,6 @@
+import { meshOfClass } from './classMesh.ts'
 import { circuitCoefficient, previous } from './faceMesh.ts'
-import { meshOfClass, type TwoFaceClass } from './twoFaceClass.ts'
+import type { TwoFaceClass } from './twoFaceClass.ts'
 
 /**
  * The circuits of a class, one per edge ij interior to a 2-face, k and l opposite:

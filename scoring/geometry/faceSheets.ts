@@ -51,6 +51,15 @@ export function heightBound(polytope: Polytope): number {
   return faceSheets(polytope).heightBound
 }
 
+/** The 2-face with three given points that are not on a line, or -1. */
+export function faceWith({ corner, polytope }: FaceSheets, i: number, j: number, k: number): number {
+  const n = polytope.pointCount
+  for (let f = 0; f < polytope.twoFaces.length; f++) {
+    if (corner[f * n + i] >= 0 && corner[f * n + j] >= 0 && corner[f * n + k] >= 0) return f
+  }
+  return -1
+}
+
 function layOut(polytope: Polytope): FaceSheets {
   const faces = polytope.twoFaces
   const start = new Int32Array(faces.length + 1)

@@ -1,8 +1,9 @@
 import { InvariantError } from '../errors.ts'
-import { faceSheets } from './faceSheets.ts'
+import { classOfTriangles } from './classMesh.ts'
+import { faceSheets, faceWith } from './faceSheets.ts'
 import type { NormalForm } from './normalForm.ts'
 import type { Polytope } from './polytope.ts'
-import { classOfTriangles, faceWith, type TwoFaceClass } from './twoFaceClass.ts'
+import type { TwoFaceClass } from './twoFaceClass.ts'
 
 /**
  * The image of a class under a map of points that comes from an isomorphism of polytopes: point i goes to point

@@ -1,10 +1,11 @@
 import { InvariantError } from '../errors.ts'
 import { isGeneric } from './circuits.ts'
+import { classOfMesh, meshOfClass } from './classMesh.ts'
 import { circuitCoefficient, copyMesh, previous, type FaceMesh } from './faceMesh.ts'
 import { faceSheets } from './faceSheets.ts'
 import { checkedHeights, cornerHeights } from './heights.ts'
 import { circuitValue, regularise, type CircuitSign } from './polygonTriangulation.ts'
-import { classOfMesh, meshOfClass, type TwoFaceClass } from './twoFaceClass.ts'
+import type { TwoFaceClass } from './twoFaceClass.ts'
 
 export interface LineWalk {
   /** The classes met after the first, in order, each with integer heights inside it. */

@@ -1,5 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import { flip, flippableEdges } from '../../scoring/geometry/flips.ts'
+import { quadraticHeights } from '../../scoring/geometry/heights.ts'
 import { isRegular } from '../../scoring/geometry/regularity.ts'
 import { referenceClass, type TwoFaceClass } from '../../scoring/geometry/twoFaceClass.ts'
 import { polygonAlone, rectangle } from '../scoring/classes/polygonAlone.ts'
@@ -21,7 +22,10 @@ function allTriangulations(points: readonly (readonly [number, number])[]): TwoF
   return found
 }
 
-const regular = (classes: TwoFaceClass[]): number => classes.filter((cls) => isRegular(cls).regular).length
+function regular(classes: TwoFaceClass[]): number {
+  const near = quadraticHeights(classes[0].polytope)
+  return classes.filter((cls) => isRegular(cls, { near }).regular).length
+}
 
 // Kaibel, Ziegler, Counting lattice triangulations, math/0211268; the table counts all unimodular triangulations,
 // regular or not. The number of regular ones is our own count.

@@ -1,16 +1,13 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { InputError } from '../../../scoring/errors.ts'
+import { classFromTriangles } from '../../../scoring/geometry/classFromTriangles.ts'
 import { isGeneric } from '../../../scoring/geometry/circuits.ts'
 import { heightBound } from '../../../scoring/geometry/faceSheets.ts'
 import { quadraticHeights } from '../../../scoring/geometry/heights.ts'
 import { normalForm } from '../../../scoring/geometry/normalForm.ts'
 import { polytopeFromPoints } from '../../../scoring/geometry/polytope.ts'
-import {
-  classFromHeights,
-  classFromTriangles,
-  referenceClass,
-} from '../../../scoring/geometry/twoFaceClass.ts'
+import { classFromHeights, referenceClass } from '../../../scoring/geometry/twoFaceClass.ts'
 import { bundledPolytopes, largePolytope } from '../../reference/bundledPolytopes.ts'
 import { polygonAlone, rectangle } from './polygonAlone.ts'
 import { codeOf, isomorphicCopy, unimodular } from './copies.ts'

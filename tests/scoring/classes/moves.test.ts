@@ -1,6 +1,8 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { InvariantError } from '../../../scoring/errors.ts'
+import { classFromTriangles } from '../../../scoring/geometry/classFromTriangles.ts'
+import { crossClasses } from '../../../scoring/geometry/crossClasses.ts'
 import { circuits, circuitValues, isGeneric } from '../../../scoring/geometry/circuits.ts'
 import { clampToFine } from '../../../scoring/geometry/clampToFine.ts'
 import { heightBound } from '../../../scoring/geometry/faceSheets.ts'
@@ -103,6 +105,9 @@ describe('a flip', () => {
           Array.from(c.faceOf, (f, t) => `${c.triangles.subarray(3 * t, 3 * t + 3).join()} on ${f}`)
         const before = new Set(names(cls))
         expect(names(flipped).filter((name) => !before.has(name)).length).toBe(2)
+        const ordered = classFromTriangles(cls.polytope, flipped.triangles)
+        expect(ordered.triangles).toEqual(flipped.triangles)
+        expect(ordered.faceOf).toEqual(flipped.faceOf)
         const back = flip(flipped, oppositeDiagonal(cls, edge))
         expect(back?.triangles).toEqual(cls.triangles)
         expect(back?.faceOf).toEqual(cls.faceOf)
@@ -117,6 +122,26 @@ describe('a flip', () => {
     expect(flippableEdges(cls)).toEqual([])
     expect(flip(cls, { i: 0, j: 1 })).toBeUndefined()
     expect(() => flip(cls, { i: 0, j: 2 })).toThrow(InvariantError)
+  })
+})
+
+describe('a crossing', () => {
+  it('takes every 2-face whole from one of the parents', () => {
+    fc.assert(
+      fc.property(fineHeights, fc.nat(1e6), fc.infiniteStream(fc.nat(1)), (from, seed, choice) => {
+        const one = from.class
+        const other = farHeights(from.polytope, seed).class
+        const fromOther = from.polytope.twoFaces.map(() => choice.next().value)
+        const child = crossClasses(one, other, fromOther)
+        expect(classFromTriangles(from.polytope, child.triangles).faceOf).toEqual(child.faceOf)
+        const onFace = (cls: TwoFaceClass, f: number): string[] =>
+          Array.from(cls.faceOf.keys())
+            .filter((t) => cls.faceOf[t] === f)
+            .map((t) => cls.triangles.subarray(3 * t, 3 * t + 3).join())
+        fromOther.forEach((taken, f) => expect(onFace(child, f)).toEqual(onFace(taken ? other : one, f)))
+      }),
+      { numRuns: 30 },
+    )
   })
 })
 

@@ -1,5 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
+import { classFromTriangles } from '../../../scoring/geometry/classFromTriangles.ts'
 import { circuits, isGeneric } from '../../../scoring/geometry/circuits.ts'
 import { flip, flippableEdges } from '../../../scoring/geometry/flips.ts'
 import { genericWitness } from '../../../scoring/geometry/genericWitness.ts'
@@ -7,12 +8,7 @@ import { quadraticHeights } from '../../../scoring/geometry/heights.ts'
 import { normalForm } from '../../../scoring/geometry/normalForm.ts'
 import { polytopeFromPoints } from '../../../scoring/geometry/polytope.ts'
 import { decideInIntegers, isRegular, type Regularity } from '../../../scoring/geometry/regularity.ts'
-import {
-  classFromTriangles,
-  fineClass,
-  referenceClass,
-  type TwoFaceClass,
-} from '../../../scoring/geometry/twoFaceClass.ts'
+import { fineClass, referenceClass, type TwoFaceClass } from '../../../scoring/geometry/twoFaceClass.ts'
 import { largePolytope } from '../../reference/bundledPolytopes.ts'
 import { codeOf } from './copies.ts'
 import { polygonAlone, rectangle } from './polygonAlone.ts'
