@@ -2,6 +2,7 @@ import { InputError } from '../scoring/index.ts'
 import { candidateGeometry } from './jobs/compute/candidateGeometry.ts'
 import { factsOfEach, factsOfWeights, pointBlocks } from './jobs/compute/importBlocks.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
+import { nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
 const tasks: Tasks = {
@@ -10,6 +11,9 @@ const tasks: Tasks = {
   'facts-of-weights': factsOfWeights,
   'polytope-shape': polytopeShape,
   'candidate-geometry': candidateGeometry,
+  'search-segment': searchSegment,
+  'null-chunk': nullChunk,
+  'preview-chunk': previewChunk,
 }
 
 /** Entry of a worker thread: runs one named task and answers with its value or its failure. */

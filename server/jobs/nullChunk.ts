@@ -1,18 +1,13 @@
 import type { NullSummary } from '../../shared/nullSamples.ts'
-import type { ProblemPolytope } from './searchProblem.ts'
-
-export interface NullProblem {
-  readonly rule: string
-  readonly polytopes: readonly ProblemPolytope[]
-  readonly seed: number
-  readonly size: number
-}
+import type { ScoredRow } from '../../shared/outcomes.ts'
+import type { NullProblem } from './searchProblem.ts'
 
 /** A piece of a null sample; the cut never changes the sample. */
 export interface NullChunkInput {
   readonly problem: NullProblem
   /** JSON text of the state after the piece before; null at the beginning. */
   readonly state: string | null
+  /** Candidates of this piece. */
   readonly evaluations: number
 }
 
@@ -20,5 +15,18 @@ export interface NullChunkOutput {
   readonly state: string
   readonly summary: NullSummary
   readonly done: boolean
+  /** Time the piece took on its thread. */
   readonly milliseconds: number
+}
+
+/** One candidate of a preview. */
+export interface PreviewRow extends ScoredRow {
+  readonly heights: readonly number[]
+  /** Milliseconds per stage. */
+  readonly costs: Readonly<Record<string, number>>
+}
+
+/** A piece of a null sample with its candidates one by one. */
+export interface PreviewChunkOutput extends NullChunkOutput {
+  readonly rows: readonly PreviewRow[]
 }

@@ -8,10 +8,9 @@ import {
 import type { NullSample } from '../entities/nullSample.ts'
 import type { Search } from '../entities/search.ts'
 import type { JobParts } from './jobParts.ts'
-import type { NullProblem } from './nullChunk.ts'
 import { SegmentPace } from './pace.ts'
 import type { WorkSource } from './scheduler.ts'
-import type { ProblemPolytope } from './searchProblem.ts'
+import type { NullProblem, ScoredScope } from './searchProblem.ts'
 
 /** All null samples are drawn with this seed: one sample per scope and rule, whoever asks for it. */
 const nullSeed = 1
@@ -34,17 +33,17 @@ export class NullSampler {
   /** Makes sure that the null sample of a search is complete or being drawn. */
   async want(
     search: Pick<Search, 'campaignId' | 'scopeHash' | 'scoringHash'>,
-    rule: string,
-    polytopes: readonly ProblemPolytope[],
+    scope: ScoredScope,
+    pointsMax: number,
   ): Promise<void> {
     const { writes, scheduler, closing } = this.#parts
-    const size = nullSampleSize(polytopes.reduce((most, { points }) => Math.max(most, points), 0))
+    const size = nullSampleSize(pointsMax)
     const sample = await writes.transaction((manager) =>
       openNullSample(manager, search, { seed: nullSeed, size }),
     )
     if (sample.complete || sample.failure !== null || this.#drawing.has(sample.id) || closing.aborted) return
     this.#drawing.add(sample.id)
-    const problem = { rule, polytopes, seed: sample.seed, size: sample.size }
+    const problem = { ...scope, seed: sample.seed, size: sample.size }
     const source = new NullSource(search, sample, problem, this.#parts, () => {
       scheduler.remove(source)
       this.#drawing.delete(sample.id)

@@ -1,18 +1,24 @@
 /** Work of about this length is handed to a thread at a time: often enough for progress, rarely enough for speed. */
-const segmentMilliseconds = 900
+export const segmentMilliseconds = 900
 
 /** How far back the rate of evaluations looks. */
 const windowMilliseconds = 15_000
 
 /** Learns how long evaluations take: sizes segments, and tells the rate by the clock on the wall. */
 export class SegmentPace {
+  readonly #aim: number
   #millisecondsEach: number | null = null
   readonly #recent: { readonly at: number; readonly evaluations: number }[] = []
 
+  /** @param aim milliseconds that a segment should take */
+  constructor(aim = segmentMilliseconds) {
+    this.#aim = aim
+  }
+
   /** Evaluations for the next segment. A first segment is small: nothing is known yet. */
   get nextEvaluations(): number {
-    if (this.#millisecondsEach === null) return 4
-    return Math.max(1, Math.min(20_000, Math.round(segmentMilliseconds / this.#millisecondsEach)))
+    if (this.#millisecondsEach === null) return 2
+    return Math.max(1, Math.min(20_000, Math.floor(this.#aim / this.#millisecondsEach)))
   }
 
   /** Takes note of a segment that ended at `now`. */

@@ -7,13 +7,16 @@ import { resolveScope } from '../services/scopes.ts'
 import { storeCandidates } from '../services/searchCommits.ts'
 import { ComputeFailure } from './computePool.ts'
 import type { JobParts } from './jobParts.ts'
-import type { NullProblem } from './nullChunk.ts'
+import type { NullChunkInput, PreviewChunkOutput, PreviewRow } from './nullChunk.ts'
+import { SegmentPace } from './pace.ts'
+import { previewView, type PreviewRequire } from './previewView.ts'
+import { polytopesText, type NullProblem } from './searchProblem.ts'
 
 /** Work of one piece: other previews, imports and dossiers get their turn in between. */
 const pieceMilliseconds = 50
 
 /** Pause between two reports of one preview. */
-const reportMilliseconds = 120
+const reportMilliseconds = 150
 
 type PreviewRequest = z.infer<typeof previewRequestSchema>
 
@@ -21,6 +24,7 @@ interface RunningPreview {
   readonly accountId: string
   readonly scoringHash: string
   readonly problem: NullProblem
+  readonly requires: readonly PreviewRequire[]
   preview: Preview
 }
 
@@ -35,20 +39,17 @@ export class Previews {
 
   async start(campaignId: string, accountId: string, request: PreviewRequest): Promise<Preview> {
     this.stop(accountId)
-    const { scoringHash } = requireSoundRule(request.text)
+    const { scoringHash, rule } = requireSoundRule(request.text)
     const polytopes = await resolveScope(this.#parts.source.manager, campaignId, request.scope)
     // Another request of the same account may have come in between.
     this.stop(accountId)
+    const { text, seed, size } = request
     const running: RunningPreview = {
       accountId,
       scoringHash,
-      problem: {
-        rule: request.text,
-        polytopes: polytopes.map(({ key, points, coordinates }) => ({ key, points, vertices: coordinates })),
-        seed: request.seed,
-        size: request.size,
-      },
-      preview: { ...emptyPreview, id: randomUUID(), size: request.size },
+      problem: { rule: text, polytopes: polytopesText(polytopes), seed, size },
+      requires: rule.requires,
+      preview: { ...emptyPreview, id: randomUUID(), size },
     }
     this.#latest.set(accountId, running)
     void this.#run(running)
@@ -70,34 +71,40 @@ export class Previews {
   }
 
   async #run(running: RunningPreview): Promise<void> {
-    const { interactive, writes, closing, log } = this.#parts
-    let state: string | null = null
-    let reported = 0
     try {
-      while (running.preview.state === 'running') {
-        const piece = { problem: running.problem, state, milliseconds: pieceMilliseconds }
-        const output = await interactive.run('preview-chunk', piece)
-        if (running.preview.state !== 'running') return
-        state = output.state
-        if (output.done) {
-          await writes.transaction((manager) => storeCandidates(manager, running.scoringHash, output.shown))
-        }
-        const preview = {
-          ...running.preview,
-          ...output.preview,
-          state: output.done ? 'done' : 'running',
-        } as const
-        if (output.done || Date.now() - reported >= reportMilliseconds) {
-          reported = Date.now()
-          this.#report(running, preview)
-        } else running.preview = preview
-      }
+      await this.#evaluate(running)
     } catch (error) {
+      const { closing, log } = this.#parts
       if (closing.aborted) return
       if (!(error instanceof Refusal)) log.error({ err: error }, 'a preview failed')
       const known = error instanceof Refusal || error instanceof ComputeFailure
       const message = known ? error.message : 'The server made a mistake while it computed this preview.'
       this.#report(running, { ...running.preview, state: 'failed', message })
+    }
+  }
+
+  async #evaluate(running: RunningPreview): Promise<void> {
+    const { interactive, writes } = this.#parts
+    const pace = new SegmentPace(pieceMilliseconds)
+    const rows: PreviewRow[] = []
+    let state: string | null = null
+    let reported = 0
+    while (running.preview.state === 'running') {
+      const piece: NullChunkInput = { problem: running.problem, state, evaluations: pace.nextEvaluations }
+      const output: PreviewChunkOutput = await interactive.run('preview-chunk', piece)
+      if (running.preview.state !== 'running') return
+      state = output.state
+      rows.push(...output.rows)
+      pace.note(output.rows.length, output.milliseconds, Date.now())
+      if (!output.done && Date.now() - reported < reportMilliseconds) continue
+      reported = Date.now()
+      const { view, shown } = previewView(rows, output.summary, running.requires)
+      if (output.done) {
+        // So that the pages of the candidates shown can be opened.
+        await writes.transaction((manager) => storeCandidates(manager, running.scoringHash, shown))
+        if (running.preview.state !== 'running') return
+      }
+      this.#report(running, { ...running.preview, ...view, state: output.done ? 'done' : 'running' })
     }
   }
 

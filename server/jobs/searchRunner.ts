@@ -4,12 +4,13 @@ import { CandidateValue } from '../entities/candidateValue.ts'
 import { Find } from '../entities/find.ts'
 import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
+import { unfinishedNulls } from '../services/nullSamples.ts'
 import { failSearch, takeLease, type IslandFind } from '../services/searchCommits.ts'
 import type { JobParts } from './jobParts.ts'
 import { isFree, leaseMilliseconds, thisProcess } from './lease.ts'
 import type { NullSampler } from './nullSampler.ts'
 import { RunningSearch, type Island } from './runningSearch.ts'
-import { islandBudget, readProblemPolytopes } from './searchProblem.ts'
+import { polytopesText, readPolytopes, type ScoredScope } from './searchProblem.ts'
 import type { IslandProgress } from './segment.ts'
 
 /** Runs the searches of the database: takes them up, keeps their leases, lets them go. */
@@ -26,9 +27,13 @@ export class SearchRunner {
     this.#nulls = nulls
   }
 
-  /** Takes up every search that was queued or running when its process ended, and looks for more from time to time. */
+  /**
+   * Takes up every search that was queued or running when its process ended, and the null samples that were being
+   * drawn; looks for abandoned searches from time to time.
+   */
   async start(): Promise<void> {
     await this.#takeUpFree()
+    for (const search of await unfinishedNulls(this.#parts.source.manager)) await this.#drawNull(search)
     this.#heart = setInterval(() => {
       this.#beat().catch((error: unknown) => this.#parts.log.error({ err: error }, 'leases were not renewed'))
     }, leaseMilliseconds / 3)
@@ -104,19 +109,16 @@ export class SearchRunner {
       )
       return
     }
-    const polytopes = await readProblemPolytopes(source, search.polytopeKeys)
-    const rule = search.targetVersion.text
+    const { scope, pointsMax } = await this.#scopeOf(search)
     const rows = await source.manager.find(SearchIsland, { where: { searchId }, order: { number: 'ASC' } })
     const islands = rows.map((row): Island => ({
       number: row.number,
       problem: {
-        rule,
-        polytopes,
+        ...scope,
         method: search.method,
         seed: search.seed,
         island: row.number,
-        budget: islandBudget(search, row.number),
-        keep: search.keep,
+        settings: { budget: search.budget, islands: search.islands, keep: search.keep },
       },
       segment: row.segment,
       state: row.state,
@@ -136,7 +138,20 @@ export class SearchRunner {
       progress: search.progress,
     })
     scheduler.add(running)
-    await this.#nulls.want(search, rule, polytopes)
+    await this.#nulls.want(search, scope, pointsMax)
+  }
+
+  async #drawNull(search: Search): Promise<void> {
+    const { scope, pointsMax } = await this.#scopeOf(search)
+    await this.#nulls.want(search, scope, pointsMax)
+  }
+
+  /** @param search with its target version loaded */
+  async #scopeOf(search: Search): Promise<{ scope: ScoredScope; pointsMax: number }> {
+    if (!search.targetVersion) throw new Error('A search was read without its target version.')
+    const records = await readPolytopes(this.#parts.source, search.polytopeKeys)
+    const pointsMax = records.reduce((most, { points }) => Math.max(most, points), 0)
+    return { scope: { rule: search.targetVersion.text, polytopes: polytopesText(records) }, pointsMax }
   }
 
   async #readFinds(search: Search): Promise<IslandFind[]> {

@@ -37,7 +37,7 @@ export interface SegmentOutput {
   readonly state: string
   readonly progress: IslandProgress
   readonly done: boolean
-  /** The island's best distinct candidates so far, best first. */
+  /** Candidates that entered the island's list of the best in this segment and are still on it, best first. */
   readonly finds: readonly SegmentFind[]
   /** Time the segment took on its thread. */
   readonly milliseconds: number

@@ -1,6 +1,7 @@
 import type { candidateGeometry } from './compute/candidateGeometry.ts'
 import type { factsOfEach, factsOfWeights, pointBlocks } from './compute/importBlocks.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
+import type { nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
 
 /** The tasks of the worker threads: pure functions of plain data, by name. */
 export interface Tasks {
@@ -9,6 +10,9 @@ export interface Tasks {
   'facts-of-weights': typeof factsOfWeights
   'polytope-shape': typeof polytopeShape
   'candidate-geometry': typeof candidateGeometry
+  'search-segment': typeof searchSegment
+  'null-chunk': typeof nullChunk
+  'preview-chunk': typeof previewChunk
 }
 
 export type TaskName = keyof Tasks

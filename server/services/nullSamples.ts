@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto'
-import type { EntityManager } from 'typeorm'
+import { IsNull, type EntityManager } from 'typeorm'
+import { engineVersion } from '../../scoring/index.ts'
 import type { NullSummary } from '../../shared/nullSamples.ts'
 import { NullSample } from '../entities/nullSample.ts'
 import { Search } from '../entities/search.ts'
@@ -59,4 +60,18 @@ export function searchesAgainst(
   { scopeHash, scoringHash }: NullAddress,
 ): Promise<Search[]> {
   return manager.find(Search, { select: { id: true, campaignId: true }, where: { scopeHash, scoringHash } })
+}
+
+/** One search for each null sample that is still to be drawn, with its target version loaded. */
+export async function unfinishedNulls(manager: EntityManager): Promise<Search[]> {
+  const samples = await manager.findBy(NullSample, { complete: false, failure: IsNull() })
+  const searches: Search[] = []
+  for (const { scopeHash, scoringHash } of samples) {
+    const search = await manager.findOne(Search, {
+      where: { scopeHash, scoringHash, engineVersion },
+      relations: { targetVersion: true },
+    })
+    if (search !== null) searches.push(search)
+  }
+  return searches
 }

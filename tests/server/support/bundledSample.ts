@@ -2,7 +2,9 @@ import { readFileSync, writeFileSync } from 'node:fs'
 import { join } from 'node:path'
 import { pathToFileURL } from 'node:url'
 import { z } from 'zod'
-import type { TestServer } from './testServer.ts'
+import type { OpenServer } from '../../../server/start.ts'
+
+type Opened = Pick<OpenServer, 'context'>
 
 const fileSchema = z.object({ about: z.string(), polytopes: z.array(z.looseObject({ id: z.string() })) })
 
@@ -15,7 +17,7 @@ export function bundledEntries(file: 'small' | 'large' | 'h11-5', wanted: (id: s
 }
 
 /** Writes entries as a bundled file of its own into the server's folder. */
-export function bundledFile({ context }: TestServer, name: string, polytopes: readonly object[]): URL {
+export function bundledFile({ context }: Opened, name: string, polytopes: readonly object[]): URL {
   const path = join(context.config.dataDirectory, name)
   writeFileSync(path, JSON.stringify({ about: 'a sample for a test', polytopes }))
   return pathToFileURL(path)
@@ -23,7 +25,7 @@ export function bundledFile({ context }: TestServer, name: string, polytopes: re
 
 /** Loads entries into the library of a test server, as the first start loads the bundled files. */
 export async function loadEntries(
-  server: TestServer,
+  server: Opened,
   polytopes: readonly object[],
   name = 'sample.json',
 ): Promise<void> {

@@ -1,0 +1,117 @@
+import {
+  InputError,
+  JobSession,
+  previewChunk as previewJob,
+  segmentJob,
+  type Find,
+  type PolytopeEntry,
+  type SearchState,
+} from '../../../scoring/index.ts'
+import type { NullChunkInput, NullChunkOutput, PreviewChunkOutput } from '../nullChunk.ts'
+import type { SegmentFind, SegmentInput, SegmentOutput } from '../segment.ts'
+import { outcomeView } from './outcomeView.ts'
+
+/** What this thread keeps between jobs; it spares time and alters no result. */
+const session = new JobSession()
+const scopes = new Map<string, readonly PolytopeEntry[]>()
+
+/** Carries one island of a search on. */
+export function searchSegment({ problem, state, evaluations }: SegmentInput): SegmentOutput {
+  const begun = performance.now()
+  const { rule, polytopes, method, seed, island, settings } = problem
+  const output = sound(
+    segmentJob(
+      {
+        polytopes: entriesOf(polytopes),
+        ruleText: rule,
+        method,
+        settings,
+        seed,
+        island,
+        evaluations,
+        state: stateOf(state),
+        // Near the end of a small space new classes get rare: a segment must end all the same.
+        proposals: 20 * evaluations + 2_000,
+      },
+      session,
+    ),
+  )
+  const { ended, done, ...progress } = output.progress
+  return {
+    state: JSON.stringify(output.state),
+    progress: { ...progress, exhausted: ended === 'space-exhausted' },
+    done,
+    finds: output.finds.map(findView),
+    milliseconds: performance.now() - begun,
+  }
+}
+
+/** Draws the next candidates of a null sample. */
+export function nullChunk(input: NullChunkInput): NullChunkOutput {
+  const { state, summary, done, milliseconds } = previewChunk(input)
+  return { state, summary, done, milliseconds }
+}
+
+/** The same, with every candidate and what it cost. */
+export function previewChunk({ problem, state, evaluations }: NullChunkInput): PreviewChunkOutput {
+  const begun = performance.now()
+  const { rule, polytopes, seed, size } = problem
+  const output = sound(
+    previewJob(
+      {
+        polytopes: entriesOf(polytopes),
+        ruleText: rule,
+        size,
+        seed,
+        state: stateOf(state),
+        count: evaluations,
+      },
+      session,
+      () => performance.now(),
+    ),
+  )
+  const { hitLine, ...summary } = output.summary
+  void hitLine
+  return {
+    state: JSON.stringify(output.state),
+    summary: { ...summary, expectedBest: summary.expectedBest.map(([n, score]) => [n, score]) },
+    done: summary.complete,
+    milliseconds: performance.now() - begun,
+    rows: output.rows.map(({ classKey, outcome, ...row }) => ({
+      ...row,
+      candidateKey: classKey,
+      outcome: outcomeView(outcome),
+    })),
+  }
+}
+
+function findView({ classKey, polytopeKey, heights, outcome }: Find): SegmentFind {
+  return { candidateKey: classKey, polytopeKey, heights: [...heights], outcome: outcomeView(outcome) }
+}
+
+const stateOf = (text: string | null) => (text === null ? null : (JSON.parse(text) as SearchState))
+
+/** The polytopes of a scope; the last few scopes stay parsed. */
+function entriesOf(text: string): readonly PolytopeEntry[] {
+  const entries = scopes.get(text) ?? (JSON.parse(text) as PolytopeEntry[])
+  scopes.delete(text)
+  scopes.set(text, entries)
+  for (const oldest of scopes.keys()) {
+    if (scopes.size <= 4) break
+    scopes.delete(oldest)
+  }
+  return entries
+}
+
+interface Failed {
+  readonly error: { readonly code: string; readonly message: string }
+}
+
+/** Jobs report failures as values; a bug of the engine is told apart by its code. */
+function sound<Output extends object>(output: Output): Exclude<Output, Failed> {
+  if (!isFailed(output)) return output as Exclude<Output, Failed>
+  const { code, message } = output.error
+  throw code === 'engine.failed' ? new Error(message) : new InputError(code, message)
+}
+
+const isFailed = (output: object): output is Failed => 'error' in output
