@@ -107,13 +107,16 @@ export function compileFold(compiler: Compiler, expression: TypedFold): Evaluate
         for (const value of values) if (value > greatest) greatest = value
         return greatest
       })
-    case 'mean':
+    case 'mean': {
+      const integers = expression.body.type === 'integer'
       return collect(parts, (frame, values) => {
         if (values.length === 0) return frame.undefinedBecause(empty)
+        if (integers) return exactSum(values) / values.length
         let mean = 0
         for (let at = 0; at < values.length; at++) mean += (values[at] - mean) / (at + 1)
         return mean
       })
+    }
     case 'quantile': {
       const order = compiler.compile(expression.order ?? expression.body)
       const outside = compiler.reason(expression, 'the order of a quantile lies between 0 and 1')

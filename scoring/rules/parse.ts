@@ -1,3 +1,4 @@
+import type { SyntaxNode } from '@lezer/common'
 import type { Layout, NameNode, RuleTree, Statement, StatementKind } from './ast.ts'
 import { TreeBuilder } from './buildTree.ts'
 import { parser } from './generated/parser.ts'
@@ -87,7 +88,8 @@ export function readRule(text: string): Reading {
       statements.push(broken(segment, keyword))
       return
     }
-    const finding = explainSyntaxError(text, segment, next, drafts.length < RULE_LIMITS.issues)
+    const tree = parser.parse(text.slice(segment.from, segment.to))
+    const finding = explainSyntaxError(text, segment, tree, next, drafts.length < RULE_LIMITS.issues)
     if (finding || spoilt) {
       if (!spoilt) {
         if (finding?.issue) drafts.push(finding.issue)
@@ -96,9 +98,7 @@ export function readRule(text: string): Reading {
       spoilt = finding?.spoilsNext ?? false
       return
     }
-    const node = parser.parse(text.slice(segment.from, segment.to)).topNode.firstChild
-    if (!node) return
-    const built = builder.statement(node, segment.from, layout)
+    const built = builder.statement(tree.topNode.firstChild as SyntaxNode, segment.from, layout)
     if ('kind' in built) statements.push(built)
     else {
       drafts.push(built)

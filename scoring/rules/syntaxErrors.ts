@@ -1,3 +1,4 @@
+import type { Tree } from '@lezer/common'
 import type { Span, StatementKind } from './ast.ts'
 import { parser } from './generated/parser.ts'
 import type { IssueDraft } from './issues.ts'
@@ -6,9 +7,9 @@ import type { Segment, Token } from './segments.ts'
 import { isReserved, opensStatement, STATEMENT_KEYWORDS } from './words.ts'
 
 /** The first place where the parser could not go on, or undefined when the text parses. */
-function firstError(text: string): Span | undefined {
+function firstError(tree: Tree): Span | undefined {
   let found: Span | undefined
-  parser.parse(text).iterate({
+  tree.iterate({
     enter(node) {
       if (node.type.isError && (found === undefined || node.from < found.from))
         found = { from: node.from, to: node.to }
@@ -20,7 +21,7 @@ function firstError(text: string): Span | undefined {
 /** Could `sample` stand right after `prefix`? Asked of the parser itself, so that the grammar stays in one place. */
 function accepts(prefix: string, sample: string): boolean {
   const text = `${prefix} ${sample}`
-  const error = firstError(text)
+  const error = firstError(parser.parse(text))
   return error === undefined || error.from >= text.length
 }
 
@@ -33,7 +34,7 @@ function expectedAfter(prefix: string, keyword: StatementKind, previous: Token |
     return [previous?.text === 'in' ? 'a set' : previous?.text === '.' ? 'a field' : 'a name']
   const allowed = SIGNS.filter((sign) => accepts(prefix, sign)).map((sign) => `\`${sign}\``)
   if (accepts(prefix, '+')) allowed.push('an operator')
-  if (firstError(prefix) === undefined) allowed.push('the end of the statement')
+  if (firstError(parser.parse(prefix)) === undefined) allowed.push('the end of the statement')
   return allowed
 }
 
@@ -135,19 +136,19 @@ export interface SyntaxFinding {
 }
 
 /**
- * Explains why a segment does not parse: the first token that cannot stand where it does, what could have
+ * Explains why a segment, with its syntax tree, does not parse: the first token that cannot stand where it does, what could have
  * stood there, and the likely repair (no words when `worded` is false). Undefined when the segment parses.
  */
 export function explainSyntaxError(
   text: string,
   segment: Segment,
+  tree: Tree,
   next: Segment | undefined,
   worded: boolean,
 ): SyntaxFinding | undefined {
   const { keyword, tokens } = segment
   if (keyword === undefined) return undefined
-  const body = text.slice(segment.from, segment.to)
-  const error = firstError(body)
+  const error = firstError(tree)
   if (error === undefined) return undefined
   if (!worded) return { spoilsNext: false }
 
