@@ -26,17 +26,16 @@ export function automorphismsFrom(
         inverse,
         frame.map((position) => coordinates(points, order[position])),
       )
-      return Int32Array.from({ length: points.length / 4 }, (_, i) => {
+      const permutation = new Int32Array(points.length / 4)
+      for (let i = 0; i < permutation.length; i++) {
         for (let axis = 0; axis < 4; axis++) {
-          const row = matrix[axis]
-          image[axis] =
-            row[0] * points[4 * i] +
-            row[1] * points[4 * i + 1] +
-            row[2] * points[4 * i + 2] +
-            row[3] * points[4 * i + 3]
+          let sum = 0
+          for (let k = 0; k < 4; k++) sum += matrix[axis][k] * points[4 * i + k]
+          image[axis] = sum
         }
-        return index.find(image, 0)
-      })
+        permutation[i] = index.find(image, 0)
+      }
+      return permutation
     })
     .sort(compareLexicographic)
 }

@@ -11,7 +11,7 @@ import { InvariantError } from '../errors.ts'
  * @throws InvariantError when the rank is below 4 or an entry leaves the safe integers
  */
 export function hermiteForm(matrix: ArrayLike<number>, columns: number): Float64Array {
-  const rows = Float64Array.from(matrix)
+  const rows = new Float64Array(matrix)
   const width = rows.length / 4
   let pivot = 0
   for (let column = 0; column < columns && pivot < 4; column++) {

@@ -31,14 +31,11 @@ export function gcdBig(a: bigint, b: bigint): bigint {
   return x
 }
 
-/** Quotient rounded to the nearest integer (halves upwards) of two big integers, `divisor` positive. */
+/** Nearest integer to the quotient of two big integers, halves towards zero; `divisor` positive. */
 export function roundedQuotient(dividend: bigint, divisor: bigint): bigint {
-  return floorQuotient(2n * dividend + divisor, 2n * divisor)
-}
-
-function floorQuotient(dividend: bigint, divisor: bigint): bigint {
-  const quotient = dividend / divisor
-  return dividend % divisor < 0n ? quotient - 1n : quotient
+  const size = dividend < 0n ? -dividend : dividend
+  const rounded = (2n * size + divisor - 1n) / (2n * divisor)
+  return dividend < 0n ? -rounded : rounded
 }
 
 /** Compares two integer vectors of equal length lexicographically. */

@@ -98,11 +98,12 @@ function leastHermiteForm(
 ): { form: Float64Array; orders: (readonly number[])[] } {
   let form: Float64Array | undefined
   let orders: (readonly number[])[] = []
+  const matrix = new Float64Array(4 * vertexCount)
   for (const order of candidates) {
-    const here = hermiteForm(
-      [0, 1, 2, 3].flatMap((axis) => order.map((v) => vertices[4 * v + axis])),
-      vertexCount,
-    )
+    order.forEach((v, position) => {
+      for (let axis = 0; axis < 4; axis++) matrix[axis * vertexCount + position] = vertices[4 * v + axis]
+    })
+    const here = hermiteForm(matrix, vertexCount)
     const comparison = form === undefined ? -1 : compareLexicographic(here, form)
     if (comparison < 0) {
       form = here

@@ -140,8 +140,8 @@ function assemble(vertexRows: number[][], facetRows: number[][]): Polytope {
   const vertexCount = vertices.length / 4
   const edgePoints = vertexCount + inEdges.length
   const carried = [...inEdges, ...inTwoFaces]
-  const points = Int32Array.from([...vertices, ...carried.flatMap(({ given }) => given)])
-  const short = Float64Array.from([...shortVertices, ...carried.flatMap(({ point }) => point)])
+  const points = new Int32Array(vertices.concat(...carried.map(({ given }) => given)))
+  const short = new Float64Array(shortVertices.concat(...carried.map(({ point }) => point)))
   const pointCount = points.length / 4
   const carrierDimension = new Uint8Array(pointCount).fill(1, vertexCount).fill(2, edgePoints)
   const dualLengths = faces.twoFaces.map(({ ends }) => latticeLength(shortFacets, ends[0], ends[1]))
@@ -168,7 +168,7 @@ function assemble(vertexRows: number[][], facetRows: number[][]): Polytope {
     carrierDimension,
     dualInterior,
     components,
-    facets: Int32Array.from(facets),
+    facets: new Int32Array(facets),
     facetCount: facets.length / 4,
     twoFaces: faces.twoFaces.map(({ ends, on }, f) => twoFace(short, ends, on, onTwoFace[f], dualLengths[f])),
     edges: onEdge.map((members) => alongEdge(short, members)),
@@ -233,9 +233,9 @@ function twoFace(
   return {
     facets,
     dualLength,
-    points: Int32Array.from(members),
+    points: new Int32Array(members),
     plane,
-    corners: Int32Array.from(corners, (position) => members[position]),
+    corners: new Int32Array(corners.map((position) => members[position])),
     area,
   }
 }
@@ -244,5 +244,5 @@ function twoFace(
 function alongEdge(points: Float64Array, members: readonly number[]): Int32Array {
   const [start, end] = members
   const along = (i: number): number => latticeLength(points, start, i)
-  return Int32Array.from([start, ...members.slice(2).sort((i, j) => along(i) - along(j)), end])
+  return new Int32Array([start, ...members.slice(2).sort((i, j) => along(i) - along(j)), end])
 }

@@ -4,6 +4,9 @@
  * every member of the first smallest cell is singled out in turn. Of the branches on a level only those that look
  * alike in the best way are kept.
  *
+ * Which of the branches that is depends on the hash function, and with it the normal form: it is part of every
+ * polytope's permanent address and must stay as it is.
+ *
  * Relabelling vertices or facets relabels the result and changes nothing else, so the set of orderings is closed
  * under every symmetry of the pairing matrix. Hashes decide only how finely cells are split: a collision would make
  * the set larger, never wrong.
@@ -16,7 +19,8 @@ export function vertexOrders(
   vertexCount: number,
   facetCount: number,
 ): number[][] {
-  const matrix = Int32Array.from(pairing)
+  const matrix = new Int32Array(vertexCount * facetCount)
+  for (let i = 0; i < matrix.length; i++) matrix[i] = mix(1, pairing[i])
   let level = [refine(matrix, new Int32Array(vertexCount), new Int32Array(facetCount))]
   while (level[0].cells < vertexCount) {
     let best: Colouring[] = []
@@ -47,6 +51,11 @@ interface Colouring {
   readonly trace: number
 }
 
+/**
+ * Refines until no cell splits any more, or all vertices are told apart.
+ *
+ * @param matrix hashes of the pairings, a row per vertex
+ */
 function refine(matrix: Int32Array, vertexColours: Int32Array, facetColours: Int32Array): Colouring {
   const facetCount = facetColours.length
   const vertexCount = vertexColours.length
@@ -56,20 +65,26 @@ function refine(matrix: Int32Array, vertexColours: Int32Array, facetColours: Int
   let cells = -1
   for (;;) {
     const facetHashes = new Int32Array(facetCount)
-    for (let v = 0; v < vertexCount; v++) {
-      for (let a = 0; a < facetCount; a++) facetHashes[a] += mix(vertices[v], matrix[v * facetCount + a])
+    for (let v = 0, at = 0; v < vertexCount; v++) {
+      const colour = mix(2, vertices[v])
+      for (let a = 0; a < facetCount; a++, at++) facetHashes[a] += Math.imul(colour, matrix[at])
     }
     const facetCells = split(facets, facetHashes)
     facets = facetCells.colours
+    const facetMixes = facets.map((colour) => mix(3, colour))
     const vertexHashes = new Int32Array(vertexCount)
-    for (let v = 0; v < vertexCount; v++) {
-      for (let a = 0; a < facetCount; a++) vertexHashes[v] += mix(facets[a], matrix[v * facetCount + a])
+    for (let v = 0, at = 0; v < vertexCount; v++) {
+      let sum = 0
+      for (let a = 0; a < facetCount; a++, at++) sum = (sum + Math.imul(facetMixes[a], matrix[at])) | 0
+      vertexHashes[v] = sum
     }
     const vertexCells = split(vertices, vertexHashes)
     vertices = vertexCells.colours
     trace = mix(mix(trace, facetCells.trace), vertexCells.trace)
     const total = facetCells.count + vertexCells.count
-    if (total === cells) return { vertices, facets, cells: vertexCells.count, trace }
+    if (total === cells || vertexCells.count === vertexCount) {
+      return { vertices, facets, cells: vertexCells.count, trace }
+    }
     cells = total
   }
 }
@@ -79,16 +94,31 @@ function split(
   colours: Int32Array,
   hashes: Int32Array,
 ): { colours: Int32Array; count: number; trace: number } {
-  const order = Array.from(colours.keys()).sort((i, j) => colours[i] - colours[j] || hashes[i] - hashes[j])
-  const next = new Int32Array(colours.length)
+  const length = colours.length
+  const order = new Int32Array(length)
+  // Insertion: a few dozen items at most.
+  for (let i = 0; i < length; i++) {
+    let position = i
+    for (; position > 0; position--) {
+      const other = order[position - 1]
+      const difference = colours[other] - colours[i] || hashes[other] - hashes[i]
+      if (difference <= 0) break
+      order[position] = other
+    }
+    order[position] = i
+  }
+  const next = new Int32Array(length)
   let count = 0
   let trace = 0
-  order.forEach((item, position) => {
-    const before = order[position - 1]
-    if (position > 0 && (colours[item] !== colours[before] || hashes[item] !== hashes[before])) count++
+  for (let position = 0; position < length; position++) {
+    const item = order[position]
+    if (position > 0) {
+      const before = order[position - 1]
+      if (colours[item] !== colours[before] || hashes[item] !== hashes[before]) count++
+    }
     next[item] = count
     trace = mix(mix(trace, count), hashes[item])
-  })
+  }
   return { colours: next, count: count + 1, trace }
 }
 

@@ -1,3 +1,4 @@
+import { createHash } from 'node:crypto'
 import { describe, expect, it } from 'vitest'
 import { InputError } from '../../scoring/errors.ts'
 import { hull } from '../../scoring/geometry/hull.ts'
@@ -20,6 +21,10 @@ describe('numbers of reflexive polytopes', () => {
       keys.set(h11, (keys.get(h11) ?? new Set()).add(normalForm(polytope).key))
       favourable.set(h11, (favourable.get(h11) ?? 0) + (polytope.favourable ? 1 : 0))
     }
+    const digest = createHash('sha256')
+    for (const key of [...keys.values()].flatMap((set) => [...set]).sort()) digest.update(key)
+    // Addresses are permanent: this changes only with every stored candidate.
+    expect(digest.digest('hex')).toBe('3faf8ae0ca5f028cfa079ab9035d4b3e87e76a76679a048eae096016967db723')
     const found = [1, 2, 3, 4, 5].map((h11) => [h11, keys.get(h11)?.size, favourable.get(h11)])
     expect(found).toEqual([
       [1, 5, 5],
@@ -28,7 +33,7 @@ describe('numbers of reflexive polytopes', () => {
       [4, 1197, 1185],
       [5, 4990, 4897],
     ])
-  })
+  }, 240_000)
 
   it('bundled in the larger set are pairwise inequivalent', () => {
     const keys = bundledPolytopes('large').map(({ vertices }) => normalForm(polytopeFromPoints(vertices)).key)
@@ -71,7 +76,7 @@ describe('weight systems', () => {
       'weights.not-four-dimensional': 1382,
       'weights.not-interior': 11997,
     })
-  })
+  }, 240_000)
 
   // Reid's 95 weighted K3 surfaces; as weight systems with the interior-point property: Skarke, alg-geom/9603007.
   // The largest degree is 66 (from memory).
