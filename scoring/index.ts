@@ -38,7 +38,6 @@ export {
   checkedSettings,
   JobSession,
   previewChunk,
-  requiredRule,
   segmentJob,
   type JobError,
   type PreviewInput,
@@ -73,3 +72,18 @@ export {
 export { timedCandidate, type Clock, type StageCosts } from './search/stageClock.ts'
 export type { Json, RunEnd, SampleRow, SearchCounts, SearchState } from './search/state.ts'
 export { expectedBest, medianOf, quantileOf, rateOf, type Rate } from './search/statistics.ts'
+
+// Headless evaluation, also behind the dossier.
+export {
+  evaluateInput,
+  evaluationUnits,
+  scoreEntry,
+  type DivisorEntry,
+  type Evaluation,
+  type EvaluationInput,
+  type EvaluationPart,
+  type MetricEntry,
+  type ReferenceEntry,
+  type ScoreEntry,
+} from './evaluation.ts'
+export { evaluationInputSchema, evaluationParts, ruleOfInput } from './evaluation/input.ts'

@@ -1,6 +1,6 @@
 import { InputError } from '../errors.ts'
+import { ruleOfInput } from '../evaluation/input.ts'
 import type { Hodge } from '../geometry/polytope.ts'
-import { checkRule } from '../rules/check.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import type { Outcome } from '../rules/outcome.ts'
 import { advance, startState } from './advance.ts'
@@ -79,25 +79,9 @@ export class JobSession {
 
   /** @throws InputError with the first error of the rule */
   ruleOf(text: string): { readonly rule: CheckedRule; readonly memo: OutcomeMemo } {
-    if (this.rule?.text !== text) this.rule = { text, rule: requiredRule(text), memo: new OutcomeMemo() }
+    if (this.rule?.text !== text) this.rule = { text, rule: ruleOfInput(text), memo: new OutcomeMemo() }
     return this.rule
   }
-}
-
-/**
- * The checked rule of a text that has to be right.
- * @throws InputError `rule.CODE` with line and column in its message
- */
-export function requiredRule(text: string): CheckedRule {
-  const check = checkRule(text)
-  if (check.ok) return check.rule
-  const issue = check.issues.find(({ severity }) => severity === 'error') ?? check.issues[0]
-  throw new InputError(
-    `rule.${issue.code}`,
-    `line ${issue.line}, column ${issue.column}: ${issue.message}`,
-    'rule',
-    { line: issue.line, column: issue.column, found: issue.found },
-  )
 }
 
 /** Settings with their defaults. @throws InputError naming the first that is wrong */

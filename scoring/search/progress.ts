@@ -60,7 +60,8 @@ export function mergedProgress(islands: readonly SearchState[]): SearchProgressR
   const total = (pick: (part: IslandProgress) => number): number =>
     parts.reduce((sum, part) => sum + pick(part), 0)
   const leader = parts.reduce<IslandProgress | null>(
-    (best, part) => (part.best !== null && (best?.best == null || part.best > best.best) ? part : best),
+    (best, part) =>
+      part.best !== null && (best === null || best.best === null || part.best > best.best) ? part : best,
     null,
   )
   return {
