@@ -22,8 +22,11 @@ const environmentSchema = z.object({
   NODE_ENV: z.enum(['development', 'test', 'production']).default('development'),
   /** Signs session cookies. Generated once into DATA_DIR for local use; required in production. */
   SESSION_SECRET: z.string().min(32, 'must have at least 32 characters').optional(),
-  /** Address under which people reach the server; used in links and to tell our own origin. */
-  BASE_URL: z.url({ protocol: /^https?$/ }).optional(),
+  /**
+   * Address under which people reach the server; used in links and to tell our own origin. (BASE_URL would be the
+   * obvious name, but the build tools set that one to a path.)
+   */
+  PUBLIC_URL: z.url({ protocol: /^https?$/ }).optional(),
   /** Number of reverse proxies in front, whose X-Forwarded-* headers are believed. */
   TRUST_PROXY: z.coerce.number().int().min(0).max(10).default(0),
   /** Worker threads for searches; interactive work has one more of its own. */
@@ -65,7 +68,7 @@ export function readConfig(environment: Record<string, string | undefined>): Con
     dataDirectory: resolve(values.DATA_DIR),
     production: values.NODE_ENV === 'production',
     sessionSecret: values.SESSION_SECRET ?? null,
-    baseUrl: (values.BASE_URL ?? `http://${urlHost(values.HOST)}:${values.PORT}`).replace(/\/$/, ''),
+    baseUrl: (values.PUBLIC_URL ?? `http://${urlHost(values.HOST)}:${values.PORT}`).replace(/\/$/, ''),
     trustProxy: values.TRUST_PROXY,
     workers: values.WORKERS ?? Math.max(1, availableParallelism()),
     logLevel: values.LOG_LEVEL,

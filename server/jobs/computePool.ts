@@ -24,6 +24,8 @@ export interface PoolOptions {
   readonly log: Logger
   /** Tests put a misbehaving worker here. */
   readonly workerFile?: URL
+  /** A worker's heap may grow to what the largest polytopes need, and no further. */
+  readonly heapMegabytes?: number
 }
 
 /** The worker file lies beside the server's entry, in source (.ts) and in the build (.js). */
@@ -39,7 +41,7 @@ export class ComputePool {
   readonly #pool: Piscina
   readonly #closing = new AbortController()
 
-  constructor({ threads, nice, log, workerFile = ownWorker }: PoolOptions) {
+  constructor({ threads, nice, log, workerFile = ownWorker, heapMegabytes = 1024 }: PoolOptions) {
     this.threads = threads
     this.#pool = new Piscina({
       filename: fileURLToPath(workerFile),
@@ -49,8 +51,7 @@ export class ComputePool {
       niceIncrement: nice,
       // Source needs the loader that the server itself runs under; the build needs nothing.
       execArgv: workerFile.pathname.endsWith('.ts') ? ['--import', import.meta.resolve('tsx')] : [],
-      // A worker's heap may grow to what the largest polytopes need, and no further.
-      resourceLimits: { maxOldGenerationSizeMb: 1024 },
+      resourceLimits: { maxOldGenerationSizeMb: heapMegabytes },
     })
     // Without a listener a thread that fails while idle would end the server.
     this.#pool.on('error', (error: unknown) => log.error({ err: error }, 'a worker thread failed while idle'))

@@ -25,14 +25,18 @@ export interface Jobs {
 export interface JobOptions {
   /** Worker file of the background threads (tests put a misbehaving one here). */
   readonly backgroundWorker?: URL
+  /** Heap of a background thread. */
+  readonly heapMegabytes?: number
+  /** Size of null samples, by the number of points of the largest polytope. */
+  readonly nullSize?: (pointsMax: number) => number
 }
 
 /**
  * Threads yield to the web side: on Linux a thread's nice value is its own. Interactive work yields less than
  * searches do, so that a saturated pool does not hold up what somebody waits for.
  */
-const backgroundNice = 15
-const interactiveNice = 5
+const backgroundNice = 5
+const interactiveNice = 2
 
 export function openJobs(
   parts: Pick<JobParts, 'source' | 'writes' | 'streams' | 'log'> & { readonly workers: number },
@@ -46,11 +50,12 @@ export function openJobs(
     nice: backgroundNice,
     log,
     ...(options.backgroundWorker ? { workerFile: options.backgroundWorker } : {}),
+    ...(options.heapMegabytes ? { heapMegabytes: options.heapMegabytes } : {}),
   })
   const interactive = new ComputePool({ threads: 1, nice: interactiveNice, log })
   const scheduler = new Scheduler(workers)
   const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
-  const searches = new SearchRunner(all, new NullSampler(all))
+  const searches = new SearchRunner(all, new NullSampler(all, options.nullSize))
   return {
     scheduler,
     background,

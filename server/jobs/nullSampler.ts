@@ -24,10 +24,12 @@ export function nullSampleSize(pointsMax: number): number {
 /** Draws the null samples that searches are compared with, in turn with the searches themselves. */
 export class NullSampler {
   readonly #parts: JobParts
+  readonly #size: (pointsMax: number) => number
   readonly #drawing = new Set<string>()
 
-  constructor(parts: JobParts) {
+  constructor(parts: JobParts, size: (pointsMax: number) => number = nullSampleSize) {
     this.#parts = parts
+    this.#size = size
   }
 
   /** Makes sure that the null sample of a search is complete or being drawn. */
@@ -37,7 +39,7 @@ export class NullSampler {
     pointsMax: number,
   ): Promise<void> {
     const { writes, scheduler, closing } = this.#parts
-    const size = nullSampleSize(pointsMax)
+    const size = this.#size(pointsMax)
     const sample = await writes.transaction((manager) =>
       openNullSample(manager, search, { seed: nullSeed, size }),
     )

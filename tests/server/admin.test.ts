@@ -27,7 +27,7 @@ const admin = (...words: string[]) =>
     const env = {
       ...process.env,
       DATA_DIR: folder,
-      BASE_URL: 'https://tessellary.example',
+      PUBLIC_URL: 'https://tessellary.example',
       NODE_ENV: 'production',
     }
     execFile(

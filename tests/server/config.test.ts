@@ -33,7 +33,7 @@ describe('configuration', () => {
     [{ WORKERS: '0' }, /WORKERS/],
     [{ NODE_ENV: 'staging' }, /NODE_ENV.*staging/],
     [{ SESSION_SECRET: 'short' }, /SESSION_SECRET.*32/],
-    [{ BASE_URL: 'ftp://x.example' }, /BASE_URL/],
+    [{ PUBLIC_URL: 'ftp://x.example' }, /PUBLIC_URL/],
   ])('refuses %o and names it', (environment, message) => {
     expect(() => readConfig(environment)).toThrow(StartError)
     expect(() => readConfig(environment)).toThrow(message)

@@ -23,7 +23,7 @@ let targetVersionId: string
 const path = (rest = '') => `/api/campaigns/${server.campaignId}${rest}`
 
 beforeAll(async () => {
-  server = await openTestServer({ environment: { WORKERS: '2' } })
+  server = await openTestServer({ environment: { WORKERS: '2' }, jobs: { nullSize: () => 60 } })
   await loadEntries(
     server,
     bundledEntries('large', (id) => /^w(9-39|10-46|20-17)-newton/.test(id)),
@@ -44,7 +44,7 @@ afterAll(async () => {
   await server.close()
 })
 
-const scope = { kind: 'filter', filter: { h11Min: 10, h11Max: 20 } }
+const scope = { kind: 'filter', filter: { h11Min: 9, h11Max: 20 } }
 
 const start = async (settings: object = {}): Promise<SearchDetail> => {
   const { body } = await lead
@@ -117,9 +117,11 @@ describe('a search', () => {
 
   it('is compared with the null sample of its scope and rule, drawn once', async () => {
     const { id } = await start({ seed: 3 })
-    await stream.event((event) => event.kind === 'null' && event.searchId === id && event.summary.complete)
+    await expect
+      .poll(async () => (await read(id)).null?.complete, { timeout: 50_000, interval: 250 })
+      .toBe(true)
     const { null: summary } = await read(id)
-    expect(summary).toMatchObject({ size: 2000, complete: true })
+    expect(summary).toMatchObject({ size: 60, complete: true })
     expect(summary?.hit?.size).toBe(summary?.evaluated)
     const before = await server.context.source.query<{ count: number }[]>(
       'SELECT COUNT(*) AS count FROM null_sample',

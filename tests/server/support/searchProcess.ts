@@ -12,7 +12,7 @@ import { bundledEntries, loadEntries } from './bundledSample.ts'
 import { addAccount } from './testServer.ts'
 
 const [polytope, rule, settings] = process.argv.slice(2)
-const server = await openServer(readConfig(process.env))
+const server = await openServer(readConfig(process.env), { jobs: { nullSize: () => 50 } })
 const { context } = server
 const { source, streams, jobs } = context
 const report = (line: string) => process.stdout.write(`${line}\n`)
