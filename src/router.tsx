@@ -71,6 +71,7 @@ const signedIn: RouteObject[] = [
 export const routes: RouteObject[] = [
   {
     errorElement: <PageFailure />,
+    HydrateFallback: () => null,
     children: [
       {
         path: 'sign-in',

@@ -24,12 +24,14 @@ const minus = (text: string) => text.replace('-', '−')
 
 /**
  * Integers up to 10^15 in full with thin spaces between groups of three (from five digits on), other numbers
- * with `digits` significant digits, as a × 10^n outside 10^-3 .. 10^5.
+ * with `digits` significant digits, as a × 10^n outside 10^-3 .. 10^5. `rounded` marks a value that is no
+ * exact integer even when it happens to be whole, so that a column of such values lines up.
  */
-export function numberParts(value: number, digits = 4): NumberParts {
+export function numberParts(value: number, digits = 4, rounded = false): NumberParts {
   if (Number.isNaN(value)) return { mantissa: 'undefined', exponent: null }
   if (!Number.isFinite(value)) return { mantissa: value > 0 ? '∞' : '−∞', exponent: null }
-  if (Number.isInteger(value) && Math.abs(value) < 1e15) return { mantissa: grouped(value), exponent: null }
+  if (!(rounded && value !== 0) && Number.isInteger(value) && Math.abs(value) < 1e15)
+    return { mantissa: grouped(value), exponent: null }
   const [mantissa, power] = value.toExponential(digits - 1).split('e') as [string, string]
   const exponent = Number(power)
   if (exponent >= -3 && exponent < 5) {

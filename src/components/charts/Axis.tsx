@@ -1,5 +1,4 @@
-import { type Scale } from './scales.ts'
-import { formatNumber } from '../../lib/numbers.ts'
+import { tickFormat, type Scale } from './scales.ts'
 
 interface AxisProps {
   scale: Scale
@@ -9,12 +8,10 @@ interface AxisProps {
   right: number
   top: number
   bottom: number
-  format?: (value: number) => string
 }
 
-const plain = (value: number) => formatNumber(value, 3)
-
-export function BottomAxis({ scale, label, left, right, top, bottom, format = plain }: AxisProps) {
+export function BottomAxis({ scale, label, left, right, top, bottom }: AxisProps) {
+  const format = tickFormat(scale.ticks)
   return (
     <g className="text-xs">
       <line x1={left} x2={right} y1={bottom} y2={bottom} className="stroke-edge" />
@@ -34,7 +31,8 @@ export function BottomAxis({ scale, label, left, right, top, bottom, format = pl
   )
 }
 
-export function LeftAxis({ scale, label, left, right, top, format = plain, bottom }: AxisProps) {
+export function LeftAxis({ scale, label, left, right, top, bottom }: AxisProps) {
+  const format = tickFormat(scale.ticks)
   return (
     <g className="text-xs">
       <line x1={left} x2={left} y1={top} y2={bottom} className="stroke-edge" />

@@ -7,9 +7,9 @@ import { resolvedColour } from '../../lib/colours.ts'
 import { formatNumber } from '../../lib/numbers.ts'
 import { Num } from '../ui/Num.tsx'
 import { Table, Td, Th } from '../ui/Table.tsx'
+import { alignCurves, type Curve } from './alignCurves.ts'
+import { tickFormat } from './scales.ts'
 import { ChartFrame } from './ChartFrame.tsx'
-
-type Curve = readonly (readonly [number, number])[]
 
 interface LiveCurveProps {
   /** Best score so far over evaluations: what the search found, in amber. */
@@ -22,20 +22,6 @@ interface LiveCurveProps {
 }
 
 const height = 300
-
-/** Both curves on one ascending list of evaluation counts, undefined where a curve has no point of its own. */
-export function alignCurves(
-  found: Curve,
-  expected: Curve,
-  evaluations: number,
-): [number[], (number | undefined)[], (number | undefined)[]] {
-  const last = found.at(-1)
-  const level: Curve = last && evaluations > last[0] ? [...found, [evaluations, last[1]]] : found
-  const foundAt = new Map(level.map(([n, score]) => [n, score]))
-  const expectedAt = new Map(expected.map(([n, score]) => [n, score]))
-  const counts = [...new Set([...foundAt.keys(), ...expectedAt.keys()])].sort((a, b) => a - b)
-  return [counts, counts.map((n) => foundAt.get(n)), counts.map((n) => expectedAt.get(n))]
-}
 
 export function LiveCurve({ found, expected, evaluations, budget }: LiveCurveProps) {
   const [frame, width] = useWidth<HTMLDivElement>(720)
@@ -122,7 +108,7 @@ function options(width: number, reach: () => number): uPlot.Options {
         label: 'score',
         labelSize: 18,
         size: 64,
-        values: (_, ticks) => ticks.map((n) => formatNumber(n, 4)),
+        values: (_, ticks) => ticks.map(tickFormat(ticks)),
       },
     ],
     series: [

@@ -1,3 +1,5 @@
+import { formatNumber } from '../../lib/numbers.ts'
+
 /** A map from values to pixels, with the values that get a tick. */
 export interface Scale {
   (value: number): number
@@ -50,4 +52,13 @@ export function logTicks(low: number, high: number): number[] {
     }
   }
   return ticks
+}
+
+/** Ticks written with as many decimals as the finest of them needs, all alike. */
+export function tickFormat(ticks: readonly number[]): (value: number) => string {
+  const decimals = Math.max(0, ...ticks.map((tick) => (String(tick).split('.')[1] ?? '').length))
+  const large = ticks.some((tick) => Math.abs(tick) >= 1e5)
+  const small = decimals > 4 || ticks.some((tick) => String(tick).includes('e'))
+  if (large || small) return (value) => formatNumber(value, 3)
+  return (value) => value.toFixed(decimals).replace('-', '−')
 }

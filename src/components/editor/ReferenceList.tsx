@@ -1,11 +1,13 @@
 import { useMemo, useState } from 'react'
 import { CornerDownLeft } from 'lucide-react'
-import { referenceEntries, type ReferenceEntry, type ReferenceKind } from '../../../scoring/index.ts'
+import { referenceEntries, type ReferenceKind } from '../../../scoring/index.ts'
 import { Formula } from '../formula/Formula.tsx'
 import { IconButton } from '../ui/Button.tsx'
 import { TextField } from '../ui/Field.tsx'
 import { Empty } from '../ui/States.tsx'
 import { Message } from './Message.tsx'
+
+type ReferenceEntry = ReturnType<typeof referenceEntries>[number]
 
 const groups: readonly [title: string, kinds: readonly ReferenceKind[]][] = [
   ['Statements', ['statement']],
@@ -87,7 +89,7 @@ function Entry({
           open={shown}
           onToggle={(event) => setShown(event.currentTarget.open)}
         >
-          <summary className="list-outside py-0.5 leading-5">
+          <summary className="list-inside py-0.5 leading-5">
             <code className="font-mono text-xs font-semibold break-words">{entry.form}</code>
             {entry.of && <span className="ml-2 text-xs text-soft">of {entry.of}</span>}
             {entry.type && <span className="ml-2 text-xs text-soft">{entry.type}</span>}

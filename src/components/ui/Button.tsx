@@ -1,15 +1,16 @@
 import { type ButtonHTMLAttributes } from 'react'
 import { Link, type LinkProps } from 'react-router-dom'
 
-export type ButtonKind = 'primary' | 'plain' | 'quiet' | 'danger'
+export type ButtonKind = 'primary' | 'plain' | 'quiet' | 'danger' | 'icon'
 
 const shape =
-  'inline-flex items-center justify-center gap-1.5 rounded border px-3 min-h-8 text-sm font-medium whitespace-nowrap select-none transition-colors aria-disabled:cursor-not-allowed aria-disabled:opacity-60'
+  'inline-flex items-center justify-center gap-1.5 rounded border min-h-8 text-sm font-medium whitespace-nowrap select-none transition-colors aria-disabled:cursor-not-allowed aria-disabled:opacity-60'
 const kinds: Record<ButtonKind, string> = {
-  primary: 'border-action bg-action text-on-action not-aria-disabled:hover:brightness-110',
-  plain: 'border-edge bg-sheet text-ink not-aria-disabled:hover:bg-action-wash',
-  quiet: 'border-transparent text-action not-aria-disabled:hover:bg-action-wash px-2',
-  danger: 'border-rejected bg-sheet text-rejected not-aria-disabled:hover:bg-rejected-wash',
+  primary: 'px-3 border-action bg-action text-on-action not-aria-disabled:hover:brightness-110',
+  plain: 'px-3 border-edge bg-sheet text-ink not-aria-disabled:hover:bg-action-wash',
+  quiet: 'px-2 border-transparent text-action not-aria-disabled:hover:bg-action-wash',
+  icon: 'w-8 shrink-0 border-transparent text-action not-aria-disabled:hover:bg-action-wash',
+  danger: 'px-3 border-rejected bg-sheet text-rejected not-aria-disabled:hover:bg-rejected-wash',
 }
 
 export interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
@@ -42,14 +43,6 @@ export function ButtonLink({ kind = 'plain', className = '', ...rest }: LinkProp
 }
 
 /** A square button that shows only a symbol; `label` is its name for everyone. */
-export function IconButton({ label, className = '', ...rest }: ButtonProps & { label: string }) {
-  return (
-    <Button
-      kind="quiet"
-      {...rest}
-      aria-label={label}
-      title={rest.title ?? label}
-      className={`w-8 px-0 ${className}`}
-    />
-  )
+export function IconButton({ label, ...rest }: ButtonProps & { label: string }) {
+  return <Button kind="icon" {...rest} aria-label={label} title={rest.title ?? label} />
 }

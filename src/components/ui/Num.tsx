@@ -4,14 +4,17 @@ import { formatNumber, numberParts } from '../../lib/numbers.ts'
 export function Num({
   value,
   digits = 4,
+  rounded = false,
   className = '',
 }: {
   value: number | null
   digits?: number
+  /** No exact integer, even when it is whole: keeps its decimals. */
+  rounded?: boolean
   className?: string
 }) {
   if (value === null) return <span className="text-soft">–</span>
-  const { mantissa, exponent } = numberParts(value, digits)
+  const { mantissa, exponent } = numberParts(value, digits, rounded)
   return (
     <span
       data-raw={String(value)}

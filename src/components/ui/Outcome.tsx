@@ -6,7 +6,7 @@ import { Num } from './Num.tsx'
 export function Outcome({ outcome, digits = 6 }: { outcome: OutcomeView; digits?: number }) {
   switch (outcome.kind) {
     case 'feasible':
-      return <Num value={outcome.score} digits={digits} />
+      return <Num value={outcome.score} digits={digits} rounded />
     case 'infeasible':
       return (
         <span className="text-soft" title={`Fails: ${outcome.failed.join(', ')}`}>
@@ -22,9 +22,21 @@ export function Outcome({ outcome, digits = 6 }: { outcome: OutcomeView; digits?
   }
 }
 
-export function ReportCell({ cell }: { cell: Cell | undefined }) {
+/** Report columns with a value that is not whole: all their values are written with decimals. */
+export function roundedColumns(outcomes: readonly OutcomeView[]): ReadonlySet<string> {
+  const rounded = new Set<string>()
+  for (const outcome of outcomes) {
+    if (outcome.kind !== 'feasible') continue
+    for (const [name, cell] of Object.entries(outcome.report)) {
+      if (typeof cell === 'number' && !Number.isInteger(cell)) rounded.add(name)
+    }
+  }
+  return rounded
+}
+
+export function ReportCell({ cell, rounded }: { cell: Cell | undefined; rounded?: boolean }) {
   if (cell === undefined) return <span className="text-soft">–</span>
-  if (typeof cell === 'number') return <Num value={cell} digits={5} />
+  if (typeof cell === 'number') return <Num value={cell} digits={5} rounded={rounded} />
   if (typeof cell === 'boolean') return <span data-raw={cell}>{cell ? 'yes' : 'no'}</span>
   return (
     <span className="text-soft" title={cell.undefined} data-raw="">

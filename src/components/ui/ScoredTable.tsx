@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom'
 import { type ScoredRow } from '../../../shared/outcomes.ts'
-import { HitMark, Outcome, ReportCell } from './Outcome.tsx'
+import { HitMark, Outcome, ReportCell, roundedColumns } from './Outcome.tsx'
 import { Table, Td, Th } from './Table.tsx'
 
 /** Scored candidates with their report columns and links to their dossiers. */
@@ -20,8 +20,9 @@ export function ScoredTable({
       rows.flatMap(({ outcome }) => (outcome.kind === 'feasible' ? Object.keys(outcome.report) : [])),
     ),
   ]
+  const rounded = roundedColumns(rows.map(({ outcome }) => outcome))
   return (
-    <Table label={label}>
+    <Table label={label} fit>
       <thead>
         <tr>
           {ranked && <Th numeric>Rank</Th>}
@@ -59,7 +60,10 @@ export function ScoredTable({
             </Td>
             {columns.map((column) => (
               <Td key={column} numeric>
-                <ReportCell cell={row.outcome.kind === 'feasible' ? row.outcome.report[column] : undefined} />
+                <ReportCell
+                  rounded={rounded.has(column)}
+                  cell={row.outcome.kind === 'feasible' ? row.outcome.report[column] : undefined}
+                />
               </Td>
             ))}
           </tr>

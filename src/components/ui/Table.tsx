@@ -5,15 +5,18 @@ import { ArrowDown, ArrowUp } from 'lucide-react'
 export function Table({
   label,
   children,
+  fit,
   className = '',
 }: {
   label: string
   children: ReactNode
+  /** As wide as its content, not as the page. */
+  fit?: boolean
   className?: string
 }) {
   return (
     <div className="overflow-x-auto" tabIndex={0} role="region" aria-label={label}>
-      <table className={`w-full border-collapse text-sm ${className}`}>
+      <table className={`border-collapse text-sm ${fit ? '[&_td]:px-4 [&_th]:px-4' : 'w-full'} ${className}`}>
         <caption className="sr-only">{label}</caption>
         {children}
       </table>

@@ -21,7 +21,7 @@ export function FilterBar({
     <form
       role="search"
       aria-label="Filter the library"
-      className="grid grid-cols-2 items-end gap-x-2 gap-y-3 sm:grid-cols-4"
+      className="grid grid-cols-2 content-start items-end gap-x-2 gap-y-3 sm:grid-cols-4"
       onSubmit={(event) => event.preventDefault()}
     >
       <Bound name="h11Min" label="h11 from" value={filter.h11Min} onChange={onChange} />

@@ -72,8 +72,10 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
         ))}
         .
       </PageHead>
-      <Caution className="mb-4" />
-      <Filters view={view} shortlist={shortlist} onChange={change} />
+      <div className="mb-3 flex flex-wrap items-end justify-between gap-x-8 gap-y-3">
+        <Filters view={view} shortlist={shortlist} onChange={change} />
+        <Caution />
+      </div>
       {rows.length === 0 ? (
         <Empty
           title={shortlist.rows.length === 0 ? 'The shortlist is empty.' : 'No candidate matches the filter.'}
@@ -155,7 +157,7 @@ function Filters({
     <form
       role="search"
       aria-label="Filter the shortlist"
-      className="mb-3 flex flex-wrap items-end gap-3"
+      className="flex flex-wrap items-end gap-3"
       onSubmit={(event) => event.preventDefault()}
     >
       <Select

@@ -1,4 +1,4 @@
-import { useRef, useState } from 'react'
+import { useMemo, useRef, useState } from 'react'
 import { Link, useNavigate } from 'react-router-dom'
 import { toast } from 'sonner'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
@@ -7,7 +7,7 @@ import { explain } from '../../api/request.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
 import { ClassThumb } from '../../components/geometry/ClassThumb.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { HitMark, Outcome, ReportCell } from '../../components/ui/Outcome.tsx'
+import { HitMark, Outcome, ReportCell, roundedColumns } from '../../components/ui/Outcome.tsx'
 import { SortButton } from '../../components/ui/Table.tsx'
 import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
@@ -47,6 +47,10 @@ export function Triage({
   const [fault, setFault] = useState<string | null>(null)
   const table = useRef<HTMLDivElement>(null)
 
+  const rounded = useMemo(
+    () => roundedColumns(shortlist.rows.map(({ outcome }) => outcome)),
+    [shortlist.rows],
+  )
   const found = rows.findIndex((row) => row.candidateKey === current)
   const at = found >= 0 ? found : 0
   const row = rows[at]
@@ -149,7 +153,10 @@ export function Triage({
       numeric: true,
       ...sortable(`report:${name}`, name),
       cell: (item) => (
-        <ReportCell cell={item.outcome.kind === 'feasible' ? item.outcome.report[name] : undefined} />
+        <ReportCell
+          rounded={rounded.has(name)}
+          cell={item.outcome.kind === 'feasible' ? item.outcome.report[name] : undefined}
+        />
       ),
     })),
     {

@@ -50,7 +50,7 @@ export function PreviewPanel({
   }
   return (
     <div>
-      <p role="status" className="mb-2 flex min-h-5 items-center gap-3 text-xs text-soft">
+      <div role="status" className="mb-2 flex min-h-5 items-center gap-3 text-xs text-soft">
         {outdated ? (
           sound ? (
             'Changed since; a new answer is on its way.'
@@ -71,7 +71,7 @@ export function PreviewPanel({
         ) : (
           `${formatNumber(preview.evaluated)} candidates. ${preview.law}`
         )}
-      </p>
+      </div>
       <div className={outdated ? 'opacity-60' : ''}>
         <Answer campaign={campaign} preview={preview} />
       </div>

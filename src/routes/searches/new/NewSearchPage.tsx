@@ -154,7 +154,7 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
             label="Islands"
             inputMode="numeric"
             value={islands}
-            hint="Independent populations."
+            hint="Independent chains."
             error={fault('islands', 'A whole number from 1 to 16.')}
             onChange={(event) => setIslands(event.target.value)}
           />

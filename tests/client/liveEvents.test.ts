@@ -1,0 +1,73 @@
+// @vitest-environment happy-dom
+import { describe, expect, it } from 'vitest'
+import { QueryClient } from '@tanstack/react-query'
+import { type SearchDetail, type SearchProgress } from '../../shared/searches.ts'
+import { applyEvent } from '../../src/api/liveEvents.ts'
+
+const progress = (evaluations: number, best: number | null, bestKey: string | null): SearchProgress => ({
+  evaluations,
+  proposals: evaluations * 2,
+  accepted: evaluations,
+  restarts: 0,
+  feasible: evaluations,
+  infeasible: 0,
+  undefined: 0,
+  best,
+  bestKey,
+  curve: best === null ? [] : [[evaluations, best]],
+  islands: [],
+  exhausted: false,
+  evaluationsPerSecond: 10,
+  secondsLeft: 5,
+})
+
+const search = {
+  id: 's1',
+  state: 'running',
+  evaluations: 10,
+  best: -6,
+  progress: progress(10, -6, 'k1'),
+} as SearchDetail
+
+describe('events in the cache', () => {
+  it('move a search and its line in the list', () => {
+    const client = new QueryClient()
+    client.setQueryData(['search', 's1'], search)
+    client.setQueryData(['searches', 'c1'], [search])
+    applyEvent(client, 'c1', {
+      kind: 'search',
+      id: 's1',
+      state: 'finished',
+      progress: progress(50, -5, 'k2'),
+    })
+    expect(client.getQueryData(['search', 's1'])).toMatchObject({
+      state: 'finished',
+      evaluations: 50,
+      best: -5,
+    })
+    expect(client.getQueryData(['searches', 'c1'])).toMatchObject([
+      { id: 's1', state: 'finished', evaluations: 50 },
+    ])
+  })
+
+  it('ask for the list of best candidates anew only when there is a new best or a new state', () => {
+    const client = new QueryClient()
+    client.setQueryData(['search', 's1'], search)
+    const stale = () => client.getQueryState(['search', 's1'])?.isInvalidated
+    applyEvent(client, 'c1', { kind: 'search', id: 's1', state: 'running', progress: progress(20, -6, 'k1') })
+    expect(stale()).toBe(false)
+    applyEvent(client, 'c1', {
+      kind: 'search',
+      id: 's1',
+      state: 'running',
+      progress: progress(30, -5.5, 'k9'),
+    })
+    expect(stale()).toBe(true)
+  })
+
+  it('never make up a search that is not there', () => {
+    const client = new QueryClient()
+    applyEvent(client, 'c1', { kind: 'search', id: 's1', state: 'running', progress: progress(20, -6, 'k1') })
+    expect(client.getQueryData(['search', 's1'])).toBeUndefined()
+  })
+})
