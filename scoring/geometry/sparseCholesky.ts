@@ -1,6 +1,12 @@
 import type { EliminationOrder } from './minimumDegree.ts'
 
 /**
+ * A pivot below this share of its row's largest entry is set aside too: it may be an exact zero moved by rounding,
+ * and dividing by it would cost as many digits. Setting a sound pivot aside costs time only.
+ */
+const leastShareOfRow = 1e-6
+
+/**
  * Sparse Cholesky factor P M P^T = L L^T of a positive definite matrix in a fixed elimination order. The
  * values of L stand where `order.rows` says: write the lower triangle of P M P^T into `values` (zero where
  * M has none), call `factorise`, then `solve` as often as wanted. Everything is allocated once.
@@ -65,6 +71,7 @@ export class SparseCholesky {
     const { size, starts, rows } = order
     listHead.fill(-1)
     aside.fill(0)
+    const largest = ratio < 0 ? undefined : this.largestPerRow()
     for (let j = 0; j < size; j++) {
       const start = starts[j]
       const end = starts[j + 1]
@@ -80,7 +87,8 @@ export class SparseCholesky {
         k = following
       }
       const pivot = column[j]
-      const least = ratio < 0 ? 0 : ratio * Math.abs(values[start])
+      const least =
+        largest === undefined ? 0 : Math.max(ratio * Math.abs(values[start]), leastShareOfRow * largest[j])
       if (!(pivot > least)) {
         if (ratio < 0) return false
         aside[order.order[j]] = 1
@@ -94,6 +102,20 @@ export class SparseCholesky {
       this.enlist(j, start + 1, end)
     }
     return true
+  }
+
+  /** Largest entry of each row by size: what is far below it is a zero that rounding has moved. */
+  private largestPerRow(): Float64Array {
+    const { order, values } = this
+    const largest = new Float64Array(order.size)
+    for (let j = 0; j < order.size; j++) {
+      for (let q = order.starts[j]; q < order.starts[j + 1]; q++) {
+        const size = Math.abs(values[q])
+        if (size > largest[j]) largest[j] = size
+        if (size > largest[order.rows[q]]) largest[order.rows[q]] = size
+      }
+    }
+    return largest
   }
 
   private enlist(k: number, next: number, stop: number): void {
