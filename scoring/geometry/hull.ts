@@ -1,5 +1,6 @@
-import { InvariantError } from '../errors.ts'
 import { compareLexicographic, gcd, gcdBig } from './integers.ts'
+import { startSimplex } from './startSimplex.ts'
+import { difference, orthogonalTo, TooLarge, value4 } from './vectors.ts'
 
 /**
  * A facet of a hull: <normal, x> + offset >= 0 on the hull, with equality on the facet. The normal is primitive,
@@ -40,8 +41,6 @@ interface WorkFacet {
   /** No point lies beyond it. */
   settled: boolean
 }
-
-class TooLarge extends Error {}
 
 /**
  * Convex hull in four dimensions of points around the origin, exact, by double description over the cone of
@@ -101,77 +100,6 @@ function hullWithin(points: readonly (readonly number[])[], extent: readonly num
 function requireExact(form: Form, extent: readonly number[]): void {
   const bound = extent.reduce((sum, size, axis) => sum + size * Math.abs(form[axis]), Math.abs(form[4]))
   if (bound > Number.MAX_SAFE_INTEGER) throw new TooLarge()
-}
-
-/** Five affinely independent vertices of the hull: each maximises a functional that vanishes on those before. */
-function startSimplex(points: readonly (readonly number[])[]): number[] {
-  const chosen = [extreme(points, (p) => p[0]), extreme(points, (p) => -p[0])]
-  while (chosen.length < 5) {
-    const base = points[chosen[0]]
-    const directions = chosen.slice(1).map((index) => difference(points[index], base))
-    const functionals = annihilators(directions)
-    let found: number | undefined
-    for (const functional of functionals) {
-      const level = value4(functional, base)
-      for (const sign of [1, -1]) {
-        const index = extreme(points, (p) => sign * (value4(functional, p) - level))
-        if (value4(functional, points[index]) !== level) {
-          found = index
-          break
-        }
-      }
-      if (found !== undefined) break
-    }
-    if (found === undefined) throw new InvariantError('A hull was asked for points in a hyperplane.')
-    chosen.push(found)
-  }
-  return chosen
-}
-
-/** Index of the point that maximises the functional; ties go to the lexicographically greatest, a vertex. */
-function extreme(
-  points: readonly (readonly number[])[],
-  functional: (point: readonly number[]) => number,
-): number {
-  let best = 0
-  let height = functional(points[0])
-  for (let i = 1; i < points.length; i++) {
-    const here = functional(points[i])
-    if (here > height || (here === height && compareLexicographic(points[i], points[best]) > 0)) {
-      best = i
-      height = here
-    }
-  }
-  return best
-}
-
-/** Functionals that span the annihilator of one to three independent directions. */
-function annihilators(directions: readonly (readonly number[])[]): number[][] {
-  const found: number[][] = []
-  const fill = Array.from({ length: 3 - directions.length }, () => 0)
-  // Completing by unit vectors in every way gives a spanning set: each is orthogonal to all rows it was made of.
-  const complete = (from: number, units: readonly number[]): void => {
-    if (units.length === fill.length) {
-      const rows = [...directions, ...units.map((axis) => [0, 1, 2, 3].map((i) => (i === axis ? 1 : 0)))]
-      const functional = orthogonalTo(rows)
-      if (functional.some((entry) => entry !== 0)) found.push(functional)
-      return
-    }
-    for (let axis = from; axis < 4; axis++) complete(axis + 1, [...units, axis])
-  }
-  complete(0, [])
-  return found
-}
-
-/** The vector of signed 3 x 3 minors of three rows: orthogonal to each of them. */
-function orthogonalTo(rows: readonly (readonly number[])[]): number[] {
-  const [a, b, c] = rows
-  if (6 * largest(a) * largest(b) * largest(c) > Number.MAX_SAFE_INTEGER) throw new TooLarge()
-  const minor = (i: number, j: number, k: number): number =>
-    a[i] * (b[j] * c[k] - b[k] * c[j]) -
-    a[j] * (b[i] * c[k] - b[k] * c[i]) +
-    a[k] * (b[i] * c[j] - b[j] * c[i])
-  return [minor(1, 2, 3), -minor(0, 2, 3), minor(0, 1, 3), -minor(0, 1, 2)]
 }
 
 function simplexFacets(corners: readonly (readonly number[])[]): WorkFacet[] {
@@ -263,14 +191,6 @@ function primitive(form: Form): number[] {
   const divisor = gcd(gcd(form[0], form[1]), gcd(form[2], form[3]))
   return form.map((entry) => entry / divisor)
 }
-
-const value4 = (m: readonly number[], p: readonly number[]): number =>
-  m[0] * p[0] + m[1] * p[1] + m[2] * p[2] + m[3] * p[3]
-
-const largest = (row: readonly number[]): number =>
-  row.reduce((most, entry) => Math.max(most, Math.abs(entry)), 0)
-
-const difference = (a: readonly number[], b: readonly number[]): number[] => a.map((entry, i) => entry - b[i])
 
 function contains(facet: WorkFacet, position: number): boolean {
   return position < 32 ? (facet.low & (1 << position)) !== 0 : (facet.high & (1 << (position - 32))) !== 0
