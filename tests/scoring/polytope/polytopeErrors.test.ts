@@ -2,6 +2,8 @@ import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
 import { InputError } from '../../../scoring/errors.ts'
 import { polytopeFromPoints } from '../../../scoring/geometry/polytope.ts'
+import { affineDimension } from '../../../scoring/geometry/polytopeInput.ts'
+import { facetsByDefinition } from './facetsByDefinition.ts'
 import { quintic, transformed, unimodular } from './unimodular.ts'
 
 function refusal(rows: unknown): InputError {
@@ -128,5 +130,39 @@ describe('polytopes that are refused', () => {
       [0, 1, 2, 3].map((axis) => (Math.floor(i / 9 ** axis) % 9) - 4),
     ).filter((point) => point.reduce((sum, x) => sum + x * x, 0) === 26)
     expect(refusal(sphere).code).toBe('polytope.too-many-vertices')
+  })
+
+  it('exactly those whose facets say so', () => {
+    const entry = fc.integer({ min: -1, max: 1 })
+    const cloud = fc.uniqueArray(fc.tuple(entry, entry, entry, entry), {
+      minLength: 5,
+      maxLength: 11,
+      selector: String,
+    })
+    const outcomes = new Map<string, number>()
+    fc.assert(
+      fc.property(cloud, (points) => {
+        let expected = 'accepted'
+        if (affineDimension(points) < 4) expected = 'polytope.not-four-dimensional'
+        else {
+          const offsets = facetsByDefinition(points).map((facet) => Number(facet.split(',')[4]))
+          if (offsets.some((offset) => offset <= 0)) expected = 'polytope.origin-not-interior'
+          else if (offsets.some((offset) => offset > 1)) expected = 'polytope.facet-distance'
+        }
+        let found = 'accepted'
+        try {
+          polytopeFromPoints(points)
+        } catch (error) {
+          if (!(error instanceof InputError)) throw error
+          found = error.code
+        }
+        expect(found).toBe(expected)
+        outcomes.set(found, (outcomes.get(found) ?? 0) + 1)
+      }),
+      { numRuns: 1500 },
+    )
+    expect([...outcomes.keys()]).toEqual(
+      expect.arrayContaining(['accepted', 'polytope.origin-not-interior', 'polytope.facet-distance']),
+    )
   })
 })
