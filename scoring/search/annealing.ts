@@ -4,11 +4,11 @@ import { InvariantError } from '../errors.ts'
 import { isAccepted, type Temperatures } from './acceptance.ts'
 import { codeOfHeights, heightsOfCode } from './heightsCode.ts'
 import { feasibleKind, undefinedKind, type Merit } from './merit.ts'
-import type { Chain, Method, Run } from './method.ts'
+import type { Chain, Method, Proposal, Run } from './method.ts'
 import { propose } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
 import type { PlacedHeights } from './sampling.ts'
-import { startHeights } from './sampling.ts'
+import { proposalOf, startHeights } from './sampling.ts'
 import type { Json } from './state.ts'
 
 export const tuning = {
@@ -95,16 +95,29 @@ class Annealing implements Chain {
       this.finish()
       return
     }
-    const next = propose(place, stream, this.progress())
+    const next = propose(place, stream)
     if (next === undefined || next.class === place.class) {
-      if (next !== undefined) this.place = next
-      this.stall()
+      const heights = next?.heights()
+      if (heights !== undefined) this.place = { class: place.class, heights }
+      this.stall(this.polytope)
       return
     }
-    const judged = run.judge(this.polytope, next.class, next.heights)
-    if (judged.isNew) this.book.found(this.polytope)
-    else this.stall()
-    this.decide(this.polytope, next, judged.merit)
+    this.consider(this.polytope, next)
+  }
+
+  private consider(polytope: number, next: Proposal, forced = false): void {
+    const { run } = this
+    const judged = run.judge(polytope, next)
+    if (judged?.isNew) this.book.found(polytope)
+    else this.stall(polytope)
+    if (judged === null) return
+    if (!forced && !this.accepts(judged.merit)) return
+    const heights = next.heights()
+    if (heights === undefined) return
+    this.polytope = polytope
+    this.place = { class: next.class, heights }
+    this.merit = judged.merit
+    if (!forced) run.countAccepted()
   }
 
   private enter(first: boolean): void {
@@ -114,22 +127,15 @@ class Annealing implements Chain {
       this.finish()
       return
     }
-    const next = startHeights(run.form(polytope).polytope, run.stream)
-    const judged = run.judge(polytope, next.class, next.heights)
-    if (judged.isNew) this.book.found(polytope)
-    else this.book.stall(polytope)
-    if (first || this.book.isSpent(this.polytope)) {
-      if (!first) run.countRestart()
-      this.polytope = polytope
-      this.place = next
-      this.merit = judged.merit
-    } else this.decide(polytope, next, judged.merit)
+    const forced = first || this.book.isSpent(this.polytope)
+    if (forced && !first) run.countRestart()
+    const start = startHeights(run.form(polytope).polytope, run.stream)
+    this.consider(polytope, proposalOf(start), forced)
   }
 
-  private decide(polytope: number, next: PlacedHeights, merit: Merit): void {
+  private accepts(merit: Merit): boolean {
     const { run, merit: current } = this
-    const calibrating = this.calibrated < tuning.calibration
-    if (calibrating) {
+    if (this.calibrated < tuning.calibration) {
       this.calibrated++
       if (merit.kind === current.kind && merit.value !== current.value) {
         const difference = Math.abs(merit.value - current.value)
@@ -137,12 +143,7 @@ class Annealing implements Chain {
         else this.shortfalls.push(difference)
       }
     }
-    if (isAccepted(current, merit, this.temperatures(), run.stream.uniform())) {
-      this.polytope = polytope
-      this.place = next
-      this.merit = merit
-      run.countAccepted()
-    }
+    return isAccepted(current, merit, this.temperatures(), run.stream.uniform())
   }
 
   private progress(): number {
@@ -154,8 +155,8 @@ class Annealing implements Chain {
     return { score: medianOr(this.losses, 1) * cooling, shortfall: medianOr(this.shortfalls, 0.3) * cooling }
   }
 
-  private stall(): void {
-    this.book.stall(this.polytope)
+  private stall(polytope: number): void {
+    this.book.stall(polytope)
     this.finish()
   }
 

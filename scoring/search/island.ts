@@ -11,8 +11,8 @@ import { withStep, type Curve } from './curve.ts'
 import { codeOfHeights } from './heightsCode.ts'
 import { Histogram } from './histogram.ts'
 import type { OutcomeMemo } from './memo.ts'
-import { meritOf } from './merit.ts'
-import type { Chain, Judgement, Run } from './method.ts'
+import { irregularKind, meritOf } from './merit.ts'
+import type { Chain, Judgement, Proposal, Run } from './method.ts'
 import { methods } from './methods.ts'
 import type { SearchProblem } from './problem.ts'
 import { RandomStream } from './randomStream.ts'
@@ -152,18 +152,25 @@ export class Island implements Run {
     return passes
   }
 
-  judge(polytope: number, cls: TwoFaceClass, heights: ArrayLike<number>): Judgement {
+  judge(polytope: number, proposal: Proposal): Judgement | null {
     const form = this.form(polytope)
-    const canonical = canonicalClass(form, cls)
+    const canonical = canonicalClass(form, proposal.class)
     const [high, low] = seenKey(form.key, canonical.key)
     this.proposals++
     const known = this.seen.find(high, low)
     if (known !== null) {
       this.stalled++
-      return { merit: known, isNew: false }
+      return known.kind === irregularKind ? null : { merit: known, isNew: false }
+    }
+    const heights = proposal.heights()
+    if (heights === undefined) {
+      this.stalled++
+      this.seen.add(high, low, irregularKind, 0)
+      return null
     }
     const outcome = this.outcome(form, canonical.class, canonical.key)
-    const witness = (): Float64Array => transportHeights(witnessHeights(cls, heights), canonical.relabelling)
+    const witness = (): Float64Array =>
+      transportHeights(witnessHeights(proposal.class, heights), canonical.relabelling)
     const merit = meritOf(outcome)
     this.stalled = 0
     this.evaluations++

@@ -13,6 +13,9 @@ export interface Merit {
 export const undefinedKind = 1
 export const feasibleKind = 2 + STAGES.length
 
+/** In the table of classes seen only: the class is not regular, hence no candidate. */
+export const irregularKind = 255
+
 export function meritOf(outcome: Outcome): Merit {
   switch (outcome.kind) {
     case 'feasible':

@@ -11,6 +11,16 @@ export interface Judgement {
   readonly isNew: boolean
 }
 
+/** A class that a method wants judged. */
+export interface Proposal {
+  readonly class: TwoFaceClass
+  /**
+   * Integer heights that give the class (strictly, or with ties that are broken towards it); undefined when it is
+   * not regular, hence no candidate. Asked for only when needed, since finding them may cost a linear program.
+   */
+  heights(): Float64Array | undefined
+}
+
 /** What a method may see and use of its run. Randomness comes from `stream` only. */
 export interface Run {
   readonly stream: RandomStream
@@ -25,10 +35,10 @@ export interface Run {
   /** False when the rule's requirements on the polytope alone fail: no candidate on it can be feasible. */
   polytopePasses(polytope: number): boolean
   /**
-   * Proposes a class with heights inside it: looked up among the classes seen, else scored. A step of a method
-   * calls this at most once, since a segment may end after any evaluation.
+   * Looks a proposed class up among the classes seen, else scores it; null when it is not regular. A step of a
+   * method calls this at most once, since a segment may end after any evaluation.
    */
-  judge(polytope: number, cls: TwoFaceClass, heights: ArrayLike<number>): Judgement
+  judge(polytope: number, proposal: Proposal): Judgement | null
   countAccepted(): void
   countRestart(): void
   end(reason: RunEnd): void

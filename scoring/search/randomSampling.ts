@@ -1,5 +1,5 @@
 import type { Method } from './method.ts'
-import { drawNull, nullLaw } from './sampling.ts'
+import { drawNull, nullLaw, proposalOf } from './sampling.ts'
 
 /**
  * Independent draws by the null's law: what a search is compared with. Polytopes that the rule turns away stay
@@ -12,8 +12,7 @@ export const randomSampling: Method = {
     return {
       step() {
         const polytope = run.stream.below(run.polytopeCount)
-        const { class: cls, heights } = drawNull(run.form(polytope).polytope, run.stream)
-        run.judge(polytope, cls, heights)
+        run.judge(polytope, proposalOf(drawNull(run.form(polytope).polytope, run.stream)))
         if (run.stalled >= run.patience) run.end('space-exhausted')
       },
       state: () => null,

@@ -3,12 +3,17 @@ import { quadraticHeights } from '../geometry/heights.ts'
 import type { Polytope } from '../geometry/polytope.ts'
 import { fineClass, type TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import { InvariantError } from '../errors.ts'
+import type { Proposal } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
 
 /** Integer heights together with the class they give. */
 export interface PlacedHeights {
   readonly class: TwoFaceClass
   readonly heights: Float64Array
+}
+
+export function proposalOf({ class: cls, heights }: PlacedHeights): Proposal {
+  return { class: cls, heights: () => heights }
 }
 
 /** Widths of the noise in units of the quadratic form's step; beyond 1/2 the heights are clamped to be fine. */
