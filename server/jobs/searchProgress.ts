@@ -15,10 +15,11 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
   const total = (
     name: 'evaluations' | 'proposals' | 'accepted' | 'restarts' | 'feasible' | 'infeasible' | 'undefined',
   ) => begun.reduce((sum, island) => sum + island[name], 0)
-  let leader: IslandProgress | null = null
-  for (const island of begun) {
-    if (island.best !== null && (leader?.best == null || island.best > leader.best)) leader = island
-  }
+  const scored = begun.filter((island) => island.best !== null)
+  const leader = scored.reduce<IslandProgress | null>(
+    (best, island) => (best === null || Number(island.best) > Number(best.best) ? island : best),
+    null,
+  )
   const evaluations = total('evaluations')
   const { evaluationsPerSecond, budget } = pace
   return {

@@ -1,8 +1,5 @@
 import { In, type EntityManager } from 'typeorm'
 import type { SearchProgress } from '../../shared/searches.ts'
-import { CandidateRecord } from '../entities/candidate.ts'
-import { CandidateValue } from '../entities/candidateValue.ts'
-import { Find } from '../entities/find.ts'
 import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
 import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
@@ -106,51 +103,49 @@ async function storeFinds(
   scoringHash: string,
   finds: readonly IslandFind[],
 ): Promise<void> {
-  const before = await manager.find(Find, { where: { searchId } })
+  const before = await manager.query<{ candidateKey: string }[]>(
+    'SELECT candidateKey FROM find WHERE searchId = ?',
+    [searchId],
+  )
   const known = new Set(before.map(({ candidateKey }) => candidateKey))
-  const fresh = finds.filter(({ candidateKey }) => !known.has(candidateKey))
-  await storeCandidates(manager, scoringHash, fresh)
-  await manager.delete(Find, { searchId })
-  for (let from = 0; from < finds.length; from += 200) {
-    await manager.insert(
-      Find,
-      finds.slice(from, from + 200).map(({ candidateKey, island }, place) => ({
-        searchId,
-        candidateKey,
-        rank: from + place + 1,
-        island,
-      })),
-    )
-  }
+  await storeCandidates(
+    manager,
+    scoringHash,
+    finds.filter(({ candidateKey }) => !known.has(candidateKey)),
+  )
+  await manager.query('DELETE FROM find WHERE searchId = ?', [searchId])
+  const rows = finds.map(({ candidateKey, island }, place) => [candidateKey, place + 1, island])
+  await manager.query(
+    `INSERT INTO find (searchId, candidateKey, rank, island)
+     SELECT ?, value ->> 0, value ->> 1, value ->> 2 FROM json_each(?)`,
+    [searchId, JSON.stringify(rows)],
+  )
 }
 
-/** Candidates are stored once; their values once per scoring hash. */
+/**
+ * Candidates are stored once; their values once per scoring hash. The rows go to SQLite as one JSON text: built
+ * one by one they would hold up the requests that wait for the same thread.
+ */
 export async function storeCandidates(
   manager: EntityManager,
   scoringHash: string,
   finds: readonly SegmentFind[],
 ): Promise<void> {
-  for (let from = 0; from < finds.length; from += 100) {
-    const batch = finds.slice(from, from + 100)
-    await manager
-      .createQueryBuilder()
-      .insert()
-      .into(CandidateRecord)
-      .values(
-        batch.map(({ candidateKey: key, polytopeKey, heights }) => ({
-          key,
-          polytopeKey,
-          heights: [...heights],
-        })),
-      )
-      .orIgnore()
-      .execute()
-    await manager
-      .createQueryBuilder()
-      .insert()
-      .into(CandidateValue)
-      .values(batch.map(({ candidateKey, outcome }) => ({ candidateKey, scoringHash, outcome })))
-      .orIgnore()
-      .execute()
-  }
+  if (finds.length === 0) return
+  const candidates = finds.map(({ candidateKey, polytopeKey, heights }) => [
+    candidateKey,
+    polytopeKey,
+    JSON.stringify(heights),
+  ])
+  await manager.query(
+    `INSERT OR IGNORE INTO candidate ("key", polytopeKey, heights)
+     SELECT value ->> 0, value ->> 1, value ->> 2 FROM json_each(?)`,
+    [JSON.stringify(candidates)],
+  )
+  const values = finds.map(({ candidateKey, outcome }) => [candidateKey, JSON.stringify(outcome)])
+  await manager.query(
+    `INSERT OR IGNORE INTO candidate_value (candidateKey, scoringHash, outcome)
+     SELECT value ->> 0, ?, value ->> 1 FROM json_each(?)`,
+    [scoringHash, JSON.stringify(values)],
+  )
 }

@@ -6,7 +6,7 @@ import { Search } from '../../../server/entities/search.ts'
 import { createCampaign } from '../../../server/services/campaigns.ts'
 import { createSearch } from '../../../server/services/searches.ts'
 import { createTarget } from '../../../server/services/targets.ts'
-import { openServer } from '../../../server/start.ts'
+import { listen, openServer } from '../../../server/start.ts'
 import { createSearchSchema } from '../../../shared/searches.ts'
 import { bundledEntries, loadEntries } from './bundledSample.ts'
 import { addAccount } from './testServer.ts'
@@ -45,8 +45,11 @@ if (!(await source.manager.exists(Search))) {
     }),
   )
 }
+const http = await listen(server.app, { ...context.config, port: 0 })
+const place = http.address()
+if (place !== null && typeof place === 'object') report(`listening ${place.port}`)
+
 process.on('SIGTERM', () => {
+  http.close()
   void server.close().then(() => process.exit(0))
 })
-// Keeps the process alive: nothing else does while it waits for its threads.
-setInterval(() => undefined, 60_000)
