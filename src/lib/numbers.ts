@@ -50,7 +50,32 @@ function grouped(value: number): string {
 export function formatNumber(value: number, digits = 4): string {
   const { mantissa, exponent } = numberParts(value, digits)
   if (exponent === null) return mantissa
-  return `${mantissa} × 10${[...String(exponent)].map((c) => superscripts[c] ?? c).join('')}`
+  return `${mantissa} × 10${superscript(exponent)}`
+}
+
+export function superscript(exponent: number): string {
+  return [...String(exponent)].map((digit) => superscripts[digit] ?? digit).join('')
+}
+
+/**
+ * Decimals that a column of rounded values is written with so that their points stand under each other, or null
+ * when they are too far apart for that and each keeps its own significant digits.
+ */
+export function columnDecimals(values: readonly number[], digits: number): number | null {
+  const sizes = values.map(Math.abs).filter((size) => size > 0 && Number.isFinite(size))
+  if (sizes.length === 0) return null
+  const most = Math.floor(Math.log10(Math.max(...sizes)))
+  const least = Math.floor(Math.log10(Math.min(...sizes)))
+  if (most >= 7 || least < -4) return null
+  const decimals = Math.max(0, digits - 1 - most, 1 - least)
+  return decimals <= 6 ? decimals : null
+}
+
+/** With a fixed number of decimals, for such a column. */
+export function formatFixed(value: number, decimals: number): string {
+  const [whole, rest] = Math.abs(value).toFixed(decimals).split('.')
+  const body = grouped(Number(whole))
+  return `${value < 0 ? '−' : ''}${body}${rest ? `.${rest}` : ''}`
 }
 
 /** A rate in per cent, with enough digits to tell small rates apart. */

@@ -1,4 +1,4 @@
-import { tickFormat, type Scale } from './scales.ts'
+import { type Scale } from './scales.ts'
 
 interface AxisProps {
   scale: Scale
@@ -11,7 +11,6 @@ interface AxisProps {
 }
 
 export function BottomAxis({ scale, label, left, right, top, bottom }: AxisProps) {
-  const format = tickFormat(scale.ticks)
   return (
     <g className="text-xs">
       <line x1={left} x2={right} y1={bottom} y2={bottom} className="stroke-edge" />
@@ -20,7 +19,7 @@ export function BottomAxis({ scale, label, left, right, top, bottom }: AxisProps
           <line y1={top} y2={bottom} className="stroke-line" />
           <line y1={bottom} y2={bottom + 4} className="stroke-edge" />
           <text y={bottom + 16} textAnchor="middle" fontSize="11" className="fill-soft">
-            {format(tick)}
+            {scale.format(tick)}
           </text>
         </g>
       ))}
@@ -32,7 +31,6 @@ export function BottomAxis({ scale, label, left, right, top, bottom }: AxisProps
 }
 
 export function LeftAxis({ scale, label, left, right, top, bottom }: AxisProps) {
-  const format = tickFormat(scale.ticks)
   return (
     <g className="text-xs">
       <line x1={left} x2={left} y1={top} y2={bottom} className="stroke-edge" />
@@ -41,7 +39,7 @@ export function LeftAxis({ scale, label, left, right, top, bottom }: AxisProps) 
           <line x1={left} x2={right} className="stroke-line" />
           <line x1={left - 4} x2={left} className="stroke-edge" />
           <text x={left - 7} dy="0.32em" textAnchor="end" fontSize="11" className="fill-soft">
-            {format(tick)}
+            {scale.format(tick)}
           </text>
         </g>
       ))}

@@ -1,17 +1,20 @@
-import { formatNumber } from '../../lib/numbers.ts'
+import { formatNumber, superscript } from '../../lib/numbers.ts'
 
 /** A map from values to pixels, with the values that get a tick. */
 export interface Scale {
   (value: number): number
   invert: (pixel: number) => number
   ticks: number[]
+  /** How its ticks are written. */
+  format: (value: number) => string
 }
 
 export function linearScale(low: number, high: number, from: number, to: number, wanted = 5): Scale {
   const span = high - low || 1
   const scale = (value: number) => from + ((value - low) / span) * (to - from)
   const invert = (pixel: number) => low + ((pixel - from) / (to - from)) * span
-  return Object.assign(scale, { invert, ticks: linearTicks(low, high, wanted) })
+  const ticks = linearTicks(low, high, wanted)
+  return Object.assign(scale, { invert, ticks, format: tickFormat(ticks) })
 }
 
 /** Round values inside [low, high], about `wanted` of them. */
@@ -34,7 +37,8 @@ export function logScale(low: number, high: number, from: number, to: number): S
   const span = Math.log10(high) - bottom || 1
   const scale = (value: number) => from + ((Math.log10(value) - bottom) / span) * (to - from)
   const invert = (pixel: number) => 10 ** (bottom + ((pixel - from) / (to - from)) * span)
-  return Object.assign(scale, { invert, ticks: logTicks(low, high) })
+  const ticks = logTicks(low, high)
+  return Object.assign(scale, { invert, ticks, format: logTickFormat(ticks) })
 }
 
 export function logTicks(low: number, high: number): number[] {
@@ -61,4 +65,14 @@ export function tickFormat(ticks: readonly number[]): (value: number) => string 
   const small = decimals > 4 || ticks.some((tick) => String(tick).includes('e'))
   if (large || small) return (value) => formatNumber(value, 3)
   return (value) => value.toFixed(decimals).replace('-', '−')
+}
+
+/** Powers of ten as such where plain numbers would grow long. */
+export function logTickFormat(ticks: readonly number[]): (value: number) => string {
+  if (ticks.every((tick) => tick >= 1e-3 && tick < 1e5)) return (value) => formatNumber(value)
+  return (value) => {
+    const power = Math.floor(Math.log10(value) + 1e-9)
+    const digit = Math.round(value / 10 ** power)
+    return `${digit === 1 ? '' : `${digit} × `}10${superscript(power)}`
+  }
 }

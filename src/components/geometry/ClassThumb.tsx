@@ -20,13 +20,14 @@ export function ClassThumb({ candidate }: { candidate: string }) {
   if (!faces) return <span className="inline-block h-6 w-20 animate-pulse bg-null-wash" aria-hidden />
   const lengths = dualLengthsOf(faces)
   return (
-    <span className="inline-flex h-7 w-40 items-center gap-1 overflow-hidden align-middle" aria-hidden>
-      {faces.slice(0, 3).map((face) => (
+    <span className="inline-flex h-7 w-48 items-center gap-1 overflow-hidden align-middle" aria-hidden>
+      {faces.slice(0, 2).map((face) => (
         <FacePicture
           key={face.index}
           face={face}
-          unit={Math.min(10, (boxHeight - 6) / Math.max(1, face.height), 60 / Math.max(1, face.width))}
+          unit={Math.min(10, (boxHeight - 6) / Math.max(1, face.height), 84 / Math.max(1, face.width))}
           margin={3}
+          plain
           lengths={lengths}
         />
       ))}

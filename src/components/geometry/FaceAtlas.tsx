@@ -48,7 +48,9 @@ export function FaceAtlas({ faces, highlight = null, onHighlight, onChoose }: Fa
                 className="inline-block size-3.5 border border-ink"
                 style={{ background: dualLengthColour(length, lengths) }}
               />
-              L<sub>f</sub> = {length}
+              <span>
+                L<sub>f</sub> = {length}
+              </span>
             </span>
           ))}
         </span>

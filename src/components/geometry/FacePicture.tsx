@@ -17,6 +17,8 @@ interface FacePictureProps {
   label?: string
   /** Pixels left free around the polygon. */
   margin?: number
+  /** Lines only, for pictures as small as a table row. */
+  plain?: boolean
 }
 
 /** What lies under a place in lattice coordinates: a point first, else an edge. */
@@ -55,6 +57,7 @@ export const FacePicture = memo(function FacePicture({
   onChoose,
   label,
   margin = 7,
+  plain = false,
 }: FacePictureProps) {
   const width = face.width * unit + 2 * margin
   const height = face.height * unit + 2 * margin
@@ -73,7 +76,7 @@ export const FacePicture = memo(function FacePicture({
     const box = event.currentTarget.getBoundingClientRect()
     return [(event.clientX - box.left - margin) / unit, (height - (event.clientY - box.top) - margin) / unit]
   }
-  const dot = unit >= 16 ? 2.4 : unit >= 9 ? 1.8 : unit >= 5 ? 1.2 : 0
+  const dot = plain ? 0 : unit >= 16 ? 2.4 : unit >= 9 ? 1.8 : unit >= 5 ? 1.2 : 0
   const isCorner = new Set(face.corners)
 
   return (
@@ -115,7 +118,7 @@ export const FacePicture = memo(function FacePicture({
         <path
           d={face.edges.map(line).join('')}
           className="fill-none stroke-ink"
-          strokeWidth={unit >= 9 ? 1 : 0.6}
+          strokeWidth={unit >= 9 && !plain ? 1 : 0.6}
           opacity={0.8}
         />
       )}

@@ -1,20 +1,22 @@
-import { formatNumber, numberParts } from '../../lib/numbers.ts'
+import { formatFixed, formatNumber, numberParts } from '../../lib/numbers.ts'
 
-/** A number as typeset text; copying it gives the raw value. */
-export function Num({
-  value,
-  digits = 4,
-  rounded = false,
-  className = '',
-}: {
+interface NumProps {
   value: number | null
   digits?: number
   /** No exact integer, even when it is whole: keeps its decimals. */
   rounded?: boolean
+  /** Decimals shared by a column (`columnDecimals`); they go before `digits`. */
+  decimals?: number | null
   className?: string
-}) {
+}
+
+/** A number as typeset text; copying it gives the raw value. */
+export function Num({ value, digits = 4, rounded = false, decimals = null, className = '' }: NumProps) {
   if (value === null) return <span className="text-soft">–</span>
-  const { mantissa, exponent } = numberParts(value, digits, rounded)
+  const { mantissa, exponent } =
+    decimals === null
+      ? numberParts(value, digits, rounded)
+      : { mantissa: formatFixed(value, decimals), exponent: null }
   return (
     <span
       data-raw={String(value)}

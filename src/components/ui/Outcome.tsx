@@ -1,42 +1,57 @@
 import { type Cell, type OutcomeView } from '../../../shared/outcomes.ts'
-import { formatNumber } from '../../lib/numbers.ts'
+import { columnDecimals, formatNumber } from '../../lib/numbers.ts'
 import { Num } from './Num.tsx'
 
+/** How the score and the report columns of one table are written: shared decimals, null for exact integers. */
+export interface OutcomeFormat {
+  score: number | null
+  report: ReadonlyMap<string, number | null>
+}
+
+/** One format for all rows of a table, so that figures line up. */
+export function outcomeFormat(outcomes: readonly OutcomeView[]): OutcomeFormat {
+  const scores: number[] = []
+  const columns = new Map<string, number[]>()
+  for (const outcome of outcomes) {
+    if (outcome.kind !== 'feasible') continue
+    scores.push(outcome.score)
+    for (const [name, cell] of Object.entries(outcome.report)) {
+      if (typeof cell === 'number') columns.set(name, [...(columns.get(name) ?? []), cell])
+    }
+  }
+  const report = new Map<string, number | null>()
+  for (const [name, values] of columns) {
+    report.set(name, values.every(Number.isInteger) ? null : columnDecimals(values, 5))
+  }
+  return { score: columnDecimals(scores, 6), report }
+}
+
 /** What the rule says of a candidate, in one cell: its score, or why it has none. */
-export function Outcome({ outcome, digits = 6 }: { outcome: OutcomeView; digits?: number }) {
+export function Outcome({ outcome, decimals }: { outcome: OutcomeView; decimals?: number | null }) {
   switch (outcome.kind) {
     case 'feasible':
-      return <Num value={outcome.score} digits={digits} rounded />
+      return <Num value={outcome.score} digits={6} decimals={decimals} rounded />
     case 'infeasible':
       return (
-        <span className="text-soft" title={`Fails: ${outcome.failed.join(', ')}`}>
-          infeasible ({outcome.stage}, short by {formatNumber(outcome.shortfall, 3)})
+        <span
+          className="text-soft"
+          title={`Fails ${outcome.failed.join(', ')}; short by ${formatNumber(outcome.shortfall, 3)}`}
+        >
+          infeasible: {outcome.stage}
         </span>
       )
     case 'undefined':
       return (
         <span className="text-soft" title={outcome.reason}>
-          undefined ({outcome.stage})
+          undefined: {outcome.stage}
         </span>
       )
   }
 }
 
-/** Report columns with a value that is not whole: all their values are written with decimals. */
-export function roundedColumns(outcomes: readonly OutcomeView[]): ReadonlySet<string> {
-  const rounded = new Set<string>()
-  for (const outcome of outcomes) {
-    if (outcome.kind !== 'feasible') continue
-    for (const [name, cell] of Object.entries(outcome.report)) {
-      if (typeof cell === 'number' && !Number.isInteger(cell)) rounded.add(name)
-    }
-  }
-  return rounded
-}
-
-export function ReportCell({ cell, rounded }: { cell: Cell | undefined; rounded?: boolean }) {
+export function ReportCell({ cell, decimals }: { cell: Cell | undefined; decimals?: number | null }) {
   if (cell === undefined) return <span className="text-soft">–</span>
-  if (typeof cell === 'number') return <Num value={cell} digits={5} rounded={rounded} />
+  if (typeof cell === 'number') return <Num value={cell} digits={5} decimals={decimals} />
   if (typeof cell === 'boolean') return <span data-raw={cell}>{cell ? 'yes' : 'no'}</span>
   return (
     <span className="text-soft" title={cell.undefined} data-raw="">

@@ -1,6 +1,6 @@
 import { Link } from 'react-router-dom'
 import { type ScoredRow } from '../../../shared/outcomes.ts'
-import { HitMark, Outcome, ReportCell, roundedColumns } from './Outcome.tsx'
+import { HitMark, Outcome, ReportCell, outcomeFormat } from './Outcome.tsx'
 import { Table, Td, Th } from './Table.tsx'
 
 /** Scored candidates with their report columns and links to their dossiers. */
@@ -20,7 +20,7 @@ export function ScoredTable({
       rows.flatMap(({ outcome }) => (outcome.kind === 'feasible' ? Object.keys(outcome.report) : [])),
     ),
   ]
-  const rounded = roundedColumns(rows.map(({ outcome }) => outcome))
+  const format = outcomeFormat(rows.map(({ outcome }) => outcome))
   return (
     <Table label={label} fit>
       <thead>
@@ -46,14 +46,14 @@ export function ScoredTable({
                 to={`/candidates/${row.candidateKey}?campaign=${campaign}`}
                 className="font-mono text-xs text-action hover:underline"
               >
-                {row.candidateKey.slice(0, 10)}
+                {row.candidateKey.slice(0, 8)}
               </Link>
             </Td>
             <Td numeric>
               {row.h11}, {row.h21}
             </Td>
             <Td numeric>
-              <Outcome outcome={row.outcome} />
+              <Outcome outcome={row.outcome} decimals={format.score} />
             </Td>
             <Td>
               <HitMark outcome={row.outcome} />
@@ -61,7 +61,7 @@ export function ScoredTable({
             {columns.map((column) => (
               <Td key={column} numeric>
                 <ReportCell
-                  rounded={rounded.has(column)}
+                  decimals={format.report.get(column)}
                   cell={row.outcome.kind === 'feasible' ? row.outcome.report[column] : undefined}
                 />
               </Td>

@@ -16,7 +16,7 @@ export function Table({
 }) {
   return (
     <div className="overflow-x-auto" tabIndex={0} role="region" aria-label={label}>
-      <table className={`border-collapse text-sm ${fit ? '[&_td]:px-4 [&_th]:px-4' : 'w-full'} ${className}`}>
+      <table className={`border-collapse text-sm ${fit ? '[&_td]:px-3 [&_th]:px-3' : 'w-full'} ${className}`}>
         <caption className="sr-only">{label}</caption>
         {children}
       </table>

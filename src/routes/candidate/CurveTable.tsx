@@ -38,7 +38,7 @@ const columns: Column<Curve>[] = [
     key: 'volume',
     header: 'Volume',
     numeric: true,
-    cell: (curve) => <Num value={curve.volume} digits={5} />,
+    cell: (curve) => <Num value={curve.volume} digits={5} rounded />,
   },
 ]
 

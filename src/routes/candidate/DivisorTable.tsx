@@ -1,6 +1,7 @@
 import { useMemo, useState } from 'react'
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
 import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { columnDecimals } from '../../lib/numbers.ts'
 import { Num } from '../../components/ui/Num.tsx'
 import { SortButton } from '../../components/ui/Table.tsx'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
@@ -72,6 +73,16 @@ export function DivisorTable({
     ),
     sorted: sort.by === by ? (sort.down ? ('descending' as const) : ('ascending' as const)) : undefined,
   })
+  const decimals: Partial<Record<string, number | null>> = {
+    weight: columnDecimals(
+      rows.map(({ weight }) => weight),
+      5,
+    ),
+    volume: columnDecimals(
+      rows.map(({ volume }) => volume),
+      5,
+    ),
+  }
   const columns: Column<DivisorRow>[] = [
     { key: 'index', numeric: true, ...sortable('index', 'D'), cell: (row) => row.index },
     {
@@ -88,7 +99,7 @@ export function DivisorTable({
       key,
       numeric: true,
       ...sortable(key, name),
-      cell: (row) => <Num value={row[key]} digits={5} />,
+      cell: (row) => <Num value={row[key]} digits={5} decimals={decimals[key]} />,
     })),
     { key: 'rigid', header: 'Rigid', cell: (row) => (row.rigid ? 'yes' : 'no') },
   ]

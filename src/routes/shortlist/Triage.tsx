@@ -7,7 +7,7 @@ import { explain } from '../../api/request.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
 import { ClassThumb } from '../../components/geometry/ClassThumb.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { HitMark, Outcome, ReportCell, roundedColumns } from '../../components/ui/Outcome.tsx'
+import { HitMark, Outcome, ReportCell, outcomeFormat } from '../../components/ui/Outcome.tsx'
 import { SortButton } from '../../components/ui/Table.tsx'
 import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
@@ -47,10 +47,7 @@ export function Triage({
   const [fault, setFault] = useState<string | null>(null)
   const table = useRef<HTMLDivElement>(null)
 
-  const rounded = useMemo(
-    () => roundedColumns(shortlist.rows.map(({ outcome }) => outcome)),
-    [shortlist.rows],
-  )
+  const format = useMemo(() => outcomeFormat(shortlist.rows.map(({ outcome }) => outcome)), [shortlist.rows])
   const found = rows.findIndex((row) => row.candidateKey === current)
   const at = found >= 0 ? found : 0
   const row = rows[at]
@@ -145,7 +142,7 @@ export function Triage({
       key: 'score',
       numeric: true,
       ...sortable('score', 'Score'),
-      cell: (item) => <Outcome outcome={item.outcome} />,
+      cell: (item) => <Outcome outcome={item.outcome} decimals={format.score} />,
     },
     { key: 'hit', header: 'Hit', cell: (item) => <HitMark outcome={item.outcome} /> },
     ...shortlist.columns.map((name): Column<ShortlistRow> => ({
@@ -154,7 +151,7 @@ export function Triage({
       ...sortable(`report:${name}`, name),
       cell: (item) => (
         <ReportCell
-          rounded={rounded.has(name)}
+          decimals={format.report.get(name)}
           cell={item.outcome.kind === 'feasible' ? item.outcome.report[name] : undefined}
         />
       ),
