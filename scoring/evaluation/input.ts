@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { InputError } from '../errors.ts'
-import { checkedHeights, quadraticHeights } from '../geometry/heights.ts'
+import { heightBound } from '../geometry/faceSheets.ts'
+import { quadraticHeights } from '../geometry/heights.ts'
 import { polytopeFromPoints, type Polytope } from '../geometry/polytope.ts'
 import { polytopeFromWeights } from '../geometry/weights.ts'
 import { checkRule } from '../rules/check.ts'
@@ -193,7 +194,17 @@ export function heightsOfInput(polytope: Polytope, given: EvaluationInput['heigh
       'heights.points',
     )
   }
-  return within('heights', () => checkedHeights(polytope, heights))
+  const bound = heightBound(polytope)
+  const large = heights.findIndex((height) => Math.abs(height) > bound)
+  if (large >= 0) {
+    throw new InputError(
+      'heights.too-large',
+      `The height of (${pointName(polytope, large)}) is ${heights[large]}; beyond ${bound} in size the comparisons on this polytope would not be exact.`,
+      `heights.values[${from[large]}]`,
+      heights[large],
+    )
+  }
+  return heights
 }
 
 function pointName({ points }: Polytope, p: number): string {
