@@ -37,6 +37,10 @@ export class NormalMatrix {
     }
   }
 
+  get size(): number {
+    return this.factor.order.size
+  }
+
   /** Non-zeros of the triangular factor. */
   get fill(): number {
     return this.factor.values.length

@@ -1,12 +1,12 @@
 import { InvariantError } from '../errors.ts'
-import { polishedOnActiveRows } from './activeRows.ts'
+import { pointOnActiveRows, type PointOnRows } from './activeRows.ts'
 import { NormalMatrix } from './normalMatrix.ts'
 import { largestSize, rowCount, squaredLength, timesColumn, timesRow, type SparseRows } from './sparseRows.ts'
 
 /** Solution of a least-norm program with what proves it optimal. */
 export interface LeastNormPoint {
   readonly point: Float64Array
-  /** Multiplier of each row; point = A^T multipliers, non-negative up to `gap`. */
+  /** Multiplier of each row; point = A^T multipliers, non-negative. */
   readonly multipliers: Float64Array
   /** Largest violation of A w >= 1. */
   readonly primalResidual: number
@@ -16,23 +16,24 @@ export interface LeastNormPoint {
   readonly gap: number
   /** Interior-point iterations. */
   readonly iterations: number
-  /** Whether the equations of the active rows gave the last digits. */
-  readonly polished: boolean
 }
 
 const maximalIterations = 100
-/** Relative gap s.y / |w|^2 below which the active rows are tried. */
-const firstTry = 1e-8
-/** What a result without the last digits must keep: relative gap, and violation of A w - s = 1. */
-const acceptedGap = 1e-10
-const acceptedResidual = 1e-8
+/** Relative gap s.y / |w|^2 below which the active rows are tried, and again after each further decade. */
+const firstTry = 1e-5
+const nextTry = 0.1
+/** How many changes of the active rows a try may make, and the last one, when rounding forbids another step. */
+const changesPerTry = 4
+const changesAtTheEnd = 100
 
 /**
  * The w of least Euclidean norm with A w >= 1 for every row, by a primal-dual interior-point method with
  * Mehrotra's predictor and corrector (Mehrotra 1992, SIAM J. Optim. 2, 575). With multipliers y and slacks s
  * the conditions are w = A^T y, A w - s = 1, s y = 0, s >= 0, y >= 0; each step solves with I + A^T (Y/S) A.
- * Near the solution the rows with y > s are taken as equations, which gives w to rounding if they are right.
- * Throws InvariantError when no point satisfies all rows (or none is found).
+ * Near the solution the rows with y > s are taken as equations, which gives w to rounding and, when the result
+ * satisfies all conditions, ends the search.
+ *
+ * @throws InvariantError when no point satisfies all rows (or none is found)
  */
 export function leastNormPoint(size: number, rows: SparseRows): LeastNormPoint {
   const count = rowCount(rows)
@@ -44,22 +45,19 @@ export function leastNormPoint(size: number, rows: SparseRows): LeastNormPoint {
   const step = new NewtonStep(rows, normal, w, s, y)
   let target = firstTry
   let iterations = 0
-  let going = true
-  for (; going && iterations < maximalIterations; iterations++) {
+  for (let going = true; going && iterations < maximalIterations; iterations++) {
     step.measure()
     const gap = step.complementarity() / squaredLength(w)
     if (gap <= target) {
-      const polished = polishedOnActiveRows(rows, normal, w, s, y)
-      if (polished) return summary(rows, polished.point, polished.multipliers, iterations, true)
-      target = gap * 1e-2
+      const solution = pointOnActiveRows(rows, normal, w, s, y, changesPerTry)
+      if (solution) return summary(rows, solution, iterations)
+      target = nextTry * gap
     }
     going = step.advance()
   }
-  const result = summary(rows, w, y, iterations, false)
-  if (result.gap <= acceptedGap && result.primalResidual <= acceptedResidual) return result
-  throw new InvariantError(
-    `No reference point after ${iterations} iterations: the rows leave a gap of ${result.gap}.`,
-  )
+  const solution = pointOnActiveRows(rows, normal, w, s, y, changesAtTheEnd)
+  if (solution) return summary(rows, solution, iterations)
+  throw new InvariantError(`No point of least norm was found in ${iterations} iterations.`)
 }
 
 /** One predictor-corrector step on (w, s, y), in place. */
@@ -154,13 +152,7 @@ class NewtonStep {
   }
 }
 
-function summary(
-  rows: SparseRows,
-  point: Float64Array,
-  multipliers: Float64Array,
-  iterations: number,
-  polished: boolean,
-): LeastNormPoint {
+function summary(rows: SparseRows, { point, multipliers }: PointOnRows, iterations: number): LeastNormPoint {
   const values = new Float64Array(multipliers.length)
   timesColumn(rows, point, values)
   const residual = new Float64Array(point.length)
@@ -174,6 +166,5 @@ function summary(
     dualResidual: largestSize(residual) / largestSize(point),
     gap: Math.abs(norm - multipliers.reduce((sum, value) => sum + value, 0)) / norm,
     iterations,
-    polished,
   }
 }
