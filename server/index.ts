@@ -1,5 +1,5 @@
 import { readConfig, StartError } from './config.ts'
-import { announce, hasDemo, seedDemo, startDemoSearch } from './library/demo.ts'
+import { announce, hasDemo, seedDemo, runDemoSearch } from './library/demo.ts'
 import { firstFiles, laterFiles } from './library/bundled.ts'
 import { listen, openServer, refuseExposedDemo } from './start.ts'
 
@@ -34,8 +34,7 @@ async function main(): Promise<void> {
     const later = await library.open(laterFiles)
     await jobs.searches.start()
     await library.load(first)
-    if (demo !== null) await startDemoSearch(context, demo)
-    await library.load(later)
+    await Promise.all([library.load(later), demo === null ? null : runDemoSearch(context, demo)])
   } catch (error) {
     if (!closing) log.error({ err: error }, 'the background work of the start failed')
   }

@@ -20,6 +20,7 @@ export class SearchRunner {
   readonly #running = new Map<string, RunningSearch>()
   /** Searches that were let go of with segments still in hand. */
   readonly #settling = new Map<string, Promise<void>>()
+  readonly #listeners = new Map<string, (() => void)[]>()
   #heart: NodeJS.Timeout | null = null
 
   constructor(parts: JobParts, nulls: NullSampler) {
@@ -61,7 +62,16 @@ export class SearchRunner {
     this.#forget(search)
   }
 
+  /** Resolves when this process has nothing more to do for a search that was queued with `enqueue`. */
+  ended(searchId: string): Promise<void> {
+    return new Promise((resolve) => {
+      this.#listeners.set(searchId, [...(this.#listeners.get(searchId) ?? []), resolve])
+    })
+  }
+
   #forget(search: RunningSearch): void {
+    for (const resolve of this.#listeners.get(search.id) ?? []) resolve()
+    this.#listeners.delete(search.id)
     this.#parts.scheduler.remove(search)
     this.#running.delete(search.id)
     const settled = search.settled().finally(() => {

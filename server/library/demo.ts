@@ -6,9 +6,10 @@ import { Membership } from '../entities/membership.ts'
 import { PolytopeRecord } from '../entities/polytope.ts'
 import { createCampaign } from '../services/campaigns.ts'
 import { hashPassword } from '../services/passwords.ts'
-import { createSearch } from '../services/searches.ts'
+import { createSearch, readSearch } from '../services/searches.ts'
+import { createShortlist } from '../services/shortlists.ts'
 import { createTarget } from '../services/targets.ts'
-import { demoCampaign, demoPassword, demoSearch, demoTargets, demoTeam } from './demoTeam.ts'
+import { demoCampaign, demoPassword, demoSearch, demoShortlist, demoTargets, demoTeam } from './demoTeam.ts'
 
 export interface Demo {
   readonly campaignId: string
@@ -57,18 +58,27 @@ export async function seedDemo(context: ServerContext): Promise<Demo | null> {
   return { campaignId: campaign.id, investigatorId, targetVersionId: versions[0] }
 }
 
-/** The demo's one short search, through the same service as everybody's. */
-export async function startDemoSearch(context: ServerContext, demo: Demo): Promise<void> {
+/**
+ * The demo's one short search and the shortlist of what it found, through the same services as everybody's. Resolves
+ * when the search has ended.
+ */
+export async function runDemoSearch(context: ServerContext, demo: Demo): Promise<void> {
+  const { source, jobs } = context
+  const { campaignId, investigatorId, targetVersionId } = demo
   const { polytopeName, ...settings } = demoSearch
-  const polytope = await context.source.manager.findOneByOrFail(PolytopeRecord, {
-    name: polytopeName,
-    origin: 'bundled',
-  })
-  await createSearch(context, demo.campaignId, demo.investigatorId, {
+  const place = { name: polytopeName, origin: 'bundled' } as const
+  const { key } = await source.manager.findOneByOrFail(PolytopeRecord, place)
+  const { id } = await createSearch(context, campaignId, investigatorId, {
     ...settings,
-    targetVersionId: demo.targetVersionId,
-    scope: { kind: 'polytopes', keys: [polytope.key] },
+    targetVersionId,
+    scope: { kind: 'polytopes', keys: [key] },
   })
+  await jobs.searches.ended(id)
+  const { state } = await readSearch(source.manager, campaignId, id)
+  // Somebody may have paused or cancelled it meanwhile.
+  if (state === 'finished') {
+    await createShortlist(context, campaignId, investigatorId, { ...demoShortlist, searchIds: [id] })
+  }
 }
 
 /** Whether this database was begun with the demo team. */

@@ -105,7 +105,7 @@ describe('an uploaded file', () => {
   it('with 500 good and 3 bad blocks imports 500 and lists the 3 with their lines', async () => {
     const good = bundledEntries('small', (id) => id.startsWith('r4-'))
       .slice(0, 500)
-      .map((entry) => matrix(entry.vertices as number[][]))
+      .map((entry) => matrix(entry.vertices))
     const bad = ['1 0 0 0\n0 1 0 0', '1 0 0 0\n0 1 0 0\n0 0 1 0\n0 0 0 1\n-1 -1 -1 -3', '1 2 three 4']
     const blocks = [
       ...good.slice(0, 100),

@@ -6,7 +6,10 @@ import type { OpenServer } from '../../../server/start.ts'
 
 type Opened = Pick<OpenServer, 'context'>
 
-const fileSchema = z.object({ about: z.string(), polytopes: z.array(z.looseObject({ id: z.string() })) })
+const fileSchema = z.object({
+  about: z.string(),
+  polytopes: z.array(z.looseObject({ id: z.string(), vertices: z.array(z.array(z.number())) })),
+})
 
 const data = (name: string) => new URL(`../../../server/library/data/polytopes-${name}.json`, import.meta.url)
 
