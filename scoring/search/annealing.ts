@@ -16,7 +16,7 @@ export const tuning = {
   hot: 1,
   cold: 0.02,
   hop: 0.2,
-  flips: 0.6,
+  reheat: 0,
 }
 
 interface AnnealingState {
@@ -151,7 +151,8 @@ class Annealing implements Chain {
   }
 
   private temperatures(): Temperatures {
-    const cooling = tuning.hot * (tuning.cold / tuning.hot) ** this.progress()
+    const heat = tuning.reheat === 0 ? 1 : 2 ** Math.min(20, this.run.stalled / tuning.reheat)
+    const cooling = heat * tuning.hot * (tuning.cold / tuning.hot) ** this.progress()
     return { score: medianOr(this.losses, 1) * cooling, shortfall: medianOr(this.shortfalls, 0.3) * cooling }
   }
 
