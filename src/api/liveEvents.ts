@@ -61,6 +61,9 @@ function applySearch(client: QueryClient, campaign: string, event: StreamEvent &
   if (newBest || state !== known.state) void client.invalidateQueries({ queryKey: ['search', id] })
 }
 
+/** What never goes stale, and what would start work anew. */
+const lasting = new Set(['candidate', 'preview', 'preview-start'])
+
 /** Keeps the tab's stream open for a campaign; returns its state. */
 export function useLiveEvents(campaign: string | null, enabled: boolean): StreamState {
   const client = useQueryClient()
@@ -77,7 +80,7 @@ export function useLiveEvents(campaign: string | null, enabled: boolean): Stream
         if (next === 'live' && lost) {
           // What happened while the connection was down was not heard.
           lost = false
-          void client.invalidateQueries({ predicate: (query) => query.queryKey[0] !== 'candidate' })
+          void client.invalidateQueries({ predicate: (query) => !lasting.has(String(query.queryKey[0])) })
         }
       },
     })

@@ -17,7 +17,8 @@ export function logPlace(count: number, most: number): number {
 /** Colour of a 2-face by the lattice length of its dual edge; equal steps per distinct length present. */
 export function dualLengthColour(length: number, lengths: readonly number[]): string {
   const place = lengths.indexOf(length)
-  return scaleColour(lengths.length <= 1 ? 0.1 : 0.05 + (0.5 * place) / (lengths.length - 1))
+  const percent = lengths.length <= 1 ? 0 : Math.round((100 * place) / (lengths.length - 1))
+  return `color-mix(in oklab, var(--face-high) ${percent}%, var(--face-low))`
 }
 
 /** Value of a theme colour as the browser resolves it, for canvas. */

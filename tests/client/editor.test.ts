@@ -1,8 +1,9 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
 import fc from 'fast-check'
-import { checkRule } from '../../scoring/index.ts'
+import { checkRule, completions } from '../../scoring/index.ts'
 import { codeParts } from '../../src/components/editor/codeParts.ts'
+import { fittingOptions } from '../../src/components/editor/ruleLanguage.ts'
 import { diagnosticOf, withoutWordAtCursor } from '../../src/components/editor/ruleLint.ts'
 import { lineDifferences } from '../../src/routes/target/lineDifferences.ts'
 import { essence } from '../../src/routes/target/usePreview.ts'
@@ -58,5 +59,24 @@ describe('line differences', () => {
         expect(without('removed').join('\n')).toBe(after)
       }),
     )
+  })
+})
+
+describe('completion', () => {
+  const offered = (text: string) => {
+    const result = completions(text, text.length)
+    return fittingOptions(result?.options ?? [], text.slice(result?.from ?? text.length)).map(
+      ({ label }) => label,
+    )
+  }
+
+  it('offers what begins with the word, or has a part that does', () => {
+    expect(offered('require fav')).toEqual(['favourable'])
+    expect(offered('score log10(metric.divisor.t')).toEqual(['top'])
+  })
+
+  it('offers nothing for a misspelt word or a finished one, so that Enter only breaks the line', () => {
+    expect(offered('require favorable')).toEqual([])
+    expect(offered('require favourable')).toEqual([])
   })
 })

@@ -23,10 +23,10 @@ export function campaignAs(role: Role): CampaignSummary {
 
 /** The test environment lays nothing out; tables of any length need a height to know which rows are in view. */
 let owner: object = document.createElement('div')
-while (!Object.hasOwn(owner, 'offsetHeight')) owner = Object.getPrototypeOf(owner) as object
+while (!Object.hasOwn(owner, 'clientHeight')) owner = Object.getPrototypeOf(owner) as object
 Object.defineProperties(owner, {
-  offsetHeight: { configurable: true, get: () => 640 },
-  offsetWidth: { configurable: true, get: () => 1200 },
+  clientHeight: { configurable: true, get: () => 640 },
+  clientWidth: { configurable: true, get: () => 1200 },
 })
 
 /** Draws a page at an address, inside what every page has around it. */

@@ -47,13 +47,31 @@ export function editorCompletion(option: Completion): EditorCompletion {
   return { label, type: icons[kind], detail, info, apply: stop ?? text }
 }
 
+/**
+ * Options one of whose dotted parts begins with what is typed. A word that is typed out in full brings up nothing,
+ * so that Enter goes to the next line and never replaces what was written.
+ */
+export function fittingOptions(options: readonly Completion[], typed: string): readonly Completion[] {
+  const start = typed.toLowerCase()
+  const fitting = options.filter(({ label }) =>
+    label
+      .toLowerCase()
+      .split(/[. ]/)
+      .some((part, index, parts) => part.startsWith(start) || parts.slice(index).join('.').startsWith(start)),
+  )
+  return fitting.some(({ label }) => label === typed) ? [] : fitting
+}
+
 const complete: CompletionSource = (context) => {
   const result = completions(context.state.doc.toString(), context.pos)
   if (!result) return null
-  const typed = context.pos > result.from
+  const typed = context.state.sliceDoc(result.from, context.pos)
   const afterDot = context.state.sliceDoc(result.from - 1, result.from) === '.'
-  if (!context.explicit && !typed && !afterDot) return null
-  return { from: result.from, options: result.options.map(editorCompletion), validFor: /^[a-zA-Z0-9_]*$/ }
+  if (!context.explicit && typed === '' && !afterDot) return null
+  const options = context.explicit && typed === '' ? result.options : fittingOptions(result.options, typed)
+  return options.length > 0
+    ? { from: result.from, options: options.map(editorCompletion), filter: false }
+    : null
 }
 
 /** The scoring language for the editor: parser, colours, completion. */

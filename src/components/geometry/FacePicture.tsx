@@ -125,7 +125,7 @@ export const FacePicture = memo(function FacePicture({
       <path
         d={path(face.corners)}
         className="fill-none stroke-ink"
-        strokeWidth={1.5}
+        strokeWidth={plain ? 0.9 : 1.5}
         strokeLinejoin="round"
       />
       {dot > 0 &&

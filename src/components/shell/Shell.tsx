@@ -92,7 +92,7 @@ function SignedIn({
         Skip to content
       </a>
       <header className="sticky top-0 z-30 bg-paper">
-        <div className="mx-auto flex max-w-[1440px] items-center gap-2 px-4 py-1.5 sm:gap-4">
+        <div className="mx-auto flex max-w-[1440px] flex-wrap items-center gap-x-2 px-4 pt-1.5 sm:flex-nowrap sm:gap-x-4 sm:pb-1.5">
           <Link to="/campaigns" className="flex items-center gap-2 font-serif text-base font-semibold">
             <Mark />
             <span className="hidden sm:inline">Tessellary</span>
@@ -139,7 +139,10 @@ function MainNavigation({ campaign }: { campaign: CampaignSummary | null }) {
     [base && campaign ? `/library?campaign=${campaign.id}` : '/library', 'Library', false],
   ]
   return (
-    <nav aria-label="Main" className="flex min-w-0 flex-1 gap-3 overflow-x-auto sm:gap-4">
+    <nav
+      aria-label="Main"
+      className="order-last flex w-full min-w-0 gap-4 overflow-x-auto sm:order-none sm:w-auto sm:flex-1"
+    >
       {items.map(([to, label, end]) => (
         <NavLink
           key={to}

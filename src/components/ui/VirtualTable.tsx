@@ -66,7 +66,7 @@ export function VirtualTable<Row>({
       tabIndex={0}
       role="region"
       aria-label={`${label}, scrolls`}
-      className={`overflow-auto ${className}`}
+      className={`relative overflow-auto ${className}`}
     >
       <table
         aria-label={label}

@@ -117,7 +117,7 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
       >
         <DivisorTable geometry={geometry} highlight={shown} onHighlight={onHighlight} />
       </Section>
-      <div className="grid gap-x-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section title="Intersection numbers" note="Non-zero κ with i ≤ j ≤ k.">
           <IntersectionTable
             intersections={geometry.intersections}
@@ -127,12 +127,17 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
         </Section>
         <Section
           title="Curves"
-          note="Primitive classes of the curves D_i · D_j, one per edge of the triangulation; volume at the reference point."
+          note={
+            <>
+              Primitive classes of the curves D<sub>i</sub> · D<sub>j</sub>, one per edge of the
+              triangulation; volume at the reference point.
+            </>
+          }
         >
           <CurveTable curves={geometry.curves} />
         </Section>
       </div>
-      <div className="grid gap-x-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section
           title="Reference point"
           note="The point of the Kähler cone nearest to the origin at which every curve class counted has volume at least 1."

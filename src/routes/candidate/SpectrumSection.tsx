@@ -32,8 +32,9 @@ export function SpectrumSection({ geometry }: { geometry: CandidateGeometry }) {
         />
       )}
       <p className="prose-line mt-1 text-xs text-soft">
+        Units of M<sub>pl</sub>², at the reference point, scale 1.{' '}
         {which === 'divisor'
-          ? 'Over all prime toric divisors; does not depend on a choice of basis. Units of M_pl², at the reference point.'
+          ? 'Over all prime toric divisors; does not depend on a choice of basis.'
           : `In the lattice basis ${basis
               .map((i) => `D${i}`)
               .slice(0, 12)

@@ -81,7 +81,7 @@ export function LibraryPage() {
           <Progress value={loading.loaded} most={loading.total} label="Bundled polytopes loaded" />
         </div>
       )}
-      <div className="grid gap-x-8 gap-y-4 border-t pt-4 md:grid-cols-[minmax(0,11fr)_minmax(0,9fr)]">
+      <div className="grid grid-cols-1 gap-x-8 gap-y-4 border-t pt-4 md:grid-cols-[minmax(0,11fr)_minmax(0,9fr)]">
         <QueryView query={spread} what="the Hodge numbers">
           {({ counts }) => (
             <HodgeScatter

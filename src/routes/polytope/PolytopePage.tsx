@@ -52,7 +52,7 @@ function Polytope({ polytope, campaign }: { polytope: PolytopeDetail; campaign?:
         {polytope.favourable ? ', favourable' : ', not favourable: some divisors split'}.
       </PageHead>
       <Section title="Numbers" margin>
-        <div className="grid gap-x-8 sm:grid-cols-2">
+        <div className="grid grid-cols-1 gap-x-8 sm:grid-cols-2">
           <Facts
             rows={[
               ['h11', <Num key="v" value={polytope.h11} />],

@@ -60,7 +60,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         </div>
       )}
       <StateLine search={search} />
-      <div className="grid gap-x-8 gap-y-4 border-t py-4 lg:grid-cols-[minmax(0,1fr)_300px]">
+      <div className="grid grid-cols-1 gap-x-8 gap-y-4 border-t py-4 lg:grid-cols-[minmax(0,1fr)_300px]">
         {progress.curve.length > 0 ? (
           <LiveCurve
             found={progress.curve}
@@ -87,7 +87,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         )}
         <Caution className="mt-3" />
       </Section>
-      <div className="grid gap-x-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section title="Null sample" note="The same rule on candidates nobody selected.">
           <NullFacts summary={search.null} />
         </Section>
@@ -96,7 +96,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         </Section>
       </div>
       <Section title="How it was run">
-        <div className="grid gap-x-8 gap-y-4 lg:grid-cols-2">
+        <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2">
           <Facts
             rows={[
               ['Seed', <Num key="v" value={search.seed} />],

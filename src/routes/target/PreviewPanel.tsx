@@ -72,7 +72,7 @@ export function PreviewPanel({
           `${formatNumber(preview.evaluated)} candidates. ${preview.law}`
         )}
       </div>
-      <div className={outdated ? 'opacity-60' : ''}>
+      <div className={outdated ? 'border-l-2 border-dashed border-null pl-3' : ''}>
         <Answer campaign={campaign} preview={preview} />
       </div>
       <Caution className="mt-4" />

@@ -45,7 +45,7 @@ export function Workbench({ campaign, text, onText, versions }: WorkbenchProps) 
   }
 
   return (
-    <div className="grid gap-x-8 gap-y-6 border-t pt-4 md:grid-cols-[minmax(0,11fr)_minmax(0,9fr)]">
+    <div className="grid grid-cols-1 gap-x-8 gap-y-6 border-t pt-4 md:grid-cols-[minmax(0,11fr)_minmax(0,9fr)]">
       <div className="min-w-0 md:sticky md:top-16 md:self-start">
         <RuleEditor value={text} onChange={onText} onReady={setView} label="Scoring rule" />
         <IssueList issues={check.issues} view={view} />

@@ -1,4 +1,4 @@
-import { useCallback } from 'react'
+import { useCallback, useEffect, useRef } from 'react'
 import { keepPreviousData, useQuery, useQueryClient } from '@tanstack/react-query'
 import { type Scope } from '../../../shared/polytopes.ts'
 import { type Preview } from '../../../shared/targets.ts'
@@ -65,6 +65,14 @@ export function usePreview(campaign: string, ask: PreviewAsk, sound: boolean): P
   })
   const { data } = useQuery(previewQuery(start.data ?? null))
   const { refetch } = start
+  // Of two requests sent in haste the server may have taken the older one last; then this one is asked once more.
+  const replaced = data?.state === 'replaced' && ready && !start.isPlaceholderData
+  const askedAgain = useRef('')
+  useEffect(() => {
+    if (!replaced || askedAgain.current === settled) return
+    askedAgain.current = settled
+    void refetch()
+  }, [replaced, settled, refetch])
   const retry = useCallback(() => void refetch(), [refetch])
   return {
     preview: data ?? null,
