@@ -1,6 +1,6 @@
 import { mkdirSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { type Browser, type Page } from 'playwright-core'
 import { caution } from '../../shared/caution.ts'
 import { startApplication, type Application } from './application.ts'
@@ -62,6 +62,11 @@ describe.skipIf(chromiumPath === null)(
     })
 
     const shot = (name: string) => page.screenshot({ path: `${shots}walk-${name}.png`, fullPage: true })
+
+    afterEach(async ({ task }) => {
+      if (task.result?.state === 'fail')
+        await shot(`failed-${task.name.slice(0, 20).replaceAll(/\W+/g, '-')}`)
+    })
 
     it('signs in with what the start printed', async () => {
       const email = /\S+@tessellary\.example(?=\s+lead)/.exec(application.greeting)?.[0]
@@ -155,10 +160,10 @@ describe.skipIf(chromiumPath === null)(
       await page.getByRole('button', { name: 'Make the shortlist' }).click()
       await page.getByRole('heading', { level: 1, name: 'First look' }).waitFor()
       const rows = page.getByRole('row')
-      await page.getByText('undecided').first().waitFor()
+      await rows.filter({ hasText: 'undecided' }).nth(5).waitFor()
       expect(await rows.count()).toBeGreaterThan(10)
       await page.keyboard.press('r')
-      await page.getByText('rejected').first().waitFor()
+      await rows.filter({ hasText: 'rejected' }).first().waitFor()
       expect(await page.locator('body').innerText()).toContain(caution)
       await shot('7-shortlist')
     })

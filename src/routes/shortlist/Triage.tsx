@@ -196,7 +196,11 @@ export function Triage({
           className:
             index === at ? 'bg-action-wash shadow-[inset_3px_0_0_var(--action)]' : 'hover:bg-action-wash',
           'aria-current': index === at ? true : undefined,
-          onClick: () => onCurrent(item.candidateKey),
+          // A link in the row goes to its own page; taking the row in hand as well would navigate back at once.
+          onClick: (event) => {
+            if (!(event.target instanceof Element && event.target.closest('a, button')))
+              onCurrent(item.candidateKey)
+          },
         })}
       />
       {row && (
