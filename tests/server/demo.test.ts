@@ -110,7 +110,7 @@ describe('the demo targets', () => {
   it.each([
     [range.name, range.text, bundledEntries('large', (id) => id === demoSearch.polytopeName), 400],
     [fibres.name, fibres.text, bundledEntries('small', (id) => /^r4-.*[05]$/.test(id)), 300],
-  ])('"%s" is hit by between 0.1 %% and 5 %% of the null', (_name, text, entries, size) => {
+  ])('"%s" is hit by one in a thousand to one in twenty of the null', (_name, text, entries, size) => {
     const rate = hitRate(text, entries, size)
     expect(rate).toBeGreaterThan(0.001)
     expect(rate).toBeLessThan(0.05)
