@@ -118,12 +118,17 @@ function options(width: number, reach: () => number): uPlot.Options {
         stroke: foundColour,
         width: 2.5,
         spanGaps: true,
-        points: { show: false },
+        points: { show: alone },
         paths: uPlot.paths.stepped?.({ align: 1 }),
       },
-      { label: 'null', stroke: nullColour, width: 2, dash: [6, 4], spanGaps: true, points: { show: false } },
+      { label: 'null', stroke: nullColour, width: 2, dash: [6, 4], spanGaps: true, points: { show: alone } },
     ],
   }
+}
+
+/** A curve of a single value is shown as a point. */
+function alone(plot: uPlot, series: number): boolean {
+  return Array.from(plot.data[series] ?? []).filter((value) => typeof value === 'number').length === 1
 }
 
 function padded(low: number | null, high: number | null): [number, number] {

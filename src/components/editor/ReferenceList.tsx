@@ -122,7 +122,7 @@ function EntryBody({ entry }: { entry: ReferenceEntry }) {
         <dl className="mt-1 grid grid-cols-[max-content_minmax(0,1fr)] gap-x-3 text-xs text-soft">
           {(
             [
-              ['Unit', observable.unit],
+              ['Unit', observable.unit === '1' ? 'pure number' : observable.unit],
               ['Convention', observable.convention],
               ['Stage', observable.stage],
               ['Cost', observable.cost],

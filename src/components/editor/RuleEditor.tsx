@@ -1,11 +1,14 @@
 import { useMemo } from 'react'
 import CodeMirror from '@uiw/react-codemirror'
 import { EditorView } from '@codemirror/view'
-import { lintGutter } from '@codemirror/lint'
+import { linter, lintGutter } from '@codemirror/lint'
 import { editorTheme } from './editorTheme.ts'
 import { ruleHover } from './ruleHover.ts'
 import { ruleLanguage } from './ruleLanguage.ts'
 import { ruleLint } from './ruleLint.ts'
+
+/** One object for all time: a new one would make the editor set itself up again. */
+const basics = { foldGutter: false, searchKeymap: false, highlightSelectionMatches: false, lintKeymap: true }
 
 interface RuleEditorProps {
   value: string
@@ -20,6 +23,7 @@ export function RuleEditor({ value, onChange, onReady, label, readOnly }: RuleEd
   const extensions = useMemo(
     () => [
       ruleLanguage(),
+      linter(null),
       ruleLint,
       lintGutter(),
       ruleHover,
@@ -40,12 +44,7 @@ export function RuleEditor({ value, onChange, onReady, label, readOnly }: RuleEd
       minHeight="264px"
       maxHeight="60vh"
       extensions={extensions}
-      basicSetup={{
-        foldGutter: false,
-        searchKeymap: false,
-        highlightSelectionMatches: false,
-        lintKeymap: true,
-      }}
+      basicSetup={basics}
       className="border border-edge"
     />
   )

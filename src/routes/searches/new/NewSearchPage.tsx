@@ -60,7 +60,8 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
   const create = useCreateSearch(campaign)
   const barred = useBarred('searches.run')
   const named = targets.find(({ id }) => id === address.get('target'))
-  const [targetId, setTargetId] = useState(named?.id ?? targets[0]?.id ?? '')
+  const [chosen, setChosen] = useState<string | null>(null)
+  const targetId = chosen ?? named?.id ?? targets[0]?.id ?? ''
   const [scope, setScope] = useState<Scope>(
     () => scopeFromAddress(address) ?? { kind: 'polytopes', keys: [] },
   )
@@ -105,7 +106,7 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
           <Select
             label="Target"
             value={targetId}
-            onChange={(event) => setTargetId(event.target.value)}
+            onChange={(event) => setChosen(event.target.value)}
             options={targets.map(({ id, name: label, latest }) => [id, `${label}, version ${latest.number}`])}
             hint={older ? 'The version opened before, not the latest, is used.' : undefined}
           />
