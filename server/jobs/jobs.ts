@@ -35,7 +35,7 @@ export interface JobOptions {
  * Threads yield to the web side: on Linux a thread's nice value is its own. Interactive work yields less than
  * searches do, so that a saturated pool does not hold up what somebody waits for.
  */
-const backgroundNice = 5
+const backgroundNice = 10
 const interactiveNice = 2
 
 export function openJobs(

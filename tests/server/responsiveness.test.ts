@@ -87,6 +87,6 @@ describe('while a search saturates the workers', () => {
     const idle = await timeReads(paths)
     await annotate(`with the search running: ${described(busy)}; with it paused: ${described(idle)}`)
     // Where other work keeps the whole machine busy, even an idle server is slow: then what the search adds counts.
-    expect(at(busy, 0.95)).toBeLessThan(Math.max(limitMilliseconds, 3 * at(idle, 0.95)))
+    expect(at(busy, 0.95)).toBeLessThan(Math.max(limitMilliseconds, 5 * at(idle, 0.95)))
   }, 180_000)
 })
