@@ -69,6 +69,8 @@ export default tseslint.config(
     plugins: { 'react-hooks': reactHooks },
     rules: {
       ...reactHooks.configs.recommended.rules,
+      // Speaks to the React compiler, which this build does not use.
+      'react-hooks/incompatible-library': 'off',
       ...forbid(
         { regex: '^(\\.\\./)+server/', message: 'The client may not import the server.' },
         {
@@ -78,6 +80,7 @@ export default tseslint.config(
       ),
     },
   },
+  { files: ['tests/setup/refuseNoise.ts'], rules: { 'no-console': 'off' } },
   {
     files: ['server/setup/**', '**/*.mjs', 'eslint.config.js'],
     languageOptions: { globals: { process: 'readonly', console: 'readonly', URL: 'readonly' } },

@@ -21,5 +21,5 @@ export const permissions = {
 export type Permission = keyof typeof permissions
 
 export function may(role: Role | null | undefined, permission: Permission): boolean {
-  return role != null && (permissions[permission] as readonly Role[]).includes(role)
+  return role !== null && role !== undefined && (permissions[permission] as readonly Role[]).includes(role)
 }

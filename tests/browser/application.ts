@@ -57,7 +57,7 @@ export async function startApplication(environment: Record<string, string> = {})
   try {
     await answering(address, child)
   } catch (error) {
-    throw new Error(`${String(error)}\n${greeting}\n${complaints}`)
+    throw new Error(`${String(error)}\n${greeting}\n${complaints}`, { cause: error })
   }
   return {
     address,
