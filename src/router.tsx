@@ -1,6 +1,5 @@
 import { createBrowserRouter, Navigate, type RouteObject } from 'react-router-dom'
 import { type ComponentType } from 'react'
-import { Shell } from './components/shell/Shell.tsx'
 import { PageFailure } from './routes/not-found/PageFailure.tsx'
 import { NotFoundPage } from './routes/not-found/NotFoundPage.tsx'
 
@@ -78,7 +77,10 @@ export const routes: RouteObject[] = [
         lazy: page(async () => (await import('./routes/sign-in/SignInPage.tsx')).SignInPage),
       },
       { path: 'set-up', lazy: page(async () => (await import('./routes/set-up/SetUpPage.tsx')).SetUpPage) },
-      { Component: Shell, children: [{ errorElement: <PageFailure />, children: signedIn }] },
+      {
+        lazy: page(async () => (await import('./components/shell/Shell.tsx')).Shell),
+        children: [{ errorElement: <PageFailure />, children: signedIn }],
+      },
     ],
   },
 ]

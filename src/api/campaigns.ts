@@ -5,6 +5,7 @@ import {
   campaignSummarySchema,
   type addMemberSchema,
   type createCampaignSchema,
+  type editCampaignSchema,
 } from '../../shared/campaigns.ts'
 import { type Role } from '../../shared/roles.ts'
 import { request } from './request.ts'
@@ -30,6 +31,18 @@ export function useCreateCampaign() {
     mutationFn: (body: z.input<typeof createCampaignSchema>) =>
       request('/campaigns', { method: 'POST', body, schema: campaignSummarySchema }),
     onSuccess: () => client.invalidateQueries({ queryKey: ['campaigns'] }),
+  })
+}
+
+export function useEditCampaign(campaign: string) {
+  const client = useQueryClient()
+  return useMutation({
+    mutationFn: (body: z.input<typeof editCampaignSchema>) =>
+      request(`/campaigns/${campaign}`, { method: 'PATCH', body, schema: campaignDetailSchema }),
+    onSuccess: (detail) => {
+      client.setQueryData(campaignQuery(campaign).queryKey, detail)
+      void client.invalidateQueries({ queryKey: ['campaigns'] })
+    },
   })
 }
 

@@ -1,12 +1,16 @@
 import { useEffect, useState } from 'react'
 import { useQueryClient, type QueryClient } from '@tanstack/react-query'
 import { type CampaignDetail } from '../../shared/campaigns.ts'
+import { type z } from 'zod'
+import { type hodgeCountsSchema } from '../../shared/polytopes.ts'
 import { type StreamEvent } from '../../shared/events.ts'
 import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
 import { previewKey } from './previews.ts'
 import { apiUrl } from './request.ts'
 import { sessionKey } from './session.ts'
+
+type HodgeCounts = z.infer<typeof hodgeCountsSchema>
 
 /** What each event does to the cache of this tab. */
 export function applyEvent(client: QueryClient, campaign: string, event: StreamEvent): void {
@@ -22,8 +26,7 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       client.setQueryData(previewKey(event.preview.id), event.preview)
       return
     case 'library':
-      void client.invalidateQueries({ queryKey: ['polytopes'] })
-      return
+      return applyLibrary(client, event)
     case 'changed': {
       const keys = {
         targets: ['targets', campaign],
@@ -42,6 +45,18 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       if (event.reason === 'signed-out') void client.invalidateQueries({ queryKey: sessionKey })
       if (event.reason === 'role-lost') void client.invalidateQueries()
   }
+}
+
+/** While the bundled polytopes are loaded only the progress moves; the tables are fetched again at the end. */
+function applyLibrary(client: QueryClient, { loaded, total }: StreamEvent & { kind: 'library' }): void {
+  if (loaded >= total) {
+    void client.invalidateQueries({ queryKey: ['polytopes'] })
+    return
+  }
+  client.setQueriesData<HodgeCounts>(
+    { queryKey: ['polytopes', 'hodge'] },
+    (old) => old && { ...old, loading: { loaded, total } },
+  )
 }
 
 function applySearch(client: QueryClient, campaign: string, event: StreamEvent & { kind: 'search' }): void {

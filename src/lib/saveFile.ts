@@ -20,8 +20,8 @@ const kept = [
   'text-anchor',
 ]
 
-/** A drawing as a file of its own: the colours the style sheet gave it are written into the elements. */
-export function standaloneSvg(svg: SVGSVGElement): string {
+/** A copy whose elements carry the colours that the style sheet gave the original. */
+function styledCopy(svg: SVGSVGElement): SVGSVGElement {
   const copy = svg.cloneNode(true) as SVGSVGElement
   const originals = [svg, ...svg.querySelectorAll('*')]
   const copies = [copy, ...copy.querySelectorAll('*')]
@@ -32,6 +32,29 @@ export function standaloneSvg(svg: SVGSVGElement): string {
     target.removeAttribute('class')
     target.setAttribute('style', kept.map((name) => `${name}:${style.getPropertyValue(name)}`).join(';'))
   })
-  copy.setAttribute('xmlns', 'http://www.w3.org/2000/svg')
-  return `<?xml version="1.0" encoding="UTF-8"?>\n${new XMLSerializer().serializeToString(copy)}\n`
+  copy.setAttribute('xmlns', svgNamespace)
+  return copy
+}
+
+const svgNamespace = 'http://www.w3.org/2000/svg'
+
+/** Drawings as one file of their own; several keep the places they have on the page. */
+export function standaloneSvg(drawings: readonly SVGSVGElement[]): string {
+  const head = '<?xml version="1.0" encoding="UTF-8"?>\n'
+  const write = (element: Element) => `${head}${new XMLSerializer().serializeToString(element)}\n`
+  const [first] = drawings
+  if (drawings.length === 1 && first) return write(styledCopy(first))
+  const boxes = drawings.map((drawing) => drawing.getBoundingClientRect())
+  const left = Math.min(...boxes.map((box) => box.left))
+  const top = Math.min(...boxes.map((box) => box.top))
+  const sheet = document.createElementNS(svgNamespace, 'svg')
+  sheet.setAttribute('width', String(Math.ceil(Math.max(...boxes.map((box) => box.right)) - left)))
+  sheet.setAttribute('height', String(Math.ceil(Math.max(...boxes.map((box) => box.bottom)) - top)))
+  drawings.forEach((drawing, index) => {
+    const copy = styledCopy(drawing)
+    copy.setAttribute('x', String((boxes[index]?.left ?? 0) - left))
+    copy.setAttribute('y', String((boxes[index]?.top ?? 0) - top))
+    sheet.append(copy)
+  })
+  return write(sheet)
 }

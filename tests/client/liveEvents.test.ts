@@ -70,4 +70,15 @@ describe('events in the cache', () => {
     applyEvent(client, 'c1', { kind: 'search', id: 's1', state: 'running', progress: progress(20, -6, 'k1') })
     expect(client.getQueryData(['search', 's1'])).toBeUndefined()
   })
+
+  it('move the progress of the library while it is loaded, and fetch it anew at the end', () => {
+    const client = new QueryClient()
+    const key = ['polytopes', 'hodge', {}]
+    client.setQueryData(key, { total: 5, counts: [], loading: { loaded: 5, total: 100 } })
+    applyEvent(client, 'c1', { kind: 'library', loaded: 50, total: 100 })
+    expect(client.getQueryData(key)).toMatchObject({ loading: { loaded: 50, total: 100 } })
+    expect(client.getQueryState(key)?.isInvalidated).toBe(false)
+    applyEvent(client, 'c1', { kind: 'library', loaded: 100, total: 100 })
+    expect(client.getQueryState(key)?.isInvalidated).toBe(true)
+  })
 })

@@ -19,8 +19,8 @@ export function ChartFrame({ title, note, table, file, actions, children }: Char
   const [asTable, setAsTable] = useState(false)
   const body = useRef<HTMLDivElement>(null)
   const download = () => {
-    const svg = body.current?.querySelector('svg[data-chart]')
-    if (svg instanceof SVGSVGElement) saveFile(`${file}.svg`, standaloneSvg(svg), 'image/svg+xml')
+    const drawings = [...(body.current?.querySelectorAll<SVGSVGElement>('svg[data-chart]') ?? [])]
+    if (drawings.length > 0) saveFile(`${file}.svg`, standaloneSvg(drawings), 'image/svg+xml')
   }
   return (
     <figure className="min-w-0">

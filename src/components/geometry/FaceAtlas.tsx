@@ -65,7 +65,8 @@ export function FaceAtlas({ faces, highlight = null, onHighlight, onChoose }: Fa
               checked={withSingles}
               onChange={(event) => setWithSingles(event.target.checked)}
             />
-            with the {counted(singles, 'face')} that are one triangle
+            with {singles === 1 ? 'the face that is' : `the ${counted(singles, 'face')} that are`} one
+            triangle
           </label>
         )}
       </div>

@@ -76,7 +76,7 @@ export const FacePicture = memo(function FacePicture({
     const box = event.currentTarget.getBoundingClientRect()
     return [(event.clientX - box.left - margin) / unit, (height - (event.clientY - box.top) - margin) / unit]
   }
-  const dot = plain ? 0 : unit >= 16 ? 2.4 : unit >= 9 ? 1.8 : unit >= 5 ? 1.2 : 0
+  const dot = plain ? 0 : unit >= 22 ? 2.4 : unit >= 13 ? 1.7 : unit >= 5 ? 1.2 : 0
   const isCorner = new Set(face.corners)
 
   return (

@@ -8,6 +8,8 @@ export interface Column<Row> {
   numeric?: boolean
   sorted?: 'ascending' | 'descending'
   className?: string
+  /** For cells only, not for the header. */
+  cellClass?: string
   cell: (row: Row, index: number) => ReactNode
 }
 
@@ -103,7 +105,11 @@ export function VirtualTable<Row>({
               >
                 {row ? (
                   columns.map((column) => (
-                    <Td key={column.key} numeric={column.numeric} className={column.className}>
+                    <Td
+                      key={column.key}
+                      numeric={column.numeric}
+                      className={`${column.className ?? ''} ${column.cellClass ?? ''}`}
+                    >
                       {column.cell(row, index)}
                     </Td>
                   ))

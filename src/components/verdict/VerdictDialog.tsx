@@ -26,7 +26,7 @@ export function VerdictDialog({ asked, busy, fault, onGive, onClose }: VerdictDi
       title={asked?.value === 'verified' ? 'Verify by override' : `Verdict: ${asked?.value ?? ''}`}
       description={
         asked?.value === 'verified'
-          ? `${asked.what} has no certificate for this scoring, so the verdict needs a reason and will read “verified by override”.`
+          ? `${asked.what} has no certificate for this scoring: say why it holds all the same. The verdict will read “verified by override”.`
           : asked?.what
       }
     >

@@ -9,6 +9,7 @@ import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { SearchTable } from '../searches/SearchTable.tsx'
 import { ShortlistTable } from '../shortlists/ShortlistTable.tsx'
 import { TargetTable } from '../targets/TargetTable.tsx'
+import { EditCampaign } from './EditCampaign.tsx'
 import { Members } from './Members.tsx'
 
 export function CampaignPage() {
@@ -33,6 +34,7 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
         title={campaign.name}
         actions={
           <>
+            {may(campaign.role, 'campaign.edit') && <EditCampaign campaign={campaign} />}
             {may(campaign.role, 'targets.edit') && (
               <ButtonLink to={`${base}/targets/new`}>New target</ButtonLink>
             )}

@@ -1,16 +1,15 @@
-import { useState, type FormEvent } from 'react'
+import { useState } from 'react'
 import { Link, useNavigate } from 'react-router-dom'
 import { Plus } from 'lucide-react'
-import { createCampaignSchema, type CampaignSummary } from '../../../shared/campaigns.ts'
+import { type CampaignSummary } from '../../../shared/campaigns.ts'
 import { useCampaigns, useCreateCampaign } from '../../api/campaigns.ts'
-import { explain } from '../../api/request.ts'
 import { Button } from '../../components/ui/Button.tsx'
 import { Dialog } from '../../components/ui/Dialog.tsx'
-import { TextArea, TextField } from '../../components/ui/Field.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { Table, Td, Th } from '../../components/ui/Table.tsx'
 import { formatNumber } from '../../lib/numbers.ts'
+import { CampaignForm } from './CampaignForm.tsx'
 
 export function CampaignsPage() {
   const campaigns = useCampaigns()
@@ -84,42 +83,16 @@ function CampaignTable({ list }: { list: CampaignSummary[] }) {
 function NewCampaignDialog({ open, onOpenChange }: { open: boolean; onOpenChange: (open: boolean) => void }) {
   const navigate = useNavigate()
   const create = useCreateCampaign()
-  const [name, setName] = useState('')
-  const [description, setDescription] = useState('')
-  const [fault, setFault] = useState<string | null>(null)
-  const submit = (event: FormEvent) => {
-    event.preventDefault()
-    const parsed = createCampaignSchema.safeParse({ name, description })
-    if (!parsed.success) {
-      setFault('A campaign needs a name of 1 to 80 characters.')
-      return
-    }
-    setFault(null)
-    create.mutate(parsed.data, {
-      onSuccess: (campaign) => void navigate(`/campaigns/${campaign.id}`),
-      onError: (error) => setFault(explain(error)),
-    })
-  }
   return (
     <Dialog open={open} onOpenChange={onOpenChange} title="New campaign" description="You become its lead.">
-      <form onSubmit={submit} className="flex flex-col gap-4">
-        <TextField
-          label="Name"
-          value={name}
-          onChange={(event) => setName(event.target.value)}
-          error={fault}
-          autoFocus
-        />
-        <TextArea
-          label="What it hunts for"
-          rows={3}
-          value={description}
-          onChange={(event) => setDescription(event.target.value)}
-        />
-        <Button kind="primary" type="submit" busy={create.isPending} className="self-start">
-          Create the campaign
-        </Button>
-      </form>
+      <CampaignForm
+        word="Create the campaign"
+        busy={create.isPending}
+        error={create.error}
+        onSend={(body) =>
+          create.mutate(body, { onSuccess: (campaign) => void navigate(`/campaigns/${campaign.id}`) })
+        }
+      />
     </Dialog>
   )
 }

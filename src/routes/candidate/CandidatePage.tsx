@@ -3,6 +3,7 @@ import { Link, useParams, useSearchParams } from 'react-router-dom'
 import { useQuery } from '@tanstack/react-query'
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
 import { candidateQuery, candidateRecordQuery } from '../../api/candidates.ts'
+import { ChartFrame } from '../../components/charts/ChartFrame.tsx'
 import { drawingsOf } from '../../components/geometry/faceDrawing.ts'
 import { FaceAtlas } from '../../components/geometry/FaceAtlas.tsx'
 import { type Highlight } from '../../components/geometry/FacePicture.tsx'
@@ -17,6 +18,7 @@ import { IntersectionTable } from './IntersectionTable.tsx'
 import { Provenance } from './Provenance.tsx'
 import { SpectrumSection } from './SpectrumSection.tsx'
 import { Steps } from './Steps.tsx'
+import { TriangleTable } from './TriangleTable.tsx'
 import { Verdicts } from './Verdicts.tsx'
 
 /** The dossier: geometry for everyone who may see the polytope, and what the campaign in hand knows of it. */
@@ -108,14 +110,20 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
         title="2-faces"
         note="Each 2-face with its triangulation, to one scale. Pointing at a point or an edge shows it in every face that shares it; a click keeps it."
       >
-        <HighlightLine geometry={geometry} highlight={shown} kept={chosen !== null && highlight === null} />
-        <FaceAtlas faces={faces} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
+        <ChartFrame
+          title={`${geometry.triangles.length} triangles`}
+          file={`two-faces-${geometry.key.slice(0, 10)}`}
+          table={<TriangleTable geometry={geometry} />}
+        >
+          <HighlightLine geometry={geometry} highlight={shown} kept={chosen !== null && highlight === null} />
+          <FaceAtlas faces={faces} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
+        </ChartFrame>
       </Section>
       <Section
         title="Divisors"
         note="Prime toric divisors at the reference point, scale 1. Volumes in Einstein frame, units 2π√α′ = 1, leading order."
       >
-        <DivisorTable geometry={geometry} highlight={shown} onHighlight={onHighlight} />
+        <DivisorTable geometry={geometry} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
       </Section>
       <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section title="Intersection numbers" note="Non-zero κ with i ≤ j ≤ k.">

@@ -21,7 +21,7 @@ const columns: Column<Curve>[] = [
   {
     key: 'class',
     header: 'C · D, entries that are not 0',
-    className: 'font-mono text-xs',
+    cellClass: 'font-mono text-xs',
     cell: ({ row }) => (
       <span data-raw={row.map(([k, n]) => `${k}:${n}`).join(' ')}>
         {row.map(([k, n]) => (

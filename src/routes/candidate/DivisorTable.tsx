@@ -48,10 +48,12 @@ export function DivisorTable({
   geometry,
   highlight,
   onHighlight,
+  onChoose,
 }: {
   geometry: CandidateGeometry
   highlight: Highlight
   onHighlight: (highlight: Highlight) => void
+  onChoose: (highlight: Highlight) => void
 }) {
   const [sort, setSort] = useState<{ by: 'index' | (typeof numbers)[number][0]; down: boolean }>({
     by: 'index',
@@ -84,11 +86,25 @@ export function DivisorTable({
     ),
   }
   const columns: Column<DivisorRow>[] = [
-    { key: 'index', numeric: true, ...sortable('index', 'D'), cell: (row) => row.index },
+    {
+      key: 'index',
+      numeric: true,
+      ...sortable('index', 'D'),
+      cell: (row) => (
+        <button
+          type="button"
+          className="min-w-6 text-right text-action hover:underline"
+          title={`Show D${row.index} in the 2-faces`}
+          onClick={() => onChoose([row.index])}
+        >
+          {row.index}
+        </button>
+      ),
+    },
     {
       key: 'coordinates',
       header: 'Point',
-      className: 'font-mono text-xs',
+      cellClass: 'font-mono text-xs',
       cell: (row) => (
         <span data-raw={row.coordinates}>({row.coordinates.replaceAll('-', '−').replaceAll(' ', ', ')})</span>
       ),

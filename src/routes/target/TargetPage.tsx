@@ -12,6 +12,7 @@ import { PageHead } from '../../components/ui/Layout.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { formatTime } from '../../lib/numbers.ts'
 import { LeaveDialog } from './LeaveDialog.tsx'
+import { RenameTarget } from './RenameTarget.tsx'
 import { useLeaveGuard } from './useLeaveGuard.ts'
 import { VersionList } from './VersionList.tsx'
 import { Workbench } from './Workbench.tsx'
@@ -51,6 +52,7 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
         }
         actions={
           <>
+            {!barred && <RenameTarget campaign={campaign} target={target} />}
             <Button
               kind={changed ? 'primary' : 'plain'}
               busy={save.isPending}

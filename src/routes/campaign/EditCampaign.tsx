@@ -1,0 +1,27 @@
+import { useState } from 'react'
+import { type CampaignDetail } from '../../../shared/campaigns.ts'
+import { useEditCampaign } from '../../api/campaigns.ts'
+import { Button } from '../../components/ui/Button.tsx'
+import { Dialog } from '../../components/ui/Dialog.tsx'
+import { CampaignForm } from '../campaigns/CampaignForm.tsx'
+
+export function EditCampaign({ campaign }: { campaign: CampaignDetail }) {
+  const [open, setOpen] = useState(false)
+  const edit = useEditCampaign(campaign.id)
+  return (
+    <>
+      <Button kind="quiet" onClick={() => setOpen(true)}>
+        Edit
+      </Button>
+      <Dialog open={open} onOpenChange={setOpen} title="Edit the campaign">
+        <CampaignForm
+          word="Save"
+          busy={edit.isPending}
+          error={edit.error}
+          initial={campaign}
+          onSend={(body) => edit.mutate(body, { onSuccess: () => setOpen(false) })}
+        />
+      </Dialog>
+    </>
+  )
+}
