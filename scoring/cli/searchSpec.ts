@@ -24,7 +24,14 @@ export const searchSpecSchema = z.strictObject({
     .default(1),
   islands: settings.islands,
   keep: settings.keep,
-  settings: z.strictObject({ patience: settings.patience, sample: settings.sample }).partial().default({}),
+  settings: z
+    .strictObject({
+      patience: settings.patience,
+      descents: settings.descents,
+      sample: settings.sample,
+    })
+    .partial()
+    .default({}),
   /** A null sample of so many candidates beside the search, to compare with. */
   null: z
     .strictObject({

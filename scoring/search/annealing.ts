@@ -1,174 +1,183 @@
 import { circuits } from '../geometry/circuits.ts'
 import { fineClass } from '../geometry/twoFaceClass.ts'
 import { InvariantError } from '../errors.ts'
-import { isAccepted, type Temperatures } from './acceptance.ts'
+import { isAccepted } from './acceptance.ts'
+import { Cooling, type CoolingState } from './cooling.ts'
 import { codeOfHeights, heightsOfCode } from './heightsCode.ts'
-import { feasibleKind, undefinedKind, type Merit } from './merit.ts'
+import { undefinedKind, type Merit } from './merit.ts'
 import type { Chain, Method, Proposal, Run } from './method.ts'
-import { propose } from './moves.ts'
+import { exchangeCount, randomMove } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
-import type { PlacedHeights } from './sampling.ts'
-import { proposalOf, startHeights } from './sampling.ts'
+import { drawNull, proposalOf, type PlacedHeights } from './sampling.ts'
 import type { Json } from './state.ts'
 
-export const tuning = {
-  calibration: 16,
-  hot: 1,
-  cold: 0.02,
-  hop: 0.2,
-  reheat: 0,
-}
+/** Moves at the beginning of a descent that are taken whatever they bring. */
+const freeMoves = 16
+
+/** Share of hops to another polytope at the beginning and at the end of a descent. */
+const [hopsFirst, hopsLast] = [0.3, 0.06]
 
 interface AnnealingState {
-  polytope: number
-  heights: string
-  kind: number
-  value: number
-  /** Calibration: losses seen so far. */
-  losses: number[]
-  shortfalls: number[]
-  calibrated: number
-  book: string
+  readonly descent: number
+  readonly freeMoves: number
+  readonly cooling: CoolingState
+  readonly book: string
+  /** Where the chain stands; null before its first start. */
+  readonly place: {
+    readonly polytope: number
+    readonly heights: string
+    readonly kind: number
+    readonly value: number
+  } | null
 }
 
+/**
+ * Simulated annealing (Kirkpatrick, Gelatt, Vecchi 1983) over the heights of one polytope, with hops between
+ * polytopes where the scope has several. Candidates are compared in the full order of outcomes, so that a chain
+ * finds its way from infeasible candidates to feasible ones. A run consists of one or more descents, each from a
+ * fresh start with its share of the budget.
+ */
 export const annealing: Method = {
   name: 'annealing',
-  description: 'Simulated annealing over heights.',
-  open: (run, state) => new Annealing(run, state as unknown as AnnealingState | null),
+  description:
+    'Simulated annealing over heights: exchanges of one diagonal, noise on a 2-face, a point or all points, hops between polytopes.',
+  open: (run, state) => new AnnealingChain(run, state as unknown as AnnealingState | null),
 }
 
-class Annealing implements Chain {
+class AnnealingChain implements Chain {
+  private readonly book: PolytopeBook
+  private readonly cooling: Cooling
+  private descent: number
+  private freeMoves: number
   private polytope = -1
   private place: PlacedHeights | undefined
   private merit: Merit = { kind: undefinedKind, value: 0 }
-  private losses: number[] = []
-  private shortfalls: number[] = []
-  private calibrated = 0
-  private readonly book: PolytopeBook
 
   constructor(
     private readonly run: Run,
     state: AnnealingState | null,
   ) {
     this.book = new PolytopeBook(run, state?.book)
-    if (state === null) return
-    this.polytope = state.polytope
-    this.merit = { kind: state.kind, value: state.value }
-    this.losses = [...state.losses]
-    this.shortfalls = [...state.shortfalls]
-    this.calibrated = state.calibrated
-    if (state.polytope >= 0) {
-      const heights = heightsOfCode(state.heights)
-      const cls = fineClass(run.form(state.polytope).polytope, heights)
-      if (cls === undefined) throw new InvariantError('The heights stored in a state are not fine.')
-      this.place = { class: cls, heights }
-    }
+    this.cooling = new Cooling(state?.cooling)
+    this.descent = state?.descent ?? 0
+    this.freeMoves = state?.freeMoves ?? 0
+    if (state === null || state.place === null) return
+    const { polytope, heights, kind, value } = state.place
+    const restored = heightsOfCode(heights)
+    const cls = fineClass(run.form(polytope).polytope, restored)
+    if (cls === undefined) throw new InvariantError('The heights stored in a state are not fine.')
+    this.polytope = polytope
+    this.place = { class: cls, heights: restored }
+    this.merit = { kind, value }
   }
 
   state(): Json {
-    return {
-      polytope: this.polytope,
-      heights: this.place === undefined ? '' : codeOfHeights(this.place.heights),
-      kind: this.merit.kind,
-      value: this.merit.value,
-      losses: this.losses,
-      shortfalls: this.shortfalls,
-      calibrated: this.calibrated,
+    const { polytope, place, merit } = this
+    const state: AnnealingState = {
+      descent: this.descent,
+      freeMoves: this.freeMoves,
+      cooling: this.cooling.state(),
       book: this.book.code(),
+      place: place === undefined ? null : { polytope, heights: codeOfHeights(place.heights), ...merit },
     }
+    return state as unknown as Json
   }
 
   step(): void {
-    const { run } = this
-    const { stream } = run
-    const hops = run.polytopeCount > 1
-    const place = this.place
-    if (
-      place === undefined ||
-      (hops && (stream.uniform() < tuning.hop || this.book.isSpent(this.polytope)))
-    ) {
-      this.enter(place === undefined)
-      return
+    const { run, book, place } = this
+    if (book.open === 0) {
+      run.end(book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
+    } else if (place === undefined || this.nextDescent() || book.isSpent(this.polytope)) {
+      this.begin()
+    } else if (run.polytopeCount > 1 && run.stream.uniform() < this.hopShare()) {
+      const polytope = book.draw()
+      if (polytope >= 0) this.hop(polytope)
+    } else {
+      this.move(place)
     }
+  }
+
+  /** A fresh start on a polytope drawn from the open ones. */
+  private begin(): void {
+    const { run, book } = this
+    const polytope = book.draw()
+    if (polytope < 0) return
+    if (this.place !== undefined) run.countRestart()
+    this.freeMoves = 0
+    const start = drawNull(run.form(polytope).polytope, run.stream)
+    const merit = this.judged(polytope, proposalOf(start))
+    if (merit !== null) this.stand(polytope, start, merit)
+  }
+
+  private hop(polytope: number): void {
+    const start = drawNull(this.run.form(polytope).polytope, this.run.stream)
+    const merit = this.judged(polytope, proposalOf(start))
+    if (merit !== null && this.accepts(merit)) this.stand(polytope, start, merit)
+  }
+
+  private move(place: PlacedHeights): void {
+    const { run, book, polytope } = this
+    // Without circuits there is nothing to choose: the polytope has one class.
     if (circuits(place.class).count === 0) {
-      this.book.spend(this.polytope)
-      this.finish()
+      book.spend(polytope)
       return
     }
-    const next = propose(place, stream)
-    if (next === undefined || next.class === place.class) {
-      const heights = next?.heights()
+    const proposal = randomMove(place, run.stream)
+    if (proposal === undefined || proposal.class === place.class) {
+      const heights = proposal?.heights()
       if (heights !== undefined) this.place = { class: place.class, heights }
-      this.stall(this.polytope)
+      book.stall(polytope)
       return
     }
-    this.consider(this.polytope, next)
+    const merit = this.judged(polytope, proposal)
+    if (merit === null) return
+    this.cooling.learn(this.merit, merit)
+    if (!this.accepts(merit)) return
+    const heights = proposal.heights()
+    if (heights !== undefined) this.stand(polytope, { class: proposal.class, heights }, merit)
   }
 
-  private consider(polytope: number, next: Proposal, forced = false): void {
-    const { run } = this
-    const judged = run.judge(polytope, next)
-    if (judged?.isNew) this.book.found(polytope)
-    else this.stall(polytope)
-    if (judged === null) return
-    if (!forced && !this.accepts(judged.merit)) return
-    const heights = next.heights()
-    if (heights === undefined) return
-    this.polytope = polytope
-    this.place = { class: next.class, heights }
-    this.merit = judged.merit
-    if (!forced) run.countAccepted()
-  }
-
-  private enter(first: boolean): void {
-    const { run } = this
-    const polytope = this.book.draw()
-    if (polytope < 0) {
-      this.finish()
-      return
-    }
-    const forced = first || this.book.isSpent(this.polytope)
-    if (forced && !first) run.countRestart()
-    const start = startHeights(run.form(polytope).polytope, run.stream)
-    this.consider(polytope, proposalOf(start), forced)
+  private judged(polytope: number, proposal: Proposal): Merit | null {
+    const judgement = this.run.judge(polytope, proposal)
+    if (judgement?.isNew) this.book.found(polytope)
+    else this.book.stall(polytope)
+    return judgement?.merit ?? null
   }
 
   private accepts(merit: Merit): boolean {
-    const { run, merit: current } = this
-    if (this.calibrated < tuning.calibration) {
-      this.calibrated++
-      if (merit.kind === current.kind && merit.value !== current.value) {
-        const difference = Math.abs(merit.value - current.value)
-        if (merit.kind === feasibleKind) this.losses.push(difference)
-        else this.shortfalls.push(difference)
-      }
+    if (this.freeMoves < Math.min(freeMoves, this.descentLength() / 10)) {
+      this.freeMoves++
+      return true
     }
-    return isAccepted(current, merit, this.temperatures(), run.stream.uniform())
+    const stall = this.place === undefined ? 0 : this.run.stalled / (30 + exchangeCount(this.place))
+    const temperatures = this.cooling.temperatures(this.progress(), stall)
+    return isAccepted(this.merit, merit, temperatures, this.run.stream.uniform())
+  }
+
+  private stand(polytope: number, place: PlacedHeights, merit: Merit): void {
+    this.polytope = polytope
+    this.place = place
+    this.merit = merit
+    this.run.countAccepted()
+  }
+
+  private descentLength(): number {
+    return this.run.budget / this.run.descents
+  }
+
+  /** True when the evaluations used have reached the next descent, which then begins. */
+  private nextDescent(): boolean {
+    const descent = Math.min(this.run.descents - 1, Math.floor(this.run.evaluations / this.descentLength()))
+    if (descent === this.descent) return false
+    this.descent = descent
+    return true
   }
 
   private progress(): number {
-    return Math.min(1, this.run.evaluations / this.run.budget)
+    return this.run.evaluations / this.descentLength() - this.descent
   }
 
-  private temperatures(): Temperatures {
-    const heat = tuning.reheat === 0 ? 1 : 2 ** Math.min(20, this.run.stalled / tuning.reheat)
-    const cooling = heat * tuning.hot * (tuning.cold / tuning.hot) ** this.progress()
-    return { score: medianOr(this.losses, 1) * cooling, shortfall: medianOr(this.shortfalls, 0.3) * cooling }
+  private hopShare(): number {
+    return hopsFirst + (hopsLast - hopsFirst) * Math.min(1, this.progress())
   }
-
-  private stall(polytope: number): void {
-    this.book.stall(polytope)
-    this.finish()
-  }
-
-  private finish(): void {
-    if (this.book.open > 0) return
-    this.run.end(this.book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
-  }
-}
-
-function medianOr(values: readonly number[], otherwise: number): number {
-  if (values.length === 0) return otherwise
-  const sorted = [...values].sort((a, b) => a - b)
-  return sorted[sorted.length >> 1]
 }

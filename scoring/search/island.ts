@@ -49,6 +49,7 @@ export class Island implements Run {
   readonly polytopeCount: number
   readonly budget: number
   readonly patience: number
+  readonly descents: number
   evaluations: number
   proposals: number
   stalled: number
@@ -80,6 +81,7 @@ export class Island implements Run {
     this.polytopeCount = problem.polytopes.count
     this.budget = given.budget
     this.patience = problem.settings.patience
+    this.descents = problem.settings.descents
     this.evaluations = given.evaluations
     this.proposals = given.proposals
     this.stalled = given.stalled

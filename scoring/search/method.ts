@@ -29,6 +29,8 @@ export interface Run {
   readonly budget: number
   readonly evaluations: number
   readonly patience: number
+  /** Fresh starts that share the budget. */
+  readonly descents: number
   /** Proposals in a row without a new class. */
   readonly stalled: number
   form(polytope: number): NormalForm

@@ -7,51 +7,73 @@ import type { Proposal } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
 import { proposalOf, type PlacedHeights } from './sampling.ts'
 
-export const moveShares = { flip: 0.8, few: 0.1 }
+/** How often each move is tried; the rest is noise on all points. Found by trial, and not critical. */
+const shares = { exchange: 0.7, face: 0.15, point: 0.07 } as const
 
-export function propose(place: PlacedHeights, stream: RandomStream): Proposal | undefined {
+/** Noise has a width of 2^-5 to 2^-14 of the largest height, log-uniformly. */
+const [widest, narrowest] = [5, 14]
+
+/**
+ * One random step from a place: as a rule the exchange of one diagonal (across one wall of the class), else
+ * normal noise on the heights of one 2-face, of one point or of all points. Undefined when the step leads
+ * nowhere; the class may be the old one.
+ */
+export function randomMove(place: PlacedHeights, stream: RandomStream): Proposal | undefined {
+  const { twoFaces } = place.class.polytope
   const kind = stream.uniform()
-  if (kind < moveShares.flip) return exchanged(place, stream)
-  return jittered(place, stream, kind < moveShares.flip + moveShares.few ? 1 + stream.below(3) : Infinity)
+  if (kind < shares.exchange) return exchanged(place, stream)
+  if (kind < shares.exchange + shares.face) {
+    return shaken(place, stream, twoFaces[stream.below(twoFaces.length)].points)
+  }
+  if (kind < shares.exchange + shares.face + shares.point) {
+    return shaken(place, stream, [stream.below(place.heights.length)])
+  }
+  return shaken(place, stream, place.heights.keys())
+}
+
+/** Number of diagonals that can be exchanged. */
+export function exchangeCount(place: PlacedHeights): number {
+  return exchangeRows(place).length
+}
+
+function exchangeRows(place: PlacedHeights): number[] {
+  const { a, count } = circuits(place.class)
+  const rows: number[] = []
+  for (let row = 0; row < count; row++) if (a[row] === 1) rows.push(row)
+  return rows
 }
 
 /**
- * The exchange of one diagonal, drawn uniformly among the edges that allow it. Its heights, nearest to those of
+ * The exchange of one diagonal, drawn uniformly among those that can be exchanged. Its heights, near those of
  * the place, come from the test of regularity.
  */
 function exchanged(place: PlacedHeights, stream: RandomStream): Proposal | undefined {
-  const rows = circuits(place.class)
-  const edges: number[] = []
-  for (let row = 0; row < rows.count; row++) if (rows.a[row] === 1) edges.push(row)
-  if (edges.length === 0) return undefined
-  const row = edges[stream.below(edges.length)]
-  const cls = flip(place.class, { i: rows.i[row], j: rows.j[row] })
+  const rows = exchangeRows(place)
+  if (rows.length === 0) return undefined
+  const row = rows[stream.below(rows.length)]
+  const { i, j } = circuits(place.class)
+  const cls = flip(place.class, { i: i[row], j: j[row] })
   if (cls === undefined) return undefined
-  let answer: { heights: Float64Array | undefined } | undefined
+  let tested: { readonly heights: Float64Array | undefined } | undefined
   return {
     class: cls,
     heights() {
-      if (answer === undefined) {
-        const regularity = isRegular(cls, { near: place.heights })
-        answer = { heights: regularity.regular ? gaugedHeights(cls, regularity.heights) : undefined }
+      if (tested === undefined) {
+        const answer = isRegular(cls, { near: place.heights })
+        tested = { heights: answer.regular ? gaugedHeights(cls, answer.heights) : undefined }
       }
-      return answer.heights
+      return tested.heights
     },
   }
 }
 
-/** Normal noise at some points, in a width drawn log-uniformly, shortened until the heights are fine. */
-function jittered(place: PlacedHeights, stream: RandomStream, count: number): Proposal | undefined {
-  const { heights } = place
-  const width = searchHeightBound * 2 ** -(6 + 14 * stream.uniform())
-  const towards = Float64Array.from(heights)
-  if (count >= heights.length) {
-    for (let p = 0; p < heights.length; p++) towards[p] += width * stream.gaussian()
-  } else {
-    for (let n = 0; n < count; n++) towards[stream.below(heights.length)] += 4 * width * stream.gaussian()
-  }
-  const step = clampToFine(place.class.polytope, heights, towards, place.class)
+/** Normal noise on the heights of some points, the step halved until the heights are fine. */
+function shaken(place: PlacedHeights, stream: RandomStream, points: Iterable<number>): Proposal | undefined {
+  const width = searchHeightBound * 2 ** -(widest + (narrowest - widest) * stream.uniform())
+  const towards = Float64Array.from(place.heights)
+  for (const p of points) towards[p] += width * stream.gaussian()
+  const step = clampToFine(place.class.polytope, place.heights, towards, place.class)
   if (!isGeneric(step.class, step.heights)) return undefined
   const gauged = gaugedHeights(step.class, step.heights)
-  return gauged === undefined ? undefined : proposalOf({ class: step.class, heights: gauged })
+  return gauged && proposalOf({ class: step.class, heights: gauged })
 }

@@ -24,7 +24,7 @@ export function problemDigest({ polytopes, rule, method, settings }: SearchProbl
     scope: polytopes.keys,
     scoring: scoringHash(rule, engineVersion),
     method,
-    settings: [settings.budget, settings.islands, settings.keep, settings.patience, settings.sample],
+    settings: Object.entries(settings).sort(([a], [b]) => (a < b ? -1 : 1)),
   })
   return bytesToHex(sha256(utf8ToBytes(content))).slice(0, 32)
 }

@@ -70,8 +70,3 @@ export function drawNull(polytope: Polytope, stream: RandomStream): PlacedHeight
   const { heights, class: cls }: FineStep = clampToFine(polytope, base.heights, towards, base.class)
   return { heights, class: cls }
 }
-
-/** Where a chain begins: quadratic heights with as much noise as keeps them fine for certain. */
-export function startHeights(polytope: Polytope, stream: RandomStream): PlacedHeights {
-  return drawNull(polytope, stream)
-}

@@ -15,6 +15,8 @@ export const searchSettingsSchema = z.strictObject({
   keep: z.number().int().min(1).max(500).default(100),
   /** Proposals in a row without a new class after which a polytope counts as exhausted. */
   patience: z.number().int().min(10).max(1_000_000).default(2000),
+  /** Annealing: fresh starts among which an island's budget is divided. */
+  descents: z.number().int().min(1).max(1000).default(1),
   /** Rows of the uniform sample of all evaluations that an island keeps. */
   sample: z.number().int().min(0).max(10_000).default(256),
 })
