@@ -57,7 +57,7 @@ export function ReferenceList({ onInsert, open }: { onInsert?: (text: string) =>
         return (
           inGroup.length > 0 && (
             <section key={title} aria-label={title} className="mt-4">
-              <h3 className="border-b pb-1 text-sm">{title}</h3>
+              <h2 className="border-b pb-1 text-sm">{title}</h2>
               <ul>
                 {inGroup.map((entry) => (
                   <Entry key={entry.id} entry={entry} onInsert={onInsert} open={open} />

@@ -15,7 +15,7 @@ export function Table({
   className?: string
 }) {
   return (
-    <div className="relative overflow-x-auto" tabIndex={0} role="region" aria-label={label}>
+    <div className="relative overflow-x-auto" tabIndex={0} role="group" aria-label={`${label}, scrolls`}>
       <table className={`border-collapse text-sm ${fit ? '[&_td]:px-3 [&_th]:px-3' : 'w-full'} ${className}`}>
         <caption className="sr-only">{label}</caption>
         {children}

@@ -66,7 +66,7 @@ export function VirtualTable<Row>({
     <div
       ref={scroller}
       tabIndex={0}
-      role="region"
+      role="group"
       aria-label={`${label}, scrolls`}
       className={`relative overflow-auto ${className}`}
     >

@@ -5,6 +5,7 @@ import { may, roles, type Role } from '../../../shared/roles.ts'
 import { useAddMember, useChangeRole, useRemoveMember } from '../../api/campaigns.ts'
 import { explain } from '../../api/request.ts'
 import { Button } from '../../components/ui/Button.tsx'
+import { ConfirmDialog } from '../../components/ui/ConfirmDialog.tsx'
 import { Select, TextField } from '../../components/ui/Field.tsx'
 import { Table, Td, Th } from '../../components/ui/Table.tsx'
 
@@ -20,6 +21,7 @@ export function Members({ campaign }: { campaign: CampaignDetail }) {
   const manages = may(campaign.role, 'members.manage')
   const changeRole = useChangeRole(campaign.id)
   const remove = useRemoveMember(campaign.id)
+  const [leaving, setLeaving] = useState<CampaignDetail['members'][number] | null>(null)
   const tell = { onError: (error: Error) => void toast.error(explain(error)) }
   return (
     <>
@@ -66,7 +68,11 @@ export function Members({ campaign }: { campaign: CampaignDetail }) {
               <Td className="text-soft">{roleNotes[member.role]}</Td>
               {manages && (
                 <Td className="text-right">
-                  <Button kind="quiet" onClick={() => remove.mutate(member.accountId, tell)}>
+                  <Button
+                    kind="quiet"
+                    onClick={() => setLeaving(member)}
+                    aria-label={`Remove ${member.name}`}
+                  >
                     Remove
                   </Button>
                 </Td>
@@ -75,6 +81,15 @@ export function Members({ campaign }: { campaign: CampaignDetail }) {
           ))}
         </tbody>
       </Table>
+      <ConfirmDialog
+        open={leaving !== null}
+        onOpenChange={(open) => !open && setLeaving(null)}
+        title={`Remove ${leaving?.name ?? 'the member'}?`}
+        word="Remove"
+        onConfirm={() => leaving && remove.mutate(leaving.accountId, tell)}
+      >
+        They lose sight of this campaign at once. What they wrote, searched and decided stays.
+      </ConfirmDialog>
       {manages && <AddMember campaign={campaign.id} />}
     </>
   )

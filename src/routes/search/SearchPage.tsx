@@ -9,6 +9,7 @@ import { describeScope } from '../../components/scope/scopeAddress.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
+import { ConfirmDialog } from '../../components/ui/ConfirmDialog.tsx'
 import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { Progress } from '../../components/ui/Progress.tsx'
@@ -189,14 +190,9 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
   const barredList = useBarred('shortlists.edit')
   const send = useSearchCommand(campaign, search.id)
   const [making, setMaking] = useState(false)
-  const run = (command: SearchCommand) => {
-    if (
-      command === 'cancel' &&
-      !window.confirm('Cancel this search? What it found is kept, but it cannot go on.')
-    )
-      return
+  const [cancelling, setCancelling] = useState(false)
+  const run = (command: SearchCommand) =>
     send.mutate(command, { onError: (error) => toast.error(explain(error)) })
-  }
   return (
     <>
       {commandsOf[search.state].map((command) => (
@@ -205,7 +201,7 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
           kind={command === 'cancel' ? 'danger' : 'plain'}
           unavailable={barred}
           busy={send.isPending}
-          onClick={() => run(command)}
+          onClick={() => (command === 'cancel' ? setCancelling(true) : run(command))}
         >
           {words[command]}
         </Button>
@@ -224,6 +220,15 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
       >
         Make a shortlist
       </Button>
+      <ConfirmDialog
+        open={cancelling}
+        onOpenChange={setCancelling}
+        title="Cancel this search?"
+        word="Cancel the search"
+        onConfirm={() => run('cancel')}
+      >
+        What it has found is kept, but it cannot go on afterwards. To stop for a while, pause it.
+      </ConfirmDialog>
       <MakeShortlistDialog campaign={campaign} search={search} open={making} onOpenChange={setMaking} />
     </>
   )

@@ -128,7 +128,7 @@ function Answer({ campaign, preview }: { campaign: string; preview: Preview }) {
       {preview.requires.length > 0 && <Requires requires={preview.requires} />}
       {preview.undefinedReasons.length > 0 && (
         <section aria-label="Undefined, and why">
-          <h3 className="text-sm">Undefined, and why</h3>
+          <h2 className="text-sm">Undefined, and why</h2>
           <ul>
             {preview.undefinedReasons.map(({ reason, count }) => (
               <li key={reason} className="flex gap-3 border-b py-1">
@@ -148,8 +148,8 @@ function Answer({ campaign, preview }: { campaign: string; preview: Preview }) {
       ).map(
         ([title, rows]) =>
           rows.length > 0 && (
-            <section key={title} aria-label={`${title} of the null sample`}>
-              <h3 className="text-sm">{title}</h3>
+            <section key={title} aria-label={title}>
+              <h2 className="text-sm">{title}</h2>
               <ScoredTable label={`${title} of the null sample`} rows={rows} campaign={campaign} />
             </section>
           ),
