@@ -1,4 +1,4 @@
-import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query'
+import { queryOptions, useMutation, useQuery, useQueryClient, type QueryClient } from '@tanstack/react-query'
 import { type z } from 'zod'
 import { sessionSchema, type setUpAccountSchema, type signInSchema } from '../../shared/session.ts'
 import { request } from './request.ts'
@@ -35,9 +35,13 @@ export function useSignOut() {
     onSuccess: () => {
       const version = client.getQueryData<{ version: string }>(sessionKey)?.version ?? ''
       client.setQueryData(sessionKey, { account: null, version })
-      client.removeQueries({ predicate: (query) => query.queryKey[0] !== 'session' })
     },
   })
+}
+
+/** Drops what a signed-out person's pages had loaded; for the pages before sign-in, when none of those is open. */
+export function forgetEverything(client: QueryClient): void {
+  client.removeQueries({ predicate: (query) => query.queryKey[0] !== sessionKey[0] })
 }
 
 /** The one-time link of a new account: choose name and password; signs in. */

@@ -7,5 +7,5 @@ export function Formula({ tex, className = '' }: { tex: string; className?: stri
   useEffect(() => {
     if (element.current) renderFormula(tex, element.current)
   }, [tex])
-  return <span ref={element} className={`inline-block max-w-full max-sm:overflow-x-auto ${className}`} />
+  return <span ref={element} className={className} />
 }

@@ -120,7 +120,22 @@ function SignedIn({
         )}
       </main>
       <ShortcutDialog open={helpOpen} onOpenChange={setHelpOpen} />
-      <Toaster theme={theme} position="bottom-right" closeButton />
+      <Toaster
+        theme={theme}
+        position="top-center"
+        offset={{ top: 64 }}
+        toastOptions={{
+          style: {
+            background: 'var(--sheet)',
+            color: 'var(--ink)',
+            borderColor: 'var(--edge)',
+            borderRadius: 4,
+            fontFamily: 'inherit',
+            fontSize: 14,
+          },
+          actionButtonStyle: { background: 'var(--action)', color: 'var(--on-action)', borderRadius: 4 },
+        }}
+      />
     </CurrentCampaign>
   )
 }

@@ -1,8 +1,9 @@
 import { useEffect, useState, type FormEvent } from 'react'
+import { useQueryClient } from '@tanstack/react-query'
 import { Navigate, useSearchParams } from 'react-router-dom'
 import { signInSchema } from '../../../shared/session.ts'
 import { explain } from '../../api/request.ts'
-import { useSession, useSignIn } from '../../api/session.ts'
+import { forgetEverything, useSession, useSignIn } from '../../api/session.ts'
 import { EntrancePage } from '../../components/shell/EntrancePage.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { TextField } from '../../components/ui/Field.tsx'
@@ -19,9 +20,11 @@ export function SignInPage() {
   const [email, setEmail] = useState('')
   const [password, setPassword] = useState('')
   const [problem, setProblem] = useState<string | null>(null)
+  const client = useQueryClient()
   useEffect(() => {
     document.title = 'Sign in · Tessellary'
-  }, [])
+    forgetEverything(client)
+  }, [client])
   if (session.data?.account) return <Navigate to={safeDestination(search.get('then'))} replace />
 
   const submit = (event: FormEvent) => {

@@ -111,7 +111,11 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
             hint={older ? 'The version opened before, not the latest, is used.' : undefined}
           />
           {target && !older && (
-            <pre className="mt-2 max-h-56 overflow-auto border-l-2 border-line pl-3 font-mono text-xs leading-5">
+            <pre
+              tabIndex={0}
+              aria-label="The rule of this target"
+              className="mt-2 max-h-56 overflow-auto border-l-2 border-line pl-3 font-mono text-xs leading-5"
+            >
               {target.latest.text}
             </pre>
           )}
