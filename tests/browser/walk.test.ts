@@ -7,6 +7,7 @@ import { startApplication, type Application } from './application.ts'
 import { chromiumPath, launch, openPage, type Watched } from './browser.ts'
 
 const shots = fileURLToPath(new URL('./screenshots/', import.meta.url))
+const tourShots = fileURLToPath(new URL('./tour/', import.meta.url))
 
 /** Vertices of the Newton polytope of the weights (3,4,5,6,7): (h11, h21) = (24, 9), not in the bundled library. */
 const pasted = `-2 2 1 -1
@@ -62,6 +63,11 @@ describe.skipIf(chromiumPath === null)(
     })
 
     const shot = (name: string) => page.screenshot({ path: `${shots}walk-${name}.png`, fullPage: true })
+
+    /** The README's pictures are renewed on demand only, so that a test run leaves the tree as it was. */
+    const tour = async (name: string) => {
+      if (process.env.RENEW_TOUR === '1') await page.screenshot({ path: `${tourShots}${name}.png` })
+    }
 
     afterEach(async ({ task }) => {
       if (task.result?.state === 'fail')
@@ -129,6 +135,7 @@ describe.skipIf(chromiumPath === null)(
         .waitFor()
       await page.getByText(/300 candidates\./).waitFor({ timeout: 120_000 })
       await shot('4-preview')
+      await tour('target')
       await page.getByRole('button', { name: 'Save the target' }).click()
       await page.getByRole('heading', { level: 1, name: 'Long range at seven weights' }).waitFor()
     })
@@ -152,6 +159,7 @@ describe.skipIf(chromiumPath === null)(
         .first()
         .waitFor()
       await shot('6-search')
+      await tour('search')
     })
 
     it('makes a shortlist and decides with one key', async () => {
@@ -166,6 +174,7 @@ describe.skipIf(chromiumPath === null)(
       await rows.filter({ hasText: 'rejected' }).first().waitFor()
       expect(await page.locator('body').innerText()).toContain(caution)
       await shot('7-shortlist')
+      await tour('shortlist')
     })
 
     it('opens the dossier, whose numbers obey the geometry, and verifies with a reason', async () => {
@@ -173,6 +182,7 @@ describe.skipIf(chromiumPath === null)(
       await page.getByText('Score and verdict').waitFor()
       await page.getByText('Spectrum').first().waitFor()
       await shot('8-dossier')
+      await tour('dossier')
       const key = /candidates\/([0-9a-f]{32})/.exec(page.url())![1]
       const answer = await page.request.get(`${application.address}/api/candidates/${key}`)
       const geometry = (await answer.json()) as {
