@@ -78,8 +78,8 @@ async function outcomesOf(
   return new Map(values.map(({ candidateKey, outcome }) => [candidateKey, outcome]))
 }
 
-/** A rule without `hit` counts what lies above the null's 99 % quantile, once that is known. */
-export function withNullHit(outcome: OutcomeView, hasHit: boolean, quantile99: number | null): OutcomeView {
-  if (outcome.kind !== 'feasible' || hasHit || quantile99 === null) return outcome
-  return { ...outcome, hit: outcome.score > quantile99 }
+/** Marks what lies above the hit line of a rule without its own `hit`; with no line (null) nothing changes. */
+export function withHitLine(outcome: OutcomeView, line: number | null): OutcomeView {
+  if (outcome.kind !== 'feasible' || line === null) return outcome
+  return { ...outcome, hit: outcome.score > line }
 }

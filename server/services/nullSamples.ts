@@ -5,6 +5,7 @@ import type { NullSummary } from '../../shared/nullSamples.ts'
 import { NullSample } from '../entities/nullSample.ts'
 import { Search } from '../entities/search.ts'
 import type { NullChunkOutput } from '../jobs/nullChunk.ts'
+import { leavesHitOpen } from './rules.ts'
 
 /** Where a null sample lies: the same for all searches of one rule over one scope. */
 export type NullAddress = Pick<Search, 'scopeHash' | 'scoringHash'>
@@ -16,6 +17,20 @@ export async function readNullSummary(
 ): Promise<NullSummary | null> {
   const sample = await manager.findOneBy(NullSample, { scopeHash, scoringHash })
   return sample?.summary ?? null
+}
+
+/**
+ * The score above which a candidate is a hit of a rule that does not say so itself: the 99 % quantile of its null
+ * sample. Null while the sample is incomplete, and for a rule with its own `hit`.
+ */
+export async function readHitLine(
+  manager: EntityManager,
+  address: NullAddress,
+  ruleText: string,
+): Promise<number | null> {
+  if (!leavesHitOpen(ruleText)) return null
+  const summary = await readNullSummary(manager, address)
+  return summary?.complete ? summary.quantile99 : null
 }
 
 /** The sample at an address, begun when there is none. */

@@ -34,3 +34,9 @@ export function requireSoundRule(text: string, path = 'text'): SoundRule {
 export function reportColumns(text: string): string[] {
   return requireSoundRule(text).rule.report.map(({ name }) => name)
 }
+
+/** True for a rule that leaves it open what a hit is: then a score above the null's 99 % quantile is one. */
+export function leavesHitOpen(text: string): boolean {
+  const check = checkRule(text)
+  return check.ok && check.rule.hit === null
+}

@@ -7,8 +7,8 @@ import { SearchIsland } from '../entities/searchIsland.ts'
 import { Shortlist } from '../entities/shortlist.ts'
 import { presentSearch } from '../presenters/searches.ts'
 import { conflict, notFound } from '../problems.ts'
-import { topFinds } from './finds.ts'
-import { readNullSummary } from './nullSamples.ts'
+import { topFinds, withHitLine } from './finds.ts'
+import { readHitLine, readNullSummary } from './nullSamples.ts'
 import { requireSoundRule } from './rules.ts'
 import { resolveScope, scopeHash } from './scopes.ts'
 import { readVersion } from './targets.ts'
@@ -32,9 +32,11 @@ export async function readSearch(
   const search = await manager.findOne(Search, { where: { campaignId, id: searchId }, relations: withWords })
   if (search === null) throw notFound('search')
   const shortlists = await manager.find(Shortlist, { where: { campaignId }, order: { createdAt: 'ASC' } })
+  const line = await readHitLine(manager, search, search.targetVersion?.text ?? '')
+  const top = await topFinds(manager, search, 20)
   return presentSearch(search, {
     nullSummary: await readNullSummary(manager, search),
-    top: await topFinds(manager, search, 20),
+    top: top.map((row) => ({ ...row, outcome: withHitLine(row.outcome, line) })),
     shortlists: shortlists.filter(({ searchIds }) => searchIds.includes(search.id)),
   })
 }

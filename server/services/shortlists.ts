@@ -8,7 +8,8 @@ import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { emptyTally } from '../presenters/campaigns.ts'
 import { presentShortlist } from '../presenters/shortlists.ts'
 import { notFound, unprocessable } from '../problems.ts'
-import { rankedFinds } from './finds.ts'
+import { rankedFinds, withHitLine } from './finds.ts'
+import { readHitLine } from './nullSamples.ts'
 import { ownNames } from './polytopes.ts'
 import { reportColumns } from './rules.ts'
 import { latestVerdicts, tallyShortlists } from './verdicts.ts'
@@ -81,6 +82,10 @@ export async function createShortlist(
   }
   const id = randomUUID()
   await writes.transaction(async (manager) => {
+    const lines = new Map<string, number | null>()
+    for (const search of searches) {
+      lines.set(search.id, await readHitLine(manager, search, search.targetVersion?.text ?? ''))
+    }
     const ranked = (await rankedFinds(manager, searches)).slice(0, input.size)
     if (ranked.length === 0) {
       throw unprocessable('nothing-found', 'These searches have not found any candidate yet.', {
@@ -106,7 +111,7 @@ export async function createShortlist(
         rank: place + 1,
         candidateKey,
         searchId,
-        outcome,
+        outcome: withHitLine(outcome, lines.get(searchId) ?? null),
       })),
     )
   })

@@ -133,6 +133,27 @@ describe('a search', () => {
     expect(after).toEqual(before)
   })
 
+  it("counts what lies above the null's 99 % quantile as a hit when the rule does not say", async () => {
+    const { body: target } = await lead
+      .post(path('/targets'))
+      .send({ name: 'Hit left open', text: 'score log10(metric.divisor.top)' })
+      .expect(201)
+    const { id } = await start({ targetVersionId: target.versions[0].id, seed: 6 })
+    await finished(id)
+    await expect
+      .poll(async () => (await read(id)).null?.complete, { timeout: 50_000, interval: 250 })
+      .toBe(true)
+    const { top, null: summary } = await read(id)
+    const { body: shortlist } = await lead
+      .post(path('/shortlists'))
+      .send({ name: 'Hits by quantile', searchIds: [id], size: 20 })
+      .expect(201)
+    for (const { outcome } of [...top, ...(shortlist as ShortlistDetail).rows]) {
+      if (outcome.kind !== 'feasible') throw new Error('a rule without require is feasible everywhere')
+      expect(outcome.hit).toBe(outcome.score > (summary?.quantile99 ?? Number.NaN))
+    }
+  })
+
   it('pauses, goes on and ends as if nothing had been', async () => {
     const settings = { seed: 9, budget: 400 }
     const undisturbed = await finished((await start(settings)).id)
