@@ -17,10 +17,13 @@ export function PreviewPanel({
   campaign,
   state,
   sound,
+  hitOpen,
 }: {
   campaign: string
   state: PreviewState
   sound: boolean
+  /** The rule does not say what a hit is. */
+  hitOpen: boolean
 }) {
   const { preview, outdated, error, retry, starting } = state
   if (error) return <Failure title="The preview did not start." error={error} retry={retry} />
@@ -73,20 +76,28 @@ export function PreviewPanel({
         )}
       </div>
       <div className={outdated ? 'border-l-2 border-dashed border-null pl-3' : ''}>
-        <Answer campaign={campaign} preview={preview} />
+        <Answer campaign={campaign} preview={preview} hitOpen={hitOpen} />
       </div>
       <Caution className="mt-4" />
     </div>
   )
 }
 
-function Answer({ campaign, preview }: { campaign: string; preview: Preview }) {
+function Answer({ campaign, preview, hitOpen }: { campaign: string; preview: Preview; hitOpen: boolean }) {
   const { feasible, infeasible, evaluated } = preview
   return (
     <div className="flex flex-col gap-5">
       <dl className="grid grid-cols-[max-content_minmax(0,1fr)] gap-x-4 gap-y-0.5">
         <Line name="Hit rate">
-          {preview.hit ? <Rate rate={preview.hit} /> : <span className="text-soft">not known yet</span>}
+          {hitOpen ? (
+            <span className="text-soft">
+              The rule has no hit line; in a search a score above the null’s 99 % quantile will count.
+            </span>
+          ) : preview.hit ? (
+            <Rate rate={preview.hit} />
+          ) : (
+            <span className="text-soft">not known yet</span>
+          )}
         </Line>
         <Line name="Feasible">
           {formatNumber(feasible)}

@@ -82,7 +82,12 @@ export function Workbench({ campaign, text, onText, versions }: WorkbenchProps) 
                     size={size}
                     onSize={setSize}
                   />
-                  <PreviewPanel campaign={campaign} state={preview} sound={check.ok} />
+                  <PreviewPanel
+                    campaign={campaign}
+                    state={preview}
+                    sound={check.ok}
+                    hitOpen={check.ok && check.rule.hit === null}
+                  />
                 </>
               ),
             },
