@@ -8,7 +8,7 @@ import type { Find } from './find.ts'
 import { OutcomeMemo } from './memo.ts'
 import { isMethodName, methodNames } from './methods.ts'
 import { nullProblem, nullSummary, type NullSummary } from './nullSample.ts'
-import { FormCache, polytopeSource, type PolytopeEntry } from './polytopeSource.ts'
+import { FormCache, polytopeSource, type PolytopeEntry, type PolytopeSource } from './polytopeSource.ts'
 import type { SearchProblem } from './problem.ts'
 import type { IslandProgress } from './progress.ts'
 import { searchSettingsSchema, type SearchSettings } from './settings.ts'
@@ -74,8 +74,19 @@ export type PreviewOutput =
  * known. It spares time and alters no result; a job without it gives the same output.
  */
 export class JobSession {
-  readonly forms = new FormCache()
+  private readonly forms = new FormCache()
+  private readonly sources = new WeakMap<readonly PolytopeEntry[], PolytopeSource>()
   private rule: { readonly text: string; readonly rule: CheckedRule; readonly memo: OutcomeMemo } | undefined
+
+  /** The source of a list of entries; the same for the same list (the same array, not changed in between). */
+  sourceOf(entries: readonly PolytopeEntry[]): PolytopeSource {
+    let source = this.sources.get(entries)
+    if (source === undefined) {
+      source = polytopeSource(entries, this.forms)
+      this.sources.set(entries, source)
+    }
+    return source
+  }
 
   /** @throws InputError with the first error of the rule */
   ruleOf(text: string): { readonly rule: CheckedRule; readonly memo: OutcomeMemo } {
@@ -106,7 +117,7 @@ export function segmentJob(input: SegmentInput, session = new JobSession()): Seg
     }
     const { rule, memo } = session.ruleOf(input.ruleText)
     const problem: SearchProblem = {
-      polytopes: polytopeSource(input.polytopes, session.forms),
+      polytopes: session.sourceOf(input.polytopes),
       rule,
       method: input.method,
       settings: checkedSettings(input.settings),
@@ -128,10 +139,7 @@ export function previewChunk(
 ): PreviewOutput {
   return guarded(() => {
     const { rule, memo } = session.ruleOf(input.ruleText)
-    const problem = nullProblem(
-      { polytopes: polytopeSource(input.polytopes, session.forms), rule },
-      input.size,
-    )
+    const problem = nullProblem({ polytopes: session.sourceOf(input.polytopes), rule }, input.size)
     const rows: PreviewRow[] = []
     let costs: StageCosts = {}
     const before = input.state === null ? startState(problem, input.seed) : checkedState(input.state)

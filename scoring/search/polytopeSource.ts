@@ -18,13 +18,15 @@ export interface PolytopeEntry {
 }
 
 /**
- * Normal forms by key, at most `limit` of them; the one used longest ago makes room. Shared by the segments of
- * one worker. What it holds never changes a result, only the time it takes.
+ * Normal forms by key, as many as hold `limit` points together (and the last one in any case); the one used
+ * longest ago makes room. Shared by the segments of one worker. What it holds never changes a result, only the
+ * time it takes.
  */
 export class FormCache {
   private readonly forms = new Map<string, NormalForm>()
+  private points = 0
 
-  constructor(private readonly limit = 32) {}
+  constructor(private readonly limit = 10_000) {}
 
   form({ key, vertices }: PolytopeEntry, path = ''): NormalForm {
     const known = this.forms.get(key)
@@ -43,9 +45,11 @@ export class FormCache {
       )
     }
     this.forms.set(key, form)
-    for (const oldest of this.forms.keys()) {
-      if (this.forms.size <= this.limit) break
+    this.points += form.polytope.pointCount
+    for (const [oldest, { polytope }] of this.forms) {
+      if (this.points <= this.limit || this.forms.size === 1) break
       this.forms.delete(oldest)
+      this.points -= polytope.pointCount
     }
     return form
   }

@@ -15,16 +15,32 @@ export interface SearchProblem {
   readonly settings: SearchSettings
 }
 
+const scopeDigests = new WeakMap<readonly string[], string>()
+
+/** Hash of a scope's keys, in order; scopes may be long, so it is kept with the list. */
+function scopeDigest(keys: readonly string[]): string {
+  let digest = scopeDigests.get(keys)
+  if (digest === undefined) {
+    digest = hashOf(keys.join('\n'))
+    scopeDigests.set(keys, digest)
+  }
+  return digest
+}
+
+function hashOf(text: string): string {
+  return bytesToHex(sha256(utf8ToBytes(text)))
+}
+
 /**
  * 32 hexadecimal digits that say which problem a state belongs to: scope (in order), scoring hash (rule,
  * observables, engine), method and settings.
  */
 export function problemDigest({ polytopes, rule, method, settings }: SearchProblem): string {
   const content = JSON.stringify({
-    scope: polytopes.keys,
+    scope: scopeDigest(polytopes.keys),
     scoring: scoringHash(rule, engineVersion),
     method,
     settings: Object.entries(settings).sort(([a], [b]) => (a < b ? -1 : 1)),
   })
-  return bytesToHex(sha256(utf8ToBytes(content))).slice(0, 32)
+  return hashOf(content).slice(0, 32)
 }

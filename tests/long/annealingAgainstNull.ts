@@ -52,10 +52,12 @@ async function finalOf(method: string, seed: number): Promise<{ final: Final; se
   return { final: lines[lines.length - 1] as Final, seconds: (performance.now() - begun) / 1000 }
 }
 
+const shown = (score: number | null): string => (score === null ? '-' : score.toFixed(3))
+
 /** Best score after so many evaluations of both islands together. */
 function after(curve: readonly [number, number][], evaluations: number): string {
   const reached = curve.filter(([at]) => at <= evaluations).at(-1)
-  return reached === undefined ? '-' : reached[1].toFixed(3)
+  return shown(reached?.[1] ?? null)
 }
 
 print(`${availableParallelism()} cores; ${values.polytope}; ${values.rule}; ${budget} evaluations`)
@@ -68,15 +70,15 @@ for (let seed = 1; seed <= seeds; seed++) {
   const search = await finalOf('annealing', seed)
   const random = await finalOf('random', seed)
   const { best, evaluations, curve } = search.final.progress
-  if (best > random.final.progress.best) won++
+  if ((best ?? -Infinity) > (random.final.progress.best ?? -Infinity)) won++
   if (search.seconds > 20) slow++
   if (seed === 1) {
     repeats = JSON.stringify((await finalOf('annealing', seed)).final) === JSON.stringify(search.final)
   }
   print(
-    `seed ${seed}: best ${best.toFixed(3)} of ${evaluations} in ${search.seconds.toFixed(1)} s ` +
+    `seed ${seed}: best ${shown(best)} of ${evaluations} in ${search.seconds.toFixed(1)} s ` +
       `(after 90: ${after(curve, 90)}, 300: ${after(curve, 300)}, 1000: ${after(curve, 1000)}); ` +
-      `null ${random.final.progress.best.toFixed(3)} in ${random.seconds.toFixed(1)} s`,
+      `null ${shown(random.final.progress.best)} in ${random.seconds.toFixed(1)} s`,
   )
 }
 await threads.close()
