@@ -111,7 +111,9 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
         () => document.documentElement.scrollWidth - document.documentElement.clientWidth,
       )
       expect(overflow, 'horizontal overflow in px').toBeLessThanOrEqual(0)
+      // Typeset formulas are KaTeX's own markup, thousands of nodes on the reference page.
       const { violations } = await new AxeBuilder({ page })
+        .exclude('.katex')
         .withTags(['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa'])
         .analyze()
       expect(
