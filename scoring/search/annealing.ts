@@ -4,23 +4,26 @@ import { InvariantError } from '../errors.ts'
 import { isAccepted } from './acceptance.ts'
 import { Cooling, type CoolingState } from './cooling.ts'
 import { codeOfHeights, heightsOfCode } from './heightsCode.ts'
-import { undefinedKind, type Merit } from './merit.ts'
+import { compareMerits, undefinedKind, type Merit } from './merit.ts'
 import type { Chain, Method, Proposal, Run } from './method.ts'
-import { exchangeCount, randomMove } from './moves.ts'
+import { MoveBook } from './moveBook.ts'
+import { exchangeCount, moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
 import { drawNull, proposalOf, type PlacedHeights } from './sampling.ts'
 import type { Json } from './state.ts'
 
-/** Moves at the beginning of a descent that are taken whatever they bring. */
-const freeMoves = 16
+/** A descent begins at the best of so many random candidates, but with no more than a twentieth of its budget. */
+const scouts = 6
 
 /** Share of hops to another polytope at the beginning and at the end of a descent. */
 const [hopsFirst, hopsLast] = [0.3, 0.06]
 
 interface AnnealingState {
   readonly descent: number
-  readonly freeMoves: number
+  /** Random candidates that the descent has looked at. */
+  readonly scouted: number
   readonly cooling: CoolingState
+  readonly moves: readonly number[]
   readonly book: string
   /** Where the chain stands; null before its first start. */
   readonly place: {
@@ -40,15 +43,16 @@ interface AnnealingState {
 export const annealing: Method = {
   name: 'annealing',
   description:
-    'Simulated annealing over heights: exchanges of one diagonal, noise on a 2-face, a point or all points, hops between polytopes.',
+    'Simulated annealing over heights: exchanges of one diagonal, noise on points, 2-faces or everywhere, hops between polytopes.',
   open: (run, state) => new AnnealingChain(run, state as unknown as AnnealingState | null),
 }
 
 class AnnealingChain implements Chain {
   private readonly book: PolytopeBook
   private readonly cooling: Cooling
+  private readonly moveBook: MoveBook
   private descent: number
-  private freeMoves: number
+  private scouted: number
   private polytope = -1
   private place: PlacedHeights | undefined
   private merit: Merit = { kind: undefinedKind, value: 0 }
@@ -59,8 +63,9 @@ class AnnealingChain implements Chain {
   ) {
     this.book = new PolytopeBook(run, state?.book)
     this.cooling = new Cooling(state?.cooling)
+    this.moveBook = new MoveBook(moves.length, state?.moves)
     this.descent = state?.descent ?? 0
-    this.freeMoves = state?.freeMoves ?? 0
+    this.scouted = state?.scouted ?? 0
     if (state === null || state.place === null) return
     const { polytope, heights, kind, value } = state.place
     const restored = heightsOfCode(heights)
@@ -75,8 +80,9 @@ class AnnealingChain implements Chain {
     const { polytope, place, merit } = this
     const state: AnnealingState = {
       descent: this.descent,
-      freeMoves: this.freeMoves,
+      scouted: this.scouted,
       cooling: this.cooling.state(),
+      moves: this.moveBook.state(),
       book: this.book.code(),
       place: place === undefined ? null : { polytope, heights: codeOfHeights(place.heights), ...merit },
     }
@@ -89,9 +95,11 @@ class AnnealingChain implements Chain {
       run.end(book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
     } else if (place === undefined || this.nextDescent() || book.isSpent(this.polytope)) {
       this.begin()
+    } else if (this.scouted < Math.min(scouts, this.descentLength() / 20)) {
+      this.scouted++
+      this.hop(true)
     } else if (run.polytopeCount > 1 && run.stream.uniform() < this.hopShare()) {
-      const polytope = book.draw()
-      if (polytope >= 0) this.hop(polytope)
+      this.hop(false)
     } else {
       this.move(place)
     }
@@ -103,16 +111,21 @@ class AnnealingChain implements Chain {
     const polytope = book.draw()
     if (polytope < 0) return
     if (this.place !== undefined) run.countRestart()
-    this.freeMoves = 0
+    this.scouted = 1
     const start = drawNull(run.form(polytope).polytope, run.stream)
     const merit = this.judged(polytope, proposalOf(start))
     if (merit !== null) this.stand(polytope, start, merit)
   }
 
-  private hop(polytope: number): void {
+  /** A random candidate on a polytope drawn from the open ones. */
+  private hop(onlyBetter: boolean): void {
+    const polytope = this.book.draw()
+    if (polytope < 0) return
     const start = drawNull(this.run.form(polytope).polytope, this.run.stream)
     const merit = this.judged(polytope, proposalOf(start))
-    if (merit !== null && this.accepts(merit)) this.stand(polytope, start, merit)
+    if (merit === null) return
+    const accepted = onlyBetter ? compareMerits(merit, this.merit) < 0 : this.accepts(merit)
+    if (accepted) this.stand(polytope, start, merit)
   }
 
   private move(place: PlacedHeights): void {
@@ -122,14 +135,20 @@ class AnnealingChain implements Chain {
       book.spend(polytope)
       return
     }
-    const proposal = randomMove(place, run.stream)
+    const kind = this.moveBook.draw(run.stream)
+    const proposal = moves[kind](place, run.stream)
     if (proposal === undefined || proposal.class === place.class) {
       const heights = proposal?.heights()
       if (heights !== undefined) this.place = { class: place.class, heights }
       book.stall(polytope)
+      this.moveBook.learn(kind, 0)
       return
     }
+    const before = run.evaluations
     const merit = this.judged(polytope, proposal)
+    // Only what is new is worth something: going back and forth between two classes must not look like a climb.
+    const isNew = run.evaluations > before
+    this.moveBook.learn(kind, merit !== null && isNew ? this.cooling.gain(this.merit, merit) : 0)
     if (merit === null) return
     this.cooling.learn(this.merit, merit)
     if (!this.accepts(merit)) return
@@ -145,10 +164,6 @@ class AnnealingChain implements Chain {
   }
 
   private accepts(merit: Merit): boolean {
-    if (this.freeMoves < Math.min(freeMoves, this.descentLength() / 10)) {
-      this.freeMoves++
-      return true
-    }
     const stall = this.place === undefined ? 0 : this.run.stalled / (30 + exchangeCount(this.place))
     const temperatures = this.cooling.temperatures(this.progress(), stall)
     return isAccepted(this.merit, merit, temperatures, this.run.stream.uniform())

@@ -11,7 +11,7 @@ export interface CoolingState {
 const enough = 16
 
 /** First and last temperature in units of the median difference. Found by trial, and not critical. */
-const [hot, cold] = [0.4, 0.04]
+const [hot, cold] = [0.15, 0.04]
 
 /**
  * Temperatures of a descent. The scale is set by the rule itself: the median of the first differences between
@@ -37,6 +37,14 @@ export class Cooling {
     const differences = current.kind === feasibleKind ? this.scores : this.shortfalls
     const difference = Math.abs(proposed.value - current.value)
     if (difference > 0 && differences.length < enough) differences.push(difference)
+  }
+
+  /** How much better a proposed step is, 0 to 1: in units of the usual difference, and 1 for a better kind. */
+  gain(current: Merit, proposed: Merit): number {
+    if (proposed.kind !== current.kind) return proposed.kind > current.kind ? 1 : 0
+    const gain = proposed.value - current.value
+    if (!(gain > 0)) return 0
+    return Math.min(1, gain / medianOr(current.kind === feasibleKind ? this.scores : this.shortfalls, gain))
   }
 
   /**

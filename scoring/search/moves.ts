@@ -7,29 +7,23 @@ import type { Proposal } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
 import { proposalOf, type PlacedHeights } from './sampling.ts'
 
-/** How often each move is tried; the rest is noise on all points. Found by trial, and not critical. */
-const shares = { exchange: 0.7, face: 0.15, point: 0.07 } as const
-
-/** Noise has a width of 2^-5 to 2^-14 of the largest height, log-uniformly. */
-const [widest, narrowest] = [5, 14]
+/** One kind of random step from a place. Undefined when it leads nowhere; the class may be the old one. */
+export type Move = (place: PlacedHeights, stream: RandomStream) => Proposal | undefined
 
 /**
- * One random step from a place: as a rule the exchange of one diagonal (across one wall of the class), else
- * normal noise on the heights of one 2-face, of one point or of all points. Undefined when the step leads
- * nowhere; the class may be the old one.
+ * All kinds of steps: the exchange of one diagonal (across one wall of the class), and normal noise on few
+ * points, on 2-faces or everywhere, wide or narrow. Widths are powers of two in units of the largest height.
  */
-export function randomMove(place: PlacedHeights, stream: RandomStream): Proposal | undefined {
-  const { twoFaces } = place.class.polytope
-  const kind = stream.uniform()
-  if (kind < shares.exchange) return exchanged(place, stream)
-  if (kind < shares.exchange + shares.face) {
-    return shaken(place, stream, twoFaces[stream.below(twoFaces.length)].points)
-  }
-  if (kind < shares.exchange + shares.face + shares.point) {
-    return shaken(place, stream, [stream.below(place.heights.length)])
-  }
-  return shaken(place, stream, place.heights.keys())
-}
+export const moves: readonly Move[] = [
+  exchanged,
+  (place, stream) => shaken(place, stream, somePoints(place, stream, 1), 0, 10),
+  (place, stream) => shaken(place, stream, somePoints(place, stream, 3), 0, 10),
+  (place, stream) => shaken(place, stream, someFaces(place, stream, 1), 2, 7),
+  (place, stream) => shaken(place, stream, someFaces(place, stream, 1), 7, 12),
+  (place, stream) => shaken(place, stream, someFaces(place, stream, 3), 4, 10),
+  (place, stream) => shaken(place, stream, place.heights.keys(), 2, 8),
+  (place, stream) => shaken(place, stream, place.heights.keys(), 8, 16),
+]
 
 /** Number of diagonals that can be exchanged. */
 export function exchangeCount(place: PlacedHeights): number {
@@ -67,9 +61,29 @@ function exchanged(place: PlacedHeights, stream: RandomStream): Proposal | undef
   }
 }
 
-/** Normal noise on the heights of some points, the step halved until the heights are fine. */
-function shaken(place: PlacedHeights, stream: RandomStream, points: Iterable<number>): Proposal | undefined {
-  const width = searchHeightBound * 2 ** -(widest + (narrowest - widest) * stream.uniform())
+function somePoints({ heights }: PlacedHeights, stream: RandomStream, count: number): number[] {
+  return Array.from({ length: count }, () => stream.below(heights.length))
+}
+
+function someFaces(place: PlacedHeights, stream: RandomStream, count: number): number[] {
+  const { twoFaces } = place.class.polytope
+  return Array.from({ length: count }, () => twoFaces[stream.below(twoFaces.length)]).flatMap((face) => [
+    ...face.points,
+  ])
+}
+
+/**
+ * Normal noise on the heights of some points, of width 2^-wide to 2^-narrow of the largest height, the step halved
+ * until the heights are fine.
+ */
+function shaken(
+  place: PlacedHeights,
+  stream: RandomStream,
+  points: Iterable<number>,
+  wide: number,
+  narrow: number,
+): Proposal | undefined {
+  const width = searchHeightBound * 2 ** -(wide + (narrow - wide) * stream.uniform())
   const towards = Float64Array.from(place.heights)
   for (const p of points) towards[p] += width * stream.gaussian()
   const step = clampToFine(place.class.polytope, place.heights, towards, place.class)
