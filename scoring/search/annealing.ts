@@ -42,6 +42,7 @@ interface AnnealingState {
  */
 export const annealing: Method = {
   name: 'annealing',
+  version: 1,
   description:
     'Simulated annealing over heights: exchanges of one diagonal, noise on points, 2-faces or everywhere, hops between polytopes.',
   open: (run, state) => new AnnealingChain(run, state as unknown as AnnealingState | null),

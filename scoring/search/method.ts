@@ -56,6 +56,8 @@ export interface Chain {
 /** A way to search. One file per method; `methods.ts` lists them. */
 export interface Method {
   readonly name: string
+  /** Raised whenever the same state would go on differently; states of another version are refused. */
+  readonly version: number
   /** One line, for people. */
   readonly description: string
   /** A chain from its stored state; null: at its start. */

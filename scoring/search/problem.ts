@@ -3,7 +3,7 @@ import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import { scoringHash } from '../rules/hash.ts'
 import { engineVersion } from '../version.ts'
-import type { MethodName } from './methods.ts'
+import { methods, type MethodName } from './methods.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
 import type { SearchSettings } from './settings.ts'
 
@@ -39,7 +39,7 @@ export function problemDigest({ polytopes, rule, method, settings }: SearchProbl
   const content = JSON.stringify({
     scope: scopeDigest(polytopes.keys),
     scoring: scoringHash(rule, engineVersion),
-    method,
+    method: [method, methods[method].version],
     settings: Object.entries(settings).sort(([a], [b]) => (a < b ? -1 : 1)),
   })
   return hashOf(content).slice(0, 32)

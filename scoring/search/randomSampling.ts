@@ -7,6 +7,7 @@ import { drawNull, nullLaw, proposalOf } from './sampling.ts'
  */
 export const randomSampling: Method = {
   name: 'random',
+  version: 1,
   description: `Independent random candidates. ${nullLaw.description}`,
   open(run) {
     return {
