@@ -1,5 +1,6 @@
 import { InputError } from '../scoring/index.ts'
-import { candidateGeometry } from './jobs/compute/candidateGeometry.ts'
+import { candidateGeometry, candidateSpectra } from './jobs/compute/candidateGeometry.ts'
+import { classPictures } from './jobs/compute/classPictures.ts'
 import { factsOfEach, factsOfWeights, pointBlocks } from './jobs/compute/importBlocks.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
@@ -11,6 +12,8 @@ const tasks: Tasks = {
   'facts-of-weights': factsOfWeights,
   'polytope-shape': polytopeShape,
   'candidate-geometry': candidateGeometry,
+  'candidate-spectra': candidateSpectra,
+  'class-pictures': classPictures,
   'search-segment': searchSegment,
   'null-chunk': nullChunk,
   'preview-chunk': previewChunk,

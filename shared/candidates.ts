@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { polytopeDetailSchema } from './polytopes.ts'
+import { polytopeDetailSchema, twoFaceSchema } from './polytopes.ts'
 import { outcomeSchema } from './outcomes.ts'
 import { verdictSchema } from './verdicts.ts'
 
@@ -38,13 +38,47 @@ export const candidateGeometrySchema = z.object({
     norm: z.number(),
     edgeCurvesSuffice: z.boolean(),
   }),
-  metric: z.object({
-    divisorSpectrum: z.array(z.number()),
-    basisSpectrum: z.array(z.number()),
-    basis: z.array(z.number().int()),
-  }),
+  /** Largest eigenvalue of the divisor spectrum. */
+  topEigenvalue: z.number(),
 })
 export type CandidateGeometry = z.infer<typeof candidateGeometrySchema>
+
+/**
+ * GET /api/candidates/:key/spectra: the whole spectra of the field-space metric at the reference point, ascending.
+ * Apart from the rest, because a full decomposition takes seconds at the largest h11.
+ */
+export const candidateSpectraSchema = z.object({
+  key: candidateKeySchema,
+  divisorSpectrum: z.array(z.number()),
+  basisSpectrum: z.array(z.number()),
+  basis: z.array(z.number().int()),
+})
+export type CandidateSpectra = z.infer<typeof candidateSpectraSchema>
+
+/** The largest 2-faces of a candidate with their triangles: as much as a small picture shows. */
+export const classPictureSchema = z.object({
+  key: candidateKeySchema,
+  faces: z.array(
+    twoFaceSchema.extend({
+      /** Of the 2-face in its polytope. */
+      index: z.number().int(),
+      triangles: z.array(z.tuple([z.number().int(), z.number().int(), z.number().int()])),
+    }),
+  ),
+  /** The distinct dual lengths of all 2-faces, ascending: they set the colours. */
+  dualLengths: z.array(z.number().int()),
+})
+export type ClassPicture = z.infer<typeof classPictureSchema>
+
+export const classPicturesLimit = 60
+
+/** GET /api/candidates/pictures?keys=KEY,KEY,...; candidates the reader may not see are left out. */
+export const classPicturesQuerySchema = z.object({
+  keys: z
+    .string()
+    .transform((text) => text.split(','))
+    .pipe(z.array(candidateKeySchema).min(1).max(classPicturesLimit)),
+})
 
 /** GET /api/campaigns/:campaign/candidates/:key: what this campaign knows of the candidate. */
 export const candidateRecordSchema = z.object({

@@ -34,6 +34,11 @@ export interface Endpoint<A extends Access, Body, Query, Answer> {
   /** Schema of the answer. Without it the handler writes the response itself, or leaves it empty (204). */
   readonly answer?: z.ZodType<Answer>
   readonly status?: number
+  /**
+   * The answer hardly ever changes: a browser keeps it and asks each time, with its tag, whether it still holds. Who
+   * may read it is decided anew each time.
+   */
+  readonly lasting?: boolean
   /** Largest JSON body in bytes. */
   readonly bodyLimit?: number
   /** Middleware after the access check and before the handler. */
@@ -76,6 +81,7 @@ export function endpoint<A extends Access, Body = undefined, Query = undefined, 
       response.status(definition.status ?? 204).end()
       return
     }
+    if (definition.lasting) response.set('Cache-Control', 'private, no-cache')
     if (context.checkAnswers) definition.answer.parse(answer)
     response.status(definition.status ?? 200).json(answer)
   }

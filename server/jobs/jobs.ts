@@ -1,3 +1,4 @@
+import type { CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
 import type { ComputedGeometry } from './compute/candidateGeometry.ts'
 import type { PolytopeShape } from './compute/polytopeShape.ts'
 import { RecentResults } from '../services/recentResults.ts'
@@ -13,12 +14,16 @@ export interface Jobs {
   readonly scheduler: Scheduler
   readonly background: ComputePool
   readonly interactive: ComputePool
+  /** A thread for what somebody waits for, but that takes seconds at the largest h11: whole spectra. */
+  readonly unhurried: ComputePool
   readonly searches: SearchRunner
   readonly previews: Previews
   /** What polytope pages show, by polytope key. */
   readonly shapes: RecentResults<PolytopeShape>
   /** Dossiers, by candidate key. */
   readonly geometries: RecentResults<ComputedGeometry>
+  readonly spectra: RecentResults<Omit<CandidateSpectra, 'key'>>
+  readonly pictures: RecentResults<ClassPicture>
   close(): Promise<void>
 }
 
@@ -53,6 +58,7 @@ export function openJobs(
     ...(options.heapMegabytes ? { heapMegabytes: options.heapMegabytes } : {}),
   })
   const interactive = new ComputePool({ threads: 1, nice: interactiveNice, log })
+  const unhurried = new ComputePool({ threads: 1, nice: backgroundNice, log })
   const scheduler = new Scheduler(workers)
   const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
   const searches = new SearchRunner(all, new NullSampler(all, options.nullSize))
@@ -60,15 +66,18 @@ export function openJobs(
     scheduler,
     background,
     interactive,
+    unhurried,
     searches,
     previews: new Previews(all),
     shapes: new RecentResults(200),
     geometries: new RecentResults(60),
+    spectra: new RecentResults(200),
+    pictures: new RecentResults(500),
     close: async () => {
       closing.abort(new Error('The server is shutting down.'))
       scheduler.stop()
       searches.stop()
-      await Promise.all([background.close(), interactive.close()])
+      await Promise.all([background.close(), interactive.close(), unhurried.close()])
     },
   }
 }

@@ -1,4 +1,5 @@
-import type { candidateGeometry } from './compute/candidateGeometry.ts'
+import type { candidateGeometry, candidateSpectra } from './compute/candidateGeometry.ts'
+import type { classPictures } from './compute/classPictures.ts'
 import type { factsOfEach, factsOfWeights, pointBlocks } from './compute/importBlocks.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
@@ -10,6 +11,8 @@ export interface Tasks {
   'facts-of-weights': typeof factsOfWeights
   'polytope-shape': typeof polytopeShape
   'candidate-geometry': typeof candidateGeometry
+  'candidate-spectra': typeof candidateSpectra
+  'class-pictures': typeof classPictures
   'search-segment': typeof searchSegment
   'null-chunk': typeof nullChunk
   'preview-chunk': typeof previewChunk

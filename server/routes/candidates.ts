@@ -1,19 +1,46 @@
 import type { Express } from 'express'
-import { candidateGeometrySchema, candidateRecordSchema } from '../../shared/candidates.ts'
+import { z } from 'zod'
+import {
+  candidateGeometrySchema,
+  candidateRecordSchema,
+  candidateSpectraSchema,
+  classPictureSchema,
+  classPicturesQuerySchema,
+} from '../../shared/candidates.ts'
 import { giveVerdictSchema, verdictSchema } from '../../shared/verdicts.ts'
 import type { ServerContext } from '../context.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
 import { readCandidateRecord } from '../services/candidates.ts'
-import { readCandidateGeometry } from '../services/geometry.ts'
+import { readCandidateGeometry, readCandidateSpectra, readClassPictures } from '../services/geometry.ts'
 import { giveVerdict } from '../services/verdicts.ts'
 
 export function candidateRoutes(app: Express, context: ServerContext): void {
   endpoint(app, context, {
     method: 'get',
+    path: '/api/candidates/pictures',
+    access: 'account',
+    query: classPicturesQuerySchema,
+    answer: z.array(classPictureSchema),
+    lasting: true,
+    handle: ({ account, query }) => readClassPictures(context, account.id, query.keys),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/candidates/:key/spectra',
+    access: 'account',
+    answer: candidateSpectraSchema,
+    lasting: true,
+    handle: ({ account, params }) => readCandidateSpectra(context, account.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
     path: '/api/candidates/:key',
     access: 'account',
     answer: candidateGeometrySchema,
+    lasting: true,
     handle: ({ account, params }) => readCandidateGeometry(context, account.id, params.key),
   })
 

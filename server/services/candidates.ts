@@ -7,28 +7,37 @@ import { notFound } from '../problems.ts'
 import type { Viewer } from './polytopes.ts'
 import { listVerdicts } from './verdicts.ts'
 
+/** Those of the keys that name stored candidates on polytopes that the viewer may see, with the polytopes loaded. */
+export function listVisibleCandidates(
+  manager: EntityManager,
+  viewer: Viewer,
+  keys: readonly string[],
+): Promise<CandidateRecord[]> {
+  const imports =
+    'campaignId' in viewer
+      ? 'SELECT i.polytopeKey FROM campaign_polytope i WHERE i.campaignId = :campaignId'
+      : `SELECT i.polytopeKey FROM campaign_polytope i JOIN membership m ON m.campaignId = i.campaignId
+         WHERE m.accountId = :accountId`
+  return manager
+    .createQueryBuilder(CandidateRecord, 'candidate')
+    .innerJoinAndSelect('candidate.polytope', 'polytope')
+    .where('candidate.key IN (:...keys)', { keys })
+    .andWhere(
+      new Brackets((either) =>
+        either.where("polytope.origin = 'bundled'").orWhere(`polytope.key IN (${imports})`, viewer),
+      ),
+    )
+    .getMany()
+}
+
 /** A stored candidate on a polytope that the viewer may see, with the polytope loaded. */
 export async function readVisibleCandidate(
   manager: EntityManager,
   viewer: Viewer,
   key: string,
 ): Promise<CandidateRecord> {
-  const imports =
-    'campaignId' in viewer
-      ? 'SELECT i.polytopeKey FROM campaign_polytope i WHERE i.campaignId = :campaignId'
-      : `SELECT i.polytopeKey FROM campaign_polytope i JOIN membership m ON m.campaignId = i.campaignId
-         WHERE m.accountId = :accountId`
-  const candidate = await manager
-    .createQueryBuilder(CandidateRecord, 'candidate')
-    .innerJoinAndSelect('candidate.polytope', 'polytope')
-    .where('candidate.key = :key', { key })
-    .andWhere(
-      new Brackets((either) =>
-        either.where("polytope.origin = 'bundled'").orWhere(`polytope.key IN (${imports})`, viewer),
-      ),
-    )
-    .getOne()
-  if (candidate === null) throw notFound('candidate')
+  const [candidate] = await listVisibleCandidates(manager, viewer, [key])
+  if (!candidate) throw notFound('candidate')
   return candidate
 }
 

@@ -1,8 +1,10 @@
-import type { CandidateGeometry } from '../../shared/candidates.ts'
+import type { CandidateGeometry, CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
 import type { PolytopeDetail } from '../../shared/polytopes.ts'
 import type { ServerContext } from '../context.ts'
 import { presentPolytopeRow } from '../presenters/polytopes.ts'
-import { readVisibleCandidate } from './candidates.ts'
+import type { CandidateRecord } from '../entities/candidate.ts'
+import type { CandidateGeometryInput } from '../jobs/compute/candidateGeometry.ts'
+import { listVisibleCandidates, readVisibleCandidate } from './candidates.ts'
 import { readPolytope, visible, type Viewer } from './polytopes.ts'
 
 /** A polytope's page: its row in the library, and what is computed from its vertices. */
@@ -29,11 +31,59 @@ export async function readCandidateGeometry(
 ): Promise<CandidateGeometry> {
   const { source, jobs } = context
   const candidate = await readVisibleCandidate(source.manager, { accountId }, key)
-  const vertices = candidate.polytope?.coordinates
-  if (!vertices) throw new Error('The candidate was read without its polytope.')
   const polytope = await readPolytopeDetail(context, { accountId }, candidate.polytopeKey)
   const geometry = await jobs.geometries.get(key, () =>
-    jobs.interactive.run('candidate-geometry', { key, vertices, heights: candidate.heights }),
+    jobs.interactive.run('candidate-geometry', inputOf(candidate)),
   )
   return { key, polytope, ...geometry }
+}
+
+/** The whole spectra of the field-space metric, for everybody who may see the polytope. */
+export async function readCandidateSpectra(
+  { source, jobs }: ServerContext,
+  accountId: string,
+  key: string,
+): Promise<CandidateSpectra> {
+  const candidate = await readVisibleCandidate(source.manager, { accountId }, key)
+  const spectra = await jobs.spectra.get(key, () =>
+    jobs.unhurried.run('candidate-spectra', inputOf(candidate)),
+  )
+  return { key, ...spectra }
+}
+
+/** Pictures of those of the candidates that the account may see; one computation per polytope. */
+export async function readClassPictures(
+  { source, jobs }: ServerContext,
+  accountId: string,
+  keys: readonly string[],
+): Promise<ClassPicture[]> {
+  const candidates = await listVisibleCandidates(source.manager, { accountId }, keys)
+  const polytopes = new Map<string, CandidateGeometryInput[]>()
+  for (const candidate of candidates) {
+    const { polytopeKey } = candidate
+    polytopes.set(polytopeKey, [...(polytopes.get(polytopeKey) ?? []), inputOf(candidate)])
+  }
+  const pictures = [...polytopes.values()].map(async (inputs) => {
+    const missing = inputs.filter(({ key }) => !jobs.pictures.has(key))
+    const drawn =
+      missing.length === 0
+        ? null
+        : jobs.interactive.run('class-pictures', { vertices: missing[0].vertices, candidates: missing })
+    return Promise.all(
+      inputs.map((input) =>
+        jobs.pictures.get(input.key, async () => {
+          const picture = (await drawn)?.find(({ key }) => key === input.key)
+          if (!picture) throw new Error(`Candidate ${input.key} was not drawn.`)
+          return picture
+        }),
+      ),
+    )
+  })
+  return (await Promise.all(pictures)).flat()
+}
+
+/** @param candidate with its polytope loaded */
+function inputOf({ key, heights, polytope }: CandidateRecord): CandidateGeometryInput {
+  if (!polytope) throw new Error('The candidate was read without its polytope.')
+  return { key, vertices: polytope.coordinates, heights }
 }

@@ -7,6 +7,10 @@ export class RecentResults<Result> {
     this.#capacity = capacity
   }
 
+  has(address: string): boolean {
+    return this.#results.has(address)
+  }
+
   get(address: string, compute: () => Promise<Result>): Promise<Result> {
     const known = this.#results.get(address)
     this.#results.delete(address)

@@ -77,7 +77,7 @@ function applySearch(client: QueryClient, campaign: string, event: StreamEvent &
 }
 
 /** What never goes stale, and what would start work anew. */
-const lasting = new Set(['candidate', 'preview', 'preview-start'])
+const lasting = new Set(['candidate', 'candidate-spectra', 'class-picture', 'preview', 'preview-start'])
 
 /** Keeps the tab's stream open for a campaign; returns its state. */
 export function useLiveEvents(campaign: string | null, enabled: boolean): StreamState {

@@ -1,5 +1,7 @@
+import request from 'supertest'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { caution } from '../../shared/caution.ts'
+import type { CandidateGeometry, ClassPicture } from '../../shared/candidates.ts'
 import type { SearchDetail } from '../../shared/searches.ts'
 import type { ShortlistDetail } from '../../shared/shortlists.ts'
 import type { StreamEvent } from '../../shared/events.ts'
@@ -261,11 +263,14 @@ describe('a shortlist', () => {
     const stranger = await server.signIn('stranger')
     const { body } = await stranger.get(`/api/candidates/${candidateKey}`).expect(200)
     expect(body.polytope.key).toBe(polytopeKey)
-    const { divisorSpectrum } = body.metric
+    const { divisorSpectrum } = (await stranger.get(`/api/candidates/${candidateKey}/spectra`).expect(200))
+      .body
+    expect(divisorSpectrum).toHaveLength(body.polytope.points - 4)
     expect(outcome.kind).toBe('feasible')
     if (outcome.kind !== 'feasible') return
     // The spectrum by full decomposition against the score's top eigenvalue by iteration.
     expect(Math.log10(divisorSpectrum.at(-1))).toBeCloseTo(outcome.score, 8)
+    expect(Math.log10(body.topEigenvalue)).toBe(outcome.score)
     expect(body.reference.volume).toBeCloseTo(outcome.report.volume as number, 8)
     const triples = body.intersections.filter(([i, j, k]: number[]) => i < j && j < k)
     expect(triples).toHaveLength(body.triangles.length)
@@ -274,6 +279,36 @@ describe('a shortlist', () => {
     const euler = sum(triples.map(([, , , value]: number[]) => value)) - sum(body.secondChern)
     expect(euler).toBe(body.polytope.euler)
     await stranger.get(`/api/candidates/${'0'.repeat(32)}`).expect(404)
+  })
+
+  it('draws small pictures of many candidates in one request, as the dossiers have them', async () => {
+    const keys = shortlist.rows.slice(0, 5).map(({ candidateKey }) => candidateKey)
+    const unknown = '0'.repeat(32)
+    const stranger = await server.signIn('stranger')
+    const { body } = await stranger
+      .get(`/api/candidates/pictures?keys=${[...keys, unknown].join(',')}`)
+      .expect(200)
+    const pictures = body as ClassPicture[]
+    expect(pictures.map(({ key }) => key).sort()).toEqual([...keys].sort())
+    const [{ key, faces }] = pictures
+    const dossier = (await stranger.get(`/api/candidates/${key}`).expect(200)).body as CandidateGeometry
+    const largest = Math.max(...dossier.polytope.twoFaces.map(({ area }) => area))
+    expect(faces).toHaveLength(2)
+    expect(faces[0].area).toBe(largest)
+    for (const { index, triangles, area } of faces) {
+      expect(triangles).toHaveLength(area)
+      expect(triangles).toEqual(dossier.triangles.filter((_, t) => dossier.faceOf[t] === index))
+    }
+    const bad = await stranger.get('/api/candidates/pictures?keys=nonsense')
+    expect([bad.status, bad.body.code]).toEqual([422, 'invalid-request'])
+  })
+
+  it('answers a browser that still holds a dossier without sending it again, but not a stranger to it', async () => {
+    const address = `/api/candidates/${shortlist.rows[0].candidateKey}`
+    const { headers } = await lead.get(address).expect(200)
+    expect(headers['cache-control']).toBe('private, no-cache')
+    await lead.get(address).set('If-None-Match', headers.etag).expect(304)
+    await request(server.app).get(address).set('If-None-Match', headers.etag).expect(401)
   })
 
   it('takes verdicts, keeps their history and counts the latest', async () => {

@@ -8,7 +8,7 @@ import {
   type Candidate,
   type IntersectionNumbers,
 } from '../../../scoring/index.ts'
-import type { CandidateGeometry } from '../../../shared/candidates.ts'
+import type { CandidateGeometry, CandidateSpectra } from '../../../shared/candidates.ts'
 
 export interface CandidateGeometryInput {
   readonly key: string
@@ -20,8 +20,8 @@ export interface CandidateGeometryInput {
 /** A candidate's dossier but for what the library knows of its polytope. */
 export type ComputedGeometry = Omit<CandidateGeometry, 'key' | 'polytope'>
 
-/** Everything the dossier shows, on the canonical representative, at scale 1. */
-export function candidateGeometry({ key, vertices, heights }: CandidateGeometryInput): ComputedGeometry {
+/** The candidate that is stored under a key, on its canonical representative. */
+function storedCandidate({ key, vertices, heights }: CandidateGeometryInput): Candidate {
   const form = normalForm(polytopeFromPoints(vertices))
   const given = classFromHeights(form.polytope, heights)
   if (!given.fine) throw new InvariantError(`The stored heights of candidate ${key} are not fine.`)
@@ -31,15 +31,19 @@ export function candidateGeometry({ key, vertices, heights }: CandidateGeometryI
       `The stored heights of candidate ${key} give the class ${canonical.key}, or not its canonical form.`,
     )
   }
-  const candidate = buildCandidate(form, canonical.class, key)
+  return buildCandidate(form, canonical.class, key)
+}
+
+/** What the dossier shows but for the whole spectra, at scale 1. */
+export function candidateGeometry(input: CandidateGeometryInput): ComputedGeometry {
+  const candidate = storedCandidate(input)
   const numbers = candidate.numbers()
   const reference = candidate.reference()
   const volumes = candidate.volumes()
-  const basis = candidate.basisSpectrum()
   return {
-    heights: [...heights],
-    triangles: triples(canonical.class.triangles),
-    faceOf: [...canonical.class.faceOf],
+    heights: [...input.heights],
+    triangles: triples(candidate.class.triangles),
+    faceOf: [...candidate.class.faceOf],
     intersections: intersectionList(numbers),
     secondChern: [...numbers.secondChern],
     divisors: divisorList(candidate, numbers),
@@ -50,11 +54,18 @@ export function candidateGeometry({ key, vertices, heights }: CandidateGeometryI
       norm: Math.hypot(...reference.weights),
       edgeCurvesSuffice: reference.edgeCurvesSuffice,
     },
-    metric: {
-      divisorSpectrum: [...candidate.divisorSpectrum()],
-      basisSpectrum: [...basis.eigenvalues],
-      basis: [...basis.basis],
-    },
+    topEigenvalue: candidate.topEigenvalue(),
+  }
+}
+
+/** The whole spectra of the field-space metric at the reference point, scale 1. */
+export function candidateSpectra(input: CandidateGeometryInput): Omit<CandidateSpectra, 'key'> {
+  const candidate = storedCandidate(input)
+  const { eigenvalues, basis } = candidate.basisSpectrum()
+  return {
+    divisorSpectrum: [...candidate.divisorSpectrum()],
+    basisSpectrum: [...eigenvalues],
+    basis: [...basis],
   }
 }
 

@@ -21,7 +21,7 @@ export function polytopeShape({ vertices }: { readonly vertices: readonly number
   }
 }
 
-function presentTwoFace(face: TwoFace): PolytopeDetail['twoFaces'][number] {
+export function presentTwoFace(face: TwoFace): PolytopeDetail['twoFaces'][number] {
   return {
     dualLength: face.dualLength,
     points: [...face.points],

@@ -1,10 +1,44 @@
 import { useState } from 'react'
-import { type CandidateGeometry } from '../../../shared/candidates.ts'
+import { useQuery } from '@tanstack/react-query'
+import { type CandidateGeometry, type CandidateSpectra } from '../../../shared/candidates.ts'
+import { candidateSpectraQuery } from '../../api/candidates.ts'
 import { SpectrumPlot } from '../../components/charts/SpectrumPlot.tsx'
+import { Num } from '../../components/ui/Num.tsx'
+import { Failure } from '../../components/ui/States.tsx'
+import { useSeen } from '../../lib/useSeen.ts'
 
+/** The largest eigenvalue at once; the whole spectra when the reader comes near, since they take longer. */
 export function SpectrumSection({ geometry }: { geometry: CandidateGeometry }) {
+  const [place, seen] = useSeen()
+  const spectra = useQuery({ ...candidateSpectraQuery(geometry.key), enabled: seen })
+  return (
+    <div ref={place}>
+      <p className="mb-2">
+        Largest eigenvalue of the divisor spectrum: <Num value={geometry.topEigenvalue} digits={6} />
+      </p>
+      {spectra.data ? (
+        <Spectra spectra={spectra.data} />
+      ) : spectra.isError ? (
+        <Failure
+          title="Could not load the spectra."
+          error={spectra.error}
+          retry={() => void spectra.refetch()}
+        />
+      ) : (
+        <div
+          role="status"
+          aria-busy={seen}
+          className="grid h-72 animate-pulse place-items-center bg-null-wash text-soft"
+        >
+          Computing all {geometry.polytope.points - 4} eigenvalues…
+        </div>
+      )}
+    </div>
+  )
+}
+
+function Spectra({ spectra: { key, divisorSpectrum, basisSpectrum, basis } }: { spectra: CandidateSpectra }) {
   const [which, setWhich] = useState<'divisor' | 'basis'>('divisor')
-  const { divisorSpectrum, basisSpectrum, basis } = geometry.metric
   return (
     <div>
       <fieldset className="mb-2 flex flex-wrap gap-x-4">
@@ -21,14 +55,14 @@ export function SpectrumSection({ geometry }: { geometry: CandidateGeometry }) {
           key="divisor"
           title="Divisor spectrum"
           values={divisorSpectrum}
-          file={`divisor-spectrum-${geometry.key.slice(0, 10)}`}
+          file={`divisor-spectrum-${key.slice(0, 10)}`}
         />
       ) : (
         <SpectrumPlot
           key="basis"
           title="Basis spectrum"
           values={basisSpectrum}
-          file={`basis-spectrum-${geometry.key.slice(0, 10)}`}
+          file={`basis-spectrum-${key.slice(0, 10)}`}
         />
       )}
       <p className="prose-line mt-1 text-xs text-soft">
