@@ -25,6 +25,8 @@ export const targetDetailSchema = z.object({
   id: z.string(),
   name: z.string(),
   versions: z.array(targetVersionSchema),
+  /** Scope of the latest search with any version; null before the first one. */
+  latestScope: scopeSchema.nullable(),
 })
 export type TargetDetail = z.infer<typeof targetDetailSchema>
 

@@ -1,4 +1,5 @@
 import type { z } from 'zod'
+import type { Scope } from '../../shared/polytopes.ts'
 import type { TargetDetail, TargetSummary, targetVersionSchema } from '../../shared/targets.ts'
 import type { Target } from '../entities/target.ts'
 import type { TargetVersion } from '../entities/targetVersion.ts'
@@ -26,6 +27,10 @@ export function presentTargetSummary(target: Target, versions: readonly CountedV
   return { id: target.id, name: target.name, latest: presentVersion(versions[0]), versions: versions.length }
 }
 
-export function presentTarget(target: Target, versions: readonly CountedVersion[]): TargetDetail {
-  return { id: target.id, name: target.name, versions: versions.map(presentVersion) }
+export function presentTarget(
+  target: Target,
+  versions: readonly CountedVersion[],
+  latestScope: Scope | null,
+): TargetDetail {
+  return { id: target.id, name: target.name, versions: versions.map(presentVersion), latestScope }
 }

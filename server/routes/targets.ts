@@ -40,8 +40,8 @@ export function targetRoutes(app: Express, context: ServerContext): void {
     answer: targetDetailSchema,
     status: 201,
     handle: async ({ campaign, account, body }) => {
-      const { target, versions } = await createTarget(context, campaign.id, account.id, body)
-      return presentTarget(target, versions)
+      const { target, versions, latestScope } = await createTarget(context, campaign.id, account.id, body)
+      return presentTarget(target, versions, latestScope)
     },
   })
 
@@ -51,8 +51,8 @@ export function targetRoutes(app: Express, context: ServerContext): void {
     access: 'campaign.read',
     answer: targetDetailSchema,
     handle: async ({ campaign, params }) => {
-      const { target, versions } = await readTarget(manager, campaign.id, params.target)
-      return presentTarget(target, versions)
+      const { target, versions, latestScope } = await readTarget(manager, campaign.id, params.target)
+      return presentTarget(target, versions, latestScope)
     },
   })
 
@@ -63,8 +63,8 @@ export function targetRoutes(app: Express, context: ServerContext): void {
     body: renameTargetSchema,
     answer: targetDetailSchema,
     handle: async ({ campaign, params, body }) => {
-      const { target, versions } = await renameTarget(context, campaign.id, params.target, body.name)
-      return presentTarget(target, versions)
+      const { target, versions, latestScope } = await renameTarget(context, campaign.id, params.target, body.name)
+      return presentTarget(target, versions, latestScope)
     },
   })
 
@@ -76,14 +76,14 @@ export function targetRoutes(app: Express, context: ServerContext): void {
     answer: targetDetailSchema,
     status: 201,
     handle: async ({ campaign, account, params, body }) => {
-      const { target, versions } = await addVersion(
+      const { target, versions, latestScope } = await addVersion(
         context,
         campaign.id,
         params.target,
         account.id,
         body.text,
       )
-      return presentTarget(target, versions)
+      return presentTarget(target, versions, latestScope)
     },
   })
 

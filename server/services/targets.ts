@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto'
 import { In, type EntityManager } from 'typeorm'
+import type { Scope } from '../../shared/polytopes.ts'
 import type { ServerContext } from '../context.ts'
 import { Search } from '../entities/search.ts'
 import { Target } from '../entities/target.ts'
@@ -12,6 +13,11 @@ export interface TargetWithVersions {
   readonly target: Target
   /** Newest first. */
   readonly versions: readonly CountedVersion[]
+}
+
+/** One target, with the scope of its latest search. */
+export interface TargetWithScope extends TargetWithVersions {
+  readonly latestScope: Scope | null
 }
 
 /** The campaign's targets with all their versions, in order of creation. */
@@ -27,11 +33,16 @@ export async function readTarget(
   manager: EntityManager,
   campaignId: string,
   targetId: string,
-): Promise<TargetWithVersions> {
+): Promise<TargetWithScope> {
   const target = await manager.findOneBy(Target, { campaignId, id: targetId })
   if (target === null) throw notFound('target')
   const [found] = await withVersions(manager, [target])
-  return found
+  const latest = await manager.findOne(Search, {
+    select: { id: true, scope: true },
+    where: { campaignId, targetVersion: { targetId } },
+    order: { createdAt: 'DESC', id: 'ASC' },
+  })
+  return { ...found, latestScope: latest?.scope ?? null }
 }
 
 /** A version of a target of this campaign, with its target loaded. */
@@ -53,7 +64,7 @@ export async function createTarget(
   campaignId: string,
   authorId: string,
   input: { name: string; text: string },
-): Promise<TargetWithVersions> {
+): Promise<TargetWithScope> {
   const { scoringHash } = requireSoundRule(input.text)
   const now = new Date().toISOString()
   const target = { id: randomUUID(), campaignId, name: input.name, createdAt: now }
@@ -80,7 +91,7 @@ export async function addVersion(
   targetId: string,
   authorId: string,
   text: string,
-): Promise<TargetWithVersions> {
+): Promise<TargetWithScope> {
   const { scoringHash } = requireSoundRule(text)
   await writes.transaction(async (manager) => {
     if (!(await manager.existsBy(Target, { campaignId, id: targetId }))) throw notFound('target')
@@ -105,7 +116,7 @@ export async function renameTarget(
   campaignId: string,
   targetId: string,
   name: string,
-): Promise<TargetWithVersions> {
+): Promise<TargetWithScope> {
   await writes.transaction(async (manager) => {
     const { affected } = await manager.update(Target, { campaignId, id: targetId }, { name })
     if (affected === 0) throw notFound('target')

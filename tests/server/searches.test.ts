@@ -73,6 +73,7 @@ describe('targets', () => {
     const place = path(`/targets/${created.body.id}`)
     const same = await lead.post(`${place}/versions`).send({ text: 'score 1' }).expect(201)
     expect(same.body.versions).toHaveLength(1)
+    expect(same.body.latestScope).toBeNull()
     const next = await lead.post(`${place}/versions`).send({ text: 'score h11' }).expect(201)
     expect(next.body.versions.map(({ number }: { number: number }) => number)).toEqual([2, 1])
     const renamed = await lead.patch(place).send({ name: 'Other' }).expect(200)
@@ -106,6 +107,8 @@ describe('a search', () => {
     expect(done.progress.curve.at(-1)?.[1]).toBe(done.best)
     const list = await lead.get(path('/searches')).expect(200)
     expect(list.body.map(({ id }: { id: string }) => id)).toContain(created.id)
+    const target = await lead.get(path(`/targets/${targetId}`)).expect(200)
+    expect(target.body.latestScope).toEqual(scope)
   })
 
   it('gives the same result from the same seed, and another from another', async () => {

@@ -82,6 +82,7 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
       </PageHead>
       <Workbench
         campaign={campaign}
+        target={target}
         text={text}
         onText={setText}
         versions={<VersionList campaign={campaign} target={target} text={text} onTake={setText} />}

@@ -1,6 +1,7 @@
 import { useCallback, useMemo, useState, type ReactNode } from 'react'
 import { type EditorView } from '@codemirror/view'
 import { type Scope } from '../../../shared/polytopes.ts'
+import { type TargetDetail } from '../../../shared/targets.ts'
 import { checkRule, formatRule, parseRule } from '../../../scoring/index.ts'
 import { IssueList } from '../../components/editor/IssueList.tsx'
 import { ReferenceList } from '../../components/editor/ReferenceList.tsx'
@@ -16,6 +17,8 @@ import { useWorkScope } from './useWorkScope.ts'
 
 interface WorkbenchProps {
   campaign: string
+  /** The saved target that is worked on, if it is one. */
+  target?: TargetDetail
   text: string
   onText: (text: string) => void
   /** A further tab, for the versions of a saved target. */
@@ -23,10 +26,10 @@ interface WorkbenchProps {
 }
 
 /** Editor on the left, live answer on the right. */
-export function Workbench({ campaign, text, onText, versions }: WorkbenchProps) {
+export function Workbench({ campaign, target, text, onText, versions }: WorkbenchProps) {
   const [view, setView] = useState<EditorView | null>(null)
   const [tab, setTab] = useState('preview')
-  const [scope, setScope] = useWorkScope(campaign)
+  const [scope, setScope] = useWorkScope(target?.id ?? campaign, target?.latestScope ?? null)
   const [size, setSize] = useState(300)
   const check = useMemo(() => checkRule(text), [text])
   const preview = usePreview(campaign, { text, scope, size, seed: 1 }, check.ok)
