@@ -38,7 +38,7 @@ export async function readTarget(
   if (target === null) throw notFound('target')
   const [found] = await withVersions(manager, [target])
   const latest = await manager.findOne(Search, {
-    select: { id: true, scope: true },
+    select: { id: true, scope: true, createdAt: true },
     where: { campaignId, targetVersion: { targetId } },
     order: { createdAt: 'DESC', id: 'ASC' },
   })
