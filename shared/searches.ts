@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import type { MethodName } from '../scoring/index.ts'
 import { scopeSchema } from './polytopes.ts'
 import { nullSummarySchema } from './nullSamples.ts'
 import { scoredRowSchema } from './outcomes.ts'
@@ -6,12 +7,21 @@ import { scoredRowSchema } from './outcomes.ts'
 export const searchStates = ['queued', 'running', 'paused', 'finished', 'cancelled', 'failed'] as const
 export type SearchState = (typeof searchStates)[number]
 
+/** The methods of the engine, in the order in which they are offered, with a line on each. */
+export const searchMethods = {
+  annealing: 'Annealing: flips and height jitters, cooling with restarts',
+  exhaustive: 'Exhaustive: every class once; counts first, refuses more than the budget',
+  random: 'Random heights: no guidance, for comparison',
+} as const satisfies Record<MethodName, string>
+
+const methodNames = Object.keys(searchMethods) as [MethodName, ...MethodName[]]
+
 /** POST /api/campaigns/:campaign/searches */
 export const createSearchSchema = z.object({
   name: z.string().trim().max(80).optional(),
   targetVersionId: z.string(),
   scope: scopeSchema,
-  method: z.enum(['annealing', 'random']).default('annealing'),
+  method: z.enum(methodNames).default('annealing'),
   /** Distinct evaluations, over all islands. */
   budget: z.number().int().min(10).max(1_000_000),
   seed: z
@@ -26,6 +36,8 @@ export const createSearchSchema = z.object({
 export type CreateSearch = z.infer<typeof createSearchSchema>
 
 export const searchProgressSchema = z.object({
+  /** Evaluations the search is going to make at most; less than allowed where an exhaustive one has counted less. */
+  budget: z.number().int().optional(),
   evaluations: z.number().int(),
   proposals: z.number().int(),
   accepted: z.number().int(),

@@ -1,6 +1,7 @@
 import { findOf, type Find } from './find.ts'
 import { emptyHistogram } from './histogram.ts'
 import { Island, type IslandHooks, requireSameProblem } from './island.ts'
+import { methods } from './methods.ts'
 import { problemDigest, type SearchProblem } from './problem.ts'
 import { progressOf, type IslandProgress } from './progress.ts'
 import { seededState } from './randomStream.ts'
@@ -12,6 +13,7 @@ import type { SearchState } from './state.ts'
 export function startState(problem: SearchProblem, seed: number, island = 0): SearchState {
   const { settings, polytopes } = problem
   // Room is reckoned with the largest polytope that occurs; a scope of many is only looked at where it begins.
+  const slotsWanted = methods[problem.method].repeats === false ? 0 : 2 * islandBudget(settings, island)
   const pointCount = polytopes.count === 1 ? polytopes.at(0).polytope.pointCount : 500
   return {
     schema: 'tessellary.state/1',
@@ -38,7 +40,7 @@ export function startState(problem: SearchProblem, seed: number, island = 0): Se
     histogram: emptyHistogram,
     sample: { capacity: settings.sample, offered: 0, rows: [] },
     top: [],
-    seen: new SeenTable(seenCapacity(settings, island, pointCount)).state(),
+    seen: new SeenTable(seenCapacity(slotsWanted, settings, pointCount)).state(),
     chain: null,
   }
 }
@@ -70,9 +72,13 @@ export function advance(
 ): Segment {
   requireSameProblem(state, problemDigest(problem))
   const island = new Island(problem, state, options)
-  const lastEvaluation = Math.min(island.budget, island.evaluations + evaluations)
+  const lastEvaluation = island.evaluations + evaluations
   const lastProposal = island.proposals + (options.proposals ?? Infinity)
-  while (island.ended === null && island.evaluations < lastEvaluation && island.proposals < lastProposal) {
+  while (
+    island.ended === null &&
+    island.evaluations < Math.min(island.budget, lastEvaluation) &&
+    island.proposals < lastProposal
+  ) {
     island.chain.step()
   }
   const next = island.state()

@@ -18,6 +18,7 @@ import type { SearchProblem } from './problem.ts'
 import { RandomStream } from './randomStream.ts'
 import { Reservoir } from './reservoir.ts'
 import { SeenTable, seenKey } from './seenTable.ts'
+import type { SearchSettings } from './settings.ts'
 import type { RunEnd, SampleRow, SearchState } from './state.ts'
 import { TopList } from './topList.ts'
 import { witnessHeights } from './witness.ts'
@@ -47,7 +48,9 @@ export interface Evaluated {
 export class Island implements Run {
   readonly stream: RandomStream
   readonly polytopeCount: number
-  readonly budget: number
+  readonly settings: SearchSettings
+  readonly island: number
+  budget: number
   readonly patience: number
   readonly descents: number
   evaluations: number
@@ -79,6 +82,8 @@ export class Island implements Run {
   ) {
     this.stream = new RandomStream(given.generator)
     this.polytopeCount = problem.polytopes.count
+    this.settings = problem.settings
+    this.island = given.island
     this.budget = given.budget
     this.patience = problem.settings.patience
     this.descents = problem.settings.descents
@@ -109,7 +114,7 @@ export class Island implements Run {
       problem: this.given.problem,
       method: this.given.method,
       seed: this.given.seed,
-      island: this.given.island,
+      island: this.island,
       budget: this.budget,
       evaluations: this.evaluations,
       proposals: this.proposals,
@@ -159,7 +164,7 @@ export class Island implements Run {
     const canonical = canonicalClass(form, proposal.class)
     const [high, low] = seenKey(form.key, canonical.key)
     this.proposals++
-    const known = this.seen.find(high, low)
+    const known = proposal.distinct ? null : this.seen.find(high, low)
     if (known !== null) {
       this.stalled++
       return known.kind === irregularKind ? null : { merit: known, isNew: false }
@@ -167,7 +172,7 @@ export class Island implements Run {
     const heights = proposal.heights()
     if (heights === undefined) {
       this.stalled++
-      this.seen.add(high, low, irregularKind, 0)
+      if (!proposal.distinct) this.seen.add(high, low, irregularKind, 0)
       return null
     }
     const outcome = this.outcome(form, canonical.class, canonical.key)
@@ -176,7 +181,7 @@ export class Island implements Run {
     const merit = meritOf(outcome)
     this.stalled = 0
     this.evaluations++
-    this.seen.add(high, low, merit.kind, merit.value)
+    if (!proposal.distinct) this.seen.add(high, low, merit.kind, merit.value)
     this.count(outcome)
     this.sample.offer({ polytopeKey: form.key, classKey: canonical.key, ...merit }, this.stream)
     if (this.top.admits(outcome, canonical.key)) {
@@ -190,6 +195,14 @@ export class Island implements Run {
     }
     this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness })
     return { merit, isNew: true }
+  }
+
+  look(): void {
+    this.proposals++
+  }
+
+  resize(budget: number): void {
+    this.budget = budget
   }
 
   countAccepted(): void {

@@ -2,6 +2,7 @@ import type { NormalForm } from '../geometry/normalForm.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import type { Merit } from './merit.ts'
 import type { RandomStream } from './randomStream.ts'
+import type { SearchSettings } from './settings.ts'
 import type { Json, RunEnd } from './state.ts'
 
 /** What the run says of a proposed class. */
@@ -19,12 +20,16 @@ export interface Proposal {
    * not regular, hence no candidate. Asked for only when needed, since finding them may cost a linear program.
    */
   heights(): Float64Array | undefined
+  /** The method knows that the class has not been proposed before: the table of classes seen is left alone. */
+  readonly distinct?: true
 }
 
 /** What a method may see and use of its run. Randomness comes from `stream` only. */
 export interface Run {
   readonly stream: RandomStream
   readonly polytopeCount: number
+  readonly settings: SearchSettings
+  readonly island: number
   /** The island's share of the budget, and how much of it is used. */
   readonly budget: number
   readonly evaluations: number
@@ -41,6 +46,10 @@ export interface Run {
    * method calls this at most once, since a segment may end after any evaluation.
    */
   judge(polytope: number, proposal: Proposal): Judgement | null
+  /** Counts a class that was looked at without being judged: progress for what ends segments. */
+  look(): void
+  /** Replaces the island's share of the budget by the number of classes that it is going to score. */
+  resize(budget: number): void
   countAccepted(): void
   countRestart(): void
   end(reason: RunEnd): void
@@ -60,6 +69,8 @@ export interface Method {
   readonly version: number
   /** One line, for people. */
   readonly description: string
+  /** False when the method never proposes a class twice, so that the table of classes seen can stay small. */
+  readonly repeats?: false
   /** A chain from its stored state; null: at its start. */
   open(run: Run, state: Json | null): Chain
 }

@@ -37,13 +37,13 @@ const mostSlots = 2 ** 16
 const fewestSlots = 2 ** 8
 
 /**
- * Slots of the table of classes seen: a power of two at least twice the island's budget, so that nothing is
- * forgotten, within 2^16 and within what the kept candidates leave of `stateLimitBytes`.
+ * Slots of the table of classes seen: a power of two at least as large as wanted (twice the island's budget, so
+ * that nothing is forgotten), within 2^16 and within what the kept candidates leave of `stateLimitBytes`.
  */
-export function seenCapacity(settings: SearchSettings, island: number, pointCount: number): number {
+export function seenCapacity(wanted: number, settings: SearchSettings, pointCount: number): number {
   const keptBytes = settings.keep * (pointCount * heightCodeBytes + 600) + settings.sample * 120 + 60_000
   let slots = fewestSlots
-  while (slots < mostSlots && slots < 2 * islandBudget(settings, island)) slots *= 2
+  while (slots < mostSlots && slots < wanted) slots *= 2
   while (slots > fewestSlots && slots * seenSlotBytes + keptBytes > stateLimitBytes) slots /= 2
   return slots
 }

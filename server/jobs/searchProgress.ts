@@ -21,8 +21,13 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
     null,
   )
   const evaluations = total('evaluations')
-  const { evaluationsPerSecond, budget } = pace
+  const { evaluationsPerSecond } = pace
+  const shares = islands.map((island) => island?.budget ?? NaN)
+  const sum = shares.reduce((total, share) => total + share, 0)
+  // An exhaustive search has counted what there is to do, which may be less than it was allowed.
+  const budget = Number.isNaN(sum) ? pace.budget : sum
   return {
+    budget,
     evaluations,
     proposals: total('proposals'),
     accepted: total('accepted'),

@@ -19,6 +19,8 @@ export interface SegmentFind {
 
 /** What is known of one island after a segment. */
 export interface IslandProgress {
+  /** Evaluations that the island is going to make at most; absent in progress stored by earlier versions. */
+  readonly budget?: number
   readonly evaluations: number
   readonly proposals: number
   readonly accepted: number

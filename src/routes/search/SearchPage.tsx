@@ -67,7 +67,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
             found={progress.curve}
             expected={search.null?.expectedBest ?? []}
             evaluations={progress.evaluations}
-            budget={search.budget}
+            budget={progress.budget ?? search.budget}
           />
         ) : (
           <Empty title="No feasible candidate yet.">
@@ -128,13 +128,14 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
 
 function StateLine({ search }: { search: SearchDetail }) {
   const { progress } = search
+  const budget = progress.budget ?? search.budget
   return (
     <div className="mb-4 flex flex-wrap items-center gap-x-6 gap-y-2">
       <SearchStateMark state={search.state} />
       <div className="flex min-w-60 flex-1 items-center gap-3">
-        <Progress value={progress.evaluations} most={search.budget} label="Evaluations" />
+        <Progress value={progress.evaluations} most={budget} label="Evaluations" />
         <span className="whitespace-nowrap">
-          {formatNumber(progress.evaluations)} of {formatNumber(search.budget)}
+          {formatNumber(progress.evaluations)} of {formatNumber(budget)}
         </span>
       </div>
       {search.state === 'running' && progress.secondsLeft !== null && (

@@ -1,6 +1,6 @@
 import { useState, type FormEvent } from 'react'
 import { Link, useNavigate, useParams, useSearchParams } from 'react-router-dom'
-import { createSearchSchema, type CreateSearch } from '../../../../shared/searches.ts'
+import { createSearchSchema, searchMethods, type CreateSearch } from '../../../../shared/searches.ts'
 import { type Scope } from '../../../../shared/polytopes.ts'
 import { type TargetSummary } from '../../../../shared/targets.ts'
 import { ApiError } from '../../../api/request.ts'
@@ -44,10 +44,7 @@ export function NewSearchPage() {
   )
 }
 
-const methods = [
-  ['annealing', 'Annealing: flips and height jitters, cooling with restarts'],
-  ['random', 'Random heights: no guidance, for comparison'],
-] as const
+const methods = Object.entries(searchMethods)
 
 const wholeNumber = (text: string) => (/^\d+$/.test(text.trim()) ? Number(text) : Number.NaN)
 
