@@ -15,6 +15,10 @@ export {
   type TwoFace,
 } from './geometry/polytope.ts'
 export { normalForm, type NormalForm } from './geometry/normalForm.ts'
+export { polytopeSummary, type PolytopeSummary } from './geometry/polytopeSummary.ts'
+export { reflexiveSections, type ReflexiveSections } from './geometry/sections.ts'
+export type { PlanarSection } from './geometry/planarSections.ts'
+export type { SolidSection } from './geometry/solidSections.ts'
 export { polytopeFromWeights } from './geometry/weights.ts'
 export { parsePointBlocks } from './geometry/pointBlocks.ts'
 export { quadraticHeights } from './geometry/heights.ts'

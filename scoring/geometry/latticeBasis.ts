@@ -1,5 +1,6 @@
 import { InvariantError } from '../errors.ts'
 import { gcd } from './integers.ts'
+import { planeMinors, spaceNormal } from './minors.ts'
 import type { Polytope } from './polytope.ts'
 import { reducedCoordinates, shortCoordinates } from './reducedCoordinates.ts'
 
@@ -98,26 +99,6 @@ function firstBasis(points: Float64Array): [number, number, number, number] {
     }
   }
   throw new InvariantError('No four points form a basis of the lattice that all points generate.')
-}
-
-/** Minors of the points a, b in the coordinate pairs 01, 02, 03, 12, 13, 23. */
-function planeMinors(points: Float64Array, a: number, b: number, minors: Float64Array): void {
-  let at = 0
-  for (let i = 0; i < 4; i++) {
-    for (let j = i + 1; j < 4; j++) {
-      minors[at++] = points[4 * a + i] * points[4 * b + j] - points[4 * a + j] * points[4 * b + i]
-    }
-  }
-}
-
-/** Normal n of a, b, c with <n, v> = det(a, b, c, v) up to sign, from the minors of a and b. */
-function spaceNormal(points: Float64Array, minors: Float64Array, c: number, normal: Float64Array): void {
-  const [m01, m02, m03, m12, m13, m23] = minors
-  const [c0, c1, c2, c3] = points.subarray(4 * c, 4 * c + 4)
-  normal[0] = m12 * c3 - m13 * c2 + m23 * c1
-  normal[1] = -(m02 * c3 - m03 * c2 + m23 * c0)
-  normal[2] = m01 * c3 - m03 * c1 + m13 * c0
-  normal[3] = -(m01 * c2 - m02 * c1 + m12 * c0)
 }
 
 function commonDivisor(values: Float64Array): number {

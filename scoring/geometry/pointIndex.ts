@@ -14,9 +14,14 @@ export class PointIndex {
     for (let i = 0; 4 * i < points.length; i++) this.indexOf.set(this.key(points, i), i)
   }
 
-  /** Index of the point with the coordinates `points[4 i .. 4 i + 3]`. */
+  /** Index of the point with the coordinates `points[4 i .. 4 i + 3]`, or undefined. */
+  lookup(points: ArrayLike<number>, i: number): number | undefined {
+    return this.indexOf.get(this.key(points, i))
+  }
+
+  /** The same for a point that must be there. */
   find(points: ArrayLike<number>, i: number): number {
-    const index = this.indexOf.get(this.key(points, i))
+    const index = this.lookup(points, i)
     if (index === undefined)
       throw new InvariantError('An image of a lattice point is no lattice point of the polytope.')
     return index

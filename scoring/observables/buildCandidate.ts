@@ -1,9 +1,11 @@
 import { curveRows } from '../geometry/curves.ts'
 import { divisorTopology } from '../geometry/divisors.ts'
 import { intersectionNumbers } from '../geometry/intersectionNumbers.ts'
+import { normalisedVolumes } from '../geometry/normalisedVolume.ts'
 import type { NormalForm } from '../geometry/normalForm.ts'
 import type { Polytope } from '../geometry/polytope.ts'
 import { referencePoint } from '../geometry/referencePoint.ts'
+import { reflexiveSections } from '../geometry/sections.ts'
 import { basisSpectrum, divisorSpectrum, topEigenvalue } from '../geometry/spectra.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import { pairNumbers, volumes } from '../geometry/volumes.ts'
@@ -30,6 +32,8 @@ export function buildCandidate(form: NormalForm, canonical: TwoFaceClass, classK
     symmetryOrder: form.automorphisms.length,
     class: canonical,
     classKey,
+    sections: () => reflexiveSections(polytope),
+    normalisedVolumes: () => normalisedVolumes(polytope),
     numbers,
     divisorTopology: () => topologyOf(polytope),
     curves,

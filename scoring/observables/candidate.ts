@@ -1,8 +1,10 @@
 import type { CurveRows } from '../geometry/curves.ts'
 import type { IntersectionNumbers } from '../geometry/intersectionNumbers.ts'
+import type { NormalisedVolumes } from '../geometry/normalisedVolume.ts'
 import type { DivisorTopology } from '../geometry/divisors.ts'
 import type { Polytope } from '../geometry/polytope.ts'
 import type { ReferencePoint } from '../geometry/referencePoint.ts'
+import type { ReflexiveSections } from '../geometry/sections.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import type { Volumes } from '../geometry/volumes.ts'
 import type { BasisSpectrum } from '../geometry/spectra.ts'
@@ -16,6 +18,9 @@ export interface Candidate {
   readonly symmetryOrder: number
   readonly class: TwoFaceClass
   readonly classKey: string
+  /** Stage "polytope". */
+  sections(): ReflexiveSections
+  normalisedVolumes(): NormalisedVolumes
   /** Stage "topology". */
   numbers(): IntersectionNumbers
   divisorTopology(): DivisorTopology

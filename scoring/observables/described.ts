@@ -20,6 +20,7 @@ export const SOURCES = {
   batyrev: 'Batyrev 1993, alg-geom/9310003',
   divisors: 'arXiv:1712.04946',
   volumes: 'Grimm, Louis 2004, hep-th/0403067 (from memory)',
+  sections: 'Avram, Kreuzer, Mandelberg, Skarke 1997, hep-th/9610154 (from memory)',
   diagonal: 'Cicoli, Ciupke, Mayrhofer, Shukla 2018, arXiv:1801.05434 (from memory)',
 } as const
 

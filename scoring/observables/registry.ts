@@ -6,7 +6,9 @@ import { metricObservables } from './metric.ts'
 import type { Field, Observable, RecordSet } from './observable.ts'
 import { pairs } from './pairs.ts'
 import { polytopeObservables } from './polytope.ts'
+import { polytopeCounts } from './polytopeCounts.ts'
 import { relations } from './relations.ts'
+import { sections } from './sections.ts'
 import { triangles, triples } from './triangles.ts'
 
 /**
@@ -16,7 +18,9 @@ import { triangles, triples } from './triangles.ts'
  */
 export const OBSERVABLES: readonly Observable[] = [
   ...polytopeObservables,
+  ...polytopeCounts,
   faces,
+  sections,
   divisors,
   pairs,
   triples,

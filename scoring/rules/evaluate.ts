@@ -1,3 +1,5 @@
+import { normalisedVolumes } from '../geometry/normalisedVolume.ts'
+import { reflexiveSections } from '../geometry/sections.ts'
 import type { Candidate } from '../observables/candidate.ts'
 import { type PolytopeView, type Stage, STAGES } from '../observables/observable.ts'
 import type { CheckedRule } from './checkedRule.ts'
@@ -164,6 +166,8 @@ export function evaluatePolytopeStage(
       return unreachable()
     },
     classKey: '',
+    sections: () => reflexiveSections(view.polytope),
+    normalisedVolumes: () => normalisedVolumes(view.polytope),
     numbers: unreachable,
     divisorTopology: unreachable,
     curves: unreachable,

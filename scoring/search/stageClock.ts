@@ -32,6 +32,8 @@ export function timedCandidate(candidate: Candidate, clock: Clock, costs: StageC
     symmetryOrder: candidate.symmetryOrder,
     class: candidate.class,
     classKey: candidate.classKey,
+    sections: () => candidate.sections(),
+    normalisedVolumes: () => candidate.normalisedVolumes(),
     numbers: () => topology(() => candidate.numbers()),
     divisorTopology: () => topology(() => candidate.divisorTopology()),
     curves: () => topology(() => candidate.curves()),

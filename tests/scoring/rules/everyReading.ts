@@ -2,12 +2,21 @@ import { dependsOnBasis } from '../../../scoring/observables/metric.ts'
 import type { Field } from '../../../scoring/observables/observable.ts'
 import { OBSERVABLES } from '../../../scoring/observables/registry.ts'
 
+/** Where fields that may be undefined are defined. */
+const DEFINED: ReadonlyMap<string, string> = new Map([
+  ['divisors.delPezzoDegree', 'x.delPezzo'],
+  ['sections.type', 'x.dimension == 2'],
+])
+
 function readingsOfField(set: string, field: Field): string[] {
   if (field.kind === 'members')
     return ['max', 'sum'].map((fold) => `${fold}(x in ${set} : count(y in x.${field.name} : true))`)
   if (field.kind === 'element') return [`count(x in ${set} : any(y in ${field.of} : y == x.${field.name}))`]
   if (field.type === 'truth') return [`count(x in ${set} : x.${field.name})`]
-  const where = field.undefinedWhen ? ' where x.delPezzo' : ''
+  const defined = DEFINED.get(`${set}.${field.name}`)
+  if ((defined === undefined) !== (field.undefinedWhen === undefined))
+    throw new Error(`say where ${set}.${field.name} is defined`)
+  const where = defined ? ` where ${defined}` : ''
   return ['min', 'max', 'sum', 'mean'].map((fold) => `${fold}(x in ${set}${where} : x.${field.name})`)
 }
 

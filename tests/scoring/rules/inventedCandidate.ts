@@ -19,7 +19,7 @@ export function inventedCandidate(change: Partial<Candidate> = {}): Candidate & 
   const triangles = Int32Array.of(0, 1, 2, 0, 1, 3, 1, 2, 3)
   const triangleNumbers = Float64Array.of(1, 2, 1)
   const polytope: Candidate['polytope'] = {
-    points: new Int32Array(20),
+    points: Int32Array.of(1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1, 0, 0, 0, 0, 1, -1, -1, -2, -2),
     pointCount: 5,
     vertexCount: 3,
     carrierDimension: Uint8Array.of(0, 0, 0, 1, 2),
@@ -57,6 +57,19 @@ export function inventedCandidate(change: Partial<Candidate> = {}): Candidate & 
     symmetryOrder: 4,
     class: { polytope, triangles, faceOf: Int32Array.of(0, 1, 1) },
     classKey: '0123456789abcdef0123456789abcdef',
+    sections: counted('sections', {
+      planar: [{ points: Int32Array.of(0, 1, 5), turns: Int32Array.of(-1, -1, -1), type: 1 }],
+      solid: [
+        {
+          functional: [0, 0, 0, 1],
+          points: Int32Array.of(0, 1, 2, 3, 5),
+          vertices: Int32Array.of(0, 1, 2, 3),
+        },
+        { functional: [0, 0, 1, 0], points: Int32Array.of(1, 2, 3, 4), vertices: Int32Array.of(1, 2, 3, 4) },
+      ],
+      nested: [[0], []],
+    }),
+    normalisedVolumes: counted('normalisedVolumes', { own: 8, dual: 512 }),
     numbers: counted('numbers', {
       pointCount: 5,
       triangles,
