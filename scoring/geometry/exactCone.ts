@@ -1,29 +1,26 @@
-import type { Circuits } from './circuits.ts'
+import type { ConeRows } from './coneRows.ts'
 import { InvariantError } from '../errors.ts'
 
 /** Exactly one of the two exists (Gordan's alternative); both are integers. */
 export type ExactConeAnswer =
   | { readonly kind: 'inside'; readonly heights: bigint[] }
-  /** weights[n] > 0 for circuit rows[n], with sum_n weights[n] c_rows[n] = 0. */
+  /** weights[n] > 0 for row rows[n], with sum_n weights[n] c_rows[n] = 0. */
   | { readonly kind: 'empty'; readonly rows: number[]; readonly weights: bigint[] }
 
 /**
- * Decides whether heights with all circuits positive exist, in integers throughout: the simplex method with
- * Bland's rule on  sum_r x_r c_r = 0, sum_r x_r = 1, x >= 0. A solution is a contradiction among the circuits;
+ * Decides whether heights at which all rows are positive exist, in integers throughout: the simplex method with
+ * Bland's rule on  sum_r x_r c_r = 0, sum_r x_r = 1, x >= 0. A solution is a contradiction among the rows;
  * if there is none, the final multipliers are heights. Pivots are fraction-free (Edmonds): the tableau holds
  * integers over one common denominator. Slow on large polytopes; the fall-back when floating point is unsure.
  */
-export function decideExactly(rows: Circuits, pointCount: number): ExactConeAnswer {
+export function decideExactly(rows: ConeRows, pointCount: number): ExactConeAnswer {
   const columns = rows.count
   const height = pointCount + 1
   // Rows of the tableau: one per point, one for the sum; columns: circuits, artificials, right-hand side.
   const width = columns + height + 1
   const tableau: bigint[][] = Array.from({ length: height + 1 }, () => new Array<bigint>(width).fill(0n))
   for (let r = 0; r < columns; r++) {
-    tableau[rows.k[r]][r] += 1n
-    tableau[rows.l[r]][r] += 1n
-    tableau[rows.i[r]][r] -= BigInt(rows.a[r])
-    tableau[rows.j[r]][r] -= BigInt(rows.b[r])
+    rows.each(r, (point, coefficient) => (tableau[point][r] = BigInt(coefficient)))
     tableau[pointCount][r] = 1n
   }
   for (let p = 0; p < height; p++) tableau[p][columns + p] = 1n

@@ -1,15 +1,15 @@
-import type { Circuits } from './circuits.ts'
+import type { ConeRows } from './coneRows.ts'
 
 /** What the floating-point search believes; to be verified exactly by the caller. */
 export type ConeAnswer =
   | { readonly kind: 'inside'; readonly heights: Float64Array }
-  /** Circuit rows that have a non-negative combination equal to zero. */
+  /** Rows that have a non-negative combination equal to zero. */
   | { readonly kind: 'empty'; readonly support: number[] }
   | { readonly kind: 'unknown' }
 
 /**
- * The heights nearest to `near` (Euclidean norm over points) at which every circuit is at least `margin`, or
- * circuits that contradict each other.
+ * The heights nearest to `near` (Euclidean norm over points) at which every row is at least `margin`, or rows
+ * that contradict each other.
  *
  * A dual active-set method for the strictly convex program min |w - near|^2, c_r . w >= margin: start at the
  * unconstrained optimum, add the most violated row, step towards it inside the active rows' null space while
@@ -18,7 +18,7 @@ export type ConeAnswer =
  * of active ones with no multiplier left to give, the rows have a vanishing non-negative combination and the
  * cone is empty (Farkas).
  */
-export function nearestInCone(rows: Circuits, near: ArrayLike<number>, margin: number): ConeAnswer {
+export function nearestInCone(rows: ConeRows, near: ArrayLike<number>, margin: number): ConeAnswer {
   const w = Float64Array.from(near)
   const active: number[] = []
   let multipliers: number[] = []
@@ -30,14 +30,14 @@ export function nearestInCone(rows: Circuits, near: ArrayLike<number>, margin: n
     let multiplier = 0
     for (let inner = 0; ; inner++) {
       if (inner > limit) return { kind: 'unknown' }
-      const share = factor.solve(active.map((row) => dot(rows, row, worst)))
+      const share = factor.solve(active.map((row) => rows.dot(row, worst)))
       const direction = new Float64Array(w.length)
-      addRow(rows, worst, 1, direction)
-      active.forEach((row, n) => addRow(rows, row, -share[n], direction))
+      rows.add(worst, 1, direction)
+      active.forEach((row, n) => rows.add(row, -share[n], direction))
       // c . z = |z|^2, as z is c projected off the active rows.
-      const slope = value(rows, worst, direction)
-      const independent = slope > 1e-9 * dot(rows, worst, worst)
-      const full = independent ? (margin - value(rows, worst, w)) / slope : Infinity
+      const slope = rows.value(worst, direction)
+      const independent = slope > 1e-9 * rows.dot(worst, worst)
+      const full = independent ? (margin - rows.value(worst, w)) / slope : Infinity
       let leaving = -1
       let partial = Infinity
       for (let n = 0; n < share.length; n++) {
@@ -56,8 +56,8 @@ export function nearestInCone(rows: Circuits, near: ArrayLike<number>, margin: n
       if (full <= partial) {
         if (
           !factor.append(
-            active.map((row) => dot(rows, row, worst)),
-            dot(rows, worst, worst),
+            active.map((row) => rows.dot(row, worst)),
+            rows.dot(worst, worst),
           )
         ) {
           return { kind: 'unknown' }
@@ -74,35 +74,17 @@ export function nearestInCone(rows: Circuits, near: ArrayLike<number>, margin: n
   return { kind: 'unknown' }
 }
 
-function value({ i, j, k, l, a, b }: Circuits, row: number, w: Float64Array): number {
-  return w[k[row]] + w[l[row]] - a[row] * w[i[row]] - b[row] * w[j[row]]
-}
-
-function addRow({ i, j, k, l, a, b }: Circuits, row: number, factor: number, to: Float64Array): void {
-  to[k[row]] += factor
-  to[l[row]] += factor
-  to[i[row]] -= factor * a[row]
-  to[j[row]] -= factor * b[row]
-}
-
-function mostViolated(rows: Circuits, w: Float64Array, margin: number): number {
+function mostViolated(rows: ConeRows, w: Float64Array, margin: number): number {
   let least = margin * (1 - 1 / 64)
   let worst = -1
   for (let row = 0; row < rows.count; row++) {
-    const at = value(rows, row, w)
+    const at = rows.value(row, w)
     if (at < least) {
       least = at
       worst = row
     }
   }
   return worst
-}
-
-/** c_r . c_s; the four points of a row are distinct. */
-function dot({ i, j, k, l, a, b }: Circuits, r: number, s: number): number {
-  const at = (p: number): number =>
-    (p === k[s] ? 1 : 0) + (p === l[s] ? 1 : 0) - (p === i[s] ? a[s] : 0) - (p === j[s] ? b[s] : 0)
-  return at(k[r]) + at(l[r]) - a[r] * at(i[r]) - b[r] * at(j[r])
 }
 
 /** Cholesky factor of a Gram matrix to which rows are appended and from which they are removed. */

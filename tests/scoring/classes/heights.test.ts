@@ -113,10 +113,10 @@ describe('a class from triangles', () => {
   it('is refused when triangles are missing, repeated, coarse, off the faces or name no points', () => {
     const list = Array.from(triangles)
     const code = (changed: number[]): string => codeOf(() => classFromTriangles(polytope, changed))
-    expect(code(list.slice(3))).toBe('triangles.wrong-count')
+    expect(code(list.slice(3))).toBe('triangles.gap')
     expect(code(list.with(0, polytope.pointCount))).toBe('triangles.no-such-point')
-    expect(code(list.with(0, list[1]))).toBe('triangles.not-unimodular')
-    expect(code([...list.slice(3), ...list.slice(3, 6)])).toBe('triangles.overlap')
+    expect(code(list.with(0, list[1]))).toBe('triangles.repeated-point')
+    expect(code([...list.slice(3), ...list.slice(3, 6)])).toBe('triangles.twice')
     const face = polytope.twoFaces.findIndex(({ area, corners }) => area > 1 && corners.length === 3)
     const at = 3 * Array.from(faceOf).indexOf(face)
     const whole = Array.from(polytope.twoFaces[face].corners)
