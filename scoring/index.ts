@@ -29,6 +29,8 @@ export { fanFromHeights, type Fan } from './geometry/fans/fan.ts'
 export { heightsOfSimplices, type ProvedTriangulation } from './geometry/fans/heightsOfSimplices.ts'
 export { heightsOfTriangles } from './geometry/fans/heightsOfTriangles.ts'
 export { intersectionNumbers, type IntersectionNumbers } from './geometry/intersectionNumbers.ts'
+export { componentNumbers, componentsOf, type Components } from './geometry/componentNumbers.ts'
+export { wallInvariants, wallVersion, type WallInvariants } from './geometry/wallInvariants.ts'
 export { buildCandidate } from './observables/buildCandidate.ts'
 export type { Candidate } from './observables/candidate.ts'
 

@@ -1,5 +1,9 @@
 /** Numbers of positive, negative and zero squares of a symmetric integer matrix, by exact congruence. */
-export function inertia(matrix: readonly (readonly number[])[]): { plus: number; minus: number; zero: number } {
+export function inertia(matrix: readonly (readonly number[])[]): {
+  plus: number
+  minus: number
+  zero: number
+} {
   let rows = matrix.map((row) => row.map(BigInt))
   const count = { plus: 0, minus: 0, zero: 0 }
   while (rows.length > 0) {

@@ -1,7 +1,14 @@
 import { beforeAll, describe, expect, it } from 'vitest'
-import { componentNumbers, componentsOf, type Components } from '../../../scoring/geometry/componentNumbers.ts'
+import {
+  componentNumbers,
+  componentsOf,
+  type Components,
+} from '../../../scoring/geometry/componentNumbers.ts'
 import { divisorTopology } from '../../../scoring/geometry/divisors.ts'
-import { intersectionNumber, type IntersectionNumbers } from '../../../scoring/geometry/intersectionNumbers.ts'
+import {
+  intersectionNumber,
+  type IntersectionNumbers,
+} from '../../../scoring/geometry/intersectionNumbers.ts'
 import { pairNumbers } from '../../../scoring/geometry/volumes.ts'
 import { bundledPolytopes } from '../../reference/bundledPolytopes.ts'
 import { classOf, stagesOf, type Stages } from '../cone/stages.ts'
@@ -34,7 +41,9 @@ describe('the form on all of H^{1,1}, on every polytope with h11 <= 5 that is no
   })
 
   it('has h11 + 4 components', () => {
-    expect(failing(({ components, stages }) => components.count !== stages.polytope.hodge.h11 + 4)).toEqual([])
+    expect(failing(({ components, stages }) => components.count !== stages.polytope.hodge.h11 + 4)).toEqual(
+      [],
+    )
   })
 
   it('adds up to the toric numbers', () => {
