@@ -39,7 +39,7 @@ const changeOfBasis = (n: number): fc.Arbitrary<number[][]> =>
     )
     .map((operations) => {
       const rows = Array.from({ length: n }, (_, i) =>
-        Array.from({ length: n }, (_entry, j) => (i === j ? 1 : 0)),
+        Array.from({ length: n }, (_entry, j): number => (i === j ? 1 : 0)),
       )
       for (const { to, from, factor } of operations) {
         if (to === from) rows[to] = rows[to].map((entry) => 0 - entry)
