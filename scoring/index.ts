@@ -10,6 +10,7 @@ export { caution } from './caution.ts'
 export {
   dualPolytope,
   polytopeFromPoints,
+  reducedPolytope,
   type Hodge,
   type Polytope,
   type TwoFace,
@@ -33,6 +34,12 @@ export { componentNumbers, componentsOf, type Components } from './geometry/comp
 export { wallInvariants, wallVersion, type WallInvariants } from './geometry/wallInvariants.ts'
 export { buildCandidate } from './observables/buildCandidate.ts'
 export type { Candidate } from './observables/candidate.ts'
+
+// Reading other people's candidates.
+export { readCandidates } from './reading/readCandidates.ts'
+export { placeCandidate, type PlacedCandidate, type Placing } from './reading/placeCandidate.ts'
+export { readWeightLines, type WeightLine } from './reading/weightLines.ts'
+export type { CandidateReading, GivenCandidate, Orientation, ReadingProblem } from './reading/given.ts'
 
 // The scoring language.
 export * from './rules/index.ts'

@@ -13,6 +13,7 @@ import { campaignRoutes } from './routes/campaigns.ts'
 import { candidateRoutes } from './routes/candidates.ts'
 import { eventRoutes } from './routes/events.ts'
 import { healthRoutes } from './routes/health.ts'
+import { importedCandidateRoutes } from './routes/importedCandidates.ts'
 import { polytopeRoutes } from './routes/polytopes.ts'
 import { searchRoutes } from './routes/searches.ts'
 import { sessionRoutes } from './routes/session.ts'
@@ -45,6 +46,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   searchRoutes(app, context)
   shortlistRoutes(app, context)
   candidateRoutes(app, context)
+  importedCandidateRoutes(app, context)
   eventRoutes(app, context)
 
   app.use('/api', noSuchRoute)

@@ -31,6 +31,8 @@ const environmentSchema = z.object({
   TRUST_PROXY: z.coerce.number().int().min(0).max(10).default(0),
   /** Worker threads for searches; interactive work has one more of its own. */
   WORKERS: z.coerce.number().int().min(1).max(128).optional(),
+  /** Polytopes, weight systems or candidates in one import. */
+  IMPORT_LIMIT: z.coerce.number().int().min(1).max(100_000).default(5_000),
   LOG_LEVEL: z.enum(['fatal', 'error', 'warn', 'info', 'debug', 'trace', 'silent']).default('info'),
 })
 
@@ -43,6 +45,7 @@ export interface Config {
   readonly baseUrl: string
   readonly trustProxy: number
   readonly workers: number
+  readonly importLimit: number
   readonly logLevel: string
 }
 
@@ -71,6 +74,7 @@ export function readConfig(environment: Record<string, string | undefined>): Con
     baseUrl: (values.PUBLIC_URL ?? `http://${urlHost(values.HOST)}:${values.PORT}`).replace(/\/$/, ''),
     trustProxy: values.TRUST_PROXY,
     workers: values.WORKERS ?? Math.max(1, availableParallelism()),
+    importLimit: values.IMPORT_LIMIT,
     logLevel: values.LOG_LEVEL,
   }
 }

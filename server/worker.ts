@@ -2,7 +2,14 @@ import { InputError } from '../scoring/index.ts'
 import { candidateGeometry, candidateSpectra } from './jobs/compute/candidateGeometry.ts'
 import { classPictures } from './jobs/compute/classPictures.ts'
 import { factsOfEach, factsOfWeights, pointBlocks } from './jobs/compute/importBlocks.ts'
+import {
+  candidatesOfText,
+  factsOfWeightLines,
+  placeCandidates,
+  weightLinesOfText,
+} from './jobs/compute/importCandidates.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
+import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
 import { nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
@@ -10,6 +17,11 @@ const tasks: Tasks = {
   'point-blocks': pointBlocks,
   'facts-of-each': factsOfEach,
   'facts-of-weights': factsOfWeights,
+  'candidates-of-text': candidatesOfText,
+  'place-candidates': placeCandidates,
+  'score-candidates': scoreCandidates,
+  'weight-lines': weightLinesOfText,
+  'facts-of-weight-lines': factsOfWeightLines,
   'polytope-shape': polytopeShape,
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,

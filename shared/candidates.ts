@@ -97,9 +97,8 @@ export const candidateRecordSchema = z.object({
       scoringHash: z.string(),
       engineVersion: z.string(),
       outcome: outcomeSchema,
-      searchId: z.string(),
-      searchName: z.string(),
-      searchSeed: z.number().int(),
+      /** Null for a candidate that was imported into the list. */
+      search: z.object({ id: z.string(), name: z.string(), seed: z.number().int() }).nullable(),
       /** Neighbours in the list, for stepping through it. */
       previousKey: z.string().nullable(),
       nextKey: z.string().nullable(),
@@ -107,5 +106,15 @@ export const candidateRecordSchema = z.object({
   ),
   /** Newest first. */
   verdicts: z.array(verdictSchema),
+  /** How it came into the campaign when somebody imported it. */
+  imported: z
+    .object({
+      name: z.string(),
+      source: z.string(),
+      line: z.number().int(),
+      author: z.string(),
+      createdAt: z.string(),
+    })
+    .nullable(),
 })
 export type CandidateRecord = z.infer<typeof candidateRecordSchema>

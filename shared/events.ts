@@ -19,7 +19,7 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   z.object({
     kind: z.literal('changed'),
-    what: z.enum(['targets', 'searches', 'shortlists', 'verdicts', 'members']),
+    what: z.enum(['targets', 'searches', 'shortlists', 'verdicts', 'members', 'imports']),
   }),
   z.object({ kind: z.literal('closed'), reason: z.enum(['signed-out', 'role-lost', 'shutting-down']) }),
 ])

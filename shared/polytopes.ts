@@ -92,6 +92,12 @@ export const importWeightsSchema = z.object({
   name: z.string().max(80).optional(),
 })
 
+/** POST /api/campaigns/:campaign/polytopes/weight-lines: five weights a line. */
+export const importWeightLinesSchema = z.object({
+  text: z.string().max(pastedLimitBytes),
+  side: z.enum(['fan', 'newton']),
+})
+
 export const importReportSchema = z.object({
   imported: z.array(
     z.object({

@@ -27,7 +27,8 @@ export type ShortlistSummary = z.infer<typeof shortlistSummarySchema>
 
 export const shortlistRowSchema = scoredRowSchema.extend({
   rank: z.number().int(),
-  searchId: z.string(),
+  /** Null for an imported candidate. */
+  searchId: z.string().nullable(),
   polytopeName: z.string(),
   verdict: verdictSchema.nullable(),
 })

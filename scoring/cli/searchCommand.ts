@@ -41,6 +41,8 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
   const { threads, print, save } = options
   const rule = ruleOfInput(spec.ruleText)
   const { islands } = spec.settings
+  const vertices = new Map(spec.polytopes.map((entry) => [entry.key, entry.vertices]))
+  const findLine = findLineOf(rule, vertices)
   const inputs = jobsOf(spec)
   const states: (SearchState | null)[] = inputs.map((_, n) => options.states?.[n] ?? null)
   if (options.states && options.states.length !== inputs.length) {
@@ -80,7 +82,7 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
         if (n >= islands) continue
         const progress = mergedProgress(started())
         print({ kind: 'progress', island: n, ...progress })
-        for (const find of output.finds) print({ kind: 'find', island: n, ...findLine(find, rule) })
+        for (const find of output.finds) print({ kind: 'find', island: n, ...findLine(find) })
       }
     }),
   )
@@ -90,7 +92,7 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
     kind: 'final',
     ...context,
     progress: merged.progress,
-    top: merged.top.map((find) => findLine(find, rule)),
+    top: merged.top.map(findLine),
     statistics: { histogram: merged.histogram, undefined: merged.reasons, failedRequires: merged.failures },
     null: sample && nullSummary(sample, rule),
   })
@@ -133,8 +135,11 @@ function segmentLength(budget: number): number {
   return Math.max(10, Math.min(250, Math.ceil(budget / 50)))
 }
 
-/** Heights refer to the points of the polytope in normal form, in its own order. */
-function findLine(find: Find, rule: CheckedRule): Record<string, unknown> {
-  const { polytopeKey, classKey, outcome, heights } = find
-  return { polytopeKey, classKey, score: scoreEntry(outcome, rule), heights }
+/** Heights refer to the points of the polytope in normal form, in its own order; so do the vertices. */
+function findLineOf(rule: CheckedRule, vertices: ReadonlyMap<string, unknown>) {
+  return (find: Find): Record<string, unknown> => {
+    const { polytopeKey, classKey, outcome, heights } = find
+    const score = scoreEntry(outcome, rule)
+    return { polytopeKey, classKey, score, heights, vertices: vertices.get(polytopeKey) }
+  }
 }

@@ -1,6 +1,6 @@
 import { InputError } from '../errors.ts'
 import { assemble } from './assembly.ts'
-import { applyBig, reducedBasis } from './latticeReduction.ts'
+import { applyBig, reducedBasis, type BasisChange } from './latticeReduction.ts'
 import { reflexiveHull } from './reflexiveHull.ts'
 
 /**
@@ -81,13 +81,22 @@ export function polytopeFromPoints(rows: readonly (readonly number[])[]): Polyto
  * @throws InputError as `polytopeFromPoints`, naming facets in the coordinates given
  */
 export function reducedPolytope(rows: readonly (readonly number[])[]): Polytope {
+  return polytopeInReducedBasis(rows).polytope
+}
+
+/** As `reducedPolytope`, with the change of basis from the coordinates given to those of the polytope. */
+export function polytopeInReducedBasis(rows: readonly (readonly number[])[]): {
+  readonly polytope: Polytope
+  readonly basis: BasisChange
+} {
   const { vertices, facets } = reflexiveHull(rows)
   const exact = vertices.map((vertex) => vertex.map(BigInt))
-  const { matrix, dual } = reducedBasis(exact)
-  return assemble(
-    exact.map((vertex) => storable(applyBig(matrix, vertex))),
-    facets.map((normal) => storable(applyBig(dual, normal))),
+  const basis = reducedBasis(exact)
+  const polytope = assemble(
+    exact.map((vertex) => storable(applyBig(basis.matrix, vertex))),
+    facets.map((normal) => storable(applyBig(basis.dual, normal))),
   )
+  return { polytope, basis }
 }
 
 /** The dual polytope, on the M side: the hull of the facet normals. Its facet normals are this one's vertices. */

@@ -10,7 +10,7 @@ import { compareLexicographic } from './integers.ts'
  *   polytope.too-few-points, polytope.not-four-dimensional
  */
 export function checkedPoints(rows: readonly (readonly number[])[]): number[][] {
-  rows.forEach(checkRow)
+  rows.forEach(checkPoint)
   const sorted = rows.map((row) => row.map((entry) => entry + 0)).sort(compareLexicographic)
   const distinct = sorted.filter((row, i) => i === 0 || compareLexicographic(row, sorted[i - 1]) !== 0)
   if (distinct.length < 5) {
@@ -34,7 +34,11 @@ export function checkedPoints(rows: readonly (readonly number[])[]): number[][] 
   return distinct
 }
 
-function checkRow(row: readonly number[], index: number): void {
+/**
+ * Checks that a row is a lattice point: four safe integers.
+ * @throws InputError polytope.wrong-shape, polytope.not-integers, polytope.unsafe-integers; paths begin `[index]`
+ */
+export function checkPoint(row: readonly number[], index: number): void {
   if (!Array.isArray(row) || row.length !== 4) {
     const found = Array.isArray(row) ? `has ${row.length} coordinates` : 'is no list of coordinates'
     throw new InputError(

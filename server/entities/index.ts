@@ -4,6 +4,7 @@ import { CampaignPolytope } from './campaignPolytope.ts'
 import { CandidateRecord } from './candidate.ts'
 import { CandidateValue } from './candidateValue.ts'
 import { Find } from './find.ts'
+import { ImportedCandidate } from './importedCandidate.ts'
 import { LibraryFile } from './libraryFile.ts'
 import { Membership } from './membership.ts'
 import { NullSample } from './nullSample.ts'
@@ -25,6 +26,7 @@ export const entities = [
   CandidateRecord,
   CandidateValue,
   Find,
+  ImportedCandidate,
   LibraryFile,
   Membership,
   NullSample,

@@ -27,7 +27,7 @@ export class Shortlist {
   @Column({ type: 'varchar' })
   name!: string
 
-  /** The searches it was drawn from. */
+  /** The searches it was drawn from; empty when it was made from imported candidates. */
   @Column({ type: 'simple-json' })
   searchIds!: string[]
 

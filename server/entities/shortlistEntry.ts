@@ -26,12 +26,13 @@ export class ShortlistEntry {
   @JoinColumn({ name: 'candidateKey' })
   candidate?: Relation<CandidateRecord>
 
-  @Column({ type: 'varchar' })
-  searchId!: string
+  /** The search that found it; null for an imported candidate. */
+  @Column({ type: 'varchar', nullable: true })
+  searchId!: string | null
 
-  @ManyToOne(() => Search, { onDelete: 'CASCADE', nullable: false })
+  @ManyToOne(() => Search, { onDelete: 'CASCADE', nullable: true })
   @JoinColumn({ name: 'searchId' })
-  search?: Relation<Search>
+  search?: Relation<Search> | null
 
   @Column({ type: 'simple-json' })
   outcome!: OutcomeView

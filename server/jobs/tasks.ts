@@ -1,7 +1,14 @@
 import type { candidateGeometry, candidateSpectra } from './compute/candidateGeometry.ts'
 import type { classPictures } from './compute/classPictures.ts'
 import type { factsOfEach, factsOfWeights, pointBlocks } from './compute/importBlocks.ts'
+import type {
+  candidatesOfText,
+  factsOfWeightLines,
+  placeCandidates,
+  weightLinesOfText,
+} from './compute/importCandidates.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
+import type { scoreCandidates } from './compute/scoreCandidates.ts'
 import type { nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
 
 /** The tasks of the worker threads: pure functions of plain data, by name. */
@@ -9,6 +16,11 @@ export interface Tasks {
   'point-blocks': typeof pointBlocks
   'facts-of-each': typeof factsOfEach
   'facts-of-weights': typeof factsOfWeights
+  'candidates-of-text': typeof candidatesOfText
+  'place-candidates': typeof placeCandidates
+  'score-candidates': typeof scoreCandidates
+  'weight-lines': typeof weightLinesOfText
+  'facts-of-weight-lines': typeof factsOfWeightLines
   'polytope-shape': typeof polytopeShape
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra

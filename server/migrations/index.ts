@@ -1,4 +1,5 @@
 import { FirstSchema1796100000000 } from './1796100000000-firstSchema.ts'
+import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 
 /** In order. A migration that has been released is never edited. */
-export const migrations = [FirstSchema1796100000000]
+export const migrations = [FirstSchema1796100000000, ImportedCandidates1796200300000]

@@ -4,6 +4,7 @@ import {
   hodgeCountsSchema,
   importReportSchema,
   importTextSchema,
+  importWeightLinesSchema,
   importWeightsSchema,
   pastedLimitBytes,
   polytopeDetailSchema,
@@ -16,12 +17,14 @@ import {
 import type { ServerContext } from '../context.ts'
 import { Membership } from '../entities/membership.ts'
 import { endpoint } from '../http/endpoint.ts'
+import { uploadedText } from '../http/uploadedText.ts'
 import { presentPolytopeRow } from '../presenters/polytopes.ts'
-import { notFound, Refusal, unprocessable } from '../problems.ts'
+import { notFound } from '../problems.ts'
 import { readPolytopeDetail } from '../services/geometry.ts'
 import { importText, importWeights } from '../services/imports.ts'
 import { countByHodge, listPolytopes, type Viewer } from '../services/polytopes.ts'
 import { summariseScope } from '../services/scopes.ts'
+import { importWeightLines } from '../services/weightLines.ts'
 
 const upload = multer({
   storage: multer.memoryStorage(),
@@ -101,11 +104,8 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
     before: upload.single('file'),
     answer: importReportSchema,
     status: 201,
-    handle: ({ campaign, account, request }) => {
-      const { file } = request
-      if (!file) throw unprocessable('no-file', 'Send the file in the field "file".', { path: 'file' })
-      return importText(context, campaign.id, account.id, decode(file.buffer), undefined)
-    },
+    handle: ({ campaign, account, request }) =>
+      importText(context, campaign.id, account.id, uploadedText(request).text, undefined),
   })
 
   endpoint(app, context, {
@@ -120,18 +120,21 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
 
   endpoint(app, context, {
     method: 'post',
+    path: '/api/campaigns/:campaign/polytopes/weight-lines',
+    access: 'polytopes.import',
+    body: importWeightLinesSchema,
+    bodyLimit: pastedBodyLimit,
+    answer: importReportSchema,
+    status: 201,
+    handle: ({ campaign, account, body }) => importWeightLines(context, campaign.id, account.id, body),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
     path: '/api/campaigns/:campaign/scope',
     access: 'campaign.read',
     body: scopeSchema,
     answer: scopeSummarySchema,
     handle: ({ campaign, body }) => summariseScope(manager, campaign.id, body),
   })
-}
-
-function decode(bytes: Buffer): string {
-  try {
-    return new TextDecoder('utf-8', { fatal: true }).decode(bytes)
-  } catch {
-    throw new Refusal(422, 'not-text', 'The file is not a text file in UTF-8.', { path: 'file' })
-  }
 }

@@ -1,6 +1,7 @@
 import { Brackets, type EntityManager } from 'typeorm'
 import type { CandidateRecord as CandidateRecordView } from '../../shared/candidates.ts'
 import { CandidateRecord } from '../entities/candidate.ts'
+import { ImportedCandidate } from '../entities/importedCandidate.ts'
 import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
 import { notFound } from '../problems.ts'
@@ -65,7 +66,8 @@ export async function readCandidateRecord(
   for (const entry of entries) {
     const shortlist = entry.shortlist
     const version = shortlist?.targetVersion
-    if (!shortlist || !version || !entry.search) continue
+    if (!shortlist || !version) continue
+    const { search } = entry
     const keyAt = async (rank: number) => {
       const neighbour = await manager.findOneBy(ShortlistEntry, { shortlistId: shortlist.id, rank })
       return neighbour?.candidateKey ?? null
@@ -83,13 +85,26 @@ export async function readCandidateRecord(
       scoringHash: shortlist.scoringHash,
       engineVersion: shortlist.engineVersion,
       outcome: entry.outcome,
-      searchId: entry.searchId,
-      searchName: entry.search.name,
-      searchSeed: entry.search.seed,
+      search: search ? { id: search.id, name: search.name, seed: search.seed } : null,
       previousKey: await keyAt(entry.rank - 1),
       nextKey: await keyAt(entry.rank + 1),
     })
   }
   const verdicts = await listVerdicts(manager, campaignId, key)
-  return { key, appearances, verdicts: verdicts.map(presentVerdict) }
+  const imported = await manager.findOne(ImportedCandidate, {
+    where: { campaignId, candidateKey: key },
+    relations: { author: true },
+  })
+  return {
+    key,
+    appearances,
+    verdicts: verdicts.map(presentVerdict),
+    imported: imported && {
+      name: imported.name,
+      source: imported.source,
+      line: imported.line,
+      author: imported.author?.name ?? '',
+      createdAt: imported.createdAt,
+    },
+  }
 }

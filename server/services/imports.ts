@@ -6,13 +6,10 @@ import { PolytopeRecord } from '../entities/polytope.ts'
 import type { PolytopeFacts } from '../jobs/compute/polytopeFacts.ts'
 import { unprocessable } from '../problems.ts'
 
-/** Polytopes in one pasted or uploaded text. */
-export const importLimit = 5_000
-
 /** Blocks per piece of work on the interactive thread, which previews share. */
 const stretchLength = 20
 
-interface Importer {
+export interface Importer {
   readonly campaignId: string
   readonly authorId: string
 }
@@ -22,19 +19,14 @@ type Problem = ImportReport['problems'][number]
 
 /** Imports every reflexive polytope of a text and reports every block that is none, with its line. */
 export async function importText(
-  { jobs, writes }: ServerContext,
+  { config, jobs, writes }: ServerContext,
   campaignId: string,
   authorId: string,
   text: string,
   name: string | undefined,
 ): Promise<ImportReport> {
   const { polytopes: blocks, problems: unread } = await jobs.interactive.run('point-blocks', { text })
-  if (blocks.length > importLimit) {
-    throw unprocessable('too-many-polytopes', `At most ${importLimit} polytopes can be imported at once.`, {
-      path: 'text',
-      found: blocks.length,
-    })
-  }
+  refuseTooMany('polytopes', blocks.length, config.importLimit)
   if (blocks.length === 0 && unread.length === 0) {
     throw unprocessable('no-points', 'The text holds no matrix of integer points.', { path: 'text' })
   }
@@ -52,7 +44,10 @@ export async function importText(
         }
         const number = blocks.length === 1 ? '' : ` ${from + i + 1}`
         const wanted = name === undefined || name === '' ? undefined : `${name}${number}`
-        imported.push({ line, ...(await store(manager, { campaignId, authorId }, facts, wanted, null)) })
+        imported.push({
+          line,
+          ...(await storePolytope(manager, { campaignId, authorId }, facts, wanted, null)),
+        })
       }
     })
   }
@@ -71,12 +66,20 @@ export async function importWeights(
   const facts = await jobs.interactive.run('facts-of-weights', { weights, side })
   const name = input.name || `${weights.join(' ')} ${side}`
   const imported = await writes.transaction((manager) =>
-    store(manager, { campaignId, authorId }, facts, name, { weights, side }),
+    storePolytope(manager, { campaignId, authorId }, facts, name, { weights, side }),
   )
   return { imported: [{ line: null, ...imported }], problems: [] }
 }
 
-async function store(
+/** @throws Refusal 422 */
+export function refuseTooMany(what: 'polytopes' | 'candidates', found: number, limit: number): void {
+  if (found <= limit) return
+  const message = `The text holds ${found} ${what}; at most ${limit} can be imported at once. Split it.`
+  throw unprocessable(`too-many-${what}`, message, { path: 'text', found })
+}
+
+/** Stores a polytope for a campaign unless the campaign has it; says what it is called there. */
+export async function storePolytope(
   manager: EntityManager,
   { campaignId, authorId }: Importer,
   facts: PolytopeFacts,

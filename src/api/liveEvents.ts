@@ -34,6 +34,7 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
         shortlists: ['shortlists', campaign],
         verdicts: ['shortlist'],
         members: ['campaigns'],
+        imports: ['imported-candidates', campaign],
       } as const
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })

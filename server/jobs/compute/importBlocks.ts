@@ -1,9 +1,4 @@
-import {
-  InputError,
-  parsePointBlocks,
-  polytopeFromPoints,
-  polytopeFromWeights,
-} from '../../../scoring/index.ts'
+import { InputError, parsePointBlocks, polytopeFromWeights, reducedPolytope } from '../../../scoring/index.ts'
 import { polytopeFacts, type PolytopeFacts } from './polytopeFacts.ts'
 
 /** Matrices found in a text, and what was no matrix. */
@@ -29,7 +24,7 @@ export function factsOfEach({
 }): FactsOrProblem[] {
   return points.map((rows) => {
     try {
-      return { facts: polytopeFacts(polytopeFromPoints(rows)) }
+      return { facts: polytopeFacts(reducedPolytope(rows)) }
     } catch (error) {
       if (!(error instanceof InputError)) throw error
       const { code, message, path } = error

@@ -63,14 +63,18 @@ export function Provenance({
                       v{row.targetVersion}
                     </Td>
                     <Td>
-                      <Link
-                        to={`/campaigns/${campaign}/searches/${row.searchId}`}
-                        className="text-action hover:underline"
-                      >
-                        {row.searchName}
-                      </Link>
+                      {row.search ? (
+                        <Link
+                          to={`/campaigns/${campaign}/searches/${row.search.id}`}
+                          className="text-action hover:underline"
+                        >
+                          {row.search.name}
+                        </Link>
+                      ) : (
+                        'imported'
+                      )}
                     </Td>
-                    <Td numeric>{row.searchSeed}</Td>
+                    <Td numeric>{row.search?.seed ?? '–'}</Td>
                     <Td>{row.engineVersion}</Td>
                     <Td className="font-mono text-xs">
                       <span data-raw={row.scoringHash} title={row.scoringHash}>

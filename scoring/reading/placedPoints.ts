@@ -1,0 +1,130 @@
+import { InputError } from '../errors.ts'
+import { applyBig, transposed, type BasisChange } from '../geometry/latticeReduction.ts'
+import { polytopeFromPoints, polytopeInReducedBasis, type Polytope } from '../geometry/polytope.ts'
+import { checkPoint } from '../geometry/polytopeInput.ts'
+import { polytopeFromWeights } from '../geometry/weights.ts'
+import type { GivenCandidate, GivenPolytope } from './given.ts'
+
+/** What a listed point is to the polytope: one of its points (an index), or one that a triangulation does not count. */
+export type PointPlace = number | 'origin' | 'inside-a-facet'
+
+/** A polytope that a text gives, with the points that the text's heights and indices refer to. */
+export interface PlacedPoints {
+  readonly polytope: Polytope
+  /** Of each listed point, in the order of the list. */
+  readonly places: readonly PointPlace[]
+  /** True when the text lists points; false when the polytope's own order is meant. */
+  readonly listed: boolean
+  /** Coordinates of a point of the polytope as the text would give them: `(1, 0, 0, 0)`. */
+  nameOf(point: number): string
+}
+
+/**
+ * The polytope of a candidate and its list of points.
+ *
+ * @throws InputError of the geometry, with paths that begin with the section (`vertices[2][1]`), and points.outside,
+ *   points.twice
+ */
+export function placedPoints({
+  polytope: given,
+  points,
+  triangulation,
+}: Pick<GivenCandidate, 'polytope' | 'points' | 'triangulation'>): PlacedPoints {
+  // |v|^2 means the coordinates given.
+  const { polytope, basis } = polytopeOf(given, triangulation.kind !== 'quadratic')
+  const list = points ?? (given.kind === 'points' ? given.rows : null)
+  const back = basis && transposed(basis.dual)
+  const nameOf = (point: number): string => {
+    const own = [...polytope.points.subarray(4 * point, 4 * point + 4)]
+    return `(${(back ? applyBig(back, own.map(BigInt)) : own).join(', ')})`
+  }
+  if (list === null) {
+    const places = Array.from({ length: polytope.pointCount }, (_, point) => point)
+    return { polytope, places, listed: false, nameOf }
+  }
+  const section = points !== null ? 'points' : 'vertices'
+  return { polytope, places: placesOf(polytope, list, basis, section), listed: true, nameOf }
+}
+
+function polytopeOf(given: GivenPolytope, reduce: boolean): { polytope: Polytope; basis?: BasisChange } {
+  switch (given.kind) {
+    case 'points':
+      return inSection('vertices', () =>
+        reduce ? polytopeInReducedBasis(given.rows) : { polytope: polytopeFromPoints(given.rows) },
+      )
+    case 'weights':
+      return { polytope: inSection('weights', () => polytopeFromWeights(given.weights, given.side)) }
+    case 'key': {
+      const { vertices } = given
+      if (vertices === undefined) {
+        throw new InputError(
+          'polytope.not-known',
+          `There is no polytope with the key ${given.key} in the library or in this campaign; give its vertices.`,
+          'polytope',
+          given.key,
+        )
+      }
+      return { polytope: inSection('vertices', () => polytopeFromPoints(vertices)) }
+    }
+  }
+}
+
+function placesOf(
+  polytope: Polytope,
+  rows: readonly (readonly number[])[],
+  basis: BasisChange | undefined,
+  section: 'points' | 'vertices',
+): PointPlace[] {
+  const indexOf = new Map<string, number>()
+  const { points, pointCount } = polytope
+  for (let p = 0; p < pointCount; p++) indexOf.set(points.subarray(4 * p, 4 * p + 4).join(), p)
+  const first = new Map<string, number>()
+  return rows.map((row, index) => {
+    inSection(section, () => checkPoint(row, index))
+    const own = basis ? applyBig(basis.matrix, row.map(BigInt)) : row.map(BigInt)
+    const name = own.join()
+    const earlier = first.get(name)
+    if (earlier !== undefined) {
+      throw new InputError(
+        'points.twice',
+        `The point (${row.join(', ')}) is listed twice, as point ${earlier} and as point ${index} (counted from 0).`,
+        `${section}[${index}]`,
+        row,
+      )
+    }
+    first.set(name, index)
+    return indexOf.get(name) ?? placeApart(polytope, own, row, `${section}[${index}]`)
+  })
+}
+
+function placeApart(
+  { facets, facetCount }: Polytope,
+  own: readonly bigint[],
+  row: readonly number[],
+  path: string,
+): PointPlace {
+  if (own.every((entry) => entry === 0n)) return 'origin'
+  for (let a = 0; a < facetCount; a++) {
+    let value = 0n
+    for (let axis = 0; axis < 4; axis++) value += BigInt(facets[4 * a + axis]) * own[axis]
+    if (value < -1n) {
+      throw new InputError(
+        'points.outside',
+        `The point (${row.join(', ')}) lies outside the polytope: at lattice distance ${-value - 1n} beyond one of its facets.`,
+        path,
+        row,
+      )
+    }
+  }
+  return 'inside-a-facet'
+}
+
+/** Runs a check; the path of what it throws gets the section's name in front. */
+function inSection<T>(section: string, check: () => T): T {
+  try {
+    return check()
+  } catch (error) {
+    if (!(error instanceof InputError)) throw error
+    throw new InputError(error.code, error.message, `${section}${error.path}`, error.found)
+  }
+}
