@@ -104,3 +104,10 @@ export {
   type ScoreEntry,
 } from './evaluation.ts'
 export { evaluationInputSchema, evaluationParts, ruleOfInput } from './evaluation/input.ts'
+
+// Certificates: the fast road's claims checked by an independent one.
+export { certify, type CertificateRequest } from './certificates/certify.ts'
+export { recheck, type CertificateProblem, type Recheck } from './certificates/recheck.ts'
+export { certificateSchema, type Certificate } from './certificates/schema.ts'
+export { certifierVersion } from './certify/independentRoad.ts'
+export { facetGenericity, facetsAreGeneric } from './certify/facetTriangulation.ts'

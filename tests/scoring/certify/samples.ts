@@ -1,3 +1,6 @@
+import type { CertificateRequest } from '../../../scoring/certificates/certify.ts'
+import { canonicalClass } from '../../../scoring/geometry/classKey.ts'
+import { fineClass } from '../../../scoring/geometry/twoFaceClass.ts'
 import { normalForm } from '../../../scoring/geometry/normalForm.ts'
 import { polytopeFromPoints, type Polytope } from '../../../scoring/geometry/polytope.ts'
 import { quadraticHeights } from '../../../scoring/geometry/heights.ts'
@@ -26,3 +29,16 @@ export function genericHeights({ polytope, vertices, points }: PlainPolytope, se
   }
   throw new Error('all heights tied')
 }
+
+/** A certificate request for a polytope in normal form with noisy heights. */
+export function request(sample: PlainPolytope, rule: string | null, seed = 1): CertificateRequest {
+  const heights = genericHeights(sample, seed)
+  const form = normalForm(sample.polytope)
+  const cls = fineClass(form.polytope, heights)
+  if (cls === undefined) throw new Error('quadratic heights are fine')
+  return { vertices: sample.vertices, heights, candidateKey: canonicalClass(form, cls).key, rule }
+}
+
+/** The checks that did not pass, by their ids. */
+export const failed = (checks: readonly { id: string; result: string }[]): string[] =>
+  checks.filter(({ result }) => result === 'fail').map(({ id }) => id)

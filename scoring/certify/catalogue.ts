@@ -1,0 +1,32 @@
+export type CheckGroup = 'polytope' | 'triangulation' | 'intersections' | 'cone' | 'metric' | 'score'
+
+const entry = (group: CheckGroup, title: string) => ({ group, title })
+
+/** Every check of a certificate in its order, with its stable id. */
+export const catalogue = {
+  reflexive: entry('polytope', 'The vertices are those of a reflexive polytope; number of facets'),
+  'lattice-points': entry('polytope', 'Lattice points, the origin and the insides of facets included'),
+  'dual-lattice-points': entry('polytope', 'Lattice points of the dual polytope'),
+  points: entry('polytope', 'Points that carry divisors'),
+  hodge: entry('polytope', 'Hodge numbers h11, h21'),
+  favourable: entry('polytope', 'Favourable: part of H11 that toric divisors miss'),
+  carriers: entry('polytope', 'Dimensions of the points’ carriers'),
+  components: entry('polytope', 'Numbers of components of the divisors'),
+  'dual-interior': entry('polytope', 'Points inside the faces dual to the carriers'),
+  'polytope-key': entry('polytope', 'The polytope’s key hashes the vertices'),
+  'heights-generic': entry('triangulation', 'The heights tie on no facet; number of maximal cones'),
+  'cones-full': entry('triangulation', 'All maximal cones are non-degenerate; index of the largest'),
+  volume: entry('triangulation', 'The cones fill the polytope: sum of their lattice volumes'),
+  'points-used': entry('triangulation', 'Every point is used'),
+  regular: entry('triangulation', 'Every wall is strictly convex; depth of the origin'),
+  simplices: entry('triangulation', 'Maximal cones of the fan'),
+  triangles: entry('triangulation', 'Triangles of the 2-faces: the class'),
+  'candidate-key': entry('triangulation', 'The candidate’s key hashes the polytope’s key and the triangles'),
+  'linear-relations': entry('intersections', 'Linear relations of the toric variety that have no solution'),
+  'intersection-numbers': entry('intersections', 'Triple intersection numbers, non-zero ones'),
+  'second-chern': entry('intersections', 'Second Chern class on the divisors'),
+  euler: entry('intersections', 'Euler number from intersection numbers and from Hodge numbers'),
+  noether: entry('intersections', 'Noether’s formula on every divisor'),
+} as const satisfies Record<string, { readonly group: CheckGroup; readonly title: string }>
+
+export type CheckId = keyof typeof catalogue
