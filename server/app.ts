@@ -11,6 +11,7 @@ import { sessionCookie } from './http/sessions.ts'
 import { requestLog } from './logging.ts'
 import { campaignRoutes } from './routes/campaigns.ts'
 import { candidateRoutes } from './routes/candidates.ts'
+import { collectionRoutes } from './routes/collections.ts'
 import { eventRoutes } from './routes/events.ts'
 import { healthRoutes } from './routes/health.ts'
 import { importedCandidateRoutes } from './routes/importedCandidates.ts'
@@ -42,6 +43,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   sessionRoutes(app, context)
   campaignRoutes(app, context)
   polytopeRoutes(app, context)
+  collectionRoutes(app, context)
   targetRoutes(app, context)
   searchRoutes(app, context)
   shortlistRoutes(app, context)

@@ -34,7 +34,11 @@ async function main(): Promise<void> {
     const later = await library.open(laterFiles)
     await jobs.searches.start()
     await library.load(first)
-    await Promise.all([library.load(later), demo === null ? null : runDemoSearch(context, demo)])
+    await Promise.all([
+      library.load(later),
+      library.describe(),
+      demo === null ? null : runDemoSearch(context, demo),
+    ])
   } catch (error) {
     if (!closing) log.error({ err: error }, 'the background work of the start failed')
   }

@@ -10,6 +10,7 @@ import {
 } from './jobs/compute/importCandidates.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
+import { summaryOfEach } from './jobs/compute/polytopeSummary.ts'
 import { nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
@@ -23,6 +24,7 @@ const tasks: Tasks = {
   'weight-lines': weightLinesOfText,
   'facts-of-weight-lines': factsOfWeightLines,
   'polytope-shape': polytopeShape,
+  'summary-of-each': summaryOfEach,
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,
   'class-pictures': classPictures,

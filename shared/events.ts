@@ -17,9 +17,20 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('null'), searchId: z.string(), summary: nullSummarySchema }),
   z.object({ kind: z.literal('preview'), preview: previewSchema }),
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
+  /** Stored polytopes whose numbers are still being computed. */
+  z.object({ kind: z.literal('undescribed'), left: z.number().int() }),
   z.object({
     kind: z.literal('changed'),
-    what: z.enum(['targets', 'searches', 'shortlists', 'verdicts', 'members', 'imports']),
+    what: z.enum([
+      'targets',
+      'searches',
+      'shortlists',
+      'verdicts',
+      'members',
+      'imports',
+      'collections',
+      'polytopes',
+    ]),
   }),
   z.object({ kind: z.literal('closed'), reason: z.enum(['signed-out', 'role-lost', 'shutting-down']) }),
 ])

@@ -1,6 +1,15 @@
 import { z } from 'zod'
+import {
+  polytopeNumberNames,
+  polytopeNumbers,
+  type PolytopeNumberName,
+  type RangeName,
+} from './polytopeNumbers.ts'
 
 export const polytopeKeySchema = z.string().regex(/^[0-9a-f]{32}$/)
+
+/** A number that is computed after the polytope is stored; null until then. */
+const later = z.number().nullable()
 
 export const polytopeRowSchema = z.object({
   key: polytopeKeySchema,
@@ -17,28 +26,63 @@ export const polytopeRowSchema = z.object({
   dualLatticePoints: z.number().int(),
   favourable: z.boolean(),
   symmetryOrder: z.number().int(),
+  edges: later,
+  faces: later,
+  edgePoints: later,
+  facePoints: later,
+  facetPoints: later,
+  normalisedVolume: later,
+  dualNormalisedVolume: later,
+  planarSections: later,
+  solidSections: later,
+  nestedSections: later,
+  rigidDivisors: later,
+  splitDivisors: later,
+  /** Exact numbers of classes, before and modulo symmetry; null where they have not been counted. */
+  classes: later,
+  classOrbits: later,
+  /** log10 of an upper bound on the number of classes. */
+  classBound: later,
   weights: z.array(z.number().int()).nullable(),
   side: z.enum(['fan', 'newton']).nullable(),
 })
 export type PolytopeRow = z.infer<typeof polytopeRowSchema>
 
+const boundOf = (name: PolytopeNumberName) => {
+  const { signed, decimal } = polytopeNumbers[name]
+  const number = decimal ? z.coerce.number() : z.coerce.number().int()
+  return (signed ? number : number.min(0)).optional()
+}
+
+/** A range per number of the library, as `h11Min` and `h11Max`. */
+const ranges = Object.fromEntries(
+  polytopeNumberNames.flatMap((name) => [
+    [`${name}Min`, boundOf(name)],
+    [`${name}Max`, boundOf(name)],
+  ]),
+) as Record<RangeName, ReturnType<typeof boundOf>>
+
+const yesOrNo = z.enum(['yes', 'no']).optional()
+
 /** Query of GET /api/polytopes and /api/polytopes/hodge; also the filter form of a scope. */
 export const polytopeFilterSchema = z.object({
-  h11Min: z.coerce.number().int().min(0).optional(),
-  h11Max: z.coerce.number().int().min(0).optional(),
-  h21Min: z.coerce.number().int().min(0).optional(),
-  h21Max: z.coerce.number().int().min(0).optional(),
-  pointsMax: z.coerce.number().int().min(0).optional(),
-  favourable: z.enum(['yes', 'no']).optional(),
+  ...ranges,
+  favourable: yesOrNo,
+  /** Made from a weight system. */
+  weighted: yesOrNo,
   origin: z.enum(['bundled', 'imported']).optional(),
+  /** Part of a name, the beginning of a key, or five weights. */
   text: z.string().max(80).optional(),
+  /** A collection of the campaign, or a published one. */
+  collection: z.string().max(40).optional(),
 })
 export type PolytopeFilter = z.infer<typeof polytopeFilterSchema>
+export const filterNames = Object.keys(polytopeFilterSchema.shape) as (keyof PolytopeFilter)[]
 
 export const polytopeQuerySchema = polytopeFilterSchema.extend({
   /** Campaign whose imports are shown beside the bundled polytopes. */
   campaign: z.string().optional(),
-  sort: z.enum(['h11', 'h21', 'points', 'vertices', 'facets', 'symmetryOrder', 'name']).default('h11'),
+  sort: z.enum(['name', ...polytopeNumberNames]).default('h11'),
   order: z.enum(['asc', 'desc']).default('asc'),
   offset: z.coerce.number().int().min(0).default(0),
   limit: z.coerce.number().int().min(1).max(500).default(100),
@@ -52,6 +96,8 @@ export const hodgeCountsSchema = z.object({
   counts: z.array(z.object({ h11: z.number().int(), h21: z.number().int(), count: z.number().int() })),
   /** The bundled library is loaded in the background at first start. */
   loading: z.object({ loaded: z.number().int(), total: z.number().int() }).nullable(),
+  /** Polytopes stored before some number of the library was known: it is computed in the background. */
+  undescribed: z.number().int(),
 })
 
 export const twoFaceSchema = z.object({
@@ -125,6 +171,12 @@ export type ImportReport = z.infer<typeof importReportSchema>
 export const scopeSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('polytopes'), keys: z.array(polytopeKeySchema).min(1).max(500) }),
   z.object({ kind: z.literal('filter'), filter: polytopeFilterSchema }),
+  z.object({
+    kind: z.literal('collection'),
+    collection: z.string().min(1).max(40),
+    /** For people; the server writes the collection's name here when a search is made. */
+    name: z.string().max(80).optional(),
+  }),
 ])
 export type Scope = z.infer<typeof scopeSchema>
 

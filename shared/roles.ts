@@ -10,6 +10,8 @@ export const permissions = {
   'campaign.edit': ['lead'],
   'members.manage': ['lead'],
   'polytopes.import': ['lead', 'investigator'],
+  'collections.edit': ['lead', 'investigator'],
+  'collections.publish': ['lead'],
   'targets.edit': ['lead', 'investigator'],
   'previews.run': ['lead', 'investigator', 'reviewer', 'reader'],
   'searches.run': ['lead', 'investigator'],

@@ -3,6 +3,8 @@ import { Campaign } from './campaign.ts'
 import { CampaignPolytope } from './campaignPolytope.ts'
 import { CandidateRecord } from './candidate.ts'
 import { CandidateValue } from './candidateValue.ts'
+import { Collection } from './collection.ts'
+import { CollectionPolytope } from './collectionPolytope.ts'
 import { Find } from './find.ts'
 import { ImportedCandidate } from './importedCandidate.ts'
 import { LibraryFile } from './libraryFile.ts'
@@ -25,6 +27,8 @@ export const entities = [
   CampaignPolytope,
   CandidateRecord,
   CandidateValue,
+  Collection,
+  CollectionPolytope,
   Find,
   ImportedCandidate,
   LibraryFile,

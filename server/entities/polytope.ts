@@ -53,4 +53,62 @@ export class PolytopeRecord {
   /** Vertices in normal-form coordinates. */
   @Column({ type: 'simple-json' })
   coordinates!: number[][]
+
+  @Column({ type: 'integer', nullable: true })
+  edges!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  faces!: number | null
+
+  /** Lattice points interior to an edge, to a 2-face, and to a facet. */
+  @Column({ type: 'integer', nullable: true })
+  edgePoints!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  facePoints!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  facetPoints!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  normalisedVolume!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  dualNormalisedVolume!: number | null
+
+  /** Reflexive sections through the origin, of dimension two and three, and pairs of one inside the other. */
+  @Column({ type: 'integer', nullable: true })
+  planarSections!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  solidSections!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  nestedSections!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  rigidDivisors!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  splitDivisors!: number | null
+
+  /** log10 of an upper bound on the number of 2-face classes. */
+  @Column({ type: 'real', nullable: true })
+  classBound!: number | null
+
+  /** Version of the numbers above; null or an older one: they are still to be computed. */
+  @Index()
+  @Column({ type: 'integer', nullable: true })
+  summaryVersion!: number | null
+
+  /** Number of 2-face classes, before and modulo symmetry, where they have been counted. */
+  @Column({ type: 'integer', nullable: true })
+  classes!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  classOrbits!: number | null
+
+  /** How many classes the longest count had seen when it was stopped; null when none was. */
+  @Column({ type: 'integer', nullable: true })
+  classesSeen!: number | null
 }

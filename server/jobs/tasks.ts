@@ -9,6 +9,7 @@ import type {
 } from './compute/importCandidates.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { scoreCandidates } from './compute/scoreCandidates.ts'
+import type { summaryOfEach } from './compute/polytopeSummary.ts'
 import type { nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
 
 /** The tasks of the worker threads: pure functions of plain data, by name. */
@@ -22,6 +23,7 @@ export interface Tasks {
   'weight-lines': typeof weightLinesOfText
   'facts-of-weight-lines': typeof factsOfWeightLines
   'polytope-shape': typeof polytopeShape
+  'summary-of-each': typeof summaryOfEach
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra
   'class-pictures': typeof classPictures

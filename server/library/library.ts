@@ -1,41 +1,40 @@
-import type { DataSource } from 'typeorm'
-import type { Logger } from 'pino'
 import type { FactsOrProblem } from '../jobs/compute/importBlocks.ts'
 import type { PolytopeFacts } from '../jobs/compute/polytopeFacts.ts'
-import type { ComputePool } from '../jobs/computePool.ts'
-import type { Scheduler, WorkSource } from '../jobs/scheduler.ts'
+import type { WorkSource } from '../jobs/scheduler.ts'
 import { loadedOf, storeBundled } from '../services/libraryRows.ts'
-import type { Streams } from '../streams.ts'
-import type { WriteLock } from '../writeLock.ts'
 import { readBundledFile, type BundledFile, type BundledPolytope } from './bundled.ts'
+import { Description, type DescriptionParts } from './description.ts'
 
 const stretchLength = 40
-
-interface LibraryParts {
-  readonly source: DataSource
-  readonly writes: WriteLock
-  readonly streams: Streams
-  readonly scheduler: Scheduler
-  readonly pool: ComputePool
-  readonly log: Logger
-}
 
 /**
  * The bundled polytopes. At first start their normal forms and Hodge numbers are computed in the worker threads,
  * in turn with the searches; what the files say about them is checked, not trusted.
  */
 export class Library {
-  readonly #parts: LibraryParts
+  readonly #parts: DescriptionParts
+  readonly #description: Description
   #loaded = 0
   #total = 0
 
-  constructor(parts: LibraryParts) {
+  constructor(parts: DescriptionParts) {
     this.#parts = parts
+    this.#description = new Description(parts)
   }
 
   /** How far loading has come; null when there is nothing left to load. */
   get loading(): { loaded: number; total: number } | null {
     return this.#loaded < this.#total ? { loaded: this.#loaded, total: this.#total } : null
+  }
+
+  /** Stored polytopes whose numbers are still being computed. */
+  get undescribed(): number {
+    return this.#description.left
+  }
+
+  /** Computes the numbers of the library for polytopes stored before these numbers existed. */
+  describe(): Promise<void> {
+    return this.#description.run()
   }
 
   /** Announces files to be loaded, so that progress is told over all of them. */

@@ -1,5 +1,10 @@
 import { FirstSchema1796100000000 } from './1796100000000-firstSchema.ts'
+import { LibraryNumbers1796200200000 } from './1796200200000-libraryNumbers.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 
 /** In order. A migration that has been released is never edited. */
-export const migrations = [FirstSchema1796100000000, ImportedCandidates1796200300000]
+export const migrations = [
+  FirstSchema1796100000000,
+  LibraryNumbers1796200200000,
+  ImportedCandidates1796200300000,
+]

@@ -15,16 +15,15 @@ import {
   uploadLimitBytes,
 } from '../../shared/polytopes.ts'
 import type { ServerContext } from '../context.ts'
-import { Membership } from '../entities/membership.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { uploadedText } from '../http/uploadedText.ts'
 import { presentPolytopeRow } from '../presenters/polytopes.ts'
-import { notFound } from '../problems.ts'
 import { readPolytopeDetail } from '../services/geometry.ts'
 import { importText, importWeights } from '../services/imports.ts'
-import { countByHodge, listPolytopes, type Viewer } from '../services/polytopes.ts'
+import { countByHodge, listPolytopes } from '../services/polytopes.ts'
 import { summariseScope } from '../services/scopes.ts'
 import { importWeightLines } from '../services/weightLines.ts'
+import { viewerOf } from '../services/viewers.ts'
 
 const upload = multer({
   storage: multer.memoryStorage(),
@@ -39,14 +38,6 @@ const pastedBodyLimit = 3 * pastedLimitBytes
 export function polytopeRoutes(app: Express, context: ServerContext): void {
   const { manager } = context.source
 
-  /** The library beside one campaign's imports, or beside those of all the account's campaigns. */
-  const viewerOf = async (accountId: string, campaignId: string | undefined): Promise<Viewer> => {
-    if (campaignId === undefined) return { accountId }
-    const member = await manager.existsBy(Membership, { campaignId, accountId })
-    if (!member) throw notFound('campaign')
-    return { campaignId }
-  }
-
   endpoint(app, context, {
     method: 'get',
     path: '/api/polytopes',
@@ -55,7 +46,7 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
     answer: polytopePageSchema,
     handle: async ({ account, query }) => {
       const { campaign, sort, order, offset, limit, ...filter } = query
-      const viewer = await viewerOf(account.id, campaign)
+      const viewer = await viewerOf(manager, account.id, campaign)
       const { total, rows } = await listPolytopes(manager, viewer, filter, { sort, order, offset, limit })
       return { total, rows: rows.map(presentPolytopeRow) }
     },
@@ -68,10 +59,11 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
     query: polytopeQuerySchema,
     answer: hodgeCountsSchema,
     handle: async ({ account, query }) => {
-      const viewer = await viewerOf(account.id, query.campaign)
+      const viewer = await viewerOf(manager, account.id, query.campaign)
       const counts = await countByHodge(manager, viewer, query)
       const total = counts.reduce((sum, { count }) => sum + count, 0)
-      return { total, counts, loading: context.library.loading }
+      const { loading, undescribed } = context.library
+      return { total, counts, loading, undescribed }
     },
   })
 
@@ -82,7 +74,7 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
     query: viewSchema,
     answer: polytopeDetailSchema,
     handle: async ({ account, params, query }) =>
-      readPolytopeDetail(context, await viewerOf(account.id, query.campaign), params.key),
+      readPolytopeDetail(context, await viewerOf(manager, account.id, query.campaign), params.key),
   })
 
   endpoint(app, context, {

@@ -1,12 +1,12 @@
-import { Brackets, type EntityManager } from 'typeorm'
+import type { EntityManager } from 'typeorm'
 import type { CandidateRecord as CandidateRecordView } from '../../shared/candidates.ts'
 import { CandidateRecord } from '../entities/candidate.ts'
 import { ImportedCandidate } from '../entities/importedCandidate.ts'
 import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
 import { notFound } from '../problems.ts'
-import type { Viewer } from './polytopes.ts'
 import { listVerdicts } from './verdicts.ts'
+import { mayBeSeen, type Viewer } from './visibility.ts'
 
 /** Those of the keys that name stored candidates on polytopes that the viewer may see, with the polytopes loaded. */
 export function listVisibleCandidates(
@@ -14,20 +14,11 @@ export function listVisibleCandidates(
   viewer: Viewer,
   keys: readonly string[],
 ): Promise<CandidateRecord[]> {
-  const imports =
-    'campaignId' in viewer
-      ? 'SELECT i.polytopeKey FROM campaign_polytope i WHERE i.campaignId = :campaignId'
-      : `SELECT i.polytopeKey FROM campaign_polytope i JOIN membership m ON m.campaignId = i.campaignId
-         WHERE m.accountId = :accountId`
   return manager
     .createQueryBuilder(CandidateRecord, 'candidate')
     .innerJoinAndSelect('candidate.polytope', 'polytope')
     .where('candidate.key IN (:...keys)', { keys })
-    .andWhere(
-      new Brackets((either) =>
-        either.where("polytope.origin = 'bundled'").orWhere(`polytope.key IN (${imports})`, viewer),
-      ),
-    )
+    .andWhere(mayBeSeen(viewer), viewer)
     .getMany()
 }
 

@@ -1,11 +1,12 @@
 import type { EntityManager, SelectQueryBuilder } from 'typeorm'
+import type { PolytopeNumberName } from '../../shared/polytopeNumbers.ts'
 import type { PolytopeFilter } from '../../shared/polytopes.ts'
-import { CampaignPolytope } from '../entities/campaignPolytope.ts'
 import { PolytopeRecord } from '../entities/polytope.ts'
 import { notFound } from '../problems.ts'
+import { applyFilter, numberColumn } from './polytopeFilter.ts'
+import { mayBeSeen, visibleNames, type Viewer } from './visibility.ts'
 
-/** Whose imports are visible beside the bundled polytopes: one campaign's, or those of an account's campaigns. */
-export type Viewer = { readonly campaignId: string } | { readonly accountId: string }
+export type { Viewer } from './visibility.ts'
 
 /** A polytope with the name the viewer's campaign gave it, if it did. */
 export interface NamedPolytope {
@@ -14,7 +15,7 @@ export interface NamedPolytope {
 }
 
 export interface PolytopeOrder {
-  readonly sort: 'h11' | 'h21' | 'points' | 'vertices' | 'facets' | 'symmetryOrder' | 'name'
+  readonly sort: PolytopeNumberName | 'name'
   readonly order: 'asc' | 'desc'
   readonly offset: number
   readonly limit: number
@@ -30,7 +31,9 @@ export async function listPolytopes(
   const direction = order === 'asc' ? 'ASC' : 'DESC'
   const query = visible(manager, viewer, filter)
   const total = await query.getCount()
-  const ordered = query.clone().orderBy(`polytope.${sort}`, direction)
+  const column = sort === 'name' ? 'polytope.name' : numberColumn(sort)
+  // What is not known yet stands at the end either way.
+  const ordered = query.clone().orderBy(column, direction, 'NULLS LAST')
   for (const next of ['h11', 'h21', 'key'].filter((column) => column !== sort)) {
     ordered.addOrderBy(`polytope.${next}`, 'ASC')
   }
@@ -77,44 +80,12 @@ export function visible(
   viewer: Viewer,
   filter: PolytopeFilter,
 ): SelectQueryBuilder<PolytopeRecord> {
-  const query = manager.createQueryBuilder(PolytopeRecord, 'polytope')
-  const imports =
-    'campaignId' in viewer
-      ? 'SELECT i.polytopeKey FROM campaign_polytope i WHERE i.campaignId = :campaignId'
-      : `SELECT i.polytopeKey FROM campaign_polytope i JOIN membership m ON m.campaignId = i.campaignId
-         WHERE m.accountId = :accountId`
-  query.where(`(polytope.origin = 'bundled' OR polytope.key IN (${imports}))`, viewer)
-  const bounds = [
-    ['h11Min', 'polytope.h11 >= :h11Min'],
-    ['h11Max', 'polytope.h11 <= :h11Max'],
-    ['h21Min', 'polytope.h21 >= :h21Min'],
-    ['h21Max', 'polytope.h21 <= :h21Max'],
-    ['pointsMax', 'polytope.points <= :pointsMax'],
-    ['origin', 'polytope.origin = :origin'],
-  ] as const
-  for (const [name, condition] of bounds) {
-    if (filter[name] !== undefined) query.andWhere(condition, { [name]: filter[name] })
-  }
-  if (filter.favourable !== undefined) {
-    query.andWhere('polytope.favourable = :favourable', { favourable: filter.favourable === 'yes' })
-  }
-  if (filter.text !== undefined && filter.text.trim() !== '') {
-    const ownName =
-      'campaignId' in viewer
-        ? ` OR EXISTS (SELECT 1 FROM campaign_polytope n WHERE n.polytopeKey = polytope.key
-             AND n.campaignId = :campaignId AND n.name LIKE :text ESCAPE '\\')`
-        : ''
-    query.andWhere(
-      `(polytope.name LIKE :text ESCAPE '\\' OR polytope.key LIKE :text ESCAPE '\\'${ownName})`,
-      {
-        text: `%${filter.text.trim().replace(/[\\%_]/g, '\\$&')}%`,
-      },
-    )
-  }
+  const query = manager.createQueryBuilder(PolytopeRecord, 'polytope').where(mayBeSeen(viewer), viewer)
+  applyFilter(query, viewer, filter)
   return query
 }
 
-/** Names the viewer's campaigns gave to imported polytopes. */
+/** Names under which the viewer sees imported polytopes: those of the viewer's campaigns, else a published one. */
 export async function ownNames(
   manager: EntityManager,
   viewer: Viewer,
@@ -122,16 +93,13 @@ export async function ownNames(
 ): Promise<Map<string, string>> {
   const keys = polytopes.filter(({ origin }) => origin === 'imported').map(({ key }) => key)
   if (keys.length === 0) return new Map()
-  const query = manager
-    .createQueryBuilder(CampaignPolytope, 'own')
-    .where('own.polytopeKey IN (:...keys)', { keys })
-    .orderBy('own.createdAt', 'DESC')
-  if ('campaignId' in viewer) query.andWhere('own.campaignId = :campaignId', viewer)
-  else
-    query.andWhere(
-      'own.campaignId IN (SELECT m.campaignId FROM membership m WHERE m.accountId = :accountId)',
-      viewer,
-    )
-  const rows = await query.getMany()
+  const rows = await manager
+    .createQueryBuilder()
+    .select(['names.polytopeKey AS polytopeKey', 'names.name AS name'])
+    .from(`(${visibleNames(viewer)})`, 'names')
+    .where('names.polytopeKey IN (:...keys)', { ...viewer, keys })
+    .orderBy('names.own', 'ASC')
+    .getRawMany<{ polytopeKey: string; name: string }>()
+  // The viewer's own come last, and stay.
   return new Map(rows.map(({ polytopeKey, name }) => [polytopeKey, name]))
 }

@@ -10,7 +10,7 @@ import { conflict, notFound } from '../problems.ts'
 import { topFinds, withHitLine } from './finds.ts'
 import { readHitLine, readNullSummary } from './nullSamples.ts'
 import { requireSoundRule } from './rules.ts'
-import { resolveScope, scopeHash } from './scopes.ts'
+import { namedScope, resolveScope, scopeHash } from './scopes.ts'
 import { readVersion } from './targets.ts'
 
 const withWords = { author: true, targetVersion: { target: true } } as const
@@ -54,7 +54,8 @@ export async function createSearch(
   const { source, writes, streams, jobs } = context
   const version = await readVersion(source.manager, campaignId, input.targetVersionId)
   const { scoringHash, engineVersion } = requireSoundRule(version.text, 'targetVersionId')
-  const polytopes = await resolveScope(source.manager, campaignId, input.scope)
+  const scope = await namedScope(source.manager, campaignId, input.scope)
+  const polytopes = await resolveScope(source.manager, campaignId, scope)
   const polytopeKeys = polytopes.map(({ key }) => key)
   const id = randomUUID()
   await writes.transaction(async (manager) => {
@@ -65,7 +66,7 @@ export async function createSearch(
       targetVersionId: version.id,
       name: input.name || `${version.target.name}, search ${earlier + 1}`,
       method: input.method,
-      scope: input.scope,
+      scope,
       polytopeKeys,
       scopeHash: scopeHash(polytopeKeys),
       budget: input.budget,

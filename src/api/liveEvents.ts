@@ -27,6 +27,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       return
     case 'library':
       return applyLibrary(client, event)
+    case 'undescribed':
+      return applyDescription(client, event)
     case 'changed': {
       const keys = {
         targets: ['targets', campaign],
@@ -35,6 +37,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
         verdicts: ['shortlist'],
         members: ['campaigns'],
         imports: ['imported-candidates', campaign],
+        collections: ['collections'],
+        polytopes: ['polytope-classes'],
       } as const
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
@@ -57,6 +61,18 @@ function applyLibrary(client: QueryClient, { loaded, total }: StreamEvent & { ki
   client.setQueriesData<HodgeCounts>(
     { queryKey: ['polytopes', 'hodge'] },
     (old) => old && { ...old, loading: { loaded, total } },
+  )
+}
+
+/** The tables are fetched again when the last number of the library is known. */
+function applyDescription(client: QueryClient, { left }: StreamEvent & { kind: 'undescribed' }): void {
+  if (left === 0) {
+    void client.invalidateQueries({ queryKey: ['polytopes'] })
+    return
+  }
+  client.setQueriesData<HodgeCounts>(
+    { queryKey: ['polytopes', 'hodge'] },
+    (old) => old && { ...old, undescribed: left },
   )
 }
 

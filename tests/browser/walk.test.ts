@@ -146,7 +146,7 @@ describe.skipIf(chromiumPath === null)(
       await page.getByRole('link', { name: 'Search with it' }).click()
       await page.getByRole('heading', { level: 1, name: 'New search' }).waitFor()
       await page.getByLabel('All that match a filter').check()
-      await page.getByLabel('Name contains').fill('seven weights')
+      await page.getByLabel('Name, key or weights').fill('seven weights')
       // The second pasted polytope bears the name, too, when the bundled library had not come to it yet.
       await page.getByLabel('h11 from').fill('24')
       await page.getByText(/h11 24/).waitFor()

@@ -1,6 +1,8 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { IsNull } from 'typeorm'
 import { LibraryFile } from '../../server/entities/libraryFile.ts'
 import { PolytopeRecord } from '../../server/entities/polytope.ts'
+import { polytopeNumberNames } from '../../shared/polytopeNumbers.ts'
 import type { PolytopeRow } from '../../shared/polytopes.ts'
 import { bundledEntries, bundledFile, loadEntries } from './support/bundledSample.ts'
 import { openTestServer, type Agent, type TestServer } from './support/testServer.ts'
@@ -40,15 +42,71 @@ describe('the bundled library', () => {
   it('is filtered and sorted', async () => {
     expect((await rows('h11Min=2&h11Max=2')).every(({ h11 }) => h11 === 2)).toBe(true)
     expect(await rows('h11Min=2&h11Max=2&limit=500')).toHaveLength(36)
-    // One of the polytopes with h11 = 2 is not favourable (arXiv:1411.1418: 36 and 35, counted up to h11 = 2).
-    const split = await rows('favourable=no')
-    expect(split.every(({ favourable }) => !favourable)).toBe(true)
+    // All 5 + 36 with h11 = 1, 2 are favourable (arXiv:1411.1418).
+    expect(await rows('favourable=yes&h11Max=2')).toHaveLength(41)
+    expect(await rows('favourable=no&h11Max=2')).toEqual([])
     const falling = (await rows('sort=h21&order=desc&limit=3')).map(({ h21 }) => h21)
     expect(falling).toEqual([...falling].sort((a, b) => b - a))
     expect(falling[0]).toBe(491)
     expect((await rows('text=w11-491')).map(({ h21 }) => h21)).toEqual([491])
     expect(await rows('text=%25')).toEqual([])
     expect((await rows('offset=40&limit=100')).length).toBe(3)
+  })
+
+  it('is filtered and sorted by every number, what is not known at the end', async () => {
+    // The quintic's polytope is a simplex, and its five divisors have h2(O) = 4: none is rigid.
+    const [quintic] = await rows('eulerMin=-200&eulerMax=-200&facetsMax=5&dualLatticePointsMin=126')
+    const simplex = {
+      edges: 10,
+      faces: 10,
+      edgePoints: 0,
+      facePoints: 0,
+      facetPoints: 0,
+      rigidDivisors: 0,
+      splitDivisors: 0,
+    }
+    expect(quintic).toMatchObject({ h11: 1, h21: 101, euler: -200, ...simplex })
+    for (const row of await rows('edgesMin=11&limit=500')) expect(row.edges).toBeGreaterThanOrEqual(11)
+    // Euler's relation of a four-dimensional polytope: f0 - f1 + f2 - f3 = 0.
+    for (const row of await rows('limit=500'))
+      expect(row.vertices - (row.edges ?? 0) + (row.faces ?? 0) - row.facets).toBe(0)
+    for (const name of polytopeNumberNames) {
+      for (const order of ['asc', 'desc'] as const) {
+        const values = (await rows(`sort=${name}&order=${order}&limit=500`)).map((row) => row[name])
+        const known = values.filter((value) => value !== null)
+        expect(values.slice(0, known.length), `${name} ${order}`).toEqual(known)
+        const sign = order === 'asc' ? 1 : -1
+        expect(known, `${name} ${order}`).toEqual([...known].sort((a, b) => sign * (a - b)))
+      }
+      const lows = await rows(`${name}Min=3&limit=500`)
+      expect(
+        lows.every((row) => (row[name] ?? 0) >= 3),
+        name,
+      ).toBe(true)
+    }
+  })
+
+  it('is searched by name, by the beginning of a key, and by weights in any order', async () => {
+    const [quintic] = await rows('text=1, 1 1 1 1')
+    expect(quintic).toMatchObject({ h11: 1, h21: 101, weights: [1, 1, 1, 1, 1] })
+    expect(await rows('text=2 2 2 2 2')).toMatchObject([{ h11: 1 }, { h11: 101 }])
+    expect(await rows('text=1 1 1 1 77')).toEqual([])
+    expect(await rows('text=42 28 12 1 1')).toMatchObject([{ h11: 11, h21: 491 }])
+    expect(await rows(`text=${quintic.key.slice(0, 10).toUpperCase()}`)).toMatchObject([{ key: quintic.key }])
+    expect(await rows(`text=${quintic.key.slice(5, 15)}`)).toEqual([])
+  })
+
+  it('computes the numbers of polytopes stored before they were known', async () => {
+    const { library, source, writes } = server.context
+    const before = await rows('limit=500')
+    await writes.transaction((manager) =>
+      manager.update(PolytopeRecord, { h11: 2 }, { summaryVersion: null, edges: null, rigidDivisors: null }),
+    )
+    expect(await rows('edgesMin=1&limit=500')).toHaveLength(before.length - 36)
+    await library.describe()
+    expect(library.undescribed).toBe(0)
+    expect(await rows('limit=500')).toEqual(before)
+    expect(await source.manager.countBy(PolytopeRecord, { summaryVersion: IsNull() })).toBe(0)
   })
 
   it('refuses a query that makes no sense, naming the field', async () => {

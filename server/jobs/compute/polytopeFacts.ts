@@ -1,7 +1,8 @@
 import { normalForm, type Polytope } from '../../../scoring/index.ts'
+import { polytopeSummary, type PolytopeSummary } from './polytopeSummary.ts'
 
 /** What the library stores of a polytope. */
-export interface PolytopeFacts {
+export interface PolytopeFacts extends PolytopeSummary {
   readonly key: string
   readonly h11: number
   readonly h21: number
@@ -29,6 +30,7 @@ export function polytopeFacts(polytope: Polytope): PolytopeFacts {
     dualLatticePoints: normal.dualLatticePoints,
     favourable: normal.favourable,
     symmetryOrder: automorphisms.length,
+    ...polytopeSummary(normal),
     coordinates: rowsOfFour(normal.points.subarray(0, 4 * normal.vertexCount)),
   }
 }

@@ -6,8 +6,11 @@ import { polytopePageQuery, polytopeQuery, scopeQuery } from '../../api/polytope
 import { explain } from '../../api/request.ts'
 import { useDelayed } from '../../lib/useDelayed.ts'
 import { counted, formatNumber } from '../../lib/numbers.ts'
+import { changedFilter } from '../../lib/libraryAddress.ts'
+import { CollectionSelect } from '../collection/CollectionSelect.tsx'
+import { FilterFields } from '../filter/FilterFields.tsx'
 import { IconButton } from '../ui/Button.tsx'
-import { Select, TextField } from '../ui/Field.tsx'
+import { TextField } from '../ui/Field.tsx'
 
 interface ScopeFieldsProps {
   campaign: string
@@ -24,6 +27,7 @@ export function ScopeFields({ campaign, scope, onScope }: ScopeFieldsProps) {
         {(
           [
             ['polytopes', 'Chosen polytopes'],
+            ['collection', 'A collection'],
             ['filter', 'All that match a filter'],
           ] as const
         ).map(([kind, label]) => (
@@ -32,15 +36,32 @@ export function ScopeFields({ campaign, scope, onScope }: ScopeFieldsProps) {
               type="radio"
               name="scope-kind"
               checked={scope.kind === kind}
-              onChange={() => onScope(kind === 'polytopes' ? { kind, keys: [] } : { kind, filter: {} })}
+              onChange={() => onScope(emptyScope(kind))}
             />
             {label}
           </label>
         ))}
       </fieldset>
-      {scope.kind === 'filter' ? (
-        <FilterFields filter={scope.filter} onFilter={(filter) => onScope({ kind: 'filter', filter })} />
-      ) : (
+      {scope.kind === 'filter' && (
+        <FilterFields
+          campaign={campaign}
+          filter={scope.filter}
+          onChange={(changes) => onScope({ kind: 'filter', filter: changedFilter(scope.filter, changes) })}
+        />
+      )}
+      {scope.kind === 'collection' && (
+        <CollectionSelect
+          className="max-w-96"
+          label="Collection"
+          none="choose…"
+          campaign={campaign}
+          value={scope.collection}
+          onChange={(found) =>
+            onScope({ kind: 'collection', collection: found?.id ?? '', name: found?.name })
+          }
+        />
+      )}
+      {scope.kind === 'polytopes' && (
         <PolytopeChooser
           campaign={campaign}
           keys={scope.keys}
@@ -52,7 +73,14 @@ export function ScopeFields({ campaign, scope, onScope }: ScopeFieldsProps) {
   )
 }
 
-export const isEmptyScope = (scope: Scope) => scope.kind === 'polytopes' && scope.keys.length === 0
+function emptyScope(kind: Scope['kind']): Scope {
+  if (kind === 'polytopes') return { kind, keys: [] }
+  return kind === 'collection' ? { kind, collection: '' } : { kind, filter: {} }
+}
+
+export const isEmptyScope = (scope: Scope) =>
+  (scope.kind === 'polytopes' && scope.keys.length === 0) ||
+  (scope.kind === 'collection' && scope.collection === '')
 
 /** How many polytopes the scope holds and how large they are, as the server counts them. */
 export function ScopeSummary({ campaign, scope }: { campaign: string; scope: Scope }) {
@@ -62,7 +90,10 @@ export function ScopeSummary({ campaign, scope }: { campaign: string; scope: Sco
     enabled: !isEmptyScope(settled),
     placeholderData: keepPreviousData,
   })
-  if (isEmptyScope(scope)) return <p className="text-soft">Choose at least one polytope.</p>
+  if (isEmptyScope(scope)) {
+    const what = scope.kind === 'collection' ? 'a collection' : 'at least one polytope'
+    return <p className="text-soft">Choose {what}.</p>
+  }
   if (summary.isError) {
     return (
       <p role="alert" className="text-rejected">
@@ -82,71 +113,6 @@ export function ScopeSummary({ campaign, scope }: { campaign: string; scope: Sco
       {pointsMax !== null && <>, up to {counted(pointsMax, 'point')}</>}
       {count > maximumScope && `; a scope holds at most ${formatNumber(maximumScope)}`}
     </p>
-  )
-}
-
-const bounds = [
-  ['h11Min', 'h11 from'],
-  ['h11Max', 'h11 to'],
-  ['h21Min', 'h21 from'],
-  ['h21Max', 'h21 to'],
-  ['pointsMax', 'Points, at most'],
-] as const
-
-function FilterFields({
-  filter,
-  onFilter,
-}: {
-  filter: PolytopeFilter
-  onFilter: (filter: PolytopeFilter) => void
-}) {
-  const set = (name: keyof PolytopeFilter, value: string) => {
-    const next: Record<string, unknown> = { ...filter }
-    if (value === '') delete next[name]
-    else
-      next[name] =
-        name.endsWith('Min') || name.endsWith('Max') ? Math.max(0, Math.floor(Number(value))) : value
-    onFilter(next as PolytopeFilter)
-  }
-  return (
-    <div className="grid grid-cols-2 gap-2 sm:grid-cols-4">
-      {bounds.map(([name, label]) => (
-        <TextField
-          key={name}
-          label={label}
-          type="number"
-          min={0}
-          value={filter[name] ?? ''}
-          onChange={(event) => set(name, event.target.value)}
-        />
-      ))}
-      <Select
-        label="Favourable"
-        value={filter.favourable ?? ''}
-        options={[
-          ['', 'yes or no'],
-          ['yes', 'yes'],
-          ['no', 'no'],
-        ]}
-        onChange={(event) => set('favourable', event.target.value)}
-      />
-      <Select
-        label="Origin"
-        value={filter.origin ?? ''}
-        options={[
-          ['', 'all'],
-          ['bundled', 'bundled'],
-          ['imported', 'imported'],
-        ]}
-        onChange={(event) => set('origin', event.target.value)}
-      />
-      <TextField
-        label="Name contains"
-        value={filter.text ?? ''}
-        maxLength={80}
-        onChange={(event) => set('text', event.target.value)}
-      />
-    </div>
   )
 }
 

@@ -1,4 +1,5 @@
 import { type Scope } from '../../../shared/polytopes.ts'
+import { filterWords } from '../../lib/filterWords.ts'
 import { readFilter } from '../../lib/libraryAddress.ts'
 
 /** The scope an address names: `polytopes=key,key` or the library's filter words. */
@@ -13,19 +14,7 @@ export function scopeFromAddress(search: URLSearchParams): Scope | null {
 export function describeScope(scope: Scope): string {
   if (scope.kind === 'polytopes')
     return scope.keys.length === 1 ? 'one polytope' : `${scope.keys.length} chosen polytopes`
-  const { filter } = scope
-  const parts: string[] = []
-  const range = (name: string, low?: number, high?: number) => {
-    if (low !== undefined && low === high) parts.push(`${name} = ${low}`)
-    else if (low !== undefined && high !== undefined) parts.push(`${name} from ${low} to ${high}`)
-    else if (low !== undefined) parts.push(`${name} ≥ ${low}`)
-    else if (high !== undefined) parts.push(`${name} ≤ ${high}`)
-  }
-  range('h11', filter.h11Min, filter.h11Max)
-  range('h21', filter.h21Min, filter.h21Max)
-  range('points', undefined, filter.pointsMax)
-  if (filter.favourable) parts.push(filter.favourable === 'yes' ? 'favourable' : 'not favourable')
-  if (filter.origin) parts.push(filter.origin)
-  if (filter.text) parts.push(`name contains “${filter.text}”`)
+  if (scope.kind === 'collection') return scope.name ? `the collection “${scope.name}”` : 'a collection'
+  const parts = filterWords(scope.filter).map(({ words }) => words)
   return parts.length > 0 ? `all polytopes with ${parts.join(', ')}` : 'the whole library'
 }

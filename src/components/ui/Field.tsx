@@ -47,6 +47,21 @@ function FieldFrame({
 const described = (id: string, { hint, error }: FieldProps) =>
   [hint !== undefined && `${id}-hint`, error && `${id}-error`].filter(Boolean).join(' ') || undefined
 
+/** Any control in the frame of a field; it takes what it is given. */
+export function Field({
+  children,
+  ...frame
+}: FieldProps & {
+  children: (field: { id: string; className: string; 'aria-describedby'?: string }) => ReactNode
+}) {
+  const id = useId()
+  return (
+    <FieldFrame id={id} {...frame}>
+      {children({ id, className: box, 'aria-describedby': described(id, frame) })}
+    </FieldFrame>
+  )
+}
+
 export function TextField({
   label,
   hint,

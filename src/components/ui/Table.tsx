@@ -57,17 +57,24 @@ export function Td({ numeric, className = '', ...rest }: CellProps & TdHTMLAttri
 export function SortButton({
   active,
   order,
+  title,
   onClick,
   children,
 }: {
   active: boolean
   order: 'asc' | 'desc'
+  title?: string
   onClick: () => void
   children: ReactNode
 }) {
   const Arrow = order === 'asc' ? ArrowUp : ArrowDown
   return (
-    <button type="button" onClick={onClick} className="inline-flex items-center gap-0.5 hover:text-action">
+    <button
+      type="button"
+      title={title}
+      onClick={onClick}
+      className="inline-flex items-center gap-0.5 hover:text-action"
+    >
       {children}
       {active && <Arrow size={12} aria-hidden />}
     </button>

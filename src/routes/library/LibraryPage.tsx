@@ -1,37 +1,41 @@
 import { useCallback, useState } from 'react'
 import { useNavigate } from 'react-router-dom'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
-import { Plus } from 'lucide-react'
+import { FolderPlus, Plus } from 'lucide-react'
+import { useCollections } from '../../api/collections.ts'
 import { hodgeQuery, type LibraryFilter } from '../../api/polytopes.ts'
 import { HodgeScatter } from '../../components/charts/HodgeScatter.tsx'
+import { FilterFields } from '../../components/filter/FilterFields.tsx'
 import { useBarred, useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
-import { Progress } from '../../components/ui/Progress.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { columnsText } from '../../lib/libraryAddress.ts'
 import { counted, formatNumber } from '../../lib/numbers.ts'
-import { FilterBar } from './FilterBar.tsx'
+import { CollectDialog } from './CollectDialog.tsx'
+import { CollectionsDialog } from './CollectionsDialog.tsx'
+import { ColumnChooser } from './ColumnChooser.tsx'
+import { FilterChips } from './FilterChips.tsx'
 import { ImportDialog } from './ImportDialog.tsx'
-import { useLibraryState } from './useLibraryState.ts'
+import { LibraryProgress } from './LibraryProgress.tsx'
 import { PolytopeTable } from './PolytopeTable.tsx'
+import { useLibraryState } from './useLibraryState.ts'
+
+type OpenDialog = 'import' | 'collect' | 'collections' | null
 
 export function LibraryPage() {
   const campaign = useCurrentCampaign()
-  const { filter, sort, change, clear, filtered } = useLibraryState()
+  const { filter, sort, columns, change, clear, filtered } = useLibraryState()
   const barred = useBarred('polytopes.import')
   const barredSearch = useBarred('searches.run')
+  const barredCollect = useBarred('collections.edit')
   const navigate = useNavigate()
-  const [importing, setImporting] = useState(false)
+  const [dialog, setDialog] = useState<OpenDialog>(null)
   const [selected, setSelected] = useState<ReadonlySet<string>>(new Set())
+  const collections = useCollections(campaign?.id)
 
   const full: LibraryFilter = { ...filter, campaign: campaign?.id }
-  const everywhere: LibraryFilter = {
-    ...full,
-    h11Min: undefined,
-    h11Max: undefined,
-    h21Min: undefined,
-    h21Max: undefined,
-  }
+  const everywhere: LibraryFilter = { ...full, ...noRange }
   const matching = useQuery({ ...hodgeQuery(full), placeholderData: keepPreviousData })
   const spread = useQuery({ ...hodgeQuery(everywhere), placeholderData: keepPreviousData })
   const onSelect = useCallback((key: string, on: boolean) => {
@@ -50,7 +54,10 @@ export function LibraryPage() {
     else for (const [name, value] of Object.entries(filter)) query.set(name, String(value))
     void navigate(`/campaigns/${campaign.id}/searches/new?${query}`)
   }
-  const loading = matching.data?.loading
+  const dialogProps = (which: OpenDialog) => ({
+    open: dialog === which,
+    onOpenChange: (open: boolean) => setDialog(open ? which : null),
+  })
 
   return (
     <>
@@ -58,12 +65,18 @@ export function LibraryPage() {
         title="Library"
         actions={
           <>
+            <Button
+              unavailable={!campaign && 'You are not in a campaign yet.'}
+              onClick={() => setDialog('collections')}
+            >
+              Collections
+            </Button>
             <Button unavailable={barredSearch} onClick={searchFrom}>
               {selected.size > 0
                 ? `Search in the ${counted(selected.size, 'selected', 'selected')}`
                 : 'Search in these'}
             </Button>
-            <Button kind="primary" unavailable={barred} onClick={() => setImporting(true)}>
+            <Button kind="primary" unavailable={barred} onClick={() => setDialog('import')}>
               <Plus size={16} aria-hidden />
               Import polytopes
             </Button>
@@ -72,15 +85,7 @@ export function LibraryPage() {
       >
         Reflexive polytopes in four dimensions, on the side whose points become divisors.
       </PageHead>
-      {loading && (
-        <div className="mb-4 max-w-md">
-          <p className="mb-1 text-soft">
-            The bundled library is still being loaded: {formatNumber(loading.loaded)} of{' '}
-            {formatNumber(loading.total)}.
-          </p>
-          <Progress value={loading.loaded} most={loading.total} label="Bundled polytopes loaded" />
-        </div>
-      )}
+      {matching.data && <LibraryProgress {...matching.data} />}
       <div className="grid grid-cols-1 gap-x-8 gap-y-4 border-t pt-4 md:grid-cols-[minmax(0,11fr)_minmax(0,9fr)]">
         <QueryView query={spread} what="the Hodge numbers">
           {({ counts }) => (
@@ -91,24 +96,44 @@ export function LibraryPage() {
             />
           )}
         </QueryView>
-        <FilterBar filter={filter} filtered={filtered} onChange={change} onClear={clear} />
+        <form role="search" aria-label="Filter the library" onSubmit={(event) => event.preventDefault()}>
+          <FilterFields campaign={campaign?.id} filter={filter} onChange={change} />
+        </form>
       </div>
       <div className="mt-4 border-t pt-4">
+        <FilterChips
+          filter={filter}
+          collection={collections.data?.find(({ id }) => id === filter.collection)?.name}
+          onChange={change}
+          onClear={clear}
+        />
         <QueryView query={matching} what="the library">
           {({ total }) => (
             <>
-              <p className="mb-2 flex items-center gap-3" role="status">
-                <span>
+              <div className="my-2 flex flex-wrap items-center gap-x-3 gap-y-1">
+                <p role="status" className="flex-1">
                   <strong className="font-medium">{formatNumber(total)}</strong>{' '}
                   {total === 1 ? 'polytope' : 'polytopes'}
-                  {filtered ? ' match the filter' : ''}
-                </span>
+                  {filtered ? (total === 1 ? ' matches the filter' : ' match the filter') : ''}
+                </p>
                 {selected.size > 0 && (
                   <Button kind="quiet" onClick={() => setSelected(new Set())}>
                     Unselect {formatNumber(selected.size)}
                   </Button>
                 )}
-              </p>
+                <Button
+                  kind="quiet"
+                  unavailable={barredCollect || (total === 0 && 'No polytope matches.')}
+                  onClick={() => setDialog('collect')}
+                >
+                  <FolderPlus size={15} aria-hidden />
+                  Collect {selected.size > 0 ? formatNumber(selected.size) : 'these'}
+                </Button>
+                <ColumnChooser
+                  columns={columns}
+                  onColumns={(next) => change({ columns: next === null ? undefined : columnsText(next) })}
+                />
+              </div>
               {total === 0 ? (
                 <Empty title={filtered ? 'No polytope matches the filter.' : 'The library is empty.'}>
                   {filtered ? (
@@ -122,16 +147,31 @@ export function LibraryPage() {
                   filter={full}
                   sort={sort}
                   total={total}
+                  shown={columns}
                   onSort={change}
                   selected={selected}
                   onSelect={onSelect}
+                />
+              )}
+              {campaign && (
+                <CollectDialog
+                  campaign={campaign.id}
+                  selected={selected}
+                  filter={filter}
+                  total={total}
+                  {...dialogProps('collect')}
                 />
               )}
             </>
           )}
         </QueryView>
       </div>
-      {campaign && <ImportDialog campaign={campaign} open={importing} onOpenChange={setImporting} />}
+      {campaign && (
+        <>
+          <ImportDialog campaign={campaign} {...dialogProps('import')} />
+          <CollectionsDialog campaign={campaign} {...dialogProps('collections')} />
+        </>
+      )}
     </>
   )
 }

@@ -1,6 +1,7 @@
 import { useCallback, useState } from 'react'
 import { Link } from 'react-router-dom'
 import { keepPreviousData, useQueries } from '@tanstack/react-query'
+import { polytopeNumbers, type PolytopeNumberName } from '../../../shared/polytopeNumbers.ts'
 import { type PolytopeRow } from '../../../shared/polytopes.ts'
 import {
   libraryPageSize,
@@ -17,23 +18,22 @@ interface PolytopeTableProps {
   filter: LibraryFilter
   sort: LibrarySort
   total: number
+  shown: readonly PolytopeNumberName[]
   onSort: (sort: LibrarySort) => void
   selected: ReadonlySet<string>
   onSelect: (key: string, on: boolean) => void
 }
 
-const numbers = [
-  ['h11', 'h11', true],
-  ['h21', 'h21', true],
-  ['euler', 'Euler number', false],
-  ['points', 'Points', true],
-  ['vertices', 'Vertices', true],
-  ['facets', 'Facets', true],
-  ['symmetryOrder', 'Symmetry', true],
-] as const
-
 /** The library as a table of any length: rows are fetched by the hundred as they come into view. */
-export function PolytopeTable({ filter, sort, total, onSort, selected, onSelect }: PolytopeTableProps) {
+export function PolytopeTable({
+  filter,
+  sort,
+  total,
+  shown,
+  onSort,
+  selected,
+  onSelect,
+}: PolytopeTableProps) {
   const [range, setRange] = useState({ first: 0, last: 0 })
   const onVisible = useCallback((first: number, last: number) => setRange({ first, last }), [])
   const firstPage = Math.floor(range.first / libraryPageSize)
@@ -53,10 +53,11 @@ export function PolytopeTable({ filter, sort, total, onSort, selected, onSelect 
   const rowAt = (index: number): PolytopeRow | undefined =>
     pages[Math.floor(index / libraryPageSize) - firstPage]?.data?.rows[index % libraryPageSize]
 
-  const sortable = (by: LibrarySort['sort'], name: string) => ({
+  const sortable = (by: LibrarySort['sort'], name: string, title?: string) => ({
     header: (
       <SortButton
         active={by === sort.sort}
+        title={title}
         order={sort.order}
         onClick={() => onSort({ sort: by, order: by === sort.sort && sort.order === 'asc' ? 'desc' : 'asc' })}
       >
@@ -92,10 +93,10 @@ export function PolytopeTable({ filter, sort, total, onSort, selected, onSelect 
         </Link>
       ),
     },
-    ...numbers.map(([key, name, sorts]): Column<PolytopeRow> => ({
+    ...shown.map((key): Column<PolytopeRow> => ({
       key,
       numeric: true,
-      ...(sorts ? sortable(key, name) : { header: name }),
+      ...sortable(key, polytopeNumbers[key].label, polytopeNumbers[key].description),
       cell: (row) => <Num value={row[key]} />,
     })),
     { key: 'favourable', header: 'Favourable', cell: (row) => (row.favourable ? 'yes' : 'no') },

@@ -1,12 +1,14 @@
 import { useCallback, useMemo } from 'react'
 import { useSearchParams } from 'react-router-dom'
-import { filterNames, readFilter, readSort } from '../../lib/libraryAddress.ts'
+import { filterNames } from '../../../shared/polytopes.ts'
+import { readColumns, readFilter, readSort } from '../../lib/libraryAddress.ts'
 
-/** Filter and order of the library, kept in the address so that a view can be linked to. */
+/** Filter, order and columns of the library, kept in the address so that a view can be linked to. */
 export function useLibraryState() {
   const [search, setSearch] = useSearchParams()
   const filter = useMemo(() => readFilter(search), [search])
   const sort = useMemo(() => readSort(search), [search])
+  const columns = useMemo(() => readColumns(search), [search])
 
   const change = useCallback(
     (changes: Record<string, string | number | undefined>) => {
@@ -28,5 +30,5 @@ export function useLibraryState() {
     () => change(Object.fromEntries(filterNames.map((name) => [name, undefined]))),
     [change],
   )
-  return { filter, sort, change, clear, filtered: Object.keys(filter).length > 0 }
+  return { filter, sort, columns, change, clear, filtered: Object.keys(filter).length > 0 }
 }

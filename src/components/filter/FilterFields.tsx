@@ -1,0 +1,169 @@
+import { useEffect, useState } from 'react'
+import { Plus } from 'lucide-react'
+import {
+  numberGroups,
+  polytopeNumberNames,
+  polytopeNumbers,
+  type PolytopeNumberName,
+} from '../../../shared/polytopeNumbers.ts'
+import { type PolytopeFilter } from '../../../shared/polytopes.ts'
+import { Field, Select, TextField } from '../ui/Field.tsx'
+import { CollectionSelect } from '../collection/CollectionSelect.tsx'
+
+export type FilterChanges = Record<string, string | undefined>
+
+interface FilterFieldsProps {
+  campaign?: string
+  filter: PolytopeFilter
+  onChange: (changes: FilterChanges) => void
+  /** Without the text field, where the page has one of its own. */
+  withoutText?: boolean
+}
+
+/** Always shown; any other number is added by choice, or because the filter names it. */
+const first: readonly PolytopeNumberName[] = ['h11', 'h21', 'points']
+
+/** A library filter as fields: ranges of any of its numbers, yes-or-no questions, a collection, a text. */
+export function FilterFields({ campaign, filter, onChange, withoutText }: FilterFieldsProps) {
+  const [added, setAdded] = useState<readonly PolytopeNumberName[]>([])
+  const shown = polytopeNumberNames.filter(
+    (name) =>
+      first.includes(name) ||
+      added.includes(name) ||
+      filter[`${name}Min`] !== undefined ||
+      filter[`${name}Max`] !== undefined,
+  )
+  return (
+    <div className="grid grid-cols-2 content-start items-end gap-x-2 gap-y-3 sm:grid-cols-4">
+      {!withoutText && <TextPart value={filter.text} onChange={onChange} />}
+      {shown.flatMap((name) =>
+        (['Min', 'Max'] as const).map((end) => (
+          <TextField
+            key={name + end}
+            label={`${polytopeNumbers[name].label} ${end === 'Min' ? 'from' : 'to'}`}
+            type="number"
+            inputMode={polytopeNumbers[name].signed ? 'text' : 'numeric'}
+            min={polytopeNumbers[name].signed ? undefined : 0}
+            step={polytopeNumbers[name].decimal ? 'any' : 1}
+            title={polytopeNumbers[name].description}
+            value={filter[`${name}${end}`] ?? ''}
+            onChange={(event) => onChange({ [`${name}${end}`]: event.target.value })}
+          />
+        )),
+      )}
+      <Question name="favourable" label="Favourable" filter={filter} onChange={onChange} />
+      <Question name="weighted" label="Made from weights" filter={filter} onChange={onChange} />
+      <Select
+        label="Origin"
+        value={filter.origin ?? ''}
+        onChange={(event) => onChange({ origin: event.target.value })}
+        options={[
+          ['', 'all'],
+          ['bundled', 'bundled'],
+          ['imported', 'imported'],
+        ]}
+      />
+      <CollectionSelect
+        label="Collection"
+        none="any or none"
+        campaign={campaign}
+        value={filter.collection ?? ''}
+        onChange={(collection) => onChange({ collection: collection?.id })}
+      />
+      <AddNumber shown={shown} onAdd={(name) => setAdded([...added, name])} />
+    </div>
+  )
+}
+
+function Question({
+  name,
+  label,
+  filter,
+  onChange,
+}: {
+  name: 'favourable' | 'weighted'
+  label: string
+  filter: PolytopeFilter
+  onChange: (changes: FilterChanges) => void
+}) {
+  return (
+    <Select
+      label={label}
+      value={filter[name] ?? ''}
+      onChange={(event) => onChange({ [name]: event.target.value })}
+      options={[
+        ['', 'yes or no'],
+        ['yes', 'yes'],
+        ['no', 'no'],
+      ]}
+    />
+  )
+}
+
+/** Every number of the library can be filtered by; those that are not shown yet are chosen here. */
+function AddNumber({
+  shown,
+  onAdd,
+}: {
+  shown: readonly PolytopeNumberName[]
+  onAdd: (name: PolytopeNumberName) => void
+}) {
+  return (
+    <Field label="Filter by another number" className="col-span-2">
+      {(field) => (
+        <span className="relative block">
+          <Plus size={14} aria-hidden className="absolute top-2.5 left-2 text-action" />
+          <select
+            {...field}
+            className={`${field.className} pl-7`}
+            value=""
+            onChange={(event) => onAdd(event.target.value as PolytopeNumberName)}
+          >
+            <option value="">choose…</option>
+            {numberGroups.map((group) => {
+              const names = polytopeNumberNames.filter(
+                (name) => polytopeNumbers[name].group === group && !shown.includes(name),
+              )
+              return (
+                names.length > 0 && (
+                  <optgroup key={group} label={group}>
+                    {names.map((name) => (
+                      <option key={name} value={name}>
+                        {polytopeNumbers[name].label}
+                      </option>
+                    ))}
+                  </optgroup>
+                )
+              )
+            })}
+          </select>
+        </span>
+      )}
+    </Field>
+  )
+}
+
+/** The text settles for a moment before it takes effect. */
+function TextPart({ value = '', onChange }: { value?: string; onChange: (changes: FilterChanges) => void }) {
+  const [text, setText] = useState(value)
+  const [known, setKnown] = useState(value)
+  if (known !== value) {
+    setKnown(value)
+    setText(value)
+  }
+  useEffect(() => {
+    if (text === value) return
+    const timer = setTimeout(() => onChange({ text }), 250)
+    return () => clearTimeout(timer)
+  }, [text, value, onChange])
+  return (
+    <TextField
+      className="col-span-2"
+      label="Name, key or weights"
+      placeholder="1 1 1 6 9"
+      value={text}
+      maxLength={80}
+      onChange={(event) => setText(event.target.value)}
+    />
+  )
+}
