@@ -1,7 +1,7 @@
 import { InvariantError } from '../../errors.ts'
 import type { Polytope } from '../polytope.ts'
 import { circuitOf, settledSign } from './fanCircuits.ts'
-import { minorsOf, pairing } from './simplexFrame.ts'
+import { minorsOf } from './simplexFrame.ts'
 
 /** A triangle that a simplex shares with the next one or with the facet's boundary; vertices ascending. */
 export type Wall = readonly [number, number, number]
@@ -33,10 +33,22 @@ export function triangulateFacet(
   boundary: ReadonlySet<number>,
   start: Wall,
 ): number[][] {
-  const coordinates = polytope.points
   const count = points.length
+  const coordinates = new Float64Array(4 * count)
+  const extent = new Float64Array(4)
+  const lifted = new Float64Array(count)
+  let highest = 0
+  for (let n = 0; n < count; n++) {
+    for (let c = 0; c < 4; c++) {
+      coordinates[4 * n + c] = polytope.points[4 * points[n] + c]
+      extent[c] = Math.max(extent[c], Math.abs(coordinates[4 * n + c]))
+    }
+    lifted[n] = heights[points[n]]
+    highest = Math.max(highest, Math.abs(lifted[n]))
+  }
+  /** How far each point lies above the simplex in hand, and a bound on the rounding. */
   const above = new Float64Array(count)
-  const error = new Float64Array(count)
+  let error = 0
   const simplices: number[][] = []
   /** Walls with a simplex on one side so far. */
   const open = new Set<number>()
@@ -62,53 +74,52 @@ export function triangulateFacet(
 
   for (let s = 0; s < simplices.length; s++) {
     const vertices = simplices[s]
-    let lifted = false
+    let isLifted = false
     const { rows, determinant } = minorsOf(polytope, vertices)
     for (let m = 0; m < 4; m++) {
       const wall = wallOpposite(vertices, m)
       if (!open.has(wallCode(polytope, ...wall))) continue
-      if (!lifted) lift(vertices, rows, determinant)
-      lifted = true
+      if (!isLifted) lift(vertices, rows, determinant)
+      isLifted = true
       enter(ordered([...wall, beyond(vertices, rows, m, determinant > 0 ? -1 : 1)]))
     }
   }
   return simplices
 
-  /** How far each point lies above the lifted simplex, with a bound on the rounding. */
+  /** Measures all points against a lifted simplex. */
   function lift(vertices: readonly number[], rows: Float64Array, determinant: number): void {
-    const slope = new Float64Array(4)
-    const size = new Float64Array(4)
+    const slope = [0, 0, 0, 0]
+    let size = highest
     for (let m = 0; m < 4; m++) {
       for (let c = 0; c < 4; c++) {
         const term = (rows[4 * m + c] * heights[vertices[m]]) / determinant
         slope[c] += term
-        size[c] += Math.abs(term)
+        size += Math.abs(term) * extent[c]
       }
     }
-    for (let n = 0; n < count; n++) {
-      const at = 4 * points[n]
-      let value = heights[points[n]]
-      let scale = Math.abs(value)
-      for (let c = 0; c < 4; c++) {
-        value -= slope[c] * coordinates[at + c]
-        scale += size[c] * Math.abs(coordinates[at + c])
-      }
-      above[n] = value
-      error[n] = 16 * Number.EPSILON * scale
+    const [a, b, c, d] = slope
+    for (let n = 0, at = 0; n < count; n++, at += 4) {
+      above[n] =
+        lifted[n] -
+        (a * coordinates[at] + b * coordinates[at + 1] + c * coordinates[at + 2] + d * coordinates[at + 3])
     }
+    error = 16 * Number.EPSILON * size
   }
 
   /** The next vertex beyond the wall opposite to vertex m, on the side where sign * <row m, v> > 0. */
   function beyond(vertices: readonly number[], rows: Float64Array, m: number, sign: number): number {
     const wall = vertices.filter((_, n) => n !== m)
+    const [a, b, c, d] = rows.subarray(4 * m, 4 * m + 4).map((entry) => sign * entry)
     let best = -1
     let turn = Infinity
     let doubt = 0
-    for (let n = 0; n < count; n++) {
-      const distance = sign * pairing(rows, m, coordinates, points[n])
+    for (let n = 0, at = 0; n < count; n++, at += 4) {
+      const distance =
+        a * coordinates[at] + b * coordinates[at + 1] + c * coordinates[at + 2] + d * coordinates[at + 3]
       if (distance <= 0) continue
       const here = above[n] / distance
-      const unsure = (error[n] + Number.EPSILON * Math.abs(above[n])) / distance
+      // The bound covers the rounding of the quotient: |above| is below 2 * size.
+      const unsure = error / distance
       if (here - unsure > turn + doubt) continue
       if (here + unsure >= turn - doubt && best >= 0) {
         const circuit = circuitOf(polytope, [...wall, points[best]], points[n])
