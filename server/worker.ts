@@ -11,7 +11,7 @@ import {
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
 import { summaryOfEach } from './jobs/compute/polytopeSummary.ts'
-import { nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
+import { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
 const tasks: Tasks = {
@@ -31,6 +31,7 @@ const tasks: Tasks = {
   'search-segment': searchSegment,
   'null-chunk': nullChunk,
   'preview-chunk': previewChunk,
+  'facet-generic-finds': facetGenericFinds,
 }
 
 /** Entry of a worker thread: runs one named task and answers with its value or its failure. */

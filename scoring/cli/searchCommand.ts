@@ -8,6 +8,7 @@ import type { Find } from '../search/find.ts'
 import { mergeIslands } from '../search/islands.ts'
 import type { SegmentInput } from '../search/jobs.ts'
 import { nullSummary } from '../search/nullSample.ts'
+import { polytopeSource } from '../search/polytopeSource.ts'
 import { mergedProgress } from '../search/progress.ts'
 import { islandBudget } from '../search/settings.ts'
 import type { SearchState } from '../search/state.ts'
@@ -86,7 +87,7 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
       }
     }),
   )
-  const merged = mergeIslands(started(), spec.settings.keep)
+  const merged = mergeIslands(started(), spec.settings.keep, polytopeSource(spec.polytopes))
   const sample = states.at(islands) ?? null
   print({
     kind: 'final',

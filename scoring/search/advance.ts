@@ -82,6 +82,8 @@ export function advance(
     island.chain.step()
   }
   const next = island.state()
-  const finds = next.top.filter((row) => island.newcomers.has(row.classKey)).map(findOf)
+  const finds = next.top
+    .filter((row) => island.newcomers.has(row.classKey))
+    .map((row) => findOf(row, problem.polytopes))
   return { state: next, finds, progress: progressOf(next) }
 }

@@ -1,6 +1,7 @@
 import { compareOutcomes } from '../rules/outcome.ts'
 import { findOf, type Find, type KeptFind } from './find.ts'
 import { Histogram, type HistogramView } from './histogram.ts'
+import type { PolytopeSource } from './polytopeSource.ts'
 import { mergedProgress, type SearchProgressReport } from './progress.ts'
 import type { SearchState } from './state.ts'
 
@@ -18,14 +19,21 @@ export interface MergedIslands {
 /**
  * Merges the states of a search's islands, in the order of islands. Evaluations are added up: a class that two
  * islands scored counts twice there and once in the list of the best.
+ *
+ * @param source the polytopes of the search; without it heights are left as they are in the states, and may tie
+ *   in facets
  */
-export function mergeIslands(states: readonly SearchState[], keep = Infinity): MergedIslands {
+export function mergeIslands(
+  states: readonly SearchState[],
+  keep = Infinity,
+  source?: PolytopeSource,
+): MergedIslands {
   const ordered = [...states].sort((a, b) => a.island - b.island)
   const histogram = new Histogram()
   for (const state of ordered) histogram.addAll(state.histogram)
   return {
     progress: mergedProgress(ordered),
-    top: mergedTop(ordered, keep).map(findOf),
+    top: mergedTop(ordered, keep).map((row) => findOf(row, source)),
     histogram: histogram.view(),
     reasons: added(ordered.map((state) => state.reasons)),
     failures: added(ordered.map((state) => state.failures)),

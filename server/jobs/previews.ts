@@ -101,7 +101,9 @@ export class Previews {
       const { view, shown } = previewView(rows, output.summary, running.requires)
       if (output.done) {
         // So that the pages of the candidates shown can be opened.
-        await writes.transaction((manager) => storeCandidates(manager, running.scoringHash, shown))
+        const { polytopes } = running.problem
+        const finds = await interactive.run('facet-generic-finds', { polytopes, finds: shown })
+        await writes.transaction((manager) => storeCandidates(manager, running.scoringHash, finds))
         if (running.preview.state !== 'running') return
       }
       this.#report(running, { ...running.preview, ...view, state: output.done ? 'done' : 'running' })

@@ -10,7 +10,7 @@ import type {
 import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { scoreCandidates } from './compute/scoreCandidates.ts'
 import type { summaryOfEach } from './compute/polytopeSummary.ts'
-import type { nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
+import type { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
 
 /** The tasks of the worker threads: pure functions of plain data, by name. */
 export interface Tasks {
@@ -30,6 +30,7 @@ export interface Tasks {
   'search-segment': typeof searchSegment
   'null-chunk': typeof nullChunk
   'preview-chunk': typeof previewChunk
+  'facet-generic-finds': typeof facetGenericFinds
 }
 
 export type TaskName = keyof Tasks

@@ -1,4 +1,5 @@
 import {
+  facetGenericHeights,
   InputError,
   JobSession,
   previewChunk as previewJob,
@@ -83,6 +84,22 @@ export function previewChunk({ problem, state, evaluations }: NullChunkInput): P
       outcome: outcomeView(outcome),
     })),
   }
+}
+
+/** Candidates about to be stored, with heights that tie neither in a 2-face nor in a facet. */
+export function facetGenericFinds({
+  polytopes,
+  finds,
+}: {
+  /** See `SearchProblem`. */
+  readonly polytopes: string
+  readonly finds: readonly SegmentFind[]
+}): SegmentFind[] {
+  const source = session.sourceOf(entriesOf(polytopes))
+  return finds.map(({ candidateKey, polytopeKey, outcome, heights }) => {
+    const { polytope } = source.at(source.keys.indexOf(polytopeKey))
+    return { candidateKey, polytopeKey, outcome, heights: [...facetGenericHeights(polytope, heights)] }
+  })
 }
 
 function findView({ classKey, polytopeKey, heights, outcome }: Find): SegmentFind {

@@ -4,6 +4,7 @@ import { InputError } from '../../../scoring/errors.ts'
 import { isGeneric } from '../../../scoring/geometry/circuits.ts'
 import { canonicalClass } from '../../../scoring/geometry/classKey.ts'
 import { enumerateClasses, orbitsOf } from '../../../scoring/geometry/enumeration.ts'
+import { isFacetGeneric } from '../../../scoring/geometry/fans/facetGenericHeights.ts'
 import { fineClass } from '../../../scoring/geometry/twoFaceClass.ts'
 import { buildCandidate } from '../../../scoring/observables/buildCandidate.ts'
 import { evaluateRule } from '../../../scoring/rules/evaluate.ts'
@@ -84,6 +85,7 @@ describe.each(methodNames)('segments of method %s', (method) => {
       const cls = fineClass(form.polytope, heights)
       if (cls === undefined) throw new Error('kept heights are not fine')
       expect(isGeneric(cls, heights)).toBe(true)
+      expect(isFacetGeneric(cls, heights)).toBe(true)
       const canonical = canonicalClass(form, cls)
       expect(canonical.class).toBe(cls)
       expect(canonical.key).toBe(classKey)
