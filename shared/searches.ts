@@ -10,7 +10,9 @@ export type SearchState = (typeof searchStates)[number]
 /** The methods of the engine, in the order in which they are offered, with a line on each. */
 export const searchMethods = {
   annealing: 'Annealing: flips and height jitters, cooling with restarts',
+  genetic: 'Genetic: populations of distinct classes, blends and 2-face crossover',
   exhaustive: 'Exhaustive: every class once; counts first, refuses more than the budget',
+  uniform: 'Uniform walk: flips at random, uniform over classes before symmetry in the long run',
   random: 'Random heights: no guidance, for comparison',
 } as const satisfies Record<MethodName, string>
 

@@ -7,6 +7,7 @@ import { scoringHash } from '../rules/hash.ts'
 import type { Find } from '../search/find.ts'
 import { mergeIslands } from '../search/islands.ts'
 import type { SegmentInput } from '../search/jobs.ts'
+import { isMethodName, lawOf } from '../search/methods.ts'
 import { nullSummary } from '../search/nullSample.ts'
 import { polytopeSource } from '../search/polytopeSource.ts'
 import { mergedProgress } from '../search/progress.ts'
@@ -94,7 +95,13 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
     ...context,
     progress: merged.progress,
     top: merged.top.map(findLine),
-    statistics: { histogram: merged.histogram, undefined: merged.reasons, failedRequires: merged.failures },
+    statistics: {
+      // What the evaluated candidates are a sample of; null for a guided search, whose rates are those of no sample.
+      law: isMethodName(spec.method) ? lawOf(spec.method) : null,
+      histogram: merged.histogram,
+      undefined: merged.reasons,
+      failedRequires: merged.failures,
+    },
     null: sample && nullSummary(sample, rule),
   })
 }

@@ -41,6 +41,11 @@ export const exhaustive: Method = {
   description:
     'Every class of every polytope, each once: counts first, and refuses what has more classes than the budget ' +
     `or more than ${exhaustiveLimit.toLocaleString('en')} before symmetry.`,
+  law: {
+    name: 'exhaustive',
+    description:
+      'Every candidate of the scope that the rule does not refuse at the polytope stage, once modulo automorphisms.',
+  },
   open: (run, state) => new ExhaustiveChain(run, state as unknown as ExhaustiveState | null),
 }
 

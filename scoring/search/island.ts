@@ -167,7 +167,7 @@ export class Island implements Run {
     const known = proposal.distinct ? null : this.seen.find(high, low)
     if (known !== null) {
       this.stalled++
-      return known.kind === irregularKind ? null : { merit: known, isNew: false }
+      return known.kind === irregularKind ? null : { merit: known, key: canonical.key, isNew: false }
     }
     const heights = proposal.heights()
     if (heights === undefined) {
@@ -194,7 +194,7 @@ export class Island implements Run {
       })
     }
     this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness })
-    return { merit, isNew: true }
+    return { merit, key: canonical.key, isNew: true }
   }
 
   look(): void {

@@ -8,6 +8,8 @@ import type { Json, RunEnd } from './state.ts'
 /** What the run says of a proposed class. */
 export interface Judgement {
   readonly merit: Merit
+  /** The candidate's permanent address. */
+  readonly key: string
   /** True when it was scored now: one evaluation of the budget. */
   readonly isNew: boolean
 }
@@ -33,6 +35,8 @@ export interface Run {
   /** The island's share of the budget, and how much of it is used. */
   readonly budget: number
   readonly evaluations: number
+  /** Classes looked at so far. */
+  readonly proposals: number
   readonly patience: number
   /** Fresh starts that share the budget. */
   readonly descents: number
@@ -69,6 +73,8 @@ export interface Method {
   readonly version: number
   /** One line, for people. */
   readonly description: string
+  /** The law by which its candidates are drawn, where they are a sample; a guided search draws none. */
+  readonly law?: { readonly name: string; readonly description: string }
   /** False when the method never proposes a class twice, so that the table of classes seen can stay small. */
   readonly repeats?: false
   /** A chain from its stored state; null: at its start. */

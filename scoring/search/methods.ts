@@ -1,16 +1,27 @@
 import { annealing } from './annealing.ts'
 import { exhaustive } from './exhaustive.ts'
+import { genetic } from './genetic.ts'
 import type { Method } from './method.ts'
 import { randomSampling } from './randomSampling.ts'
+import { uniformWalk } from './uniformWalk.ts'
 
 /** Every search method. A new one is a file of its own and a line here. */
-export const methods = { annealing, exhaustive, random: randomSampling } as const satisfies Record<
-  string,
-  Method
->
+export const methods = {
+  annealing,
+  genetic,
+  exhaustive,
+  uniform: uniformWalk,
+  random: randomSampling,
+} as const satisfies Record<string, Method>
 
 export type MethodName = keyof typeof methods
 
 export const methodNames = Object.keys(methods) as MethodName[]
 
 export const isMethodName = (name: string): name is MethodName => Object.hasOwn(methods, name)
+
+/** The law by which a method draws its candidates, in words; null for a guided search, which is no sample. */
+export function lawOf(name: MethodName): string | null {
+  const { law }: Method = methods[name]
+  return law === undefined ? null : `${law.name}: ${law.description}`
+}

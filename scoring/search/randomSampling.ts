@@ -9,6 +9,7 @@ export const randomSampling: Method = {
   name: 'random',
   version: 1,
   description: `Independent random candidates. ${nullLaw.description}`,
+  law: nullLaw,
   open(run) {
     return {
       step() {

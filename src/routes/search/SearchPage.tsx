@@ -1,7 +1,7 @@
 import { useState } from 'react'
 import { Link, useParams } from 'react-router-dom'
 import { toast } from 'sonner'
-import { type SearchDetail } from '../../../shared/searches.ts'
+import { searchMethods, type SearchDetail } from '../../../shared/searches.ts'
 import { explain } from '../../api/request.ts'
 import { useSearch, useSearchCommand, type SearchCommand } from '../../api/searches.ts'
 import { LiveCurve } from '../../components/charts/LiveCurve.tsx'
@@ -100,6 +100,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2">
           <Facts
             rows={[
+              ['Method', methodLine(search.method)],
               ['Seed', <Num key="v" value={search.seed} />],
               ['Polytopes in scope', <Num key="v" value={search.polytopes} />],
               ['Started', `${formatTime(search.createdAt)} by ${search.author}`],
@@ -125,6 +126,9 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
     </>
   )
 }
+
+const methodLine = (method: string) =>
+  method in searchMethods ? searchMethods[method as keyof typeof searchMethods] : method
 
 function StateLine({ search }: { search: SearchDetail }) {
   const { progress } = search
