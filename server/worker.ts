@@ -8,6 +8,8 @@ import {
   placeCandidates,
   weightLinesOfText,
 } from './jobs/compute/importCandidates.ts'
+import { classCount } from './jobs/compute/classCount.ts'
+import { polytopeStructure } from './jobs/compute/polytopeStructure.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
 import { summaryOfEach } from './jobs/compute/polytopeSummary.ts'
@@ -25,6 +27,8 @@ const tasks: Tasks = {
   'facts-of-weight-lines': factsOfWeightLines,
   'polytope-shape': polytopeShape,
   'summary-of-each': summaryOfEach,
+  'polytope-structure': polytopeStructure,
+  'class-count': classCount,
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,
   'class-pictures': classPictures,

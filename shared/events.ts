@@ -19,18 +19,11 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   /** Stored polytopes whose numbers are still being computed. */
   z.object({ kind: z.literal('undescribed'), left: z.number().int() }),
+  /** A count of all classes of a polytope that the campaign asked for. */
+  z.object({ kind: z.literal('class-count'), key: z.string(), seen: z.number().int(), ended: z.boolean() }),
   z.object({
     kind: z.literal('changed'),
-    what: z.enum([
-      'targets',
-      'searches',
-      'shortlists',
-      'verdicts',
-      'members',
-      'imports',
-      'collections',
-      'polytopes',
-    ]),
+    what: z.enum(['targets', 'searches', 'shortlists', 'verdicts', 'members', 'imports', 'collections']),
   }),
   z.object({ kind: z.literal('closed'), reason: z.enum(['signed-out', 'role-lost', 'shutting-down']) }),
 ])

@@ -1,7 +1,9 @@
 import type { CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
 import type { ComputedGeometry } from './compute/candidateGeometry.ts'
+import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
 import type { PolytopeShape } from './compute/polytopeShape.ts'
 import { RecentResults } from '../services/recentResults.ts'
+import { ClassCounts } from './classCounts.ts'
 import { ComputePool } from './computePool.ts'
 import type { JobParts } from './jobParts.ts'
 import { NullSampler } from './nullSampler.ts'
@@ -20,6 +22,9 @@ export interface Jobs {
   readonly previews: Previews
   /** What polytope pages show, by polytope key. */
   readonly shapes: RecentResults<PolytopeShape>
+  /** Divisors and sections of polytopes, by polytope key. */
+  readonly structures: RecentResults<PolytopeStructure>
+  readonly classCounts: ClassCounts
   /** Dossiers, by candidate key. */
   readonly geometries: RecentResults<ComputedGeometry>
   readonly spectra: RecentResults<Omit<CandidateSpectra, 'key'>>
@@ -70,6 +75,8 @@ export function openJobs(
     searches,
     previews: new Previews(all),
     shapes: new RecentResults(200),
+    structures: new RecentResults(100),
+    classCounts: new ClassCounts(all),
     geometries: new RecentResults(60),
     spectra: new RecentResults(200),
     pictures: new RecentResults(500),

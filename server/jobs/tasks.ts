@@ -7,6 +7,8 @@ import type {
   placeCandidates,
   weightLinesOfText,
 } from './compute/importCandidates.ts'
+import type { classCount } from './compute/classCount.ts'
+import type { polytopeStructure } from './compute/polytopeStructure.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { scoreCandidates } from './compute/scoreCandidates.ts'
 import type { summaryOfEach } from './compute/polytopeSummary.ts'
@@ -24,6 +26,8 @@ export interface Tasks {
   'facts-of-weight-lines': typeof factsOfWeightLines
   'polytope-shape': typeof polytopeShape
   'summary-of-each': typeof summaryOfEach
+  'polytope-structure': typeof polytopeStructure
+  'class-count': typeof classCount
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra
   'class-pictures': typeof classPictures

@@ -14,12 +14,20 @@ import {
   scopeSummarySchema,
   uploadLimitBytes,
 } from '../../shared/polytopes.ts'
+import {
+  findPolytopesSchema,
+  foundPolytopesSchema,
+  polytopeClassesSchema,
+  polytopeStructureSchema,
+} from '../../shared/polytopeStructure.ts'
 import type { ServerContext } from '../context.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { uploadedText } from '../http/uploadedText.ts'
 import { presentPolytopeRow } from '../presenters/polytopes.ts'
-import { readPolytopeDetail } from '../services/geometry.ts'
+import { readPolytopeDetail, readPolytopeStructure } from '../services/geometry.ts'
 import { importText, importWeights } from '../services/imports.ts'
+import { countClasses, readPolytopeClasses } from '../services/polytopeClasses.ts'
+import { findPolytopes } from '../services/polytopeLookup.ts'
 import { countByHodge, listPolytopes } from '../services/polytopes.ts'
 import { summariseScope } from '../services/scopes.ts'
 import { importWeightLines } from '../services/weightLines.ts'
@@ -75,6 +83,47 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
     answer: polytopeDetailSchema,
     handle: async ({ account, params, query }) =>
       readPolytopeDetail(context, await viewerOf(manager, account.id, query.campaign), params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/polytopes/:key/structure',
+    access: 'account',
+    query: viewSchema,
+    answer: polytopeStructureSchema,
+    handle: async ({ account, params, query }) =>
+      readPolytopeStructure(context, await viewerOf(manager, account.id, query.campaign), params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/polytopes/:key/classes',
+    access: 'account',
+    query: viewSchema,
+    answer: polytopeClassesSchema,
+    handle: async ({ account, params, query }) =>
+      readPolytopeClasses(context, await viewerOf(manager, account.id, query.campaign), params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/polytopes/find',
+    access: 'account',
+    query: viewSchema,
+    body: findPolytopesSchema,
+    bodyLimit: 300_000,
+    answer: foundPolytopesSchema,
+    handle: async ({ account, query, body }) =>
+      findPolytopes(context, await viewerOf(manager, account.id, query.campaign), body.text),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/polytopes/:key/count',
+    access: 'previews.run',
+    answer: polytopeClassesSchema,
+    status: 202,
+    handle: ({ campaign, params }) => countClasses(context, campaign.id, params.key),
   })
 
   endpoint(app, context, {

@@ -1,5 +1,6 @@
 import type { CandidateGeometry, CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
 import type { PolytopeDetail } from '../../shared/polytopes.ts'
+import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
 import type { ServerContext } from '../context.ts'
 import { presentPolytopeRow } from '../presenters/polytopes.ts'
 import type { CandidateRecord } from '../entities/candidate.ts'
@@ -21,6 +22,18 @@ export async function readPolytopeDetail(
     .andWhere('polytope.key = :dualKey', { dualKey })
     .getExists()
   return { ...presentPolytopeRow(found), ...shape, mirrorKey: mirror ? dualKey : null }
+}
+
+/** Divisors and reflexive sections of a polytope, for its page. */
+export async function readPolytopeStructure(
+  { source, jobs }: ServerContext,
+  viewer: Viewer,
+  key: string,
+): Promise<PolytopeStructure> {
+  const { polytope } = await readPolytope(source.manager, viewer, key)
+  return jobs.structures.get(key, () =>
+    jobs.interactive.run('polytope-structure', { vertices: polytope.coordinates }),
+  )
 }
 
 /** A candidate's dossier: geometry only, for everybody who may see the polytope. */

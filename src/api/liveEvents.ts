@@ -3,6 +3,7 @@ import { useQueryClient, type QueryClient } from '@tanstack/react-query'
 import { type CampaignDetail } from '../../shared/campaigns.ts'
 import { type z } from 'zod'
 import { type hodgeCountsSchema } from '../../shared/polytopes.ts'
+import { type PolytopeClasses } from '../../shared/polytopeStructure.ts'
 import { type StreamEvent } from '../../shared/events.ts'
 import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
@@ -27,6 +28,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       return
     case 'library':
       return applyLibrary(client, event)
+    case 'class-count':
+      return applyClassCount(client, event)
     case 'undescribed':
       return applyDescription(client, event)
     case 'changed': {
@@ -38,7 +41,6 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
         members: ['campaigns'],
         imports: ['imported-candidates', campaign],
         collections: ['collections'],
-        polytopes: ['polytope-classes'],
       } as const
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
@@ -74,6 +76,17 @@ function applyDescription(client: QueryClient, { left }: StreamEvent & { kind: '
     { queryKey: ['polytopes', 'hodge'] },
     (old) => old && { ...old, undescribed: left },
   )
+}
+
+function applyClassCount(client: QueryClient, event: StreamEvent & { kind: 'class-count' }): void {
+  const { key, seen, ended } = event
+  client.setQueriesData<PolytopeClasses>(
+    { queryKey: ['polytope-classes', key] },
+    (old) => old && { ...old, counting: { seen } },
+  )
+  if (!ended) return
+  void client.invalidateQueries({ queryKey: ['polytope-classes', key] })
+  void client.invalidateQueries({ queryKey: ['polytopes'] })
 }
 
 function applySearch(client: QueryClient, campaign: string, event: StreamEvent & { kind: 'search' }): void {
