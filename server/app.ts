@@ -11,6 +11,7 @@ import { sessionCookie } from './http/sessions.ts'
 import { requestLog } from './logging.ts'
 import { campaignRoutes } from './routes/campaigns.ts'
 import { candidateRoutes } from './routes/candidates.ts'
+import { certificateRoutes } from './routes/certificates.ts'
 import { collectionRoutes } from './routes/collections.ts'
 import { eventRoutes } from './routes/events.ts'
 import { healthRoutes } from './routes/health.ts'
@@ -48,6 +49,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   searchRoutes(app, context)
   shortlistRoutes(app, context)
   candidateRoutes(app, context)
+  certificateRoutes(app, context)
   importedCandidateRoutes(app, context)
   eventRoutes(app, context)
 

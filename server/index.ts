@@ -33,6 +33,7 @@ async function main(): Promise<void> {
     const first = await library.open(firstFiles)
     const later = await library.open(laterFiles)
     await jobs.searches.start()
+    await jobs.certifications.start()
     await library.load(first)
     await Promise.all([
       library.load(later),

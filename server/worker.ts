@@ -1,5 +1,6 @@
 import { InputError } from '../scoring/index.ts'
 import { candidateGeometry, candidateSpectra } from './jobs/compute/candidateGeometry.ts'
+import { certifyCandidate } from './jobs/compute/certifyCandidate.ts'
 import { classPictures } from './jobs/compute/classPictures.ts'
 import { factsOfEach, factsOfWeights, pointBlocks } from './jobs/compute/importBlocks.ts'
 import {
@@ -31,6 +32,7 @@ const tasks: Tasks = {
   'class-count': classCount,
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,
+  'certify-candidate': certifyCandidate,
   'class-pictures': classPictures,
   'search-segment': searchSegment,
   'null-chunk': nullChunk,

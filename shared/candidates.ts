@@ -1,9 +1,9 @@
 import { z } from 'zod'
+import { certificateMarkSchema } from './certificates.ts'
+import { candidateKeySchema } from './keys.ts'
 import { polytopeDetailSchema, twoFaceSchema } from './polytopes.ts'
 import { outcomeSchema } from './outcomes.ts'
 import { verdictSchema } from './verdicts.ts'
-
-export const candidateKeySchema = z.string().regex(/^[0-9a-f]{32}$/)
 
 /**
  * GET /api/candidates/:key: geometry only, the same for every reader who may see the polytope. Indices refer to
@@ -97,6 +97,7 @@ export const candidateRecordSchema = z.object({
       scoringHash: z.string(),
       engineVersion: z.string(),
       outcome: outcomeSchema,
+      certificate: certificateMarkSchema,
       /** Null for a candidate that was imported into the list. */
       search: z.object({ id: z.string(), name: z.string(), seed: z.number().int() }).nullable(),
       /** Neighbours in the list, for stepping through it. */

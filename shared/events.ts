@@ -1,4 +1,6 @@
 import { z } from 'zod'
+import { certificateMarkSchema, certificationSchema } from './certificates.ts'
+import { candidateKeySchema } from './keys.ts'
 import { previewSchema } from './targets.ts'
 import { searchProgressSchema, searchStates } from './searches.ts'
 import { nullSummarySchema } from './nullSamples.ts'
@@ -16,6 +18,12 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
   }),
   z.object({ kind: z.literal('null'), searchId: z.string(), summary: nullSummarySchema }),
   z.object({ kind: z.literal('preview'), preview: previewSchema }),
+  z.object({
+    kind: z.literal('certification'),
+    certification: certificationSchema,
+    /** The certificate that was just made; null when only the request moved. */
+    made: certificateMarkSchema.extend({ candidateKey: candidateKeySchema }).nullable(),
+  }),
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   /** Stored polytopes whose numbers are still being computed. */
   z.object({ kind: z.literal('undescribed'), left: z.number().int() }),

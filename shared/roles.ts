@@ -17,6 +17,7 @@ export const permissions = {
   'searches.run': ['lead', 'investigator'],
   'shortlists.edit': ['lead', 'investigator'],
   'verdicts.give': ['lead', 'investigator', 'reviewer'],
+  'certificates.run': ['lead', 'investigator', 'reviewer'],
   'exports.read': ['lead', 'investigator', 'reviewer', 'reader'],
 } as const satisfies Record<string, readonly Role[]>
 

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { certificateMarkSchema } from './certificates.ts'
 import { scoredRowSchema } from './outcomes.ts'
 import { verdictSchema } from './verdicts.ts'
 
@@ -31,6 +32,8 @@ export const shortlistRowSchema = scoredRowSchema.extend({
   searchId: z.string().nullable(),
   polytopeName: z.string(),
   verdict: verdictSchema.nullable(),
+  /** For the scoring of the target version under the present engine. */
+  certificate: certificateMarkSchema,
 })
 export type ShortlistRow = z.infer<typeof shortlistRowSchema>
 

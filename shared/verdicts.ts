@@ -10,6 +10,8 @@ export const verdictSchema = z.object({
   reason: z.string(),
   /** Verified without a passing certificate for this scoring: shown as "verified by override". */
   override: z.boolean(),
+  /** The passing certificate that "verified" rests on. */
+  certificateId: z.string().nullable(),
   author: z.string(),
   createdAt: z.string(),
   targetId: z.string(),
@@ -18,7 +20,10 @@ export const verdictSchema = z.object({
 })
 export type Verdict = z.infer<typeof verdictSchema>
 
-/** POST /api/campaigns/:campaign/candidates/:key/verdicts. "verified" without a certificate needs a reason. */
+/**
+ * POST /api/campaigns/:campaign/candidates/:key/verdicts. "verified" without a passing certificate of this scoring
+ * needs a reason.
+ */
 export const giveVerdictSchema = z.object({
   targetVersionId: z.string(),
   value: z.enum(verdictValues),

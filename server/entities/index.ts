@@ -3,6 +3,9 @@ import { Campaign } from './campaign.ts'
 import { CampaignPolytope } from './campaignPolytope.ts'
 import { CandidateRecord } from './candidate.ts'
 import { CandidateValue } from './candidateValue.ts'
+import { CertificateRecord } from './certificate.ts'
+import { Certification } from './certification.ts'
+import { CertificationTask } from './certificationTask.ts'
 import { Collection } from './collection.ts'
 import { CollectionPolytope } from './collectionPolytope.ts'
 import { Find } from './find.ts'
@@ -27,6 +30,9 @@ export const entities = [
   CampaignPolytope,
   CandidateRecord,
   CandidateValue,
+  CertificateRecord,
+  Certification,
+  CertificationTask,
   Collection,
   CollectionPolytope,
   Find,

@@ -3,6 +3,7 @@ import type { VerdictValue } from '../../shared/verdicts.ts'
 import { Account } from './account.ts'
 import { Campaign } from './campaign.ts'
 import { CandidateRecord } from './candidate.ts'
+import { CertificateRecord } from './certificate.ts'
 import { TargetVersion } from './targetVersion.ts'
 
 /** A person's word on a candidate for a target in a campaign. History is kept; the latest counts. */
@@ -43,6 +44,14 @@ export class Verdict {
   /** Verified without a passing certificate for this scoring. */
   @Column({ type: 'boolean' })
   override!: boolean
+
+  /** The passing certificate that "verified" rests on. */
+  @Column({ type: 'varchar', nullable: true })
+  certificateId!: string | null
+
+  @ManyToOne(() => CertificateRecord, { nullable: true })
+  @JoinColumn({ name: 'certificateId' })
+  certificate?: Relation<CertificateRecord> | null
 
   @Column({ type: 'varchar' })
   authorId!: string

@@ -3,6 +3,7 @@ import type { ComputedGeometry } from './compute/candidateGeometry.ts'
 import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
 import type { PolytopeShape } from './compute/polytopeShape.ts'
 import { RecentResults } from '../services/recentResults.ts'
+import { CertificationRunner } from './certificationRunner.ts'
 import { ClassCounts } from './classCounts.ts'
 import { ComputePool } from './computePool.ts'
 import type { JobParts } from './jobParts.ts'
@@ -19,6 +20,7 @@ export interface Jobs {
   /** A thread for what somebody waits for, but that takes seconds at the largest h11: whole spectra. */
   readonly unhurried: ComputePool
   readonly searches: SearchRunner
+  readonly certifications: CertificationRunner
   readonly previews: Previews
   /** What polytope pages show, by polytope key. */
   readonly shapes: RecentResults<PolytopeShape>
@@ -66,6 +68,7 @@ export function openJobs(
   const unhurried = new ComputePool({ threads: 1, nice: backgroundNice, log })
   const scheduler = new Scheduler(workers)
   const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
+  const certifications = new CertificationRunner(all)
   const searches = new SearchRunner(all, new NullSampler(all, options.nullSize))
   return {
     scheduler,
@@ -73,6 +76,7 @@ export function openJobs(
     interactive,
     unhurried,
     searches,
+    certifications,
     previews: new Previews(all),
     shapes: new RecentResults(200),
     structures: new RecentResults(100),
@@ -84,6 +88,7 @@ export function openJobs(
       closing.abort(new Error('The server is shutting down.'))
       scheduler.stop()
       searches.stop()
+      certifications.stop()
       await Promise.all([background.close(), interactive.close(), unhurried.close()])
     },
   }

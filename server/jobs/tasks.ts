@@ -1,4 +1,5 @@
 import type { candidateGeometry, candidateSpectra } from './compute/candidateGeometry.ts'
+import type { certifyCandidate } from './compute/certifyCandidate.ts'
 import type { classPictures } from './compute/classPictures.ts'
 import type { factsOfEach, factsOfWeights, pointBlocks } from './compute/importBlocks.ts'
 import type {
@@ -30,6 +31,7 @@ export interface Tasks {
   'class-count': typeof classCount
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra
+  'certify-candidate': typeof certifyCandidate
   'class-pictures': typeof classPictures
   'search-segment': typeof searchSegment
   'null-chunk': typeof nullChunk

@@ -1,10 +1,12 @@
 import { FirstSchema1796100000000 } from './1796100000000-firstSchema.ts'
+import { Certificates1796200100000 } from './1796200100000-certificates.ts'
 import { LibraryNumbers1796200200000 } from './1796200200000-libraryNumbers.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 
 /** In order. A migration that has been released is never edited. */
 export const migrations = [
   FirstSchema1796100000000,
+  Certificates1796200100000,
   LibraryNumbers1796200200000,
   ImportedCandidates1796200300000,
 ]

@@ -25,6 +25,7 @@ const units = {
   verdict: 'verified, verified by override, rejected, undecided or empty',
   reviewer: 'text',
   reason: 'text',
+  certificate: 'passed, failed, waiting or none, of this scoring by the independent road',
 }
 
 type FixedColumn = keyof typeof units
@@ -91,6 +92,7 @@ function fixedValues({ outcome, verdict, ...row }: ShortlistRow): Record<FixedCo
     verdict: verdict === null ? '' : verdict.override ? 'verified by override' : verdict.value,
     reviewer: text(verdict?.author ?? ''),
     reason: text(verdict?.reason ?? ''),
+    certificate: row.certificate.state,
   }
 }
 

@@ -1,3 +1,4 @@
+import type { CertificateMark } from '../../shared/certificates.ts'
 import type { ShortlistDetail, ShortlistRow, ShortlistSummary } from '../../shared/shortlists.ts'
 import type { Search } from '../entities/search.ts'
 import type { Shortlist } from '../entities/shortlist.ts'
@@ -37,6 +38,7 @@ export interface ShortlistContents {
   readonly entries: readonly ShortlistEntry[]
   /** The latest verdict per candidate key. */
   readonly verdicts: ReadonlyMap<string, Verdict>
+  readonly certificateOf: (candidateKey: string) => CertificateMark
   /** The campaign's own names of its imports, by polytope key. */
   readonly names: ReadonlyMap<string, string>
 }
@@ -53,7 +55,10 @@ export function presentShortlist(shortlist: Shortlist, contents: ShortlistConten
   }
 }
 
-function presentEntry(entry: ShortlistEntry, { verdicts, names }: ShortlistContents): ShortlistRow {
+function presentEntry(
+  entry: ShortlistEntry,
+  { verdicts, certificateOf, names }: ShortlistContents,
+): ShortlistRow {
   const polytope = entry.candidate?.polytope
   if (!polytope) throw new Error('A shortlist entry was presented without its polytope.')
   const verdict = verdicts.get(entry.candidateKey)
@@ -66,6 +71,7 @@ function presentEntry(entry: ShortlistEntry, { verdicts, names }: ShortlistConte
     h21: polytope.h21,
     outcome: entry.outcome,
     searchId: entry.searchId,
+    certificate: certificateOf(entry.candidateKey),
     verdict: verdict ? presentVerdict(verdict) : null,
   }
 }

@@ -9,6 +9,7 @@ export function presentVerdict(verdict: Verdict): VerdictView {
     value: verdict.value,
     reason: verdict.reason,
     override: verdict.override,
+    certificateId: verdict.certificateId,
     author: verdict.author?.name ?? '',
     createdAt: verdict.createdAt,
     targetId: version?.targetId ?? '',

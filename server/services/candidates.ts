@@ -5,6 +5,7 @@ import { ImportedCandidate } from '../entities/importedCandidate.ts'
 import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
 import { notFound } from '../problems.ts'
+import { certificateMarks } from './certificates.ts'
 import { listVerdicts } from './verdicts.ts'
 import { mayBeSeen, type Viewer } from './visibility.ts'
 
@@ -76,6 +77,7 @@ export async function readCandidateRecord(
       scoringHash: shortlist.scoringHash,
       engineVersion: shortlist.engineVersion,
       outcome: entry.outcome,
+      certificate: (await certificateMarks(manager, campaignId, version, [key]))(key),
       search: search ? { id: search.id, name: search.name, seed: search.seed } : null,
       previousKey: await keyAt(entry.rank - 1),
       nextKey: await keyAt(entry.rank + 1),

@@ -30,6 +30,12 @@ export function requireSoundRule(text: string, path = 'text'): SoundRule {
   return { rule: check.rule, scoringHash: scoringHash(check.rule, engineVersion), engineVersion }
 }
 
+/** How a text scores under the present engine; null for one that has errors under it. */
+export function scoringHashOf(text: string): string | null {
+  const check = checkRule(text)
+  return check.ok ? scoringHash(check.rule, engineVersion) : null
+}
+
 /** Report columns in the rule's order. */
 export function reportColumns(text: string): string[] {
   return requireSoundRule(text).rule.report.map(({ name }) => name)

@@ -8,6 +8,7 @@ import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { emptyTally } from '../presenters/campaigns.ts'
 import { presentShortlist } from '../presenters/shortlists.ts'
 import { notFound, unprocessable } from '../problems.ts'
+import { certificateMarks } from './certificates.ts'
 import { rankedFinds, withHitLine } from './finds.ts'
 import { readHitLine } from './nullSamples.ts'
 import { ownNames } from './polytopes.ts'
@@ -48,6 +49,7 @@ export async function readShortlist(
     searches: searches.sort((a, b) => shortlist.searchIds.indexOf(a.id) - shortlist.searchIds.indexOf(b.id)),
     entries,
     verdicts: await latestVerdicts(manager, campaignId, shortlist.targetVersion.targetId, keys),
+    certificateOf: await certificateMarks(manager, campaignId, shortlist.targetVersion, keys),
     names: await ownNames(manager, { campaignId }, polytopes),
   })
 }

@@ -4,14 +4,15 @@ import type { ServerContext } from '../context.ts'
 import { Verdict } from '../entities/verdict.ts'
 import type { Tally } from '../presenters/shortlists.ts'
 import { unprocessable } from '../problems.ts'
+import { latestCertificates } from './certificates.ts'
 import { readCampaignCandidate } from './candidates.ts'
 import { readVersion } from './targets.ts'
 
 const withWords = { author: true, targetVersion: { target: true } } as const
 
 /**
- * Records a person's word on a candidate for a target. "Verified" rests on a passing certificate for this
- * scoring; as long as there is none it needs a reason and is kept as an override.
+ * Records a person's word on a candidate for a target. "Verified" rests on a passing certificate for this scoring
+ * (the latest of the campaign counts); where there is none it needs a reason and is kept as an override.
  */
 export async function giveVerdict(
   { source, writes, streams }: ServerContext,
@@ -21,16 +22,13 @@ export async function giveVerdict(
 ): Promise<Verdict> {
   const { campaignId, candidateKey } = place
   await readCampaignCandidate(source.manager, campaignId, candidateKey)
-  await readVersion(source.manager, campaignId, input.targetVersionId)
-  const override = input.value === 'verified'
-  if (override && input.reason === '') {
-    throw unprocessable(
-      'reason-required',
-      'There is no passing certificate for this candidate; to verify it all the same, give a reason.',
-      { path: 'reason' },
-    )
-  }
+  const version = await readVersion(source.manager, campaignId, input.targetVersionId)
+  const verified = input.value === 'verified'
   const id = await writes.transaction(async (manager) => {
+    const latest = await latestCertificates(manager, campaignId, version, [candidateKey])
+    const certificate = latest.get(candidateKey)
+    const override = verified && !certificate?.passed
+    if (override && input.reason === '') throw reasonRequired(certificate !== undefined)
     const inserted = await manager.insert(Verdict, {
       campaignId,
       candidateKey,
@@ -38,6 +36,7 @@ export async function giveVerdict(
       value: input.value,
       reason: input.reason,
       override,
+      certificateId: verified && !override ? (certificate?.id ?? null) : null,
       authorId,
       createdAt: new Date().toISOString(),
     })
@@ -45,6 +44,16 @@ export async function giveVerdict(
   })
   streams.toCampaign(campaignId, { kind: 'changed', what: 'verdicts' })
   return source.manager.findOneOrFail(Verdict, { where: { id }, relations: withWords })
+}
+
+function reasonRequired(certificateFailed: boolean) {
+  return unprocessable(
+    'reason-required',
+    certificateFailed
+      ? 'The latest certificate of this candidate did not pass; to verify it all the same, give a reason.'
+      : 'There is no passing certificate for this candidate; to verify it all the same, give a reason.',
+    { path: 'reason' },
+  )
 }
 
 /** All verdicts of the campaign on a candidate, newest first. */

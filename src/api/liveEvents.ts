@@ -5,7 +5,10 @@ import { type z } from 'zod'
 import { type hodgeCountsSchema } from '../../shared/polytopes.ts'
 import { type PolytopeClasses } from '../../shared/polytopeStructure.ts'
 import { type StreamEvent } from '../../shared/events.ts'
+import { type Certification } from '../../shared/certificates.ts'
+import { type ShortlistDetail } from '../../shared/shortlists.ts'
 import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
+import { withCertification } from './certificates.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
 import { previewKey } from './previews.ts'
 import { apiUrl } from './request.ts'
@@ -26,6 +29,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
     case 'preview':
       client.setQueryData(previewKey(event.preview.id), event.preview)
       return
+    case 'certification':
+      return applyCertification(client, campaign, event)
     case 'library':
       return applyLibrary(client, event)
     case 'class-count':
@@ -52,6 +57,34 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       if (event.reason === 'signed-out') void client.invalidateQueries({ queryKey: sessionKey })
       if (event.reason === 'role-lost') void client.invalidateQueries()
   }
+}
+
+/** A certificate that was made goes into the shortlists of its target version; what only moved is asked for again. */
+function applyCertification(
+  client: QueryClient,
+  campaign: string,
+  { certification, made }: StreamEvent & { kind: 'certification' },
+): void {
+  client.setQueryData<Certification[]>(
+    ['certifications', campaign],
+    (old) => old && withCertification(old, certification),
+  )
+  if (made === null) {
+    void client.invalidateQueries({ queryKey: ['shortlist'] })
+    void client.invalidateQueries({ queryKey: ['certificates'] })
+    void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
+    return
+  }
+  const { candidateKey, ...mark } = made
+  client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
+    if (!list || list.targetVersionId !== certification.targetVersionId) return list
+    const rows = list.rows.map((row) =>
+      row.candidateKey === candidateKey ? { ...row, certificate: mark } : row,
+    )
+    return { ...list, rows }
+  })
+  void client.invalidateQueries({ queryKey: ['certificates', candidateKey] })
+  void client.invalidateQueries({ queryKey: ['candidate-record', campaign, candidateKey] })
 }
 
 /** While the bundled polytopes are loaded only the progress moves; the tables are fetched again at the end. */

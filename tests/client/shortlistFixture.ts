@@ -1,3 +1,4 @@
+import { type Certification } from '../../shared/certificates.ts'
 import { type ShortlistDetail, type ShortlistRow } from '../../shared/shortlists.ts'
 import { type Verdict } from '../../shared/verdicts.ts'
 
@@ -8,6 +9,7 @@ export function verdict(value: Verdict['value'], override = false): Verdict {
     id: 'v1',
     value,
     override,
+    certificateId: null,
     reason: override ? 'recomputed by hand' : '',
     author: 'Ada Quill',
     createdAt: '2026-01-02T03:04:05.000Z',
@@ -27,6 +29,7 @@ export function row(rank: number, score: number, more: Partial<ShortlistRow> = {
     outcome: { kind: 'feasible', score, hit: score > -5, report: { reach: score, k3: rank % 2 === 0 } },
     rank,
     searchId: 's1',
+    certificate: { state: 'none', id: null },
     verdict: null,
     ...more,
   }
@@ -52,5 +55,24 @@ export function shortlist(rows: ShortlistRow[]): ShortlistDetail {
     columns: ['reach', 'k3'],
     searches: [{ id: 's1', name: 'Search 1', seed: 7 }],
     rows,
+  }
+}
+
+export function certification(total: number): Certification {
+  return {
+    id: 'cz1',
+    state: 'running',
+    targetVersionId: 'tv1',
+    targetName: 'Long reach',
+    targetVersion: 1,
+    total,
+    waiting: total,
+    passed: 0,
+    failed: 0,
+    broken: 0,
+    problems: [],
+    author: 'Ada Quill',
+    createdAt: '2026-01-02T03:04:05.000Z',
+    finishedAt: null,
   }
 }

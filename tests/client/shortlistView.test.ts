@@ -16,6 +16,7 @@ describe('the view of a shortlist', () => {
   it('is read from the address', () => {
     expect(view('verdict=rejected&hits=yes&sort=score&order=desc')).toEqual({
       verdict: 'rejected',
+      certificate: 'all',
       hits: true,
       text: '',
       sort: 'score',

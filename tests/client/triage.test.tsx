@@ -1,11 +1,13 @@
 // @vitest-environment happy-dom
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
-import { cleanup, screen, waitFor, within } from '@testing-library/react'
+import { act, cleanup, screen, waitFor, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
+import type { ShortlistRow } from '../../shared/shortlists.ts'
 import { caution } from '../../shared/caution.ts'
+import { applyEvent } from '../../src/api/liveEvents.ts'
 import { ShortlistPage } from '../../src/routes/shortlist/ShortlistPage.tsx'
 import { renderPage } from './renderPage.tsx'
-import { key, row, shortlist, verdict } from './shortlistFixture.ts'
+import { certification, key, row, shortlist, verdict } from './shortlistFixture.ts'
 import { stubApi, type Call } from './stubApi.ts'
 
 const path = '/campaigns/:campaignId/shortlists/:shortlistId'
@@ -19,18 +21,24 @@ afterEach(() => {
   vi.unstubAllGlobals()
 })
 
-function open(role: 'lead' | 'reviewer' | 'reader' = 'reviewer') {
+function open(
+  role: 'lead' | 'reviewer' | 'reader' = 'reviewer',
+  rows: ShortlistRow[] = [row(1, -4.5), row(2, -4.9), row(3, -5.2)],
+) {
   const verdicts = Object.fromEntries(
     [1, 2, 3].map((n) => [
       `POST /campaigns/c1/candidates/${key(n)}/verdicts`,
       ({ body }: Call) => {
-        const { value } = body as { value: 'verified' | 'rejected' }
-        return verdict(value, value === 'verified')
+        const { value, reason } = body as { value: 'verified' | 'rejected'; reason: string }
+        return verdict(value, value === 'verified' && reason !== '')
       },
     ]),
   )
   const calls = stubApi({
-    'GET /campaigns/c1/shortlists/l1': shortlist([row(1, -4.5), row(2, -4.9), row(3, -5.2)]),
+    'GET /campaigns/c1/shortlists/l1': shortlist(rows),
+    'GET /campaigns/c1/certifications': [],
+    'POST /campaigns/c1/certifications': ({ body }: Call) =>
+      certification((body as { candidateKeys: string[] }).candidateKeys.length),
     ...verdicts,
   })
   const page = renderPage(<ShortlistPage />, path, address, role)
@@ -80,6 +88,56 @@ describe('triage of a shortlist', () => {
       reason: 'recomputed by hand',
     })
     expect(await screen.findByText('verified by override')).toBeTruthy()
+  })
+
+  it('v decides at once on a passing certificate, without an override', async () => {
+    const passed = { state: 'passed', id: 'z1' } as const
+    const { sent } = open('reviewer', [row(1, -4.5, { certificate: passed }), row(2, -4.9)])
+    await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.keyboard('v')
+    expect(await screen.findByText('verified')).toBeTruthy()
+    expect(screen.queryByRole('dialog')).toBeNull()
+    expect(sent()[0]?.body).toEqual({ targetVersionId: 'tv1', value: 'verified', reason: '' })
+  })
+
+  it('the dialog offers to certify, and turns when the certificate has come', async () => {
+    const { sent, client } = open()
+    await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.keyboard('v')
+    const dialog = await screen.findByRole('dialog', { name: 'Verify by override' })
+    await userEvent.click(within(dialog).getByRole('button', { name: 'Certify now' }))
+    expect(sent()[0]).toMatchObject({
+      path: '/campaigns/c1/certifications',
+      body: { targetVersionId: 'tv1', candidateKeys: [key(1)], again: false },
+    })
+    const event = { kind: 'certification', certification: certification(1), made: null } as const
+    const made = { candidateKey: key(1), state: 'passed', id: 'z1' } as const
+    act(() => applyEvent(client, 'c1', { ...event, made }))
+    const turned = await screen.findByRole('dialog', { name: 'Verdict: verified' })
+    await userEvent.click(within(turned).getByRole('button', { name: 'Verify' }))
+    await waitFor(() => expect(screen.queryByRole('dialog')).toBeNull())
+    expect(sent().at(-1)?.body).toEqual({ targetVersionId: 'tv1', value: 'verified', reason: '' })
+  })
+
+  it('certifies all undecided candidates without a certificate, or those selected with x and by range', async () => {
+    const failed = { state: 'failed', id: 'z9' } as const
+    const { sent } = open('reviewer', [
+      row(1, -4.5),
+      row(2, -4.9, { certificate: failed }),
+      row(3, -5.2),
+      row(4, -5.3, { verdict: verdict('rejected') }),
+    ])
+    await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.click(screen.getByRole('button', { name: 'Certify all undecided (2)' }))
+    expect(sent()[0]?.body).toMatchObject({ candidateKeys: [key(1), key(3)] })
+    await userEvent.keyboard('x')
+    const user = userEvent.setup()
+    await user.keyboard('{Shift>}')
+    await user.click(screen.getByRole('checkbox', { name: 'Select rank 3' }))
+    await user.keyboard('{/Shift}')
+    await user.click(screen.getByRole('button', { name: 'Certify the 3 selected' }))
+    expect(sent()[1]?.body).toMatchObject({ candidateKeys: [key(1), key(2), key(3)] })
+    expect(await screen.findByRole('button', { name: /Certify all undecided/ })).toBeTruthy()
   })
 
   it('j and k move without deciding', async () => {

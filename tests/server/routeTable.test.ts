@@ -29,6 +29,8 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/collections', 'account'],
   ['GET /api/candidates/:key', 'account'],
   ['GET /api/candidates/:key/spectra', 'account'],
+  ['GET /api/candidates/:key/certificates', 'account'],
+  ['GET /api/candidates/:key/certificates/:certificate', 'account'],
   ['GET /api/campaigns', 'account'],
   ['POST /api/campaigns', 'account'],
   ['GET /api/campaigns/:campaign', everyone],
@@ -76,6 +78,10 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/campaigns/:campaign/shortlists/:shortlist/export.json', everyone],
   ['GET /api/campaigns/:campaign/candidates/:key', everyone],
   ['POST /api/campaigns/:campaign/candidates/:key/verdicts', judges],
+  ['GET /api/campaigns/:campaign/candidates/:key/certificates', everyone],
+  ['GET /api/campaigns/:campaign/certifications', everyone],
+  ['POST /api/campaigns/:campaign/certifications', judges],
+  ['POST /api/campaigns/:campaign/certifications/:certification/cancel', judges],
 ]
 
 const noCampaign = 'There is no such campaign.'

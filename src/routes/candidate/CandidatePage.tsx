@@ -11,6 +11,7 @@ import { useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
 import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
+import { CertificateSection } from './CertificateSection.tsx'
 import { CurveTable } from './CurveTable.tsx'
 import { DivisorTable } from './DivisorTable.tsx'
 import { HighlightLine } from './HighlightLine.tsx'
@@ -62,6 +63,12 @@ export function CandidatePage() {
             />
           )}
           <Geometry geometry={detail} />
+          <CertificateSection
+            key={`certificate-${detail.key}`}
+            campaign={campaign?.id ?? null}
+            candidate={detail.key}
+            appearance={appearance}
+          />
           {campaign && <Provenance campaign={campaign.id} candidate={detail.key} record={record} />}
         </>
       )}

@@ -4,11 +4,13 @@ import { Check, Circle, X } from 'lucide-react'
 import { toast } from 'sonner'
 import { type CandidateRecord } from '../../../shared/candidates.ts'
 import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
+import { useRequestCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
+import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
 import { Section } from '../../components/ui/Layout.tsx'
 import { HitMark, Outcome, ReportCell } from '../../components/ui/Outcome.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
@@ -53,10 +55,7 @@ export function Verdicts({
                     campaign={campaign}
                     candidate={candidate}
                     appearance={appearance}
-                    current={verdicts.find(
-                      ({ targetId, targetVersion }) =>
-                        targetId === appearance.targetId && targetVersion === appearance.targetVersion,
-                    )}
+                    current={verdicts.find(({ targetId }) => targetId === appearance.targetId)}
                   />
                 </>
               ) : (
@@ -119,6 +118,7 @@ function Decide({
   const give = useGiveVerdict(campaign)
   const [asked, setAsked] = useState<VerdictValue | null>(null)
   const [fault, setFault] = useState<string | null>(null)
+  const certify = useRequestCertification(campaign)
   const send = (value: VerdictValue, reason: string) =>
     give.mutate(
       { key: candidate, targetVersionId: appearance.targetVersionId, value, reason },
@@ -136,13 +136,19 @@ function Decide({
     if (value === 'undecided') send(value, '')
     else setAsked(value)
   }
-  useShortcut({ key: 'v', does: 'Verify (asks for the reason)', group: 'Dossier' }, () => ask('verified'))
+  useShortcut({ key: 'v', does: 'Verify', group: 'Dossier' }, () => ask('verified'))
   useShortcut({ key: 'r', does: 'Reject', group: 'Dossier' }, () => ask('rejected'))
   useShortcut({ key: 'u', does: 'Put back to undecided', group: 'Dossier' }, () => ask('undecided'))
   return (
     <div>
-      <p className="mb-2 flex items-center gap-2">
+      <p className="mb-2 flex flex-wrap items-center gap-x-2">
         Verdict: <VerdictMark verdict={current ?? null} />
+        <span aria-hidden className="text-soft">
+          ·
+        </span>
+        <a href="#certificate" className="inline-flex items-center gap-2 hover:underline">
+          Certificate: <CertificateMark state={appearance.certificate.state} />
+        </a>
       </p>
       <div className="flex flex-wrap gap-2">
         {verdictValues.map((value) => {
@@ -160,10 +166,27 @@ function Decide({
         })}
       </div>
       <VerdictDialog
-        asked={asked && { value: asked, what: `Candidate ${candidate.slice(0, 10)}` }}
+        asked={
+          asked && {
+            value: asked,
+            what: `Candidate ${candidate.slice(0, 10)}`,
+            certificate: appearance.certificate,
+          }
+        }
         busy={give.isPending}
         fault={fault}
         onGive={(reason) => asked && send(asked, reason)}
+        certifying={certify.isPending}
+        onCertify={() =>
+          certify.mutate(
+            {
+              targetVersionId: appearance.targetVersionId,
+              candidateKeys: [candidate],
+              again: appearance.certificate.id !== null,
+            },
+            { onError: (error) => setFault(explain(error)) },
+          )
+        }
         onClose={() => setAsked(null)}
       />
     </div>

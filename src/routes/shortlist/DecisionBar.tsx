@@ -2,6 +2,7 @@ import { ArrowDown, ArrowUp, Check, Circle, X } from 'lucide-react'
 import { type ShortlistRow } from '../../../shared/shortlists.ts'
 import { type VerdictValue } from '../../../shared/verdicts.ts'
 import { Button, ButtonLink, IconButton } from '../../components/ui/Button.tsx'
+import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
 import { Outcome } from '../../components/ui/Outcome.tsx'
 import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 
@@ -38,6 +39,9 @@ export function DecisionBar({
           <Outcome outcome={row.outcome} />
         </span>
         <VerdictMark verdict={row.verdict} />
+        <span className="inline-flex items-center gap-1">
+          <span className="text-soft">certificate:</span> <CertificateMark state={row.certificate.state} />
+        </span>
       </span>
       <span className="flex flex-wrap items-center gap-2 sm:ml-auto">
         <IconButton label="Previous candidate" onClick={() => onStep(-1)}>
@@ -48,7 +52,7 @@ export function DecisionBar({
         </IconButton>
         <Button unavailable={barred} busy={busy} onClick={() => onDecide('verified')}>
           <Check size={14} className="text-verified" aria-hidden />
-          Verify…
+          {row.certificate.state === 'passed' ? 'Verify' : 'Verify…'}
           <Key name="v" />
         </Button>
         <Button unavailable={barred} busy={busy} onClick={() => onDecide('rejected')}>

@@ -10,7 +10,8 @@ import { Select, TextField } from '../../components/ui/Field.tsx'
 import { PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { formatNumber, formatTime } from '../../lib/numbers.ts'
-import { readView, visibleRows, type ShortlistView } from './shortlistView.ts'
+import { certificateWord } from '../../components/ui/CertificateMark.tsx'
+import { certificateStates, readView, visibleRows, type ShortlistView } from './shortlistView.ts'
 import { Triage } from './Triage.tsx'
 
 export function ShortlistPage() {
@@ -83,7 +84,9 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
           {shortlist.rows.length === 0 ? (
             'The searches had found no feasible candidate when it was made.'
           ) : (
-            <Button onClick={() => change({ verdict: '', hits: '', text: '' })}>Show all candidates</Button>
+            <Button onClick={() => change({ verdict: '', certificate: '', hits: '', text: '' })}>
+              Show all candidates
+            </Button>
           )}
         </Empty>
       ) : (
@@ -169,6 +172,20 @@ function Filters({
           ['undecided', `undecided (${undecided})`],
           ['verified', `verified (${verified})`],
           ['rejected', `rejected (${rejected})`],
+        ]}
+      />
+      <Select
+        label="Certificate"
+        value={view.certificate}
+        onChange={(event) =>
+          onChange({ certificate: event.target.value === 'all' ? '' : event.target.value })
+        }
+        options={[
+          ['all', `all (${size})`],
+          ...certificateStates.map((state) => {
+            const count = shortlist.rows.filter(({ certificate }) => certificate.state === state).length
+            return [state, `${certificateWord(state)} (${count})`] as const
+          }),
         ]}
       />
       <TextField

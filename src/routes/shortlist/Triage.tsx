@@ -4,16 +4,20 @@ import { toast } from 'sonner'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
 import { type VerdictValue } from '../../../shared/verdicts.ts'
 import { explain } from '../../api/request.ts'
+import { useRequestCertification } from '../../api/certificates.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
 import { ClassThumb } from '../../components/geometry/ClassThumb.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
 import { HitMark, Outcome, ReportCell, outcomeFormat } from '../../components/ui/Outcome.tsx'
 import { SortButton } from '../../components/ui/Table.tsx'
 import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
 import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
 import { useShortcut } from '../../lib/shortcuts.ts'
+import { CertifyBar } from './CertifyBar.tsx'
 import { DecisionBar } from './DecisionBar.tsx'
+import { useSelection } from './useSelection.ts'
 import { nextKey, nextUndecided } from './shortlistView.ts'
 
 interface TriageProps {
@@ -43,7 +47,12 @@ export function Triage({
   const navigate = useNavigate()
   const barred = useBarred('verdicts.give')
   const give = useGiveVerdict(campaign)
-  const [asked, setAsked] = useState<ShortlistRow | null>(null)
+  const certify = useRequestCertification(campaign)
+  const shown = useMemo(() => rows.map(({ candidateKey }) => candidateKey), [rows])
+  const selection = useSelection(shown)
+  const [askedKey, setAsked] = useState<string | null>(null)
+  // Looked up anew at each drawing: its certificate may have come meanwhile.
+  const asked = shortlist.rows.find(({ candidateKey }) => candidateKey === askedKey) ?? null
   const [fault, setFault] = useState<string | null>(null)
   const table = useRef<HTMLDivElement>(null)
 
@@ -88,7 +97,8 @@ export function Triage({
       return
     }
     setFault(null)
-    if (value === 'verified') setAsked(row)
+    // On a passing certificate one key decides; without one a reason is asked for.
+    if (value === 'verified' && row.certificate.state !== 'passed') setAsked(row.candidateKey)
     else decide(row, value)
   }
   const move = (step: number) => {
@@ -96,13 +106,16 @@ export function Triage({
     if (next) onCurrent(next.candidateKey)
   }
 
-  useShortcut({ key: 'v', does: 'Verify (asks for the reason)', group }, () => ask('verified'))
+  useShortcut({ key: 'v', does: 'Verify (asks for a reason when there is no certificate)', group }, () =>
+    ask('verified'),
+  )
   useShortcut({ key: 'r', does: 'Reject and go on', group }, () => ask('rejected'))
   useShortcut({ key: 'u', does: 'Put back to undecided and go on', group }, () => ask('undecided'))
   useShortcut({ key: 'j', does: 'Next candidate', group }, () => move(1))
   useShortcut({ key: 'k', does: 'Previous candidate', group }, () => move(-1))
   useShortcut({ key: 'ArrowDown', does: 'Next candidate', group }, () => move(1))
   useShortcut({ key: 'ArrowUp', does: 'Previous candidate', group }, () => move(-1))
+  useShortcut({ key: 'x', does: 'Select or let go', group }, () => row && selection.toggle(row.candidateKey))
   useShortcut({ key: 'n', does: 'Next undecided', group }, () => {
     const next = nextUndecided(rows, row?.candidateKey ?? null)
     if (next) onCurrent(next)
@@ -123,6 +136,33 @@ export function Triage({
   })
   const columns: Column<ShortlistRow>[] = [
     {
+      key: 'select',
+      className: 'w-8',
+      header: (
+        <input
+          type="checkbox"
+          aria-label="Select all that are shown"
+          className="align-middle"
+          checked={rows.length > 0 && selection.keys.length === rows.length}
+          onChange={selection.toggleAll}
+        />
+      ),
+      cell: (item) => (
+        <input
+          type="checkbox"
+          aria-label={`Select rank ${item.rank}`}
+          className="align-middle"
+          checked={selection.has(item.candidateKey)}
+          onChange={(event) =>
+            selection.toggle(
+              item.candidateKey,
+              event.nativeEvent instanceof MouseEvent && event.nativeEvent.shiftKey,
+            )
+          }
+        />
+      ),
+    },
+    {
       key: 'rank',
       numeric: true,
       className: 'w-14',
@@ -138,6 +178,11 @@ export function Triage({
       ),
     },
     { key: 'verdict', header: 'Verdict', cell: (item) => <VerdictMark verdict={item.verdict} /> },
+    {
+      key: 'certificate',
+      header: 'Certificate',
+      cell: (item) => <CertificateMark state={item.certificate.state} />,
+    },
     {
       key: 'score',
       numeric: true,
@@ -184,6 +229,7 @@ export function Triage({
 
   return (
     <div ref={table}>
+      <CertifyBar campaign={campaign} shortlist={shortlist} selection={selection} />
       <VirtualTable
         label="Candidates"
         className="max-h-[62vh]"
@@ -198,7 +244,7 @@ export function Triage({
           'aria-current': index === at ? true : undefined,
           // A link in the row goes to its own page; taking the row in hand as well would navigate back at once.
           onClick: (event) => {
-            if (!(event.target instanceof Element && event.target.closest('a, button')))
+            if (!(event.target instanceof Element && event.target.closest('a, button, input')))
               onCurrent(item.candidateKey)
           },
         })}
@@ -215,10 +261,28 @@ export function Triage({
         />
       )}
       <VerdictDialog
-        asked={asked && { value: 'verified', what: `The candidate of rank ${asked.rank}` }}
+        asked={
+          asked && {
+            value: 'verified',
+            what: `The candidate of rank ${asked.rank}`,
+            certificate: asked.certificate,
+          }
+        }
         busy={give.isPending}
         fault={fault}
         onGive={(reason) => asked && decide(asked, 'verified', reason)}
+        certifying={certify.isPending}
+        onCertify={() =>
+          asked &&
+          certify.mutate(
+            {
+              targetVersionId: shortlist.targetVersionId,
+              candidateKeys: [asked.candidateKey],
+              again: asked.certificate.id !== null,
+            },
+            { onError: (error) => setFault(explain(error)) },
+          )
+        }
         onClose={() => setAsked(null)}
       />
     </div>

@@ -1,9 +1,13 @@
+import { type CertificateMark } from '../../../shared/certificates.ts'
 import { type ShortlistRow } from '../../../shared/shortlists.ts'
 import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
+
+export const certificateStates = ['none', 'waiting', 'passed', 'failed'] as const
 
 /** Which rows of a shortlist are shown, in which order; kept in the address. */
 export interface ShortlistView {
   verdict: VerdictValue | 'all'
+  certificate: CertificateMark['state'] | 'all'
   hits: boolean
   text: string
   /** `rank`, or the name of a report column as `report:NAME`. */
@@ -15,6 +19,7 @@ export function readView(search: URLSearchParams): ShortlistView {
   const verdict = search.get('verdict')
   return {
     verdict: verdictValues.find((value) => value === verdict) ?? 'all',
+    certificate: certificateStates.find((state) => state === search.get('certificate')) ?? 'all',
     hits: search.get('hits') === 'yes',
     text: search.get('text') ?? '',
     sort: search.get('sort') ?? 'rank',
@@ -39,6 +44,7 @@ export function visibleRows(rows: readonly ShortlistRow[], view: ShortlistView):
   const kept = rows.filter(
     (row) =>
       (view.verdict === 'all' || verdictOf(row) === view.verdict) &&
+      (view.certificate === 'all' || row.certificate.state === view.certificate) &&
       (!view.hits || (row.outcome.kind === 'feasible' && row.outcome.hit === true)) &&
       (text === '' || row.polytopeName.toLowerCase().includes(text) || row.candidateKey.startsWith(text)),
   )
