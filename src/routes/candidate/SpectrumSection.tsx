@@ -28,7 +28,7 @@ export function SpectrumSection({ geometry }: { geometry: CandidateGeometry }) {
         <div
           role="status"
           aria-busy={seen}
-          className="grid h-72 animate-pulse place-items-center bg-null-wash text-soft"
+          className="grid h-72 place-items-center border text-soft"
         >
           Computing all {geometry.polytope.points - 4} eigenvalues…
         </div>
