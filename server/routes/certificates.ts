@@ -31,7 +31,10 @@ export function certificateRoutes(app: Express, context: ServerContext): void {
     access: 'account',
     handle: async ({ account, params, response }) => {
       const body = await readCertificateBody(manager, account.id, params.key, params.certificate)
-      response.attachment(`certificate-${params.key.slice(0, 10)}.json`).type('application/json').send(body)
+      response
+        .attachment(`certificate-${params.key.slice(0, 10)}.json`)
+        .type('application/json')
+        .send(body)
     },
   })
 

@@ -100,7 +100,7 @@ describe('a certificate', () => {
     const download = await reviewer
       .get(`/api/candidates/${keyAt(0)}/certificates/${certificate.id}`)
       .expect(200)
-    expect(download.headers['content-disposition']).toMatch(/attachment; filename="certificate-/)
+    expect(download.headers['content-disposition']).toMatch(/attachment; filename=certificate-/)
     const whole = certificateSchema.parse(download.body)
     expect(whole).toMatchObject({
       candidateKey: keyAt(0),
