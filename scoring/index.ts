@@ -35,6 +35,7 @@ export { heightsOfTriangles } from './geometry/fans/heightsOfTriangles.ts'
 export { intersectionNumbers, type IntersectionNumbers } from './geometry/intersectionNumbers.ts'
 export { componentNumbers, componentsOf, type Components } from './geometry/componentNumbers.ts'
 export { wallInvariants, wallVersion, type WallInvariants } from './geometry/wallInvariants.ts'
+export type { Fibrations, GenusOneFibration, K3Fibration } from './geometry/fibrations.ts'
 export { buildCandidate } from './observables/buildCandidate.ts'
 export type { Candidate } from './observables/candidate.ts'
 

@@ -1,11 +1,17 @@
-/** Minors of the vectors a, b (indices into `points`, 4 coordinates each) in the coordinate pairs 01, 02, 03, 12, 13, 23. */
-export function planeMinors(points: ArrayLike<number>, a: number, b: number, minors: Float64Array): void {
+/** Fills in the minors of the vectors a, b (indices into `points`, 4 coordinates each) in the coordinate pairs 01, 02, 03, 12, 13, 23. */
+export function planeMinors(
+  points: ArrayLike<number>,
+  a: number,
+  b: number,
+  minors: Float64Array,
+): Float64Array {
   let at = 0
   for (let i = 0; i < 4; i++) {
     for (let j = i + 1; j < 4; j++) {
       minors[at++] = points[4 * a + i] * points[4 * b + j] - points[4 * a + j] * points[4 * b + i]
     }
   }
+  return minors
 }
 
 /** Normal n of a, b, c with <n, v> = det(a, b, c, v) up to sign, from the minors of a and b. */

@@ -1,5 +1,6 @@
 import { curveRows } from '../geometry/curves.ts'
 import { divisorTopology } from '../geometry/divisors.ts'
+import { fibrations } from '../geometry/fibrations.ts'
 import { intersectionNumbers } from '../geometry/intersectionNumbers.ts'
 import { normalisedVolumes } from '../geometry/normalisedVolume.ts'
 import type { NormalForm } from '../geometry/normalForm.ts'
@@ -37,6 +38,7 @@ export function buildCandidate(form: NormalForm, canonical: TwoFaceClass, classK
     numbers,
     divisorTopology: () => topologyOf(polytope),
     curves,
+    fibrations: once(() => fibrations(canonical, numbers())),
     reference,
     volumes: volume,
     topEigenvalue: once(() => topEigenvalue(polytope, pairs(), volume()).value),

@@ -1,5 +1,6 @@
 import type { CurveRows } from '../geometry/curves.ts'
 import type { IntersectionNumbers } from '../geometry/intersectionNumbers.ts'
+import type { Fibrations } from '../geometry/fibrations.ts'
 import type { NormalisedVolumes } from '../geometry/normalisedVolume.ts'
 import type { DivisorTopology } from '../geometry/divisors.ts'
 import type { Polytope } from '../geometry/polytope.ts'
@@ -25,6 +26,7 @@ export interface Candidate {
   numbers(): IntersectionNumbers
   divisorTopology(): DivisorTopology
   curves(): CurveRows
+  fibrations(): Fibrations
   /** Stage "cone". */
   reference(): ReferencePoint
   volumes(): Volumes

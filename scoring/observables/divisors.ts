@@ -2,7 +2,13 @@ import { type DivisorTopology, divisorTopology } from '../geometry/divisors.ts'
 import type { Candidate } from './candidate.ts'
 import { ofCone, ofPolytope, ofTopology, SOURCES, TOTAL_OF_COMPONENTS } from './described.ts'
 import type { Described, RecordSet, ValueField, ValueType } from './observable.ts'
-import { diagonalDelPezzoDegrees, k3Fibres, neighbours } from './specialDivisors.ts'
+import {
+  abelianFibres,
+  diagonalDelPezzoDegrees,
+  enriquesHalfFibres,
+  k3Fibres,
+  neighbours,
+} from './specialDivisors.ts'
 
 const field = (
   entry: Described,
@@ -107,6 +113,28 @@ export const divisors: RecordSet = {
         source: 'Oguiso 1993 (from memory)',
       }),
       (candidate) => k3Fibres(candidate.numbers()),
+      'truth',
+    ),
+    field(
+      ofTopology({
+        name: 'enriques',
+        description: 'The divisor is an Enriques surface: half the fibre of a K3 fibration.',
+        formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 12',
+        source: 'Oguiso 1993 (from memory)',
+      }),
+      (candidate) => enriquesHalfFibres(candidate.numbers()),
+      'truth',
+    ),
+    field(
+      ofTopology({
+        name: 'abelian',
+        description:
+          'The divisor is an abelian surface (a four-torus) and a fibre. No prime toric divisor can be one: this is always false.',
+        convention: 'an abelian surface has h^i(O) = (1, 2, 1), which no lattice point gives',
+        formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 0',
+        source: 'Oguiso 1993 (from memory)',
+      }),
+      (candidate) => abelianFibres(candidate.numbers()),
       'truth',
     ),
     field(

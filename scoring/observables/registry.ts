@@ -2,6 +2,7 @@ import { coneObservables } from './cone.ts'
 import { curves } from './curves.ts'
 import { divisors } from './divisors.ts'
 import { faces } from './faces.ts'
+import { genusOneFibrations, k3Fibrations } from './fibrations.ts'
 import { metricObservables } from './metric.ts'
 import type { Field, Observable, RecordSet } from './observable.ts'
 import { pairs } from './pairs.ts'
@@ -9,6 +10,7 @@ import { polytopeObservables } from './polytope.ts'
 import { polytopeCounts } from './polytopeCounts.ts'
 import { relations } from './relations.ts'
 import { sections } from './sections.ts'
+import { topologyObservables } from './topology.ts'
 import { triangles, triples } from './triangles.ts'
 
 /**
@@ -26,6 +28,9 @@ export const OBSERVABLES: readonly Observable[] = [
   triples,
   triangles,
   curves,
+  ...topologyObservables,
+  k3Fibrations,
+  genusOneFibrations,
   ...relations,
   ...coneObservables,
   ...metricObservables,

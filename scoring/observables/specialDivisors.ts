@@ -22,10 +22,20 @@ function squareZero({ edges, edgeNumbers, cubes }: IntersectionNumbers): Uint8Ar
   return zero
 }
 
-/** 1 for every divisor that is a K3 fibre: D^2 = 0 and c2 . D = 24. (D^3 = 0 with c2 . D = 24 is not enough.) */
-export function k3Fibres(numbers: IntersectionNumbers): Uint8Array {
-  return squareZero(numbers).map((zero, i) => (zero === 1 && numbers.secondChern[i] === 24 ? 1 : 0))
-}
+/** 1 for every divisor with D^2 = 0 and c2 . D as given. (D^3 = 0 is not enough.) */
+const squareZeroWith =
+  (secondChern: number) =>
+  (numbers: IntersectionNumbers): Uint8Array =>
+    squareZero(numbers).map((zero, i) => (zero === 1 && numbers.secondChern[i] === secondChern ? 1 : 0))
+
+/** 1 for every divisor that is a K3 fibre. */
+export const k3Fibres = squareZeroWith(24)
+
+/** 1 for every divisor that is an Enriques surface, half the fibre of a K3 fibration. */
+export const enriquesHalfFibres = squareZeroWith(12)
+
+/** 1 for every divisor that is an abelian surface and a fibre. */
+export const abelianFibres = squareZeroWith(0)
 
 /**
  * Degree of every diagonal del Pezzo divisor, NaN for the others. Divisor i is one of degree k when

@@ -171,6 +171,7 @@ export function evaluatePolytopeStage(
     numbers: unreachable,
     divisorTopology: unreachable,
     curves: unreachable,
+    fibrations: unreachable,
     reference: unreachable,
     volumes: unreachable,
     topEigenvalue: unreachable,

@@ -37,6 +37,7 @@ export function timedCandidate(candidate: Candidate, clock: Clock, costs: StageC
     numbers: () => topology(() => candidate.numbers()),
     divisorTopology: () => topology(() => candidate.divisorTopology()),
     curves: () => topology(() => candidate.curves()),
+    fibrations: () => topology(() => candidate.fibrations()),
     reference: () => cone(() => candidate.reference()),
     volumes: () => cone(() => candidate.volumes()),
     topEigenvalue: () => metric(() => candidate.topEigenvalue()),

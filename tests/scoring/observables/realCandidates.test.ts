@@ -8,13 +8,15 @@ import { polytopeFromWeights } from '../../../scoring/geometry/weights.ts'
 import { buildCandidate } from '../../../scoring/observables/buildCandidate.ts'
 import type { Candidate } from '../../../scoring/observables/candidate.ts'
 import {
+  abelianFibres,
   diagonalDelPezzoDegrees,
+  enriquesHalfFibres,
   k3Fibres,
   neighbours,
 } from '../../../scoring/observables/specialDivisors.ts'
 import { divisorTopology } from '../../../scoring/geometry/divisors.ts'
 import { checkRule, evaluateRule } from '../../../scoring/rules/index.ts'
-import { bundledPolytopes } from '../../reference/bundledPolytopes.ts'
+import { bundledPolytopes, largePolytope } from '../../reference/bundledPolytopes.ts'
 
 function candidateOf(polytope: ReturnType<typeof polytopeFromPoints>): Candidate {
   const form = normalForm(polytope)
@@ -81,6 +83,32 @@ describe('published threefolds, asked through rules', () => {
   })
 })
 
+describe('patterns of divisors', () => {
+  const pattern =
+    'count(t in triples where t.number == 1 : any(d in divisors : all(x in t.divisors : not meet(x, d))))'
+  const some = [...bundledPolytopes('small').slice(-2), ...['w7-106', 'w11-491', 'w12-62'].map(largePolytope)]
+
+  it('three divisors that meet in one point while a fourth meets none of them, counted by hand', () => {
+    const counts = some.map(({ vertices }) => {
+      const candidate = candidateOf(polytopeFromPoints(vertices))
+      const numbers = candidate.numbers()
+      const all = Array.from({ length: numbers.pointCount }, (_, i) => i)
+      const apart = (i: number, d: number) =>
+        i !== d && all.every((k) => k === i || k === d || intersectionNumber(numbers, i, d, k) === 0)
+      let count = 0
+      for (const i of all)
+        for (const j of all.slice(i + 1))
+          for (const k of all.slice(j + 1)) {
+            if (intersectionNumber(numbers, i, j, k) !== 1) continue
+            if (all.some((d) => [i, j, k].every((x) => apart(x, d)))) count++
+          }
+      expect(valueOf(candidate, pattern)).toBe(count)
+      return count
+    })
+    expect(Math.max(...counts)).toBeGreaterThan(0)
+  })
+})
+
 describe('the largest eigenvalue, alone and as the end of the spectrum', () => {
   /** r2-0030, r3-0087 and r4-0092 have divisors with A_ii = 0 in exact arithmetic, which rounding makes +-1e-15. */
   const awkward = ['r2-0030', 'r3-0087', 'r4-0092']
@@ -107,6 +135,14 @@ describe('special divisors against their definitions, over all points', () => {
       numbers.secondChern[i] === 24 && all.every((j) => kappa(i, i, j) === 0) ? 1 : 0,
     )
     expect([...k3Fibres(numbers)]).toEqual(k3)
+    // Surfaces by their table of Hodge numbers: a K3 has (1, 0, 1), an Enriques surface (1, 0, 0).
+    const { h1, h2, components } = divisorTopology(cls.polytope)
+    const hodge = (found: Uint8Array) => [
+      ...new Set(all.filter((i) => found[i] === 1).map((i) => [components[i], h1[i], h2[i]].join())),
+    ]
+    expect(['', '1,0,1']).toContain(hodge(k3Fibres(numbers)).join(' '))
+    expect(['', '1,0,0']).toContain(hodge(enriquesHalfFibres(numbers)).join(' '))
+    expect(hodge(abelianFibres(numbers))).toEqual([])
     const degrees = all.map((i) => {
       const k = kappa(i, i, i)
       const diagonal =

@@ -92,6 +92,14 @@ export function inventedCandidate(change: Partial<Candidate> = {}): Candidate & 
       points: Int32Array.of(0, 2, 1, 1, 3, 0, 2, 1, 4),
       coefficients: Float64Array.of(1, -2, 3, 1, -1, 1, 2, 1, -2),
     }),
+    fibrations: counted('fibrations', {
+      k3: [{ section: 0, fibre: Float64Array.of(1, 0, 0, 0, 0) }],
+      genusOne: [
+        { section: 0, baseRays: Int32Array.of(1, 0, 0, 1, -1, -1), degree: 3 },
+        { section: 0, baseRays: Int32Array.of(1, 0, 0, 1, -1, 0, 0, -1), degree: 1 },
+      ],
+      nested: [[0, 0]],
+    }),
     reference: counted('reference', {
       weights: Float64Array.of(3, 0, 4, 0, 12),
       edgeCurvesSuffice: true,
