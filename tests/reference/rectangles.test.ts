@@ -1,4 +1,5 @@
 import { describe, expect, it } from 'vitest'
+import { polygonCount } from '../../scoring/geometry/counting/polygonCount.ts'
 import { flip, flippableEdges } from '../../scoring/geometry/flips.ts'
 import { quadraticHeights } from '../../scoring/geometry/heights.ts'
 import { isRegular } from '../../scoring/geometry/regularity.ts'
@@ -52,5 +53,16 @@ describe('unimodular triangulations of a lattice rectangle', () => {
     const found = allTriangulations(rectangle(3, 3))
     expect(found.length).toBe(46456)
     expect(regular(found)).toBe(46452)
+  })
+
+  it.each([
+    [1, 5, 252n],
+    [2, 2, 64n],
+    [2, 3, 852n],
+    [2, 4, 12170n],
+    [3, 3, 46456n],
+    [3, 4, 2822648n],
+  ])('%i x %i: %i, by sweeping', (m, n, count) => {
+    expect(polygonCount(rectangle(m, n).flat(), 2 * m * n, 1e6)).toBe(count)
   })
 })
