@@ -15,6 +15,7 @@ import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
 import { summaryOfEach } from './jobs/compute/polytopeSummary.ts'
 import { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
+import { invariantsOfEach, nearDuplicates } from './jobs/compute/relatives.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
 const tasks: Tasks = {
@@ -34,6 +35,8 @@ const tasks: Tasks = {
   'candidate-spectra': candidateSpectra,
   'certify-candidate': certifyCandidate,
   'class-pictures': classPictures,
+  'invariants-of-each': invariantsOfEach,
+  'near-duplicates': nearDuplicates,
   'search-segment': searchSegment,
   'null-chunk': nullChunk,
   'preview-chunk': previewChunk,

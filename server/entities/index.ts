@@ -2,6 +2,7 @@ import { Account } from './account.ts'
 import { Campaign } from './campaign.ts'
 import { CampaignPolytope } from './campaignPolytope.ts'
 import { CandidateRecord } from './candidate.ts'
+import { CandidateInvariants } from './candidateInvariants.ts'
 import { CandidateValue } from './candidateValue.ts'
 import { CertificateRecord } from './certificate.ts'
 import { Certification } from './certification.ts'
@@ -29,6 +30,7 @@ export const entities = [
   Campaign,
   CampaignPolytope,
   CandidateRecord,
+  CandidateInvariants,
   CandidateValue,
   CertificateRecord,
   Certification,

@@ -6,6 +6,7 @@ import { RecentResults } from '../services/recentResults.ts'
 import { CertificationRunner } from './certificationRunner.ts'
 import { ClassCounts } from './classCounts.ts'
 import { ComputePool } from './computePool.ts'
+import { InvariantsFiller } from './invariantsFiller.ts'
 import type { JobParts } from './jobParts.ts'
 import { NullSampler } from './nullSampler.ts'
 import { Previews } from './previews.ts'
@@ -22,6 +23,8 @@ export interface Jobs {
   readonly searches: SearchRunner
   readonly certifications: CertificationRunner
   readonly previews: Previews
+  /** Wall-type invariants of candidates, in the background. */
+  readonly invariants: InvariantsFiller
   /** What polytope pages show, by polytope key. */
   readonly shapes: RecentResults<PolytopeShape>
   /** Divisors and sections of polytopes, by polytope key. */
@@ -78,6 +81,7 @@ export function openJobs(
     searches,
     certifications,
     previews: new Previews(all),
+    invariants: new InvariantsFiller(all),
     shapes: new RecentResults(200),
     structures: new RecentResults(100),
     classCounts: new ClassCounts(all),

@@ -14,6 +14,7 @@ import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { scoreCandidates } from './compute/scoreCandidates.ts'
 import type { summaryOfEach } from './compute/polytopeSummary.ts'
 import type { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
+import type { invariantsOfEach, nearDuplicates } from './compute/relatives.ts'
 
 /** The tasks of the worker threads: pure functions of plain data, by name. */
 export interface Tasks {
@@ -33,6 +34,8 @@ export interface Tasks {
   'candidate-spectra': typeof candidateSpectra
   'certify-candidate': typeof certifyCandidate
   'class-pictures': typeof classPictures
+  'invariants-of-each': typeof invariantsOfEach
+  'near-duplicates': typeof nearDuplicates
   'search-segment': typeof searchSegment
   'null-chunk': typeof nullChunk
   'preview-chunk': typeof previewChunk

@@ -2,6 +2,7 @@ import { FirstSchema1796100000000 } from './1796100000000-firstSchema.ts'
 import { Certificates1796200100000 } from './1796200100000-certificates.ts'
 import { LibraryNumbers1796200200000 } from './1796200200000-libraryNumbers.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
+import { CandidateInvariants1796200400000 } from './1796200400000-candidateInvariants.ts'
 
 /** In order. A migration that has been released is never edited. */
 export const migrations = [
@@ -9,4 +10,5 @@ export const migrations = [
   Certificates1796200100000,
   LibraryNumbers1796200200000,
   ImportedCandidates1796200300000,
+  CandidateInvariants1796200400000,
 ]

@@ -7,13 +7,16 @@ import {
   classPictureSchema,
   classPicturesQuerySchema,
 } from '../../shared/candidates.ts'
+import { candidateRelativesSchema, relativesQuerySchema } from '../../shared/relatives.ts'
 import { giveVerdictSchema, verdictSchema } from '../../shared/verdicts.ts'
 import type { ServerContext } from '../context.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
 import { readCandidateRecord } from '../services/candidates.ts'
 import { readCandidateGeometry, readCandidateSpectra, readClassPictures } from '../services/geometry.ts'
+import { readRelatives } from '../services/relatives.ts'
 import { giveVerdict } from '../services/verdicts.ts'
+import { viewerOf } from '../services/viewers.ts'
 
 export function candidateRoutes(app: Express, context: ServerContext): void {
   endpoint(app, context, {
@@ -33,6 +36,18 @@ export function candidateRoutes(app: Express, context: ServerContext): void {
     answer: candidateSpectraSchema,
     lasting: true,
     handle: ({ account, params }) => readCandidateSpectra(context, account.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/candidates/:key/relatives',
+    access: 'account',
+    query: relativesQuerySchema,
+    answer: candidateRelativesSchema,
+    handle: async ({ account, params, query }) => {
+      const viewer = await viewerOf(context.source.manager, account.id, query.campaign)
+      return readRelatives(context, viewer, params.key)
+    },
   })
 
   endpoint(app, context, {

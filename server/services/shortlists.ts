@@ -61,7 +61,7 @@ export async function createShortlist(
   authorId: string,
   input: { name: string; searchIds: string[]; size: number },
 ): Promise<ShortlistDetail> {
-  const { source, writes, streams } = context
+  const { source, writes, streams, jobs } = context
   const searchIds = [...new Set(input.searchIds)]
   const searches = await source.manager.find(Search, {
     where: { campaignId, id: In(searchIds) },
@@ -118,5 +118,6 @@ export async function createShortlist(
     )
   })
   streams.toCampaign(campaignId, { kind: 'changed', what: 'shortlists' })
+  jobs.invariants.wake()
   return readShortlist(source.manager, campaignId, id)
 }

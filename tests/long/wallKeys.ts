@@ -21,5 +21,7 @@ for (const h11 of [1, 2, 3]) {
     orbits += orbitsOf(form, found).size
     for (const cls of found) keys.add(wallInvariants(cls, intersectionNumbers(cls)).key)
   }
-  process.stdout.write(`h11 = ${h11}: ${classes} classes, ${orbits} modulo automorphisms, ${keys.size} keys\n`)
+  process.stdout.write(
+    `h11 = ${h11}: ${classes} classes, ${orbits} modulo automorphisms, ${keys.size} keys\n`,
+  )
 }

@@ -27,6 +27,7 @@ const table: readonly (readonly [string, Who])[] = [
   ['POST /api/polytopes/find', 'account'],
   ['GET /api/candidates/pictures', 'account'],
   ['GET /api/collections', 'account'],
+  ['GET /api/candidates/:key/relatives', 'account'],
   ['GET /api/candidates/:key', 'account'],
   ['GET /api/candidates/:key/spectra', 'account'],
   ['GET /api/candidates/:key/certificates', 'account'],
