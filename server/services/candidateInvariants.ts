@@ -7,7 +7,7 @@ import type { CandidateGeometryInput } from '../jobs/compute/candidateGeometry.t
 import type { ComputedInvariants } from '../jobs/compute/relatives.ts'
 
 /**
- * Candidates somebody has taken an interest in (listed, judged, or stored without a search) and whose invariants are
+ * Candidates somebody has taken an interest in (listed, judged or imported) and whose invariants are
  * missing or of an older version, with what is needed to compute them. Finds of searches are too many; theirs come
  * when a dossier is opened.
  *
@@ -21,9 +21,10 @@ export async function candidatesWithoutInvariants(
   const rows = await manager.query<{ candidateKey: string }[]>(
     `SELECT c."key" AS candidateKey FROM candidate c
      LEFT JOIN candidate_invariants i ON i.candidateKey = c."key" AND i.version = ?
-     WHERE c."key" > ? AND i.candidateKey IS NULL AND (
-       c."key" IN (SELECT candidateKey FROM shortlist_entry UNION SELECT candidateKey FROM verdict)
-       OR c."key" NOT IN (SELECT candidateKey FROM find))
+     WHERE c."key" > ? AND i.candidateKey IS NULL AND c."key" IN (
+       SELECT candidateKey FROM shortlist_entry
+       UNION SELECT candidateKey FROM verdict
+       UNION SELECT candidateKey FROM imported_candidate)
      ORDER BY c."key" LIMIT ?`,
     [wallVersion, after, count],
   )

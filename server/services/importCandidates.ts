@@ -72,6 +72,7 @@ export async function importCandidates(
   }
   problems.sort((a, b) => a.line - b.line)
   streams.toCampaign(importer.campaignId, { kind: 'changed', what: 'imports' })
+  jobs.invariants.wake()
   return { format, question: null, imported, problems, skipped }
 }
 

@@ -11,7 +11,7 @@ export async function campaignsOf(manager: EntityManager, viewer: Viewer): Promi
 
 /**
  * Head of a query that may then use `known`, the keys of all candidates that some campaigns know of: found by a
- * search, listed or judged. Its one parameter, before all others, is the JSON text of the campaigns' identifiers. What
+ * search, imported, listed or judged. Its one parameter, before all others, is the JSON text of the campaigns' identifiers. What
  * other campaigns found stays with them, although a candidate itself is global.
  */
 export const withKnown = `
@@ -22,4 +22,5 @@ export const withKnown = `
     UNION SELECT e.candidateKey FROM shortlist_entry e JOIN shortlist l ON l.id = e.shortlistId
       WHERE l.campaignId IN (SELECT id FROM mine)
     UNION SELECT v.candidateKey FROM verdict v WHERE v.campaignId IN (SELECT id FROM mine)
+    UNION SELECT m.candidateKey FROM imported_candidate m WHERE m.campaignId IN (SELECT id FROM mine)
   )`
