@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { candidateKeySchema } from './candidates.ts'
+import { candidateKeySchema } from './keys.ts'
 import { polytopeKeySchema } from './polytopes.ts'
 import { verdictSchema } from './verdicts.ts'
 
