@@ -27,6 +27,18 @@ export const catalogue = {
   'second-chern': entry('intersections', 'Second Chern class on the divisors'),
   euler: entry('intersections', 'Euler number from intersection numbers and from Hodge numbers'),
   noether: entry('intersections', 'Noether’s formula on every divisor'),
+  'edge-curves': entry('cone', 'Volumes of all edge curves at the reference point'),
+  circuits: entry('cone', 'All circuits of the inner cone at the reference point'),
+  'kaehler-fan': entry('cone', 'The fan of the reference point has the class’s triangles'),
+  'edge-curves-suffice': entry('cone', 'The edge curves alone fix the reference point'),
+  'reference-point': entry('cone', 'The reference point has the least norm'),
+  'volume-total': entry('metric', 'Volume of the threefold'),
+  'divisor-volumes': entry('metric', 'Volumes of the prime toric divisors'),
+  'divisor-spectrum': entry('metric', 'Field-space metric, divisor spectrum, by full decomposition'),
+  'top-eigenvalue': entry('metric', 'Largest eigenvalue, as candidates are ranked by it'),
+  'metric-differences': entry('metric', 'Field-space metric by central differences of K'),
+  'lattice-basis': entry('metric', 'Lattice basis of the divisor classes'),
+  'basis-spectrum': entry('metric', 'Field-space metric, basis spectrum, by full decomposition'),
 } as const satisfies Record<string, { readonly group: CheckGroup; readonly title: string }>
 
 export type CheckId = keyof typeof catalogue

@@ -30,4 +30,13 @@ export interface ClaimedNumbers {
   /** Non-zero [i, j, k, kappa_ijk], i <= j <= k, lexicographic order. */
   readonly intersections: readonly (readonly number[])[]
   readonly c2: readonly number[]
+  /** Reference point at scale 1, one weight per point. */
+  readonly reference: { readonly weights: readonly number[]; readonly edgeCurvesSuffice: boolean }
+  readonly volumes: { readonly total: number; readonly divisors: readonly number[] }
+  readonly metric: {
+    readonly top: number
+    readonly divisorSpectrum: readonly number[]
+    readonly basis: readonly number[]
+    readonly basisSpectrum: readonly number[]
+  }
 }

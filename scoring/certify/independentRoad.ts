@@ -1,6 +1,8 @@
 import { CheckList, type Check } from './check.ts'
 import type { Claims } from './claims.ts'
+import { checkCone, type CertifiedReference } from './coneChecks.ts'
 import { checkIntersections, type CertifiedNumbers } from './intersectionChecks.ts'
+import { checkMetric, type CertifiedMetric } from './metricChecks.ts'
 import { checkPolytope, type CertifiedPolytope } from './polytopeChecks.ts'
 import { checkTriangulation, type CertifiedFan } from './triangulationChecks.ts'
 
@@ -12,6 +14,8 @@ export interface Certified {
   readonly polytope?: CertifiedPolytope
   readonly fan?: CertifiedFan
   readonly numbers?: CertifiedNumbers
+  readonly reference?: CertifiedReference
+  readonly metric?: CertifiedMetric
 }
 
 /**
@@ -29,7 +33,9 @@ export function independentRoad(
   const polytope = checkPolytope(claims, checks)
   const fan = polytope && checkTriangulation(claims, polytope, checks)
   const numbers = polytope && fan && checkIntersections(claims, polytope, fan, checks)
-  return { checks, certified: { polytope, fan, numbers } }
+  const reference = polytope && fan && numbers && checkCone(claims, polytope, fan, numbers, checks)
+  const metric = numbers && reference && checkMetric(claims, numbers, reference, checks)
+  return { checks, certified: { polytope, fan, numbers, reference, metric } }
 }
 
 export type { Check }

@@ -52,3 +52,38 @@ describe('a certificate', () => {
     expect(failed(checks)).toEqual(['intersection-numbers'])
   })
 })
+
+describe('the metric of a certificate', () => {
+  it('is rejected when it is off by one part in a million', () => {
+    const off = (list: number[], n: number): void => {
+      list[n] *= 1 + 1e-6
+    }
+    const one = altered(({ numbers: { metric } }) => off(metric.divisorSpectrum, 7))
+    expect(failed(recheck(one).checks)).toEqual(['divisor-spectrum', 'metric-differences'])
+    const top = altered(({ numbers: { metric } }) => (metric.top *= 1 + 1e-6))
+    expect(failed(recheck(top).checks)).toEqual(['top-eigenvalue'])
+    const all = altered(({ numbers: { metric } }) =>
+      metric.divisorSpectrum.forEach((_, n, list) => off(list, n)),
+    )
+    expect(failed(recheck(all).checks)).toEqual(['divisor-spectrum', 'metric-differences'])
+    const basis = altered(({ numbers: { metric } }) => off(metric.basisSpectrum, 0))
+    expect(failed(recheck(basis).checks)).toEqual(['basis-spectrum'])
+  })
+
+  it('is rejected at another Kaehler class', () => {
+    const moved = altered(({ numbers: { reference } }) => (reference.weights[3] += 1e-5))
+    expect(failed(recheck(moved).checks)).toEqual(['edge-curves'])
+    const along = altered(({ numbers: { reference }, points }) => {
+      reference.weights.forEach((weight, p, list) => (list[p] = weight + 1e-5 * points[p][0]))
+    })
+    expect(failed(recheck(along).checks)).toContain('reference-point')
+    const scaled = altered(({ numbers: { reference } }) => {
+      reference.weights.forEach((weight, p, list) => (list[p] = 1.001 * weight))
+    })
+    expect(failed(recheck(scaled).checks)).toContain('reference-point')
+    const inward = altered(({ numbers: { reference } }) => {
+      reference.weights.forEach((weight, p, list) => (list[p] = 0.999 * weight))
+    })
+    expect(failed(recheck(inward).checks)).toContain('edge-curves')
+  })
+})
