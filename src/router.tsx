@@ -49,6 +49,10 @@ const signedIn: RouteObject[] = [
     lazy: page(async () => (await import('./routes/shortlist/ShortlistPage.tsx')).ShortlistPage),
   },
   {
+    path: 'campaigns/:campaignId/imported',
+    lazy: page(async () => (await import('./routes/imported/ImportedPage.tsx')).ImportedPage),
+  },
+  {
     path: 'library',
     lazy: page(async () => (await import('./routes/library/LibraryPage.tsx')).LibraryPage),
   },

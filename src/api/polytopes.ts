@@ -6,7 +6,7 @@ import {
   polytopeDetailSchema,
   polytopePageSchema,
   scopeSummarySchema,
-  type importWeightsSchema,
+  type importWeightLinesSchema,
   type polytopeQuerySchema,
   type PolytopeFilter,
   type Scope,
@@ -82,7 +82,11 @@ export const useImportFile = (campaign: string) =>
     })
   })
 
-export const useImportWeights = (campaign: string) =>
-  useImport((body: z.infer<typeof importWeightsSchema>) =>
-    request(`/campaigns/${campaign}/polytopes/weights`, { method: 'POST', body, schema: importReportSchema }),
+export const useImportWeightLines = (campaign: string) =>
+  useImport((body: z.infer<typeof importWeightLinesSchema>) =>
+    request(`/campaigns/${campaign}/polytopes/weight-lines`, {
+      method: 'POST',
+      body,
+      schema: importReportSchema,
+    }),
   )

@@ -3,6 +3,7 @@ import { type ImportReport } from '../../../shared/polytopes.ts'
 import { Button } from '../../components/ui/Button.tsx'
 import { Table, Td, Th } from '../../components/ui/Table.tsx'
 import { counted, formatNumber } from '../../lib/numbers.ts'
+import { ProblemList } from './ProblemList.tsx'
 
 const shown = 200
 
@@ -27,20 +28,7 @@ export function ImportReportView({
         {known > 0 && `, ${formatNumber(known)} of them known before`}
         {problems.length > 0 ? `; ${counted(problems.length, 'problem')}.` : '; no problems.'}
       </p>
-      {problems.length > 0 && (
-        <section aria-labelledby="import-problems">
-          <h3 id="import-problems">Not imported</h3>
-          <ul className="max-h-56 overflow-y-auto">
-            {problems.slice(0, shown).map((problem, index) => (
-              <li key={index} className="border-b py-1.5">
-                {problem.line !== null && <span className="mr-2 font-mono text-xs">line {problem.line}</span>}
-                {problem.message} <span className="font-mono text-xs text-soft">{problem.code}</span>
-              </li>
-            ))}
-          </ul>
-          {problems.length > shown && <p className="text-xs text-soft">The first {shown} are listed.</p>}
-        </section>
-      )}
+      <ProblemList problems={problems} />
       {imported.length > 0 && (
         <div className="max-h-64 overflow-y-auto">
           <Table label="Imported polytopes">

@@ -62,7 +62,14 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
         >
           {shortlist.targetName}
         </Link>
-        , version {shortlist.targetVersion}; {formatNumber(shortlist.size)} candidates from{' '}
+        , version {shortlist.targetVersion}; {formatNumber(shortlist.size)} candidates{' '}
+        {shortlist.searches.length === 0 ? (
+          <Link to={`/campaigns/${campaign}/imported`} className="text-action hover:underline">
+            imported
+          </Link>
+        ) : (
+          'from '
+        )}
         {shortlist.searches.map(({ id, name }, index) => (
           <span key={id}>
             {index > 0 && ', '}
@@ -82,7 +89,7 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
           title={shortlist.rows.length === 0 ? 'The shortlist is empty.' : 'No candidate matches the filter.'}
         >
           {shortlist.rows.length === 0 ? (
-            'The searches had found no feasible candidate when it was made.'
+            'Nothing feasible had been found when it was made.'
           ) : (
             <Button onClick={() => change({ verdict: '', certificate: '', hits: '', text: '' })}>
               Show all candidates
