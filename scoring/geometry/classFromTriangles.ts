@@ -2,6 +2,7 @@ import { InputError, InvariantError } from '../errors.ts'
 import { classOfMesh, orient } from './classMesh.ts'
 import { meshOf } from './faceMesh.ts'
 import { faceSheets, faceWith, type FaceSheets } from './faceSheets.ts'
+import { listed, type PointNames } from './pointNames.ts'
 import type { Polytope } from './polytope.ts'
 import type { TwoFaceClass } from './twoFaceClass.ts'
 
@@ -15,6 +16,11 @@ interface Placed {
   readonly area: number
 }
 
+/** The 2-faces, and how messages name their points. */
+interface NamedSheets extends FaceSheets {
+  readonly names: PointNames
+}
+
 /**
  * A class from its triangles in any order, as a file or another program may give them. Proves that they are a fine
  * triangulation of every 2-face: all are unimodular, and each edge has one triangle on either side, or one where it
@@ -22,13 +28,18 @@ interface Placed {
  * one. Regularity is for `isRegular` to say.
  *
  * @param triangles 3 point indices per triangle
+ * @param names how messages name points
  * @throws InputError that names the first triangle, edge or 2-face at fault: triangles.wrong-size, .no-such-point,
  *   .repeated-point, .not-on-a-face, .degenerate, .twice, .not-fine, .not-unimodular, .overlap, .gap
  */
-export function classFromTriangles(polytope: Polytope, triangles: ArrayLike<number>): TwoFaceClass {
+export function classFromTriangles(
+  polytope: Polytope,
+  triangles: ArrayLike<number>,
+  names: PointNames = String,
+): TwoFaceClass {
   if (triangles.length % 3 !== 0)
     throw fault('wrong-size', `${triangles.length} point indices do not make whole triangles.`)
-  const sheets = faceSheets(polytope)
+  const sheets: NamedSheets = { ...faceSheets(polytope), names }
   const placed: Placed[] = []
   const seen = new Map<string, number>()
   for (let at = 0; 3 * at < triangles.length; at++) {
@@ -37,7 +48,7 @@ export function classFromTriangles(polytope: Polytope, triangles: ArrayLike<numb
     const name = [...named].sort((p, q) => p - q).join()
     const earlier = seen.get(name)
     if (earlier !== undefined)
-      throw fault('twice', `Triangles ${earlier} and ${at} are the same (${named.join(', ')}).`, at, named)
+      throw fault('twice', `Triangles ${earlier} and ${at} are the same ${listed(named, names)}.`, at, named)
     seen.set(name, at)
   }
   for (const triangle of placed) if (triangle.area !== 1) refuseCoarse(sheets, placed, triangle)
@@ -49,10 +60,10 @@ export function classFromTriangles(polytope: Polytope, triangles: ArrayLike<numb
   return classOfMesh(meshOf(sheets, from))
 }
 
-function place(sheets: FaceSheets, named: readonly number[], at: number): Placed {
+function place(sheets: NamedSheets, named: readonly number[], at: number): Placed {
   const { pointCount } = sheets.polytope
   const refuse = (code: string, what: string): never => {
-    throw fault(code, `Triangle ${at} (${named.join(', ')}) ${what}.`, at, named)
+    throw fault(code, `Triangle ${at} ${listed(named, sheets.names)} ${what}.`, at, named)
   }
   for (const p of named) {
     if (!Number.isInteger(p) || p < 0 || p >= pointCount)
@@ -69,7 +80,7 @@ function place(sheets: FaceSheets, named: readonly number[], at: number): Placed
 }
 
 /** A triangle larger than the unit contains another lattice point. */
-function refuseCoarse(sheets: FaceSheets, placed: readonly Placed[], triangle: Placed): never {
+function refuseCoarse(sheets: NamedSheets, placed: readonly Placed[], triangle: Placed): never {
   const { start, point } = sheets
   const { at, face, area } = triangle
   const inside: number[] = []
@@ -82,20 +93,20 @@ function refuseCoarse(sheets: FaceSheets, placed: readonly Placed[], triangle: P
     throw fault(
       'not-fine',
       `The triangles are not fine: triangle ${named} contains ${unused.length === 1 ? 'point' : 'points'} ` +
-        `${unused.join(', ')}, not used on 2-face ${face}.`,
+        `${unused.map((p) => sheets.names(p)).join(', ')}, not used on 2-face ${face}.`,
       at,
       unused,
     )
   throw fault(
     'not-unimodular',
-    `Triangle ${named} has area ${area} in place of 1: it contains point ${point[inside[0]]}.`,
+    `Triangle ${named} has area ${area} in place of 1: it contains point ${sheets.names(point[inside[0]])}.`,
     at,
     inside.map((c) => point[c]),
   )
 }
 
 /** Every edge has one triangle on either side, but for those on the boundary of their 2-face. */
-function requirePairs(sheets: FaceSheets, placed: readonly Placed[]): void {
+function requirePairs(sheets: NamedSheets, placed: readonly Placed[]): void {
   const { point } = sheets
   const sideOf = new Map<string, Placed>()
   for (const triangle of placed) {
@@ -111,7 +122,7 @@ function requirePairs(sheets: FaceSheets, placed: readonly Placed[]): void {
         throw fault(
           'overlap',
           `Triangles ${name(sheets, other)} and ${name(sheets, triangle)} overlap: they lie on the same side of ` +
-            `the edge (${point[c]}, ${point[d]}).`,
+            `the edge ${listed([point[c], point[d]], sheets.names)}.`,
           triangle.at,
           [point[c], point[d]],
         )
@@ -123,7 +134,7 @@ function requirePairs(sheets: FaceSheets, placed: readonly Placed[]): void {
     if (sideOf.has(`${d},${c}`) || onBoundary(sheets, triangle.face, c, d)) continue
     throw fault(
       'gap',
-      `No triangle lies on the other side of the edge (${point[c]}, ${point[d]}) of triangle ` +
+      `No triangle lies on the other side of the edge ${listed([point[c], point[d]], sheets.names)} of triangle ` +
         `${name(sheets, triangle)} on 2-face ${triangle.face}.`,
       triangle.at,
       [point[c], point[d]],
@@ -135,14 +146,17 @@ function requirePairs(sheets: FaceSheets, placed: readonly Placed[]): void {
  * A boundary edge of a 2-face has one triangle, so the face is covered once by as many triangles as its area says,
  * unless it has none at all.
  */
-function requireCover(sheets: FaceSheets, placed: readonly Placed[]): void {
+function requireCover(sheets: NamedSheets, placed: readonly Placed[]): void {
   const { slot, polytope } = sheets
   const counts = new Int32Array(polytope.twoFaces.length)
   for (const { face } of placed) counts[face]++
   counts.forEach((count, face) => {
     const { corners } = polytope.twoFaces[face]
     if (count === 0)
-      throw fault('gap', `No triangle lies on 2-face ${face}, with the corners ${corners.join(', ')}.`)
+      throw fault(
+        'gap',
+        `No triangle lies on 2-face ${face}, with the corners ${listed([...corners], sheets.names)}.`,
+      )
     const area = slot[face + 1] - slot[face]
     if (count !== area)
       throw new InvariantError(
@@ -151,10 +165,9 @@ function requireCover(sheets: FaceSheets, placed: readonly Placed[]): void {
   })
 }
 
-function name({ point }: FaceSheets, { at, corners }: Placed): string {
-  return `${at} (${Array.from(corners, (c) => point[c])
-    .sort((p, q) => p - q)
-    .join(', ')})`
+function name({ point, names }: NamedSheets, { at, corners }: Placed): string {
+  const points = Array.from(corners, (c) => point[c]).sort((p, q) => p - q)
+  return `${at} ${listed(points, names)}`
 }
 
 /** Twice the area of the triangle c, d, e of corners, positive when they run counterclockwise. */

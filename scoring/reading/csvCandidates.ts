@@ -133,6 +133,7 @@ class Table {
         polytope: { kind: 'points', rows: points },
         points,
         triangulation: { kind: 'heights', values: numbers.map((row) => row[4]) },
+        naming: 0,
         claims: {},
         places: { points: lines, heights: lines },
       })
@@ -222,6 +223,7 @@ class Table {
       polytope,
       points,
       triangulation,
+      naming: this.cell(record, 'index from') === '1' ? 1 : 0,
       claims: isKey(claimed) ? { candidateKey: claimed } : {},
       places: {},
     })

@@ -37,6 +37,11 @@ export interface GivenCandidate {
    */
   readonly points: readonly (readonly number[])[] | null
   readonly triangulation: GivenTriangulation
+  /**
+   * How the text names points in simplices and triangles: by index, what the first is called (0 or 1), or by their
+   * coordinates. Messages do the same.
+   */
+  readonly naming: 0 | 1 | 'coordinates'
   /** Keys that the text says it has. They are compared with what the geometry gives. */
   readonly claims: { readonly polytopeKey?: string; readonly candidateKey?: string }
   readonly places: Places

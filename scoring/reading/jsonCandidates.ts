@@ -149,6 +149,7 @@ class Reader {
       polytope: { kind: 'key', key: polytopeKey, ...(vertices && { vertices }) },
       points: null,
       triangulation: { kind: 'heights', values: heights },
+      naming: 0,
       claims: { polytopeKey, candidateKey: classKey },
       places: this.placesOf(at, { vertices, heights }),
     })
@@ -191,6 +192,7 @@ class Reader {
           polytope: { kind: 'key', key: row.polytopeKey },
           points: null,
           triangulation: { kind: 'address' },
+          naming: 0,
           claims: { polytopeKey: row.polytopeKey, candidateKey: row.candidateKey },
           places: {},
         })
@@ -218,6 +220,7 @@ class Reader {
       polytope: { kind: 'points', rows: vertices },
       points,
       triangulation: { kind: 'heights', values: heights },
+      naming: 0,
       claims: { polytopeKey, candidateKey },
       places: this.placesOf(at, { vertices, points, heights }),
     })
@@ -265,6 +268,7 @@ class Reader {
       entry: at.path,
       name: given.name ?? null,
       polytope,
+      naming: from as GivenCandidate['naming'],
       claims: { candidateKey: given.candidate },
     }
     if (heights !== undefined) {
@@ -282,9 +286,20 @@ class Reader {
       return
     }
     const kind = given.simplices !== undefined ? 'simplices' : 'triangles'
-    const rows = indices(given[kind] ?? [])
+    const corners = given[kind] ?? []
+    const byPoint = corners.flat().filter((corner) => typeof corner !== 'number').length
+    if (byPoint > 0 && byPoint < corners.flat().length && !stated) {
+      this.fail(
+        at,
+        'json.mixed-corners',
+        `Some corners of the ${kind} are points and others indices; indices need a list of "points" to refer to.`,
+      )
+      return
+    }
+    const rows = indices(corners)
     this.candidates.push({
       ...base,
+      ...(byPoint > 0 && { naming: 'coordinates' as const }),
       points: stated || list.rows.length > 0 ? list.rows : null,
       triangulation: { kind, rows },
       places: this.placesOf(at, { ...given, heights: undefined }),
@@ -299,6 +314,7 @@ class Reader {
       polytope: { kind: 'key', key: polytopeKey },
       points: null,
       triangulation: { kind: 'address' },
+      naming: 0,
       claims: { polytopeKey, candidateKey },
       places: {},
     })

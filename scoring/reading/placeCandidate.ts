@@ -1,5 +1,8 @@
 import { InputError } from '../errors.ts'
 import { canonicalClass } from '../geometry/classKey.ts'
+import { facetGenericWitness } from '../geometry/fans/facetGenericHeights.ts'
+import { heightsOfSimplices } from '../geometry/fans/heightsOfSimplices.ts'
+import { heightsOfTriangles } from '../geometry/fans/heightsOfTriangles.ts'
 import { quadraticHeights } from '../geometry/heights.ts'
 import { normalForm, type NormalForm } from '../geometry/normalForm.ts'
 import { toNormalForm, transportHeights } from '../geometry/transport.ts'
@@ -7,8 +10,10 @@ import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import { witnessHeights } from '../search/witness.ts'
 import type { GivenCandidate, ReadingProblem, Section } from './given.ts'
 import { lineOfRow } from './given.ts'
+import { requireStar } from './originHeight.ts'
 import { classOfHeights, placedHeights } from './placedHeights.ts'
 import { placedPoints, type PlacedPoints } from './placedPoints.ts'
+import { placedRows } from './placedSimplices.ts'
 
 /** A candidate whose geometry was checked: what is stored of it. */
 export interface PlacedCandidate {
@@ -58,29 +63,36 @@ function geometryOf(given: GivenCandidate): PlacedCandidate {
     )
   }
   const carried = transportHeights(transportHeights(heights, form.relabelling), canonical.relabelling)
-  return {
-    form,
-    candidateKey: canonical.key,
-    heights: [...Array.from(witnessHeights(canonical.class, carried))],
-  }
+  const witness = facetGenericWitness(canonical.class, witnessHeights(canonical.class, carried))
+  return { form, candidateKey: canonical.key, heights: [...witness] }
 }
 
 function classOf(
   placed: PlacedPoints,
-  { triangulation, claims }: GivenCandidate,
+  { triangulation, naming, claims }: GivenCandidate,
 ): { readonly cls: TwoFaceClass; readonly heights: ArrayLike<number> } {
   switch (triangulation.kind) {
     case 'heights': {
       const heights = placedHeights(placed, triangulation.values)
-      return { cls: classOfHeights(placed, heights), heights }
+      const cls = classOfHeights(placed, heights)
+      const origin = placed.places.indexOf('origin')
+      if (origin >= 0) requireStar(placed, cls, heights, triangulation.values[origin])
+      return { cls, heights }
     }
     case 'quadratic': {
       const heights = quadraticHeights(placed.polytope, triangulation)
       return { cls: classOfHeights(placed, heights), heights }
     }
-    case 'simplices':
-    case 'triangles':
-      throw new InputError('simplices.not-read', 'Simplices and triangles are not read yet; give heights.')
+    case 'simplices': {
+      const rows = placedRows(placed, 'simplices', triangulation.rows, naming)
+      const proved = heightsOfSimplices(placed.polytope, rows, placed.labelOf)
+      return { cls: proved.class, heights: proved.heights }
+    }
+    case 'triangles': {
+      const rows = placedRows(placed, 'triangles', triangulation.rows, naming)
+      const proved = heightsOfTriangles(placed.polytope, rows, placed.labelOf)
+      return { cls: proved.class, heights: proved.heights }
+    }
     case 'address':
       throw notStored({ claims })
   }

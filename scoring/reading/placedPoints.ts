@@ -1,5 +1,6 @@
 import { InputError } from '../errors.ts'
 import { applyBig, transposed, type BasisChange } from '../geometry/latticeReduction.ts'
+import type { PointNames } from '../geometry/pointNames.ts'
 import { polytopeFromPoints, polytopeInReducedBasis, type Polytope } from '../geometry/polytope.ts'
 import { checkPoint } from '../geometry/polytopeInput.ts'
 import { polytopeFromWeights } from '../geometry/weights.ts'
@@ -17,6 +18,8 @@ export interface PlacedPoints {
   readonly listed: boolean
   /** Coordinates of a point of the polytope as the text would give them: `(1, 0, 0, 0)`. */
   nameOf(point: number): string
+  /** A point as the text's own simplices name it. */
+  readonly labelOf: PointNames
 }
 
 /**
@@ -29,7 +32,8 @@ export function placedPoints({
   polytope: given,
   points,
   triangulation,
-}: Pick<GivenCandidate, 'polytope' | 'points' | 'triangulation'>): PlacedPoints {
+  naming,
+}: Pick<GivenCandidate, 'polytope' | 'points' | 'triangulation' | 'naming'>): PlacedPoints {
   // |v|^2 means the coordinates given.
   const { polytope, basis } = polytopeOf(given, triangulation.kind !== 'quadratic')
   const list = points ?? (given.kind === 'points' ? given.rows : null)
@@ -38,12 +42,15 @@ export function placedPoints({
     const own = [...polytope.points.subarray(4 * point, 4 * point + 4)]
     return `(${(back ? applyBig(back, own.map(BigInt)) : own).join(', ')})`
   }
-  if (list === null) {
-    const places = Array.from({ length: polytope.pointCount }, (_, point) => point)
-    return { polytope, places, listed: false, nameOf }
+  const places =
+    list === null
+      ? Array.from({ length: polytope.pointCount }, (_, point) => point)
+      : placesOf(polytope, list, basis, points !== null ? 'points' : 'vertices')
+  const labelOf = (point: number): string => {
+    const at = naming === 'coordinates' ? -1 : places.indexOf(point)
+    return at < 0 || naming === 'coordinates' ? nameOf(point) : String(at + naming)
   }
-  const section = points !== null ? 'points' : 'vertices'
-  return { polytope, places: placesOf(polytope, list, basis, section), listed: true, nameOf }
+  return { polytope, places, listed: list !== null, nameOf, labelOf }
 }
 
 function polytopeOf(given: GivenPolytope, reduce: boolean): { polytope: Polytope; basis?: BasisChange } {

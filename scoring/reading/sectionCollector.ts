@@ -25,7 +25,7 @@ class Draft {
   polytope: GivenPolytope | undefined
   points: readonly (readonly number[])[] | null = null
   triangulation: GivenTriangulation | undefined
-  indexFrom = 0
+  indexFrom: 0 | 1 = 0
   spoilt = false
   readonly places: Partial<Record<Section, readonly number[]>> = {}
 
@@ -78,7 +78,7 @@ export class SectionCollector {
     this.current(line).places.weights = [line]
   }
 
-  indicesFrom(first: number, line: number): void {
+  indicesFrom(first: 0 | 1, line: number): void {
     this.close()
     this.current(line).indexFrom = first
   }
@@ -293,6 +293,7 @@ export class SectionCollector {
         polytope,
         points: draft.points,
         triangulation: shifted(triangulation, draft.indexFrom),
+        naming: draft.indexFrom,
         claims: {},
         places: draft.places,
       })

@@ -82,7 +82,7 @@ function heading(content: string, line: number, sections: SectionCollector): str
   }
   const from = /^ind(?:ices|ex) from\s*[:=]?\s*([01])$/i.exec(content)
   if (from) {
-    sections.indicesFrom(Number(from[1]), line)
+    sections.indicesFrom(from[1] === '1' ? 1 : 0, line)
     return ''
   }
   const weights = /^weights\s*[:=]?\s*([\d\s,+]+?)[\s,]*(fan|newton)$/i.exec(content)

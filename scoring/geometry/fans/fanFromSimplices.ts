@@ -1,5 +1,6 @@
 import { InputError, InvariantError } from '../../errors.ts'
 import { classFromTriangles } from '../classFromTriangles.ts'
+import { listed, type PointNames } from '../pointNames.ts'
 import type { Polytope } from '../polytope.ts'
 import { fanOf, type Fan } from './fan.ts'
 import { commonFacets, facetPoints } from './facetPoints.ts'
@@ -33,16 +34,21 @@ interface Placed {
  *
  * Regularity is for `isRegularFan` to say.
  *
+ * @param names how messages name points
  * @throws InputError that names the first simplex, wall, facet or points at fault: simplices.empty, .wrong-size,
  *   .no-such-point, .repeated-point, .not-star, .not-in-a-facet, .degenerate, .twice, .overlap, .open-wall, .not-fine
  */
-export function fanFromSimplices(polytope: Polytope, simplices: readonly (readonly number[])[]): Fan {
-  const placed = simplices.map((simplex, at) => place(polytope, simplex, at))
+export function fanFromSimplices(
+  polytope: Polytope,
+  simplices: readonly (readonly number[])[],
+  names: PointNames = String,
+): Fan {
+  const placed = simplices.map((simplex, at) => place(polytope, simplex, at, names))
   if (placed.length === 0) throw fault('empty', 'No simplices are given.')
-  refuseTwice(placed)
-  const triangles = pairWalls(polytope, placed)
-  requireCover(polytope, placed)
-  requireFine(polytope, placed)
+  refuseTwice(placed, names)
+  const triangles = pairWalls(polytope, placed, names)
+  requireCover(polytope, placed, names)
+  requireFine(polytope, placed, names)
   return fanOf(
     classFromTriangles(polytope, triangles.flat()),
     placed.map(({ points }) => points),
@@ -50,8 +56,8 @@ export function fanFromSimplices(polytope: Polytope, simplices: readonly (readon
   )
 }
 
-function place(polytope: Polytope, simplex: readonly number[], at: number): Placed {
-  const named = `Simplex ${at} (${simplex.map((p) => (p === originIndex ? 'origin' : p)).join(', ')})`
+function place(polytope: Polytope, simplex: readonly number[], at: number, names: PointNames): Placed {
+  const named = `Simplex ${at} ${listed(simplex, (p) => (p === originIndex ? 'origin' : names(p)))}`
   const refuse = (code: string, what: string): never => {
     throw fault(code, `${named} ${what}.`, `simplices[${at}]`, [...simplex])
   }
@@ -81,14 +87,14 @@ function place(polytope: Polytope, simplex: readonly number[], at: number): Plac
       'not-in-a-facet',
       alone === undefined
         ? 'does not lie on one facet of the polytope'
-        : `does not lie on one facet of the polytope: point ${alone} is on none that holds the others`,
+        : `does not lie on one facet of the polytope: point ${names(alone)} is on none that holds the others`,
     )
   }
   if (simplexVolume(polytope, points) === 0) refuse('degenerate', 'is degenerate: its points lie in a plane')
   return { at, points, facet }
 }
 
-function refuseTwice(placed: readonly Placed[]): void {
+function refuseTwice(placed: readonly Placed[], names: PointNames): void {
   const seen = new Map<string, number>()
   for (const { at, points } of placed) {
     const name = points.join()
@@ -96,7 +102,7 @@ function refuseTwice(placed: readonly Placed[]): void {
     if (earlier !== undefined)
       throw fault(
         'twice',
-        `Simplices ${earlier} and ${at} are the same (${points.join(', ')}).`,
+        `Simplices ${earlier} and ${at} are the same ${listed(points, names)}.`,
         `simplices[${at}]`,
       )
     seen.set(name, at)
@@ -110,7 +116,7 @@ interface Side {
 }
 
 /** Checks that each wall has the two neighbours it must have; returns the walls in 2-faces. */
-function pairWalls(polytope: Polytope, placed: readonly Placed[]): number[][] {
+function pairWalls(polytope: Polytope, placed: readonly Placed[], names: PointNames): number[][] {
   const sides = new Map<number, Side[]>()
   for (const simplex of placed) {
     for (const apex of simplex.points) {
@@ -126,58 +132,64 @@ function pairWalls(polytope: Polytope, placed: readonly Placed[]): number[][] {
     const { simplex, apex } = list[0]
     const wall = simplex.points.filter((p) => p !== apex)
     const facets = commonFacets(facetPoints(polytope), wall)
-    if (facets.length === 1) checkInside(polytope, wall, list)
+    if (facets.length === 1) checkInside(polytope, wall, list, names)
     else {
-      for (const facet of facets) checkBetween(wall, facet, list)
+      for (const facet of facets) checkBetween(wall, facet, list, names)
       onFaces.push(wall)
     }
   }
   return onFaces
 }
 
-function checkInside(polytope: Polytope, wall: readonly number[], sides: readonly Side[]): void {
+function checkInside(
+  polytope: Polytope,
+  wall: readonly number[],
+  sides: readonly Side[],
+  names: PointNames,
+): void {
   const off = sides[0].apex
   const { rows } = minorsOf(polytope, [...wall, off])
   const sideOf = (p: number): boolean => pairing(rows, 3, polytope.points, p) > 0
   const here = sides.filter(({ apex }) => sideOf(apex))
   const there = sides.filter(({ apex }) => !sideOf(apex))
-  for (const side of [here, there]) if (side.length > 1) throw overlap(wall, side)
-  if (here.length === 0 || there.length === 0) throw openWall(wall, sides[0].simplex, 'inside facet')
+  for (const side of [here, there]) if (side.length > 1) throw overlap(wall, side, names)
+  if (here.length === 0 || there.length === 0)
+    throw openWall(wall, sides[0].simplex, names, 'inside its facet')
 }
 
-function checkBetween(wall: readonly number[], facet: number, sides: readonly Side[]): void {
+function checkBetween(
+  wall: readonly number[],
+  facet: number,
+  sides: readonly Side[],
+  names: PointNames,
+): void {
   const here = sides.filter(({ simplex }) => simplex.facet === facet)
-  if (here.length > 1) throw overlap(wall, here)
-  if (here.length === 0) throw openWall(wall, sides[0].simplex, 'towards facet', facet)
+  if (here.length > 1) throw overlap(wall, here, names)
+  if (here.length === 0) throw openWall(wall, sides[0].simplex, names, `on facet ${facet}`)
 }
 
-function overlap(wall: readonly number[], sides: readonly Side[]): InputError {
+function overlap(wall: readonly number[], sides: readonly Side[], names: PointNames): InputError {
   const [s, t] = sides.map(({ simplex }) => simplex)
   return fault(
     'overlap',
-    `Simplices ${s.at} (${s.points.join(', ')}) and ${t.at} (${t.points.join(', ')}) overlap: they lie on the ` +
-      `same side of the triangle (${wall.join(', ')}).`,
+    `Simplices ${s.at} ${listed(s.points, names)} and ${t.at} ${listed(t.points, names)} overlap: they lie on ` +
+      `the same side of the triangle ${listed(wall, names)}.`,
     `simplices[${t.at}]`,
     t.points,
   )
 }
 
-function openWall(
-  wall: readonly number[],
-  simplex: Placed,
-  where: string,
-  facet = simplex.facet,
-): InputError {
+function openWall(wall: readonly number[], simplex: Placed, names: PointNames, where: string): InputError {
   return fault(
     'open-wall',
-    `No simplex lies on the other side of the triangle (${wall.join(', ')}) of simplex ${simplex.at} ` +
-      `(${simplex.points.join(', ')}), ${where} ${facet}.`,
+    `No simplex lies on the other side of the triangle ${listed(wall, names)} of simplex ${simplex.at} ` +
+      `${listed(simplex.points, names)}, ${where}.`,
     `simplices[${simplex.at}]`,
     [...wall],
   )
 }
 
-function requireCover(polytope: Polytope, placed: readonly Placed[]): void {
+function requireCover(polytope: Polytope, placed: readonly Placed[], names: PointNames): void {
   const { volumes } = facetPoints(polytope)
   const sums = new Float64Array(volumes.length)
   for (const { points, facet } of placed) sums[facet] += simplexVolume(polytope, points)
@@ -189,7 +201,7 @@ function requireCover(polytope: Polytope, placed: readonly Placed[]): void {
     )
     throw fault(
       'overlap',
-      `Simplices ${first.at} (${first.points.join(', ')}) and ${second.at} (${second.points.join(', ')}) overlap ` +
+      `Simplices ${first.at} ${listed(first.points, names)} and ${second.at} ${listed(second.points, names)} overlap ` +
         `inside facet ${facet}: the volumes there add up to ${sums[facet]} in place of ${volume}.`,
       `simplices[${second.at}]`,
       second.points,
@@ -214,13 +226,13 @@ function crossing(polytope: Polytope, placed: readonly Placed[]): Placed[] {
   throw new InvariantError('A facet is covered more than once, but no simplices overlap.')
 }
 
-function requireFine(polytope: Polytope, placed: readonly Placed[]): void {
+function requireFine(polytope: Polytope, placed: readonly Placed[], names: PointNames): void {
   const used = new Set(placed.flatMap(({ points }) => points))
   const unused = Array.from({ length: polytope.pointCount }, (_, p) => p).filter((p) => !used.has(p))
   if (unused.length > 0)
     throw fault(
       'not-fine',
-      `The triangulation is not fine: ${unused.length === 1 ? 'point' : 'points'} ${unused.join(', ')} ` +
+      `The triangulation is not fine: ${unused.length === 1 ? 'point' : 'points'} ${unused.map((p) => names(p)).join(', ')} ` +
         `${unused.length === 1 ? 'is' : 'are'} not used.`,
       'simplices',
       unused,

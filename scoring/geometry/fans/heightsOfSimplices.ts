@@ -1,4 +1,5 @@
 import { InputError } from '../../errors.ts'
+import { listed, type PointNames } from '../pointNames.ts'
 import type { Polytope } from '../polytope.ts'
 import type { TwoFaceClass } from '../twoFaceClass.ts'
 import { fanFromSimplices } from './fanFromSimplices.ts'
@@ -18,20 +19,22 @@ export interface ProvedTriangulation {
  * ties in a 2-face nor in a facet.
  *
  * @param simplices four point indices each, or five with `originIndex`, in any order
+ * @param names how messages name points
  * @throws InputError as `fanFromSimplices`, or simplices.not-regular with the walls that contradict each other and
  *   the weights with which their circuits add up to zero
  */
 export function heightsOfSimplices(
   polytope: Polytope,
   simplices: readonly (readonly number[])[],
+  names: PointNames = String,
 ): ProvedTriangulation {
-  const fan = fanFromSimplices(polytope, simplices)
+  const fan = fanFromSimplices(polytope, simplices, names)
   const answer = isRegularFan(fan)
   if (answer.regular) return { class: fan.class, heights: answer.heights }
   throw new InputError(
     'simplices.not-regular',
     'The triangulation is not regular: no heights make it convex at these triangles all at once, as their ' +
-      `circuits add up to zero: ${answer.walls.map((wall, n) => termOf(wall, answer.weights[n])).join('; ')}.`,
+      `circuits add up to zero: ${answer.walls.map((wall, n) => termOf(wall, answer.weights[n], names)).join('; ')}.`,
     'simplices',
     answer.walls.map(({ vertices, opposite }, n) => ({
       triangle: [...vertices],
@@ -41,7 +44,7 @@ export function heightsOfSimplices(
   )
 }
 
-function termOf({ vertices, opposite }: FanWall, weight: bigint): string {
+function termOf({ vertices, opposite }: FanWall, weight: bigint, names: PointNames): string {
   const times = weight === 1n ? '' : `${weight} times `
-  return `${times}(${vertices.join(', ')}) between ${opposite.join(' and ')}`
+  return `${times}${listed(vertices, names)} between ${opposite.map((p) => names(p)).join(' and ')}`
 }
