@@ -155,7 +155,7 @@ function requireCover(sheets: NamedSheets, placed: readonly Placed[]): void {
     if (count === 0)
       throw fault(
         'gap',
-        `No triangle lies on 2-face ${face}, with the corners ${listed([...corners], sheets.names)}.`,
+        `No triangle lies on 2-face ${face}, with the corners ${Array.from(corners, (p) => sheets.names(p)).join(', ')}.`,
       )
     const area = slot[face + 1] - slot[face]
     if (count !== area)

@@ -97,7 +97,7 @@ describe.skipIf(chromiumPath === null)('imports, in a browser', { timeout: 120_0
     const report = await dialog().innerText()
     expect(report).toMatch(/1 candidate imported; 1 problem/)
     expect(report).toContain('heights.not-fine')
-    expect(report).toContain('line 10')
+    expect(report).toContain('line 11')
     expect(report).toContain('1 line passed over')
     await shot('4-report')
   })

@@ -67,7 +67,13 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
                 All shortlists
               </Link>
             ) : (
-              'Shortlists are made on the page of a search that has found candidates.'
+              <>
+                Shortlists are made on the page of a search that has found candidates, or of{' '}
+                <Link className="text-action underline" to={`${base}/imported`}>
+                  imported candidates
+                </Link>
+                .
+              </>
             )}
           </Empty>
         )}

@@ -1,5 +1,5 @@
 import { useCallback, useState } from 'react'
-import { useNavigate } from 'react-router-dom'
+import { Link, useNavigate } from 'react-router-dom'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { FolderPlus, Plus } from 'lucide-react'
 import { useCollections } from '../../api/collections.ts'
@@ -84,6 +84,16 @@ export function LibraryPage() {
         }
       >
         Reflexive polytopes in four dimensions, on the side whose points become divisors.
+        {campaign && (
+          <>
+            {' '}
+            Triangulations from elsewhere are among the{' '}
+            <Link to={`/campaigns/${campaign.id}/imported`} className="text-action hover:underline">
+              imported candidates
+            </Link>
+            .
+          </>
+        )}
       </PageHead>
       {matching.data && <LibraryProgress {...matching.data} />}
       <div className="grid grid-cols-1 gap-x-8 gap-y-4 border-t pt-4 md:grid-cols-[minmax(0,11fr)_minmax(0,9fr)]">

@@ -20,8 +20,8 @@ export function ProblemList({ problems }: { problems: readonly ImportProblem[] }
       >
         {problems.slice(0, shown).map((problem, index) => (
           <li key={index} className="border-b py-1.5">
-            {problem.line !== null && <span className="mr-2 font-mono text-xs">line {problem.line}</span>}
-            {problem.entry && <span className="mr-2 font-mono text-xs text-soft">{problem.entry}</span>}
+            {problem.line !== null && <span className="mr-2 font-mono text-xs">line {problem.line}</span>}{' '}
+            {problem.entry && <span className="mr-2 font-mono text-xs text-soft">{problem.entry}</span>}{' '}
             {problem.message} <span className="font-mono text-xs text-soft">{problem.code}</span>
           </li>
         ))}
