@@ -31,6 +31,22 @@ export const candidateGeometrySchema = z.object({
       volume: z.number(),
     }),
   ),
+  /**
+   * On polytopes that are not favourable: the components of all divisors, which span all of H^{1,1}; indices run over
+   * them. The components of one divisor follow one another.
+   */
+  components: z
+    .object({
+      /** Point and number (from 0) among its components. */
+      pointOf: z.array(z.number().int()),
+      sheetOf: z.array(z.number().int()),
+      cubes: z.array(z.number()),
+      secondChern: z.array(z.number()),
+      volumes: z.array(z.number()),
+      /** Non-zero kappa_abc, a <= b <= c. */
+      intersections: z.array(z.tuple([z.number().int(), z.number().int(), z.number().int(), z.number()])),
+    })
+    .nullable(),
   curves: z.array(z.object({ row: z.array(z.tuple([z.number().int(), z.number()])), volume: z.number() })),
   reference: z.object({
     weights: z.array(z.number()),

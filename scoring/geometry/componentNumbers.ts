@@ -58,9 +58,9 @@ export function componentsOf({ pointCount, components }: Polytope): Components {
  */
 export function componentNumbers(cls: TwoFaceClass, numbers: IntersectionNumbers): IntersectionNumbers {
   const { polytope } = cls
-  if (polytope.favourable) return numbers
   const { components } = polytope
   const { first, count, pointOf } = componentsOf(polytope)
+  if (count === polytope.pointCount) return numbers
   const sheetsAmong = (...points: number[]): number => Math.max(...points.map((p) => components[p]))
   const at = (p: number, sheet: number): number => first[p] + (components[p] > 1 ? sheet : 0)
 

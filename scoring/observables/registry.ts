@@ -1,3 +1,4 @@
+import { components } from './components.ts'
 import { coneObservables } from './cone.ts'
 import { curves } from './curves.ts'
 import { divisors } from './divisors.ts'
@@ -24,6 +25,7 @@ export const OBSERVABLES: readonly Observable[] = [
   faces,
   sections,
   divisors,
+  components,
   pairs,
   triples,
   triangles,

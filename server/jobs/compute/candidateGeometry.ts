@@ -2,6 +2,8 @@ import {
   buildCandidate,
   canonicalClass,
   classFromHeights,
+  componentNumbers,
+  componentsOf,
   InvariantError,
   normalForm,
   polytopeFromPoints,
@@ -47,6 +49,7 @@ export function candidateGeometry(input: CandidateGeometryInput): ComputedGeomet
     intersections: intersectionList(numbers),
     secondChern: [...numbers.secondChern],
     divisors: divisorList(candidate, numbers),
+    components: componentList(candidate, numbers),
     curves: curveList(candidate),
     reference: {
       weights: [...reference.weights],
@@ -104,6 +107,22 @@ function divisorList(candidate: Candidate, numbers: IntersectionNumbers): Comput
     cube: numbers.cubes[i],
     volume: divisors[i],
   }))
+}
+
+function componentList(candidate: Candidate, numbers: IntersectionNumbers): ComputedGeometry['components'] {
+  const { polytope } = candidate
+  if (polytope.favourable) return null
+  const { pointOf, sheetOf } = componentsOf(polytope)
+  const full = componentNumbers(candidate.class, numbers)
+  const { divisors } = candidate.volumes()
+  return {
+    pointOf: [...pointOf],
+    sheetOf: [...sheetOf],
+    cubes: [...full.cubes],
+    secondChern: [...full.secondChern],
+    volumes: Array.from(pointOf, (p) => divisors[p] / polytope.components[p]),
+    intersections: intersectionList(full),
+  }
 }
 
 function curveList(candidate: Candidate): ComputedGeometry['curves'] {

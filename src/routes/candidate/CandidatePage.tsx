@@ -12,6 +12,7 @@ import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { CertificateSection } from './CertificateSection.tsx'
+import { ComponentSection } from './ComponentSection.tsx'
 import { CurveTable } from './CurveTable.tsx'
 import { DivisorTable } from './DivisorTable.tsx'
 import { HighlightLine } from './HighlightLine.tsx'
@@ -132,6 +133,7 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
       >
         <DivisorTable geometry={geometry} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
       </Section>
+      {geometry.components && <ComponentSection components={geometry.components} onHighlight={onHighlight} />}
       <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section title="Intersection numbers" note="Non-zero κ with i ≤ j ≤ k.">
           <IntersectionTable

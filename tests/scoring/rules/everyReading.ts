@@ -5,6 +5,7 @@ import { OBSERVABLES } from '../../../scoring/observables/registry.ts'
 /** Where fields that may be undefined are defined. */
 const DEFINED: ReadonlyMap<string, string> = new Map([
   ['divisors.delPezzoDegree', 'x.delPezzo'],
+  ['components.delPezzoDegree', 'x.delPezzo'],
   ['sections.type', 'x.dimension == 2'],
 ])
 
