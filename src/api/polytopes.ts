@@ -11,6 +11,11 @@ import {
   type PolytopeFilter,
   type Scope,
 } from '../../shared/polytopes.ts'
+import {
+  foundPolytopesSchema,
+  polytopeClassesSchema,
+  polytopeStructureSchema,
+} from '../../shared/polytopeStructure.ts'
 import { request } from './request.ts'
 
 export type LibraryFilter = PolytopeFilter & { campaign?: string }
@@ -43,6 +48,55 @@ export const polytopeQuery = (key: string, campaign?: string) =>
     queryFn: ({ signal }) =>
       request(`/polytopes/${key}`, { schema: polytopeDetailSchema, query: { campaign }, signal }),
     staleTime: Infinity,
+  })
+
+/** Divisors and sections of a polytope. */
+export const structureQuery = (key: string, campaign?: string) =>
+  queryOptions({
+    queryKey: ['polytope-structure', key, campaign ?? ''] as const,
+    queryFn: ({ signal }) =>
+      request(`/polytopes/${key}/structure`, {
+        schema: polytopeStructureSchema,
+        query: { campaign },
+        signal,
+      }),
+    staleTime: Infinity,
+  })
+
+/** What is known of a polytope's classes; changes come through the event stream. */
+export const classesQuery = (key: string, campaign?: string) =>
+  queryOptions({
+    queryKey: ['polytope-classes', key, campaign ?? ''] as const,
+    queryFn: ({ signal }) =>
+      request(`/polytopes/${key}/classes`, { schema: polytopeClassesSchema, query: { campaign }, signal }),
+  })
+
+export function useCountClasses(key: string, campaign: string) {
+  const client = useQueryClient()
+  return useMutation({
+    mutationFn: () =>
+      request(`/campaigns/${campaign}/polytopes/${key}/count`, {
+        method: 'POST',
+        schema: polytopeClassesSchema,
+      }),
+    onSuccess: (answer) =>
+      // The end of a short count may have been heard before this answer came.
+      client.setQueryData(classesQuery(key, campaign).queryKey, (old) =>
+        old && old.classes !== null ? old : answer,
+      ),
+  })
+}
+
+/** Whether the library holds polytopes that are given by points or weights. */
+export const useFindPolytopes = (campaign?: string) =>
+  useMutation({
+    mutationFn: (text: string) =>
+      request('/polytopes/find', {
+        method: 'POST',
+        query: { campaign },
+        body: { text },
+        schema: foundPolytopesSchema,
+      }),
   })
 
 export const scopeQuery = (campaign: string, scope: Scope) =>

@@ -16,15 +16,15 @@ interface FilterFieldsProps {
   campaign?: string
   filter: PolytopeFilter
   onChange: (changes: FilterChanges) => void
-  /** Without the text field, where the page has one of its own. */
-  withoutText?: boolean
+  /** Told of points that were pasted into the text field, which holds one line only. */
+  onPoints?: (text: string) => void
 }
 
 /** Always shown; any other number is added by choice, or because the filter names it. */
 const first: readonly PolytopeNumberName[] = ['h11', 'h21', 'points']
 
 /** A library filter as fields: ranges of any of its numbers, yes-or-no questions, a collection, a text. */
-export function FilterFields({ campaign, filter, onChange, withoutText }: FilterFieldsProps) {
+export function FilterFields({ campaign, filter, onChange, onPoints }: FilterFieldsProps) {
   const [added, setAdded] = useState<readonly PolytopeNumberName[]>([])
   const shown = polytopeNumberNames.filter(
     (name) =>
@@ -35,7 +35,7 @@ export function FilterFields({ campaign, filter, onChange, withoutText }: Filter
   )
   return (
     <div className="grid grid-cols-2 content-start items-end gap-x-2 gap-y-3 sm:grid-cols-4">
-      {!withoutText && <TextPart value={filter.text} onChange={onChange} />}
+      <TextPart value={filter.text} onChange={onChange} onPoints={onPoints} />
       {shown.flatMap((name) =>
         (['Min', 'Max'] as const).map((end) => (
           <TextField
@@ -144,7 +144,15 @@ function AddNumber({
 }
 
 /** The text settles for a moment before it takes effect. */
-function TextPart({ value = '', onChange }: { value?: string; onChange: (changes: FilterChanges) => void }) {
+function TextPart({
+  value = '',
+  onChange,
+  onPoints,
+}: {
+  value?: string
+  onChange: (changes: FilterChanges) => void
+  onPoints?: (text: string) => void
+}) {
   const [text, setText] = useState(value)
   const [known, setKnown] = useState(value)
   if (known !== value) {
@@ -164,6 +172,12 @@ function TextPart({ value = '', onChange }: { value?: string; onChange: (changes
       value={text}
       maxLength={80}
       onChange={(event) => setText(event.target.value)}
+      onPaste={(event) => {
+        const pasted = event.clipboardData.getData('text/plain')
+        if (!onPoints || !/\d[^\n]*\n[^\n]*\d/.test(pasted)) return
+        event.preventDefault()
+        onPoints(pasted)
+      }}
     />
   )
 }

@@ -16,12 +16,13 @@ import { CollectDialog } from './CollectDialog.tsx'
 import { CollectionsDialog } from './CollectionsDialog.tsx'
 import { ColumnChooser } from './ColumnChooser.tsx'
 import { FilterChips } from './FilterChips.tsx'
+import { FindDialog } from './FindDialog.tsx'
 import { ImportDialog } from './ImportDialog.tsx'
 import { LibraryProgress } from './LibraryProgress.tsx'
 import { PolytopeTable } from './PolytopeTable.tsx'
 import { useLibraryState } from './useLibraryState.ts'
 
-type OpenDialog = 'import' | 'collect' | 'collections' | null
+type OpenDialog = 'import' | 'collect' | 'collections' | 'find' | null
 
 export function LibraryPage() {
   const campaign = useCurrentCampaign()
@@ -31,6 +32,7 @@ export function LibraryPage() {
   const barredCollect = useBarred('collections.edit')
   const navigate = useNavigate()
   const [dialog, setDialog] = useState<OpenDialog>(null)
+  const [pasted, setPasted] = useState('')
   const [selected, setSelected] = useState<ReadonlySet<string>>(new Set())
   const collections = useCollections(campaign?.id)
 
@@ -71,6 +73,14 @@ export function LibraryPage() {
             >
               Collections
             </Button>
+            <Button
+              onClick={() => {
+                setPasted('')
+                setDialog('find')
+              }}
+            >
+              Find by points
+            </Button>
             <Button unavailable={barredSearch} onClick={searchFrom}>
               {selected.size > 0
                 ? `Search in the ${counted(selected.size, 'selected', 'selected')}`
@@ -107,7 +117,15 @@ export function LibraryPage() {
           )}
         </QueryView>
         <form role="search" aria-label="Filter the library" onSubmit={(event) => event.preventDefault()}>
-          <FilterFields campaign={campaign?.id} filter={filter} onChange={change} />
+          <FilterFields
+            campaign={campaign?.id}
+            filter={filter}
+            onChange={change}
+            onPoints={(text) => {
+              setPasted(text)
+              setDialog('find')
+            }}
+          />
         </form>
       </div>
       <div className="mt-4 border-t pt-4">
@@ -176,6 +194,7 @@ export function LibraryPage() {
           )}
         </QueryView>
       </div>
+      <FindDialog key={pasted} campaign={campaign?.id} pasted={pasted} {...dialogProps('find')} />
       {campaign && (
         <>
           <ImportDialog campaign={campaign} {...dialogProps('import')} />

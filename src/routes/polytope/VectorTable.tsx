@@ -15,14 +15,15 @@ export function VectorTable({
   label: string
   name: string
   rows: readonly (readonly number[])[]
-  columns?: readonly string[]
+  /** Heads of further columns, and whether they hold numbers. */
+  columns?: readonly (readonly [head: string, numeric: boolean])[]
   cells?: (index: number) => readonly string[]
 }) {
   const [all, setAll] = useState(false)
   const shown = all ? rows : rows.slice(0, first)
   return (
     <>
-      <Table label={label} className="max-w-[640px] font-mono">
+      <Table label={label} className={`font-mono ${columns.length > 2 ? 'max-w-[900px]' : 'max-w-[640px]'}`}>
         <thead>
           <tr>
             <Th>{name}</Th>
@@ -30,8 +31,8 @@ export function VectorTable({
             <Th numeric>x2</Th>
             <Th numeric>x3</Th>
             <Th numeric>x4</Th>
-            {columns.map((column) => (
-              <Th key={column} className="font-sans">
+            {columns.map(([column, numeric]) => (
+              <Th key={column} numeric={numeric} className="font-sans">
                 {column}
               </Th>
             ))}
@@ -47,7 +48,7 @@ export function VectorTable({
                 </Td>
               ))}
               {cells?.(index).map((text, at) => (
-                <Td key={`c${at}`} className="font-sans">
+                <Td key={`c${at}`} numeric={columns[at]?.[1]} className="font-sans">
                   {text}
                 </Td>
               ))}
