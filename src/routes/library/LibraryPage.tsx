@@ -1,7 +1,7 @@
 import { useCallback, useState } from 'react'
 import { Link, useNavigate } from 'react-router-dom'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
-import { FolderPlus, Plus } from 'lucide-react'
+import { FolderPlus, Plus, SlidersHorizontal } from 'lucide-react'
 import { useCollections } from '../../api/collections.ts'
 import { hodgeQuery, type LibraryFilter } from '../../api/polytopes.ts'
 import { HodgeScatter } from '../../components/charts/HodgeScatter.tsx'
@@ -32,6 +32,8 @@ export function LibraryPage() {
   const barredCollect = useBarred('collections.edit')
   const navigate = useNavigate()
   const [dialog, setDialog] = useState<OpenDialog>(null)
+  /** On narrow pages the fields are folded away. */
+  const [filterOpen, setFilterOpen] = useState(false)
   const [pasted, setPasted] = useState('')
   const [selected, setSelected] = useState<ReadonlySet<string>>(new Set())
   const collections = useCollections(campaign?.id)
@@ -117,15 +119,26 @@ export function LibraryPage() {
           )}
         </QueryView>
         <form role="search" aria-label="Filter the library" onSubmit={(event) => event.preventDefault()}>
-          <FilterFields
-            campaign={campaign?.id}
-            filter={filter}
-            onChange={change}
-            onPoints={(text) => {
-              setPasted(text)
-              setDialog('find')
-            }}
-          />
+          <Button
+            className="w-full md:hidden"
+            aria-expanded={filterOpen}
+            aria-controls="library-filter"
+            onClick={() => setFilterOpen(!filterOpen)}
+          >
+            <SlidersHorizontal size={15} aria-hidden />
+            {filterOpen ? 'Hide the filter' : 'Filter'}
+          </Button>
+          <div id="library-filter" className={`mt-3 md:mt-0 md:block ${filterOpen ? '' : 'hidden'}`}>
+            <FilterFields
+              campaign={campaign?.id}
+              filter={filter}
+              onChange={change}
+              onPoints={(text) => {
+                setPasted(text)
+                setDialog('find')
+              }}
+            />
+          </div>
         </form>
       </div>
       <div className="mt-4 border-t pt-4">
@@ -139,7 +152,7 @@ export function LibraryPage() {
           {({ total }) => (
             <>
               <div className="my-2 flex flex-wrap items-center gap-x-3 gap-y-1">
-                <p role="status" className="flex-1">
+                <p role="status" className="basis-full sm:flex-1 sm:basis-auto">
                   <strong className="font-medium">{formatNumber(total)}</strong>{' '}
                   {total === 1 ? 'polytope' : 'polytopes'}
                   {filtered ? (total === 1 ? ' matches the filter' : ' match the filter') : ''}

@@ -28,7 +28,7 @@ export function Sections({ planar, solid }: Pick<PolytopeStructure, 'planar' | '
     <div className="flex flex-col gap-5">
       <div>
         <h3 className="mb-2 text-sm font-medium">
-          {counted(planar.length, 'two-dimensional section')}, for genus-one fibrations
+          {someOrNo(planar.length, 'two-dimensional section')}, for genus-one fibrations
         </h3>
         {types.length > 0 && (
           <ul className="mb-3 flex flex-wrap items-end gap-x-6 gap-y-4">
@@ -67,7 +67,7 @@ export function Sections({ planar, solid }: Pick<PolytopeStructure, 'planar' | '
       </div>
       <div>
         <h3 className="mb-2 text-sm font-medium">
-          {counted(solid.length, 'three-dimensional section')}, for K3 fibrations
+          {someOrNo(solid.length, 'three-dimensional section')}, for K3 fibrations
         </h3>
         {solid.length > 0 && (
           <Listed
@@ -89,6 +89,8 @@ export function Sections({ planar, solid }: Pick<PolytopeStructure, 'planar' | '
     </div>
   )
 }
+
+const someOrNo = (count: number, one: string) => (count === 0 ? `No ${one}` : counted(count, one))
 
 const divisorsIn = (points: readonly number[]) =>
   points
