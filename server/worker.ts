@@ -9,7 +9,7 @@ import {
   placeCandidates,
   weightLinesOfText,
 } from './jobs/compute/importCandidates.ts'
-import { classCount } from './jobs/compute/classCount.ts'
+import { classCount, classNumbers } from './jobs/compute/classCount.ts'
 import { polytopeStructure } from './jobs/compute/polytopeStructure.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
@@ -30,6 +30,7 @@ const tasks: Tasks = {
   'polytope-shape': polytopeShape,
   'summary-of-each': summaryOfEach,
   'polytope-structure': polytopeStructure,
+  'class-numbers': classNumbers,
   'class-count': classCount,
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,

@@ -53,8 +53,10 @@ export const polytopeClassesSchema = z.object({
   total: z.number().int(),
   known: z.array(knownCandidateSchema),
   /** Exact numbers of classes, before and modulo symmetry; null when they have not been counted. */
-  classes: z.number().int().nullable(),
-  classOrbits: z.number().int().nullable(),
+  classes: z.number().nullable(),
+  classOrbits: z.number().nullable(),
+  /** The first of them in full: it may exceed what a number holds. */
+  classDigits: z.string().nullable(),
   /** A count that was given up after so many classes. */
   classesSeen: z.number().int().nullable(),
   /** log10 of an upper bound on the number of classes. */

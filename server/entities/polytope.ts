@@ -101,12 +101,18 @@ export class PolytopeRecord {
   @Column({ type: 'integer', nullable: true })
   summaryVersion!: number | null
 
-  /** Number of 2-face classes, before and modulo symmetry, where they have been counted. */
+  /**
+   * Number of 2-face classes, before and modulo symmetry, where they have been counted; to the nearest number beyond
+   * 2^53, where `classDigits` has the first exactly.
+   */
   @Column({ type: 'integer', nullable: true })
   classes!: number | null
 
   @Column({ type: 'integer', nullable: true })
   classOrbits!: number | null
+
+  @Column({ type: 'varchar', nullable: true })
+  classDigits!: string | null
 
   /** How many classes the longest count had seen when it was stopped; null when none was. */
   @Column({ type: 'integer', nullable: true })

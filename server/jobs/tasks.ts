@@ -8,7 +8,7 @@ import type {
   placeCandidates,
   weightLinesOfText,
 } from './compute/importCandidates.ts'
-import type { classCount } from './compute/classCount.ts'
+import type { classCount, classNumbers } from './compute/classCount.ts'
 import type { polytopeStructure } from './compute/polytopeStructure.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { scoreCandidates } from './compute/scoreCandidates.ts'
@@ -29,6 +29,7 @@ export interface Tasks {
   'polytope-shape': typeof polytopeShape
   'summary-of-each': typeof summaryOfEach
   'polytope-structure': typeof polytopeStructure
+  'class-numbers': typeof classNumbers
   'class-count': typeof classCount
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra

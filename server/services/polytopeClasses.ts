@@ -12,12 +12,13 @@ export async function readPolytopeClasses(
   key: string,
 ): Promise<PolytopeClasses> {
   const { polytope } = await readPolytope(source.manager, viewer, key)
-  const { classes, classOrbits, classesSeen, classBound } = polytope
+  const { classes, classOrbits, classDigits, classesSeen, classBound } = polytope
   const seen = jobs.classCounts.seen(key)
   return {
     ...(await knownCandidates(source.manager, viewer, key)),
     classes,
     classOrbits,
+    classDigits,
     classesSeen,
     classBound,
     counting: seen === null ? null : { seen },
@@ -31,7 +32,8 @@ export async function countClasses(
   key: string,
 ): Promise<PolytopeClasses> {
   const { polytope } = await readPolytope(context.source.manager, { campaignId }, key)
-  if (polytope.classes === null) context.jobs.classCounts.start(campaignId, polytope)
+  const known = polytope.classes !== null && polytope.classOrbits !== null
+  if (!known) context.jobs.classCounts.start(campaignId, polytope)
   return readPolytopeClasses(context, { campaignId }, key)
 }
 

@@ -1,10 +1,27 @@
 import {
   canonicalClass,
+  countClasses,
   normalForm,
   polytopeFromPoints,
   ReverseSearch,
   type WalkPosition,
 } from '../../../scoring/index.ts'
+
+/** Exact numbers as far as short walks give them; as digits, since a product may be large. */
+export interface ClassNumbers {
+  readonly classes: string | null
+  /** Modulo automorphisms. */
+  readonly candidates: string | null
+}
+
+/** Most classes walked in one piece: a second or two. */
+const shortWalk = 1_000
+
+/** What products over independent 2-faces and short walks tell of the number of classes. */
+export function classNumbers({ vertices }: Pick<ClassCountInput, 'vertices'>): ClassNumbers {
+  const { classes, candidates } = countClasses(normalForm(polytopeFromPoints(vertices)), shortWalk)
+  return { classes: classes?.toString() ?? null, candidates: candidates?.toString() ?? null }
+}
 
 export interface ClassCountInput {
   /** In normal-form coordinates. */

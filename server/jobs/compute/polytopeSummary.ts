@@ -1,4 +1,5 @@
 import {
+  classCountBound,
   divisorTopology,
   polytopeFromPoints,
   polytopeSummary as engineSummary,
@@ -6,7 +7,7 @@ import {
 } from '../../../scoring/index.ts'
 
 /** Raised when a number is added or changes: rows of an older version are then computed anew. */
-export const summaryVersion = 1
+export const summaryVersion = 2
 
 /** What the library lists of a polytope beyond its facts, by column; the same in all coordinates. */
 export interface PolytopeSummary {
@@ -22,11 +23,18 @@ export interface PolytopeSummary {
   readonly nestedSections: number
   readonly rigidDivisors: number
   readonly splitDivisors: number
+  /** log10 of an upper bound on the number of classes. */
+  readonly classBound: number
+  /** Where the bound leaves but one class: it has been counted then. */
+  readonly classes?: 1
+  readonly classOrbits?: 1
+  readonly classDigits?: '1'
   readonly summaryVersion: number
 }
 
 export function polytopeSummary(polytope: Polytope): PolytopeSummary {
   const summary = engineSummary(polytope)
+  const { bound, log10 } = classCountBound(polytope)
   const { rigid, components } = divisorTopology(polytope)
   return {
     edges: summary.edges,
@@ -41,6 +49,8 @@ export function polytopeSummary(polytope: Polytope): PolytopeSummary {
     nestedSections: summary.nestedSections,
     rigidDivisors: rigid.reduce((count, one) => count + one, 0),
     splitDivisors: components.reduce((count, of) => count + (of > 1 ? 1 : 0), 0),
+    classBound: log10,
+    ...(bound === 1n ? ({ classes: 1, classOrbits: 1, classDigits: '1' } as const) : {}),
     summaryVersion,
   }
 }

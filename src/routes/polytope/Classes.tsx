@@ -37,14 +37,22 @@ function Exact({
 }) {
   const count = useCountClasses(polytope, campaign)
   const barred = useBarred('previews.run')
-  const { counting, classesSeen, classBound } = classes
-  if (classes.classes !== null) {
+  const { counting, classesSeen, classBound, classDigits } = classes
+  if (classDigits !== null) {
+    const orbits =
+      classes.classOrbits === null ? (
+        <span className="text-soft">{counting ? 'being counted…' : 'not known'}</span>
+      ) : classes.classOrbits === classes.classes ? (
+        <Digits value={classDigits} />
+      ) : (
+        <Num value={classes.classOrbits} />
+      )
     return (
       <Facts
         className="max-w-[480px]"
         rows={[
-          ['Classes, by exhaustion', <Num key="v" value={classes.classes} />],
-          ['Modulo the symmetry group', <Num key="v" value={classes.classOrbits} />],
+          ['Exact number of classes', <Digits key="v" value={classDigits} />],
+          ['Modulo the symmetry group', <span key="v">{orbits}</span>],
         ]}
       />
     )
@@ -70,12 +78,22 @@ function Exact({
             Count the classes
           </Button>
           <p className="mt-1 text-xs text-soft">
-            Walks through every fine regular class, and gives up after {formatNumber(classCountLimit)}.
+            Exact: products over independent 2-faces, else a walk through every fine regular class, given up
+            after {formatNumber(classCountLimit)}.
           </p>
         </>
       )}
       {count.isError && <Failure title="The count was not begun." error={count.error} />}
     </div>
+  )
+}
+
+/** An integer of any size. */
+function Digits({ value }: { value: string }) {
+  return (
+    <span data-raw={value} className="break-all tabular-nums">
+      {value.replace(/\B(?=(\d{3})+$)/g, '\u2009')}
+    </span>
   )
 }
 

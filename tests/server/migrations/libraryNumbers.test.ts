@@ -1,6 +1,7 @@
 import { afterEach, beforeEach, expect, it } from 'vitest'
 import { DataSource } from 'typeorm'
 import { FirstSchema1796100000000 } from '../../../server/migrations/1796100000000-firstSchema.ts'
+import { ExactClassCounts1796200200001 } from '../../../server/migrations/1796200200001-exactClassCounts.ts'
 import { LibraryNumbers1796200200000 } from '../../../server/migrations/1796200200000-libraryNumbers.ts'
 
 let source: DataSource
@@ -46,6 +47,14 @@ it('keeps the polytopes and candidates of before, undescribed, and can be undone
   expect(row).toMatchObject({ edges: null, planarSections: null, summaryVersion: null, classes: null })
   await source.query('UPDATE polytope SET edges = 10, summaryVersion = 1')
   expect(await source.query('SELECT * FROM collection')).toEqual([])
+
+  const digits = new ExactClassCounts1796200200001()
+  await source.query('UPDATE polytope SET classes = 12')
+  await digits.up(runner)
+  expect(await source.query('SELECT classes, classDigits FROM polytope')).toEqual([
+    { classes: 12, classDigits: '12' },
+  ])
+  await digits.down(runner)
 
   await migration.down(runner)
   expect(await source.query('SELECT * FROM polytope')).toEqual([old])
