@@ -9,7 +9,9 @@ export type SearchState = (typeof searchStates)[number]
 
 /** The methods of the engine, in the order in which they are offered, with a line on each. */
 export const searchMethods = {
+  auto: 'Auto: enumerates when feasible, else a portfolio that goes on with what does best',
   annealing: 'Annealing: flips and height jitters, cooling with restarts',
+  tempering: 'Parallel tempering: four temperatures that exchange their places',
   genetic: 'Genetic: populations of distinct classes, blends and 2-face crossover',
   exhaustive: 'Exhaustive: every class once; counts first, refuses more than the budget',
   uniform: 'Uniform walk: flips at random, uniform over classes before symmetry in the long run',

@@ -165,7 +165,7 @@ class AnnealingChain implements Chain {
   }
 
   private accepts(merit: Merit): boolean {
-    const stall = this.place === undefined ? 0 : this.run.stalled / (30 + exchangeCount(this.place))
+    const stall = this.place === undefined ? 0 : this.run.stalled / (30 + exchangeCount(this.place.class))
     const temperatures = this.cooling.temperatures(this.progress(), stall)
     return isAccepted(this.merit, merit, temperatures, this.run.stream.uniform())
   }

@@ -52,7 +52,11 @@ export class Cooling {
    * @param stall proposals in a row without a new class, in units of the number of neighbours
    */
   temperatures(progress: number, stall: number): Temperatures {
-    const factor = hot * (cold / hot) ** Math.min(1, progress) * 2 ** Math.min(16, stall)
+    return this.at(hot * (cold / hot) ** Math.min(1, progress) * 2 ** Math.min(16, stall))
+  }
+
+  /** @param factor in units of the median difference between neighbours */
+  at(factor: number): Temperatures {
     return { score: factor * medianOr(this.scores, 1), shortfall: factor * medianOr(this.shortfalls, 0.3) }
   }
 }

@@ -1,5 +1,6 @@
 import { InputError } from '../errors.ts'
 import { canonicalClass } from '../geometry/classKey.ts'
+import type { Polytope } from '../geometry/polytope.ts'
 import { ReverseSearch, type WalkPosition } from '../geometry/reverseSearch.ts'
 import type { Chain, Method, Run } from './method.ts'
 import type { Json } from './state.ts'
@@ -46,7 +47,24 @@ export const exhaustive: Method = {
     description:
       'Every candidate of the scope that the rule does not refuse at the polytope stage, once modulo automorphisms.',
   },
-  open: (run, state) => new ExhaustiveChain(run, state as unknown as ExhaustiveState | null),
+  open: (run, state) => openExhaustive(run, state),
+}
+
+/** Where an enumeration gives up while it counts, besides the budget. */
+export interface EnumerationLimits {
+  /** Classes before symmetry, over the whole scope. */
+  readonly walked: number
+  /** True for a polytope that is not even to be counted. */
+  readonly isHopeless?: (polytope: Polytope) => boolean
+}
+
+/** An enumeration with other limits than its own. Beyond them `step` throws search.too-many-classes. */
+export function openExhaustive(
+  run: Run,
+  state: Json | null,
+  limits: EnumerationLimits = { walked: exhaustiveLimit },
+): Chain {
+  return new ExhaustiveChain(run, limits, state as unknown as ExhaustiveState | null)
 }
 
 class ExhaustiveChain implements Chain {
@@ -60,6 +78,7 @@ class ExhaustiveChain implements Chain {
 
   constructor(
     private readonly run: Run,
+    private readonly limits: EnumerationLimits,
     state: ExhaustiveState | null,
   ) {
     this.total = state?.total ?? null
@@ -102,15 +121,7 @@ class ExhaustiveChain implements Chain {
         run.settings.budget,
       )
     }
-    if (this.walked > exhaustiveLimit) {
-      throw new InputError(
-        'search.too-many-classes',
-        `The scope has more than ${exhaustiveLimit} classes before symmetry, the most that are enumerated. Narrow ` +
-          'the scope, or choose another method.',
-        'scope',
-        exhaustiveLimit,
-      )
-    }
+    if (this.walked > this.limits.walked) throw tooManyBeforeSymmetry(this.limits.walked)
     if (this.walk?.next() || this.enterNext()) return
     this.total = this.before
     const [first, end] = this.part(this.total)
@@ -157,7 +168,11 @@ class ExhaustiveChain implements Chain {
     const { run } = this
     while (++this.polytope < run.polytopeCount) {
       if (!run.polytopePasses(this.polytope)) continue
-      this.walk = new ReverseSearch(run.form(this.polytope).polytope)
+      const { polytope } = run.form(this.polytope)
+      if (this.total === null && this.limits.isHopeless?.(polytope)) {
+        throw tooManyBeforeSymmetry(this.limits.walked)
+      }
+      this.walk = new ReverseSearch(polytope)
       return true
     }
     return false
@@ -184,4 +199,14 @@ class ExhaustiveChain implements Chain {
     this.marks = this.marks.filter((_, n) => n % 2 === 0)
     this.stride *= 2
   }
+}
+
+function tooManyBeforeSymmetry(limit: number): InputError {
+  return new InputError(
+    'search.too-many-classes',
+    `The scope has more than ${limit} classes before symmetry, the most that are enumerated. Narrow the scope, or ` +
+      'choose another method.',
+    'scope',
+    limit,
+  )
 }

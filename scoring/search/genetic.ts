@@ -15,7 +15,8 @@ const populationSize = 10
 const migrationInterval = 60
 /** Members among which a parent, or the member that a child competes with, is drawn. */
 const [parentTournament, rivalTournament] = [3, 5]
-/** Share of newcomers, random candidates of any polytope of the scope: while a population fills up, and later. */
+/** Share of newcomers, random candidates of any polytope of the scope: while a population fills up, and later; more
+ * when nothing new is found. */
 const [filling, newcomers] = [0.9, 0.03]
 
 interface Member extends Standing {
@@ -89,7 +90,8 @@ class GeneticChain implements Chain {
     if (run.evaluations >= (this.migrations + 1) * migrationInterval * populations.length) this.migrate()
     const members = populations[run.proposals % populations.length]
     // Where a polytope has few classes a population never fills up; it breeds all the same.
-    const share = members.length < this.size() ? filling : newcomers
+    const stale = Math.min(0.5, run.stalled / 400)
+    const share = members.length < this.size() ? filling : Math.max(newcomers, stale)
     if (members.length === 0 || run.stream.uniform() < share) this.newcomer(members)
     else this.breed(members)
   }

@@ -1,13 +1,17 @@
 import { annealing } from './annealing.ts'
+import { auto } from './auto.ts'
 import { exhaustive } from './exhaustive.ts'
 import { genetic } from './genetic.ts'
 import type { Method } from './method.ts'
 import { randomSampling } from './randomSampling.ts'
+import { tempering } from './tempering.ts'
 import { uniformWalk } from './uniformWalk.ts'
 
 /** Every search method. A new one is a file of its own and a line here. */
 export const methods = {
+  auto,
   annealing,
+  tempering,
   genetic,
   exhaustive,
   uniform: uniformWalk,

@@ -2,6 +2,7 @@ import { circuits, isGeneric } from '../geometry/circuits.ts'
 import { clampToFine } from '../geometry/clampToFine.ts'
 import { flip } from '../geometry/flips.ts'
 import { isRegular } from '../geometry/regularity.ts'
+import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import { gaugedHeights, searchHeightBound } from './heightGauge.ts'
 import type { Proposal } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
@@ -26,12 +27,12 @@ export const moves: readonly Move[] = [
 ]
 
 /** Number of diagonals that can be exchanged. */
-export function exchangeCount(place: PlacedHeights): number {
-  return exchangeRows(place).length
+export function exchangeCount(cls: TwoFaceClass): number {
+  return exchangeRows(cls).length
 }
 
-function exchangeRows(place: PlacedHeights): number[] {
-  const { a, count } = circuits(place.class)
+function exchangeRows(cls: TwoFaceClass): number[] {
+  const { a, count } = circuits(cls)
   const rows: number[] = []
   for (let row = 0; row < count; row++) if (a[row] === 1) rows.push(row)
   return rows
@@ -42,7 +43,7 @@ function exchangeRows(place: PlacedHeights): number[] {
  * the place, come from the test of regularity.
  */
 function exchanged(place: PlacedHeights, stream: RandomStream): Proposal | undefined {
-  const rows = exchangeRows(place)
+  const rows = exchangeRows(place.class)
   if (rows.length === 0) return undefined
   const row = rows[stream.below(rows.length)]
   const { i, j } = circuits(place.class)

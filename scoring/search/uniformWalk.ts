@@ -86,7 +86,7 @@ class UniformChain implements Chain {
     if (place === undefined) {
       const start = walkStart(run.form(polytope).polytope)
       this.visit(polytope, start, proposalOf(start))
-      if (exchangeCount(start) === 0) book.spend(polytope)
+      if (exchangeCount(start.class) === 0) book.spend(polytope)
       return
     }
     const proposal = uniformProposal(place, run.stream)

@@ -64,7 +64,7 @@ describe('likeness', () => {
 
 describe('genetic search', () => {
   const memo = new OutcomeMemo()
-  const settings = { budget: 650, keep: 10 }
+  const settings = { budget: 610, keep: 10 }
   const rule = 'score log10(metric.divisor.top)'
   const problem = problemOf([id], rule, 'genetic', settings)
   const run = (seed: number): SearchState =>
