@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { dualPolytope, polytopeFromWeights, type Polytope } from '../../scoring/index.ts'
 import type { ImportReport, PolytopeRow } from '../../shared/polytopes.ts'
 import { bundledEntries, loadEntries } from './support/bundledSample.ts'
 import { openTestServer, type Agent, type TestServer } from './support/testServer.ts'
@@ -174,6 +175,28 @@ describe('weights', () => {
       side: 'newton',
     })
     expect(body.mirrorKey).toBe(fan.imported[0].key)
+  })
+
+  it('of a mirror pair are recognised on both sides when their points are pasted in other coordinates', async () => {
+    const given = [1, 1, 2, 2, 6]
+    // h = (2, 128) (Candelas, de la Ossa, Font, Katz, Morrison 1993) and (128, 2).
+    for (const side of ['fan', 'newton'] as const) {
+      await investigator.post(path('/polytopes/weights')).send({ weights: given, side }).expect(201)
+    }
+    const fan = polytopeFromWeights(given, 'fan')
+    const mirror = dualPolytope(fan)
+    const sheared = ({ points, vertexCount }: Polytope) =>
+      Array.from({ length: vertexCount }, (_, v) => {
+        const [x, y, z, w] = points.subarray(4 * v, 4 * v + 4)
+        return [x + 2 * y, y - 3 * w, x + 2 * y + z, w]
+      }).reverse()
+    const { imported } = await paste(`${matrix(sheared(fan))}\n\n${matrix(sheared(mirror))}`)
+    expect(imported.map(({ h11, h21, known, name }) => [h11, h21, known, name])).toEqual([
+      [2, 128, true, '1 1 2 2 6 fan'],
+      [128, 2, true, '1 1 2 2 6 newton'],
+    ])
+    const { body } = await investigator.get(`/api/polytopes/${imported[0].key}`).expect(200)
+    expect(body.mirrorKey).toBe(imported[1].key)
   })
 
   it('that give none are refused with the reason', async () => {
