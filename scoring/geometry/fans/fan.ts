@@ -11,14 +11,17 @@ import { simplexVolume } from './simplexFrame.ts'
  * to facets are left out everywhere), coned over the origin. As a simplicial fan its maximal cones are spanned by
  * the simplices.
  */
-export interface Fan {
+export interface FanSimplices {
   readonly polytope: Polytope
-  /** What it is on the 2-faces. */
-  readonly class: TwoFaceClass
   /** 4 point indices per simplex, ascending; simplices in lexicographic order. With the origin, the 4-simplices. */
   readonly simplices: Int32Array
   /** The facet of each simplex. */
   readonly facetOf: Int32Array
+}
+
+export interface Fan extends FanSimplices {
+  /** What it is on the 2-faces. */
+  readonly class: TwoFaceClass
 }
 
 /**
@@ -63,22 +66,21 @@ export function fanOverClass(cls: TwoFaceClass, heights: ArrayLike<number>): Fan
       facetOf.push(a)
     }
   })
-  return fanOf(cls, simplices, facetOf)
+  return { ...fanSimplices(polytope, simplices, facetOf), class: cls }
 }
 
 /** Puts simplices, vertices ascending, in order. They are taken on trust. */
-export function fanOf(
-  cls: TwoFaceClass,
+export function fanSimplices(
+  polytope: Polytope,
   simplices: readonly (readonly number[])[],
   facetOf: readonly number[],
-): Fan {
+): FanSimplices {
   const order = [...simplices.keys()].sort((s, t) => {
     const [a, b] = [simplices[s], simplices[t]]
     return a[0] - b[0] || a[1] - b[1] || a[2] - b[2] || a[3] - b[3]
   })
   return {
-    polytope: cls.polytope,
-    class: cls,
+    polytope,
     simplices: Int32Array.from(order.flatMap((s) => simplices[s])),
     facetOf: Int32Array.from(order, (s) => facetOf[s]),
   }

@@ -2,7 +2,7 @@ import { InputError, InvariantError } from '../../errors.ts'
 import { classFromTriangles } from '../classFromTriangles.ts'
 import { listed, type PointNames } from '../pointNames.ts'
 import type { Polytope } from '../polytope.ts'
-import { fanOf, type Fan } from './fan.ts'
+import { fanSimplices, type Fan } from './fan.ts'
 import { commonFacets, facetPoints } from './facetPoints.ts'
 import { wallCode } from './facetTriangulation.ts'
 import { minorsOf, pairing, simplexVolume } from './simplexFrame.ts'
@@ -49,11 +49,12 @@ export function fanFromSimplices(
   const triangles = pairWalls(polytope, placed, names)
   requireCover(polytope, placed, names)
   requireFine(polytope, placed, names)
-  return fanOf(
-    classFromTriangles(polytope, triangles.flat()),
+  const fan = fanSimplices(
+    polytope,
     placed.map(({ points }) => points),
     placed.map(({ facet }) => facet),
   )
+  return { ...fan, class: classFromTriangles(polytope, triangles.flat()) }
 }
 
 function place(polytope: Polytope, simplex: readonly number[], at: number, names: PointNames): Placed {

@@ -2,7 +2,7 @@ import { decideCone, type ConeDecision, type ConeQuestion } from '../coneDecisio
 import { SparseConeRows } from '../coneRows.ts'
 import { heightBound } from '../faceSheets.ts'
 import { quadraticHeights } from '../heights.ts'
-import type { Fan } from './fan.ts'
+import type { FanSimplices } from './fan.ts'
 import { fanWalls, isStrict, type FanWall } from './fanWalls.ts'
 
 /** The answer on a fan's regularity, with its proof. */
@@ -24,7 +24,7 @@ const MARGIN = 2 ** 12
  *
  * @param near heights to look near to; default: quadratic heights
  */
-export function isRegularFan(fan: Fan, near?: ArrayLike<number>): FanRegularity {
+export function isRegularFan(fan: FanSimplices, near?: ArrayLike<number>): FanRegularity {
   const walls = distinctWalls(fan)
   const decision = decideCone(
     questionOf(fan, walls),
@@ -35,7 +35,7 @@ export function isRegularFan(fan: Fan, near?: ArrayLike<number>): FanRegularity 
 }
 
 /** Walls with different circuits, the first of each kind. */
-export function distinctWalls(fan: Fan): FanWall[] {
+export function distinctWalls(fan: FanSimplices): FanWall[] {
   const seen = new Set<string>()
   return fanWalls(fan).filter(({ circuit }) => {
     const name = circuit.points
@@ -48,7 +48,7 @@ export function distinctWalls(fan: Fan): FanWall[] {
   })
 }
 
-function questionOf(fan: Fan, walls: readonly FanWall[]): ConeQuestion {
+function questionOf(fan: FanSimplices, walls: readonly FanWall[]): ConeQuestion {
   const bound = heightBound(fan.polytope)
   return {
     rows: new SparseConeRows(walls.map(({ circuit }) => circuit)),

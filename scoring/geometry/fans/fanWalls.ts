@@ -1,7 +1,7 @@
 import { InvariantError } from '../../errors.ts'
 import { circuitOf, circuitSign, type Circuit } from './fanCircuits.ts'
 import { wallCode, type Wall } from './facetTriangulation.ts'
-import type { Fan } from './fan.ts'
+import type { FanSimplices } from './fan.ts'
 
 /**
  * A triangle between two simplices of one facet. Its circuit is the relation among its vertices and the two
@@ -17,10 +17,10 @@ export interface FanWall {
   readonly circuit: Circuit
 }
 
-const known = new WeakMap<Fan, readonly FanWall[]>()
+const known = new WeakMap<FanSimplices, readonly FanWall[]>()
 
 /** The walls interior to facets, computed once; ordered by facet, then by the order of the simplices. */
-export function fanWalls(fan: Fan): readonly FanWall[] {
+export function fanWalls(fan: FanSimplices): readonly FanWall[] {
   let walls = known.get(fan)
   if (walls === undefined) {
     walls = read(fan)
@@ -29,7 +29,7 @@ export function fanWalls(fan: Fan): readonly FanWall[] {
   return walls
 }
 
-function read({ polytope, simplices, facetOf }: Fan): FanWall[] {
+function read({ polytope, simplices, facetOf }: FanSimplices): FanWall[] {
   const half: Map<number, readonly [number, number]>[] = []
   const walls: FanWall[][] = []
   for (let s = 0; s < facetOf.length; s++) {
@@ -56,11 +56,11 @@ function read({ polytope, simplices, facetOf }: Fan): FanWall[] {
 }
 
 /** Walls whose circuit vanishes on the heights: the triangulation is one choice among several there. */
-export function tiedWalls(fan: Fan, heights: ArrayLike<number>): FanWall[] {
+export function tiedWalls(fan: FanSimplices, heights: ArrayLike<number>): FanWall[] {
   return fanWalls(fan).filter(({ circuit }) => circuitSign(circuit, heights) === 0)
 }
 
 /** True when the heights give exactly this fan, strictly: every wall's circuit is positive. */
-export function isStrict(fan: Fan, heights: ArrayLike<number>): boolean {
+export function isStrict(fan: FanSimplices, heights: ArrayLike<number>): boolean {
   return fanWalls(fan).every(({ circuit }) => circuitSign(circuit, heights) > 0)
 }

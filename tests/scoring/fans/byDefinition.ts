@@ -1,9 +1,9 @@
-import type { Fan } from '../../../scoring/geometry/fans/fan.ts'
+import type { FanSimplices } from '../../../scoring/geometry/fans/fan.ts'
 import { facetPoints } from '../../../scoring/geometry/fans/facetPoints.ts'
 import type { Polytope } from '../../../scoring/geometry/polytope.ts'
 
 /** The simplices as a list. */
-export function rowsOf({ simplices }: Fan): number[][] {
+export function rowsOf({ simplices }: FanSimplices): number[][] {
   return Array.from({ length: simplices.length / 4 }, (_, s) => [...simplices.subarray(4 * s, 4 * s + 4)])
 }
 

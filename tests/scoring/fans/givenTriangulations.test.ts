@@ -11,6 +11,7 @@ import { normalForm } from '../../../scoring/geometry/normalForm.ts'
 import { polytopeFromPoints, type Polytope } from '../../../scoring/geometry/polytope.ts'
 import { fineClass } from '../../../scoring/geometry/twoFaceClass.ts'
 import { largePolytope } from '../../reference/bundledPolytopes.ts'
+import { polygonAlone, rectangle } from '../classes/polygonAlone.ts'
 import { rowsOf } from './byDefinition.ts'
 
 const polytopeOf = (id: string): Polytope =>
@@ -196,5 +197,19 @@ describe('a triangulation given by triangles', () => {
       code: 'triangles.overlap',
       path: `triangles[${good.length}]`,
     })
+  })
+
+  it('is refused when it is not regular, with the edges that contradict each other', () => {
+    // The four long edges whirl around the inner unit square of the 3 x 3 square; point 4 x + y.
+    const whirl = `0,1,5 0,4,9 0,5,9 1,2,5 2,3,5 3,5,6 3,6,7 4,8,9 5,6,10 5,9,10 6,7,11 6,10,15 6,11,15 8,9,12
+      9,10,12 10,12,13 10,13,14 10,14,15`
+    const error = errorOf(() =>
+      heightsOfTriangles(
+        polygonAlone(rectangle(3, 3)),
+        whirl.split(/\s+/).map((triangle) => triangle.split(',').map(Number)),
+      ),
+    )
+    expect(error.code).toBe('triangles.not-regular')
+    for (const edge of ['(0, 9)', '(10, 12)', '(6, 15)', '(3, 5)']) expect(error.message).toContain(edge)
   })
 })
