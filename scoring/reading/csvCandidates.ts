@@ -198,13 +198,11 @@ class Table {
       }
       triangulation = { kind: 'address' }
     } else if (ways.length !== 1) {
-      const what = ways.length === 0 ? 'no triangulation' : `${ways.join(' and ')}, of which one is enough`
-      this.fail(
-        line,
-        entry,
-        'candidate.no-triangulation',
-        `This row has ${what}; give heights, simplices or triangles.`,
-      )
+      const [code, what] =
+        ways.length === 0
+          ? ['candidate.no-triangulation', 'no triangulation']
+          : ['candidate.two-triangulations', `${ways.join(' and ')}, of which one is enough`]
+      this.fail(line, entry, code, `This row has ${what}; give heights, simplices or triangles.`)
       return
     } else {
       const rows = this.integers(record, ways[0])
@@ -243,8 +241,8 @@ class Table {
       return undefined
     }
     if (way === 'polytope') {
-      const key = this.cell(record, way).toLowerCase()
-      if (isKey(key)) return { kind: 'key', key }
+      const key = this.cell(record, way)
+      if (isKey(key.toLowerCase())) return { kind: 'key', key: key.toLowerCase() }
       this.fail(line, way, 'csv.no-key', `"${shortened(key)}" is no key of 32 hexadecimal digits.`)
       return undefined
     }

@@ -248,11 +248,13 @@ class Reader {
         this.address(at, given.name ?? null, polytope.key, given.candidate)
         return
       }
-      const message =
-        ways.length === 0
-          ? 'There is no triangulation; give one of "heights", "simplices" and "triangles".'
-          : `The triangulation is given as ${ways.join(' and as ')}; give one of them.`
-      this.fail(at, 'candidate.no-triangulation', message)
+      if (ways.length === 0) {
+        const message = 'There is no triangulation; give one of "heights", "simplices" and "triangles".'
+        this.fail(at, 'candidate.no-triangulation', message)
+      } else {
+        const message = `The triangulation is given as ${ways.join(' and as ')}; give one of them.`
+        this.fail(at, 'candidate.two-triangulations', message)
+      }
       return
     }
     const list = new PointList(given.points ?? (polytope.kind === 'points' ? polytope.rows : []))
@@ -367,8 +369,8 @@ class Reader {
         message: `There is no field ${names}; the fields are ${Object.keys(candidateShape.shape).slice(0, 11).join(', ')}.`,
       })
     } else {
-      const message = `${path === '' ? 'The value' : path} is not as it should be: ${lowerFirst(issue.message)}.`
-      this.problems.push({ line, entry, code: 'json.wrong-type', message: message.replace(/\.\.$/, '.') })
+      const message = complaint(issue, at.value, path)
+      this.problems.push({ line, entry, code: 'json.wrong-type', message })
     }
     return undefined
   }
@@ -425,5 +427,32 @@ function deepest(issue: Issue): Issue {
 const pointsOf = (heights: CandidateShape['heights']): number[][] | undefined =>
   heights !== undefined && 'points' in heights ? (heights as { points: number[][] }).points : undefined
 
+const kinds: Record<string, string> = {
+  array: 'a list',
+  number: 'a number',
+  int: 'an integer',
+  string: 'a text',
+  object: 'an object',
+  boolean: 'true or false',
+}
+
+/** What a value is and what it should be. */
+function complaint(issue: Issue, root: unknown, path: string): string {
+  const found = issue.path.reduce<unknown>(
+    (value, part) =>
+      typeof value === 'object' && value !== null ? (value as Record<PropertyKey, unknown>)[part] : undefined,
+    root,
+  )
+  const where = path === '' ? 'The value' : path
+  if (issue.code === 'too_small' || issue.code === 'too_big') {
+    const needed = String(issue.code === 'too_small' ? issue.minimum : issue.maximum)
+    const count = Array.isArray(found) ? found.length : String(found)
+    return `${where} has ${count} entries; ${needed} are needed.`
+  }
+  const right = issue.code === 'invalid_type' ? (kinds[issue.expected] ?? issue.expected) : issue.message
+  if (found === undefined) return `${where} is missing; it should be ${right}.`
+  const shown = JSON.stringify(found)
+  return `${where} is ${shown.length > 24 ? `${shown.slice(0, 24)}…` : shown}; it should be ${right}.`
+}
+
 const within = (path: string, name: string): string => (path === '' ? name : `${path}.${name}`)
-const lowerFirst = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1)

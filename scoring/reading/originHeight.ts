@@ -1,6 +1,7 @@
 import { InputError } from '../errors.ts'
 import { circuitOf } from '../geometry/fans/fanCircuits.ts'
 import { fanOverClass } from '../geometry/fans/fan.ts'
+import { gcdBig } from '../geometry/integers.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import type { PlacedPoints } from './placedPoints.ts'
 
@@ -10,13 +11,14 @@ import type { PlacedPoints } from './placedPoints.ts'
  * coefficients with the sum S = c_q (1 + <m, v_q>) > 0, m the normal of p's facet; with the origin's coefficient -S
  * it is affine, and the lifted fan is convex there exactly when sum_m c_m w_m > S w_0.
  *
+ * @param index of the origin in the list of points
  * @throws InputError heights.not-star with the triangle at which it fails first
  */
 export function requireStar(
   placed: PlacedPoints,
   cls: TwoFaceClass,
   heights: ArrayLike<number>,
-  origin: number,
+  { height: origin, index }: { readonly height: number; readonly index: number },
 ): void {
   const { polytope } = placed
   const { simplices, facetOf } = fanOverClass(cls, heights)
@@ -45,11 +47,13 @@ export function requireStar(
       sum += BigInt(coefficients[m])
     })
     if (value > sum * BigInt(origin)) continue
+    const common = gcdBig(value, sum)
+    const [bound, divisor] = [value / common, sum / common]
     const corners = Array.from(wall, (point) => placed.nameOf(point)).join(', ')
     throw new InputError(
       'heights.not-star',
-      `The triangulation is not star: the origin has the height ${origin}, but at the triangle ${corners} it must lie below ${value}${sum === 1n ? '' : `/${sum}`}. Lower it, or leave the origin out.`,
-      'heights',
+      `The triangulation is not star: the origin has the height ${origin}, but at the triangle ${corners} it must lie below ${bound}${divisor === 1n ? '' : `/${divisor}`}. Lower it, or leave the origin out.`,
+      `heights[${index}]`,
       origin,
     )
   }

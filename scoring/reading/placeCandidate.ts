@@ -75,8 +75,8 @@ function classOf(
     case 'heights': {
       const heights = placedHeights(placed, triangulation.values)
       const cls = classOfHeights(placed, heights)
-      const origin = placed.places.indexOf('origin')
-      if (origin >= 0) requireStar(placed, cls, heights, triangulation.values[origin])
+      const index = placed.places.indexOf('origin')
+      if (index >= 0) requireStar(placed, cls, heights, { height: triangulation.values[index], index })
       return { cls, heights }
     }
     case 'quadratic': {

@@ -59,7 +59,7 @@ export class SectionCollector {
   /** A candidate begins here whatever comes before. */
   candidate(name: string, line: number): void {
     this.close()
-    if (this.draft !== undefined && !this.draft.empty) this.finish()
+    if (this.draft !== undefined && (!this.draft.empty || this.draft.name !== null)) this.finish()
     this.draft ??= new Draft(line)
     if (name !== '') this.draft.name = name.slice(0, 200)
   }
