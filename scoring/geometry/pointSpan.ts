@@ -18,6 +18,13 @@ export class PointSpan {
     return true
   }
 
+  /** The determinant of the first three points added and this one; of a span of rank 3, zero on it alone. */
+  valueAt(point: number): number {
+    let determinant = 0
+    for (let axis = 0; axis < 4; axis++) determinant += this.normal[axis] * this.points[4 * point + axis]
+    return determinant
+  }
+
   /** Leaves the minors of the first two points, or the normal of the first three, when it lets the last of them in. */
   private isOutside(point: number): boolean {
     const { points, chosen, minors, normal } = this
@@ -30,11 +37,8 @@ export class PointSpan {
       case 2:
         spaceNormal(points, minors, point, normal)
         return normal.some((entry) => entry !== 0)
-      case 3: {
-        let determinant = 0
-        for (let axis = 0; axis < 4; axis++) determinant += normal[axis] * points[4 * point + axis]
-        return determinant !== 0
-      }
+      case 3:
+        return this.valueAt(point) !== 0
       default:
         return false
     }

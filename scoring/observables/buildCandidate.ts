@@ -1,3 +1,4 @@
+import { axionSector, type AxionSector } from '../geometry/axions.ts'
 import { curveRows } from '../geometry/curves.ts'
 import { divisorTopology } from '../geometry/divisors.ts'
 import { fibrations } from '../geometry/fibrations.ts'
@@ -10,7 +11,7 @@ import { reflexiveSections } from '../geometry/sections.ts'
 import { basisSpectrum, divisorSpectrum, topEigenvalue } from '../geometry/spectra.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import { pairNumbers, volumes } from '../geometry/volumes.ts'
-import type { Candidate } from './candidate.ts'
+import type { Candidate, Instantons } from './candidate.ts'
 
 const topologies = new WeakMap<Polytope, ReturnType<typeof divisorTopology>>()
 
@@ -44,6 +45,11 @@ export function buildCandidate(form: NormalForm, canonical: TwoFaceClass, classK
     topEigenvalue: once(() => topEigenvalue(polytope, pairs(), volume()).value),
     divisorSpectrum: once(() => divisorSpectrum(polytope, pairs(), volume())),
     basisSpectrum: once(() => basisSpectrum(polytope, pairs(), volume())),
+    axions: lastOfEach((scale, instantons) =>
+      polytope.favourable
+        ? axionSector(polytope, pairs(), volume(), instantonDivisors(polytope, instantons), scale)
+        : undefined,
+    ),
   }
 }
 
@@ -51,6 +57,24 @@ function topologyOf(polytope: Polytope): ReturnType<typeof divisorTopology> {
   const known = topologies.get(polytope) ?? divisorTopology(polytope)
   topologies.set(polytope, known)
   return known
+}
+
+function instantonDivisors(polytope: Polytope, instantons: Instantons): Int32Array {
+  const { rigid } = topologyOf(polytope)
+  const all = Int32Array.from(rigid, (_, p) => p)
+  return instantons === 'all' ? all : all.filter((p) => rigid[p] === 1)
+}
+
+/** Keeps, for either choice of instantons, the sector at the scale asked for last. */
+function lastOfEach(compute: Candidate['axions']): Candidate['axions'] {
+  const kept = new Map<Instantons, { readonly scale: number; readonly sector: AxionSector | undefined }>()
+  return (scale, instantons) => {
+    const last = kept.get(instantons)
+    if (last?.scale === scale) return last.sector
+    const sector = compute(scale, instantons)
+    kept.set(instantons, { scale, sector })
+    return sector
+  }
 }
 
 /** Computes a value on the first call and keeps it. */

@@ -1,7 +1,13 @@
 import type { CostClass, Described, Stage } from './observable.ts'
 
 /** What most entries share; an entry overrides what differs. */
-const usual = { unit: '1', convention: '', scaling: 0, version: 1, source: 'common practice, no source' }
+const usual = {
+  unit: '1',
+  convention: '',
+  scaling: 0,
+  version: 1,
+  source: 'common practice, no source',
+}
 
 type Particular = Partial<Described> & Pick<Described, 'name' | 'description' | 'formula'>
 
@@ -14,10 +20,14 @@ export const ofPolytope = describe('polytope', 'free')
 export const ofTopology = describe('topology', 'cheap')
 export const ofCone = describe('cone', 'moderate')
 export const ofMetric = describe('metric', 'moderate')
+export const ofAxions = (particular: Particular): Described =>
+  describe('axions', 'dear')({ scaling: 'computed', ...particular })
 
 /** Where the formulas of more than one entry come from. */
 export const SOURCES = {
   batyrev: 'Batyrev 1993, alg-geom/9310003',
+  axions:
+    'Demirtas, Long, McAllister, Stillman 2018, arXiv:1808.01282; Mehta et al. 2021, arXiv:2103.06812 (from memory)',
   divisors: 'arXiv:1712.04946',
   volumes: 'Grimm, Louis 2004, hep-th/0403067 (from memory)',
   sections: 'Avram, Kreuzer, Mandelberg, Skarke 1997, hep-th/9610154 (from memory)',

@@ -22,8 +22,11 @@ export interface Described {
   readonly convention: string
   readonly stage: Stage
   readonly cost: CostClass
-  /** Power of s when the Kaehler class is moved along its ray to s times the reference point. */
-  readonly scaling: number
+  /**
+   * Power of s when the Kaehler class is moved along its ray to s times the reference point, or 'computed' for what
+   * follows no power: it is read at the place itself.
+   */
+  readonly scaling: number | 'computed'
   /** Raised when a value changes; part of the scoring hash. */
   readonly version: number
   /** TeX, without dollar signs. */
@@ -31,12 +34,15 @@ export interface Described {
   readonly source: string
 }
 
-/** One value per candidate. Truth values are 1 and 0; NaN is an undefined value, explained by `undefinedWhen`. */
+/**
+ * One value per candidate. Truth values are 1 and 0; NaN is an undefined value, explained by `undefinedWhen`. Here and
+ * below, `scale` is the place on the ray when the scaling is 'computed'; all else is read at scale 1.
+ */
 export interface ScalarObservable extends Described {
   readonly kind: 'scalar'
   readonly type: ValueType
   readonly undefinedWhen?: string
-  read(candidate: Candidate): number
+  read(candidate: Candidate, scale: number): number
 }
 
 /** One value per element of a set. Truth values are 1 and 0; NaN is an undefined value. */
@@ -44,14 +50,14 @@ export interface ValueField extends Described {
   readonly kind: 'value'
   readonly type: ValueType
   readonly undefinedWhen?: string
-  column(candidate: Candidate): ArrayLike<number>
+  column(candidate: Candidate, scale: number): ArrayLike<number>
 }
 
 /** One element of another set per element. */
 export interface ElementField extends Described {
   readonly kind: 'element'
   readonly of: string
-  column(candidate: Candidate): ArrayLike<number>
+  column(candidate: Candidate, scale: number): ArrayLike<number>
 }
 
 /** Elements `starts[r] .. starts[r + 1]` of `items` belong to element r. */
@@ -64,7 +70,7 @@ export interface MemberLists {
 export interface MembersField extends Described {
   readonly kind: 'members'
   readonly of: string
-  members(candidate: Candidate): MemberLists
+  members(candidate: Candidate, scale: number): MemberLists
 }
 
 export type Field = ValueField | ElementField | MembersField
@@ -73,14 +79,16 @@ export type Field = ValueField | ElementField | MembersField
 export interface RecordSet extends Described {
   readonly kind: 'records'
   readonly fields: readonly Field[]
-  size(candidate: Candidate): number
+  /** Says why when `size` is NaN: the set is undefined for this candidate. */
+  readonly undefinedWhen?: string
+  size(candidate: Candidate, scale: number): number
 }
 
 /** A set of plain numbers, such as a spectrum. */
 export interface NumberSet extends Described {
   readonly kind: 'numbers'
   readonly type: 'integer' | 'number'
-  values(candidate: Candidate): ArrayLike<number>
+  values(candidate: Candidate, scale: number): ArrayLike<number>
 }
 
 /** A function of divisors that looks a value up in the candidate. */
@@ -88,7 +96,7 @@ export interface Relation extends Described {
   readonly kind: 'relation'
   readonly type: ValueType
   readonly parameters: readonly { readonly name: string; readonly of: string }[]
-  bind(candidate: Candidate): (...elements: number[]) => number
+  bind(candidate: Candidate, scale: number): (...elements: number[]) => number
 }
 
 export type Observable = ScalarObservable | RecordSet | NumberSet | Relation

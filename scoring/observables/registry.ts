@@ -1,3 +1,4 @@
+import { axions } from './axions.ts'
 import { components } from './components.ts'
 import { coneObservables } from './cone.ts'
 import { curves } from './curves.ts'
@@ -36,6 +37,7 @@ export const OBSERVABLES: readonly Observable[] = [
   ...relations,
   ...coneObservables,
   ...metricObservables,
+  ...axions,
 ]
 
 const byName = new Map(OBSERVABLES.map((observable) => [observable.name, observable]))

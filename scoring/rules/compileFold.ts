@@ -50,10 +50,16 @@ export function compileSource(compiler: Compiler, expression: TypedFold): (frame
   const resource = compiler.resource(source.set)
   const failed = compiler.failed(expression, source.set)
   const records = source.set.kind === 'records'
+  const why = source.set.kind === 'records' && source.set.undefinedWhen
+  const noSet = compiler.reason(expression, `${source.set.name} is undefined${why ? `: ${why}` : ''}`)
   return (frame) => {
     const loaded = resource(frame)
-    if (loaded.kind === 'values')
-      return count(frame, 0, records ? loaded.values[0] : loaded.values.length, null)
+    if (loaded.kind === 'values') {
+      const size = records ? loaded.values[0] : loaded.values.length
+      if (size === size) return count(frame, 0, size, null)
+      frame.undefinedBecause(noSet)
+      return false
+    }
     failed(frame, loaded)
     return false
   }

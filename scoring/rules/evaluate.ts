@@ -177,6 +177,7 @@ export function evaluatePolytopeStage(
     topEigenvalue: unreachable,
     divisorSpectrum: unreachable,
     basisSpectrum: unreachable,
+    axions: unreachable,
   }
   const frame = new Frame(candidate, rule.program.layout, options.stepLimit ?? RULE_LIMITS.steps)
   return judgeStage(frame, 'polytope', first.requires)

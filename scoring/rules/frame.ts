@@ -105,18 +105,32 @@ export class Frame {
     if (scaling === 0) return STAY
     const { kind, value } = this.place
     if (kind === 'scale') return value === 1 ? STAY : { divisor: 1, factor: value ** scaling }
+    const power = scaling / (kind === 'volume' ? 3 : 2)
+    return { divisor: this.measured() ** power, factor: value ** power }
+  }
+
+  /** The place on the ray, as s. */
+  scale(): number {
+    const { kind, value } = this.place
+    if (kind === 'scale') return value
+    return (value / this.measured()) ** (1 / (kind === 'volume' ? 3 : 2))
+  }
+
+  /** What `at volume` or `at smallest divisor` names, at scale 1. */
+  private measured(): number {
+    const { kind } = this.place
     this.measure ??=
       kind === 'volume' ? this.candidate.volumes().total : least(this.candidate.volumes().divisors)
     if (!(this.measure > 0))
       throw new InvariantError(
         `"at ${kind}" has no meaning here: the ${kind} measures ${this.measure} at scale 1.`,
       )
-    const power = scaling / (kind === 'volume' ? 3 : 2)
-    return { divisor: this.measure ** power, factor: value ** power }
+    return this.measure
   }
 }
 
-const STAY: Move = { divisor: 1, factor: 1 }
+/** Where the rule stands already. */
+export const STAY: Move = { divisor: 1, factor: 1 }
 
 function least(values: ArrayLike<number>): number {
   let result = Infinity

@@ -31,7 +31,8 @@ export interface ReferenceEntry {
     readonly convention: string
     readonly stage: Stage
     readonly cost: CostClass
-    readonly scaling: number
+    /** Power of s along the ray, or 'computed' when it follows none. */
+    readonly scaling: number | 'computed'
     readonly version: number
     readonly source: string
     readonly undefinedWhen?: string

@@ -8,7 +8,7 @@ import type {
   ScalarObservable,
   ValueField,
 } from '../observables/observable.ts'
-import type { Frame, Move, Resource } from './frame.ts'
+import { STAY, type Frame, type Move, type Resource } from './frame.ts'
 
 /** What a program loads from a candidate: the registry's entries with a value of their own. */
 export type Loadable =
@@ -23,20 +23,23 @@ function moved(values: ArrayLike<number>, { divisor, factor }: Move): ArrayLike<
 
 function read(entry: Loadable, frame: Frame): Resource {
   const { candidate } = frame
+  const { scaling } = entry
+  const scale = scaling === 'computed' ? frame.scale() : 1
+  const move = scaling === 'computed' ? STAY : frame.move(scaling)
   switch (entry.kind) {
     case 'scalar':
-      return { kind: 'values', values: moved([entry.read(candidate)], frame.move(entry.scaling)) }
+      return { kind: 'values', values: moved([entry.read(candidate, scale)], move) }
     case 'value':
     case 'element':
-      return { kind: 'values', values: moved(entry.column(candidate), frame.move(entry.scaling)) }
+      return { kind: 'values', values: moved(entry.column(candidate, scale), move) }
     case 'numbers':
-      return { kind: 'values', values: moved(entry.values(candidate), frame.move(entry.scaling)) }
+      return { kind: 'values', values: moved(entry.values(candidate, scale), move) }
     case 'records':
-      return { kind: 'values', values: [entry.size(candidate)] }
+      return { kind: 'values', values: [entry.size(candidate, scale)] }
     case 'members':
-      return { kind: 'members', lists: entry.members(candidate) }
+      return { kind: 'members', lists: entry.members(candidate, scale) }
     case 'relation':
-      return { kind: 'lookup', lookup: entry.bind(candidate) }
+      return { kind: 'lookup', lookup: entry.bind(candidate, scale) }
   }
 }
 

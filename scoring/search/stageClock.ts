@@ -27,6 +27,10 @@ export function timedCandidate(candidate: Candidate, clock: Clock, costs: StageC
     cone(() => candidate.volumes())
     return time('metric', compute)
   }
+  const axions = <T>(compute: () => T): T => {
+    cone(() => candidate.volumes())
+    return time('axions', compute)
+  }
   return {
     polytope: candidate.polytope,
     symmetryOrder: candidate.symmetryOrder,
@@ -43,5 +47,6 @@ export function timedCandidate(candidate: Candidate, clock: Clock, costs: StageC
     topEigenvalue: () => metric(() => candidate.topEigenvalue()),
     divisorSpectrum: () => metric(() => candidate.divisorSpectrum()),
     basisSpectrum: () => metric(() => candidate.basisSpectrum()),
+    axions: (scale, instantons) => axions(() => candidate.axions(scale, instantons)),
   }
 }

@@ -106,6 +106,12 @@ function Entry({
   )
 }
 
+/** How a quantity moves along the ray, in words. */
+function scalingInWords(scaling: number | 'computed'): string {
+  if (scaling === 'computed') return 'follows no power of s: computed at the place itself'
+  return scaling === 0 ? 'unchanged' : `scales as s^${scaling}`
+}
+
 function EntryBody({ entry }: { entry: ReferenceEntry }) {
   const { observable } = entry
   return (
@@ -126,7 +132,7 @@ function EntryBody({ entry }: { entry: ReferenceEntry }) {
               ['Convention', observable.convention],
               ['Stage', observable.stage],
               ['Cost', observable.cost],
-              ['Under w → s w', observable.scaling === 0 ? 'unchanged' : `scales as s^${observable.scaling}`],
+              ['Under w → s w', scalingInWords(observable.scaling)],
               ['Undefined', observable.undefinedWhen ?? ''],
               ['Source', observable.source],
             ] as const

@@ -6,6 +6,8 @@ import { OBSERVABLES } from '../../../scoring/observables/registry.ts'
 const DEFINED: ReadonlyMap<string, string> = new Map([
   ['divisors.delPezzoDegree', 'x.delPezzo'],
   ['components.delPezzoDegree', 'x.delPezzo'],
+  ['axions.separation', 'h11 > 1'],
+  ['rigidAxions.separation', 'count(y in rigidAxions : true) > 1'],
   ['sections.type', 'x.dimension == 2'],
 ])
 

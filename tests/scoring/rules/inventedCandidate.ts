@@ -116,6 +116,17 @@ export function inventedCandidate(change: Partial<Candidate> = {}): Candidate & 
       basis: Int32Array.of(1, 2, 3),
       eigenvalues: Float64Array.of(0.001, 0.1),
     }),
+    axions: (scale, instantons) => {
+      counted('axions', null)()
+      const rigid = instantons === 'rigid'
+      return {
+        decayConstants: rigid ? Float64Array.of(0.02) : Float64Array.of(0.02, 0.5 / scale ** 2),
+        logMasses: rigid ? Float64Array.of(-3) : Float64Array.of(-3, -9),
+        logScales: rigid ? Float64Array.of(-2.5) : Float64Array.of(-2.5, -5 * scale),
+        separations: rigid ? Float64Array.of(Infinity) : Float64Array.of(2.5, 2.5),
+        divisors: rigid ? [Int32Array.of(2)] : [Int32Array.of(2), Int32Array.of(0, 4)],
+      }
+    },
     ...change,
   }
 }
