@@ -2,12 +2,15 @@
  * `npm run bench`: medians of repeated runs beside the figures they must keep. Exit status 1 when one is above
  * 1.5 times its figure.
  */
+import { fanFromHeights } from './geometry/fans/fan.ts'
+import { isStrict } from './geometry/fans/fanWalls.ts'
 import { quadraticHeights } from './geometry/heights.ts'
 import { intersectionNumbers } from './geometry/intersectionNumbers.ts'
+import { normalForm } from './geometry/normalForm.ts'
 import { classFromHeights } from './geometry/twoFaceClass.ts'
 import { polytopeFromWeights } from './geometry/weights.ts'
 import { evaluationMemory } from './bench/memory.ts'
-import { candidateOf, largest, small, workload } from './bench/workloads.ts'
+import { candidateOf, largest, small, twentyVertices, workload } from './bench/workloads.ts'
 
 interface Measure {
   readonly name: string
@@ -33,6 +36,29 @@ const measures: readonly Measure[] = [
     unit: 'ms',
     runs: 20,
     measure: () => milliseconds(() => polytopeFromWeights(largest, 'newton')),
+  },
+  {
+    name: '20 vertices: normal form',
+    figure: 20,
+    unit: 'ms',
+    runs: 40,
+    measure: (run) => {
+      const polytope = twentyVertices(run)
+      return milliseconds(() => normalForm(polytope))
+    },
+  },
+  {
+    name: 'h11 = 491: heights to simplices, and that none tie',
+    figure: 60,
+    unit: 'ms',
+    runs: 20,
+    measure: (run) => {
+      const heights = quadraticHeights(large.polytope, { seed: run, noise: 0.45 })
+      return milliseconds(() => {
+        const fan = fanFromHeights(large.polytope, heights)
+        return fan !== undefined && isStrict(fan, heights)
+      })
+    },
   },
   {
     name: 'h11 = 491: heights to triangles, intersection numbers, c2',
