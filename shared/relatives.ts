@@ -62,7 +62,10 @@ export const candidateRelativesSchema = z.object({
   equivalents: z.array(relativeSchema.extend({ samePolytope: z.boolean() })),
   /** How many there are; the list is cut. */
   equivalentsTotal: z.number().int(),
-  /** Known candidates with these Hodge numbers that were compared, and those whose invariants are still to come. */
+  /**
+   * Known candidates with these Hodge numbers that were compared, and those whose invariants are still to come: they
+   * are computed in the background from now on, so that asking again finds more.
+   */
   compared: z.number().int(),
   waiting: z.number().int(),
   /** Known candidates on the same polytope that differ in few triangles, nearest first. */

@@ -1,4 +1,8 @@
-import { candidatesWithoutInvariants, storeInvariants } from '../services/candidateInvariants.ts'
+import {
+  candidatesWithoutInvariants,
+  readForInvariants,
+  storeInvariants,
+} from '../services/candidateInvariants.ts'
 import type { CandidateGeometryInput } from './compute/candidateGeometry.ts'
 import type { ComputedInvariants } from './compute/relatives.ts'
 import type { JobParts } from './jobParts.ts'
@@ -19,6 +23,8 @@ export class InvariantsFiller implements WorkSource {
   #busy = false
   /** Woken while busy: from the beginning once more. */
   #again = false
+  /** Asked for by name: finds of searches that a dossier is compared with. First in turn. */
+  readonly #wanted = new Set<string>()
   /** Keys up to here have been looked at in this round. */
   #after = ''
 
@@ -36,6 +42,13 @@ export class InvariantsFiller implements WorkSource {
     this.#waiting = true
     this.#after = ''
     this.#parts.scheduler.add(this)
+  }
+
+  /** Asks for candidates that `wake` alone would not lead to. */
+  want(candidateKeys: readonly string[]): void {
+    if (candidateKeys.length === 0) return
+    candidateKeys.forEach((key) => this.#wanted.add(key))
+    this.wake()
   }
 
   /** Resolves when nothing is left to compute. */
@@ -69,18 +82,33 @@ export class InvariantsFiller implements WorkSource {
 
   async #fill(): Promise<void> {
     const { source, writes } = this.#parts
-    const candidates = await candidatesWithoutInvariants(source.manager, this.#after, stretchLength)
-    const last = candidates.at(-1)
-    if (!last) return
-    if (candidates.length === stretchLength) this.#waiting = true
-    this.#after = last.key
+    const candidates =
+      this.#wanted.size > 0
+        ? await readForInvariants(source.manager, this.#takeWanted())
+        : await this.#nextInOrder()
     const computed = await this.#compute(candidates)
     await writes.transaction((manager) => storeInvariants(manager, computed))
+  }
+
+  #takeWanted(): string[] {
+    const keys = [...this.#wanted].slice(0, stretchLength)
+    keys.forEach((key) => this.#wanted.delete(key))
+    this.#waiting = true
+    return keys
+  }
+
+  async #nextInOrder(): Promise<CandidateGeometryInput[]> {
+    const { manager } = this.#parts.source
+    const candidates = await candidatesWithoutInvariants(manager, this.#after, stretchLength)
+    this.#after = candidates.at(-1)?.key ?? this.#after
+    if (candidates.length === stretchLength) this.#waiting = true
+    return candidates
   }
 
   /** One that cannot be computed is logged and passed by, so that it does not hold up the others. */
   async #compute(candidates: readonly CandidateGeometryInput[]): Promise<ComputedInvariants[]> {
     const { background, closing, log } = this.#parts
+    if (candidates.length === 0) return []
     try {
       return await background.run('invariants-of-each', { candidates })
     } catch (error) {

@@ -9,7 +9,7 @@ import type { ComputedInvariants } from '../jobs/compute/relatives.ts'
 /**
  * Candidates somebody has taken an interest in (listed, judged or imported) and whose invariants are
  * missing or of an older version, with what is needed to compute them. Finds of searches are too many; theirs come
- * when a dossier is opened.
+ * when a dossier asks for them.
  *
  * @param after keys up to this one are left out: where to go on
  */
@@ -28,8 +28,19 @@ export async function candidatesWithoutInvariants(
      ORDER BY c."key" LIMIT ?`,
     [wallVersion, after, count],
   )
+  return readForInvariants(
+    manager,
+    rows.map(({ candidateKey }) => candidateKey),
+  )
+}
+
+/** What is needed to compute the invariants of some candidates, ordered by key. */
+export async function readForInvariants(
+  manager: EntityManager,
+  keys: readonly string[],
+): Promise<CandidateGeometryInput[]> {
   const candidates = await manager.find(CandidateRecord, {
-    where: { key: In(rows.map(({ candidateKey }) => candidateKey)) },
+    where: { key: In([...keys]) },
     relations: { polytope: true },
     order: { key: 'ASC' },
   })
@@ -52,6 +63,7 @@ export async function storeInvariants(
   manager: EntityManager,
   computed: readonly ComputedInvariants[],
 ): Promise<void> {
+  if (computed.length === 0) return
   await manager.upsert(
     CandidateInvariants,
     computed.map(({ key, invariants }) => ({

@@ -18,6 +18,9 @@ const nearLimit = 400
 /** Near duplicates differ by at most four flips' worth of triangles. */
 const nearTriangles = 8
 
+/** Candidates whose invariants are asked for at a time, to be compared with next time. */
+const wantLimit = 200
+
 type Relative = CandidateRelatives['equivalents'][number]
 type NearDuplicate = CandidateRelatives['nearDuplicates'][number]
 
@@ -36,6 +39,8 @@ export async function readRelatives(
   const campaigns = await campaignsOf(manager, viewer)
   const known = JSON.stringify(campaigns)
   const equivalents = await equivalentKeys(manager, known, candidate, invariants)
+  const { compared, missing } = await counts(manager, known, invariants, candidate)
+  context.jobs.invariants.want(missing.slice(0, wantLimit))
   const near = await nearKeys(context, known, candidate)
   const keys = [...equivalents.keys, ...near.keys.map((entry) => entry.key)]
   const relatives = await describe(manager, viewer, campaigns, keys)
@@ -47,7 +52,8 @@ export async function readRelatives(
       return found ? [{ ...found, samePolytope: found.polytopeKey === candidate.polytopeKey }] : []
     }),
     equivalentsTotal: equivalents.total,
-    ...(await counts(manager, known, invariants, key)),
+    compared,
+    waiting: missing.length,
     nearDuplicates: near.keys.flatMap(({ key: other, triangles }): NearDuplicate[] => {
       const found = relatives.get(other)
       return found ? [{ ...found, triangles, flips: Math.ceil(triangles / 2) }] : []
@@ -88,23 +94,27 @@ async function equivalentKeys(
   return { keys: rows.slice(0, listLimit).map(({ candidateKey }) => candidateKey), total: rows.length }
 }
 
-/** Known candidates with the same Hodge numbers whose invariants are there, and those for whom they are awaited. */
+/**
+ * How many known candidates with the same Hodge numbers have been compared, and those whose invariants are missing:
+ * on other polytopes first.
+ */
 async function counts(
   manager: EntityManager,
   known: string,
   { h11, h21 }: WallInvariantsView,
-  key: string,
-): Promise<{ compared: number; waiting: number }> {
-  const [row] = await manager.query<{ compared: number; waiting: number }[]>(
+  { key, polytopeKey }: CandidateRecord,
+): Promise<{ compared: number; missing: string[] }> {
+  const rows = await manager.query<{ candidateKey: string; there: number }[]>(
     `${withKnown}
-     SELECT COALESCE(SUM(i.candidateKey IS NOT NULL), 0) AS compared,
-       COALESCE(SUM(i.candidateKey IS NULL), 0) AS waiting
+     SELECT c."key" AS candidateKey, i.candidateKey IS NOT NULL AS there
      FROM candidate c JOIN polytope p ON p."key" = c.polytopeKey
      LEFT JOIN candidate_invariants i ON i.candidateKey = c."key" AND i.version = ?
-     WHERE p.h11 = ? AND p.h21 = ? AND c."key" <> ? AND c."key" IN known`,
-    [known, wallVersion, h11, h21, key],
+     WHERE p.h11 = ? AND p.h21 = ? AND c."key" <> ? AND c."key" IN known
+     ORDER BY c.polytopeKey = ?, c."key"`,
+    [known, wallVersion, h11, h21, key, polytopeKey],
   )
-  return row
+  const missing = rows.filter(({ there }) => there === 0).map(({ candidateKey }) => candidateKey)
+  return { compared: rows.length - missing.length, missing }
 }
 
 async function nearKeys(

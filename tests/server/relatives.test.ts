@@ -131,7 +131,7 @@ describe('relatives of a candidate', () => {
     const { rows: entries } = await shortlistIn(lead, server.campaignId, 20, 40)
     expect(entries.length).toBeGreaterThan(5)
     const relatives: CandidateRelatives[] = []
-    for (const { candidateKey } of entries) relatives.push(await relativesOf(lead, candidateKey))
+    for (const { candidateKey } of entries.slice(0, 15)) relatives.push(await relativesOf(lead, candidateKey))
     const distance = new Map<string, number>()
     for (const { key, nearDuplicates, nearCompared, nearTotal } of relatives) {
       expect([nearCompared, nearTotal]).toEqual([entries.length - 1, entries.length - 1])
@@ -143,8 +143,10 @@ describe('relatives of a candidate', () => {
       }
     }
     expect(distance.size).toBeGreaterThan(0)
+    const asked = new Set(relatives.map(({ key }) => key))
     for (const [pair, triangles] of distance) {
-      expect(distance.get(pair.split(' ').reverse().join(' '))).toBe(triangles)
+      const [key, other] = pair.split(' ')
+      if (asked.has(other)) expect(distance.get(`${other} ${key}`)).toBe(triangles)
     }
   })
 
@@ -158,8 +160,8 @@ describe('relatives of a candidate', () => {
     await writes.transaction((manager) =>
       manager.update(CandidateInvariants, ofOne, { version: wallVersion - 1, wallKey: 'old' }),
     )
+    // Asking is enough to have them computed.
     expect(await relativesOf(lead, onOther)).toMatchObject({ waiting: 1 })
-    jobs.invariants.wake()
     await jobs.invariants.idle()
     expect(await source.manager.findOneBy(CandidateInvariants, ofOne)).toMatchObject({ version: wallVersion })
     expect(await relativesOf(lead, onOther)).toMatchObject({ waiting: 0 })

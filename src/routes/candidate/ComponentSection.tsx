@@ -95,7 +95,13 @@ export function ComponentSection({
   return (
     <Section
       title="Components"
-      note={`The polytope is not favourable: ${counted(parts.length, 'component')} of split divisors are divisors of their own, all rigid, and with the others they span all of H¹¹. Cone, reference point and metric use the toric part only, where the components of one divisor have equal weight.`}
+      note={
+        <>
+          The polytope is not favourable: {counted(parts.length, 'component')} of split divisors are divisors
+          of their own, all rigid, and with the others they span all of H<sup>1,1</sup>. Cone, reference point
+          and metric use the toric part only, where the components of one divisor have equal weight.
+        </>
+      }
     >
       <div className="grid grid-cols-1 gap-x-8 gap-y-3 lg:grid-cols-2">
         <VirtualTable
