@@ -53,6 +53,16 @@ export * from './rules/index.ts'
 
 // The search: one primitive, `advance`, and what is made of it.
 export { advance, startState, type Segment, type SegmentOptions } from './search/advance.ts'
+export {
+  enrichment,
+  fewestIslands,
+  isEasy,
+  rarityOf,
+  searchRate,
+  type Enrichment,
+  type Rarity,
+  type SearchRate,
+} from './search/islandRates.ts'
 export { interleaved, thinned, type Curve } from './search/curve.ts'
 export type { Find } from './search/find.ts'
 export { Histogram, type HistogramState, type HistogramView } from './search/histogram.ts'

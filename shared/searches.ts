@@ -55,7 +55,13 @@ export const searchProgressSchema = z.object({
   curve: z.array(z.tuple([z.number(), z.number()])),
   /** Per island: [evaluations, best]. */
   islands: z.array(
-    z.object({ evaluations: z.number().int(), best: z.number().nullable(), exhausted: z.boolean() }),
+    z.object({
+      evaluations: z.number().int(),
+      /** Distinct candidates that the rule's own hit line holds for. */
+      hits: z.number().int().optional(),
+      best: z.number().nullable(),
+      exhausted: z.boolean(),
+    }),
   ),
   exhausted: z.boolean(),
   evaluationsPerSecond: z.number().nullable(),

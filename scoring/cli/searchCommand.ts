@@ -7,10 +7,10 @@ import { scoringHash } from '../rules/hash.ts'
 import type { Find } from '../search/find.ts'
 import { mergeIslands } from '../search/islands.ts'
 import type { SegmentInput } from '../search/jobs.ts'
-import { isMethodName, lawOf } from '../search/methods.ts'
 import { nullSummary } from '../search/nullSample.ts'
 import { polytopeSource } from '../search/polytopeSource.ts'
 import { mergedProgress } from '../search/progress.ts'
+import { searchStatistics } from '../search/searchStatistics.ts'
 import { islandBudget } from '../search/settings.ts'
 import type { SearchState } from '../search/state.ts'
 import { engineVersion } from '../version.ts'
@@ -47,6 +47,15 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
   const findLine = findLineOf(rule, vertices)
   const inputs = jobsOf(spec)
   const states: (SearchState | null)[] = inputs.map((_, n) => options.states?.[n] ?? null)
+  for (const [n, state] of states.entries()) {
+    if (state === null || inputs[n].seed === state.seed) continue
+    throw new InputError(
+      'state.other-problem',
+      `The states are those of a search with seed ${state.seed}; this one has ${inputs[n].seed}.`,
+      '--state',
+      state.seed,
+    )
+  }
   if (options.states && options.states.length !== inputs.length) {
     throw new InputError(
       'state.other-problem',
@@ -96,8 +105,7 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
     progress: merged.progress,
     top: merged.top.map(findLine),
     statistics: {
-      // What the evaluated candidates are a sample of; null for a guided search, whose rates are those of no sample.
-      law: isMethodName(spec.method) ? lawOf(spec.method) : null,
+      ...searchStatistics(started(), sample, rule),
       histogram: merged.histogram,
       undefined: merged.reasons,
       failedRequires: merged.failures,

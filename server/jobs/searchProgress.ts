@@ -40,6 +40,7 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
     curve: interleaved(begun).map(([at, score]) => [at, score]),
     islands: islands.map((island) => ({
       evaluations: island?.evaluations ?? 0,
+      hits: island?.hits ?? 0,
       best: island?.best ?? null,
       exhausted: island?.exhausted ?? false,
     })),

@@ -28,6 +28,8 @@ export interface IslandProgress {
   readonly feasible: number
   readonly infeasible: number
   readonly undefined: number
+  /** Candidates that the rule's own hit line holds for; absent in progress stored by earlier versions. */
+  readonly hits?: number
   readonly best: number | null
   readonly bestKey: string | null
   /** Best so far over this island's evaluations. */

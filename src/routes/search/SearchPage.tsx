@@ -17,6 +17,7 @@ import { ScoredTable } from '../../components/ui/ScoredTable.tsx'
 import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
+import { AgainstNull } from './AgainstNull.tsx'
 import { NullFacts } from './NullFacts.tsx'
 import { IslandTable } from './IslandTable.tsx'
 import { MakeShortlistDialog } from './MakeShortlistDialog.tsx'
@@ -91,6 +92,9 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
       <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section title="Null sample" note="The same rule on candidates nobody selected.">
           <NullFacts summary={search.null} />
+        </Section>
+        <Section title="Against the null" note="What chance would have found with the same rule.">
+          <AgainstNull search={search} />
         </Section>
         <Section title="Islands">
           <IslandTable islands={progress.islands} />

@@ -150,6 +150,7 @@ describe('search', () => {
       caution,
       method: 'annealing',
       progress: { evaluations: 60, done: true },
+      statistics: { law: null, exact: false, hitLine: 'quantile', rateFrom: 'all', easy: false },
       null: { size: 30, evaluated: 30, complete: true },
     })
     const top = final?.top as { classKey: string; score: { value: number } }[]
@@ -163,12 +164,16 @@ describe('search', () => {
     const state = join(folder, 'other.json')
     const small = { ...spec, budget: 4, islands: 1, null: undefined }
     await run('search', inFile('small.json', small), '--state', state)
-    const other = await run('search', inFile('seeded.json', { ...small, keep: 6 }), '--state', state)
+    const other = await run('search', inFile('longer.json', { ...small, keep: 6 }), '--state', state)
     expect(other.status).toBe(2)
     expect(other.errors).toEqual([expect.stringMatching(/^state\.other-problem: /)])
+    const seeded = await run('search', inFile('seeded.json', { ...small, seed: 4 }), '--state', state)
+    expect(seeded.errors).toEqual([expect.stringMatching(/^state\.other-problem --state: .*seed 3/)])
     const method = await run('search', inFile('method.json', { ...spec, method: 'luck' }))
     expect([method.status, method.output]).toEqual([2, ''])
-    expect(method.errors).toEqual([expect.stringMatching(/^search\.method method: .*annealing, random/)])
+    expect(method.errors).toEqual([
+      expect.stringMatching(/^search\.method method: .*auto, annealing, .*random/),
+    ])
     const polytope = { ...spec, scope: { polytopes: [{ weights: [1, 1, 1, 1, 1] }] } }
     const scope = await run('search', inFile('scope.json', polytope))
     expect(scope.errors).toEqual([expect.stringMatching(/^input\.no-side scope\.polytopes\[0\]\.side: /)])

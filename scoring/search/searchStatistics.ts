@@ -1,0 +1,85 @@
+import type { CheckedRule } from '../rules/checkedRule.ts'
+import {
+  enrichment,
+  isEasy,
+  rarityOf,
+  searchRate,
+  type Enrichment,
+  type Rarity,
+  type SearchRate,
+} from './islandRates.ts'
+import { feasibleKind } from './merit.ts'
+import { isMethodName, lawOf } from './methods.ts'
+import { nullSummary } from './nullSample.ts'
+import type { SearchState } from './state.ts'
+
+/** What may be said of a search beside its null sample. */
+export interface SearchStatistics {
+  /** What the evaluated candidates are a sample of; null for a guided search, which draws no sample. */
+  readonly law: string | null
+  /** Every candidate of the scope has been scored: rates are exact and have no interval. */
+  readonly exact: boolean
+  /** What counts as a hit; null: nothing does, as the rule has no `hit` and there is no null sample. */
+  readonly hitLine: 'rule' | 'quantile' | null
+  /** Distinct hits per distinct evaluation. */
+  readonly rate: SearchRate | null
+  /** All evaluations were looked at for `rate`, or a uniform sample of each island's. */
+  readonly rateFrom: 'all' | 'sample'
+  readonly enrichment: Enrichment | null
+  /** The null hits so often that most of what the search finds, chance finds as well. */
+  readonly easy: boolean
+  /** How rare the best score is among null candidates. */
+  readonly rarity: Rarity | null
+}
+
+/**
+ * @param islands states of a search, one per island
+ * @param sample state of its null sample, at any time
+ */
+export function searchStatistics(
+  islands: readonly SearchState[],
+  sample: SearchState | null,
+  rule: Pick<CheckedRule, 'hit'>,
+): SearchStatistics {
+  const summary = sample && nullSummary(sample, rule)
+  const enumerated = islands.length > 0 && islands.every(isEnumerated)
+  const [first] = islands
+  const law = enumerated ? 'exhaustive' : first?.method
+  const line = summary?.quantile99 ?? null
+  const hitLine = rule.hit !== null ? 'rule' : line === null ? null : 'quantile'
+  const counts =
+    hitLine === 'rule'
+      ? islands
+      : islands.map(({ sample: { rows } }) => ({
+          evaluations: rows.length,
+          hits: rows.filter(({ kind, value }) => kind === feasibleKind && line !== null && value > line)
+            .length,
+        }))
+  const pooled = hitLine === null ? null : searchRate(counts)
+  const rate = pooled && enumerated ? { ...pooled, interval: null } : pooled
+  const nullRate = summary?.hit ?? null
+  const scores = (sample?.sample.rows ?? [])
+    .filter(({ kind }) => kind === feasibleKind)
+    .map(({ value }) => value)
+  const best = Math.max(...islands.flatMap(({ curve }) => curve.slice(-1).map(([, score]) => score)))
+  return {
+    law: law !== undefined && isMethodName(law) ? lawOf(law) : null,
+    exact: enumerated,
+    hitLine,
+    rate,
+    rateFrom:
+      hitLine === 'rule' || islands.every(({ sample: { rows, offered } }) => rows.length === offered)
+        ? 'all'
+        : 'sample',
+    enrichment: rate && nullRate && enrichment(rate, nullRate),
+    easy: hitLine === 'rule' && nullRate !== null && isEasy(nullRate),
+    rarity: sample && best > -Infinity ? rarityOf(best, scores, sample.evaluations) : null,
+  }
+}
+
+/** True of an island that has scored its part of a complete enumeration. */
+function isEnumerated({ method, chain, ended }: SearchState): boolean {
+  if (ended !== 'space-exhausted') return false
+  const phase = typeof chain === 'object' && chain !== null && 'phase' in chain ? chain.phase : null
+  return method === 'exhaustive' || (method === 'auto' && phase === 'enumeration')
+}
