@@ -1,4 +1,4 @@
-import { mkdirSync } from 'node:fs'
+import { mkdirSync, readFileSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
 import { afterAll, afterEach, beforeAll, describe, expect, it } from 'vitest'
 import { type Browser, type Page } from 'playwright-core'
@@ -135,7 +135,7 @@ describe.skipIf(chromiumPath === null)(
         .or(page.getByText('Score on the null sample'))
         .first()
         .waitFor()
-      await page.getByText(/300 candidates\./).waitFor({ timeout: 120_000 })
+      await page.getByText(/\d+ candidates\./).waitFor({ timeout: 120_000 })
       await shot('4-preview')
       await tour('target')
       await page.getByRole('button', { name: 'Save the target' }).click()
@@ -222,6 +222,52 @@ describe.skipIf(chromiumPath === null)(
       await dialog.getByRole('button', { name: 'Verify by override' }).click()
       await page.getByText('verified by override').first().waitFor()
       await shot('9-verdict')
+    })
+
+    it('certifies the candidate from its dossier, and verifies without an override', async () => {
+      await page.getByRole('button', { name: /^Certify for/ }).click()
+      const certificate = page.getByRole('article', { name: /^Certificate/ })
+      await certificate.waitFor({ timeout: 120_000 })
+      await certificate.getByText('passed').first().waitFor()
+      const table = await certificate.getByRole('table', { name: 'Comparisons' }).innerText()
+      expect(table).toContain('agrees')
+      expect(table).not.toContain('FAILS')
+      await certificate.scrollIntoViewIfNeeded()
+      await shot('10-certificate')
+      await tour('certificate')
+      const [file] = await Promise.all([
+        page.waitForEvent('download'),
+        certificate.getByRole('link', { name: 'Download JSON' }).click(),
+      ])
+      const whole = JSON.parse(readFileSync(await file.path(), 'utf8')) as { schema: string; passed: boolean }
+      expect(whole).toMatchObject({ schema: 'tessellary.certificate/1', passed: true })
+
+      await page.getByRole('button', { name: /^Verify/ }).click()
+      const dialog = page.getByRole('dialog', { name: 'Verdict: verified' })
+      await dialog.getByRole('button', { name: 'Verify', exact: true }).click()
+      await dialog.waitFor({ state: 'hidden' })
+      const verdicts = page.getByRole('list', { name: 'Verdicts, newest first' }).getByRole('listitem')
+      await verdicts.nth(1).waitFor()
+      expect(await verdicts.first().innerText()).not.toContain('override')
+      expect(await verdicts.nth(1).innerText()).toContain('verified by override')
+    })
+
+    it('certifies selected candidates of the shortlist, after which one key verifies', async () => {
+      await page.getByRole('link', { name: 'First look' }).first().click()
+      await page.getByRole('heading', { level: 1, name: 'First look' }).waitFor()
+      await page.getByRole('checkbox', { name: 'Select rank 3' }).click()
+      await page.getByRole('checkbox', { name: 'Select rank 5' }).click({ modifiers: ['Shift'] })
+      await page.getByRole('button', { name: 'Certify the 3 selected' }).click()
+      const rows = page.getByRole('row')
+      const passed = rows.filter({ hasText: 'passed' })
+      await passed.nth(3).waitFor({ timeout: 120_000 })
+      await rows.filter({ hasText: 'undecided' }).filter({ hasText: 'passed' }).first().click()
+      await page.keyboard.press('v')
+      await rows
+        .filter({ hasText: /verified(?! by override)/ })
+        .nth(1)
+        .waitFor()
+      await shot('11-bulk')
     })
 
     it('says nothing on the browser console all the way', () => {
