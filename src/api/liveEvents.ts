@@ -49,8 +49,10 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       } as const
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
-      if (event.what === 'verdicts')
+      if (event.what === 'verdicts') {
         void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
+        void client.invalidateQueries({ queryKey: ['relatives'] })
+      }
       return
     }
     case 'closed':

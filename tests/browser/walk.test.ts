@@ -255,8 +255,8 @@ describe.skipIf(chromiumPath === null)(
     it('certifies selected candidates of the shortlist, after which one key verifies', async () => {
       await page.getByRole('link', { name: 'First look' }).first().click()
       await page.getByRole('heading', { level: 1, name: 'First look' }).waitFor()
-      await page.getByRole('checkbox', { name: 'Select rank 3' }).click()
-      await page.getByRole('checkbox', { name: 'Select rank 5' }).click({ modifiers: ['Shift'] })
+      await page.getByRole('checkbox', { name: 'Select rank 3', exact: true }).click()
+      await page.getByRole('checkbox', { name: 'Select rank 5', exact: true }).click({ modifiers: ['Shift'] })
       await page.getByRole('button', { name: 'Certify the 3 selected' }).click()
       const rows = page.getByRole('row')
       const passed = rows.filter({ hasText: 'passed' })

@@ -3,9 +3,12 @@ import { tmpdir } from 'node:os'
 import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { openDataSource } from '../../server/data-source.ts'
+import { CertificateRecord } from '../../server/entities/certificate.ts'
+import { Certification } from '../../server/entities/certification.ts'
+import { CertificationTask } from '../../server/entities/certificationTask.ts'
 import { Search } from '../../server/entities/search.ts'
 import { rankedFinds } from '../../server/services/finds.ts'
-import { startServerProcess } from './support/serverProcess.ts'
+import { startProcess, startServerProcess } from './support/serverProcess.ts'
 
 const budget = 240
 const search = {
@@ -73,5 +76,48 @@ describe('a search whose server is killed', () => {
     expect(undisturbed.progress.evaluations).toBe(budget)
     expect(undisturbed.finds).toHaveLength(30)
     expect(killed).toEqual(undisturbed)
+  }, 240_000)
+})
+
+describe('a request for many certificates whose server is killed', () => {
+  it('goes on at the next start with those that were left, and makes none twice', async () => {
+    const size = 16
+    const place = join(folder, 'certificates')
+    const work = () => startProcess(place, 'certificationProcess.ts', [String(size)])
+    const done = (lines: readonly string[]) =>
+      lines.map((line) => line.split(' ')).map(([, made]) => Number(made))
+    const read = async () => {
+      const source = await openDataSource(join(place, 'tessellary.sqlite'))
+      try {
+        const [request] = await source.manager.find(Certification)
+        return {
+          request,
+          certificates: await source.manager.find(CertificateRecord),
+          tasks: await source.manager.find(CertificationTask, { order: { place: 'ASC' } }),
+        }
+      } finally {
+        await source.destroy()
+      }
+    }
+
+    const victim = work()
+    await victim.until((lines) => done(lines).some((made) => made >= 3))
+    await victim.end('SIGKILL')
+    const before = await read()
+    expect(before.request.state).toBe('running')
+    expect(before.certificates.length).toBeGreaterThanOrEqual(3)
+    expect(before.certificates.length).toBeLessThan(size)
+
+    const heir = work()
+    await heir.until((lines) => lines.some((line) => line.startsWith('finished')))
+    expect(Math.min(...done(heir.lines))).toBeGreaterThanOrEqual(before.certificates.length)
+    await heir.end('SIGTERM')
+    const after = await read()
+    expect(after.request).toMatchObject({ state: 'finished', leaseOwner: null })
+    expect(after.tasks.map(({ state }) => state)).toEqual(Array.from({ length: size }, () => 'passed'))
+    expect(new Set(after.certificates.map(({ candidateKey }) => candidateKey)).size).toBe(size)
+    expect(after.certificates).toHaveLength(size)
+    const kept = new Set(after.certificates.map(({ id }) => id))
+    expect(before.certificates.every(({ id }) => kept.has(id))).toBe(true)
   }, 240_000)
 })

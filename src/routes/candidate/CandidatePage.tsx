@@ -18,6 +18,7 @@ import { DivisorTable } from './DivisorTable.tsx'
 import { HighlightLine } from './HighlightLine.tsx'
 import { IntersectionTable } from './IntersectionTable.tsx'
 import { Provenance } from './Provenance.tsx'
+import { RelativesSection } from './RelativesSection.tsx'
 import { SpectrumSection } from './SpectrumSection.tsx'
 import { Steps } from './Steps.tsx'
 import { TriangleTable } from './TriangleTable.tsx'
@@ -69,6 +70,11 @@ export function CandidatePage() {
             campaign={campaign?.id ?? null}
             candidate={detail.key}
             appearance={appearance}
+          />
+          <RelativesSection
+            key={`relatives-${detail.key}`}
+            campaign={campaign?.id ?? null}
+            candidate={detail.key}
           />
           {campaign && <Provenance campaign={campaign.id} candidate={detail.key} record={record} />}
         </>

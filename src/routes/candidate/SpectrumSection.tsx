@@ -25,11 +25,7 @@ export function SpectrumSection({ geometry }: { geometry: CandidateGeometry }) {
           retry={() => void spectra.refetch()}
         />
       ) : (
-        <div
-          role="status"
-          aria-busy={seen}
-          className="grid h-72 place-items-center border text-soft"
-        >
+        <div role="status" aria-busy={seen} className="grid h-72 place-items-center border text-soft">
           Computing all {geometry.polytope.points - 4} eigenvalues…
         </div>
       )}

@@ -4,7 +4,7 @@ import { fileURLToPath } from 'node:url'
 
 const root = fileURLToPath(new URL('../../..', import.meta.url))
 
-/** A server in a process of its own (see searchProcess.ts), with the lines it reports. */
+/** A server in a process of its own, with the lines it reports. */
 export interface ServerProcess {
   readonly lines: readonly string[]
   /** Resolves when the lines fit; rejects when the process ends first. */
@@ -24,15 +24,16 @@ export function startServerProcess(
   search: { readonly polytope: string; readonly rule: string; readonly settings: SearchSettings },
 ): ServerProcess {
   const { polytope, rule, settings } = search
-  const child = spawn(
-    process.execPath,
-    ['--import', 'tsx', 'tests/server/support/searchProcess.ts', polytope, rule, JSON.stringify(settings)],
-    {
-      cwd: root,
-      env: { PATH: process.env.PATH, DATA_DIR: folder, WORKERS: '2', LOG_LEVEL: 'silent', NODE_ENV: 'test' },
-      stdio: ['ignore', 'pipe', 'inherit'],
-    },
-  )
+  return startProcess(folder, 'searchProcess.ts', [polytope, rule, JSON.stringify(settings)])
+}
+
+/** Runs a script of this folder as a server process. */
+export function startProcess(folder: string, script: string, words: readonly string[]): ServerProcess {
+  const child = spawn(process.execPath, ['--import', 'tsx', `tests/server/support/${script}`, ...words], {
+    cwd: root,
+    env: { PATH: process.env.PATH, DATA_DIR: folder, WORKERS: '2', LOG_LEVEL: 'silent', NODE_ENV: 'test' },
+    stdio: ['ignore', 'pipe', 'inherit'],
+  })
   // Also when the test that started it fails.
   const kill = () => child.kill('SIGKILL')
   process.once('exit', kill)
