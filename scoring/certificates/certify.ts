@@ -4,6 +4,7 @@ import { scoringHash } from '../rules/hash.ts'
 import { engineVersion } from '../version.ts'
 import { fastClaims, type CertificateRequest } from './fastClaims.ts'
 import { notCertified } from './notCertified.ts'
+import { checkScore } from './scoreChecks.ts'
 import type { Certificate } from './schema.ts'
 
 export type { CertificateRequest }
@@ -21,7 +22,9 @@ export type { CertificateRequest }
 export function certify(request: CertificateRequest, clock: () => number = () => 0): Certificate {
   const { claims, rule, heightsReplaced, units } = fastClaims(request)
   const { checks, certified } = independentRoad(claims, clock)
-  const list = checks.list()
+  const { score, favourable } = claims.numbers
+  if (rule && score) checkScore(rule, score, certified, claims.candidateKey, checks)
+  const list = checks.list(rule ? undefined : 'score')
   return {
     schema: 'tessellary.certificate/1',
     engineVersion,
@@ -38,7 +41,7 @@ export function certify(request: CertificateRequest, clock: () => number = () =>
     units,
     passed: list.every(({ result }) => result === 'pass'),
     checks: list,
-    notCertified: notCertified(claims.numbers.favourable),
+    notCertified: notCertified(favourable, rule),
     numbers: {
       ...claims.numbers,
       simplices: certified.fan?.simplices.map(four) ?? null,

@@ -15,6 +15,7 @@ import type { Candidate } from '../observables/candidate.ts'
 import { evaluateRule } from '../rules/evaluate.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import type { CertificateNumbers } from './schema.ts'
+import { plainScore } from './scoreChecks.ts'
 
 /** What is to be certified. */
 export interface CertificateRequest {
@@ -94,6 +95,8 @@ function numbersOf(candidate: Candidate, rule: CheckedRule | null): CertificateN
   const same = Int32Array.from({ length: polytope.pointCount }, (_, p) => p)
   return {
     facets: polytope.facetCount,
+    faces: { edges: polytope.edges.length, twoFaces: polytope.twoFaces.length },
+    normalisedVolumes: { ...candidate.normalisedVolumes() },
     latticePoints: polytope.latticePoints,
     dualLatticePoints: polytope.dualLatticePoints,
     hodge: { ...polytope.hodge },
@@ -118,19 +121,7 @@ function numbersOf(candidate: Candidate, rule: CheckedRule | null): CertificateN
       basis: [...basis],
       basisSpectrum: [...eigenvalues],
     },
-    score: rule && mutableScore(scoreEntry(evaluateRule(rule, candidate), rule)),
-  }
-}
-
-/** A copy without the readonly marks. */
-export function mutableScore(entry: ReturnType<typeof scoreEntry>): NonNullable<CertificateNumbers['score']> {
-  const { infeasible, ...rest } = entry
-  return {
-    ...rest,
-    report: { ...entry.report },
-    ...(infeasible && {
-      infeasible: { ...infeasible, failed: infeasible.failed.map((part) => ({ ...part })) },
-    }),
+    score: rule && plainScore(scoreEntry(evaluateRule(rule, candidate), rule)),
   }
 }
 

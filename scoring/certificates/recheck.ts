@@ -8,6 +8,7 @@ import type { CheckedRule } from '../rules/checkedRule.ts'
 import { scoringHash } from '../rules/hash.ts'
 import { engineVersion } from '../version.ts'
 import { notCertified } from './notCertified.ts'
+import { checkScore } from './scoreChecks.ts'
 import { certificateSchema, type Certificate } from './schema.ts'
 
 /** What re-checking a certificate file found. */
@@ -47,10 +48,12 @@ export function recheck(raw: unknown, clock: () => number = () => 0): Recheck {
   const problem = (code: string, path: string, message: string): void => {
     problems.push({ code: `certificate.${code}`, message, path })
   }
-  checkFrame(certificate, problem)
-  checkRule(certificate, problem)
-  const { checks } = independentRoad(certificate, clock)
-  const list = checks.list()
+  const rule = checkRule(certificate, problem)
+  checkFrame(certificate, rule, problem)
+  const { checks, certified } = independentRoad(certificate, clock)
+  const { score } = certificate.numbers
+  if (rule && score) checkScore(rule, score, certified, certificate.candidateKey, checks)
+  const list = checks.list(certificate.rule === null ? 'score' : undefined)
   compareVerdicts(certificate, list, problem)
   return {
     passed: problems.length === 0 && list.every(({ result }) => result === 'pass'),
@@ -61,7 +64,7 @@ export function recheck(raw: unknown, clock: () => number = () => 0): Recheck {
 
 type Report = (code: string, path: string, message: string) => void
 
-function checkFrame(certificate: Certificate, problem: Report): void {
+function checkFrame(certificate: Certificate, rule: CheckedRule | null, problem: Report): void {
   const expected = [
     ['other-engine', 'engineVersion', engineVersion],
     ['other-certifier', 'certifierVersion', certifierVersion],
@@ -77,18 +80,18 @@ function checkFrame(certificate: Certificate, problem: Report): void {
       )
   }
   const stated = certificate.notCertified.map(({ what }) => what)
-  const own = notCertified(certificate.numbers.favourable).map(({ what }) => what)
+  const own = notCertified(certificate.numbers.favourable, rule).map(({ what }) => what)
   const hidden = own.find((what) => !stated.includes(what))
   if (hidden !== undefined) problem('reservation-missing', 'notCertified', `It does not list: ${hidden}.`)
 }
 
-/** The rule of the file, with its hash; undefined when there is none or it cannot be used. */
-function checkRule(certificate: Certificate, problem: Report): CheckedRule | undefined {
+/** The rule of the file, with its hash; null when there is none or it cannot be used. */
+function checkRule(certificate: Certificate, problem: Report): CheckedRule | null {
   const { rule: text, scoringHash: hash } = certificate
   if ((text === null) !== (hash === null) || (text === null) !== (certificate.numbers.score === null)) {
     problem('rule-incomplete', 'rule', 'Rule, scoring hash and score must all be there, or none of them.')
   }
-  if (text === null) return undefined
+  if (text === null) return null
   try {
     const rule = ruleOfInput(text)
     const own = scoringHash(rule, engineVersion)
@@ -98,7 +101,7 @@ function checkRule(certificate: Certificate, problem: Report): CheckedRule | und
     if (!(error instanceof InputError)) throw error
     problem('rule-broken', 'rule', error.message)
   }
-  return undefined
+  return null
 }
 
 /** The verdicts in the file must be those found again. */

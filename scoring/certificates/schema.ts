@@ -24,6 +24,8 @@ const score = z.strictObject({
 
 const numbers = z.strictObject({
   facets: index,
+  faces: z.strictObject({ edges: index, twoFaces: index }),
+  normalisedVolumes: z.strictObject({ own: index, dual: index }),
   latticePoints: index,
   dualLatticePoints: index,
   hodge: z.strictObject({ h11: index, h21: index, euler: int }),

@@ -5,6 +5,8 @@ const entry = (group: CheckGroup, title: string) => ({ group, title })
 /** Every check of a certificate in its order, with its stable id. */
 export const catalogue = {
   reflexive: entry('polytope', 'The vertices are those of a reflexive polytope; number of facets'),
+  faces: entry('polytope', 'Numbers of edges and 2-faces'),
+  'normalised-volumes': entry('polytope', 'Normalised volumes of the polytope and its dual'),
   'lattice-points': entry('polytope', 'Lattice points, the origin and the insides of facets included'),
   'dual-lattice-points': entry('polytope', 'Lattice points of the dual polytope'),
   points: entry('polytope', 'Points that carry divisors'),
@@ -39,6 +41,9 @@ export const catalogue = {
   'metric-differences': entry('metric', 'Field-space metric by central differences of K'),
   'lattice-basis': entry('metric', 'Lattice basis of the divisor classes'),
   'basis-spectrum': entry('metric', 'Field-space metric, basis spectrum, by full decomposition'),
+  score: entry('score', 'The score from certified numbers'),
+  hit: entry('score', 'Whether it is a hit'),
+  report: entry('score', 'The report’s columns'),
 } as const satisfies Record<string, { readonly group: CheckGroup; readonly title: string }>
 
 export type CheckId = keyof typeof catalogue

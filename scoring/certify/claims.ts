@@ -15,6 +15,8 @@ export interface Claims {
 
 export interface ClaimedNumbers {
   readonly facets: number
+  readonly faces: { readonly edges: number; readonly twoFaces: number }
+  readonly normalisedVolumes: { readonly own: number; readonly dual: number }
   readonly latticePoints: number
   readonly dualLatticePoints: number
   readonly hodge: { readonly h11: number; readonly h21: number; readonly euler: number }

@@ -96,7 +96,7 @@ export function checkMetric(
     const all = chosen.length === count ? 'all' : `${chosen.length} of ${count}`
     return {
       ...verdict,
-      note: `${verdict.note} Along ${all} eigenvectors and sums of two; three steps, halved each time, extrapolated; the last extrapolation moved it by ${error.toExponential(1)}. Shown are the largest.`,
+      note: `${verdict.note} Along ${all} eigenvectors and sums of two; steps e, e/2, e/4, extrapolated; the last extrapolation moved it by ${error.toExponential(1)}. Shown are the largest.`,
     }
   })
   const basis = checks.run('lattice-basis', () => {

@@ -34,6 +34,19 @@ export function checkPolytope(claims: Claims, checks: CheckList): CertifiedPolyt
   })
   if (reading === undefined) return undefined
   checks.run('polytope-key', () => equality(claims.polytopeKey, keyOfVertices(vertices)))
+  checks.run('faces', () =>
+    equality(
+      `${numbers.faces.edges}, ${numbers.faces.twoFaces}`,
+      `${reading.edges}, ${reading.twoFaces}`,
+      'Edges, 2-faces.',
+    ),
+  )
+  checks.run('normalised-volumes', () =>
+    equality(
+      `${numbers.normalisedVolumes.own}, ${numbers.normalisedVolumes.dual}`,
+      `${reading.volume}, ${reading.dualVolume}`,
+    ),
+  )
   checks.run('lattice-points', () => equality(numbers.latticePoints, reading.boundary.length + 1))
   checks.run('dual-lattice-points', () =>
     equality(numbers.dualLatticePoints, reading.dualBoundary.length + 1),

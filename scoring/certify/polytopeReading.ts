@@ -12,8 +12,11 @@ export interface PolytopeReading {
   /** Lattice points of the boundary with the facets through them and the dimension of their carrier. */
   readonly boundary: readonly BoundaryPoint[]
   readonly dualBoundary: readonly BoundaryPoint[]
-  /** Normalised volume. */
+  /** Normalised volumes. */
   readonly volume: number
+  readonly dualVolume: number
+  readonly edges: number
+  readonly twoFaces: number
   readonly hodge: { readonly h11: number; readonly h21: number; readonly euler: number }
   readonly favourable: boolean
 }
@@ -50,6 +53,9 @@ export function readPolytope(vertices: readonly Vector[]): PolytopeReading {
     boundary: own.boundary,
     dualBoundary: dual.boundary,
     volume: own.volume,
+    dualVolume: dual.volume,
+    edges: twoFaceCount(normals, vertices),
+    twoFaces: twoFaceCount(vertices, normals),
     hodge: { h11, h21, euler: 2 * (h11 - h21) },
     favourable: missed(own.boundary, normals) === 0,
   }
@@ -67,6 +73,19 @@ function boundaryOf(vertices: readonly Vector[], normals: readonly Vector[]) {
   })
   const volume = simplices.reduce((sum, simplex) => sum + simplexVolume(vertices, simplex), 0)
   return { boundary, volume }
+}
+
+/** Every 2-face is the intersection of just one pair of facets; the dual's 2-faces belong to the edges. */
+function twoFaceCount(vertices: readonly Vector[], normals: readonly Vector[]): number {
+  const onFacets = normals.map((normal) => vertices.filter((vertex) => pairing(normal, vertex) === -1))
+  let count = 0
+  onFacets.forEach((facet, a) => {
+    for (const other of onFacets.slice(a + 1)) {
+      const common = facet.filter((vertex) => other.includes(vertex))
+      if (common.length > 2 && rank(common) === 3) count++
+    }
+  })
+  return count
 }
 
 function hodgeNumber(boundary: readonly BoundaryPoint[], normals: readonly Vector[]): number {

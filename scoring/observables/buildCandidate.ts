@@ -10,8 +10,15 @@ import { referencePoint } from '../geometry/referencePoint.ts'
 import { reflexiveSections } from '../geometry/sections.ts'
 import { basisSpectrum, divisorSpectrum, topEigenvalue } from '../geometry/spectra.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
-import { pairNumbers, volumes } from '../geometry/volumes.ts'
+import { pairNumbers, volumes, type Volumes } from '../geometry/volumes.ts'
 import type { Candidate, Instantons } from './candidate.ts'
+
+export interface GivenStages extends Partial<
+  Pick<Candidate, 'numbers' | 'reference' | 'topEigenvalue' | 'divisorSpectrum' | 'basisSpectrum'>
+> {
+  /** Volumes of the threefold and its divisors; those of curves are products of their classes. */
+  readonly volumes?: () => Omit<Volumes, 'curves'>
+}
 
 const topologies = new WeakMap<Polytope, ReturnType<typeof divisorTopology>>()
 
@@ -21,14 +28,23 @@ const topologies = new WeakMap<Polytope, ReturnType<typeof divisorTopology>>()
  *
  * @param form normal form of the polytope
  * @param canonical the representative that gave the class key, on `form.polytope`
+ * @param given stages known from elsewhere, such as certified ones; the others follow from them
  */
-export function buildCandidate(form: NormalForm, canonical: TwoFaceClass, classKey: string): Candidate {
+export function buildCandidate(
+  form: NormalForm,
+  canonical: TwoFaceClass,
+  classKey: string,
+  given: GivenStages = {},
+): Candidate {
   const { polytope } = form
-  const numbers = once(() => intersectionNumbers(canonical))
+  const numbers = given.numbers ?? once(() => intersectionNumbers(canonical))
   const curves = once(() => curveRows(canonical, numbers()))
-  const reference = once(() => referencePoint(canonical, numbers(), curves()))
+  const reference = given.reference ?? once(() => referencePoint(canonical, numbers(), curves()))
   const pairs = once(() => pairNumbers(numbers(), reference().weights))
-  const volume = once(() => volumes(numbers(), curves(), reference().weights, pairs()))
+  const volume = once(() => ({
+    ...volumes(numbers(), curves(), reference().weights, pairs()),
+    ...given.volumes?.(),
+  }))
   return {
     polytope,
     symmetryOrder: form.automorphisms.length,
@@ -42,9 +58,9 @@ export function buildCandidate(form: NormalForm, canonical: TwoFaceClass, classK
     fibrations: once(() => fibrations(canonical, numbers())),
     reference,
     volumes: volume,
-    topEigenvalue: once(() => topEigenvalue(polytope, pairs(), volume()).value),
-    divisorSpectrum: once(() => divisorSpectrum(polytope, pairs(), volume())),
-    basisSpectrum: once(() => basisSpectrum(polytope, pairs(), volume())),
+    topEigenvalue: given.topEigenvalue ?? once(() => topEigenvalue(polytope, pairs(), volume()).value),
+    divisorSpectrum: given.divisorSpectrum ?? once(() => divisorSpectrum(polytope, pairs(), volume())),
+    basisSpectrum: given.basisSpectrum ?? once(() => basisSpectrum(polytope, pairs(), volume())),
     axions: lastOfEach((scale, instantons) =>
       polytope.favourable
         ? axionSector(polytope, pairs(), volume(), instantonDivisors(polytope, instantons), scale)
