@@ -124,6 +124,7 @@ export { evaluationInputSchema, evaluationParts, ruleOfInput } from './evaluatio
 
 // Certificates: the fast road's claims checked by an independent one.
 export { certify, type CertificateRequest } from './certificates/certify.ts'
+export { certificateRequest } from './certificates/requestOfInput.ts'
 export { recheck, type CertificateProblem, type Recheck } from './certificates/recheck.ts'
 export { certificateSchema, type Certificate } from './certificates/schema.ts'
 export { certifierVersion } from './certify/independentRoad.ts'

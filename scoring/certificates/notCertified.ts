@@ -6,7 +6,7 @@ import type { Certificate } from './schema.ts'
  * formula reads nothing but compared ones. A name stands for all that begin with it and a dot. Anything the
  * registry has beside these counts as not certified until it is listed here.
  */
-const certifiedNames = [
+export const certifiedNames: readonly string[] = [
   'favourable',
   'h11',
   'h21',

@@ -105,6 +105,38 @@ describe('evaluate', () => {
   })
 })
 
+describe('certify', () => {
+  const input = { weights: [1, 1, 1, 6, 9], side: 'fan', rule: 'score log10(metric.divisor.top)' }
+
+  it('makes a certificate, re-checks it, and tells a failure from a file that is none', async () => {
+    const made = await run('certify', inFile('quick.json', input), '--make')
+    expect([made.status, made.errors]).toEqual([0, []])
+    const certificate = JSON.parse(made.output) as { passed: boolean; numbers: { c2: number[] } }
+    expect(certificate).toMatchObject({ schema: 'tessellary.certificate/1', passed: true, caution })
+    const again = await run('certify', inFile('certificate.json', certificate))
+    expect([again.status, again.errors]).toEqual([0, []])
+    expect(JSON.parse(again.output)).toMatchObject({
+      schema: 'tessellary.recheck/1',
+      passed: true,
+      problems: [],
+    })
+
+    certificate.numbers.c2[0] += 12
+    const forged = await run('certify', inFile('forged.json', certificate))
+    expect([forged.status, (JSON.parse(forged.output) as { passed: boolean }).passed]).toEqual([1, false])
+    const other = await run('certify', inFile('other.json', input))
+    expect(other.status).toBe(2)
+    const truncated = join(folder, 'truncated.json')
+    writeFileSync(truncated, made.output.slice(0, 3000))
+    const cut = await run('certify', truncated)
+    expect([cut.status, cut.output]).toEqual([2, ''])
+    expect(cut.errors).toEqual([expect.stringMatching(/^input\.not-json: /)])
+    const unfine = { ...input, heights: { points: [[1, 0, 0, 0]], values: [0] } }
+    const bad = await run('certify', inFile('unfine.json', unfine), '--make')
+    expect([bad.status, bad.output, bad.errors.length]).toEqual([2, '', 1])
+  })
+})
+
 describe('search', () => {
   const spec = {
     schema: 'tessellary.search/1',
