@@ -9,7 +9,7 @@ const metric = {
 }
 
 const DIVISOR_BASIS =
-  'over all prime toric divisors, free of a choice of basis; L = -G (dtau dtau + dtheta dtheta), theta of period 1'
+  'over all prime toric divisors (the toric part of H^{1,1}), free of a choice of basis; L = -G (dtau dtau + dtheta dtheta), theta of period 1'
 const LATTICE_BASIS =
   'in the lattice basis of all points but the first four that span; depends on that choice, for comparison with the literature'
 

@@ -24,7 +24,9 @@ describe('rules about components, where a divisor is two projective planes', () 
   it('count rigid and del Pezzo components apart from the divisors', () => {
     expect(valueOf('r4-0797', 'favourable')).toBe(false)
     expect(valueOf('r4-0797', 'count(c in components : true) == h11 + 4')).toBe(true)
-    expect(valueOf('r4-0797', 'count(c in components : c.cubic == 9 and c.c2 == -6 and c.euler == 3)')).toBe(2)
+    expect(valueOf('r4-0797', 'count(c in components : c.cubic == 9 and c.c2 == -6 and c.euler == 3)')).toBe(
+      2,
+    )
     expect(valueOf('r4-0797', 'count(c in components where c.delPezzo : c.delPezzoDegree == 9)')).toBe(2)
     expect(valueOf('r4-0797', 'count(d in divisors : d.delPezzo)')).toBe(0)
     expect(valueOf('r4-0797', 'count(c in components where c.rigid : c.whole.components > 1)')).toBe(2)
