@@ -34,7 +34,7 @@ export function heightsOfSimplices(
   throw new InputError(
     'simplices.not-regular',
     'The triangulation is not regular: no heights make it convex at these triangles all at once, as their ' +
-      `circuits add up to zero: ${answer.walls.map((wall, n) => termOf(wall, answer.weights[n], names)).join('; ')}.`,
+      `circuits add up to zero: ${inShort(answer.walls.map((wall, n) => termOf(wall, answer.weights[n], names)))}.`,
     'simplices',
     answer.walls.map(({ vertices, opposite }, n) => ({
       triangle: [...vertices],
@@ -42,6 +42,12 @@ export function heightsOfSimplices(
       weight: String(answer.weights[n]),
     })),
   )
+}
+
+/** Contradictions on large polytopes can take a hundred circuits; the error's `found` has them all. */
+export function inShort(terms: readonly string[], most = 12): string {
+  const more = terms.length - most
+  return `${terms.slice(0, most).join('; ')}${more > 0 ? `; and ${more} more` : ''}`
 }
 
 function termOf({ vertices, opposite }: FanWall, weight: bigint, names: PointNames): string {

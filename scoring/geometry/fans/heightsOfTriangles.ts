@@ -3,7 +3,7 @@ import { classFromTriangles } from '../classFromTriangles.ts'
 import { listed, type PointNames } from '../pointNames.ts'
 import type { Polytope } from '../polytope.ts'
 import { isRegular } from '../regularity.ts'
-import type { ProvedTriangulation } from './heightsOfSimplices.ts'
+import { inShort, type ProvedTriangulation } from './heightsOfSimplices.ts'
 
 /**
  * Heights for a class that is given by the triangles of its 2-faces, found by linear feasibility, exactly. They
@@ -38,7 +38,7 @@ export function heightsOfTriangles(
   throw new InputError(
     'triangles.not-regular',
     'The triangles are not regular: no heights make the 2-faces convex at these edges all at once, as their ' +
-      `circuits add up to zero: ${edges.join('; ')}.`,
+      `circuits add up to zero: ${inShort(edges)}.`,
     'triangles',
     answer.edges.map((edge, n) => ({ edge: [...edge], weight: String(answer.weights[n]) })),
   )
