@@ -140,17 +140,30 @@ class Reader {
     const given = this.shaped(at, findShape)
     if (!given || this.found.has(given.classKey)) return
     this.found.add(given.classKey)
-    const { polytopeKey, classKey, heights, vertices } = given
+    this.normal(at, { ...given, candidateKey: given.classKey })
+  }
+
+  /** Heights that refer to the points of the polytope in normal form, in its own order, as stored ones do. */
+  private normal(
+    at: Node,
+    given: {
+      readonly polytopeKey: string
+      readonly candidateKey: string
+      readonly vertices?: number[][]
+      readonly heights: number[]
+    },
+    name: string | null = null,
+  ): void {
+    const { polytopeKey, candidateKey, vertices, heights } = given
     this.candidates.push({
       line: at.line,
       entry: at.path,
-      name: null,
-      // Heights of a find refer to the points of the normal form, in its own order.
+      name,
       polytope: { kind: 'key', key: polytopeKey, ...(vertices && { vertices }) },
       points: null,
       triangulation: { kind: 'heights', values: heights },
       naming: 0,
-      claims: { polytopeKey, candidateKey: classKey },
+      claims: { polytopeKey, candidateKey },
       places: this.placesOf(at, { vertices, heights }),
     })
   }
@@ -183,7 +196,7 @@ class Reader {
       }
       const candidate = full.get(row.candidateKey)
       const title = `${name}, rank ${row.rank}`
-      if (candidate) this.complete(node, candidate, title)
+      if (candidate) this.normal(node, candidate, title)
       else {
         this.candidates.push({
           line: node.line,
@@ -210,13 +223,12 @@ class Reader {
       readonly points: number[][]
       readonly heights: number[]
     },
-    name: string | null = null,
   ): void {
     const { polytopeKey, candidateKey, vertices, points, heights } = given
     this.candidates.push({
       line: at.line,
       entry: at.path,
-      name,
+      name: null,
       polytope: { kind: 'points', rows: vertices },
       points,
       triangulation: { kind: 'heights', values: heights },

@@ -69,7 +69,6 @@ export const shortlistShape = z.looseObject({
         candidateKey: key,
         polytopeKey: key,
         vertices: matrix,
-        points: matrix,
         heights: integers,
       }),
     )

@@ -11,6 +11,9 @@ export const conventions = [
   'h11 is counted on the side whose points become divisors. Candidate and polytope keys are permanent addresses.',
 ]
 
+const heightsConvention =
+  'Vertices are in normal-form coordinates; heights refer to the points of the polytope in normal form, in the order of its page.'
+
 /** Units of the fixed columns; report columns carry the unit of their expression in the rule. */
 const units = {
   rank: '1 is the best',
@@ -35,15 +38,30 @@ export function fileName(shortlist: ShortlistDetail, extension: 'csv' | 'json'):
   return `shortlist-${words.replace(/^-|-$/g, '') || 'export'}.${extension}`
 }
 
+/** What a candidate is made from: enough to import it elsewhere. */
+export interface ExportedCandidate {
+  readonly candidateKey: string
+  readonly polytopeKey: string
+  /** In normal-form coordinates. */
+  readonly vertices: readonly (readonly number[])[]
+  /** On the points of the polytope in normal form, in the order in which its page lists them. */
+  readonly heights: readonly number[]
+}
+
 /** Re-importable JSON with schema version, units and conventions. */
-export function shortlistDocument(shortlist: ShortlistDetail, version: string): object {
+export function shortlistDocument(
+  shortlist: ShortlistDetail,
+  candidates: readonly ExportedCandidate[],
+  version: string,
+): object {
   return {
     schema: 'tessellary.shortlist/1',
     software: { name: 'Tessellary', version, engine: shortlist.engineVersion },
     caution,
-    conventions,
+    conventions: [...conventions, heightsConvention],
     units,
     shortlist,
+    candidates,
   }
 }
 

@@ -10,7 +10,7 @@ import { endpoint } from '../http/endpoint.ts'
 import { emptyTally } from '../presenters/campaigns.ts'
 import { fileName, shortlistDocument, shortlistTable } from '../presenters/shortlistExports.ts'
 import { presentShortlistSummary } from '../presenters/shortlists.ts'
-import { createShortlist, listShortlists, readShortlist } from '../services/shortlists.ts'
+import { createShortlist, exportedCandidates, listShortlists, readShortlist } from '../services/shortlists.ts'
 import { tallyShortlists } from '../services/verdicts.ts'
 
 export function shortlistRoutes(app: Express, context: ServerContext): void {
@@ -62,7 +62,8 @@ export function shortlistRoutes(app: Express, context: ServerContext): void {
     access: 'exports.read',
     handle: async ({ campaign, params, response }) => {
       const shortlist = await readShortlist(manager, campaign.id, params.shortlist)
-      const document = shortlistDocument(shortlist, context.version)
+      const candidates = await exportedCandidates(manager, shortlist.id)
+      const document = shortlistDocument(shortlist, candidates, context.version)
       response.attachment(fileName(shortlist, 'json')).json(document)
     },
   })

@@ -6,6 +6,7 @@ import { Search } from '../entities/search.ts'
 import { Shortlist } from '../entities/shortlist.ts'
 import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { emptyTally } from '../presenters/campaigns.ts'
+import type { ExportedCandidate } from '../presenters/shortlistExports.ts'
 import { presentShortlist } from '../presenters/shortlists.ts'
 import { notFound, unprocessable } from '../problems.ts'
 import { certificateMarks } from './certificates.ts'
@@ -52,6 +53,30 @@ export async function readShortlist(
     certificateOf: await certificateMarks(manager, campaignId, shortlist.targetVersion, keys),
     names: await ownNames(manager, { campaignId }, polytopes),
   })
+}
+
+/** The candidates of a shortlist as an export carries them, best first. */
+export async function exportedCandidates(
+  manager: EntityManager,
+  shortlistId: string,
+): Promise<ExportedCandidate[]> {
+  const entries = await manager.find(ShortlistEntry, {
+    where: { shortlistId },
+    relations: { candidate: { polytope: true } },
+    order: { rank: 'ASC' },
+  })
+  return entries.flatMap(({ candidate }) =>
+    candidate?.polytope
+      ? [
+          {
+            candidateKey: candidate.key,
+            polytopeKey: candidate.polytopeKey,
+            vertices: candidate.polytope.coordinates,
+            heights: candidate.heights,
+          },
+        ]
+      : [],
+  )
 }
 
 /** Freezes the best distinct candidates of searches of one target version, in the order of the language. */

@@ -231,6 +231,21 @@ describe('a shortlist of imported candidates', () => {
     expect(again.imported[0].known).toBe('imported')
   })
 
+  it('is exported with all that another campaign needs to import it', async () => {
+    const { text } = await reviewer.get(path(`/shortlists/${list.id}/export.json`)).expect(200)
+    const elsewhere = await openTestServer()
+    const agent = await elsewhere.signIn('lead')
+    const { body } = await agent
+      .post(`/api/campaigns/${elsewhere.campaignId}/imported-candidates`)
+      .send({ text })
+      .expect(201)
+    const { imported, problems, format } = body as CandidateImportReport
+    expect([problems, format]).toEqual([[], 'tessellary.shortlist/1, JSON'])
+    expect(imported.map(({ key }) => key)).toEqual(list.rows.map(({ candidateKey }) => candidateKey))
+    expect(imported.every(({ known }) => known === null)).toBe(true)
+    await elsewhere.close()
+  })
+
   it('survives that an import is taken off the list', async () => {
     const { candidateKey } = list.rows[0]
     await investigator.delete(path(`/imported-candidates/${candidateKey}`)).expect(204)

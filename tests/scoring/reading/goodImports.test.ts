@@ -238,7 +238,13 @@ describe('several candidates', () => {
   })
 
   it('come from the export of a shortlist: complete where it carries them, by their addresses elsewhere', () => {
-    const { polytopeKey, classKey: candidateKey, heights } = evaluated
+    const placed = placeCandidate(readCandidates(JSON.stringify(evaluated)).candidates[0]).placed
+    if (!placed) throw new Error('not placed')
+    const { polytope, key: polytopeKey } = placed.form
+    const { candidateKey, heights } = placed
+    const vertices = Array.from({ length: polytope.vertexCount }, (_, v) => [
+      ...polytope.points.subarray(4 * v, 4 * v + 4),
+    ])
     const rowsOfList = [
       { rank: 1, candidateKey, polytopeKey },
       { rank: 2, candidateKey: '0'.repeat(32), polytopeKey },
@@ -246,7 +252,7 @@ describe('several candidates', () => {
     const document = {
       schema: 'tessellary.shortlist/1',
       shortlist: { name: 'Best', rows: rowsOfList },
-      candidates: [{ candidateKey, polytopeKey, vertices: points, points, heights }],
+      candidates: [{ candidateKey, polytopeKey, vertices, heights }],
     }
     const { candidates } = readCandidates(JSON.stringify(document, null, 1))
     expect(candidates.map(({ name, triangulation }) => [name, triangulation.kind])).toEqual([
