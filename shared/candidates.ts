@@ -135,3 +135,21 @@ export const candidateRecordSchema = z.object({
     .nullable(),
 })
 export type CandidateRecord = z.infer<typeof candidateRecordSchema>
+
+/**
+ * GET /api/campaigns/:campaign/candidates/:key/score?version=ID: what a target version says of the candidate, be it in
+ * a shortlist or not.
+ */
+export const candidateScoreSchema = candidateRecordSchema.shape.appearances.element.pick({
+  targetId: true,
+  targetName: true,
+  targetVersion: true,
+  targetVersionId: true,
+  scoringHash: true,
+  engineVersion: true,
+  outcome: true,
+  certificate: true,
+})
+export type CandidateScore = z.infer<typeof candidateScoreSchema>
+
+export const candidateScoreQuerySchema = z.object({ version: z.string() })

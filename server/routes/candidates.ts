@@ -3,6 +3,8 @@ import { z } from 'zod'
 import {
   candidateGeometrySchema,
   candidateRecordSchema,
+  candidateScoreQuerySchema,
+  candidateScoreSchema,
   candidateSpectraSchema,
   classPictureSchema,
   classPicturesQuerySchema,
@@ -12,6 +14,7 @@ import { giveVerdictSchema, verdictSchema } from '../../shared/verdicts.ts'
 import type { ServerContext } from '../context.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
+import { readCandidateScore } from '../services/candidateScores.ts'
 import { readCandidateRecord } from '../services/candidates.ts'
 import { readCandidateGeometry, readCandidateSpectra, readClassPictures } from '../services/geometry.ts'
 import { readRelatives } from '../services/relatives.ts'
@@ -65,6 +68,16 @@ export function candidateRoutes(app: Express, context: ServerContext): void {
     access: 'campaign.read',
     answer: candidateRecordSchema,
     handle: ({ campaign, params }) => readCandidateRecord(context.source.manager, campaign.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/campaigns/:campaign/candidates/:key/score',
+    access: 'previews.run',
+    query: candidateScoreQuerySchema,
+    answer: candidateScoreSchema,
+    handle: ({ campaign, params, query }) =>
+      readCandidateScore(context, campaign.id, params.key, query.version),
   })
 
   endpoint(app, context, {

@@ -2,6 +2,7 @@ import { queryOptions } from '@tanstack/react-query'
 import {
   candidateGeometrySchema,
   candidateRecordSchema,
+  candidateScoreSchema,
   candidateSpectraSchema,
 } from '../../shared/candidates.ts'
 import { request } from './request.ts'
@@ -21,6 +22,18 @@ export const candidateSpectraQuery = (key: string) =>
     queryFn: ({ signal }) =>
       request(`/candidates/${key}/spectra`, { schema: candidateSpectraSchema, signal }),
     staleTime: Infinity,
+  })
+
+/** What a target version says of a candidate; asked for again when verdicts or certificates of it change. */
+export const candidateScoreQuery = (campaign: string, key: string, version: string) =>
+  queryOptions({
+    queryKey: ['candidate-record', campaign, key, 'score', version] as const,
+    queryFn: ({ signal }) =>
+      request(`/campaigns/${campaign}/candidates/${key}/score`, {
+        schema: candidateScoreSchema,
+        query: { version },
+        signal,
+      }),
   })
 
 /** What one campaign knows of a candidate. */

@@ -117,7 +117,7 @@ describe.skipIf(chromiumPath === null)('imports, in a browser', { timeout: 120_0
   it('takes candidates from a file', async () => {
     await open('Candidates')
     const inputs = [1, 2].map((seed) => ({
-      weights: [1, 1, 2, 2, 6],
+      weights: [3, 3, 4, 5, 7],
       side: 'newton',
       heights: { seed, noise: 0.4 },
     }))
@@ -141,6 +141,13 @@ describe.skipIf(chromiumPath === null)('imports, in a browser', { timeout: 120_0
       data: { name: 'Volumes', text: 'score volume\nreport h11' },
     })
     expect(made.status()).toBe(201)
+    // Without a shortlist first: on the dossier, by the target one chooses there.
+    await page.goto(`${campaign()}/imported`)
+    await page.getByRole('link', { name: 'octic' }).click()
+    await page.getByLabel('Score by the target').waitFor()
+    await page.getByRole('button', { name: /^Undecided/ }).click()
+    await page.getByRole('list', { name: /^Verdicts/ }).waitFor()
+    await shot('9-dossier')
     await page.goto(`${campaign()}/imported`)
     await page.getByRole('button', { name: 'Make a shortlist' }).click()
     await dialog().getByLabel('Name').fill('From elsewhere')

@@ -40,7 +40,7 @@ const quintic = '1 0 0 0\n0 1 0 0\n0 0 1 0\n0 0 0 1\n-1 -1 -1 -1'
 const octic = '1 0 0 0\n0 1 0 0\n0 0 1 0\n0 0 0 1\n-2 -2 -2 -1\n-1 -1 -1 0'
 
 /** A polytope with several classes; heights of two of them, from the headless evaluation. */
-const input = { weights: [1, 1, 2, 2, 6], side: 'newton' } as const
+const input = { weights: [3, 3, 4, 5, 7], side: 'newton' } as const
 const evaluations = [1, 2].map((seed) => evaluateInput({ ...input, heights: { seed, noise: 0.4 }, show: [] }))
 
 describe('imported candidates', () => {
@@ -150,7 +150,7 @@ describe('imported candidates', () => {
       .attach('file', Buffer.from(JSON.stringify({ ...input, heights: { seed: 5 } })), 'häufen.json')
       .expect(201)
     expect((body as CandidateImportReport).imported).toEqual([
-      expect.objectContaining({ name: 'from the file', h11: 128 }),
+      expect.objectContaining({ name: 'from the file', h11: 28 }),
     ])
     const { body: page } = await reviewer.get(path('/imported-candidates?text=häufen')).expect(200)
     expect(page.rows.map(({ source }: { source: string }) => source)).toEqual(['häufen.json'])
@@ -229,6 +229,18 @@ describe('a shortlist of imported candidates', () => {
     )
     expect(twice.imported[0]).toMatchObject({ known: 'imported', verdicts: [{ value: 'rejected' }] })
     expect(again.imported[0].known).toBe('imported')
+  })
+
+  it('is not needed to learn a score and decide: a target version scores any candidate of the campaign', async () => {
+    const [{ candidateKey, outcome }] = list.rows
+    const query = `/candidates/${candidateKey}/score?version=${versionId}`
+    const { body } = await reviewer.get(path(query)).expect(200)
+    expect(body).toMatchObject({ targetName: 'Volumes', targetVersionId: versionId, outcome })
+    const other = await openTestServer()
+    const agent = await other.signIn('lead')
+    await agent.get(`/api/campaigns/${other.campaignId}${query}`).expect(404)
+    await other.close()
+    await reviewer.get(path(`/candidates/${candidateKey}/score?version=none`)).expect(404)
   })
 
   it('is exported with all that another campaign needs to import it', async () => {

@@ -78,6 +78,7 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/campaigns/:campaign/shortlists/:shortlist/export.csv', everyone],
   ['GET /api/campaigns/:campaign/shortlists/:shortlist/export.json', everyone],
   ['GET /api/campaigns/:campaign/candidates/:key', everyone],
+  ['GET /api/campaigns/:campaign/candidates/:key/score', everyone],
   ['POST /api/campaigns/:campaign/candidates/:key/verdicts', judges],
   ['GET /api/campaigns/:campaign/candidates/:key/certificates', everyone],
   ['GET /api/campaigns/:campaign/certifications', everyone],

@@ -2,7 +2,7 @@ import { useState } from 'react'
 import { type UseQueryResult } from '@tanstack/react-query'
 import { Check, Circle, X } from 'lucide-react'
 import { toast } from 'sonner'
-import { type CandidateRecord } from '../../../shared/candidates.ts'
+import { type CandidateRecord, type CandidateScore } from '../../../shared/candidates.ts'
 import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
@@ -16,10 +16,13 @@ import { HitMark, Outcome, ReportCell } from '../../components/ui/Outcome.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
+import { ScoreUnderTarget } from './ScoreUnderTarget.tsx'
 import { useShortcut } from '../../lib/shortcuts.ts'
 import { formatTime } from '../../lib/numbers.ts'
 
 type Appearance = CandidateRecord['appearances'][number]
+/** A scoring to decide on: a place in a shortlist, or the score under a target. */
+type Scoring = CandidateScore | Appearance
 const shapes = { verified: Check, rejected: X, undecided: Circle }
 const actions: Record<VerdictValue, [word: string, key: string]> = {
   verified: ['Verify…', 'v'],
@@ -59,10 +62,19 @@ export function Verdicts({
                   />
                 </>
               ) : (
-                <p className="prose-line text-soft">
-                  The candidate is in no shortlist of this campaign, so there is no scoring to decide on. Make
-                  a shortlist from a search that found it.
-                </p>
+                <ScoreUnderTarget campaign={campaign} candidate={candidate}>
+                  {(scoring) => (
+                    <>
+                      <Score appearance={scoring} />
+                      <Decide
+                        campaign={campaign}
+                        candidate={candidate}
+                        appearance={scoring}
+                        current={verdicts.find(({ targetId }) => targetId === scoring.targetId)}
+                      />
+                    </>
+                  )}
+                </ScoreUnderTarget>
               )}
               <Caution className="mt-4" />
             </div>
@@ -74,7 +86,7 @@ export function Verdicts({
   )
 }
 
-function Score({ appearance }: { appearance: Appearance }) {
+function Score({ appearance }: { appearance: Scoring }) {
   const { outcome } = appearance
   const report = outcome.kind === 'feasible' ? Object.entries(outcome.report) : []
   return (
@@ -111,7 +123,7 @@ function Decide({
 }: {
   campaign: string
   candidate: string
-  appearance: Appearance
+  appearance: Scoring
   current?: CandidateRecord['verdicts'][number]
 }) {
   const barred = useBarred('verdicts.give')

@@ -63,9 +63,9 @@ export function ImportCandidatesForm({ campaign, onClose }: ImportFormProps) {
         }}
         accept=".txt,.dat,.csv,.json,.jsonl,.ndjson,text/plain,application/json"
         placeholder={example}
+        below={<Recognised text={source.text} />}
         hint="A polytope with heights, maximal simplices or triangles of its 2-faces. What is wrong is listed by line; the others are imported."
       />
-      {!source.file && <Recognised text={source.text} />}
       <CandidateFormats />
       <div className="grid grid-cols-1 gap-4 sm:grid-cols-2">
         <TextField
@@ -130,6 +130,7 @@ function Recognised({ text }: { text: string }) {
       {reading && (
         <>
           Recognised: {reading.format}, {counted(reading.candidates.length, 'candidate')}
+          {reading.ambiguous.length > 0 && ', a matrix that can be read both ways'}
           {reading.problems.length > 0 && `, ${counted(reading.problems.length, 'problem')}`}.{' '}
           {problem && (
             <span className="text-ink">

@@ -39,6 +39,7 @@ export function SourceFields({
   hint,
   accept,
   fileLimit = uploadLimitBytes,
+  below,
 }: {
   label: string
   source: Source
@@ -47,6 +48,8 @@ export function SourceFields({
   hint: ReactNode
   accept: string
   fileLimit?: number
+  /** What there is to say of the pasted text. */
+  below?: ReactNode
 }) {
   const { text, file } = source
   const fault = sourceFault(source, fileLimit)
@@ -84,6 +87,7 @@ export function SourceFields({
         error={fault}
         onChange={(event) => onChange({ text: event.target.value, file: null })}
       />
+      {below}
       <TextField
         label="Or a file"
         type="file"

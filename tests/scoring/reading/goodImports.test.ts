@@ -15,7 +15,7 @@ import { transformed, unimodular } from '../polytope/unimodular.ts'
 const quintic = '1 0 0 0\n0 1 0 0\n0 0 1 0\n0 0 0 1\n-1 -1 -1 -1'
 const octic = '1 0 0 0\n0 1 0 0\n0 0 1 0\n0 0 0 1\n-2 -2 -2 -1\n-1 -1 -1 0'
 
-/** 26 lattice points on 2-faces, h = (20, 17), and a class of its own. */
+/** h = (28, 12); one of very many classes. */
 const evaluated = evaluateInput({
   weights: [3, 3, 4, 5, 7],
   side: 'newton',
