@@ -17,6 +17,8 @@ const describe =
   (particular: Particular): Described => ({ stage, cost, ...usual, ...particular })
 
 export const ofPolytope = describe('polytope', 'free')
+/** What is computed from the polytope on first use. */
+export const ofShape = describe('polytope', 'cheap')
 export const ofTopology = describe('topology', 'cheap')
 export const ofCone = describe('cone', 'moderate')
 export const ofMetric = describe('metric', 'moderate')

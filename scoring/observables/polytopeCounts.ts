@@ -2,20 +2,20 @@ import { pointsByCarrier } from '../geometry/polytopeSummary.ts'
 import type { RigidDivisors } from '../geometry/rigidDivisors.ts'
 import { rigidDivisors } from '../geometry/rigidDivisors.ts'
 import type { Candidate } from './candidate.ts'
-import { ofPolytope, SOURCES } from './described.ts'
+import { ofShape, SOURCES } from './described.ts'
 import type { Described, ScalarObservable, ValueType } from './observable.ts'
 
 /** What is read: the polytope, and what is computed from it alone. */
 type View = Pick<Candidate, 'polytope' | 'sections' | 'normalisedVolumes'>
 
 const scalar = (
-  entry: Omit<Parameters<typeof ofPolytope>[0], 'name'> & { readonly name: string },
+  entry: Omit<Parameters<typeof ofShape>[0], 'name'> & { readonly name: string },
   read: (view: View) => number,
   type: ValueType = 'integer',
 ): ScalarObservable => ({
   kind: 'scalar',
   type,
-  ...(ofPolytope({ ...entry, name: `polytope.${entry.name}` }) satisfies Described),
+  ...(ofShape({ ...entry, name: `polytope.${entry.name}` }) satisfies Described),
   read,
 })
 

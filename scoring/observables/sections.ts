@@ -1,8 +1,8 @@
 import type { ReflexiveSections } from '../geometry/sections.ts'
-import { ofPolytope, SOURCES } from './described.ts'
+import { ofShape, SOURCES } from './described.ts'
 import type { MemberLists, RecordSet, ValueField } from './observable.ts'
 
-type Entry = Omit<Parameters<typeof ofPolytope>[0], 'source'>
+type Entry = Omit<Parameters<typeof ofShape>[0], 'source'>
 
 /** Elements are the planar sections, then the solid ones. */
 const perSection = (
@@ -18,14 +18,14 @@ const field = (
 ): ValueField => ({
   kind: 'value',
   type: 'integer',
-  ...ofPolytope({ ...entry, source: SOURCES.sections }),
+  ...ofShape({ ...entry, source: SOURCES.sections }),
   column: (candidate) => perSection(candidate.sections(), ofPlane, ofSpace),
 })
 
 /** The reflexive sections of the polytope through the origin. They do not depend on the triangulation. */
 export const sections: RecordSet = {
   kind: 'records',
-  ...ofPolytope({
+  ...ofShape({
     name: 'sections',
     description:
       'The reflexive sections of the polytope through the origin, of dimension 2 and 3: what can be the fibre of a fibration.',
@@ -78,7 +78,7 @@ export const sections: RecordSet = {
     {
       kind: 'members',
       of: 'sections',
-      ...ofPolytope({
+      ...ofShape({
         name: 'inside',
         description: 'The reflexive polygons inside a section of dimension 3; none for a polygon.',
         formula: '\\{\\Pi_2 \\subset \\Pi\\}',
@@ -92,7 +92,7 @@ export const sections: RecordSet = {
     {
       kind: 'members',
       of: 'divisors',
-      ...ofPolytope({
+      ...ofShape({
         name: 'divisors',
         description: 'The divisors of the points on the section.',
         formula: '\\{D_p : p \\in \\Pi\\}',

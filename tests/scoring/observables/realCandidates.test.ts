@@ -49,6 +49,23 @@ describe('published threefolds, asked through rules', () => {
     expect(valueOf(candidate, 'max(d in divisors where d.delPezzo : d.delPezzoDegree)')).toBe(9)
     expect(valueOf(candidate, 'max(d in divisors where d.delPezzo : d.euler)')).toBe(3)
     expect(valueOf(candidate, 'any(d in divisors : d.k3)')).toBe(false)
+    expect(valueOf(candidate, 'swissCheese')).toBe(true)
+    expect(valueOf(candidate, 'count(k in k3Fibrations : true)')).toBe(0)
+    // Elliptic over the projective plane, whose image E, a diagonal divisor of degree 9, is the section.
+    const fibration = 'g.type == 10 and g.hasSection and g.baseRays == 3'
+    expect(valueOf(candidate, `count(g in genusOneFibrations : ${fibration})`)).toBe(1)
+    expect(
+      valueOf(
+        candidate,
+        'any(s in sections where s.dimension == 2 : any(d in s.divisors where d.delPezzo : d.delPezzoDegree == 9))',
+      ),
+    ).toBe(true)
+    expect(valueOf(candidate, 'polytope.rigidRank')).toBe(1)
+    expect(valueOf(candidate, 'count(x in rigidAxions : true)')).toBe(1)
+    expect(valueOf(candidate, 'max(x in axions : x.decayConstant)', 'at scale 2')).toBeCloseTo(
+      0.0745463 / 4,
+      7,
+    )
     expect(valueOf(candidate, 'volume', 'at volume 1000')).toBe(1000)
     expect(valueOf(candidate, 'min(d in divisors : d.volume)', 'at smallest divisor 3')).toBe(3)
     expect(valueOf(candidate, 'max(d in divisors : d.volume)', 'at scale 2')).toBeCloseTo(96, 7)
@@ -71,6 +88,25 @@ describe('published threefolds, asked through rules', () => {
         'any(x in divisors where x.k3 : any(y in divisors where y.k3 and y != x : meet(x, y)))',
       ),
     ).toBe(false)
+  })
+
+  // Morrison, Vafa 1996, hep-th/9603161 (from memory).
+  it('weights (1,1,12,28,42): elliptic over a Hirzebruch surface, the fibres inside K3 fibres', () => {
+    const candidate = ofWeights(1, 1, 12, 28, 42)
+    const nested = 'g.hasSection and g.baseRays == 4 and any(k in g.k3Fibrations : k.section.corners == 4)'
+    expect(valueOf(candidate, `count(g in genusOneFibrations : ${nested})`)).toBe(1)
+    expect(valueOf(candidate, 'count(k in k3Fibrations : true)')).toBe(1)
+    expect(valueOf(candidate, 'polytope.nestedSections')).toBe(1)
+  })
+
+  it('has no axions to offer where toric divisors do not give them all, and says so', () => {
+    const candidate = candidateOf(polytopeFromPoints(largePolytope('w7-106').vertices))
+    expect(valueOf(candidate, 'favourable')).toBe(false)
+    for (const set of ['axions', 'rigidAxions'])
+      expect(valueOf(candidate, `count(x in ${set} : true)`)).toMatchObject({
+        value: null,
+        reason: expect.stringContaining('the polytope is not favourable'),
+      })
   })
 
   it("the quintic's free Z5 quotient (h21 = 21) has no diagonal del Pezzo divisor", () => {

@@ -52,4 +52,7 @@ export const patterns: readonly string[] = [
   'quantile(0.3, p in pairs : p.a.volume * p.b.volume)',
   'count(c in curves : any(d in c.divisors : d.rigid) and c.negative > 0)',
   'max(f in faces : sum(d in f.divisors : d.cubic))',
+  'sum(s in sections where s.dimension == 3 : sum(d in s.divisors : d.c2) * count(t in s.inside : t.type > 4))',
+  'count(g in genusOneFibrations where g.hasSection : any(k in g.k3Fibrations : k.section.corners > 4))',
+  'max(x in axions : min(d in x.divisors : d.volume) * x.decayConstant) else 0',
 ]
