@@ -1,10 +1,15 @@
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import type { Certificate } from './schema.ts'
 
+const fieldsOf = (set: string, ...fields: readonly string[]): string[] => [
+  set,
+  ...fields.map((field) => `${set}.${field}`),
+]
+
 /**
  * Observables whose values rest on certified numbers alone: the number itself is compared, or the registry's
- * formula reads nothing but compared ones. A name stands for all that begin with it and a dot. Anything the
- * registry has beside these counts as not certified until it is listed here.
+ * formula reads nothing but compared ones. Anything the registry has beside these counts as not certified until it
+ * is listed here.
  */
 export const certifiedNames: readonly string[] = [
   'favourable',
@@ -25,46 +30,50 @@ export const certifiedNames: readonly string[] = [
   'polytope.dualNormalisedVolume',
   'polytope.rigidDivisors',
   'polytope.rigidComponents',
-  'divisors',
-  'pairs',
-  'triples',
-  'triangles',
-  'curves',
+  ...fieldsOf('divisors', 'volume', 'cubic', 'c2', 'euler', 'chi', 'h1', 'h2', 'components', 'rigid'),
+  ...fieldsOf('divisors', 'carrier', 'k3', 'enriques', 'abelian', 'delPezzo', 'delPezzoDegree', 'neighbours'),
+  ...fieldsOf('pairs', 'a', 'b', 'aab', 'abb', 'genus'),
+  ...fieldsOf('triples', 'number', 'divisors'),
+  ...fieldsOf('triangles', 'divisors'),
+  ...fieldsOf('curves', 'volume', 'least', 'greatest', 'negative', 'divisors'),
   'kappa',
   'meet',
   'swissCheese',
   'volume',
   'reference.norm',
   'reference.edgeCurvesSuffice',
-  'metric.divisor',
-  'metric.basis',
+  ...['divisor', 'basis'].flatMap((kind) => fieldsOf(`metric.${kind}`, 'top', 'bottom', 'spectrum').slice(1)),
 ]
 
-/** Exceptions among the names above, and reasons for names elsewhere. */
-const reasons: readonly (readonly [string, string])[] = [
-  ['triangles.face', 'The 2-faces as objects are the fast road’s.'],
-  [
-    'faces',
-    'The 2-faces as objects are the fast road’s; their number and the triangles on them are certified.',
-  ],
-  ['sections', 'Reflexive sections are found by the fast road alone.'],
-  ['k3Fibrations', 'Fibrations are read off the certified triangles, but by the fast road alone.'],
-  ['genusOneFibrations', 'Fibrations are read off the certified triangles, but by the fast road alone.'],
-  ['polytope.symmetry', 'Automorphisms are found by the fast road alone.'],
-  ['axions', 'Follows from certified intersection numbers and volumes by the fast road’s code.'],
-  ['rigidAxions', 'Follows from certified intersection numbers and volumes by the fast road’s code.'],
-]
+const sections = 'Reflexive sections are found by the fast road alone.'
+const fibrations = 'Fibrations are read off the certified triangles, but by the fast road alone.'
+const faces =
+  'The 2-faces as objects are the fast road’s; their number and the triangles on them are certified.'
+const axions = 'Follows from certified intersection numbers and volumes by the fast road’s code.'
 
-const byTheFastRoad = 'Read by the fast road alone.'
-
-const covers = (name: string, mentioned: string): boolean =>
-  mentioned === name || mentioned.startsWith(`${name}.`)
+/** Reasons for the others; a name stands for all that begin with it and a dot. */
+const reasons: Readonly<Record<string, string>> = {
+  'triangles.face': faces,
+  faces,
+  sections,
+  'polytope.planarSections': sections,
+  'polytope.solidSections': sections,
+  'polytope.nestedSections': sections,
+  k3Fibrations: fibrations,
+  genusOneFibrations: fibrations,
+  'polytope.symmetry': 'Automorphisms are found by the fast road alone.',
+  components: 'Follows from certified sums over components by the fast road’s code.',
+  axions,
+  rigidAxions: axions,
+}
 
 /** Why an observable or field is not certified; null when it is. */
 export function reservation(mentioned: string): string | null {
-  const reason = reasons.find(([name]) => covers(name, mentioned))?.[1]
-  if (reason !== undefined) return reason
-  return certifiedNames.some((name) => covers(name, mentioned)) ? null : byTheFastRoad
+  if (certifiedNames.includes(mentioned)) return null
+  const name = Object.keys(reasons).find(
+    (prefix) => mentioned === prefix || mentioned.startsWith(`${prefix}.`),
+  )
+  return name === undefined ? 'Read by the fast road alone.' : reasons[name]
 }
 
 /** What a certificate does not vouch for, each with the reason. */

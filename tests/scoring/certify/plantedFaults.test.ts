@@ -172,9 +172,7 @@ describe('the rule of a certificate', () => {
       entry.name,
       ...(entry.kind === 'records' ? entry.fields.map((field) => `${entry.name}.${field.name}`) : []),
     ])
-    for (const name of certifiedNames) {
-      expect([name, names.some((own) => own === name || own.startsWith(`${name}.`))]).toEqual([name, true])
-    }
+    expect(certifiedNames.filter((name) => !names.includes(name))).toEqual([])
     expect(reservation('divisors.volume')).toBeNull()
     expect(reservation('faces.area')).toMatch(/fast road/)
     expect(reservation('something.new')).toMatch(/fast road/)

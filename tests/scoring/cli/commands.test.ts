@@ -124,7 +124,7 @@ describe('certify', () => {
     certificate.numbers.c2[0] += 12
     const forged = await run('certify', inFile('forged.json', certificate))
     expect([forged.status, (JSON.parse(forged.output) as { passed: boolean }).passed]).toEqual([1, false])
-    const other = await run('certify', inFile('other.json', input))
+    const other = await run('certify', inFile('uncertified.json', input))
     expect(other.status).toBe(2)
     const truncated = join(folder, 'truncated.json')
     writeFileSync(truncated, made.output.slice(0, 3000))
