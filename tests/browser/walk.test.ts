@@ -270,6 +270,46 @@ describe.skipIf(chromiumPath === null)(
       await shot('11-bulk')
     })
 
+    it('filters the library, collects what it finds, and searches in the collection', async () => {
+      await page.getByRole('link', { name: 'Library' }).first().click()
+      await page.getByLabel('Name, key or weights').fill('seven weights')
+      await page.getByLabel('Filter by another number').selectOption('Edges')
+      await page.getByLabel('Edges from').fill('20')
+      const conditions = page.getByRole('list', { name: 'Conditions in force' })
+      await conditions.getByText('Edges ≥ 20').waitFor()
+      await page.getByText('1 polytope matches the filter').waitFor()
+      await page.getByRole('button', { name: 'Collect these' }).click()
+      await page.getByLabel('Name of the collection').fill('walked')
+      await page.getByRole('button', { name: 'Put in 1 polytope' }).click()
+      await page.getByText('“walked” holds 1 polytope.').waitFor()
+
+      await page.getByRole('button', { name: 'Clear the filter' }).click()
+      await page.getByRole('combobox', { name: 'Collection' }).selectOption('walked (1 polytope)')
+      await conditions.getByText('in “walked”').waitFor()
+      await page.getByText('1 polytope matches the filter').waitFor()
+      await shot('12-collection')
+      await page.getByRole('link', { name: /^seven weights/ }).click()
+      await page.getByRole('heading', { level: 1, name: /^seven weights/ }).waitFor()
+      // The candidates of the search that was walked through.
+      await page.getByRole('table', { name: 'Candidates met in your campaigns' }).waitFor()
+      await page.getByRole('table', { name: 'Two-dimensional reflexive sections' }).waitFor()
+      await shot('13-polytope')
+
+      await page.getByRole('link', { name: 'Searches' }).first().click()
+      await page.getByRole('link', { name: 'New search' }).first().click()
+      await page.getByRole('radio', { name: 'A collection' }).check()
+      await page.getByRole('combobox', { name: 'Collection' }).selectOption('walked (1 polytope)')
+      await page.getByText(/1 polytope, h11 24/).waitFor()
+      await page.getByLabel('Budget, evaluations').fill('20')
+      await page.getByLabel('Name (optional)').fill('In the collection')
+      await page.getByRole('button', { name: /Start the search/ }).click()
+      await page.getByRole('heading', { level: 1, name: 'In the collection' }).waitFor()
+      await page
+        .getByText(/the collection “walked”/)
+        .first()
+        .waitFor()
+    })
+
     it('says nothing on the browser console all the way', () => {
       expect(watched.complaints).toEqual([])
     })

@@ -64,6 +64,7 @@ export function FilterFields({ campaign, filter, onChange, onPoints }: FilterFie
         ]}
       />
       <CollectionSelect
+        className="col-span-2"
         label="Collection"
         none="any or none"
         campaign={campaign}

@@ -113,7 +113,12 @@ export function LibraryPage() {
           {({ counts }) => (
             <HodgeScatter
               counts={counts}
-              range={filter}
+              range={{
+                h11Min: filter.h11Min,
+                h11Max: filter.h11Max,
+                h21Min: filter.h21Min,
+                h21Max: filter.h21Max,
+              }}
               onRange={(range) => change({ ...noRange, ...range })}
             />
           )}
