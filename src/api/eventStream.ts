@@ -2,7 +2,7 @@ import { streamEventSchema, type StreamEvent } from '../../shared/events.ts'
 
 export type StreamState = 'connecting' | 'live' | 'waiting' | 'closed'
 
-const kinds = ['search', 'null', 'preview', 'certification', 'library', 'changed', 'closed'] as const
+const kinds = streamEventSchema.options.map(({ shape }) => shape.kind.value)
 const firstDelay = 1_000
 const longestDelay = 30_000
 

@@ -81,4 +81,26 @@ describe('events in the cache', () => {
     applyEvent(client, 'c1', { kind: 'library', loaded: 100, total: 100 })
     expect(client.getQueryState(key)?.isInvalidated).toBe(true)
   })
+
+  it('move the numbers that are still being computed, and fetch the library anew at the end', () => {
+    const client = new QueryClient()
+    const key = ['polytopes', 'hodge', {}]
+    client.setQueryData(key, { total: 5, counts: [], loading: null, undescribed: 0 })
+    applyEvent(client, 'c1', { kind: 'undescribed', left: 40 })
+    expect(client.getQueryData(key)).toMatchObject({ undescribed: 40 })
+    applyEvent(client, 'c1', { kind: 'undescribed', left: 0 })
+    expect(client.getQueryState(key)?.isInvalidated).toBe(true)
+  })
+
+  it('move a count of classes, and fetch its result when it has ended', () => {
+    const client = new QueryClient()
+    const [mine, other] = ['p1', 'p2'].map((polytope) => ['polytope-classes', polytope, 'c1'])
+    for (const key of [mine, other]) client.setQueryData(key, { classes: null, counting: { seen: 0 } })
+    applyEvent(client, 'c1', { kind: 'class-count', key: 'p1', seen: 400, ended: false })
+    expect(client.getQueryData(mine)).toMatchObject({ counting: { seen: 400 } })
+    expect(client.getQueryData(other)).toMatchObject({ counting: { seen: 0 } })
+    expect(client.getQueryState(mine)?.isInvalidated).toBe(false)
+    applyEvent(client, 'c1', { kind: 'class-count', key: 'p1', seen: 450, ended: true })
+    expect(client.getQueryState(mine)?.isInvalidated).toBe(true)
+  })
 })

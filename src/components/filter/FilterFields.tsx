@@ -52,7 +52,7 @@ export function FilterFields({ campaign, filter, onChange, onPoints }: FilterFie
         )),
       )}
       <Question name="favourable" label="Favourable" filter={filter} onChange={onChange} />
-      <Question name="weighted" label="Made from weights" filter={filter} onChange={onChange} />
+      <Question name="weighted" label="From weights" filter={filter} onChange={onChange} />
       <Select
         label="Origin"
         value={filter.origin ?? ''}
@@ -93,7 +93,7 @@ function Question({
       value={filter[name] ?? ''}
       onChange={(event) => onChange({ [name]: event.target.value })}
       options={[
-        ['', 'yes or no'],
+        ['', 'any'],
         ['yes', 'yes'],
         ['no', 'no'],
       ]}

@@ -20,7 +20,7 @@ export function ColumnChooser({
   const toggle = (name: PolytopeNumberName, on: boolean) =>
     onColumns(polytopeNumberNames.filter((other) => (other === name ? on : columns.includes(other))))
   return (
-    <DropdownMenu.Root>
+    <DropdownMenu.Root modal={false}>
       <DropdownMenu.Trigger asChild>
         <Button kind="quiet">
           <Columns3 size={15} aria-hidden />

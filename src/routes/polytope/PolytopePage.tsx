@@ -9,7 +9,6 @@ import { useBarred, useCurrentCampaign } from '../../components/shell/currentCam
 import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { PageHead, Section } from '../../components/ui/Layout.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
-import { counted } from '../../lib/numbers.ts'
 import { Classes } from './Classes.tsx'
 import { FaceTable } from './FaceTable.tsx'
 import { Numbers } from './Numbers.tsx'
@@ -58,9 +57,9 @@ function Polytope({ polytope, campaign }: { polytope: PolytopeDetail; campaign?:
         {polytope.favourable && ', favourable'}.
         {!polytope.favourable && (
           <p className="mt-1 text-ink">
-            Not favourable: h11 is {polytope.h11}, the toric rank {toricRank}. The{' '}
-            {counted(polytope.h11 - toricRank, 'missing class', 'missing classes')} come from divisors that
-            split into components on the threefold; volumes and metric are those of the toric part.
+            Not favourable: h11 is {polytope.h11}, the toric rank {toricRank}. The difference of{' '}
+            {polytope.h11 - toricRank} is due to divisors that split into components on the threefold; volumes
+            and metric are those of the toric part.
           </p>
         )}
       </PageHead>
