@@ -19,8 +19,6 @@ export const nullSummarySchema = z.object({
   quantile99: z.number().nullable(),
   histogram: histogramSchema.nullable(),
   hit: rateSchema.nullable(),
-  /** What counts as a hit: the rule's own line, or without one the 99 % quantile. */
-  hitLine: z.enum(['rule', 'quantile']).optional(),
   /** Expected best of n null candidates, [n, score], n up to the sample's size. */
   expectedBest: z.array(z.tuple([z.number(), z.number()])),
 })

@@ -98,6 +98,8 @@ export const searchDetailSchema = searchSummarySchema.extend({
   keep: z.number().int(),
   progress: searchProgressSchema,
   null: nullSummarySchema.nullable(),
+  /** False: the rule leaves it open what a hit is, and one is a score above the null's 99 % quantile. */
+  ownHitLine: z.boolean(),
   /** Best distinct candidates so far, at most 20. */
   top: z.array(scoredRowSchema),
   failure: z.object({ code: z.string(), message: z.string() }).nullable(),

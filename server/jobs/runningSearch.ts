@@ -134,7 +134,9 @@ export class RunningSearch implements WorkSource {
       error instanceof ComputeFailure || error instanceof Refusal
         ? { code: error.code, message: error.message }
         : { code: 'internal-error', message: 'The server made a mistake; the last committed state is kept.' }
-    log.error({ err: error, search: this.id }, 'a search failed')
+    // What a person can put right, such as a scope too large to enumerate, is no fault of the server.
+    if (error instanceof Refusal) log.info({ code: error.code, search: this.id }, 'a search was refused')
+    else log.error({ err: error, search: this.id }, 'a search failed')
     await writes.transaction((manager) => failSearch(manager, this.id, failure))
     const progress = mergeProgress(
       this.#islands.map((island) => island.progress),

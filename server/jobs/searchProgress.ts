@@ -40,7 +40,8 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
     curve: interleaved(begun).map(([at, score]) => [at, score]),
     islands: islands.map((island) => ({
       evaluations: island?.evaluations ?? 0,
-      hits: island?.hits ?? 0,
+      // Not counted by versions before.
+      ...(island?.hits !== undefined && { hits: island.hits }),
       best: island?.best ?? null,
       exhausted: island?.exhausted ?? false,
     })),

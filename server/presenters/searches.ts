@@ -27,6 +27,7 @@ export function presentSearchSummary(search: Search): SearchSummary {
 
 export interface SearchSurroundings {
   readonly nullSummary: NullSummary | null
+  readonly ownHitLine: boolean
   readonly top: readonly ScoredRow[]
   readonly shortlists: readonly { readonly id: string; readonly name: string }[]
 }
@@ -43,6 +44,7 @@ export function presentSearch(search: Search, around: SearchSurroundings): Searc
     keep: search.keep,
     progress: search.progress,
     null: around.nullSummary,
+    ownHitLine: around.ownHitLine,
     top: [...around.top],
     failure:
       search.failureCode === null ? null : { code: search.failureCode, message: search.failureMessage ?? '' },

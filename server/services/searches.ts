@@ -9,7 +9,7 @@ import { presentSearch } from '../presenters/searches.ts'
 import { conflict, notFound } from '../problems.ts'
 import { topFinds, withHitLine } from './finds.ts'
 import { readHitLine, readNullSummary } from './nullSamples.ts'
-import { requireSoundRule } from './rules.ts'
+import { leavesHitOpen, requireSoundRule } from './rules.ts'
 import { namedScope, resolveScope, scopeHash } from './scopes.ts'
 import { readVersion } from './targets.ts'
 
@@ -36,6 +36,7 @@ export async function readSearch(
   const top = await topFinds(manager, search, 20)
   return presentSearch(search, {
     nullSummary: await readNullSummary(manager, search),
+    ownHitLine: !leavesHitOpen(search.targetVersion?.text ?? ''),
     top: top.map((row) => ({ ...row, outcome: withHitLine(row.outcome, line) })),
     shortlists: shortlists.filter(({ searchIds }) => searchIds.includes(search.id)),
   })

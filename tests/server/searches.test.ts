@@ -120,6 +120,34 @@ describe('a search', () => {
     expect(third.top).not.toEqual(first.top)
   })
 
+  it('enumerates a small scope exactly, and says how far it has to go', async () => {
+    const few = { kind: 'filter', filter: { h11Min: 9, h11Max: 10 } }
+    const { id } = await start({ method: 'exhaustive', scope: few, budget: 50 })
+    const done = await finished(id)
+    // 16 and 4 classes modulo automorphisms.
+    expect(done).toMatchObject({ state: 'finished', evaluations: 20, budget: 50 })
+    expect(done.progress).toMatchObject({ budget: 20, exhausted: true, secondsLeft: 0 })
+    expect(done.progress.islands.map(({ evaluations }) => evaluations)).toEqual([10, 10])
+  })
+
+  it('fails with its reason when there is more to enumerate than the budget', async () => {
+    const { id } = await start({ method: 'exhaustive' })
+    const failed = await finished(id)
+    expect(failed).toMatchObject({ state: 'failed', failure: { code: 'search.too-many-classes' } })
+    expect(failed.failure?.message).toMatch(/more than 60 classes/)
+  })
+
+  it('counts the hits of each island', async () => {
+    const { body: target } = await lead
+      .post(path('/targets'))
+      .send({ name: 'Its own line', text: 'score volume hit volume > 0' })
+      .expect(201)
+    const created = await start({ targetVersionId: target.versions[0].id, budget: 20 })
+    const done = await finished(created.id)
+    expect(done.ownHitLine).toBe(true)
+    expect(done.progress.islands.map(({ hits }) => hits)).toEqual([10, 10])
+  })
+
   it('is compared with the null sample of its scope and rule, drawn once', async () => {
     const { id } = await start({ seed: 3 })
     await expect

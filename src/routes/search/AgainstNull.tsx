@@ -8,20 +8,26 @@ import { formatNumber, formatPercent } from '../../lib/numbers.ts'
 export function AgainstNull({ search }: { search: SearchDetail }) {
   const { null: summary, progress } = search
   if (!summary?.hit) return <Empty title="Compared as soon as the null sample has been evaluated." />
-  const counts = progress.islands.map(({ hits = 0, evaluations }) => ({ hits, evaluations }))
-  const found = summary.hitLine === 'rule' ? searchRate(counts) : null
+  const counts = progress.islands.flatMap(({ hits, evaluations }) =>
+    hits === undefined ? [] : [{ hits, evaluations }],
+  )
+  const isCounted = search.ownHitLine && counts.length === progress.islands.length
+  const found = isCounted ? searchRate(counts) : null
   const compared = found && enrichment(found, summary.hit)
   const isExact = progress.exhausted && search.method === 'exhaustive'
   return (
     <>
       <Facts
         rows={[
-          ['Hit rate of the search', found ? <SearchHits key="v" rate={found} isExact={isExact} /> : noLine],
+          [
+            'Hit rate of the search',
+            found ? <SearchHits key="v" rate={found} isExact={isExact} /> : search.ownHitLine ? '–' : noLine,
+          ],
           ['Over the null’s', compared ? ratioText(compared, isExact) : '–'],
           ['Best score among null candidates', rarityText(search)],
         ]}
       />
-      {summary.hitLine === 'rule' && isEasy(summary.hit) && (
+      {search.ownHitLine && isEasy(summary.hit) && (
         <p className="prose-line mt-3 text-soft">
           The null hits often already: most of what this search finds, chance finds as well. A stricter hit
           line would say more.
@@ -31,7 +37,7 @@ export function AgainstNull({ search }: { search: SearchDetail }) {
   )
 }
 
-const noLine = 'the rule has no hit line'
+const noLine = 'not counted: the rule has no hit line'
 
 type Rate = NonNullable<ReturnType<typeof searchRate>>
 

@@ -93,12 +93,14 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         <Section title="Null sample" note="The same rule on candidates nobody selected.">
           <NullFacts summary={search.null} />
         </Section>
-        <Section title="Against the null" note="What chance would have found with the same rule.">
-          <AgainstNull search={search} />
-        </Section>
-        <Section title="Islands">
-          <IslandTable islands={progress.islands} />
-        </Section>
+        <div>
+          <Section title="Against the null" note="What chance would have found with the same rule.">
+            <AgainstNull search={search} />
+          </Section>
+          <Section title="Islands">
+            <IslandTable islands={progress.islands} />
+          </Section>
+        </div>
       </div>
       <Section title="How it was run">
         <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2">
