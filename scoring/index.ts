@@ -45,6 +45,7 @@ export type { Candidate } from './observables/candidate.ts'
 // Reading other people's candidates.
 export { readCandidates } from './reading/readCandidates.ts'
 export { placeCandidate, type PlacedCandidate, type Placing } from './reading/placeCandidate.ts'
+export { PlacingSession } from './reading/placingSession.ts'
 export { readWeightLines, type WeightLine } from './reading/weightLines.ts'
 export type { CandidateReading, GivenCandidate, Orientation, ReadingProblem } from './reading/given.ts'
 

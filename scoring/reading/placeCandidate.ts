@@ -4,7 +4,7 @@ import { facetGenericWitness } from '../geometry/fans/facetGenericHeights.ts'
 import { heightsOfSimplices } from '../geometry/fans/heightsOfSimplices.ts'
 import { heightsOfTriangles } from '../geometry/fans/heightsOfTriangles.ts'
 import { quadraticHeights } from '../geometry/heights.ts'
-import { normalForm, type NormalForm } from '../geometry/normalForm.ts'
+import type { NormalForm } from '../geometry/normalForm.ts'
 import { toNormalForm, transportHeights } from '../geometry/transport.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import { witnessHeights } from '../search/witness.ts'
@@ -13,6 +13,7 @@ import { lineOfRow } from './given.ts'
 import { requireStar } from './originHeight.ts'
 import { classOfHeights, placedHeights } from './placedHeights.ts'
 import { placedPoints, type PlacedPoints } from './placedPoints.ts'
+import { PlacingSession } from './placingSession.ts'
 import { placedRows } from './placedSimplices.ts'
 
 /** A candidate whose geometry was checked: what is stored of it. */
@@ -30,19 +31,19 @@ export type Placing =
   | { readonly placed?: undefined; readonly problem: ReadingProblem }
 
 /** Checks a candidate's geometry; what is wrong with it comes back with its place in the text. */
-export function placeCandidate(given: GivenCandidate): Placing {
+export function placeCandidate(given: GivenCandidate, session = new PlacingSession()): Placing {
   try {
-    return { placed: geometryOf(given) }
+    return { placed: geometryOf(given, session) }
   } catch (error) {
     if (!(error instanceof InputError)) throw error
     return { problem: located(given, error) }
   }
 }
 
-function geometryOf(given: GivenCandidate): PlacedCandidate {
+function geometryOf(given: GivenCandidate, session: PlacingSession): PlacedCandidate {
   if (given.triangulation.kind === 'address') throw notStored(given)
-  const placed = placedPoints(given)
-  const form = normalForm(placed.polytope)
+  const placed = placedPoints(given, session)
+  const { form } = placed
   const { polytopeKey, candidateKey } = given.claims
   if (polytopeKey !== undefined && polytopeKey !== form.key) {
     throw new InputError(

@@ -1,10 +1,11 @@
 import { InputError } from '../errors.ts'
 import { applyBig, transposed, type BasisChange } from '../geometry/latticeReduction.ts'
+import type { NormalForm } from '../geometry/normalForm.ts'
 import type { PointNames } from '../geometry/pointNames.ts'
-import { polytopeFromPoints, polytopeInReducedBasis, type Polytope } from '../geometry/polytope.ts'
+import type { Polytope } from '../geometry/polytope.ts'
 import { checkPoint } from '../geometry/polytopeInput.ts'
-import { polytopeFromWeights } from '../geometry/weights.ts'
-import type { GivenCandidate, GivenPolytope } from './given.ts'
+import type { GivenCandidate } from './given.ts'
+import { inSection, type PlacingSession } from './placingSession.ts'
 
 /** What a listed point is to the polytope: one of its points (an index), or one that a triangulation does not count. */
 export type PointPlace = number | 'origin' | 'inside-a-facet'
@@ -12,6 +13,7 @@ export type PointPlace = number | 'origin' | 'inside-a-facet'
 /** A polytope that a text gives, with the points that the text's heights and indices refer to. */
 export interface PlacedPoints {
   readonly polytope: Polytope
+  readonly form: NormalForm
   /** Of each listed point, in the order of the list. */
   readonly places: readonly PointPlace[]
   /** True when the text lists points; false when the polytope's own order is meant. */
@@ -28,14 +30,17 @@ export interface PlacedPoints {
  * @throws InputError of the geometry, with paths that begin with the section (`vertices[2][1]`), and points.outside,
  *   points.twice
  */
-export function placedPoints({
-  polytope: given,
-  points,
-  triangulation,
-  naming,
-}: Pick<GivenCandidate, 'polytope' | 'points' | 'triangulation' | 'naming'>): PlacedPoints {
+export function placedPoints(
+  {
+    polytope: given,
+    points,
+    triangulation,
+    naming,
+  }: Pick<GivenCandidate, 'polytope' | 'points' | 'triangulation' | 'naming'>,
+  session: PlacingSession,
+): PlacedPoints {
   // |v|^2 means the coordinates given.
-  const { polytope, basis } = polytopeOf(given, triangulation.kind !== 'quadratic')
+  const { polytope, basis, form } = session.polytope(given, triangulation.kind !== 'quadratic')
   const list = points ?? (given.kind === 'points' ? given.rows : null)
   const back = basis && transposed(basis.dual)
   const nameOf = (point: number): string => {
@@ -50,30 +55,7 @@ export function placedPoints({
     const at = naming === 'coordinates' ? -1 : places.indexOf(point)
     return at < 0 || naming === 'coordinates' ? nameOf(point) : String(at + naming)
   }
-  return { polytope, places, listed: list !== null, nameOf, labelOf }
-}
-
-function polytopeOf(given: GivenPolytope, reduce: boolean): { polytope: Polytope; basis?: BasisChange } {
-  switch (given.kind) {
-    case 'points':
-      return inSection('vertices', () =>
-        reduce ? polytopeInReducedBasis(given.rows) : { polytope: polytopeFromPoints(given.rows) },
-      )
-    case 'weights':
-      return { polytope: inSection('weights', () => polytopeFromWeights(given.weights, given.side)) }
-    case 'key': {
-      const { vertices } = given
-      if (vertices === undefined) {
-        throw new InputError(
-          'polytope.not-known',
-          `There is no polytope with the key ${given.key} in the library or in this campaign; give its vertices.`,
-          'polytope',
-          given.key,
-        )
-      }
-      return { polytope: inSection('vertices', () => polytopeFromPoints(vertices)) }
-    }
-  }
+  return { polytope, form, places, listed: list !== null, nameOf, labelOf }
 }
 
 function placesOf(
@@ -124,14 +106,4 @@ function placeApart(
     }
   }
   return 'inside-a-facet'
-}
-
-/** Runs a check; the path of what it throws gets the section's name in front. */
-function inSection<T>(section: string, check: () => T): T {
-  try {
-    return check()
-  } catch (error) {
-    if (!(error instanceof InputError)) throw error
-    throw new InputError(error.code, error.message, `${section}${error.path}`, error.found)
-  }
 }

@@ -1,6 +1,7 @@
 import {
   InputError,
   placeCandidate,
+  PlacingSession,
   polytopeFromWeights,
   readCandidates,
   readWeightLines,
@@ -14,6 +15,9 @@ import { polytopeFacts, type PolytopeFacts } from './polytopeFacts.ts'
 
 /** How long a piece of work on the interactive thread may take, which previews share. */
 const pieceMilliseconds = 400
+
+/** What this thread keeps between pieces of an import; it spares time and alters no result. */
+const session = new PlacingSession()
 
 /** A candidate as it is stored, or why it is none. */
 export type StorableOrProblem =
@@ -48,7 +52,7 @@ export function placeCandidates({
   const facts = new Map<string, PolytopeFacts>()
   const answers: StorableOrProblem[] = []
   for (const one of given) {
-    const { placed, problem } = placeCandidate(one)
+    const { placed, problem } = placeCandidate(one, session)
     if (placed) {
       const { form, candidateKey, heights } = placed
       const polytope = facts.get(form.key) ?? polytopeFacts(form.polytope)
