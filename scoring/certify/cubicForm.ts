@@ -31,6 +31,12 @@ export class CubicForm {
     return tau
   }
 
+  /** Sum of the sizes of the terms of each tau_i: what rounding is relative to. */
+  termSizes(w: ArrayLike<number>): Float64Array {
+    const sizes = this.triples.map(([i, j, k, value]) => [i, j, k, Math.abs(value)] as const)
+    return new CubicForm(sizes, this.size).divisorVolumes(Array.from(w, Math.abs))
+  }
+
   /** V at w, by Euler's theorem from the divisor volumes: V = 1/3 sum tau_i w_i. */
   volume(w: ArrayLike<number>, tau: ArrayLike<number> = this.divisorVolumes(w)): number {
     let sum = 0

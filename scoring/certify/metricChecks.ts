@@ -9,9 +9,15 @@ import { firstLatticeBasis } from './latticeBasis.ts'
 import { PotentialDifferences } from './potentialDifferences.ts'
 
 /** Largest relative differences: of volumes, of eigenvalues, and of the metric measured by differences. */
-export const volumeTolerance = 1e-9
-export const eigenvalueTolerance = 1e-7
+const volumeTolerance = 1e-9
+const eigenvalueTolerance = 1e-7
 const differenceTolerance = 1e-7
+
+/**
+ * A divisor volume smaller than this share of the sizes of its terms is compared on the scale of that share: what
+ * cancels there is rounding of the Kaehler class itself.
+ */
+const cancellation = 1e-4
 
 /** Up to this many moduli the metric is measured along every eigenvector, beyond along some. */
 const allDirections = 24
@@ -45,7 +51,13 @@ export function checkMetric(
   const total = form.volume(weights, divisors)
   checks.run('volume-total', () => near([volumes.total], [total], volumeTolerance, () => total > 0))
   checks.run('divisor-volumes', () =>
-    near(volumes.divisors, divisors, volumeTolerance, () => divisors.every((tau) => tau > 0)),
+    near(
+      volumes.divisors,
+      divisors,
+      volumeTolerance,
+      () => divisors.every((tau) => tau > 0),
+      form.termSizes(weights).map((size) => cancellation * size),
+    ),
   )
   const part = new ToricPart(points)
   const pairs = form.pairMatrix(weights)
@@ -128,12 +140,13 @@ function chosenDirections(count: number): number[] {
   return [0, 1, ...[1, 2, 3, 4].map((n) => Math.round((n * count) / 5)), count - 2, count - 1]
 }
 
-/** Relative differences of two lists; shown are the last entries. */
+/** Relative differences of two lists, entries not taken smaller than `scales`; shown are the last entries. */
 function near(
   fast: ArrayLike<number>,
   independent: ArrayLike<number>,
   tolerance: number,
   sound: () => boolean,
+  scales?: ArrayLike<number>,
 ): Verdict & { readonly note: string } {
   if (fast.length !== independent.length) {
     throw new InputError(
@@ -144,7 +157,7 @@ function near(
   let worst = 0
   let at = 0
   for (let n = 0; n < fast.length; n++) {
-    const scale = Math.max(Math.abs(fast[n]), Math.abs(independent[n]))
+    const scale = Math.max(Math.abs(fast[n]), Math.abs(independent[n]), scales?.[n] ?? 0)
     const difference = scale === 0 ? 0 : Math.abs(fast[n] - independent[n]) / scale
     if (difference <= worst) continue
     worst = difference

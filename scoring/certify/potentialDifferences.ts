@@ -12,7 +12,7 @@ export interface MeasuredLength {
 const longest = 0.02
 const bend = 0.01
 /** The step is halved while the last extrapolation moves the value by more than this, relatively. */
-const settled = 2e-9
+const settled = 2e-8
 const halvings = 6
 
 /**
@@ -34,6 +34,9 @@ export class PotentialDifferences {
   private readonly projected: Float64Array
   private readonly dual: Float64Array
   private readonly pole: number
+  private readonly metric: Float64Array[]
+  /** Rows of A: places and values of its non-zero entries. */
+  private readonly sparse: readonly { readonly at: Int32Array; readonly values: Float64Array }[]
 
   /**
    * @param pairs A at w, over all points
@@ -43,13 +46,18 @@ export class PotentialDifferences {
   constructor(
     private readonly form: CubicForm,
     private readonly part: ToricPart,
-    private readonly pairs: readonly Float64Array[],
+    pairs: readonly Float64Array[],
     w: readonly number[],
-    private readonly vectors: readonly Float64Array[],
-    private readonly inverses: ArrayLike<number>,
+    vectors: readonly Float64Array[],
+    inverses: ArrayLike<number>,
   ) {
     this.tau = form.divisorVolumes(w)
     this.total = form.volume(w, this.tau)
+    this.sparse = pairs.map((row) => {
+      const at = Int32Array.from(row.keys()).filter((p) => row[p] !== 0)
+      return { at, values: Float64Array.from(at, (p) => row[p]) }
+    })
+    this.metric = weightedSum(vectors, inverses)
     this.projected = part.project(this.tau)
     this.dual = this.timesMetric(this.projected)
     this.pole = 1 - 4 * dot(this.projected, this.dual)
@@ -112,17 +120,29 @@ export class PotentialDifferences {
 
   /** M^-1. */
   private timesMetric(x: Float64Array): Float64Array {
-    const product = new Float64Array(x.length)
-    this.vectors.forEach((vector, n) => {
-      const factor = this.inverses[n] * dot(vector, x)
-      for (let p = 0; p < product.length; p++) product[p] += factor * vector[p]
-    })
-    return product
+    return Float64Array.from(this.metric, (row) => dot(row, x))
   }
 
   private timesPairs(x: Float64Array): Float64Array {
-    return Float64Array.from(this.pairs, (row) => dot(row, x))
+    return Float64Array.from(this.sparse, ({ at, values }) => {
+      let sum = 0
+      for (let n = 0; n < at.length; n++) sum += values[n] * x[at[n]]
+      return sum
+    })
   }
+}
+
+/** Sum of weight * vector vector^T. */
+function weightedSum(vectors: readonly Float64Array[], weights: ArrayLike<number>): Float64Array[] {
+  const sum = vectors.map(() => new Float64Array(vectors.length))
+  vectors.forEach((vector, n) => {
+    for (let r = 0; r < sum.length; r++) {
+      const row = sum[r]
+      const factor = weights[n] * vector[r]
+      for (let c = 0; c < row.length; c++) row[c] += factor * vector[c]
+    }
+  })
+  return sum
 }
 
 function dot(x: Float64Array, y: Float64Array): number {
