@@ -133,6 +133,18 @@ const numbers = {
     description: 'Prime toric divisors with several components on the threefold',
     later: true,
   },
+  rigidComponents: {
+    label: 'Rigid components',
+    group: 'Divisors',
+    description: 'Components of split divisors, all of them rigid; none on favourable polytopes',
+    later: true,
+  },
+  rigidRank: {
+    label: 'Rank of rigid',
+    group: 'Divisors',
+    description: 'Independent classes among rigid divisors and components; h11 of them span all',
+    later: true,
+  },
   classes: {
     label: 'Classes',
     group: 'Classes',

@@ -38,6 +38,8 @@ export const polytopeRowSchema = z.object({
   nestedSections: later,
   rigidDivisors: later,
   splitDivisors: later,
+  rigidComponents: later,
+  rigidRank: later,
   /** Exact numbers of classes, before and modulo symmetry; null where they have not been counted. */
   classes: later,
   classOrbits: later,
@@ -68,6 +70,10 @@ const yesOrNo = z.enum(['yes', 'no']).optional()
 export const polytopeFilterSchema = z.object({
   ...ranges,
   favourable: yesOrNo,
+  /** Rigid divisors, components included, span all of H^{1,1}. */
+  rigidBasis: yesOrNo,
+  /** Some two-dimensional reflexive section is this one of the 16 polygons, F1 to F16. */
+  fibre: z.coerce.number().int().min(1).max(16).optional(),
   /** Made from a weight system. */
   weighted: yesOrNo,
   origin: z.enum(['bundled', 'imported']).optional(),

@@ -92,6 +92,17 @@ export class PolytopeRecord {
   @Column({ type: 'integer', nullable: true })
   splitDivisors!: number | null
 
+  /** Components of split divisors, all of them rigid, and the rank of all rigid classes together. */
+  @Column({ type: 'integer', nullable: true })
+  rigidComponents!: number | null
+
+  @Column({ type: 'integer', nullable: true })
+  rigidRank!: number | null
+
+  /** Types of the two-dimensional sections, each once, as ' 1 5 10 '. */
+  @Column({ type: 'varchar', nullable: true })
+  fibreTypes!: string | null
+
   /** log10 of an upper bound on the number of 2-face classes. */
   @Column({ type: 'real', nullable: true })
   classBound!: number | null

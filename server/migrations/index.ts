@@ -2,6 +2,7 @@ import { FirstSchema1796100000000 } from './1796100000000-firstSchema.ts'
 import { Certificates1796200100000 } from './1796200100000-certificates.ts'
 import { LibraryNumbers1796200200000 } from './1796200200000-libraryNumbers.ts'
 import { ExactClassCounts1796200200001 } from './1796200200001-exactClassCounts.ts'
+import { RigidAndFibres1796200200002 } from './1796200200002-rigidAndFibres.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 import { CandidateInvariants1796200400000 } from './1796200400000-candidateInvariants.ts'
 
@@ -11,6 +12,7 @@ export const migrations = [
   Certificates1796200100000,
   LibraryNumbers1796200200000,
   ExactClassCounts1796200200001,
+  RigidAndFibres1796200200002,
   ImportedCandidates1796200300000,
   CandidateInvariants1796200400000,
 ]

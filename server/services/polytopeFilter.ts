@@ -23,6 +23,12 @@ export function applyFilter(
   if (filter.favourable !== undefined) {
     query.andWhere('polytope.favourable = :favourable', { favourable: filter.favourable === 'yes' })
   }
+  if (filter.rigidBasis !== undefined) {
+    query.andWhere(`polytope.rigidRank ${filter.rigidBasis === 'yes' ? '=' : '<'} polytope.h11`)
+  }
+  if (filter.fibre !== undefined) {
+    query.andWhere('polytope.fibreTypes LIKE :fibre', { fibre: `% ${filter.fibre} %` })
+  }
   if (filter.weighted !== undefined) {
     query.andWhere(`polytope.weights IS ${filter.weighted === 'yes' ? 'NOT NULL' : 'NULL'}`)
   }

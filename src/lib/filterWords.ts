@@ -24,6 +24,13 @@ export function filterWords(filter: PolytopeFilter, collection?: string): Filter
       words: filter.favourable === 'yes' ? 'favourable' : 'not favourable',
       parts: ['favourable'],
     })
+  if (filter.rigidBasis)
+    found.push({
+      words: filter.rigidBasis === 'yes' ? 'rigid divisors span H11' : 'rigid divisors do not span H11',
+      parts: ['rigidBasis'],
+    })
+  if (filter.fibre !== undefined)
+    found.push({ words: `a section of type F${filter.fibre}`, parts: ['fibre'] })
   if (filter.weighted)
     found.push({
       words: filter.weighted === 'yes' ? 'made from weights' : 'not from weights',

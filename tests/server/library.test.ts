@@ -2,6 +2,7 @@ import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { IsNull } from 'typeorm'
 import { LibraryFile } from '../../server/entities/libraryFile.ts'
 import { PolytopeRecord } from '../../server/entities/polytope.ts'
+import { OBSERVABLES } from '../../scoring/observables/registry.ts'
 import { polytopeNumberNames } from '../../shared/polytopeNumbers.ts'
 import type { PolytopeRow } from '../../shared/polytopes.ts'
 import { bundledEntries, bundledFile, loadEntries } from './support/bundledSample.ts'
@@ -84,6 +85,33 @@ describe('the bundled library', () => {
         name,
       ).toBe(true)
     }
+  })
+
+  it('has a column or a question for every observable of the polytope', () => {
+    // The one place where the rule language and the library use different words for the same number.
+    const alias: Record<string, string> = { symmetry: 'symmetryOrder' }
+    const known = new Set<string>([...polytopeNumberNames, 'favourable', 'rigidBasis'])
+    const ofPolytopes = OBSERVABLES.filter(({ kind, stage }) => kind === 'scalar' && stage === 'polytope')
+    const names = ofPolytopes.map(({ name }) => name.replace(/^polytope\./, ''))
+    expect(names.length).toBeGreaterThan(20)
+    expect(names.filter((name) => !known.has(alias[name] ?? name))).toEqual([])
+  })
+
+  it('is filtered by the type of a fibre and by whether rigid divisors span', async () => {
+    // Weights (1,1,1,6,9): fibre of weights (1,2,3), F10. Its rigid divisor is the section alone.
+    const withF10 = await rows('fibre=10&h11Max=2&limit=500')
+    expect(withF10.some(({ h11, h21 }) => h11 === 2 && h21 === 272)).toBe(true)
+    expect(withF10.every(({ planarSections }) => (planarSections ?? 0) > 0)).toBe(true)
+    expect(withF10.length).toBeLessThan((await rows('planarSectionsMin=1&h11Max=2&limit=500')).length)
+    const [elliptic] = withF10.filter(({ h21 }) => h21 === 272)
+    expect(elliptic).toMatchObject({ rigidDivisors: 1, rigidRank: 1, rigidComponents: 0 })
+    const spanned = await rows('rigidBasis=yes&limit=500')
+    expect(spanned.length).toBeGreaterThan(0)
+    expect(spanned.every(({ rigidRank, h11 }) => rigidRank === h11)).toBe(true)
+    expect(await rows('rigidBasis=no&limit=500')).toHaveLength(
+      (await rows('limit=500')).length - spanned.length,
+    )
+    expect((await reader.get('/api/polytopes?fibre=17')).status).toBe(422)
   })
 
   it('is searched by name, by the beginning of a key, and by weights in any order', async () => {

@@ -3,11 +3,13 @@ import {
   divisorTopology,
   polytopeFromPoints,
   polytopeSummary as engineSummary,
+  reflexiveSections,
+  rigidDivisors,
   type Polytope,
 } from '../../../scoring/index.ts'
 
 /** Raised when a number is added or changes: rows of an older version are then computed anew. */
-export const summaryVersion = 2
+export const summaryVersion = 3
 
 /** What the library lists of a polytope beyond its facts, by column; the same in all coordinates. */
 export interface PolytopeSummary {
@@ -23,6 +25,10 @@ export interface PolytopeSummary {
   readonly nestedSections: number
   readonly rigidDivisors: number
   readonly splitDivisors: number
+  readonly rigidComponents: number
+  readonly rigidRank: number
+  /** Types of the two-dimensional sections, each once, as ' 1 5 10 '. */
+  readonly fibreTypes: string
   /** log10 of an upper bound on the number of classes. */
   readonly classBound: number
   /** Where the bound leaves but one class: it has been counted then. */
@@ -35,7 +41,9 @@ export interface PolytopeSummary {
 export function polytopeSummary(polytope: Polytope): PolytopeSummary {
   const summary = engineSummary(polytope)
   const { bound, log10 } = classCountBound(polytope)
-  const { rigid, components } = divisorTopology(polytope)
+  const { components } = divisorTopology(polytope)
+  const rigid = rigidDivisors(polytope)
+  const types = new Set(reflexiveSections(polytope).planar.map(({ type }) => type))
   return {
     edges: summary.edges,
     faces: summary.faces,
@@ -47,7 +55,10 @@ export function polytopeSummary(polytope: Polytope): PolytopeSummary {
     planarSections: summary.planarSections,
     solidSections: summary.solidSections,
     nestedSections: summary.nestedSections,
-    rigidDivisors: rigid.reduce((count, one) => count + one, 0),
+    rigidDivisors: rigid.prime,
+    rigidComponents: rigid.components,
+    rigidRank: rigid.rank,
+    fibreTypes: ` ${[...types].sort((a, b) => a - b).join(' ')} `,
     splitDivisors: components.reduce((count, of) => count + (of > 1 ? 1 : 0), 0),
     classBound: log10,
     ...(bound === 1n ? ({ classes: 1, classOrbits: 1, classDigits: '1' } as const) : {}),

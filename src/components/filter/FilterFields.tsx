@@ -52,6 +52,16 @@ export function FilterFields({ campaign, filter, onChange, onPoints }: FilterFie
         )),
       )}
       <Question name="favourable" label="Favourable" filter={filter} onChange={onChange} />
+      <Question name="rigidBasis" label="Rigid span H11" filter={filter} onChange={onChange} />
+      <Select
+        label="Fibre type"
+        value={filter.fibre ?? ''}
+        onChange={(event) => onChange({ fibre: event.target.value })}
+        options={[
+          ['', 'any'],
+          ...Array.from({ length: 16 }, (_, i): [string, string] => [String(i + 1), `F${i + 1}`]),
+        ]}
+      />
       <Question name="weighted" label="From weights" filter={filter} onChange={onChange} />
       <Select
         label="Origin"
@@ -82,7 +92,7 @@ function Question({
   filter,
   onChange,
 }: {
-  name: 'favourable' | 'weighted'
+  name: 'favourable' | 'weighted' | 'rigidBasis'
   label: string
   filter: PolytopeFilter
   onChange: (changes: FilterChanges) => void

@@ -52,6 +52,7 @@ export function Numbers({ polytope, campaign }: { polytope: PolytopeDetail; camp
           number('Order of the symmetry group', polytope.symmetryOrder),
           number('Rigid divisors', polytope.rigidDivisors),
           number('Divisors that split', polytope.splitDivisors),
+          number('Rank of rigid classes', polytope.rigidRank),
         ]}
       />
     </div>

@@ -2,6 +2,7 @@ import { afterEach, beforeEach, expect, it } from 'vitest'
 import { DataSource } from 'typeorm'
 import { FirstSchema1796100000000 } from '../../../server/migrations/1796100000000-firstSchema.ts'
 import { ExactClassCounts1796200200001 } from '../../../server/migrations/1796200200001-exactClassCounts.ts'
+import { RigidAndFibres1796200200002 } from '../../../server/migrations/1796200200002-rigidAndFibres.ts'
 import { LibraryNumbers1796200200000 } from '../../../server/migrations/1796200200000-libraryNumbers.ts'
 
 let source: DataSource
@@ -54,6 +55,12 @@ it('keeps the polytopes and candidates of before, undescribed, and can be undone
   expect(await source.query('SELECT classes, classDigits FROM polytope')).toEqual([
     { classes: 12, classDigits: '12' },
   ])
+  const rigid = new RigidAndFibres1796200200002()
+  await rigid.up(runner)
+  expect(await source.query('SELECT rigidRank, fibreTypes FROM polytope')).toEqual([
+    { rigidRank: null, fibreTypes: null },
+  ])
+  await rigid.down(runner)
   await digits.down(runner)
 
   await migration.down(runner)
