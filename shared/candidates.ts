@@ -47,6 +47,33 @@ export const candidateGeometrySchema = z.object({
       intersections: z.array(z.tuple([z.number().int(), z.number().int(), z.number().int(), z.number()])),
     })
     .nullable(),
+  /** Toric fibrations; `section` counts the sections of the polytope's page, planar and solid ones apart. */
+  fibrations: z.object({
+    planarSections: z.number().int(),
+    solidSections: z.number().int(),
+    k3: z.array(
+      z.object({
+        section: z.number().int(),
+        latticePoints: z.number().int(),
+        /** The fibre's class as [point, coefficient]. */
+        fibre: z.array(z.tuple([z.number().int(), z.number().int()])),
+      }),
+    ),
+    genusOne: z.array(
+      z.object({
+        section: z.number().int(),
+        type: z.number().int(),
+        /** Lattice points around the fibre polygon. */
+        outline: z.array(z.tuple([z.number().int(), z.number().int()])),
+        /** Primitive rays of the base's fan, counterclockwise. */
+        baseRays: z.array(z.tuple([z.number().int(), z.number().int()])),
+        /** Least number of points in which a toric divisor or a component of one meets the fibre; 1: a section. */
+        degree: z.number().int(),
+      }),
+    ),
+    /** Pairs [index in k3, index in genusOne] of fibres one inside the other. */
+    nested: z.array(z.tuple([z.number().int(), z.number().int()])),
+  }),
   curves: z.array(z.object({ row: z.array(z.tuple([z.number().int(), z.number()])), volume: z.number() })),
   reference: z.object({
     weights: z.array(z.number()),

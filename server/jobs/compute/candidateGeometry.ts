@@ -11,6 +11,7 @@ import {
   type IntersectionNumbers,
 } from '../../../scoring/index.ts'
 import type { CandidateGeometry, CandidateSpectra } from '../../../shared/candidates.ts'
+import { outlineOf } from './polytopeStructure.ts'
 
 export interface CandidateGeometryInput {
   readonly key: string
@@ -50,6 +51,7 @@ export function candidateGeometry(input: CandidateGeometryInput): ComputedGeomet
     secondChern: [...numbers.secondChern],
     divisors: divisorList(candidate, numbers),
     components: componentList(candidate, numbers),
+    fibrations: fibrationList(candidate),
     curves: curveList(candidate),
     reference: {
       weights: [...reference.weights],
@@ -122,6 +124,33 @@ function componentList(candidate: Candidate, numbers: IntersectionNumbers): Comp
     secondChern: [...full.secondChern],
     volumes: Array.from(pointOf, (p) => divisors[p] / polytope.components[p]),
     intersections: intersectionList(full),
+  }
+}
+
+function fibrationList(candidate: Candidate): ComputedGeometry['fibrations'] {
+  const { planar, solid } = candidate.sections()
+  const { k3, genusOne, nested } = candidate.fibrations()
+  return {
+    planarSections: planar.length,
+    solidSections: solid.length,
+    k3: k3.map(({ section, fibre }) => ({
+      section,
+      latticePoints: solid[section].points.length + 1,
+      fibre: Array.from(fibre, (coefficient, p): [number, number] => [p, coefficient]).filter(
+        ([, coefficient]) => coefficient !== 0,
+      ),
+    })),
+    genusOne: genusOne.map(({ section, baseRays, degree }) => ({
+      section,
+      type: planar[section].type,
+      outline: outlineOf(planar[section].turns),
+      baseRays: Array.from({ length: baseRays.length / 2 }, (_, ray): [number, number] => [
+        baseRays[2 * ray],
+        baseRays[2 * ray + 1],
+      ]),
+      degree,
+    })),
+    nested: nested.map(([outer, inner]): [number, number] => [outer, inner]),
   }
 }
 

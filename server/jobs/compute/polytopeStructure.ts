@@ -32,7 +32,7 @@ export function polytopeStructure({
 }
 
 /** Neighbours around a reflexive polygon form a basis, and v_{i+1} = a_i v_i - v_{i-1} gives all from the first two. */
-function outlineOf(turns: ArrayLike<number>): [number, number][] {
+export function outlineOf(turns: ArrayLike<number>): [number, number][] {
   const outline: [number, number][] = [
     [1, 0],
     [0, 1],

@@ -15,6 +15,7 @@ import { CertificateSection } from './CertificateSection.tsx'
 import { ComponentSection } from './ComponentSection.tsx'
 import { CurveTable } from './CurveTable.tsx'
 import { DivisorTable } from './DivisorTable.tsx'
+import { FibrationSection } from './FibrationSection.tsx'
 import { HighlightLine } from './HighlightLine.tsx'
 import { IntersectionTable } from './IntersectionTable.tsx'
 import { Provenance } from './Provenance.tsx'
@@ -160,6 +161,7 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
           <CurveTable curves={geometry.curves} />
         </Section>
       </div>
+      <FibrationSection fibrations={geometry.fibrations} />
       <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section
           title="Reference point"
