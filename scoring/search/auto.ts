@@ -1,13 +1,10 @@
 import { InputError } from '../errors.ts'
 import { annealing } from './annealing.ts'
 import { ArmRun, noCounts, type ArmCounts } from './armRun.ts'
-import type { Polytope } from '../geometry/polytope.ts'
-import { referenceClass } from '../geometry/twoFaceClass.ts'
-import { openExhaustive } from './exhaustive.ts'
+import { hopelessFactor, openExhaustive } from './exhaustive.ts'
 import { genetic } from './genetic.ts'
 import { compareMerits } from './merit.ts'
 import type { Chain, Method, Run } from './method.ts'
-import { exchangeCount } from './moves.ts'
 import { Scouting, type ScoutingState } from './scouting.ts'
 import type { Json } from './state.ts'
 import { tempering } from './tempering.ts'
@@ -54,17 +51,17 @@ interface Arm {
 }
 
 /**
- * Chooses by itself. It enumerates when the scope has no more classes than the budget: where no polytope has so
- * many diagonals to exchange that this is hopeless (2^diagonals above 64 times the budget), it begins to count, and
- * gives up when the budget or eight times as many classes before symmetry are passed. Else, on one polytope, it runs
- * a portfolio of annealing, genetic search and parallel tempering by successive halving: each round gets an
- * equal part of what is left of the budget, shared equally, and the better half of the arms goes on, by their best
- * candidates. On several polytopes a quarter of the budget at most goes to scouting (see `Scouting`), and
- * the best eight polytopes get an arm of annealing each. Everything is counted in evaluations and draws.
+ * Chooses by itself. It enumerates when the scope has no more classes than the budget: where no polytope's upper
+ * bound is above a thousand times the budget it counts, and gives up when the budget, or eight times as many classes
+ * before symmetry, are passed. Else, on one polytope, it runs a portfolio of annealing, genetic search and parallel
+ * tempering by successive halving: each round gets an equal part of what is left of the budget, shared equally, and
+ * the better half of the arms goes on, by their best candidates. On several polytopes a quarter of the budget at
+ * most goes to scouting (see `Scouting`), and the best eight polytopes get an arm of annealing each. Everything is
+ * counted in evaluations and draws.
  */
 export const auto: Method = {
   name: 'auto',
-  version: 1,
+  version: 2,
   description:
     'Enumerates when the scope has no more classes than the budget; else a portfolio of annealing, genetic search ' +
     'and tempering, on several polytopes after scouting, where the better half goes on after each round.',
@@ -100,7 +97,7 @@ class AutoChain implements Chain {
       }
       const armRun = new ArmRun(run, null, budget, counts)
       const all = run.settings.budget
-      const limits = { walked: 8 * all, isHopeless: (polytope: Polytope) => isHopeless(polytope, all) }
+      const limits = { walked: 8 * all, bound: hopelessFactor * all }
       this.enumeration = { run: armRun, chain: openExhaustive(armRun, chain, limits) }
     }
   }
@@ -216,9 +213,4 @@ function compareArms(a: Arm, b: Arm): number {
   if (a.run.best === null || b.run.best === null)
     return Number(a.run.best === null) - Number(b.run.best === null)
   return compareMerits(a.run.best, b.run.best)
-}
-
-/** True when a polytope is not worth counting: with d diagonals to exchange, 2^d is far above the budget. */
-function isHopeless(polytope: Polytope, budget: number): boolean {
-  return 2 ** exchangeCount(referenceClass(polytope)) > 64 * budget
 }

@@ -1,5 +1,6 @@
 import { InputError } from '../errors.ts'
 import { canonicalClass } from '../geometry/classKey.ts'
+import { classCountBound } from '../geometry/counting/classCountBound.ts'
 import type { Polytope } from '../geometry/polytope.ts'
 import { ReverseSearch, type WalkPosition } from '../geometry/reverseSearch.ts'
 import type { Chain, Method, Run } from './method.ts'
@@ -7,6 +8,12 @@ import type { Json } from './state.ts'
 
 /** Most classes before symmetry, over the whole scope, that are walked. */
 export const exhaustiveLimit = 200_000
+
+/**
+ * A count is not begun on a polytope whose upper bound, the product over its 2-faces, is so many times as large as
+ * what could be walked: on small polytopes the bound is 1 to 4 times the number.
+ */
+export const hopelessFactor = 1000
 
 /** Marks kept of the first walk, from which the islands' parts are found again. */
 const mostMarks = 64
@@ -54,15 +61,15 @@ export const exhaustive: Method = {
 export interface EnumerationLimits {
   /** Classes before symmetry, over the whole scope. */
   readonly walked: number
-  /** True for a polytope that is not even to be counted. */
-  readonly isHopeless?: (polytope: Polytope) => boolean
+  /** Upper bound on the classes of one polytope above which it is not even counted. */
+  readonly bound: number
 }
 
 /** An enumeration with other limits than its own. Beyond them `step` throws search.too-many-classes. */
 export function openExhaustive(
   run: Run,
   state: Json | null,
-  limits: EnumerationLimits = { walked: exhaustiveLimit },
+  limits: EnumerationLimits = { walked: exhaustiveLimit, bound: hopelessFactor * exhaustiveLimit },
 ): Chain {
   return new ExhaustiveChain(run, limits, state as unknown as ExhaustiveState | null)
 }
@@ -169,9 +176,7 @@ class ExhaustiveChain implements Chain {
     while (++this.polytope < run.polytopeCount) {
       if (!run.polytopePasses(this.polytope)) continue
       const { polytope } = run.form(this.polytope)
-      if (this.total === null && this.limits.isHopeless?.(polytope)) {
-        throw tooManyBeforeSymmetry(this.limits.walked)
-      }
+      if (this.total === null) requireCountable(polytope, this.limits)
       this.walk = new ReverseSearch(polytope)
       return true
     }
@@ -208,5 +213,19 @@ function tooManyBeforeSymmetry(limit: number): InputError {
       'choose another method.',
     'scope',
     limit,
+  )
+}
+
+/** @throws InputError search.too-many-classes */
+function requireCountable(polytope: Polytope, { bound }: EnumerationLimits): void {
+  const { log10 } = classCountBound(polytope)
+  if (log10 <= Math.log10(bound)) return
+  throw new InputError(
+    'search.too-many-classes',
+    `A polytope of the scope with h11 = ${polytope.hodge.h11} may have up to 10^${log10.toFixed(1)} classes, the ` +
+      `product over its 2-faces; above 10^${Math.log10(bound).toFixed(1)} they are not even counted. Narrow the ` +
+      'scope, or choose another method.',
+    'scope',
+    log10,
   )
 }

@@ -105,6 +105,11 @@ describe('exhaustive search', () => {
     }
   })
 
+  it('does not even count what is far too large', () => {
+    const large = problemOf(['w491-11-newton-1-1-12-28-42'], 'score volume', 'exhaustive', { budget: 10 })
+    expect(() => advance(large, startState(large, 1), Infinity)).toThrow(/h11 = 491 may have up to 10\^428/)
+  })
+
   it('keeps a small state', () => {
     const id = 'w12-30-newton-5-7-7-8-9'
     const problem = problemOf([id], 'score volume', 'exhaustive', { budget: 2000 })
