@@ -6,6 +6,12 @@ const index = int.nonnegative()
 const finite = z.number()
 const point = z.tuple([int, int, int, int])
 const key = z.string().regex(/^[0-9a-f]{32}$/, 'expected 32 hexadecimal digits')
+/** A reflexive polytope in four dimensions has at most 36 vertices and 680 lattice points (Kreuzer, Skarke). */
+const vertexLimit = 36
+const pointLimit = 680
+/** More than any of its triangulations has triangles, cones or intersection numbers. */
+const rowLimit = 20_000
+const perPoint = <T extends z.ZodType>(entry: T) => z.array(entry).max(pointLimit)
 const hash = z.string().regex(/^[0-9a-f]{64}$/, 'expected 64 hexadecimal digits')
 
 const score = z.strictObject({
@@ -31,25 +37,28 @@ const numbers = z.strictObject({
   hodge: z.strictObject({ h11: index, h21: index, euler: int }),
   favourable: z.boolean(),
   /** Per point: dimension of the carrier, components of the divisor, interior points of the dual face. */
-  carriers: z.array(index),
-  components: z.array(index),
-  dualInterior: z.array(index),
+  carriers: perPoint(index),
+  components: perPoint(index),
+  dualInterior: perPoint(index),
   /** Triangles of the 2-face class, ascending, lexicographic order. */
-  triangles: z.array(z.tuple([index, index, index])),
+  triangles: z.array(z.tuple([index, index, index])).max(rowLimit),
   /** Maximal cones of the fan that the heights give; null when they give none. */
-  simplices: z.array(z.tuple([index, index, index, index])).nullable(),
+  simplices: z
+    .array(z.tuple([index, index, index, index]))
+    .max(rowLimit)
+    .nullable(),
   /** Non-zero [i, j, k, kappa_ijk], i <= j <= k. */
-  intersections: z.array(z.tuple([index, index, index, int])),
-  c2: z.array(int),
+  intersections: z.array(z.tuple([index, index, index, int])).max(rowLimit),
+  c2: perPoint(int),
   /** Reference point at scale 1: J = sum of weights[k] D_k. */
-  reference: z.strictObject({ weights: z.array(finite), edgeCurvesSuffice: z.boolean() }),
-  volumes: z.strictObject({ total: finite, divisors: z.array(finite) }),
+  reference: z.strictObject({ weights: perPoint(finite), edgeCurvesSuffice: z.boolean() }),
+  volumes: z.strictObject({ total: finite, divisors: perPoint(finite) }),
   metric: z.strictObject({
     /** Largest eigenvalue as the fast road ranks by it. */
     top: finite,
-    divisorSpectrum: z.array(finite),
-    basis: z.array(index),
-    basisSpectrum: z.array(finite),
+    divisorSpectrum: perPoint(finite),
+    basis: perPoint(index),
+    basisSpectrum: perPoint(finite),
   }),
   /** What the rule says; null without a rule. */
   score: score.nullable(),
@@ -80,15 +89,15 @@ export const certificateSchema = z.strictObject({
   candidateKey: key,
   scoringHash: hash.nullable(),
   rule: z.string().nullable(),
-  vertices: z.array(point),
-  points: z.array(point),
-  heights: z.array(int),
+  vertices: z.array(point).max(vertexLimit),
+  points: perPoint(point),
+  heights: perPoint(int),
   /** True when the heights handed in tied somewhere and others in general position inside the class were taken. */
   heightsReplaced: z.boolean(),
   caution: z.string(),
   units: z.string(),
   passed: z.boolean(),
-  checks: z.array(check),
+  checks: z.array(check).max(rowLimit),
   notCertified: z.array(z.strictObject({ what: z.string(), why: z.string() })),
   numbers,
 })

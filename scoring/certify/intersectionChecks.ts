@@ -15,7 +15,7 @@ export interface CertifiedNumbers {
 /** Intersection numbers from the whole fan, and what follows from them. */
 export function checkIntersections(
   claims: Claims,
-  { reading, figures }: CertifiedPolytope,
+  { figures }: CertifiedPolytope,
   fan: CertifiedFan,
   checks: CheckList,
 ): CertifiedNumbers | undefined {
@@ -56,7 +56,7 @@ export function checkIntersections(
   const euler = distinct - secondChern.reduce((sum, value) => sum + value, 0)
   checks.run('euler', () =>
     equality(
-      reading.hodge.euler,
+      numbers.hodge.euler,
       euler,
       '2 (h11 - h21), against the sum of kappa_ijk over i < j < k less that of c2 . D_k.',
     ),

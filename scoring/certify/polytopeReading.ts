@@ -44,7 +44,6 @@ export function readPolytope(vertices: readonly Vector[]): PolytopeReading {
   const normals = facetNormals(vertices)
   const own = boundaryOf(vertices, normals)
   const dual = boundaryOf(normals, vertices)
-  checkVolume(own.volume)
   const h11 = hodgeNumber(own.boundary, normals)
   const h21 = hodgeNumber(dual.boundary, vertices)
   return {
@@ -63,6 +62,8 @@ export function readPolytope(vertices: readonly Vector[]): PolytopeReading {
 
 function boundaryOf(vertices: readonly Vector[], normals: readonly Vector[]) {
   const simplices = pullingTriangulation(vertices, normals)
+  const volume = simplices.reduce((sum, simplex) => sum + simplexVolume(vertices, simplex), 0)
+  checkVolume(volume)
   const dimensions = new Map<string, number>()
   const boundary = boundaryLatticePoints(vertices, simplices).map((point): BoundaryPoint => {
     const through = [...normals.keys()].filter((a) => pairing(normals[a], point) === -1)
@@ -71,7 +72,6 @@ function boundaryOf(vertices: readonly Vector[], normals: readonly Vector[]) {
     dimensions.set(name, dimension)
     return { point, through, dimension }
   })
-  const volume = simplices.reduce((sum, simplex) => sum + simplexVolume(vertices, simplex), 0)
   return { boundary, volume }
 }
 

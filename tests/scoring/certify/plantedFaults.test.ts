@@ -3,6 +3,7 @@ import { certify } from '../../../scoring/certificates/certify.ts'
 import { certifiedNames, reservation } from '../../../scoring/certificates/notCertified.ts'
 import { recheck } from '../../../scoring/certificates/recheck.ts'
 import type { Certificate } from '../../../scoring/certificates/schema.ts'
+import { facetsAreGeneric } from '../../../scoring/certify/facetTriangulation.ts'
 import { examineFan } from '../../../scoring/certify/fan.ts'
 import { liftedPoints } from '../../../scoring/certify/liftedSimplex.ts'
 import { readPolytope } from '../../../scoring/certify/polytopeReading.ts'
@@ -11,7 +12,7 @@ import { canonicalClass } from '../../../scoring/geometry/classKey.ts'
 import { flip, flippableEdges } from '../../../scoring/geometry/flips.ts'
 import { normalForm } from '../../../scoring/geometry/normalForm.ts'
 import { isRegular } from '../../../scoring/geometry/regularity.ts'
-import { referenceClass, type TwoFaceClass } from '../../../scoring/geometry/twoFaceClass.ts'
+import { fineClass, referenceClass, type TwoFaceClass } from '../../../scoring/geometry/twoFaceClass.ts'
 import { buildCandidate } from '../../../scoring/observables/buildCandidate.ts'
 import { OBSERVABLES } from '../../../scoring/observables/registry.ts'
 import { largePolytope } from '../../reference/bundledPolytopes.ts'
@@ -74,6 +75,24 @@ describe('a certificate', () => {
     const { passed, checks } = recheck(fault)
     expect(passed).toBe(false)
     expect(failed(checks)).toEqual(['intersection-numbers'])
+  })
+})
+
+describe('heights that tie', () => {
+  it('are replaced by others in general position inside the class', () => {
+    const form = normalForm(sample.polytope)
+    // The heights of one class, rounded until some circuit of a facet or a 2-face is zero.
+    const { heights } = request(sample, null, 3)
+    const coarse = [...Array(20).keys()]
+      .map((n) => Array.from(heights, (height) => Math.round(height / 2 ** (21 - n)) * 2 ** (21 - n)))
+      .findLast(
+        (list) => fineClass(form.polytope, list) && !facetsAreGeneric(sample.vertices, sample.points, list),
+      )
+    const cls = coarse && fineClass(form.polytope, coarse)
+    if (!cls) throw new Error('none ties')
+    const candidateKey = canonicalClass(form, cls).key
+    const { passed, heightsReplaced } = certify({ ...request(sample, null), heights: coarse, candidateKey })
+    expect([passed, heightsReplaced, good.heightsReplaced]).toEqual([true, true, false])
   })
 })
 
