@@ -14,6 +14,9 @@ import { readPolytope } from './polytopes.ts'
 /** Candidates sent to the interactive thread at a time; it answers for as many as a piece of its time allows. */
 const stretchLength = 100
 
+/** Names of a text may be of any length. */
+const nameLimit = 200
+
 export interface CandidateText {
   readonly text: string
   /** Name of the file, or what the person calls the text. */
@@ -64,14 +67,15 @@ export async function importCandidates(
           continue
         }
         const number = candidates.length === 1 ? '' : ` ${from + i + 1}`
-        const wanted = given.name ?? (name ? `${name}${number}` : null)
+        const wanted = (given.name?.trim() || (name ? `${name}${number}` : '')).slice(0, nameLimit)
         imported.push(await store(manager, importer, given, answer.candidate, { wanted, source }))
       }
     })
     from += answers.length
+    // A long import can be left: the list fills while it runs.
+    streams.toCampaign(importer.campaignId, { kind: 'changed', what: 'imports' })
   }
   problems.sort((a, b) => a.line - b.line)
-  streams.toCampaign(importer.campaignId, { kind: 'changed', what: 'imports' })
   jobs.invariants.wake()
   return { format, question: null, imported, problems, skipped }
 }
@@ -104,13 +108,13 @@ async function store(
   importer: Importer,
   given: GivenCandidate,
   { key, heights, polytope }: NonNullable<StorableOrProblem['candidate']>,
-  { wanted, source }: { readonly wanted: string | null; readonly source: string },
+  { wanted, source }: { readonly wanted: string; readonly source: string },
 ): Promise<Imported> {
   const { campaignId, authorId } = importer
   const stored = await storePolytope(manager, importer, polytope, undefined, null)
   const own = await manager.findOneBy(ImportedCandidate, { campaignId, candidateKey: key })
   const found = own === null && (await foundInCampaign(manager, campaignId, key))
-  const name = own?.name ?? wanted ?? `${stored.name}, ${key.slice(0, 6)}`
+  const name = (own?.name ?? wanted) || `${stored.name}, ${key.slice(0, 6)}`
   if (own === null) {
     const record = { key, polytopeKey: polytope.key, heights }
     await manager.createQueryBuilder().insert().into(CandidateRecord).values(record).orIgnore().execute()

@@ -8,6 +8,9 @@ import { bundledEntries, loadEntries } from './support/bundledSample.ts'
 import { openTestServer, type Agent, type TestServer } from './support/testServer.ts'
 
 let server: TestServer
+/** Another team's server, which takes twelve candidates at a time. */
+let elsewhere: TestServer
+let outsider: Agent
 let lead: Agent
 let investigator: Agent
 let reviewer: Agent
@@ -15,6 +18,8 @@ let stranger: Agent
 
 beforeAll(async () => {
   server = await openTestServer()
+  elsewhere = await openTestServer({ environment: { IMPORT_LIMIT: '12' } })
+  outsider = await elsewhere.signIn('lead')
   lead = await server.signIn('lead')
   investigator = await server.signIn('investigator')
   reviewer = await server.signIn('reviewer')
@@ -24,7 +29,10 @@ beforeAll(async () => {
     bundledEntries('small', (id) => id.startsWith('r1-')),
   )
 })
-afterAll(() => server.close())
+afterAll(async () => {
+  await server.close()
+  await elsewhere.close()
+})
 
 const path = (rest = '') => `/api/campaigns/${server.campaignId}${rest}`
 const importText = async (text: string, options: object = {}): Promise<CandidateImportReport> => {
@@ -159,13 +167,10 @@ describe('imported candidates', () => {
   it('must be there, and not too many', async () => {
     const none = await investigator.post(path('/imported-candidates')).send({ text: ' \n' })
     expect([none.status, none.body.code]).toEqual([422, 'no-candidates'])
-    const small = await openTestServer({ environment: { IMPORT_LIMIT: '2' } })
-    const agent = await small.signIn('lead')
-    const many = await agent
-      .post(`/api/campaigns/${small.campaignId}/imported-candidates`)
-      .send({ text: `${quintic}\n\n0 0 0 0 0\n\n1 0 0 0 0\n\n2 0 0 0 0` })
-    expect([many.status, many.body.code, many.body.found]).toEqual([422, 'too-many-candidates', 3])
-    await small.close()
+    const many = await outsider
+      .post(`/api/campaigns/${elsewhere.campaignId}/imported-candidates`)
+      .send({ text: `${quintic}\n\n${'0 0 0 0 0\n\n'.repeat(13)}` })
+    expect([many.status, many.body.code, many.body.found]).toEqual([422, 'too-many-candidates', 13])
   })
 })
 
@@ -236,18 +241,13 @@ describe('a shortlist of imported candidates', () => {
     const query = `/candidates/${candidateKey}/score?version=${versionId}`
     const { body } = await reviewer.get(path(query)).expect(200)
     expect(body).toMatchObject({ targetName: 'Volumes', targetVersionId: versionId, outcome })
-    const other = await openTestServer()
-    const agent = await other.signIn('lead')
-    await agent.get(`/api/campaigns/${other.campaignId}${query}`).expect(404)
-    await other.close()
+    await outsider.get(`/api/campaigns/${elsewhere.campaignId}${query}`).expect(404)
     await reviewer.get(path(`/candidates/${candidateKey}/score?version=none`)).expect(404)
   })
 
   it('is exported with all that another campaign needs to import it', async () => {
     const { text } = await reviewer.get(path(`/shortlists/${list.id}/export.json`)).expect(200)
-    const elsewhere = await openTestServer()
-    const agent = await elsewhere.signIn('lead')
-    const { body } = await agent
+    const { body } = await outsider
       .post(`/api/campaigns/${elsewhere.campaignId}/imported-candidates`)
       .send({ text })
       .expect(201)
@@ -255,7 +255,6 @@ describe('a shortlist of imported candidates', () => {
     expect([problems, format]).toEqual([[], 'tessellary.shortlist/1, JSON'])
     expect(imported.map(({ key }) => key)).toEqual(list.rows.map(({ candidateKey }) => candidateKey))
     expect(imported.every(({ known }) => known === null)).toBe(true)
-    await elsewhere.close()
   })
 
   it('survives that an import is taken off the list', async () => {

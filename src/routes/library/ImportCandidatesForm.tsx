@@ -89,6 +89,12 @@ export function ImportCandidatesForm({ campaign, onClose }: ImportFormProps) {
         <OrientationQuestion question={answer.question} busy={send.isPending} onAnswer={submit} />
       )}
       {send.isError && <Failure title="Nothing was imported." error={send.error} />}
+      {send.isPending && (
+        <p role="status" className="text-soft">
+          Triangulations are being checked. A long import may be left: the list of imported candidates fills
+          as it goes, but this report is then not shown.
+        </p>
+      )}
       {!answer?.question && (
         <Button
           type="submit"

@@ -1,5 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
+import { certify } from '../../../scoring/index.ts'
 import { evaluateInput } from '../../../scoring/evaluation.ts'
 import { circuits, isGeneric } from '../../../scoring/geometry/circuits.ts'
 import { isFacetGeneric } from '../../../scoring/geometry/fans/facetGenericHeights.ts'
@@ -100,18 +101,6 @@ describe('a candidate', () => {
       ]),
     ],
     [
-      'a certificate',
-      JSON.stringify({
-        schema: 'tessellary.certificate/1',
-        polytopeKey: evaluated.polytopeKey,
-        candidateKey: evaluated.classKey,
-        vertices: points,
-        points,
-        heights: evaluated.heights,
-        passed: true,
-      }),
-    ],
-    [
       'our own list',
       JSON.stringify(
         {
@@ -132,6 +121,18 @@ describe('a candidate', () => {
   ]
   it.each(same)('is read from %s', (_, text) => {
     expect(keysOf(text)).toEqual([evaluated.classKey])
+  })
+
+  it('is read from a certificate', () => {
+    const { form, candidateKey, heights } = (() => {
+      const { placed } = placeCandidate(readCandidates(`${octic}\n\n3 1 4 1 5 0`).candidates[0])
+      if (!placed) throw new Error('not placed')
+      return placed
+    })()
+    const { vertexCount, points: flat } = form.polytope
+    const vertices = Array.from({ length: vertexCount }, (_, v) => [...flat.subarray(4 * v, 4 * v + 4)])
+    const certificate = certify({ vertices, heights: [...heights], candidateKey, rule: null })
+    expect(keysOf(JSON.stringify(certificate, null, 1))).toEqual([candidateKey])
   })
 
   it('is stored with heights that give its canonical class and tie nowhere, facets included', () => {
