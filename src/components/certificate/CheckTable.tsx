@@ -33,10 +33,11 @@ export function CheckTable({ checks }: { checks: CertificateReport['checks'] }) 
           <tr>
             <Th>Comparison</Th>
             <Th>Result</Th>
-            <Th numeric>Fast road</Th>
-            <Th numeric>Independent road</Th>
-            <Th numeric>Tolerance</Th>
-            <Th numeric>Time</Th>
+            {['Fast road', 'Independent road', 'Tolerance', 'Time'].map((name) => (
+              <Th key={name} numeric className={wide}>
+                {name}
+              </Th>
+            ))}
           </tr>
         </thead>
         {order.map((group) => (
@@ -62,31 +63,41 @@ export function CheckTable({ checks }: { checks: CertificateReport['checks'] }) 
   )
 }
 
+/** On narrow screens the numbers stand under the title instead. */
+const wide = 'hidden sm:table-cell print:table-cell'
 const cell = 'border-b px-2 py-1 align-top last:pr-0'
 
 function Check({ check }: { check: CertificateCheck }) {
   const { word, look } = results[check.result]
+  const tolerance =
+    check.tolerance === null ? (
+      <span className="text-soft">exact</span>
+    ) : (
+      <Num value={check.tolerance} digits={2} />
+    )
+  const time = duration(check.milliseconds)
   return (
-    <tr id={`check-${check.id}`}>
-      <th scope="row" className="min-w-56 border-b py-1 pr-2 text-left font-normal">
+    <tr id={`check-${check.id}`} className="scroll-mt-24">
+      <th scope="row" className="border-b py-1 pr-2 text-left font-normal sm:min-w-56">
         {check.title}
+        <span className="my-0.5 grid grid-cols-[max-content_minmax(0,1fr)] gap-x-2 sm:hidden print:hidden">
+          <span className="text-soft">fast</span> <Value value={check.fast} />
+          <span className="text-soft">independent</span> <Value value={check.independent} />
+          <span className="col-span-2 text-xs text-soft">
+            {tolerance}, {time}
+          </span>
+        </span>
         {check.note !== '' && <span className="block text-xs text-soft">{check.note}</span>}
       </th>
       <td className={`${cell} whitespace-nowrap ${look}`}>{word}</td>
-      <td className={`${cell} text-right`}>
+      <td className={`${cell} ${wide} text-right`}>
         <Value value={check.fast} />
       </td>
-      <td className={`${cell} text-right`}>
+      <td className={`${cell} ${wide} text-right`}>
         <Value value={check.independent} />
       </td>
-      <td className={`${cell} text-right whitespace-nowrap`}>
-        {check.tolerance === null ? (
-          <span className="text-soft">exact</span>
-        ) : (
-          <Num value={check.tolerance} digits={2} />
-        )}
-      </td>
-      <td className={`${cell} text-right whitespace-nowrap tabular-nums`}>{duration(check.milliseconds)}</td>
+      <td className={`${cell} ${wide} text-right whitespace-nowrap`}>{tolerance}</td>
+      <td className={`${cell} ${wide} text-right whitespace-nowrap tabular-nums`}>{time}</td>
     </tr>
   )
 }
@@ -95,9 +106,13 @@ function Check({ check }: { check: CertificateCheck }) {
 function Value({ value }: { value: CertificateCheck['fast'] }) {
   if (value === null) return <span className="text-soft">–</span>
   if (typeof value === 'number') return <Num value={value} digits={12} />
+  const hash = /^[0-9a-f]{16,}$/.test(value)
   return (
-    <span data-raw={value} className="inline-block max-w-72 font-mono text-xs break-words">
-      {value}
+    <span
+      data-raw={value}
+      className={hash ? 'inline-block w-36 font-mono text-xs break-all' : 'break-words tabular-nums'}
+    >
+      {/^-\d/.test(value) ? value.replace('-', '−') : value}
     </span>
   )
 }

@@ -1,4 +1,4 @@
-import { type ReactNode } from 'react'
+import { useState, type ReactNode } from 'react'
 import { Link } from 'react-router-dom'
 import { useQuery } from '@tanstack/react-query'
 import {
@@ -9,6 +9,7 @@ import {
 } from '../../../shared/relatives.ts'
 import { relativesQuery } from '../../api/relatives.ts'
 import { ClassThumb } from '../../components/geometry/ClassThumb.tsx'
+import { Button } from '../../components/ui/Button.tsx'
 import { Facts, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
@@ -105,6 +106,9 @@ function Relatives({ campaign, relatives }: { campaign: string | null; relatives
   )
 }
 
+/** Rows that are shown at once, beside those with verdicts. */
+const firstRows = 8
+
 function RelativeTable<Row extends CandidateRelatives['nearDuplicates' | 'equivalents'][number]>({
   label,
   campaign,
@@ -118,46 +122,56 @@ function RelativeTable<Row extends CandidateRelatives['nearDuplicates' | 'equiva
   columns: readonly (readonly [name: string, numeric: boolean])[]
   cells: (row: Row) => readonly ReactNode[]
 }) {
+  const [all, setAll] = useState(false)
+  const judged = rows.filter((row, at) => at < firstRows || row.verdicts.length > 0)
+  const shown = all ? rows : judged
   return (
-    <Table label={label}>
-      <thead>
-        <tr>
-          <Th>Candidate</Th>
-          {columns.map(([name, numeric]) => (
-            <Th key={name} numeric={numeric}>
-              {name}
-            </Th>
-          ))}
-          <Th>Largest 2-faces</Th>
-          <Th>Verdicts</Th>
-        </tr>
-      </thead>
-      <tbody>
-        {rows.map((row) => (
-          <tr key={row.key}>
-            <Td>
-              <Link
-                to={`/candidates/${row.key}${campaign ? `?campaign=${campaign}` : ''}`}
-                className="font-mono text-xs text-action hover:underline"
-              >
-                {row.key.slice(0, 10)}
-              </Link>
-            </Td>
-            {cells(row).map((content, at) => (
-              <Td key={columns[at]?.[0]} numeric={columns[at]?.[1]}>
-                {content}
-              </Td>
+    <>
+      <Table label={label}>
+        <thead>
+          <tr>
+            <Th>Candidate</Th>
+            {columns.map(([name, numeric]) => (
+              <Th key={name} numeric={numeric}>
+                {name}
+              </Th>
             ))}
-            <Td>
-              <ClassThumb candidate={row.key} />
-            </Td>
-            <Td>
-              <EarlierVerdicts verdicts={row.verdicts} />
-            </Td>
+            <Th>Largest 2-faces</Th>
+            <Th>Verdicts</Th>
           </tr>
-        ))}
-      </tbody>
-    </Table>
+        </thead>
+        <tbody>
+          {shown.map((row) => (
+            <tr key={row.key}>
+              <Td>
+                <Link
+                  to={`/candidates/${row.key}${campaign ? `?campaign=${campaign}` : ''}`}
+                  className="font-mono text-xs text-action hover:underline"
+                >
+                  {row.key.slice(0, 10)}
+                </Link>
+              </Td>
+              {cells(row).map((content, at) => (
+                <Td key={columns[at]?.[0]} numeric={columns[at]?.[1]}>
+                  {content}
+                </Td>
+              ))}
+              <Td>
+                <ClassThumb candidate={row.key} />
+              </Td>
+              <Td>
+                <EarlierVerdicts verdicts={row.verdicts} />
+              </Td>
+            </tr>
+          ))}
+        </tbody>
+      </Table>
+      {rows.length > shown.length && (
+        <Button kind="quiet" onClick={() => setAll(true)}>
+          Show all {rows.length}
+        </Button>
+      )}
+    </>
   )
 }
 

@@ -27,7 +27,7 @@ await jobs.certifications.start()
 if (!(await source.manager.exists(Certification))) {
   await loadEntries(
     server,
-    bundledEntries('small', (id) => /^r4-001/.test(id)),
+    bundledEntries('small', (id) => /^r4-00[0-4]/.test(id)),
   )
   const author = await addAccount(server, 'author')
   const { id } = await createCampaign(context, author, { name: 'Hunt', description: '' })
