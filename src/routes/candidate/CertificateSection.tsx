@@ -1,4 +1,4 @@
-import { useState } from 'react'
+import { useState, type ReactNode } from 'react'
 import { useQuery } from '@tanstack/react-query'
 import { BadgeCheck, Download } from 'lucide-react'
 import { toast } from 'sonner'
@@ -11,10 +11,12 @@ import {
   useRequestCertification,
 } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
+import { useTargets } from '../../api/targets.ts'
 import { CheckTable } from '../../components/certificate/CheckTable.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
+import { Select } from '../../components/ui/Field.tsx'
 import { Section } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { counted, formatDuration, formatTime } from '../../lib/numbers.ts'
@@ -82,7 +84,11 @@ function Certificates({
     <>
       {campaign && <Waiting campaign={campaign} appearance={appearance} known={known} />}
       {shown ? (
-        <Certificate candidate={candidate} certificate={shown} counts={shown.id === current?.id} />
+        <Certificate
+          candidate={candidate}
+          certificate={shown}
+          counts={!appearance || shown.id === current?.id}
+        />
       ) : (
         known.waiting.length === 0 && (
           <Empty title="No certificate yet.">
@@ -243,49 +249,83 @@ function Waiting({
   )
 }
 
-function CertifyButtons({
-  campaign,
-  candidate,
-  appearance,
-  known,
-}: {
+interface CertifyProps {
   campaign: string
   candidate: string
-  appearance?: Appearance
   known?: CandidateCertificates
-}) {
-  const barred = useBarred('certificates.run')
-  const ask = useRequestCertification(campaign)
-  const certify = (targetVersionId: string | null, again: boolean) =>
-    ask.mutate(
-      { targetVersionId, candidateKeys: [candidate], again },
-      { onError: (error) => void toast.error(explain(error)) },
-    )
-  const waits = (targetVersionId: string | null) =>
-    known?.waiting.some((one) => one.targetVersionId === targetVersionId) && 'It is being certified already.'
+}
+
+/** For the scoring in hand; for a candidate in no shortlist, for a target one chooses; or for the geometry alone. */
+function CertifyButtons({ appearance, ...props }: CertifyProps & { appearance?: Appearance }) {
   const hasScoring = appearance ? appearance.certificate.id !== null : false
-  const hasGeometry = known?.certificates.some(({ scoring }) => scoring === null) ?? false
+  const hasGeometry = props.known?.certificates.some(({ scoring }) => scoring === null) ?? false
   return (
-    <span className="flex flex-wrap gap-2 print:hidden">
-      {appearance && (
-        <Button
-          unavailable={barred || waits(appearance.targetVersionId)}
-          busy={ask.isPending}
-          onClick={() => certify(appearance.targetVersionId, hasScoring)}
-        >
-          <BadgeCheck size={14} aria-hidden />
+    <span className="flex flex-wrap items-end gap-2 print:hidden">
+      {appearance ? (
+        <CertifyButton {...props} targetVersionId={appearance.targetVersionId} again={hasScoring}>
           {hasScoring ? 'Certify again' : `Certify for ${appearance.targetName} v${appearance.targetVersion}`}
-        </Button>
+        </CertifyButton>
+      ) : (
+        <ForTarget {...props} />
       )}
       {!hasScoring && (
-        <Button
-          unavailable={barred || waits(null)}
-          busy={ask.isPending}
-          onClick={() => certify(null, hasGeometry)}
-        >
+        <CertifyButton {...props} targetVersionId={null} again={hasGeometry}>
           {hasGeometry ? 'Certify the geometry again' : 'Certify the geometry alone'}
-        </Button>
+        </CertifyButton>
       )}
     </span>
+  )
+}
+
+function ForTarget(props: CertifyProps) {
+  const targets = useTargets(props.campaign)
+  const [chosen, setChosen] = useState<string | null>(null)
+  const target = targets.data?.find(({ id }) => id === chosen) ?? targets.data?.[0]
+  if (!targets.data || !target) return null
+  const before = props.known?.certificates.some(
+    ({ scoring }) => scoring?.targetVersionId === target.latest.id,
+  )
+  return (
+    <>
+      <Select
+        label="For the target"
+        value={target.id}
+        onChange={(event) => setChosen(event.target.value)}
+        options={targets.data.map(
+          ({ id, name, latest }) => [id, `${name}, version ${latest.number}`] as const,
+        )}
+      />
+      <CertifyButton {...props} targetVersionId={target.latest.id} again={before ?? false}>
+        {before ? 'Certify again' : 'Certify'}
+      </CertifyButton>
+    </>
+  )
+}
+
+function CertifyButton({
+  campaign,
+  candidate,
+  known,
+  targetVersionId,
+  again,
+  children,
+}: CertifyProps & { targetVersionId: string | null; again: boolean; children: ReactNode }) {
+  const barred = useBarred('certificates.run')
+  const ask = useRequestCertification(campaign)
+  const waits = known?.waiting.some((one) => one.targetVersionId === targetVersionId) ?? false
+  return (
+    <Button
+      unavailable={barred || (waits && 'It is being certified already.')}
+      busy={ask.isPending}
+      onClick={() =>
+        ask.mutate(
+          { targetVersionId, candidateKeys: [candidate], again },
+          { onError: (error) => void toast.error(explain(error)) },
+        )
+      }
+    >
+      <BadgeCheck size={14} aria-hidden />
+      {children}
+    </Button>
   )
 }
