@@ -24,7 +24,7 @@ export function AgainstNull({ search }: { search: SearchDetail }) {
             found ? <SearchHits key="v" rate={found} isExact={isExact} /> : search.ownHitLine ? '–' : noLine,
           ],
           ['Over the null’s', compared ? ratioText(compared, isExact) : '–'],
-          ['Best score among null candidates', rarityText(search)],
+          ['Best score', rarityText(search)],
         ]}
       />
       {search.ownHitLine && isEasy(summary.hit) && (
