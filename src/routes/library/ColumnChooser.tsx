@@ -1,5 +1,5 @@
-import { DropdownMenu } from 'radix-ui'
-import { Check, Columns3 } from 'lucide-react'
+import { Popover } from 'radix-ui'
+import { Columns3 } from 'lucide-react'
 import {
   numberGroups,
   polytopeNumberNames,
@@ -20,54 +20,47 @@ export function ColumnChooser({
   const toggle = (name: PolytopeNumberName, on: boolean) =>
     onColumns(polytopeNumberNames.filter((other) => (other === name ? on : columns.includes(other))))
   return (
-    <DropdownMenu.Root modal={false}>
-      <DropdownMenu.Trigger asChild>
+    <Popover.Root>
+      <Popover.Trigger asChild>
         <Button kind="quiet">
           <Columns3 size={15} aria-hidden />
           Columns
         </Button>
-      </DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
-        <DropdownMenu.Content
+      </Popover.Trigger>
+      <Popover.Portal>
+        <Popover.Content
+          aria-label="Columns of the table"
           align="end"
           sideOffset={4}
           collisionPadding={8}
-          className="z-40 max-h-(--radix-dropdown-menu-content-available-height) w-64 overflow-y-auto rounded border border-edge bg-sheet py-1 shadow-lifted"
+          className="z-40 max-h-(--radix-popover-content-available-height) w-64 overflow-y-auto rounded border border-edge bg-sheet px-3 py-1 shadow-lifted"
         >
           {numberGroups.map((group) => (
-            <DropdownMenu.Group key={group}>
-              <DropdownMenu.Label className="px-3 pt-2 pb-1 text-xs text-soft">{group}</DropdownMenu.Label>
+            <fieldset key={group}>
+              <legend className="pt-2 pb-1 text-xs text-soft">{group}</legend>
               {polytopeNumberNames
                 .filter((name) => polytopeNumbers[name].group === group)
                 .map((name) => (
-                  <DropdownMenu.CheckboxItem
+                  <label
                     key={name}
-                    checked={columns.includes(name)}
-                    onCheckedChange={(on) => toggle(name, on)}
-                    // Several are chosen in a row.
-                    onSelect={(event) => event.preventDefault()}
                     title={polytopeNumbers[name].description}
-                    className="flex min-h-7 items-center gap-2 px-3 outline-none data-highlighted:bg-action-wash"
+                    className="flex min-h-7 items-center gap-2 hover:bg-action-wash"
                   >
-                    <span className="inline-flex size-4 items-center justify-center border border-edge">
-                      <DropdownMenu.ItemIndicator>
-                        <Check size={13} aria-hidden className="text-action" />
-                      </DropdownMenu.ItemIndicator>
-                    </span>
+                    <input
+                      type="checkbox"
+                      checked={columns.includes(name)}
+                      onChange={(event) => toggle(name, event.target.checked)}
+                    />
                     {polytopeNumbers[name].label}
-                  </DropdownMenu.CheckboxItem>
+                  </label>
                 ))}
-            </DropdownMenu.Group>
+            </fieldset>
           ))}
-          <DropdownMenu.Separator className="my-1 border-t" />
-          <DropdownMenu.Item
-            onSelect={() => onColumns(null)}
-            className="flex min-h-8 items-center px-3 text-action outline-none data-highlighted:bg-action-wash"
-          >
+          <Button kind="quiet" className="my-1" onClick={() => onColumns(null)}>
             The usual columns
-          </DropdownMenu.Item>
-        </DropdownMenu.Content>
-      </DropdownMenu.Portal>
-    </DropdownMenu.Root>
+          </Button>
+        </Popover.Content>
+      </Popover.Portal>
+    </Popover.Root>
   )
 }
