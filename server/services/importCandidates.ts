@@ -5,7 +5,7 @@ import type { ServerContext } from '../context.ts'
 import { CandidateRecord } from '../entities/candidate.ts'
 import { ImportedCandidate } from '../entities/importedCandidate.ts'
 import type { StorableOrProblem } from '../jobs/compute/importCandidates.ts'
-import { unprocessable } from '../problems.ts'
+import { Refusal, unprocessable } from '../problems.ts'
 import { readCampaignCandidate } from './candidates.ts'
 import { earlierVerdicts, foundInCampaign } from './importedCandidates.ts'
 import { refuseTooMany, storePolytope, type Importer } from './imports.ts'
@@ -88,7 +88,7 @@ async function resolved(
 ): Promise<GivenCandidate> {
   const { polytope, triangulation, claims } = given
   if (triangulation.kind === 'address' && claims.candidateKey !== undefined) {
-    const known = await readCampaignCandidate(manager, campaignId, claims.candidateKey).catch(() => null)
+    const known = await unlessUnknown(readCampaignCandidate(manager, campaignId, claims.candidateKey))
     if (known?.polytope) {
       return {
         ...given,
@@ -99,8 +99,18 @@ async function resolved(
     return given
   }
   if (polytope.kind !== 'key' || polytope.vertices !== undefined) return given
-  const known = await readPolytope(manager, { campaignId }, polytope.key).catch(() => null)
+  const known = await unlessUnknown(readPolytope(manager, { campaignId }, polytope.key))
   return known ? { ...given, polytope: { ...polytope, vertices: known.polytope.coordinates } } : given
+}
+
+/** Null for what does not exist, or not for this campaign: the report names it. */
+async function unlessUnknown<T>(reading: Promise<T>): Promise<T | null> {
+  try {
+    return await reading
+  } catch (error) {
+    if (error instanceof Refusal && error.status === 404) return null
+    throw error
+  }
 }
 
 async function store(
