@@ -48,7 +48,7 @@ export function nonNegativeCombination(rows: readonly Condition[], w: ArrayLike<
     used.push(best)
     y.push(0)
     for (;;) {
-      const target = gram.solve(used.map((r) => valueAt(rows[r], w)))
+      const target = leastSquares()
       if (target.every((value) => value > 0)) {
         y = target
         break
@@ -74,6 +74,15 @@ export function nonNegativeCombination(rows: readonly Condition[], w: ArrayLike<
     multipliers: y,
     residual: scale === 0 ? 0 : largest(residual) / scale,
     leastNormPoint: leastNorm(),
+  }
+
+  /** Multipliers of the rows in use without regard to signs, with a round of refinement. */
+  function leastSquares(): number[] {
+    const first = gram.solve(used.map((r) => valueAt(rows[r], w)))
+    const rest = Float64Array.from(w)
+    used.forEach((r, n) => subtract(rest, rows[r], first[n]))
+    const second = gram.solve(used.map((r) => valueAt(rows[r], rest)))
+    return first.map((value, n) => value + second[n])
   }
 
   /** A_P^T (A_P A_P^T)^-1 1, with two rounds of refinement. */
@@ -118,7 +127,7 @@ class GramFactor {
       rest -= next[n] * next[n]
     }
     for (const p of row.points) dense[p] = 0
-    if (!(rest > 1e-12 * own)) return false
+    if (!(rest > 1e-13 * own)) return false
     next[rows.length] = Math.sqrt(rest)
     rows.push(row)
     lower.push(next)
