@@ -4,7 +4,7 @@ import type { CubicForm, ToricPart } from './cubicForm.ts'
 export interface MeasuredLength {
   /** s^T G s. */
   readonly value: number
-  /** Difference of the last two extrapolations, relative to the value. */
+  /** Difference of the last two extrapolations, or what rounding can do if that is more, relative to the value. */
   readonly error: number
 }
 
@@ -88,7 +88,11 @@ export class PotentialDifferences {
     )
     const first = [1, 2].map((n) => second[n] + (second[n] - second[n - 1]) / 3)
     const value = first[1] + (first[1] - first[0]) / 15
-    return { value, error: Math.abs(value - first[1]) / Math.abs(value) }
+    // Terms of V(w + d) - V(w) that cancel carry the rounding; at the last step it counts for most.
+    const moved = this.solve(s.map((entry) => (step / 4) * entry))
+    const terms = moved.reduce((sum, entry, p) => sum + Math.abs(entry * this.tau[p]), 0) / this.total
+    const rounding = (2 ** -52 * terms) / (step / 4) ** 2 / value
+    return { value, error: Math.max(Math.abs(value - first[1]) / Math.abs(value), Math.abs(rounding)) }
   }
 
   /** log V(tau + e s) - log V(tau). */
