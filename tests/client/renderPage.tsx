@@ -1,11 +1,14 @@
 import { type ReactElement } from 'react'
-import { render } from '@testing-library/react'
+import { configure, render } from '@testing-library/react'
 import { QueryClient, QueryClientProvider } from '@tanstack/react-query'
 import { createMemoryRouter, RouterProvider } from 'react-router-dom'
 import { type CampaignSummary } from '../../shared/campaigns.ts'
 import { type Role } from '../../shared/roles.ts'
 import { CurrentCampaign } from '../../src/components/shell/currentCampaign.tsx'
 import { dispatchShortcut } from '../../src/lib/shortcuts.ts'
+
+/** Waits end with the event; the limit only has to hold on a machine that is busy with other things. */
+configure({ asyncUtilTimeout: 20_000 })
 
 export function campaignAs(role: Role): CampaignSummary {
   return {
