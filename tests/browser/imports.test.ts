@@ -100,6 +100,8 @@ describe.skipIf(chromiumPath === null)('imports, in a browser', { timeout: 120_0
     expect(report).toContain('line 11')
     expect(report).toContain('1 line passed over')
     await shot('4-report')
+    await dialog().getByRole('button', { name: 'Back to the text' }).click()
+    expect(await dialog().getByRole('textbox', { name: 'Candidates' }).inputValue()).toContain('heights')
   })
 
   it('asks about a matrix that can be read both ways, and goes on with the answer', async () => {

@@ -103,7 +103,7 @@ export function CandidateReportView({
         <ButtonLink kind="primary" to={`/campaigns/${campaign}/imported`} onClick={onClose}>
           To the imported candidates
         </ButtonLink>
-        <Button onClick={onMore}>Import more</Button>
+        <Button onClick={onMore}>{problems.length > 0 ? 'Back to the text' : 'Import more'}</Button>
       </div>
     </div>
   )

@@ -40,7 +40,8 @@ export function ImportCandidatesForm({ campaign, onClose }: ImportFormProps) {
         campaign={campaign}
         onMore={() => {
           setAnswer(null)
-          setSource(noSource)
+          // What was wrong is mended in the text it stands in.
+          if (answer.problems.length === 0) setSource(noSource)
         }}
         onClose={onClose}
       />

@@ -67,7 +67,7 @@ export function ImportReportView({
         <Button kind="primary" onClick={onClose}>
           To the library
         </Button>
-        <Button onClick={onMore}>Import more</Button>
+        <Button onClick={onMore}>{problems.length > 0 ? 'Back to the text' : 'Import more'}</Button>
       </div>
     </div>
   )

@@ -27,7 +27,8 @@ export function ImportWeightsForm({ campaign, onClose }: ImportFormProps) {
         campaign={campaign}
         onMore={() => {
           setReport(null)
-          setSource(noSource)
+          // What was wrong is mended in the text it stands in.
+          if (report.problems.length === 0) setSource(noSource)
         }}
         onClose={onClose}
       />
