@@ -72,9 +72,9 @@ export function checkTriangulation(
     const bad = uneven[0] ?? flat[0]
     const note =
       bad === undefined
-        ? `${walls.length} walls, each between two cones, with the origin at height -${depth} or lower.`
+        ? `${walls.length} walls, each between two cones, with the origin at height ${-depth} or lower.`
         : `Wall (${bad.corners.join(', ')}): ${uneven.length > 0 ? `${bad.cones.length} cones` : 'not strictly convex'}.`
-    return { passed: bad === undefined, fast: null, independent: `-${depth}`, note, value: true }
+    return { passed: bad === undefined, fast: null, independent: `${-depth}`, note, value: true }
   })
   checks.run('simplices', () => ({
     ...equalRows(numbers.simplices ?? simplices, simplices, 'cones'),
