@@ -109,6 +109,12 @@ export { timedCandidate, type Clock, type StageCosts } from './search/stageClock
 export type { Json, RunEnd, SampleRow, SearchCounts, SearchState } from './search/state.ts'
 export { expectedBest, medianOf, quantileOf, rateOf, type Rate } from './search/statistics.ts'
 
+// Lists from the finds of runs.
+export { assemble, type Assembly, type AssemblyRule, type LeftOut } from './ranking/assemble.ts'
+export { ClassSeparation } from './ranking/classSeparation.ts'
+export { paretoAxesLimit } from './ranking/paretoFronts.ts'
+export { compareContenders, type Contender } from './ranking/rankOrder.ts'
+
 // Headless evaluation, also behind the dossier.
 export {
   evaluateInput,
