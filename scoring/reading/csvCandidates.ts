@@ -43,11 +43,9 @@ export function csvSeparator(text: string): string | undefined {
  * export of a shortlist has) names candidates by their keys. Other columns are not looked at.
  */
 export function readCsvCandidates(text: string, separator: string): CandidateReading {
-  const { records, open } = readCsv(text, separator)
+  const { records, fault } = readCsv(text, separator)
   const table = new Table(records)
-  if (open !== undefined) {
-    table.fail(open, '', 'csv.open-quote', 'The cell in quotes that begins here is never closed.')
-  }
+  if (fault !== undefined) table.fail(fault.line, '', fault.code, fault.message)
   return table.reading()
 }
 

@@ -1,77 +1,78 @@
+// The build without Node's streams and buffers: tables are read in the browser too.
+import { parse } from 'csv-parse/browser/esm/sync'
+
 /** A record of comma-separated values with the line on which it begins. */
 export interface CsvRecord {
   readonly line: number
   readonly cells: readonly string[]
 }
 
+/** Why a table could not be read to its end. */
+export interface CsvFault {
+  /** Line of the record that begins it. */
+  readonly line: number
+  readonly code: 'csv.open-quote' | 'csv.stray-quote'
+  readonly message: string
+}
+
 export interface CsvReading {
   readonly records: readonly CsvRecord[]
-  /** Line of a quoted cell that is never closed. */
-  readonly open: number | undefined
+  readonly fault: CsvFault | undefined
 }
+
+const remarks = /^(?:[ \t]*(?:#[^\r\n]*)?(?:\r\n|\n|\r))*/
 
 /**
  * Reads separated values as RFC 4180 has them: cells in double quotes may hold separators, line ends and doubled
- * quotes. Lines that begin with `#` before a record, and blank lines, are comments.
+ * quotes. Lines that begin with `#` before a record, and blank lines, are comments. After a fault in the quotes
+ * nothing more is read, since it cannot be told where the next record begins.
  */
 export function readCsv(text: string, separator: string): CsvReading {
   const records: CsvRecord[] = []
-  let at = text.startsWith('\uFEFF') ? 1 : 0
+  let fault: CsvFault | undefined
   let line = 1
-  const endOfLine = (from: number): number => {
-    const end = text.indexOf('\n', from)
-    return end < 0 ? text.length : end
-  }
-  while (at < text.length) {
-    const end = endOfLine(at)
-    const head = text.slice(at, end).trim()
-    if (head === '' || head.startsWith('#')) {
-      at = end + 1
-      line++
-      continue
-    }
-    const begun = line
-    const cells: string[] = []
-    for (;;) {
-      while (text[at] === ' ') at++
-      if (text[at] === '"') {
-        let cell = ''
-        for (;;) {
-          const close = text.indexOf('"', at + 1)
-          if (close < 0) return { records, open: line }
-          const part = text.slice(at + 1, close)
-          line += part.split('\n').length - 1
-          cell += part
-          at = close + 1
-          if (text[at] !== '"') break
-          cell += '"'
-        }
-        while (text[at] === ' ' || text[at] === '\r') at++
-        cells.push(cell)
-        if (at < text.length && text[at] !== separator && text[at] !== '\n') {
-          // Something behind a closing quote: kept, so that the cell is reported and not silently cut.
-          const stop = nextBreak(text, at, separator)
-          cells[cells.length - 1] += text.slice(at, stop)
-          at = stop
-        }
-      } else {
-        const stop = nextBreak(text, at, separator)
-        cells.push(text.slice(at, stop).trim())
-        at = stop
-      }
-      if (text[at] !== separator) break
-      at++
-    }
-    records.push({ line: begun, cells })
-    at++
-    line++
-  }
-  return { records, open: undefined }
+  /** Line of a record whose text begins where the last one ended, with remarks before it. */
+  const begin = (raw: string): number => line + lineEnds(remarks.exec(raw)?.[0] ?? '')
+  parse(text, {
+    delimiter: separator,
+    bom: true,
+    trim: true,
+    comment: '#',
+    comment_no_infix: true,
+    skip_empty_lines: true,
+    relax_column_count: true,
+    relax_quotes: true,
+    raw: true,
+    skip_records_with_error: true,
+    on_record: (row: unknown) => {
+      // With `raw` a record comes with its text, which the package's types do not say.
+      const { record, raw } = row as { record: string[]; raw: string }
+      records.push({ line: begin(raw), cells: record })
+      line += lineEnds(raw)
+      return null
+    },
+    on_skip: (error, raw) => {
+      fault ??= faultOf(error?.code, begin(raw ?? ''))
+      return undefined
+    },
+  })
+  return { records, fault }
 }
 
-function nextBreak(text: string, from: number, separator: string): number {
-  const end = text.indexOf('\n', from)
-  const cut = text.indexOf(separator, from)
-  const line = end < 0 ? text.length : end
-  return cut >= 0 && cut < line ? cut : line
+function faultOf(reason: string | undefined, line: number): CsvFault {
+  return reason === 'CSV_QUOTE_NOT_CLOSED'
+    ? {
+        line,
+        code: 'csv.open-quote',
+        message: 'A cell in quotes in the row that begins here is never closed; nothing after it was read.',
+      }
+    : {
+        line,
+        code: 'csv.stray-quote',
+        message:
+          'A cell in quotes in the row that begins here is followed by more text before the next separator; ' +
+          'double a quote that belongs to the text. Nothing after it was read.',
+      }
 }
+
+const lineEnds = (text: string): number => text.match(/\r\n|\n|\r/g)?.length ?? 0

@@ -1,4 +1,6 @@
-/** A JSON value with the line on which each of its lists and objects begins. */
+import { printParseErrorCode, visit } from 'jsonc-parser'
+
+/** A JSON value with the line on which it begins. */
 export interface LocatedJson {
   readonly value: unknown
   readonly line: number
@@ -20,6 +22,7 @@ export interface JsonTextReading {
 
 const depthLimit = 40
 
+/** Ends the reading of one value. Offsets count from its beginning. */
 class Fault extends Error {
   constructor(
     readonly code: JsonTextProblem['code'],
@@ -30,169 +33,164 @@ class Fault extends Error {
   }
 }
 
+/** The value is complete, and another begins at this offset. */
+class Another extends Error {
+  constructor(readonly at: number) {
+    super()
+  }
+}
+
 /**
  * Reads one JSON value or several, one after the other (JSON Lines). Unlike `JSON.parse` it says where: every list
  * and object has its line, a mistake its line and column. After a mistake reading goes on with the next line that
  * begins an object at its left margin, so that one bad line does not spoil the others.
  */
-export function readJsonText(text: string): JsonTextReading {
-  return new JsonReader(text.replace(/^\uFEFF/, '')).read()
+export function readJsonText(given: string): JsonTextReading {
+  const text = given.replace(/^\uFEFF/, '')
+  const lines = new WeakMap<object, number>()
+  const values: LocatedJson[] = []
+  const problems: JsonTextProblem[] = []
+  const place = new Place(text)
+  let at = afterBlanks(text, 0)
+  while (at < text.length) {
+    const builder = new Builder(place.to(at).line, lines)
+    try {
+      readOne(text.slice(at), builder)
+      values.push({ value: builder.value, line: place.line })
+      break
+    } catch (error) {
+      if (error instanceof Another) {
+        values.push({ value: builder.value, line: place.line })
+        at += error.at
+      } else if (error instanceof Fault) {
+        const { line, column } = place.to(at + error.at)
+        const message = `${error.message} (line ${line}, column ${column}).`
+        problems.push({ line, column, code: error.code, message })
+        const next = /\r?\n\s?\{/g
+        next.lastIndex = at + error.at
+        const found = next.exec(text)
+        if (found === null) break
+        at = found.index + found[0].length - 1
+      } else throw error
+    }
+  }
+  return {
+    values,
+    problems,
+    lineOf: (value) => (typeof value === 'object' && value !== null ? lines.get(value) : undefined),
+  }
 }
 
-class JsonReader {
+/** A place in a text that only moves forwards. */
+class Place {
+  line = 1
+  column = 1
   private at = 0
-  private line = 1
-  private lineStart = 0
-  private readonly lines = new WeakMap<object, number>()
 
   constructor(private readonly text: string) {}
 
-  read(): JsonTextReading {
-    const values: LocatedJson[] = []
-    const problems: JsonTextProblem[] = []
-    for (;;) {
-      this.blanks()
-      if (this.at >= this.text.length) break
-      const line = this.line
-      const start = this.at
-      try {
-        values.push({ value: this.value(0), line })
-      } catch (error) {
-        if (!(error instanceof Fault)) throw error
-        this.moveTo(error.at)
-        const column = error.at - this.lineStart + 1
-        const message = `${error.message} (line ${this.line}, column ${column}).`
-        problems.push({ line: this.line, column, code: error.code, message })
-        const next = /\r?\n\s?\{/g
-        next.lastIndex = Math.max(error.at, start)
-        const found = next.exec(this.text)
-        if (found === null) break
-        this.moveTo(found.index + found[0].length - 1)
-      }
+  to(at: number): this {
+    for (; this.at < at; this.at++) {
+      if (this.text[this.at] === '\n') {
+        this.line++
+        this.column = 1
+      } else this.column++
     }
-    return {
-      values,
-      problems,
-      lineOf: (value) => (typeof value === 'object' && value !== null ? this.lines.get(value) : undefined),
+    return this
+  }
+}
+
+type Container = unknown[] | Record<string, unknown>
+
+/** Puts the value together as its parts are met. */
+class Builder {
+  value: unknown
+  private readonly open: Container[] = []
+  private name: string | undefined
+
+  constructor(
+    private readonly firstLine: number,
+    private readonly lines: WeakMap<object, number>,
+  ) {}
+
+  begin(container: Container, at: number, line: number): void {
+    if (this.open.length > depthLimit) {
+      throw new Fault('json.too-deep', at, `The JSON is nested more than ${depthLimit} deep`)
     }
+    this.lines.set(container, this.firstLine + line)
+    this.add(container)
+    this.open.push(container)
   }
 
-  private moveTo(at: number): void {
-    while (this.at < at) this.step()
+  end(): void {
+    this.open.pop()
   }
 
-  private step(): void {
-    if (this.text[this.at] === '\n') {
-      this.line++
-      this.lineStart = this.at + 1
-    }
-    this.at++
+  property(name: string): void {
+    this.name = name
   }
 
-  private blanks(): void {
-    while (this.at < this.text.length && ' \t\r\n'.includes(this.text[this.at])) this.step()
-  }
-
-  private value(depth: number): unknown {
-    if (depth > depthLimit) {
-      throw new Fault('json.too-deep', this.at, `The JSON is nested more than ${depthLimit} deep`)
-    }
-    this.blanks()
-    const first = this.text[this.at]
-    if (first === undefined) throw this.truncated('a value')
-    if (first === '{') return this.object(depth)
-    if (first === '[') return this.list(depth)
-    if (first === '"') return this.string()
-    return this.scalar()
-  }
-
-  private object(depth: number): unknown {
-    const entries: [string, unknown][] = []
-    const line = this.line
-    this.at++
-    this.blanks()
-    if (this.text[this.at] !== '}') {
-      for (;;) {
-        this.blanks()
-        if (this.text[this.at] !== '"') throw this.unexpected('a name in double quotes')
-        const name = this.string()
-        this.blanks()
-        if (this.text[this.at] !== ':') throw this.unexpected('":"')
-        this.at++
-        entries.push([name, this.value(depth + 1)])
-        if (!this.another('}')) break
-      }
-    }
-    this.at++
-    // fromEntries defines properties, so that even the name __proto__ is plain data.
-    const object = Object.fromEntries(entries)
-    this.lines.set(object, line)
-    return object
-  }
-
-  private list(depth: number): unknown {
-    const list: unknown[] = []
-    this.lines.set(list, this.line)
-    this.at++
-    this.blanks()
-    if (this.text[this.at] !== ']') {
-      for (;;) {
-        list.push(this.value(depth + 1))
-        if (!this.another(']')) break
-      }
-    }
-    this.at++
-    return list
-  }
-
-  /** True after a comma; false at the closing sign, which stays. */
-  private another(closing: string): boolean {
-    this.blanks()
-    const sign = this.text[this.at]
-    if (sign === closing) return false
-    if (sign !== ',') throw this.unexpected(`"," or "${closing}"`)
-    this.at++
-    return true
-  }
-
-  private string(): string {
-    const pattern = /"[^"\\\n\r]*(?:\\.[^"\\\n\r]*)*"/y
-    pattern.lastIndex = this.at
-    const found = pattern.exec(this.text)
-    if (found === null) {
-      if (!this.text.slice(this.at + 1).match(/["\n]/)) throw this.truncated('the end of a text')
-      throw this.unexpected('a text that is closed on its line')
-    }
-    try {
-      const value = JSON.parse(found[0]) as string
-      this.at += found[0].length
-      return value
-    } catch {
-      throw this.unexpected('a text with valid escapes')
+  add(value: unknown): void {
+    const container = this.open.at(-1)
+    if (container === undefined) this.value = value
+    else if (Array.isArray(container)) container.push(value)
+    else {
+      // Defined, not assigned, so that even the name __proto__ is plain data.
+      const data = { value, enumerable: true, configurable: true, writable: true }
+      Object.defineProperty(container, this.name ?? '', data)
     }
   }
+}
 
-  private scalar(): unknown {
-    const pattern = /true|false|null|-?(?:0|[1-9]\d*)(?:\.\d+)?(?:[eE][+-]?\d+)?/y
-    pattern.lastIndex = this.at
-    const found = pattern.exec(this.text)
-    if (found === null || /[\w.+-]/.test(this.text[this.at + found[0].length] ?? '')) {
-      const rest = this.text.slice(this.at)
-      if (/^(-|t|tr|tru|f|fa|fal|fals|n|nu|nul)$/.test(rest)) throw this.truncated('a value')
-      throw this.unexpected('a value')
-    }
-    this.at += found[0].length
-    return JSON.parse(found[0])
-  }
+/** @throws Fault at the first mistake; Another when the text goes on behind the value */
+function readOne(text: string, builder: Builder): void {
+  visit(
+    text,
+    {
+      onObjectBegin: (at, _length, line) => builder.begin({}, at, line),
+      onObjectProperty: (name) => builder.property(name),
+      onObjectEnd: () => builder.end(),
+      onArrayBegin: (at, _length, line) => builder.begin([], at, line),
+      onArrayEnd: () => builder.end(),
+      onLiteralValue: (value) => builder.add(value),
+      onError: (error, at, length) => {
+        const reason = printParseErrorCode(error)
+        if (reason === 'EndOfFileExpected') throw new Another(at)
+        throw faultOf(text, reason, at, length)
+      },
+    },
+    { disallowComments: true, allowTrailingComma: false },
+  )
+}
 
-  private truncated(expected: string): Fault {
-    return new Fault('json.truncated', this.text.length, `The JSON ends where ${expected} should stand`)
-  }
+const expected: Partial<Record<string, string>> = {
+  PropertyNameExpected: 'a name in double quotes',
+  ColonExpected: '":"',
+  CommaExpected: '"," or the end of the list or object',
+  CloseBraceExpected: '"," or "}"',
+  CloseBracketExpected: '"," or "]"',
+  UnexpectedEndOfString: 'a text that is closed on its line',
+  InvalidEscapeCharacter: 'a text with valid escapes',
+  InvalidUnicode: 'a text with valid escapes',
+  InvalidCharacter: 'a text without control characters',
+}
 
-  private unexpected(expected: string): Fault {
-    if (this.at >= this.text.length) return this.truncated(expected)
-    const found = /^[\w.+-]+|^./s.exec(this.text.slice(this.at, this.at + 24))?.[0] ?? ''
-    const shown = found === '\n' || found === '\r' ? 'the end of the line' : `"${found}"`
-    return new Fault('json.invalid', this.at, `Expected ${expected}, found ${shown}`)
-  }
+function faultOf(text: string, reason: string, at: number, length: number): Fault {
+  const right = expected[reason] ?? 'a value'
+  const rest = text.slice(at)
+  // What is cut off may look like a mistake of its own: half a word, or a text without its closing quote.
+  const isCut =
+    afterBlanks(text, at) >= text.length ||
+    /^(-|t|tr|tru|f|fa|fal|fals|n|nu|nul)$/.test(rest) ||
+    (reason === 'UnexpectedEndOfString' && at + length >= text.length)
+  if (isCut) return new Fault('json.truncated', text.length, `The JSON ends where ${right} should stand`)
+  const found = /^[\w.+-]+|^./s.exec(rest.slice(0, 24))?.[0] ?? ''
+  const shown = found === '\n' || found === '\r' ? 'the end of the line' : `"${found}"`
+  return new Fault('json.invalid', at, `Expected ${right}, found ${shown}`)
+}
+
+function afterBlanks(text: string, from: number): number {
+  const blanks = /[ \t\r\n]*/y
+  blanks.lastIndex = from
+  return from + (blanks.exec(text)?.[0].length ?? 0)
 }

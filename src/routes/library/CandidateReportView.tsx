@@ -100,10 +100,18 @@ export function CandidateReportView({
         </details>
       )}
       <div className="flex flex-wrap gap-2">
-        <ButtonLink kind="primary" to={`/campaigns/${campaign}/imported`} onClick={onClose}>
-          To the imported candidates
-        </ButtonLink>
-        <Button onClick={onMore}>{problems.length > 0 ? 'Back to the text' : 'Import more'}</Button>
+        {imported.length > 0 && (
+          <ButtonLink
+            kind={problems.length > 0 ? 'plain' : 'primary'}
+            to={`/campaigns/${campaign}/imported`}
+            onClick={onClose}
+          >
+            To the imported candidates
+          </ButtonLink>
+        )}
+        <Button kind={problems.length > 0 ? 'primary' : 'plain'} onClick={onMore}>
+          {problems.length > 0 ? 'Back to the text' : 'Import more'}
+        </Button>
       </div>
     </div>
   )
