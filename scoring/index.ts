@@ -67,6 +67,7 @@ export {
 } from './search/islandRates.ts'
 export { interleaved, thinned, type Curve } from './search/curve.ts'
 export type { Find } from './search/find.ts'
+export { codeOfHeights, heightsOfCode } from './search/heightsCode.ts'
 export { Histogram, type HistogramState, type HistogramView } from './search/histogram.ts'
 export type { Evaluated, IslandHooks } from './search/island.ts'
 export { mergeIslands, type MergedIslands } from './search/islands.ts'
@@ -106,7 +107,7 @@ export {
   type SearchSettings,
 } from './search/settings.ts'
 export { timedCandidate, type Clock, type StageCosts } from './search/stageClock.ts'
-export type { Json, RunEnd, SampleRow, SearchCounts, SearchState } from './search/state.ts'
+export type { Json, RunEnd, SampledRow, SampleRow, SearchCounts, SearchState } from './search/state.ts'
 export { expectedBest, medianOf, quantileOf, rateOf, type Rate } from './search/statistics.ts'
 
 // Lists from the finds of runs.

@@ -7,7 +7,7 @@ import { progressOf, type IslandProgress } from './progress.ts'
 import { seededState } from './randomStream.ts'
 import { SeenTable } from './seenTable.ts'
 import { islandBudget, seenCapacity } from './settings.ts'
-import type { SearchState } from './state.ts'
+import type { SampledRow, SearchState } from './state.ts'
 
 /** The state of an island before its first step. Islands of one seed have unrelated random streams. */
 export function startState(problem: SearchProblem, seed: number, island = 0): SearchState {
@@ -55,6 +55,8 @@ export interface Segment {
   /** Candidates that entered the list of the best in this segment and are still on it, best first. */
   readonly finds: readonly Find[]
   readonly progress: IslandProgress
+  /** With the option `sampled`: rows that entered the uniform sample in this segment and are still in it. */
+  readonly sampled: readonly SampledRow[]
 }
 
 /**
@@ -85,5 +87,5 @@ export function advance(
   const finds = next.top
     .filter((row) => island.newcomers.has(row.classKey))
     .map((row) => findOf(row, problem.polytopes))
-  return { state: next, finds, progress: progressOf(next) }
+  return { state: next, finds, progress: progressOf(next), sampled: island.sampled() }
 }

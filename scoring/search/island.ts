@@ -19,7 +19,7 @@ import { RandomStream } from './randomStream.ts'
 import { Reservoir } from './reservoir.ts'
 import { SeenTable, seenKey } from './seenTable.ts'
 import type { SearchSettings } from './settings.ts'
-import type { RunEnd, SampleRow, SearchState } from './state.ts'
+import type { RunEnd, SampledRow, SampleRow, SearchState } from './state.ts'
 import { TopList } from './topList.ts'
 import { witnessHeights } from './witness.ts'
 
@@ -33,6 +33,8 @@ export interface IslandHooks {
   readonly observe?: (evaluated: Evaluated) => void
   /** Puts a candidate with the same values in the place of each one that is evaluated, to time its stages. */
   readonly instrument?: (candidate: Candidate) => Candidate
+  /** Keep the heights of what enters the uniform sample, for `sampled`. */
+  readonly sampled?: boolean
 }
 
 /** One evaluation, as it happens. */
@@ -72,6 +74,7 @@ export class Island implements Run {
   private readonly top: TopList
   private readonly seen: SeenTable
   private readonly entered = new Set<string>()
+  private readonly samplers = new Map<number, () => Float64Array>()
   private readonly passes = new Map<number, boolean>()
   readonly chain: Chain
 
@@ -144,6 +147,14 @@ export class Island implements Run {
     return this.entered
   }
 
+  /** What entered the uniform sample since this island was opened and is still in it, by place. */
+  sampled(): SampledRow[] {
+    const { rows } = this.sample.state()
+    return [...this.samplers]
+      .sort(([a], [b]) => a - b)
+      .map(([place, heights]) => ({ place, ...rows[place], heights: codeOfHeights(heights()) }))
+  }
+
   form(polytope: number): NormalForm {
     return this.problem.polytopes.at(polytope)
   }
@@ -183,7 +194,8 @@ export class Island implements Run {
     this.evaluations++
     if (!proposal.distinct) this.seen.add(high, low, merit.kind, merit.value)
     this.count(outcome)
-    this.sample.offer({ polytopeKey: form.key, classKey: canonical.key, ...merit }, this.stream)
+    const place = this.sample.offer({ polytopeKey: form.key, classKey: canonical.key, ...merit }, this.stream)
+    if (place !== null && this.hooks.sampled) this.samplers.set(place, witness)
     if (this.top.admits(outcome, canonical.key)) {
       this.entered.add(canonical.key)
       this.top.insert({

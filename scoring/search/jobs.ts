@@ -3,14 +3,12 @@ import { ruleOfInput } from '../evaluation/input.ts'
 import type { Hodge } from '../geometry/polytope.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import type { Outcome } from '../rules/outcome.ts'
-import { advance, startState } from './advance.ts'
-import type { Find } from './find.ts'
+import { advance, type Segment, startState } from './advance.ts'
 import { OutcomeMemo } from './memo.ts'
 import { isMethodName, methodNames } from './methods.ts'
 import { nullProblem, nullSummary, type NullSummary } from './nullSample.ts'
 import { FormCache, polytopeSource, type PolytopeEntry, type PolytopeSource } from './polytopeSource.ts'
 import type { SearchProblem } from './problem.ts'
-import type { IslandProgress } from './progress.ts'
 import { searchSettingsSchema, type SearchSettings } from './settings.ts'
 import { timedCandidate, type Clock, type StageCosts } from './stageClock.ts'
 import { stateShape, type SearchState } from './state.ts'
@@ -37,11 +35,11 @@ export interface SegmentInput {
   readonly evaluations: number
   /** Proposals after which the segment ends in any case. */
   readonly proposals?: number
+  /** Also give the rows that entered the uniform sample, with their heights. */
+  readonly sampled?: boolean
 }
 
-export type SegmentOutput =
-  | { readonly state: SearchState; readonly finds: readonly Find[]; readonly progress: IslandProgress }
-  | { readonly error: JobError }
+export type SegmentOutput = Segment | { readonly error: JobError }
 
 /** One portion of a preview or null sample, as plain data. */
 export interface PreviewInput {
@@ -124,7 +122,8 @@ export function segmentJob(input: SegmentInput, session = new JobSession()): Seg
     }
     const state =
       input.state === null ? startState(problem, input.seed, input.island) : checkedState(input.state)
-    return advance(problem, state, input.evaluations, { memo, proposals: input.proposals })
+    const { evaluations, proposals, sampled } = input
+    return advance(problem, state, evaluations, { memo, proposals, sampled })
   })
 }
 

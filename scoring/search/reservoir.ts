@@ -26,14 +26,16 @@ export class Reservoir<Row> {
     return { capacity: this.capacity, offered: this.offered, rows: [...this.rows] }
   }
 
-  /** @param stream drawn from once, and only when the reservoir is full */
-  offer(row: Row, stream: RandomStream): void {
+  /**
+   * @param stream drawn from once, and only when the reservoir is full
+   * @returns the place that the row has taken, or null when it was not taken in
+   */
+  offer(row: Row, stream: RandomStream): number | null {
     this.offered++
-    if (this.rows.length < this.capacity) {
-      this.rows.push(row)
-      return
-    }
+    if (this.rows.length < this.capacity) return this.rows.push(row) - 1
     const place = stream.below(this.offered)
-    if (place < this.capacity) this.rows[place] = row
+    if (place >= this.capacity) return null
+    this.rows[place] = row
+    return place
   }
 }

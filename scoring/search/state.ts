@@ -25,6 +25,16 @@ export interface SampleRow {
   readonly value: number
 }
 
+/**
+ * The same on its way out of a segment, with heights that give the canonical class (see `codeOfHeights`). They are
+ * no part of a state: at h11 = 491 those of 256 rows would take a third of it.
+ */
+export interface SampledRow extends SampleRow {
+  /** Which row of the sample this is; a later row of the same place has taken its place. */
+  readonly place: number
+  readonly heights: string
+}
+
 /** What a run has counted. */
 export interface SearchCounts {
   /** Classes scored, distinct as far as the table of classes seen knows. */

@@ -17,6 +17,7 @@ import { NullSample } from './nullSample.ts'
 import { PolytopeRecord } from './polytope.ts'
 import { Search } from './search.ts'
 import { SearchIsland } from './searchIsland.ts'
+import { SearchSample } from './searchSample.ts'
 import { SetUpLink } from './setUpLink.ts'
 import { Shortlist } from './shortlist.ts'
 import { ShortlistEntry } from './shortlistEntry.ts'
@@ -45,6 +46,7 @@ export const entities = [
   PolytopeRecord,
   Search,
   SearchIsland,
+  SearchSample,
   SetUpLink,
   Shortlist,
   ShortlistEntry,

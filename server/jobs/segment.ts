@@ -1,3 +1,4 @@
+import type { SampledRow } from '../../scoring/index.ts'
 import type { OutcomeView } from '../../shared/outcomes.ts'
 import type { SearchProblem } from './searchProblem.ts'
 
@@ -43,6 +44,8 @@ export interface SegmentOutput {
   readonly done: boolean
   /** Candidates that entered the island's list of the best in this segment and are still on it, best first. */
   readonly finds: readonly SegmentFind[]
+  /** Rows that entered the island's uniform sample of evaluations in this segment and are still in it. */
+  readonly sampled: readonly SampledRow[]
   /** Time the segment took on its thread. */
   readonly milliseconds: number
 }

@@ -1,4 +1,5 @@
 import { In, type EntityManager } from 'typeorm'
+import type { SampledRow } from '../../scoring/index.ts'
 import type { SearchProgress } from '../../shared/searches.ts'
 import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
@@ -47,6 +48,7 @@ export async function commitSegment(
   )
   if (affected === 0) return null
   if (finds !== null) await storeFinds(manager, commit.searchId, commit.scoringHash, finds)
+  await storeSampled(manager, searchId, island, output.sampled)
   const active = search.state === 'running' || search.state === 'queued'
   const state = commit.finished ? 'finished' : active ? 'running' : search.state
   const holding = state === 'running'
@@ -119,6 +121,30 @@ async function storeFinds(
     `INSERT INTO find (searchId, candidateKey, rank, island)
      SELECT ?, value ->> 0, value ->> 1, value ->> 2 FROM json_each(?)`,
     [searchId, JSON.stringify(rows)],
+  )
+}
+
+/** A later row of a place replaces the one before. */
+async function storeSampled(
+  manager: EntityManager,
+  searchId: string,
+  island: number,
+  sampled: readonly SampledRow[],
+): Promise<void> {
+  if (sampled.length === 0) return
+  const rows = sampled.map((row) => [
+    row.place,
+    row.classKey,
+    row.polytopeKey,
+    row.kind,
+    row.value,
+    row.heights,
+  ])
+  await manager.query(
+    `INSERT OR REPLACE INTO search_sample
+       (searchId, island, place, candidateKey, polytopeKey, kind, value, heights)
+     SELECT ?, ?, value ->> 0, value ->> 1, value ->> 2, value ->> 3, value ->> 4, value ->> 5 FROM json_each(?)`,
+    [searchId, island, JSON.stringify(rows)],
   )
 }
 

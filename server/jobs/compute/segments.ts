@@ -33,6 +33,7 @@ export function searchSegment({ problem, state, evaluations }: SegmentInput): Se
         state: stateOf(state),
         // Near the end of a small space new classes get rare: a segment must end all the same.
         proposals: 20 * evaluations + 2_000,
+        sampled: true,
       },
       session,
     ),
@@ -43,6 +44,7 @@ export function searchSegment({ problem, state, evaluations }: SegmentInput): Se
     progress: { ...progress, exhausted: ended === 'space-exhausted' },
     done,
     finds: output.finds.map(findView),
+    sampled: output.sampled,
     milliseconds: performance.now() - begun,
   }
 }

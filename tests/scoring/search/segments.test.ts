@@ -10,10 +10,11 @@ import { buildCandidate } from '../../../scoring/observables/buildCandidate.ts'
 import { evaluateRule } from '../../../scoring/rules/evaluate.ts'
 import { compareOutcomes } from '../../../scoring/rules/outcome.ts'
 import { advance, startState } from '../../../scoring/search/advance.ts'
+import { heightsOfCode } from '../../../scoring/search/heightsCode.ts'
 import { OutcomeMemo } from '../../../scoring/search/memo.ts'
 import { methodNames } from '../../../scoring/search/methods.ts'
 import type { SearchProblem } from '../../../scoring/search/problem.ts'
-import type { SearchState } from '../../../scoring/search/state.ts'
+import type { SampledRow, SearchState } from '../../../scoring/search/state.ts'
 import { problemOf } from './problems.ts'
 
 const scope = ['w12-30-newton-5-7-7-8-9', 'w10-64-fan-1-2-4-5-5', 'r4-0100', 'r5-0200']
@@ -94,6 +95,27 @@ describe.each(methodNames)('segments of method %s', (method) => {
     }
     expect(state.feasible + state.infeasible + state.undefined).toBe(state.evaluations)
     expect(state.sample.offered).toBe(state.evaluations)
+  })
+
+  it('hand out what enters the uniform sample, with heights that give it', () => {
+    const rows = new Map<number, SampledRow>()
+    let state = startState(problem, 4)
+    for (let n = 0; n < 40; n++) {
+      const segment = advance(problem, state, 3, { memo, sampled: true, proposals: 200 })
+      state = throughJson(segment.state)
+      for (const row of segment.sampled) rows.set(row.place, row)
+    }
+    const kept = [...rows].sort(([a], [b]) => a - b).map(([, row]) => row)
+    expect(kept.map(({ place, heights, ...row }) => (void place, void heights, row))).toEqual(
+      state.sample.rows,
+    )
+    expect(state.evaluations).toBeGreaterThan(20)
+    for (const { polytopeKey, classKey, heights } of kept) {
+      const form = problem.polytopes.at(problem.polytopes.keys.indexOf(polytopeKey))
+      const cls = fineClass(form.polytope, heightsOfCode(heights))
+      expect(cls && canonicalClass(form, cls)).toMatchObject({ key: classKey, class: cls })
+    }
+    expect(advance(problem, startState(problem, 4), 5).sampled).toEqual([])
   })
 })
 

@@ -1,4 +1,5 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { SearchSample } from '../../../server/entities/searchSample.ts'
 import type { ShortlistDetail } from '../../../shared/shortlists.ts'
 import { huntScope, openSmallHunt, type SmallHunt } from '../support/smallHunt.ts'
 
@@ -21,6 +22,9 @@ describe('a search', () => {
     expect(first.outcome).toMatchObject({ kind: 'feasible', score: done.best })
     expect(first.candidateKey).toBe(done.progress.bestKey)
     expect(done.progress.curve.at(-1)?.[1]).toBe(done.best)
+    // Fewer evaluations than rows of the uniform sample: all of them are kept.
+    const { manager } = hunt.server.context.source
+    expect(await manager.countBy(SearchSample, { searchId: created.id })).toBe(60)
     const list = await hunt.lead.get(hunt.path('/searches')).expect(200)
     expect(list.body.map(({ id }: { id: string }) => id)).toContain(created.id)
     const target = await hunt.lead.get(hunt.path(`/targets/${hunt.targetId}`)).expect(200)
