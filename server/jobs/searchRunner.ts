@@ -7,25 +7,27 @@ import { SearchIsland } from '../entities/searchIsland.ts'
 import { unfinishedNulls } from '../services/nullSamples.ts'
 import { failSearch, takeLease, type IslandFind } from '../services/searchCommits.ts'
 import type { JobParts } from './jobParts.ts'
-import { isFree, leaseMilliseconds, thisProcess } from './lease.ts'
+import { isFree } from './lease.ts'
+import { LeasedRuns } from './leasedRuns.ts'
 import type { NullSampler } from './nullSampler.ts'
 import { RunningSearch, type Island } from './runningSearch.ts'
 import { polytopesText, readPolytopes, type ScoredScope } from './searchProblem.ts'
 import type { IslandProgress } from './segment.ts'
 
-/** Runs the searches of the database: takes them up, keeps their leases, lets them go. */
+/** Runs the searches of the database. */
 export class SearchRunner {
   readonly #parts: JobParts
   readonly #nulls: NullSampler
-  readonly #running = new Map<string, RunningSearch>()
-  /** Searches that were let go of with segments still in hand. */
-  readonly #settling = new Map<string, Promise<void>>()
-  readonly #listeners = new Map<string, (() => void)[]>()
-  #heart: NodeJS.Timeout | null = null
+  readonly #runs: LeasedRuns<RunningSearch>
 
   constructor(parts: JobParts, nulls: NullSampler) {
     this.#parts = parts
     this.#nulls = nulls
+    this.#runs = new LeasedRuns(parts, {
+      entity: Search,
+      word: 'search',
+      takeUp: (id) => this.#takeUp(id),
+    })
   }
 
   /**
@@ -33,80 +35,30 @@ export class SearchRunner {
    * drawn; looks for abandoned searches from time to time.
    */
   async start(): Promise<void> {
-    await this.#takeUpFree()
+    await this.#runs.start()
     for (const search of await unfinishedNulls(this.#parts.source.manager)) await this.#drawNull(search)
-    this.#heart = setInterval(() => {
-      this.#beat().catch((error: unknown) => this.#parts.log.error({ err: error }, 'leases were not renewed'))
-    }, leaseMilliseconds / 3)
-    this.#heart.unref()
   }
 
   stop(): void {
-    if (this.#heart) clearInterval(this.#heart)
-    for (const search of this.#running.values()) search.release()
+    this.#runs.stop()
   }
 
   /** Takes up a queued search. */
   enqueue(searchId: string): void {
-    this.#takeUp(searchId).catch((error: unknown) => {
-      if (this.#parts.closing.aborted) return
-      this.#parts.log.error({ err: error, search: searchId }, 'a search could not be taken up')
-    })
+    this.#runs.enqueue(searchId)
   }
 
-  /** Lets go of a search that was paused or cancelled. */
+  /** Lets go of a search that was paused or cancelled; segments in hand are still committed. */
   release(searchId: string): void {
-    const search = this.#running.get(searchId)
-    if (!search) return
-    search.release()
-    this.#forget(search)
+    this.#runs.release(searchId)
   }
 
   /** Resolves when this process has nothing more to do for a search that was queued with `enqueue`. */
   ended(searchId: string): Promise<void> {
-    return new Promise((resolve) => {
-      this.#listeners.set(searchId, [...(this.#listeners.get(searchId) ?? []), resolve])
-    })
-  }
-
-  #forget(search: RunningSearch): void {
-    for (const resolve of this.#listeners.get(search.id) ?? []) resolve()
-    this.#listeners.delete(search.id)
-    this.#parts.scheduler.remove(search)
-    this.#running.delete(search.id)
-    const settled = search.settled().finally(() => {
-      if (this.#settling.get(search.id) === settled) this.#settling.delete(search.id)
-    })
-    this.#settling.set(search.id, settled)
-  }
-
-  async #beat(): Promise<void> {
-    const { writes } = this.#parts
-    const ids = [...this.#running.keys()]
-    if (ids.length > 0) {
-      await writes.transaction((manager) =>
-        manager.update(
-          Search,
-          { id: In(ids), leaseOwner: thisProcess },
-          { leaseUntil: Date.now() + leaseMilliseconds },
-        ),
-      )
-    }
-    await this.#takeUpFree()
-  }
-
-  async #takeUpFree(): Promise<void> {
-    const waiting = await this.#parts.source.manager.find(Search, {
-      select: { id: true, leaseOwner: true, leaseUntil: true },
-      where: { state: In(['queued', 'running']) },
-      order: { createdAt: 'ASC' },
-    })
-    for (const search of waiting) if (isFree(search)) this.enqueue(search.id)
+    return this.#runs.ended(searchId)
   }
 
   async #takeUp(searchId: string): Promise<void> {
-    await this.#settling.get(searchId)
-    if (this.#running.has(searchId)) return
     const { source, writes, scheduler, streams, closing } = this.#parts
     const search = await source.manager.findOne(Search, {
       where: { id: searchId, state: In(['queued', 'running']) },
@@ -138,9 +90,11 @@ export class SearchRunner {
     }))
     const finds = await this.#readFinds(search)
     const taken = await writes.transaction((manager) => takeLease(manager, searchId))
-    if (!taken || closing.aborted || this.#running.has(searchId)) return
-    const running = new RunningSearch(search, islands, finds, this.#parts, (ended) => this.#forget(ended))
-    this.#running.set(searchId, running)
+    if (!taken || closing.aborted) return
+    const running = new RunningSearch(search, islands, finds, this.#parts, (ended) =>
+      this.#runs.forget(ended),
+    )
+    this.#runs.hold(running)
     streams.toCampaign(search.campaignId, {
       kind: 'search',
       id: searchId,
