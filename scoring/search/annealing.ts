@@ -9,7 +9,8 @@ import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { exchangeCount, moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
-import { drawNull, proposalOf, type PlacedHeights } from './sampling.ts'
+import { proposalOf, type PlacedHeights } from './sampling.ts'
+import { drawStart } from './starts.ts'
 import type { Json } from './state.ts'
 
 /** A descent begins at the best of so many random candidates, but with no more than a twentieth of its budget. */
@@ -42,7 +43,7 @@ interface AnnealingState {
  */
 export const annealing: Method = {
   name: 'annealing',
-  version: 1,
+  version: 2,
   description:
     'Simulated annealing over heights: exchanges of one diagonal, noise on points, 2-faces or everywhere, hops between polytopes.',
   open: (run, state) => new AnnealingChain(run, state as unknown as AnnealingState | null),
@@ -113,7 +114,7 @@ class AnnealingChain implements Chain {
     if (polytope < 0) return
     if (this.place !== undefined) run.countRestart()
     this.scouted = 1
-    const start = drawNull(run.form(polytope).polytope, run.stream)
+    const start = drawStart(run.form(polytope).polytope, run.stream)
     const merit = this.judged(polytope, proposalOf(start))
     if (merit !== null) this.stand(polytope, start, merit)
   }
@@ -122,7 +123,7 @@ class AnnealingChain implements Chain {
   private hop(onlyBetter: boolean): void {
     const polytope = this.book.draw()
     if (polytope < 0) return
-    const start = drawNull(this.run.form(polytope).polytope, this.run.stream)
+    const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
     const merit = this.judged(polytope, proposalOf(start))
     if (merit === null) return
     const accepted = onlyBetter ? compareMerits(merit, this.merit) < 0 : this.accepts(merit)

@@ -5,7 +5,8 @@ import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
-import { drawNull, proposalOf } from './sampling.ts'
+import { proposalOf } from './sampling.ts'
+import { drawStart } from './starts.ts'
 import { restoredStanding, storedStanding, type Standing, type StandingState } from './standing.ts'
 import type { Json } from './state.ts'
 
@@ -39,7 +40,7 @@ interface GeneticState {
  */
 export const genetic: Method = {
   name: 'genetic',
-  version: 1,
+  version: 2,
   description:
     'Genetic search: populations of distinct classes with migration; children by blending heights, by taking each ' +
     '2-face from one of two parents, by exchanges of one diagonal and by noise.',
@@ -106,7 +107,7 @@ class GeneticChain implements Chain {
     const { run, book } = this
     const polytope = book.draw()
     if (polytope < 0) return
-    const start = proposalOf(drawNull(run.form(polytope).polytope, run.stream))
+    const start = proposalOf(drawStart(run.form(polytope).polytope, run.stream))
     this.judged(members, polytope, start, () => worstOf(members), undefined)
   }
 

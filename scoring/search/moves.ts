@@ -3,6 +3,7 @@ import { clampToFine } from '../geometry/clampToFine.ts'
 import { flip } from '../geometry/flips.ts'
 import { isRegular } from '../geometry/regularity.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
+import { combinedPotential, potentialOffsets } from './facetPotentials.ts'
 import { gaugedHeights, searchHeightBound } from './heightGauge.ts'
 import type { Proposal } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
@@ -24,6 +25,9 @@ export const moves: readonly Move[] = [
   (place, stream) => shaken(place, stream, someFaces(place, stream, 3), 4, 10),
   (place, stream) => shaken(place, stream, place.heights.keys(), 2, 8),
   (place, stream) => shaken(place, stream, place.heights.keys(), 8, 16),
+  (place, stream) => reshaped(place, stream, 1, 0, 5),
+  (place, stream) => reshaped(place, stream, Infinity, 0, 5),
+  (place, stream) => reshaped(place, stream, Infinity, 4, 10),
 ]
 
 /** Number of diagonals that can be exchanged. */
@@ -73,6 +77,25 @@ function someFaces(place: PlacedHeights, stream: RandomStream, count: number): n
   ])
 }
 
+/** A combination of the potentials of some facets, added with width 2^-wide to 2^-narrow of the largest height. */
+function reshaped(
+  place: PlacedHeights,
+  stream: RandomStream,
+  facets: number,
+  wide: number,
+  narrow: number,
+): Proposal | undefined {
+  const { polytope } = place.class
+  const offset = potentialOffsets[stream.below(potentialOffsets.length)]
+  const width = searchHeightBound * 2 ** -(wide + (narrow - wide) * stream.uniform())
+  const only = facets === 1 ? stream.below(polytope.facetCount) : -1
+  const direction = combinedPotential(polytope, offset, (a) =>
+    only < 0 ? stream.gaussian() : a === only ? (stream.uniform() < 0.5 ? 1 : -1) : 0,
+  )
+  const towards = place.heights.map((height, p) => height + width * direction[p])
+  return stepped(place, towards)
+}
+
 /**
  * Normal noise on the heights of some points, of width 2^-wide to 2^-narrow of the largest height, the step halved
  * until the heights are fine.
@@ -87,6 +110,10 @@ function shaken(
   const width = searchHeightBound * 2 ** -(wide + (narrow - wide) * stream.uniform())
   const towards = Float64Array.from(place.heights)
   for (const p of points) towards[p] += width * stream.gaussian()
+  return stepped(place, towards)
+}
+
+function stepped(place: PlacedHeights, towards: Float64Array): Proposal | undefined {
   const step = clampToFine(place.class.polytope, place.heights, towards, place.class)
   if (!isGeneric(step.class, step.heights)) return undefined
   const gauged = gaugedHeights(step.class, step.heights)

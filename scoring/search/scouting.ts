@@ -1,7 +1,8 @@
 import { base64Of, bytesOf } from './base64.ts'
 import { compareMerits, type Merit } from './merit.ts'
 import type { Run } from './method.ts'
-import { drawNull, proposalOf } from './sampling.ts'
+import { proposalOf } from './sampling.ts'
+import { drawStart } from './starts.ts'
 
 export interface ScoutingState {
   /** Per polytope: kind and value of its best candidate so far, as little-endian bytes in base64. */
@@ -76,7 +77,7 @@ export class Scouting {
       this.run.look()
     } else {
       this.draws++
-      const start = drawNull(this.run.form(polytope).polytope, this.run.stream)
+      const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
       const merit = this.run.judge(polytope, proposalOf(start))?.merit
       if (merit === undefined) return
       if (this.kinds[polytope] === untried || compareMerits(merit, this.meritOf(polytope)) < 0) {

@@ -1,11 +1,12 @@
 import { isAccepted } from './acceptance.ts'
 import { Cooling, type CoolingState } from './cooling.ts'
-import { feasibleKind, undefinedKind, type Merit } from './merit.ts'
+import { compareMerits, feasibleKind, undefinedKind, type Merit } from './merit.ts'
 import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
-import { drawNull, proposalOf } from './sampling.ts'
+import { proposalOf } from './sampling.ts'
+import { drawStart } from './starts.ts'
 import { restoredStanding, storedStanding, type Standing, type StandingState } from './standing.ts'
 import type { Json } from './state.ts'
 
@@ -14,6 +15,9 @@ const ladder = [0.03, 0.08, 0.2, 0.5] as const
 
 /** Proposals of each replica between two rounds of exchanges. */
 const sweep = 5
+
+/** The replicas begin at the best of so many random candidates, but of no more than a twentieth of the budget. */
+const scouts = 12
 
 /** Share of hops to another polytope where the scope has several, per replica: the hot ones look around. */
 const hops = [0.02, 0.05, 0.1, 0.3] as const
@@ -35,7 +39,7 @@ interface TemperingState {
  */
 export const tempering: Method = {
   name: 'tempering',
-  version: 1,
+  version: 2,
   description:
     'Parallel tempering over heights: four chains at fixed temperatures that exchange their places; the moves of annealing.',
   open: (run, state) => new TemperingChain(run, state as unknown as TemperingState | null),
@@ -79,6 +83,10 @@ class TemperingChain implements Chain {
       run.end(book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
       return
     }
+    if (run.evaluations < Math.min(scouts, run.budget / 20)) {
+      this.scout()
+      return
+    }
     if (run.proposals >= (this.sweeps + 1) * sweep * ladder.length) this.exchangePlaces()
     const r = run.proposals % ladder.length
     const standing = this.replicas[r]
@@ -87,11 +95,24 @@ class TemperingChain implements Chain {
     else this.move(r, standing)
   }
 
+  /** A random candidate; the best of them are the replicas' first places, the best of all the coldest one's. */
+  private scout(): void {
+    const polytope = this.book.draw()
+    if (polytope < 0) return
+    const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
+    const merit = this.judged(polytope, proposalOf(start))
+    if (merit === null) return
+    const places = this.replicas.filter((standing) => standing !== null)
+    places.push({ polytope, place: start, merit })
+    places.sort((a, b) => compareMerits(a.merit, b.merit))
+    for (const r of this.replicas.keys()) this.replicas[r] = places.at(r) ?? null
+  }
+
   /** A random candidate on a polytope drawn from the open ones: a fresh start, or a proposal like any other. */
   private hop(r: number): void {
     const polytope = this.book.draw()
     if (polytope < 0) return
-    const start = drawNull(this.run.form(polytope).polytope, this.run.stream)
+    const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
     const standing = this.replicas[r]
     const merit = this.judged(polytope, proposalOf(start))
     if (merit === null) return
