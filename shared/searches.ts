@@ -3,6 +3,7 @@ import type { MethodName } from '../scoring/index.ts'
 import { scopeSchema } from './polytopes.ts'
 import { nullSummarySchema } from './nullSamples.ts'
 import { scoredRowSchema } from './outcomes.ts'
+import { searchEventSchema } from './searchEvents.ts'
 
 export const searchStates = ['queued', 'running', 'paused', 'finished', 'cancelled', 'failed'] as const
 export type SearchState = (typeof searchStates)[number]
@@ -104,5 +105,7 @@ export const searchDetailSchema = searchSummarySchema.extend({
   top: z.array(scoredRowSchema),
   failure: z.object({ code: z.string(), message: z.string() }).nullable(),
   shortlists: z.array(z.object({ id: z.string(), name: z.string() })),
+  /** What happened to it, oldest first; of many the latest 200. */
+  events: z.array(searchEventSchema),
 })
 export type SearchDetail = z.infer<typeof searchDetailSchema>

@@ -16,6 +16,7 @@ import { Membership } from './membership.ts'
 import { NullSample } from './nullSample.ts'
 import { PolytopeRecord } from './polytope.ts'
 import { Search } from './search.ts'
+import { SearchEvent } from './searchEvent.ts'
 import { SearchIsland } from './searchIsland.ts'
 import { SearchSample } from './searchSample.ts'
 import { SetUpLink } from './setUpLink.ts'
@@ -45,6 +46,7 @@ export const entities = [
   NullSample,
   PolytopeRecord,
   Search,
+  SearchEvent,
   SearchIsland,
   SearchSample,
   SetUpLink,

@@ -5,6 +5,7 @@ import { ExactClassCounts1796200200001 } from './1796200200001-exactClassCounts.
 import { RigidAndFibres1796200200002 } from './1796200200002-rigidAndFibres.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 import { CandidateInvariants1796200400000 } from './1796200400000-candidateInvariants.ts'
+import { SearchEvents1796300200000 } from './1796300200000-searchEvents.ts'
 import { SampledEvaluations1796300400000 } from './1796300400000-sampledEvaluations.ts'
 
 /** In order. A migration that has been released is never edited. */
@@ -16,5 +17,6 @@ export const migrations = [
   RigidAndFibres1796200200002,
   ImportedCandidates1796200300000,
   CandidateInvariants1796200400000,
+  SearchEvents1796300200000,
   SampledEvaluations1796300400000,
 ]

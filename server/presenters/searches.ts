@@ -1,5 +1,6 @@
 import type { NullSummary } from '../../shared/nullSamples.ts'
 import type { ScoredRow } from '../../shared/outcomes.ts'
+import type { SearchEventView } from '../../shared/searchEvents.ts'
 import type { SearchDetail, SearchSummary } from '../../shared/searches.ts'
 import type { Search } from '../entities/search.ts'
 
@@ -30,6 +31,7 @@ export interface SearchSurroundings {
   readonly ownHitLine: boolean
   readonly top: readonly ScoredRow[]
   readonly shortlists: readonly { readonly id: string; readonly name: string }[]
+  readonly events: readonly SearchEventView[]
 }
 
 export function presentSearch(search: Search, around: SearchSurroundings): SearchDetail {
@@ -49,5 +51,6 @@ export function presentSearch(search: Search, around: SearchSurroundings): Searc
     failure:
       search.failureCode === null ? null : { code: search.failureCode, message: search.failureMessage ?? '' },
     shortlists: around.shortlists.map(({ id, name }) => ({ id, name })),
+    events: [...around.events],
   }
 }

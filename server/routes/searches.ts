@@ -52,7 +52,7 @@ export function searchRoutes(app: Express, context: ServerContext): void {
       path: `/api/campaigns/:campaign/searches/:search/${word}`,
       access: 'searches.run',
       answer: searchDetailSchema,
-      handle: ({ campaign, params }) => act(context, campaign.id, params.search),
+      handle: ({ campaign, account, params }) => act(context, campaign.id, params.search, account.id),
     })
   }
 }

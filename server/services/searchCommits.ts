@@ -5,6 +5,7 @@ import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
 import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
 import type { SegmentFind, SegmentOutput } from '../jobs/segment.ts'
+import { recordSearchEvent } from './searchEvents.ts'
 
 /** A find of a search with the lowest island that made it. */
 export interface IslandFind extends SegmentFind {
@@ -66,17 +67,26 @@ export async function commitSegment(
       ...(state === 'finished' ? { finishedAt: new Date().toISOString() } : {}),
     },
   )
+  if (state === 'finished') await recordSearchEvent(manager, searchId, 'finished')
   return state
 }
 
 /** Takes a queued or abandoned search for this process; false when it was paused or cancelled meanwhile. */
 export async function takeLease(manager: EntityManager, searchId: string): Promise<boolean> {
+  const before = await manager.findOne(Search, {
+    select: { id: true, leaseOwner: true, evaluations: true },
+    where: { id: searchId },
+  })
   const { affected } = await manager.update(
     Search,
     { id: searchId, state: In(['queued', 'running']) },
     { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
   )
-  return affected !== 0
+  if (!affected) return false
+  const holder = before?.leaseOwner ?? null
+  if (holder !== null && holder !== thisProcess) await recordSearchEvent(manager, searchId, 'taken-over')
+  else if (before?.evaluations === 0) await recordSearchEvent(manager, searchId, 'started')
+  return true
 }
 
 /** Keeps what was committed, and says why the search cannot go on. */
@@ -85,7 +95,7 @@ export async function failSearch(
   searchId: string,
   failure: { readonly code: string; readonly message: string },
 ): Promise<void> {
-  await manager.update(
+  const { affected } = await manager.update(
     Search,
     { id: searchId, state: In(['queued', 'running']) },
     {
@@ -97,6 +107,7 @@ export async function failSearch(
       finishedAt: new Date().toISOString(),
     },
   )
+  if (affected) await recordSearchEvent(manager, searchId, 'failed', { note: failure.message })
 }
 
 async function storeFinds(

@@ -11,6 +11,7 @@ import { topFinds, withHitLine } from './finds.ts'
 import { readHitLine, readNullSummary } from './nullSamples.ts'
 import { leavesHitOpen, requireSoundRule } from './rules.ts'
 import { namedScope, resolveScope, scopeHash } from './scopes.ts'
+import { readSearchEvents, recordSearchEvent } from './searchEvents.ts'
 import { readVersion } from './targets.ts'
 
 const withWords = { author: true, targetVersion: { target: true } } as const
@@ -39,6 +40,7 @@ export async function readSearch(
     ownHitLine: !leavesHitOpen(search.targetVersion?.text ?? ''),
     top: top.map((row) => ({ ...row, outcome: withHitLine(row.outcome, line) })),
     shortlists: shortlists.filter(({ searchIds }) => searchIds.includes(search.id)),
+    events: await readSearchEvents(manager, search.id),
   })
 }
 
@@ -100,6 +102,7 @@ export async function createSearch(
         done: false,
       })),
     )
+    await recordSearchEvent(manager, id, 'queued', { accountId: authorId })
   })
   streams.toCampaign(campaignId, { kind: 'changed', what: 'searches' })
   jobs.searches.enqueue(id)
@@ -130,8 +133,10 @@ export function pauseSearch(
   context: ServerContext,
   campaignId: string,
   searchId: string,
+  accountId: string,
 ): Promise<SearchDetail> {
-  return move(context, campaignId, searchId, { from: ['queued', 'running'], to: 'paused', word: 'paused' })
+  const from = ['queued', 'running'] as const
+  return move(context, campaignId, searchId, { from, to: 'paused', word: 'paused', accountId })
 }
 
 /** Goes on from the last committed segment; also after a failure. */
@@ -139,9 +144,10 @@ export async function resumeSearch(
   context: ServerContext,
   campaignId: string,
   searchId: string,
+  accountId: string,
 ): Promise<SearchDetail> {
   const from = ['paused', 'failed'] as const
-  await move(context, campaignId, searchId, { from, to: 'queued', word: 'resumed' })
+  await move(context, campaignId, searchId, { from, to: 'queued', word: 'resumed', accountId })
   context.jobs.searches.enqueue(searchId)
   return readSearch(context.source.manager, campaignId, searchId)
 }
@@ -151,16 +157,22 @@ export function cancelSearch(
   context: ServerContext,
   campaignId: string,
   searchId: string,
+  accountId: string,
 ): Promise<SearchDetail> {
   const from = ['queued', 'running', 'paused', 'failed'] as const
-  return move(context, campaignId, searchId, { from, to: 'cancelled', word: 'cancelled' })
+  return move(context, campaignId, searchId, { from, to: 'cancelled', word: 'cancelled', accountId })
 }
 
 async function move(
   { source, writes, streams, jobs }: ServerContext,
   campaignId: string,
   searchId: string,
-  step: { readonly from: readonly SearchState[]; readonly to: SearchState; readonly word: string },
+  step: {
+    readonly from: readonly SearchState[]
+    readonly to: SearchState
+    readonly word: 'paused' | 'resumed' | 'cancelled'
+    readonly accountId: string
+  },
 ): Promise<SearchDetail> {
   await writes.transaction(async (manager) => {
     const search = await manager.findOneBy(Search, { campaignId, id: searchId })
@@ -179,6 +191,7 @@ async function move(
         ...(step.to === 'queued' ? { failureCode: null, failureMessage: null } : {}),
       },
     )
+    await recordSearchEvent(manager, searchId, step.word, { accountId: step.accountId })
   })
   if (step.to !== 'queued') jobs.searches.release(searchId)
   const detail = await readSearch(source.manager, campaignId, searchId)

@@ -18,6 +18,7 @@ import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
 import { AgainstNull } from './AgainstNull.tsx'
+import { EventLog } from './EventLog.tsx'
 import { NullFacts } from './NullFacts.tsx'
 import { IslandTable } from './IslandTable.tsx'
 import { MakeShortlistDialog } from './MakeShortlistDialog.tsx'
@@ -102,6 +103,9 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
           </Section>
         </div>
       </div>
+      <Section title="Log" note="What happened to the search, and who did it.">
+        <EventLog events={search.events} />
+      </Section>
       <Section title="How it was run">
         <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2">
           <Facts

@@ -129,6 +129,10 @@ describe('a search', () => {
       evaluationsPerSecond: expect.anything(),
       secondsLeft: 0,
     })
+    const kinds = ['queued', 'started', 'paused', 'resumed', 'finished']
+    expect(done.events.map(({ kind }) => kind)).toEqual(kinds)
+    expect(done.events.map(({ by }) => by)).toEqual(['Lead', null, 'Lead', 'Lead', null])
+    expect(done.events.at(-1)?.evaluations).toBe(400)
   })
 
   it('is cancelled for good, and keeps what it has found', async () => {
