@@ -68,6 +68,8 @@ export {
 export { interleaved, thinned, type Curve } from './search/curve.ts'
 export type { Find } from './search/find.ts'
 export { codeOfHeights, heightsOfCode } from './search/heightsCode.ts'
+export { rankedScores, rarenessOf, type Rareness, type RankedScores } from './search/rankedScores.ts'
+export { hitsAbove } from './search/searchStatistics.ts'
 export { Histogram, type HistogramState, type HistogramView } from './search/histogram.ts'
 export type { Evaluated, IslandHooks } from './search/island.ts'
 export { mergeIslands, type MergedIslands } from './search/islands.ts'

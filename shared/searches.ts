@@ -58,8 +58,13 @@ export const searchProgressSchema = z.object({
   islands: z.array(
     z.object({
       evaluations: z.number().int(),
-      /** Distinct candidates that the rule's own hit line holds for. */
+      /**
+       * Candidates, distinct within the island, that the rule's own hit line holds for, or that score above the
+       * null's 99 % quantile. Absent while that is not known.
+       */
       hits: z.number().int().optional(),
+      /** How many of them may lie on either side of the quantile; half of these are among `hits`. */
+      unsure: z.number().int().optional(),
       best: z.number().nullable(),
       exhausted: z.boolean(),
     }),

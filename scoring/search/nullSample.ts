@@ -4,10 +4,11 @@ import { Histogram, type HistogramView } from './histogram.ts'
 import type { IslandHooks } from './island.ts'
 import { feasibleKind } from './merit.ts'
 import type { SearchProblem } from './problem.ts'
+import { rankedScores, type RankedScores } from './rankedScores.ts'
 import { nullLaw } from './sampling.ts'
 import { searchSettingsSchema } from './settings.ts'
 import type { SearchState } from './state.ts'
-import { expectedBest, medianOf, quantileOf, rateOf, type Rate } from './statistics.ts'
+import { bestRange, expectedBest, medianOf, quantileOf, rateOf, type Rate } from './statistics.ts'
 
 /** Most candidates of one null sample. */
 export const nullSizeLimit = 10_000
@@ -30,12 +31,18 @@ export interface NullSummary {
   readonly best: number | null
   /** 99 % quantile; candidates without a score rank below all others. */
   readonly quantile99: number | null
+  /** The same at 99.9 %. */
+  readonly quantile999: number | null
   readonly histogram: HistogramView | null
   /** Rate of the rule's `hit`, or without one of scores above `quantile99`. */
   readonly hit: Rate | null
   readonly hitLine: 'rule' | 'quantile'
   /** Expected best score among n distinct candidates: [n, score]. See `expectedBest`. */
   readonly expectedBest: readonly (readonly [number, number])[]
+  /** 90 % range of the best score among n candidates: [n, low, high]. See `bestRange`. */
+  readonly bestRange: readonly (readonly [n: number, low: number, high: number | null])[]
+  /** How many candidates are at least as good as a score. */
+  readonly ranked: RankedScores
 }
 
 /** The problem whose run is a null sample of `size` candidates: method random, every evaluation kept. */
@@ -89,6 +96,7 @@ export function nullSummary(state: SearchState, rule: Pick<CheckedRule, 'hit'>):
     median: medianOf(scores),
     best: scores.at(-1) ?? null,
     quantile99,
+    quantile999: quantileOf(scores, evaluated, 0.999),
     histogram: new Histogram(state.histogram).view(),
     hit: hits === null ? null : rateOf(hits, evaluated),
     hitLine: rule.hit === null ? 'quantile' : 'rule',
@@ -96,6 +104,11 @@ export function nullSummary(state: SearchState, rule: Pick<CheckedRule, 'hit'>):
       const score = expectedBest(scores, evaluated, n)
       return score === null ? [] : [[n, score] as const]
     }),
+    bestRange: sizesUpTo(evaluated).flatMap((n) => {
+      const range = bestRange(scores, evaluated, n)
+      return range === null ? [] : [[n, ...range] as const]
+    }),
+    ranked: rankedScores(scores),
   }
 }
 

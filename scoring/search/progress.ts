@@ -1,4 +1,5 @@
 import { interleaved, type Curve } from './curve.ts'
+import type { HistogramState } from './histogram.ts'
 import type { RunEnd, SearchCounts, SearchState } from './state.ts'
 
 /** How far an island is. */
@@ -8,6 +9,8 @@ export interface IslandProgress extends SearchCounts {
   readonly best: number | null
   readonly bestKey: string | null
   readonly curve: Curve
+  /** Scores of the feasible candidates. */
+  readonly histogram: HistogramState
   readonly ended: RunEnd | null
   /** Budget used up, or ended before. */
   readonly done: boolean
@@ -30,6 +33,7 @@ export function progressOf(state: SearchState): IslandProgress {
     best: best?.score ?? null,
     bestKey: best?.key ?? null,
     curve: state.curve,
+    histogram: state.histogram,
     ended: state.ended,
     done: state.ended !== null || state.evaluations >= state.budget,
   }

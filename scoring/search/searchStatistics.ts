@@ -8,6 +8,7 @@ import {
   type Rarity,
   type SearchRate,
 } from './islandRates.ts'
+import { Histogram, type HistogramState } from './histogram.ts'
 import { feasibleKind } from './merit.ts'
 import { isMethodName, lawOf } from './methods.ts'
 import { nullSummary } from './nullSample.ts'
@@ -23,8 +24,10 @@ export interface SearchStatistics {
   readonly hitLine: 'rule' | 'quantile' | null
   /** Distinct hits per distinct evaluation. */
   readonly rate: SearchRate | null
-  /** All evaluations were looked at for `rate`, or a uniform sample of each island's. */
-  readonly rateFrom: 'all' | 'sample'
+  /** `rate` counts every hit, or hits to the accuracy of the histogram's bins: see `unsure`. */
+  readonly rateFrom: 'all' | 'bins'
+  /** Evaluations that may lie on either side of the hit line; half of them are taken for hits. */
+  readonly unsure: number
   readonly enrichment: Enrichment | null
   /** The null hits so often that most of what the search finds, chance finds as well. */
   readonly easy: boolean
@@ -47,14 +50,12 @@ export function searchStatistics(
   const law = enumerated ? 'exhaustive' : first?.method
   const line = summary?.quantile99 ?? null
   const hitLine = rule.hit !== null ? 'rule' : line === null ? null : 'quantile'
-  const counts =
-    hitLine === 'rule'
-      ? islands
-      : islands.map(({ sample: { rows } }) => ({
-          evaluations: rows.length,
-          hits: rows.filter(({ kind, value }) => kind === feasibleKind && line !== null && value > line)
-            .length,
-        }))
+  const counts = islands.map(({ evaluations, hits, histogram }) =>
+    hitLine === 'rule' || line === null
+      ? { evaluations, hits, unsure: 0 }
+      : { evaluations, ...hitsAbove(histogram, line) },
+  )
+  const unsure = hitLine === null ? 0 : counts.reduce((sum, count) => sum + count.unsure, 0)
   const pooled = hitLine === null ? null : searchRate(counts)
   const rate = pooled && enumerated ? { ...pooled, interval: null } : pooled
   const nullRate = summary?.hit ?? null
@@ -67,14 +68,21 @@ export function searchStatistics(
     exact: enumerated,
     hitLine,
     rate,
-    rateFrom:
-      hitLine === 'rule' || islands.every(({ sample: { rows, offered } }) => rows.length === offered)
-        ? 'all'
-        : 'sample',
+    rateFrom: unsure === 0 ? 'all' : 'bins',
+    unsure,
     enrichment: rate && nullRate && enrichment(rate, nullRate),
     easy: hitLine === 'rule' && nullRate !== null && isEasy(nullRate),
     rarity: sample && best > -Infinity ? rarityOf(best, scores, sample.evaluations) : null,
   }
+}
+
+/** Scores above a line, with how many of them may lie below it, which are counted half. */
+export function hitsAbove(
+  histogram: HistogramState,
+  line: number,
+): { readonly hits: number; readonly unsure: number } {
+  const { least, most } = new Histogram(histogram).countAbove(line)
+  return { hits: Math.round((least + most) / 2), unsure: most - least }
 }
 
 /** True of an island that has scored its part of a complete enumeration. */

@@ -63,6 +63,27 @@ export function quantileOf(scores: readonly number[], size: number, p: number): 
   return Number.isFinite(quantile) ? quantile : null
 }
 
+/**
+ * Range of the best score among n candidates: 5 % of such draws stay below `low`, 5 % go above `high`. The ends are
+ * the sample's quantiles at 0.05^(1/n) and 0.95^(1/n). `high` is null where fewer than one of the sample would lie
+ * above it: the sample does not know, and nothing is extrapolated. Null, too, where `low` has no score.
+ *
+ * @param scores ascending
+ * @param size number of candidates in the sample, those without a score included; they rank below all others
+ */
+export function bestRange(
+  scores: readonly number[],
+  size: number,
+  n: number,
+): readonly [low: number, high: number | null] | null {
+  const at = (p: number): number | undefined =>
+    scores[Math.ceil(size * p ** (1 / n)) - 1 - (size - scores.length)]
+  const low = at(0.05)
+  if (low === undefined) return null
+  const isKnown = size * (1 - 0.95 ** (1 / n)) >= 1
+  return [low, isKnown ? (at(0.95) ?? null) : null]
+}
+
 /** Median of those that have a score; null when none has. */
 export function medianOf(scores: readonly number[]): number | null {
   return scores.length === 0 ? null : medianSorted([...scores])

@@ -1,10 +1,11 @@
+import { readHitLine } from '../services/nullSamples.ts'
 import { commitSegment, failSearch, type IslandFind } from '../services/searchCommits.ts'
 import type { Search } from '../entities/search.ts'
 import { ComputeFailure } from './computePool.ts'
 import type { JobParts } from './jobParts.ts'
 import { SegmentPace } from './pace.ts'
 import type { WorkSource } from './scheduler.ts'
-import { mergeFinds, mergeProgress, sameFinds } from './searchProgress.ts'
+import { mergeFinds, mergeProgress, sameFinds, type HitLine } from './searchProgress.ts'
 import type { SearchProblem } from './searchProblem.ts'
 import type { IslandProgress, SegmentOutput } from './segment.ts'
 import { Refusal } from '../problems.ts'
@@ -29,6 +30,7 @@ export class RunningSearch implements WorkSource {
   readonly #pace = new SegmentPace()
   readonly #ended: (search: RunningSearch) => void
   #finds: readonly IslandFind[]
+  #hitLine: HitLine = null
   #released = false
   #inHand = new Set<Promise<void>>()
 
@@ -92,9 +94,11 @@ export class RunningSearch implements WorkSource {
     const committed = await writes.transaction(async (manager) => {
       const finds = mergeFinds(this.#finds, island.number, output.finds, this.#search.keep)
       const islands = this.#islands.map((other) => (other === island ? output.progress : other.progress))
+      this.#hitLine ??= await readHitLine(manager, this.#search, this.#search.targetVersion?.text ?? '')
       const progress = mergeProgress(islands, {
         evaluationsPerSecond: this.#pace.evaluationsPerSecond,
         budget: this.#search.budget,
+        hitLine: this.#hitLine,
       })
       const state = await commitSegment(manager, {
         searchId: this.id,
@@ -140,7 +144,7 @@ export class RunningSearch implements WorkSource {
     await writes.transaction((manager) => failSearch(manager, this.id, failure))
     const progress = mergeProgress(
       this.#islands.map((island) => island.progress),
-      { evaluationsPerSecond: null, budget: this.#search.budget },
+      { evaluationsPerSecond: null, budget: this.#search.budget, hitLine: this.#hitLine },
     )
     streams.toCampaign(this.campaignId, { kind: 'search', id: this.id, state: 'failed', progress })
     streams.toCampaign(this.campaignId, { kind: 'changed', what: 'searches' })

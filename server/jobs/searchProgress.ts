@@ -1,4 +1,4 @@
-import { interleaved } from '../../scoring/index.ts'
+import { hitsAbove, interleaved } from '../../scoring/index.ts'
 import type { SearchProgress } from '../../shared/searches.ts'
 import { compareCandidates } from '../services/finds.ts'
 import type { IslandFind } from '../services/searchCommits.ts'
@@ -7,7 +7,11 @@ import type { IslandProgress, SegmentFind } from './segment.ts'
 export interface Pace {
   readonly evaluationsPerSecond: number | null
   readonly budget: number
+  readonly hitLine: HitLine
 }
+
+/** What counts as a hit: what the rule says, or scores above a quantile of the null; null while that is not known. */
+export type HitLine = 'rule' | number | null
 
 /** The search's progress from that of its islands; the order in which these were reported does not matter. */
 export function mergeProgress(islands: readonly (IslandProgress | null)[], pace: Pace): SearchProgress {
@@ -40,8 +44,7 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
     curve: interleaved(begun).map(([at, score]) => [at, score]),
     islands: islands.map((island) => ({
       evaluations: island?.evaluations ?? 0,
-      // Not counted by versions before.
-      ...(island?.hits !== undefined && { hits: island.hits }),
+      ...(island && islandHits(island, pace.hitLine)),
       best: island?.best ?? null,
       exhausted: island?.exhausted ?? false,
     })),
@@ -49,6 +52,17 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
     evaluationsPerSecond,
     secondsLeft: evaluationsPerSecond ? Math.max(0, budget - evaluations) / evaluationsPerSecond : null,
   }
+}
+
+/** An island's hits; none where they are not known, or not counted by the version that ran it. */
+export function islandHits(
+  { hits, histogram }: Pick<IslandProgress, 'hits' | 'histogram'>,
+  line: HitLine,
+): { hits?: number; unsure?: number } {
+  if (line === 'rule') return hits === undefined ? {} : { hits }
+  if (line === null || histogram === undefined) return {}
+  const { hits: above, unsure } = hitsAbove(histogram, line)
+  return unsure === 0 ? { hits: above } : { hits: above, unsure }
 }
 
 /**

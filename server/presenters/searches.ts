@@ -1,7 +1,7 @@
 import type { NullSummary } from '../../shared/nullSamples.ts'
 import type { ScoredRow } from '../../shared/outcomes.ts'
 import type { SearchEventView } from '../../shared/searchEvents.ts'
-import type { SearchDetail, SearchSummary } from '../../shared/searches.ts'
+import type { SearchDetail, SearchProgress, SearchSummary } from '../../shared/searches.ts'
 import type { Search } from '../entities/search.ts'
 
 /** @param search with author, target version and target loaded */
@@ -27,6 +27,7 @@ export function presentSearchSummary(search: Search): SearchSummary {
 }
 
 export interface SearchSurroundings {
+  readonly progress: SearchProgress
   readonly nullSummary: NullSummary | null
   readonly ownHitLine: boolean
   readonly top: readonly ScoredRow[]
@@ -44,7 +45,7 @@ export function presentSearch(search: Search, around: SearchSurroundings): Searc
     scope: search.scope,
     islands: search.islands,
     keep: search.keep,
-    progress: search.progress,
+    progress: around.progress,
     null: around.nullSummary,
     ownHitLine: around.ownHitLine,
     top: [...around.top],

@@ -4,6 +4,7 @@ import type { OutcomeView, ScoredRow } from '../../shared/outcomes.ts'
 import { CandidateValue } from '../entities/candidateValue.ts'
 import { Find } from '../entities/find.ts'
 import type { Search } from '../entities/search.ts'
+import type { HitLine } from '../jobs/searchProgress.ts'
 
 /** A find with its value; `candidate` and its polytope are loaded. */
 export interface RankedFind {
@@ -78,8 +79,8 @@ async function outcomesOf(
   return new Map(values.map(({ candidateKey, outcome }) => [candidateKey, outcome]))
 }
 
-/** Marks what lies above the hit line of a rule without its own `hit`; with no line (null) nothing changes. */
-export function withHitLine(outcome: OutcomeView, line: number | null): OutcomeView {
-  if (outcome.kind !== 'feasible' || line === null) return outcome
+/** Marks what lies above the null's quantile where that is the hit line; else nothing changes. */
+export function withHitLine(outcome: OutcomeView, line: HitLine): OutcomeView {
+  if (outcome.kind !== 'feasible' || typeof line !== 'number') return outcome
   return { ...outcome, hit: outcome.score > line }
 }

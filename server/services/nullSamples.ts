@@ -4,6 +4,7 @@ import { engineVersion } from '../../scoring/index.ts'
 import type { NullSummary } from '../../shared/nullSamples.ts'
 import { NullSample } from '../entities/nullSample.ts'
 import { Search } from '../entities/search.ts'
+import type { HitLine } from '../jobs/searchProgress.ts'
 import type { NullChunkOutput } from '../jobs/nullChunk.ts'
 import { leavesHitOpen } from './rules.ts'
 
@@ -15,20 +16,24 @@ export async function readNullSummary(
   manager: EntityManager,
   { scopeHash, scoringHash }: NullAddress,
 ): Promise<NullSummary | null> {
-  const sample = await manager.findOneBy(NullSample, { scopeHash, scoringHash })
+  // Its state, which may be large, stays where it is.
+  const sample = await manager.findOne(NullSample, {
+    select: { id: true, summary: true },
+    where: { scopeHash, scoringHash },
+  })
   return sample?.summary ?? null
 }
 
 /**
- * The score above which a candidate is a hit of a rule that does not say so itself: the 99 % quantile of its null
- * sample. Null while the sample is incomplete, and for a rule with its own `hit`.
+ * What counts as a hit: `rule` where the rule says so itself, else scores above the 99 % quantile of its null
+ * sample; null while that is incomplete.
  */
 export async function readHitLine(
   manager: EntityManager,
   address: NullAddress,
   ruleText: string,
-): Promise<number | null> {
-  if (!leavesHitOpen(ruleText)) return null
+): Promise<HitLine> {
+  if (!leavesHitOpen(ruleText)) return 'rule'
   const summary = await readNullSummary(manager, address)
   return summary?.complete ? summary.quantile99 : null
 }

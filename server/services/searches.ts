@@ -5,11 +5,13 @@ import type { ServerContext } from '../context.ts'
 import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
 import { Shortlist } from '../entities/shortlist.ts'
+import { islandHits, type HitLine } from '../jobs/searchProgress.ts'
+import type { IslandProgress } from '../jobs/segment.ts'
 import { presentSearch } from '../presenters/searches.ts'
 import { conflict, notFound } from '../problems.ts'
 import { topFinds, withHitLine } from './finds.ts'
 import { readHitLine, readNullSummary } from './nullSamples.ts'
-import { leavesHitOpen, requireSoundRule } from './rules.ts'
+import { requireSoundRule } from './rules.ts'
 import { namedScope, resolveScope, scopeHash } from './scopes.ts'
 import { readSearchEvents, recordSearchEvent } from './searchEvents.ts'
 import { readVersion } from './targets.ts'
@@ -36,12 +38,42 @@ export async function readSearch(
   const line = await readHitLine(manager, search, search.targetVersion?.text ?? '')
   const top = await topFinds(manager, search, 20)
   return presentSearch(search, {
+    progress: await progressWithHits(manager, search, line),
     nullSummary: await readNullSummary(manager, search),
-    ownHitLine: !leavesHitOpen(search.targetVersion?.text ?? ''),
+    ownHitLine: line === 'rule',
     top: top.map((row) => ({ ...row, outcome: withHitLine(row.outcome, line) })),
     shortlists: shortlists.filter(({ searchIds }) => searchIds.includes(search.id)),
     events: await readSearchEvents(manager, search.id),
   })
+}
+
+/**
+ * A search's progress with the hits of its islands. A null sample may be complete only after the search has ended, so
+ * what lies above its quantile is counted here, from what each island stored last.
+ */
+export async function progressWithHits(
+  manager: EntityManager,
+  { id, progress }: Pick<Search, 'id' | 'progress'>,
+  line: HitLine,
+): Promise<SearchProgress> {
+  if (line === 'rule') return progress
+  if (line === null) return { ...progress, islands: progress.islands.map(withoutHits) }
+  const rows = await manager.find(SearchIsland, {
+    select: { searchId: true, number: true, progress: true },
+    where: { searchId: id },
+    order: { number: 'ASC' },
+  })
+  const islands = progress.islands.map((island, n) => {
+    const text = rows.at(n)?.progress ?? null
+    return text === null ? island : { ...island, ...islandHits(JSON.parse(text) as IslandProgress, line) }
+  })
+  return { ...progress, islands }
+}
+
+/** Versions before counted none where the rule has no hit line; that is not known to be none. */
+function withoutHits({ hits, unsure, ...island }: SearchProgress['islands'][number]) {
+  void [hits, unsure]
+  return island
 }
 
 /**

@@ -10,6 +10,7 @@ import type { ExportedCandidate } from '../presenters/shortlistExports.ts'
 import { presentShortlist } from '../presenters/shortlists.ts'
 import { notFound, unprocessable } from '../problems.ts'
 import { certificateMarks } from './certificates.ts'
+import type { HitLine } from '../jobs/searchProgress.ts'
 import { rankedFinds, withHitLine } from './finds.ts'
 import { readHitLine } from './nullSamples.ts'
 import { ownNames } from './polytopes.ts'
@@ -109,7 +110,7 @@ export async function createShortlist(
   }
   const id = randomUUID()
   await writes.transaction(async (manager) => {
-    const lines = new Map<string, number | null>()
+    const lines = new Map<string, HitLine>()
     for (const search of searches) {
       lines.set(search.id, await readHitLine(manager, search, search.targetVersion?.text ?? ''))
     }

@@ -22,10 +22,7 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
     case 'search':
       return applySearch(client, campaign, event)
     case 'null':
-      client.setQueryData<SearchDetail>(['search', event.searchId], (old) =>
-        old ? { ...old, null: event.summary } : old,
-      )
-      return
+      return applyNull(client, event)
     case 'preview':
       client.setQueryData(previewKey(event.preview.id), event.preview)
       return
@@ -59,6 +56,14 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       if (event.reason === 'signed-out') void client.invalidateQueries({ queryKey: sessionKey })
       if (event.reason === 'role-lost') void client.invalidateQueries()
   }
+}
+
+/** Where the null decides what a hit is, hits are counted anew when it is complete. */
+function applyNull(client: QueryClient, { searchId, summary }: StreamEvent & { kind: 'null' }): void {
+  const known = client.getQueryData<SearchDetail>(['search', searchId])
+  if (known) client.setQueryData<SearchDetail>(['search', searchId], { ...known, null: summary })
+  if (known?.ownHitLine === false && summary.complete)
+    void client.invalidateQueries({ queryKey: ['search', searchId] })
 }
 
 /** A certificate that was made goes into the shortlists of its target version; what only moved is asked for again. */

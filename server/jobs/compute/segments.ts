@@ -77,7 +77,12 @@ export function previewChunk({ problem, state, evaluations }: NullChunkInput): P
   void hitLine
   return {
     state: JSON.stringify(output.state),
-    summary: { ...summary, expectedBest: summary.expectedBest.map(([n, score]) => [n, score]) },
+    summary: {
+      ...summary,
+      expectedBest: summary.expectedBest.map(([n, score]) => [n, score]),
+      bestRange: summary.bestRange.map(([n, low, high]) => [n, low, high]),
+      ranked: summary.ranked.map(([score, better, atLeast]) => [score, better, atLeast]),
+    },
     done: summary.complete,
     milliseconds: performance.now() - begun,
     rows: output.rows.map(({ classKey, outcome, ...row }) => ({

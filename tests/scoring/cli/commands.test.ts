@@ -182,7 +182,7 @@ describe('search', () => {
       caution,
       method: 'annealing',
       progress: { evaluations: 60, done: true },
-      statistics: { law: null, exact: false, hitLine: 'quantile', rateFrom: 'all', easy: false },
+      statistics: { law: null, exact: false, hitLine: 'quantile', easy: false },
       null: { size: 30, evaluated: 30, complete: true },
     })
     const top = final?.top as { classKey: string; score: { value: number } }[]

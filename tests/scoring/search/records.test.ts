@@ -84,6 +84,40 @@ describe('histogram', () => {
     )
   })
 
+  it('counts what lies above a line, exactly but for the values of one bin', () => {
+    fc.assert(
+      fc.property(
+        fc.array(value, { minLength: 1, maxLength: 60 }),
+        value,
+        fc.nat(59),
+        (values, other, pick) => {
+          const histogram = new Histogram()
+          for (const v of values) histogram.add(v)
+          for (const line of [other, values[pick % values.length]]) {
+            const { least, most } = histogram.countAbove(line)
+            const above = values.filter((v) => v > line).length
+            expect(least).toBeLessThanOrEqual(above)
+            expect(most).toBeGreaterThanOrEqual(above)
+          }
+        },
+      ),
+    )
+  })
+
+  it('counts equal values exactly, and says so of a state that does not know its values', () => {
+    const histogram = new Histogram()
+    for (const v of [0, 3, 3, 3, 4, 1000]) histogram.add(v)
+    expect(histogram.countAbove(3)).toEqual({ least: 2, most: 2 })
+    const { ends, ...earlier } = histogram.state()
+    expect(ends).toHaveLength(4)
+    expect(new Histogram(earlier).countAbove(3)).toEqual({ least: 2, most: 5 })
+    const narrow = { width: 1, start: -64, counts: new Array<number>(128).fill(1) }
+    const restored = new Histogram(narrow)
+    restored.add(500)
+    expect(restored.countAbove(62.5)).toEqual({ least: 1, most: 3 })
+    expect(restored.view()?.counts.reduce((a, b) => a + b)).toBe(129)
+  })
+
   it('merges with another without moving a count across an edge', () => {
     fc.assert(
       fc.property(fc.array(value, { maxLength: 30 }), fc.array(value, { maxLength: 30 }), (a, b) => {

@@ -1,6 +1,6 @@
 import fc from 'fast-check'
 import { describe, expect, it } from 'vitest'
-import { expectedBest, quantileOf, rateOf } from '../../../scoring/search/statistics.ts'
+import { bestRange, expectedBest, quantileOf, rateOf } from '../../../scoring/search/statistics.ts'
 
 describe('rate with interval', () => {
   it('agrees with a worked example of the score interval', () => {
@@ -46,6 +46,33 @@ describe('expected best of n', () => {
         },
       ),
     )
+  })
+})
+
+describe('range of the best of n', () => {
+  const scores = Array.from({ length: 2000 }, (_, i) => i + 1)
+
+  it('holds nine in ten of the best of n independent draws', () => {
+    // For a uniform distribution the best of n has the distribution function x^n.
+    for (const n of [1, 5, 40]) {
+      const [low, high] = bestRange(scores, 2000, n) ?? [Number.NaN, null]
+      expect((low / 2000) ** n).toBeCloseTo(0.05, 1)
+      expect(((high ?? Number.NaN) / 2000) ** n).toBeCloseTo(0.95, 1)
+    }
+  })
+
+  it('leaves the upper end open where the sample is too small to know it', () => {
+    // 2000 (1 - 0.95^(1/n)) falls below 1 between n = 102 and 103.
+    expect(bestRange(scores, 2000, 102)?.[1]).toBe(1999)
+    expect(bestRange(scores, 2000, 103)?.[1]).toBeNull()
+    expect(bestRange(scores, 2000, 2000)?.[0]).toBe(1998)
+  })
+
+  it('ranks candidates without a score below all others', () => {
+    expect(bestRange([7, 8], 100, 1)).toBeNull()
+    expect(bestRange([7, 8], 100, 2)).toBeNull()
+    expect(bestRange([6, 7, 8], 100, 100)).toEqual([6, null])
+    expect(bestRange([], 100, 5)).toBeNull()
   })
 })
 

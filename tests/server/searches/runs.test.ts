@@ -95,20 +95,34 @@ describe('a search', () => {
       .post(hunt.path('/targets'))
       .send({ name: 'Hit left open', text: 'score log10(metric.divisor.top)' })
       .expect(201)
-    const { id } = await hunt.start({ targetVersionId: target.versions[0].id, seed: 6 })
+    const { id } = await hunt.start({
+      targetVersionId: target.versions[0].id,
+      seed: 6,
+      islands: 1,
+      keep: 60,
+    })
     await hunt.finished(id)
     await expect
       .poll(async () => (await hunt.read(id)).null?.complete, { timeout: 50_000, interval: 250 })
       .toBe(true)
-    const { top, null: summary } = await hunt.read(id)
+    const { top, null: summary, progress, ownHitLine } = await hunt.read(id)
     const { body: shortlist } = await hunt.lead
       .post(hunt.path('/shortlists'))
-      .send({ name: 'Hits by quantile', searchIds: [id], size: 20 })
+      .send({ name: 'Hits by quantile', searchIds: [id], size: 60 })
       .expect(201)
     for (const { outcome } of [...top, ...(shortlist as ShortlistDetail).rows]) {
       if (outcome.kind !== 'feasible') throw new Error('a rule without require is feasible everywhere')
       expect(outcome.hit).toBe(outcome.score > (summary?.quantile99 ?? Number.NaN))
     }
+    // All that was evaluated is in the list, so that the count of the island can be checked one by one.
+    expect(ownHitLine).toBe(false)
+    const { rows } = shortlist as ShortlistDetail
+    expect(rows).toHaveLength(60)
+    const hits = rows.filter(({ outcome }) => outcome.kind === 'feasible' && outcome.hit).length
+    const [{ hits: counted, unsure = 0 }] = progress.islands
+    expect(Math.abs((counted ?? Number.NaN) - hits)).toBeLessThanOrEqual(unsure / 2)
+    expect(summary?.ranked?.[0]).toEqual([summary?.best, 0, 1])
+    expect(summary?.bestRange?.length).toBeGreaterThan(3)
   })
 
   it('pauses, goes on and ends as if nothing had been', async () => {
