@@ -71,6 +71,7 @@ export { codeOfHeights, heightsOfCode } from './search/heightsCode.ts'
 export { rankedScores, rarenessOf, type Rareness, type RankedScores } from './search/rankedScores.ts'
 export { hitsAbove } from './search/searchStatistics.ts'
 export { Histogram, type HistogramState, type HistogramView } from './search/histogram.ts'
+export { drawCandidates, drawnLimit, type DrawnCandidate } from './search/drawnCandidates.ts'
 export type { Evaluated, IslandHooks } from './search/island.ts'
 export { mergeIslands, type MergedIslands } from './search/islands.ts'
 export {
@@ -86,6 +87,7 @@ export {
   type SegmentOutput,
 } from './search/jobs.ts'
 export { OutcomeMemo } from './search/memo.ts'
+export { feasibleKind } from './search/merit.ts'
 export { isMethodName, methodNames, methods, type MethodName } from './search/methods.ts'
 export { nullProblem, nullSample, nullSizeLimit, nullSummary, type NullSummary } from './search/nullSample.ts'
 export {

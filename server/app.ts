@@ -13,6 +13,7 @@ import { campaignRoutes } from './routes/campaigns.ts'
 import { candidateRoutes } from './routes/candidates.ts'
 import { certificateRoutes } from './routes/certificates.ts'
 import { collectionRoutes } from './routes/collections.ts'
+import { explorationRoutes } from './routes/explorations.ts'
 import { eventRoutes } from './routes/events.ts'
 import { healthRoutes } from './routes/health.ts'
 import { importedCandidateRoutes } from './routes/importedCandidates.ts'
@@ -46,6 +47,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   polytopeRoutes(app, context)
   collectionRoutes(app, context)
   targetRoutes(app, context)
+  explorationRoutes(app, context)
   searchRoutes(app, context)
   shortlistRoutes(app, context)
   candidateRoutes(app, context)

@@ -2,6 +2,7 @@ import { InputError } from '../scoring/index.ts'
 import { candidateGeometry, candidateSpectra } from './jobs/compute/candidateGeometry.ts'
 import { certifyCandidate } from './jobs/compute/certifyCandidate.ts'
 import { classPictures } from './jobs/compute/classPictures.ts'
+import { columnCells, drawSample, genericHeights } from './jobs/compute/exploreSample.ts'
 import { factsOfEach, factsOfWeights, pointBlocks } from './jobs/compute/importBlocks.ts'
 import {
   candidatesOfText,
@@ -41,6 +42,9 @@ const tasks: Tasks = {
   'search-segment': searchSegment,
   'null-chunk': nullChunk,
   'preview-chunk': previewChunk,
+  'draw-sample': drawSample,
+  'column-cells': columnCells,
+  'generic-heights': genericHeights,
   'facet-generic-finds': facetGenericFinds,
 }
 

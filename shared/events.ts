@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { certificateMarkSchema, certificationSchema } from './certificates.ts'
+import { explorationSchema } from './explorations.ts'
 import { candidateKeySchema } from './keys.ts'
 import { previewSchema } from './targets.ts'
 import { searchProgressSchema, searchStates } from './searches.ts'
@@ -18,6 +19,7 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
   }),
   z.object({ kind: z.literal('null'), searchId: z.string(), summary: nullSummarySchema }),
   z.object({ kind: z.literal('preview'), preview: previewSchema }),
+  z.object({ kind: z.literal('exploration'), exploration: explorationSchema }),
   z.object({
     kind: z.literal('certification'),
     certification: certificationSchema,

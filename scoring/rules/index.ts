@@ -10,6 +10,13 @@ export {
   type EvaluationOptions,
   type RequireResult,
 } from './evaluate.ts'
+export {
+  checkColumn,
+  columnLead,
+  evaluateColumn,
+  type ColumnCheck,
+  type ExpressionColumn,
+} from './expressionColumn.ts'
 export { canonicalText, formatExpression, formatRule } from './format.ts'
 export { parser as ruleParser } from './generated/parser.ts'
 export { scoringHash } from './hash.ts'

@@ -1,4 +1,5 @@
 import { InputError } from '../errors.ts'
+import { isGeneric } from '../geometry/circuits.ts'
 import { canonicalClass } from '../geometry/classKey.ts'
 import type { NormalForm } from '../geometry/normalForm.ts'
 import { transportHeights } from '../geometry/transport.ts'
@@ -42,8 +43,10 @@ export interface Evaluated {
   readonly form: NormalForm
   readonly classKey: string
   readonly outcome: Outcome
-  /** Integer heights that give the canonical class. */
+  /** Integer heights that give the canonical class, strictly inside it and in general position. */
   heights(): Float64Array
+  /** The same at less cost: strictly inside the class, and no more. */
+  plainHeights(): Float64Array
 }
 
 /** An island at work: a state opened up, which the chain of its method drives. */
@@ -205,7 +208,9 @@ export class Island implements Run {
         heights: codeOfHeights(witness()),
       })
     }
-    this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness })
+    const plain = (): Float64Array =>
+      isGeneric(proposal.class, heights) ? transportHeights(heights, canonical.relabelling) : witness()
+    this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness, plainHeights: plain })
     return { merit, key: canonical.key, isNew: true }
   }
 

@@ -9,6 +9,10 @@ import { Certification } from './certification.ts'
 import { CertificationTask } from './certificationTask.ts'
 import { Collection } from './collection.ts'
 import { CollectionPolytope } from './collectionPolytope.ts'
+import { ExploredCandidate } from './exploredCandidate.ts'
+import { ExploredCells } from './exploredCells.ts'
+import { ExploredColumn } from './exploredColumn.ts'
+import { ExploredSample } from './exploredSample.ts'
 import { Find } from './find.ts'
 import { ImportedCandidate } from './importedCandidate.ts'
 import { LibraryFile } from './libraryFile.ts'
@@ -39,6 +43,10 @@ export const entities = [
   CertificationTask,
   Collection,
   CollectionPolytope,
+  ExploredCandidate,
+  ExploredCells,
+  ExploredColumn,
+  ExploredSample,
   Find,
   ImportedCandidate,
   LibraryFile,

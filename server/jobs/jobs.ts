@@ -6,6 +6,7 @@ import { RecentResults } from '../services/recentResults.ts'
 import { CertificationRunner } from './certificationRunner.ts'
 import { ClassCounts } from './classCounts.ts'
 import { ComputePool } from './computePool.ts'
+import { Explorations } from './explorations.ts'
 import { InvariantsFiller } from './invariantsFiller.ts'
 import type { JobParts } from './jobParts.ts'
 import { NullSampler } from './nullSampler.ts'
@@ -23,6 +24,8 @@ export interface Jobs {
   readonly searches: SearchRunner
   readonly certifications: CertificationRunner
   readonly previews: Previews
+  /** Observables over samples. */
+  readonly explorations: Explorations
   /** Wall-type invariants of candidates, in the background. */
   readonly invariants: InvariantsFiller
   /** What polytope pages show, by polytope key. */
@@ -72,6 +75,7 @@ export function openJobs(
   const scheduler = new Scheduler(workers)
   const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
   const certifications = new CertificationRunner(all)
+  const explorations = new Explorations(all)
   const searches = new SearchRunner(all, new NullSampler(all, options.nullSize))
   return {
     scheduler,
@@ -81,6 +85,7 @@ export function openJobs(
     searches,
     certifications,
     previews: new Previews(all),
+    explorations,
     invariants: new InvariantsFiller(all),
     shapes: new RecentResults(200),
     structures: new RecentResults(100),
@@ -93,6 +98,7 @@ export function openJobs(
       scheduler.stop()
       searches.stop()
       certifications.stop()
+      explorations.stopAll()
       await Promise.all([background.close(), interactive.close(), unhurried.close()])
     },
   }

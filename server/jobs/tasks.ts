@@ -1,6 +1,7 @@
 import type { candidateGeometry, candidateSpectra } from './compute/candidateGeometry.ts'
 import type { certifyCandidate } from './compute/certifyCandidate.ts'
 import type { classPictures } from './compute/classPictures.ts'
+import type { columnCells, drawSample, genericHeights } from './compute/exploreSample.ts'
 import type { factsOfEach, factsOfWeights, pointBlocks } from './compute/importBlocks.ts'
 import type {
   candidatesOfText,
@@ -40,6 +41,9 @@ export interface Tasks {
   'search-segment': typeof searchSegment
   'null-chunk': typeof nullChunk
   'preview-chunk': typeof previewChunk
+  'draw-sample': typeof drawSample
+  'column-cells': typeof columnCells
+  'generic-heights': typeof genericHeights
   'facet-generic-finds': typeof facetGenericFinds
 }
 

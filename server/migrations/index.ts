@@ -7,6 +7,7 @@ import { ImportedCandidates1796200300000 } from './1796200300000-importedCandida
 import { CandidateInvariants1796200400000 } from './1796200400000-candidateInvariants.ts'
 import { SearchEvents1796300200000 } from './1796300200000-searchEvents.ts'
 import { SampledEvaluations1796300400000 } from './1796300400000-sampledEvaluations.ts'
+import { Explorations1796300400001 } from './1796300400001-explorations.ts'
 
 /** In order. A migration that has been released is never edited. */
 export const migrations = [
@@ -19,4 +20,5 @@ export const migrations = [
   CandidateInvariants1796200400000,
   SearchEvents1796300200000,
   SampledEvaluations1796300400000,
+  Explorations1796300400001,
 ]

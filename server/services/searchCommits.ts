@@ -169,6 +169,20 @@ export async function storeCandidates(
   finds: readonly SegmentFind[],
 ): Promise<void> {
   if (finds.length === 0) return
+  await storeHeights(manager, finds)
+  const values = finds.map(({ candidateKey, outcome }) => [candidateKey, JSON.stringify(outcome)])
+  await manager.query(
+    `INSERT OR IGNORE INTO candidate_value (candidateKey, scoringHash, outcome)
+     SELECT value ->> 0, ?, value ->> 1 FROM json_each(?)`,
+    [scoringHash, JSON.stringify(values)],
+  )
+}
+
+/** Candidates with heights that tie nowhere; those that are stored keep theirs. */
+export async function storeHeights(
+  manager: EntityManager,
+  finds: readonly Pick<SegmentFind, 'candidateKey' | 'polytopeKey' | 'heights'>[],
+): Promise<void> {
   const candidates = finds.map(({ candidateKey, polytopeKey, heights }) => [
     candidateKey,
     polytopeKey,
@@ -178,11 +192,5 @@ export async function storeCandidates(
     `INSERT OR IGNORE INTO candidate ("key", polytopeKey, heights)
      SELECT value ->> 0, value ->> 1, value ->> 2 FROM json_each(?)`,
     [JSON.stringify(candidates)],
-  )
-  const values = finds.map(({ candidateKey, outcome }) => [candidateKey, JSON.stringify(outcome)])
-  await manager.query(
-    `INSERT OR IGNORE INTO candidate_value (candidateKey, scoringHash, outcome)
-     SELECT value ->> 0, ?, value ->> 1 FROM json_each(?)`,
-    [scoringHash, JSON.stringify(values)],
   )
 }

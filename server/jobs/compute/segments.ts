@@ -6,6 +6,7 @@ import {
   segmentJob,
   type Find,
   type PolytopeEntry,
+  type PolytopeSource,
   type SearchState,
 } from '../../../scoring/index.ts'
 import type { NullChunkInput, NullChunkOutput, PreviewChunkOutput } from '../nullChunk.ts'
@@ -113,7 +114,10 @@ function findView({ classKey, polytopeKey, heights, outcome }: Find): SegmentFin
   return { candidateKey: classKey, polytopeKey, heights: [...heights], outcome: outcomeView(outcome) }
 }
 
-const stateOf = (text: string | null) => (text === null ? null : (JSON.parse(text) as SearchState))
+export const stateOf = (text: string | null) => (text === null ? null : (JSON.parse(text) as SearchState))
+
+/** The polytopes of a scope given as text, see `ScoredScope`. */
+export const scopeSource = (text: string): PolytopeSource => session.sourceOf(entriesOf(text))
 
 /** The polytopes of a scope; the last few scopes stay parsed. */
 function entriesOf(text: string): readonly PolytopeEntry[] {
