@@ -1,6 +1,7 @@
 import { InvariantError } from '../errors.ts'
 import { gcd } from './integers.ts'
 import { edgeRow, type IntersectionNumbers } from './intersectionNumbers.ts'
+import type { Polytope } from './polytope.ts'
 import type { TwoFaceClass } from './twoFaceClass.ts'
 
 /**
@@ -61,7 +62,10 @@ export function curveRows(twoFaceClass: TwoFaceClass, numbers: IntersectionNumbe
     if (edgeNumbers[2 * e + 1] !== 0) insert(e, edges[2 * e + 1], edgeNumbers[2 * e + 1])
     let divisor = 0
     for (let q = starts[e]; q < starts[e + 1]; q++) {
-      divisor = gcd(divisor, insideFace[e] ? coefficients[q] : perComponent(coefficients[q], points[q]))
+      divisor = gcd(
+        divisor,
+        insideFace[e] ? coefficients[q] : perComponent(polytope, coefficients[q], points[q]),
+      )
     }
     for (let q = starts[e]; q < starts[e + 1]; q++) coefficients[q] /= divisor
   }
@@ -76,14 +80,51 @@ export function curveRows(twoFaceClass: TwoFaceClass, numbers: IntersectionNumbe
     points[q] = point
     coefficients[q] = coefficient
   }
+}
 
-  function perComponent(coefficient: number, point: number): number {
-    const share = coefficient / polytope.components[point]
-    if (!Number.isInteger(share)) {
-      throw new InvariantError(
-        `A curve meets D_${point} ${coefficient} times, not a multiple of its ${polytope.components[point]} components.`,
-      )
-    }
-    return share
+/** The coefficients of one row of `curveRows`, in any order. */
+export function curveRow(
+  { triangles, faceOf, polytope }: TwoFaceClass,
+  { edges, edgeNumbers, triangleNumbers }: IntersectionNumbers,
+  e: number,
+): number[] {
+  const i = edges[2 * e]
+  const j = edges[2 * e + 1]
+  const points: number[] = []
+  const coefficients: number[] = []
+  let face = -1
+  let insideFace = true
+  for (let t = 0; t < faceOf.length; t++) {
+    const p = triangles[3 * t]
+    // Triangles are sorted, i < j: beyond i none has both.
+    if (p > i) break
+    const q = triangles[3 * t + 1]
+    const r = triangles[3 * t + 2]
+    const third = p === i ? (q === j ? r : r === j ? q : -1) : q === i && r === j ? p : -1
+    if (third < 0) continue
+    points.push(third)
+    coefficients.push(triangleNumbers[t])
+    if (face >= 0 && face !== faceOf[t]) insideFace = false
+    face = faceOf[t]
   }
+  for (const at of [2 * e, 2 * e + 1]) {
+    if (edgeNumbers[at] === 0) continue
+    points.push(edges[at])
+    coefficients.push(edgeNumbers[at])
+  }
+  let divisor = 0
+  for (let n = 0; n < points.length; n++) {
+    divisor = gcd(divisor, insideFace ? coefficients[n] : perComponent(polytope, coefficients[n], points[n]))
+  }
+  return coefficients.map((coefficient) => coefficient / divisor)
+}
+
+function perComponent({ components }: Polytope, coefficient: number, point: number): number {
+  const share = coefficient / components[point]
+  if (!Number.isInteger(share)) {
+    throw new InvariantError(
+      `A curve meets D_${point} ${coefficient} times, not a multiple of its ${components[point]} components.`,
+    )
+  }
+  return share
 }

@@ -108,7 +108,9 @@ export function edgeRow(edges: Int32Array, i: number, j: number): number {
 
 /** kappa_ijk for any three points, equal ones included. */
 export function intersectionNumber(numbers: IntersectionNumbers, i: number, j: number, k: number): number {
-  const [p, q, r] = [i, j, k].sort((a, b) => a - b)
+  const p = Math.min(i, j, k)
+  const r = Math.max(i, j, k)
+  const q = i + j + k - p - r
   if (p === r) return numbers.cubes[p]
   if (p === q || q === r) {
     const e = edgeRow(numbers.edges, p, r)

@@ -1,4 +1,4 @@
-import type { CurveRows } from '../geometry/curves.ts'
+import { curveRow, type CurveRows } from '../geometry/curves.ts'
 import { ofCone, ofTopology, SOURCES } from './described.ts'
 import type { RecordSet, ValueField } from './observable.ts'
 
@@ -11,6 +11,8 @@ const folded = (
   type: 'integer',
   ...entry,
   column: (candidate) => foldRows(candidate.curves(), fold),
+  at: (candidate, e) =>
+    curveRow(candidate.class, candidate.numbers(), e).reduce((value, entry) => fold(value, entry), 0),
 })
 
 function foldRows(
@@ -35,7 +37,7 @@ export const curves: RecordSet = {
     convention: 'primitive classes: the row of intersection numbers divided by its greatest common divisor',
     formula: 'C_{ij} = D_i \\cdot D_j / \\gcd',
   }),
-  size: (candidate) => candidate.curves().starts.length - 1,
+  size: (candidate) => candidate.numbers().edges.length / 2,
   fields: [
     {
       kind: 'value',

@@ -4,8 +4,10 @@ import { ofCone, ofPolytope, ofTopology, SOURCES, TOTAL_OF_COMPONENTS } from './
 import type { Described, RecordSet, ValueField, ValueType } from './observable.ts'
 import {
   abelianFibres,
+  diagonalDelPezzoDegree,
   diagonalDelPezzoDegrees,
   enriquesHalfFibres,
+  isSquareZeroWith,
   k3Fibres,
   neighbours,
 } from './specialDivisors.ts'
@@ -16,6 +18,9 @@ const field = (
   type: ValueType = 'integer',
   undefinedWhen?: string,
 ): ValueField => ({ kind: 'value', type, ...entry, column, ...(undefinedWhen ? { undefinedWhen } : {}) })
+
+/** Adds how one divisor's entry is read alone. */
+const local = (of: ValueField, at: NonNullable<ValueField['at']>): ValueField => ({ ...of, at })
 
 /** Read off the polytope, so that a rule can turn a polytope away before anything is triangulated. */
 const topological = (
@@ -31,7 +36,10 @@ const topological = (
   )
 
 const degrees = (candidate: Candidate) =>
-  diagonalDelPezzoDegrees(candidate.numbers(), divisorTopology(candidate.polytope).chi)
+  diagonalDelPezzoDegrees(candidate.numbers(), candidate.divisorTopology().chi)
+
+const degree = (candidate: Candidate, i: number) =>
+  diagonalDelPezzoDegree(candidate.numbers(), candidate.divisorTopology().chi, i)
 
 /** The prime toric divisors, one per point. */
 export const divisors: RecordSet = {
@@ -57,35 +65,44 @@ export const divisors: RecordSet = {
       (candidate) => candidate.volumes().divisors,
       'number',
     ),
-    field(
-      ofTopology({
-        name: 'cubic',
-        description: 'Triple self-intersection.',
-        convention: TOTAL_OF_COMPONENTS,
-        formula: 'D_i^3 = \\kappa_{iii}',
-      }),
-      (candidate) => candidate.numbers().cubes,
+    local(
+      field(
+        ofTopology({
+          name: 'cubic',
+          description: 'Triple self-intersection.',
+          convention: TOTAL_OF_COMPONENTS,
+          formula: 'D_i^3 = \\kappa_{iii}',
+        }),
+        (candidate) => candidate.numbers().cubes,
+      ),
+      (candidate, i) => candidate.numbers().cubes[i],
     ),
-    field(
-      ofTopology({
-        name: 'c2',
-        description: 'Second Chern class of the threefold on the divisor.',
-        convention: TOTAL_OF_COMPONENTS,
-        formula: 'c_2(X) \\cdot D_i = \\sum_{j<k} \\kappa_{ijk}',
-      }),
-      (candidate) => candidate.numbers().secondChern,
+    local(
+      field(
+        ofTopology({
+          name: 'c2',
+          description: 'Second Chern class of the threefold on the divisor.',
+          convention: TOTAL_OF_COMPONENTS,
+          formula: 'c_2(X) \\cdot D_i = \\sum_{j<k} \\kappa_{ijk}',
+        }),
+        (candidate) => candidate.numbers().secondChern,
+      ),
+      (candidate, i) => candidate.numbers().secondChern[i],
     ),
-    field(
-      ofTopology({
-        name: 'euler',
-        description: 'Topological Euler number of the divisor.',
-        convention: TOTAL_OF_COMPONENTS,
-        formula: '\\chi(D_i) = \\kappa_{iii} + c_2 \\cdot D_i',
-      }),
-      (candidate) => {
-        const { cubes, secondChern } = candidate.numbers()
-        return cubes.map((cube, i) => cube + secondChern[i])
-      },
+    local(
+      field(
+        ofTopology({
+          name: 'euler',
+          description: 'Topological Euler number of the divisor.',
+          convention: TOTAL_OF_COMPONENTS,
+          formula: '\\chi(D_i) = \\kappa_{iii} + c_2 \\cdot D_i',
+        }),
+        (candidate) => {
+          const { cubes, secondChern } = candidate.numbers()
+          return cubes.map((cube, i) => cube + secondChern[i])
+        },
+      ),
+      (candidate, i) => candidate.numbers().cubes[i] + candidate.numbers().secondChern[i],
     ),
     topological('chi', 'Holomorphic Euler characteristic.', '\\chi(\\mathcal O_D) = 1 - h^1 + h^2'),
     topological('h1', 'h^1 of the structure sheaf.', 'h^1(\\mathcal O_D)'),
@@ -105,59 +122,74 @@ export const divisors: RecordSet = {
       }),
       ({ polytope }) => polytope.carrierDimension,
     ),
-    field(
-      ofTopology({
-        name: 'k3',
-        description: 'The divisor is a K3 fibre.',
-        formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 24',
-        source: 'Oguiso 1993 (from memory)',
-      }),
-      (candidate) => k3Fibres(candidate.numbers()),
-      'truth',
+    local(
+      field(
+        ofTopology({
+          name: 'k3',
+          description: 'The divisor is a K3 fibre.',
+          formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 24',
+          source: 'Oguiso 1993 (from memory)',
+        }),
+        (candidate) => k3Fibres(candidate.numbers()),
+        'truth',
+      ),
+      (candidate, i) => isSquareZeroWith(24, candidate.numbers(), i),
     ),
-    field(
-      ofTopology({
-        name: 'enriques',
-        description: 'The divisor is an Enriques surface: half the fibre of a K3 fibration.',
-        formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 12',
-        source: 'Oguiso 1993 (from memory)',
-      }),
-      (candidate) => enriquesHalfFibres(candidate.numbers()),
-      'truth',
+    local(
+      field(
+        ofTopology({
+          name: 'enriques',
+          description: 'The divisor is an Enriques surface: half the fibre of a K3 fibration.',
+          formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 12',
+          source: 'Oguiso 1993 (from memory)',
+        }),
+        (candidate) => enriquesHalfFibres(candidate.numbers()),
+        'truth',
+      ),
+      (candidate, i) => isSquareZeroWith(12, candidate.numbers(), i),
     ),
-    field(
-      ofTopology({
-        name: 'abelian',
-        description:
-          'The divisor is an abelian surface (a four-torus) and a fibre. No prime toric divisor can be one: this is always false.',
-        convention: 'an abelian surface has h^i(O) = (1, 2, 1), which no lattice point gives',
-        formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 0',
-        source: 'Oguiso 1993 (from memory)',
-      }),
-      (candidate) => abelianFibres(candidate.numbers()),
-      'truth',
+    local(
+      field(
+        ofTopology({
+          name: 'abelian',
+          description:
+            'The divisor is an abelian surface (a four-torus) and a fibre. No prime toric divisor can be one: this is always false.',
+          convention: 'an abelian surface has h^i(O) = (1, 2, 1), which no lattice point gives',
+          formula: '\\kappa_{iij} = 0\\ \\forall j,\\quad c_2 \\cdot D_i = 0',
+          source: 'Oguiso 1993 (from memory)',
+        }),
+        (candidate) => abelianFibres(candidate.numbers()),
+        'truth',
+      ),
+      (candidate, i) => isSquareZeroWith(0, candidate.numbers(), i),
     ),
-    field(
-      ofTopology({
-        name: 'delPezzo',
-        description: 'The divisor is a diagonal del Pezzo surface.',
-        formula:
-          '\\kappa_{iii}\\kappa_{ijl} = \\kappa_{iij}\\kappa_{iil},\\ 1 \\le \\kappa_{iii} \\le 9,\\ \\chi(\\mathcal O) = 1,\\ \\kappa_{iij} \\le 0',
-        source: SOURCES.diagonal,
-      }),
-      (candidate) => degrees(candidate).map((degree) => (Number.isNaN(degree) ? 0 : 1)),
-      'truth',
+    local(
+      field(
+        ofTopology({
+          name: 'delPezzo',
+          description: 'The divisor is a diagonal del Pezzo surface.',
+          formula:
+            '\\kappa_{iii}\\kappa_{ijl} = \\kappa_{iij}\\kappa_{iil},\\ 1 \\le \\kappa_{iii} \\le 9,\\ \\chi(\\mathcal O) = 1,\\ \\kappa_{iij} \\le 0',
+          source: SOURCES.diagonal,
+        }),
+        (candidate) => degrees(candidate).map((degree) => (Number.isNaN(degree) ? 0 : 1)),
+        'truth',
+      ),
+      (candidate, i) => (Number.isNaN(degree(candidate, i)) ? 0 : 1),
     ),
-    field(
-      ofTopology({
-        name: 'delPezzoDegree',
-        description: 'Degree of a diagonal del Pezzo divisor; undefined for the others.',
-        formula: 'k = \\kappa_{iii}',
-        source: SOURCES.diagonal,
-      }),
-      degrees,
-      'integer',
-      'the divisor is no diagonal del Pezzo surface',
+    local(
+      field(
+        ofTopology({
+          name: 'delPezzoDegree',
+          description: 'Degree of a diagonal del Pezzo divisor; undefined for the others.',
+          formula: 'k = \\kappa_{iii}',
+          source: SOURCES.diagonal,
+        }),
+        degrees,
+        'integer',
+        'the divisor is no diagonal del Pezzo surface',
+      ),
+      degree,
     ),
     {
       kind: 'members',

@@ -45,8 +45,18 @@ export interface ScalarObservable extends Described {
   read(candidate: Candidate, scale: number): number
 }
 
+/** What a column gives for one element, where that can be read alone. */
+export interface ReadsOneElement {
+  /**
+   * The element's entry of the column, to the bit, for fields that depend on the intersection numbers of the element
+   * alone: those with the divisor itself, or with both divisors of a pair or curve, or of the triple. Where it is
+   * given, a search that goes from exchange to exchange reads only the elements again that an exchange has touched.
+   */
+  at?(candidate: Candidate, element: number): number
+}
+
 /** One value per element of a set. Truth values are 1 and 0; NaN is an undefined value. */
-export interface ValueField extends Described {
+export interface ValueField extends Described, ReadsOneElement {
   readonly kind: 'value'
   readonly type: ValueType
   readonly undefinedWhen?: string
@@ -54,7 +64,7 @@ export interface ValueField extends Described {
 }
 
 /** One element of another set per element. */
-export interface ElementField extends Described {
+export interface ElementField extends Described, ReadsOneElement {
   readonly kind: 'element'
   readonly of: string
   column(candidate: Candidate, scale: number): ArrayLike<number>

@@ -6,14 +6,17 @@ import type { RecordSet } from './observable.ts'
  * Element 2 e is edge e = (i, j) read as (a, b) = (i, j), element 2 e + 1 the same edge as (j, i). With both
  * orders present no rule can tell which point has the smaller index.
  */
-function bothOrders(edgeNumbers: ArrayLike<number>, swap: boolean): Float64Array {
+function bothOrders(edgeNumbers: ArrayLike<number>, swap: boolean): ArrayLike<number> {
+  if (!swap) return edgeNumbers
   const column = new Float64Array(edgeNumbers.length)
-  for (let at = 0; at < column.length; at++) column[at] = edgeNumbers[swap ? at ^ 1 : at]
+  for (let at = 0; at < column.length; at++) column[at] = edgeNumbers[at ^ 1]
   return column
 }
 
 const column = (pick: (numbers: IntersectionNumbers) => ArrayLike<number>, swap: boolean) => ({
   column: (candidate: { numbers(): IntersectionNumbers }) => bothOrders(pick(candidate.numbers()), swap),
+  at: (candidate: { numbers(): IntersectionNumbers }, pair: number) =>
+    pick(candidate.numbers())[swap ? pair ^ 1 : pair],
 })
 
 /** Ordered pairs of different divisors that meet in a curve. */
@@ -69,6 +72,10 @@ export const pairs: RecordSet = {
         formula: 'g = 1 + \\tfrac12(\\kappa_{aab} + \\kappa_{abb})',
         source: 'adjunction on a threefold with trivial canonical class',
       }),
+      at: (candidate, pair) => {
+        const { edgeNumbers } = candidate.numbers()
+        return 1 + (edgeNumbers[pair] + edgeNumbers[pair ^ 1]) / 2
+      },
       column: (candidate) => {
         const { edgeNumbers } = candidate.numbers()
         const genus = new Float64Array(edgeNumbers.length)

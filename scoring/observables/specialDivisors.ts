@@ -28,6 +28,14 @@ const squareZeroWith =
   (numbers: IntersectionNumbers): Uint8Array =>
     squareZero(numbers).map((zero, i) => (zero === 1 && numbers.secondChern[i] === secondChern ? 1 : 0))
 
+/** The same for one divisor. */
+export function isSquareZeroWith(secondChern: number, numbers: IntersectionNumbers, i: number): 0 | 1 {
+  const { edges, edgeNumbers, cubes } = numbers
+  if (cubes[i] !== 0 || numbers.secondChern[i] !== secondChern) return 0
+  for (let at = 0; at < edges.length; at++) if (edges[at] === i && edgeNumbers[at] !== 0) return 0
+  return 1
+}
+
 /** 1 for every divisor that is a K3 fibre. */
 export const k3Fibres = squareZeroWith(24)
 
@@ -53,11 +61,34 @@ export function diagonalDelPezzoDegrees(numbers: IntersectionNumbers, chi: Array
   for (let i = 0; i < pointCount; i++) {
     if (possible[i] === 0) continue
     const around = Array.from({ length: starts[i + 1] - starts[i] }, (_, at) => items[starts[i] + at])
-    const row = around.map((j) => intersectionNumber(numbers, i, i, j))
-    const factorises = around.every((j, a) =>
-      around.every((l, b) => b < a || cubes[i] * intersectionNumber(numbers, i, j, l) === row[a] * row[b]),
-    )
-    if (factorises) degrees[i] = cubes[i]
+    if (factorises(numbers, i, around)) degrees[i] = cubes[i]
   }
   return degrees
+}
+
+/** The same for one divisor. */
+export function diagonalDelPezzoDegree(
+  numbers: IntersectionNumbers,
+  chi: ArrayLike<number>,
+  i: number,
+): number {
+  const { cubes, edges, edgeNumbers } = numbers
+  if (!(cubes[i] >= 1 && cubes[i] <= 9 && chi[i] === 1)) return NaN
+  const around: number[] = []
+  for (let at = 0; at < edges.length; at++) {
+    if (edges[at] !== i) continue
+    // The sign, and the condition for j = l, which few divisors meet.
+    if (edgeNumbers[at] > 0 || cubes[i] * edgeNumbers[at ^ 1] !== edgeNumbers[at] ** 2) return NaN
+    around.push(edges[at ^ 1])
+  }
+  return factorises(numbers, i, around) ? cubes[i] : NaN
+}
+
+/** kappa_iii kappa_ijl = kappa_iij kappa_iil for all j and l around i. */
+function factorises(numbers: IntersectionNumbers, i: number, around: readonly number[]): boolean {
+  const cube = numbers.cubes[i]
+  const row = around.map((j) => intersectionNumber(numbers, i, i, j))
+  return around.every((j, a) =>
+    around.every((l, b) => b < a || cube * intersectionNumber(numbers, i, j, l) === row[a] * row[b]),
+  )
 }

@@ -25,6 +25,7 @@ export const triangles: RecordSet = {
         formula: 'f \\supset (i,j,k)',
       }),
       column: (candidate) => candidate.class.faceOf,
+      at: (candidate, t) => candidate.class.faceOf[t],
     },
     {
       kind: 'members',
@@ -58,6 +59,7 @@ export const triples: RecordSet = {
         formula: '\\kappa_{ijk} = L_f',
       }),
       column: (candidate) => candidate.numbers().triangleNumbers,
+      at: (candidate, t) => candidate.numbers().triangleNumbers[t],
     },
     {
       kind: 'members',

@@ -4,10 +4,13 @@ import { compileComparison } from './compileComparison.ts'
 import { compileFold } from './compileFold.ts'
 import type { Frame, Reason, ReasonMaker, Resource } from './frame.ts'
 import { load, type Loadable } from './resources.ts'
-import type { TypedExpression } from './typed.ts'
+import type { TypedExpression, TypedFold } from './typed.ts'
 
 /** A compiled expression: its value in a frame. See `Frame` for how values are held. */
 export type Evaluate = (frame: Frame) => number
+
+/** Compiles a fold in another way than `compileFold`; undefined: not this one. */
+export type FoldCompiler = (compiler: Compiler, expression: TypedFold) => Evaluate | undefined
 
 /** Compiles the expressions of one rule into closures. */
 export class Compiler {
@@ -19,6 +22,7 @@ export class Compiler {
   constructor(
     private readonly reasons: ReasonMaker,
     private readonly lets: readonly TypedExpression[],
+    private readonly otherFold: FoldCompiler = () => undefined,
   ) {
     this.memoCount = lets.length
     this.letBodies = new Array<Evaluate | undefined>(lets.length).fill(undefined)
@@ -31,8 +35,9 @@ export class Compiler {
     return this.memoCount
   }
 
-  get resources(): number {
-    return this.entries.length
+  /** What expressions load from a candidate, by their index in the frame's resources. */
+  get loadables(): readonly Loadable[] {
+    return this.entries
   }
 
   reason(span: Span, text: string): Reason {
@@ -113,7 +118,7 @@ export class Compiler {
       case 'relation':
         return this.relation(expression)
       case 'fold': {
-        const evaluate = compileFold(this, expression)
+        const evaluate = this.otherFold(this, expression) ?? compileFold(this, expression)
         return this.depth > 0 && !expression.open ? this.memo(this.memoCount++, () => evaluate) : evaluate
       }
       case 'unknown':

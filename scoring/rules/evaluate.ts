@@ -101,6 +101,15 @@ export function evaluateRule(
 ): Outcome {
   const { program } = rule
   const frame = new Frame(candidate, program.layout, options.stepLimit ?? RULE_LIMITS.steps)
+  return runProgram(program, frame, options)
+}
+
+/** The same in a frame that is ready. */
+export function runProgram(
+  program: Program,
+  frame: Frame,
+  options: Pick<EvaluationOptions, 'report'> = {},
+): Outcome {
   for (const { stage, requires } of stagesOf(program)) {
     const verdict = judgeStage(frame, stage, requires)
     if (verdict) return verdict

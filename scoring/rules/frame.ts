@@ -89,6 +89,15 @@ export class Frame {
     this.place = layout.place
   }
 
+  /** Forgets the candidate's values, for the next one; resources marked in `kept` stay. */
+  renew(kept: Uint8Array): void {
+    this.memoKnown.fill(0)
+    for (let at = 0; at < kept.length; at++) if (kept[at] === 0) this.resources[at] = undefined
+    this.reason = null
+    this.steps = 0
+    this.measure = undefined
+  }
+
   /** The undefined value, with its reason. */
   undefinedBecause(reason: Reason): number {
     this.reason = reason

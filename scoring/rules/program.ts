@@ -1,7 +1,8 @@
 import type { Stage, ValueType } from '../observables/observable.ts'
 import type { PlaceOnRay } from './checkedRule.ts'
-import { Compiler, type Evaluate } from './compile.ts'
+import { Compiler, type Evaluate, type FoldCompiler } from './compile.ts'
 import { type FrameLayout, ReasonMaker } from './frame.ts'
+import type { Loadable } from './resources.ts'
 import { compileShortfall } from './shortfall.ts'
 import type { TypedExpression } from './typed.ts'
 
@@ -22,7 +23,11 @@ export interface CompiledValue {
 
 /** A rule as closures over a frame. Closures and data only: a program keeps nothing between evaluations. */
 export interface Program {
+  /** What it was compiled from. */
+  readonly source: ProgramSource
   readonly layout: FrameLayout
+  /** What it loads from a candidate, by index in the frame's resources. */
+  readonly loadables: readonly Loadable[]
   readonly requires: readonly CompiledRequire[]
   readonly score: CompiledValue
   readonly hit: CompiledValue | null
@@ -41,9 +46,9 @@ export interface ProgramSource {
   readonly columns: readonly { readonly name: string; readonly value: TypedExpression }[]
 }
 
-/** Compiles the typed parts of a rule. */
-export function compileProgram(source: ProgramSource): Program {
-  const compiler = new Compiler(new ReasonMaker(source.text), source.lets)
+/** Compiles the typed parts of a rule, folds in another way where `otherFold` knows one. */
+export function compileProgram(source: ProgramSource, otherFold?: FoldCompiler): Program {
+  const compiler = new Compiler(new ReasonMaker(source.text), source.lets, otherFold)
   const compiled = (expression: TypedExpression): CompiledValue => ({
     type: expression.type === 'truth' || expression.type === 'integer' ? expression.type : 'number',
     stage: expression.stage,
@@ -61,8 +66,8 @@ export function compileProgram(source: ProgramSource): Program {
   const layout = {
     slots: source.slotCount,
     memos: compiler.memos,
-    resources: compiler.resources,
+    resources: compiler.loadables.length,
     place: source.place,
   }
-  return { layout, requires, score, hit, columns }
+  return { source, layout, loadables: compiler.loadables, requires, score, hit, columns }
 }

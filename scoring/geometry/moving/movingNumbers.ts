@@ -40,8 +40,6 @@ export class MovingNumbers {
   readonly secondChern: Float64Array
   readonly last: Exchanged
   private readonly euler: number
-  private readonly edgeArrays: (Int32Array | Float64Array)[]
-  private readonly triangleArrays: (Int32Array | Float64Array)[]
 
   constructor(cls: TwoFaceClass) {
     const numbers = intersectionNumbers(cls)
@@ -54,8 +52,6 @@ export class MovingNumbers {
     this.cubes = numbers.cubes
     this.secondChern = numbers.secondChern
     this.euler = numbers.euler
-    this.edgeArrays = [this.edges, this.edgeNumbers]
-    this.triangleArrays = [this.triangles, this.faceOf, this.triangleNumbers]
     this.last = {
       points: new Int32Array(4),
       edgeFrom: 0,
@@ -110,13 +106,11 @@ export class MovingNumbers {
     const from = lowerBound(edges, 2, Math.min(i, j), Math.max(i, j), 0)
     const place = lowerBound(edges, 2, p, q, 0)
     const to = place > from ? place - 1 : place
-    const one = this.edgeNumbers[2 * from]
-    const other = this.edgeNumbers[2 * from + 1]
-    moveRow(this.edgeArrays, edgeWidths, from, to)
+    moveRow(edges, 2, from, to)
+    // Those of a diagonal are the same in the old place and in the new one.
+    moveRow(this.edgeNumbers, 2, from, to)
     edges[2 * to] = p
     edges[2 * to + 1] = q
-    this.edgeNumbers[2 * to] = one
-    this.edgeNumbers[2 * to + 1] = other
     last.edgeFrom = from
     last.edgeTo = to
   }
@@ -136,16 +130,14 @@ export class MovingNumbers {
     const from = this.placeOfTriangle(i, j, k)
     const place = this.placeOfTriangle(p, q, r)
     const to = place > from ? place - 1 : place
-    const face = this.faceOf[from]
-    const number = this.triangleNumbers[from]
-    moveRow(this.triangleArrays, triangleWidths, from, to)
+    moveRow(triangles, 3, from, to)
+    moveRow(this.faceOf, 1, from, to)
+    moveRow(this.triangleNumbers, 1, from, to)
     const low = Math.min(p, q, r)
     const high = Math.max(p, q, r)
     triangles[3 * to] = low
     triangles[3 * to + 1] = p + q + r - low - high
     triangles[3 * to + 2] = high
-    this.faceOf[to] = face
-    this.triangleNumbers[to] = number
     last.trianglesFrom[n] = from
     last.trianglesTo[n] = to
   }
@@ -156,6 +148,3 @@ export class MovingNumbers {
     return lowerBound(this.triangles, 3, low, i + j + k - low - high, high)
   }
 }
-
-const edgeWidths = [2, 2]
-const triangleWidths = [3, 1, 1]

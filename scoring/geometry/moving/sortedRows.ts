@@ -1,22 +1,16 @@
-/** An array with `width` entries per row, kept in the order of the rows. */
-type Aligned = Int32Array | Float64Array
+/** At most this many entries per row. */
+const carried = new Float64Array(3)
 
 /**
- * The place of a row moves from `from` to `to`: the rows in between make room, in every array aligned with them.
- * What stands in row `to` afterwards is to be overwritten.
+ * Moves a row of `width` entries from one place to another, where the rows in between make room. For every array
+ * that is aligned with sorted rows, when one of them is going to be replaced by one that belongs elsewhere.
  */
-export function moveRow(
-  arrays: readonly Aligned[],
-  widths: readonly number[],
-  from: number,
-  to: number,
-): void {
+export function moveRow(rows: Int32Array | Float64Array, width: number, from: number, to: number): void {
   if (from === to) return
-  for (let n = 0; n < arrays.length; n++) {
-    const width = widths[n]
-    if (from < to) arrays[n].copyWithin(width * from, width * (from + 1), width * (to + 1))
-    else arrays[n].copyWithin(width * (to + 1), width * to, width * from)
-  }
+  for (let c = 0; c < width; c++) carried[c] = rows[width * from + c]
+  if (from < to) rows.copyWithin(width * from, width * (from + 1), width * (to + 1))
+  else rows.copyWithin(width * (to + 1), width * to, width * from)
+  for (let c = 0; c < width; c++) rows[width * to + c] = carried[c]
 }
 
 /** Number of sorted rows that come before (p, q, r); r does not count where rows have two entries. */
