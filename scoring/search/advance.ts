@@ -41,6 +41,7 @@ export function startState(problem: SearchProblem, seed: number, island = 0): Se
     sample: { capacity: settings.sample, offered: 0, rows: [] },
     top: [],
     seen: new SeenTable(seenCapacity(slotsWanted, settings, pointCount)).state(),
+    surrogate: null,
     chain: null,
   }
 }

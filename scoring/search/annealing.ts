@@ -9,8 +9,8 @@ import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { exchangeCount, moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
+import { promisingStart, promisingStep } from './promising.ts'
 import { proposalOf, type PlacedHeights } from './sampling.ts'
-import { drawStart } from './starts.ts'
 import type { Json } from './state.ts'
 
 /** A descent begins at the best of so many random candidates, but with no more than a twentieth of its budget. */
@@ -110,24 +110,22 @@ class AnnealingChain implements Chain {
   /** A fresh start on a polytope drawn from the open ones. */
   private begin(): void {
     const { run, book } = this
-    const polytope = book.draw()
-    if (polytope < 0) return
+    const start = promisingStart(run, () => book.draw())
+    if (start === null) return
     if (this.place !== undefined) run.countRestart()
     this.scouted = 1
-    const start = drawStart(run.form(polytope).polytope, run.stream)
-    const merit = this.judged(polytope, proposalOf(start))
-    if (merit !== null) this.stand(polytope, start, merit)
+    const merit = this.judged(start.polytope, proposalOf(start.place))
+    if (merit !== null) this.stand(start.polytope, start.place, merit)
   }
 
   /** A random candidate on a polytope drawn from the open ones. */
   private hop(onlyBetter: boolean): void {
-    const polytope = this.book.draw()
-    if (polytope < 0) return
-    const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
-    const merit = this.judged(polytope, proposalOf(start))
+    const start = promisingStart(this.run, () => this.book.draw())
+    if (start === null) return
+    const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit === null) return
     const accepted = onlyBetter ? compareMerits(merit, this.merit) < 0 : this.accepts(merit)
-    if (accepted) this.stand(polytope, start, merit)
+    if (accepted) this.stand(start.polytope, start.place, merit)
   }
 
   private move(place: PlacedHeights): void {
@@ -137,8 +135,10 @@ class AnnealingChain implements Chain {
       book.spend(polytope)
       return
     }
-    const kind = this.moveBook.draw(run.stream)
-    const proposal = moves[kind](place, run.stream)
+    const { kind, proposal } = promisingStep(run, () => {
+      const kind = this.moveBook.draw(run.stream)
+      return { from: { polytope, place }, kind, proposal: moves[kind](place, run.stream) }
+    })
     if (proposal === undefined || proposal.class === place.class) {
       const heights = proposal?.heights()
       if (heights !== undefined) this.place = { class: place.class, heights }

@@ -1,6 +1,6 @@
 import type { NormalForm } from '../geometry/normalForm.ts'
 import { compareMerits, type Merit } from './merit.ts'
-import type { Judgement, Proposal, Run } from './method.ts'
+import type { Judgement, Proposal, Prospective, Run } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
 import type { SearchSettings } from './settings.ts'
 import type { RunEnd } from './state.ts'
@@ -86,6 +86,13 @@ export class ArmRun implements Run {
     if (judgement !== null && (this.best === null || compareMerits(judgement.merit, this.best) < 0))
       this.best = judgement.merit
     return judgement
+  }
+
+  choose<T>(draw: () => T, placeOf: (drawn: T) => Prospective | null): T {
+    return this.run.choose(draw, (drawn) => {
+      const place = placeOf(drawn)
+      return place && { ...place, polytope: this.indexOf(place.polytope) }
+    })
   }
 
   look(): void {

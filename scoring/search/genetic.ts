@@ -5,8 +5,8 @@ import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
+import { promisingStart, promisingStep } from './promising.ts'
 import { proposalOf } from './sampling.ts'
-import { drawStart } from './starts.ts'
 import { restoredStanding, storedStanding, type Standing, type StandingState } from './standing.ts'
 import type { Json } from './state.ts'
 
@@ -105,25 +105,23 @@ class GeneticChain implements Chain {
   /** A random candidate; it takes the place of the worst member when the population is full. */
   private newcomer(members: Member[]): void {
     const { run, book } = this
-    const polytope = book.draw()
-    if (polytope < 0) return
-    const start = proposalOf(drawStart(run.form(polytope).polytope, run.stream))
-    this.judged(members, polytope, start, () => worstOf(members), undefined)
+    const start = promisingStart(run, () => book.draw())
+    if (start === null) return
+    this.judged(members, start.polytope, proposalOf(start.place), () => worstOf(members), undefined)
   }
 
   private breed(members: Member[]): void {
     const { run, operators } = this
-    const kind = operators.draw(run.stream)
-    const parent = this.parent(members)
+    const {
+      kind,
+      from: parent,
+      proposal,
+    } = promisingStep(run, () => {
+      const kind = operators.draw(run.stream)
+      const from = this.parent(members)
+      return { from, kind, proposal: this.child(members, from, kind) }
+    })
     const { place, polytope } = parent
-    let proposal: Proposal | undefined
-    if (kind >= crossings.length) {
-      proposal = moves[kind - crossings.length](place, run.stream)
-    } else {
-      const mates = members.filter((member) => member !== parent && member.polytope === polytope)
-      if (mates.length > 0)
-        proposal = crossings[kind](place, mates[run.stream.below(mates.length)].place, run.stream)
-    }
     if (proposal === undefined || proposal.class === place.class) {
       run.look()
       operators.learn(kind, 0)
@@ -133,6 +131,16 @@ class GeneticChain implements Chain {
     const { class: cls } = proposal
     const isGain = this.judged(members, polytope, proposal, () => this.rivalOf(members, cls), parent)
     operators.learn(kind, isGain ? 1 : 0)
+  }
+
+  /** A child by one of the operators; undefined when it needs a mate and there is none, or it leads nowhere. */
+  private child(members: readonly Member[], parent: Member, kind: number): Proposal | undefined {
+    const { stream } = this.run
+    if (kind >= crossings.length) return moves[kind - crossings.length](parent.place, stream)
+    const mates = members.filter((member) => member !== parent && member.polytope === parent.polytope)
+    return mates.length === 0
+      ? undefined
+      : crossings[kind](parent.place, mates[stream.below(mates.length)].place, stream)
   }
 
   /** Judges a child and takes it in where it deserves it; true when it is new and better than its parent. */

@@ -1,6 +1,6 @@
 import { InputError } from '../errors.ts'
 import { isGeneric } from '../geometry/circuits.ts'
-import { canonicalClass } from '../geometry/classKey.ts'
+import { canonicalClass, type CanonicalClass } from '../geometry/classKey.ts'
 import type { NormalForm } from '../geometry/normalForm.ts'
 import { transportHeights } from '../geometry/transport.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
@@ -13,7 +13,7 @@ import { codeOfHeights } from './heightsCode.ts'
 import { Histogram } from './histogram.ts'
 import type { OutcomeMemo } from './memo.ts'
 import { irregularKind, meritOf } from './merit.ts'
-import type { Chain, Judgement, Proposal, Run } from './method.ts'
+import type { Chain, Judgement, Proposal, Prospective, Run } from './method.ts'
 import { methods } from './methods.ts'
 import type { SearchProblem } from './problem.ts'
 import { RandomStream } from './randomStream.ts'
@@ -21,6 +21,8 @@ import { Reservoir } from './reservoir.ts'
 import { SeenTable, seenKey } from './seenTable.ts'
 import type { SearchSettings } from './settings.ts'
 import type { RunEnd, SampledRow, SampleRow, SearchState } from './state.ts'
+import { Surrogate } from './surrogate/surrogate.ts'
+import { helpsWith } from './surrogate/use.ts'
 import { TopList } from './topList.ts'
 import { witnessHeights } from './witness.ts'
 
@@ -76,6 +78,8 @@ export class Island implements Run {
   private readonly sample: Reservoir<SampleRow>
   private readonly top: TopList
   private readonly seen: SeenTable
+  private readonly surrogate: Surrogate | null
+  private readonly canonicals = new WeakMap<TwoFaceClass, CanonicalClass>()
   private readonly entered = new Set<string>()
   private readonly samplers = new Map<number, () => Float64Array>()
   private readonly passes = new Map<number, boolean>()
@@ -111,6 +115,7 @@ export class Island implements Run {
     this.sample = new Reservoir(given.sample)
     this.top = new TopList(problem.settings.keep, given.top)
     this.seen = SeenTable.restore(given.seen)
+    this.surrogate = helpsWith(problem) ? new Surrogate(given.surrogate) : null
     this.chain = methods[problem.method].open(this, given.chain)
   }
 
@@ -141,6 +146,7 @@ export class Island implements Run {
       sample: this.sample.state(),
       top: [...this.top.list()],
       seen: this.seen.state(),
+      surrogate: this.surrogate?.state() ?? null,
       chain: this.chain.state(),
     }
   }
@@ -175,7 +181,7 @@ export class Island implements Run {
 
   judge(polytope: number, proposal: Proposal): Judgement | null {
     const form = this.form(polytope)
-    const canonical = canonicalClass(form, proposal.class)
+    const canonical = this.canonical(form, proposal.class)
     const [high, low] = seenKey(form.key, canonical.key)
     this.proposals++
     const known = proposal.distinct ? null : this.seen.find(high, low)
@@ -196,6 +202,7 @@ export class Island implements Run {
     this.stalled = 0
     this.evaluations++
     if (!proposal.distinct) this.seen.add(high, low, merit.kind, merit.value)
+    this.surrogate?.learn(form, proposal.class, merit)
     this.count(outcome)
     const place = this.sample.offer({ polytopeKey: form.key, classKey: canonical.key, ...merit }, this.stream)
     if (place !== null && this.hooks.sampled) this.samplers.set(place, witness)
@@ -212,6 +219,18 @@ export class Island implements Run {
       isGeneric(proposal.class, heights) ? transportHeights(heights, canonical.relabelling) : witness()
     this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness, plainHeights: plain })
     return { merit, key: canonical.key, isNew: true }
+  }
+
+  choose<T>(draw: () => T, placeOf: (drawn: T) => Prospective | null): T {
+    const { surrogate } = this
+    if (surrogate === null) return draw()
+    return surrogate.choose(this.stream, draw, (drawn) => {
+      const place = placeOf(drawn)
+      if (place === null) return null
+      const form = this.form(place.polytope)
+      const known = this.seen.find(...seenKey(form.key, this.canonical(form, place.class).key))
+      return { form, class: place.class, isKnown: known !== null }
+    })
   }
 
   look(): void {
@@ -232,6 +251,15 @@ export class Island implements Run {
 
   end(reason: RunEnd): void {
     this.ended = reason
+  }
+
+  private canonical(form: NormalForm, cls: TwoFaceClass): CanonicalClass {
+    let canonical = this.canonicals.get(cls)
+    if (canonical === undefined) {
+      canonical = canonicalClass(form, cls)
+      this.canonicals.set(cls, canonical)
+    }
+    return canonical
   }
 
   private outcome(form: NormalForm, canonical: TwoFaceClass, key: string): Outcome {

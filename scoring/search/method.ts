@@ -26,6 +26,12 @@ export interface Proposal {
   readonly distinct?: true
 }
 
+/** A class on a polytope of the run that could be proposed. */
+export interface Prospective {
+  readonly polytope: number
+  readonly class: TwoFaceClass
+}
+
 /** What a method may see and use of its run. Randomness comes from `stream` only. */
 export interface Run {
   readonly stream: RandomStream
@@ -50,6 +56,13 @@ export interface Run {
    * method calls this at most once, since a segment may end after any evaluation.
    */
   judge(polytope: number, proposal: Proposal): Judgement | null
+  /**
+   * One of the classes that `draw` gives: the one that the run's surrogate finds most promising among a few draws, or
+   * simply the next draw. Draws have no effect but on the stream.
+   *
+   * @param placeOf where a draw leads; null when nowhere new
+   */
+  choose<T>(draw: () => T, placeOf: (drawn: T) => Prospective | null): T
   /** Counts a class that was looked at without being judged: progress for what ends segments. */
   look(): void
   /** Replaces the island's share of the budget by the number of classes that it is going to score. */

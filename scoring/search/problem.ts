@@ -40,7 +40,10 @@ export function problemDigest({ polytopes, rule, method, settings }: SearchProbl
     scope: scopeDigest(polytopes.keys),
     scoring: scoringHash(rule, engineVersion),
     method: [method, methods[method].version],
-    settings: Object.entries(settings).sort(([a], [b]) => (a < b ? -1 : 1)),
+    // Left out when off, so that states from before there was a choice stay what they were.
+    settings: Object.entries(settings)
+      .filter(([name, value]) => name !== 'surrogate' || value !== false)
+      .sort(([a], [b]) => (a < b ? -1 : 1)),
   })
   return hashOf(content).slice(0, 32)
 }

@@ -1,7 +1,7 @@
 import { base64Of, bytesOf } from './base64.ts'
 import { compareMerits, type Merit } from './merit.ts'
 import type { Run } from './method.ts'
-import { proposalOf } from './sampling.ts'
+import { proposalOf, type PlacedHeights } from './sampling.ts'
 import { drawStart } from './starts.ts'
 
 export interface ScoutingState {
@@ -69,22 +69,40 @@ export class Scouting {
 
   /** Draws one candidate, or finds that a polytope is refused. */
   step(): void {
-    const polytope = this.survivors === null ? this.drawUntried() : (this.survivors.pop() ?? -1)
-    if (polytope < 0) {
+    const start = this.drawn()
+    if (start === null) {
       this.halve()
-    } else if (!this.run.polytopePasses(polytope)) {
-      this.kinds[polytope] = refused
+    } else if (start.place === undefined) {
+      this.kinds[start.polytope] = refused
       this.run.look()
     } else {
+      const { polytope, place } = start
       this.draws++
-      const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
-      const merit = this.run.judge(polytope, proposalOf(start))?.merit
+      const merit = this.run.judge(polytope, proposalOf(place))?.merit
       if (merit === undefined) return
       if (this.kinds[polytope] === untried || compareMerits(merit, this.meritOf(polytope)) < 0) {
         this.kinds[polytope] = merit.kind
         this.values[polytope] = merit.value
       }
     }
+  }
+
+  /**
+   * A random candidate on the polytope whose turn it is; without one where the rule refuses the polytope. Null when
+   * the round is over. In the first round, and among the candidates of one polytope, a surrogate has a say.
+   */
+  private drawn(): { readonly polytope: number; readonly place?: PlacedHeights } | null {
+    const { run, survivors } = this
+    const survivor = survivors === null ? undefined : (survivors.pop() ?? -1)
+    return run.choose(
+      () => {
+        const polytope = survivor ?? this.drawUntried()
+        if (polytope < 0) return null
+        if (!run.polytopePasses(polytope)) return { polytope }
+        return { polytope, place: drawStart(run.form(polytope).polytope, run.stream) }
+      },
+      (start) => (start?.place === undefined ? null : { polytope: start.polytope, class: start.place.class }),
+    )
   }
 
   /** Polytopes that were tried, the best first; after them those that were not, in the order of the scope. */

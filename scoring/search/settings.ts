@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { heightCodeBytes } from './heightsCode.ts'
 import { seenSlotBytes } from './seenTable.ts'
+import { surrogateStateBytes } from './surrogate/surrogate.ts'
 
 /**
  * Settings of a run. They are part of what a result depends on, together with scope, rule, method, seed and
@@ -19,6 +20,8 @@ export const searchSettingsSchema = z.strictObject({
   descents: z.number().int().min(1).max(1000).default(1),
   /** Rows of the uniform sample of all evaluations that an island keeps. */
   sample: z.number().int().min(0).max(10_000).default(256),
+  /** A surrogate chooses among proposals of the guided methods, where the rule needs a reference point. */
+  surrogate: z.boolean().default(false),
 })
 export type SearchSettings = z.infer<typeof searchSettingsSchema>
 
@@ -41,7 +44,11 @@ const fewestSlots = 2 ** 8
  * that nothing is forgotten), within 2^16 and within what the kept candidates leave of `stateLimitBytes`.
  */
 export function seenCapacity(wanted: number, settings: SearchSettings, pointCount: number): number {
-  const keptBytes = settings.keep * (pointCount * heightCodeBytes + 600) + settings.sample * 120 + 60_000
+  const keptBytes =
+    settings.keep * (pointCount * heightCodeBytes + 600) +
+    settings.sample * 120 +
+    (settings.surrogate ? surrogateStateBytes : 0) +
+    60_000
   let slots = fewestSlots
   while (slots < mostSlots && slots < wanted) slots *= 2
   while (slots > fewestSlots && slots * seenSlotBytes + keptBytes > stateLimitBytes) slots /= 2

@@ -4,6 +4,7 @@ import type { Curve } from './curve.ts'
 import type { HistogramState } from './histogram.ts'
 import type { GeneratorState } from './randomStream.ts'
 import type { ReservoirState } from './reservoir.ts'
+import type { SurrogateState } from './surrogate/surrogate.ts'
 import type { SeenTableState } from './seenTable.ts'
 
 /** Any plain JSON value. */
@@ -76,6 +77,8 @@ export interface SearchState extends SearchCounts {
   readonly sample: ReservoirState<SampleRow>
   readonly top: readonly KeptFind[]
   readonly seen: SeenTableState
+  /** What the surrogate has learnt; null where the run has none. */
+  readonly surrogate: SurrogateState | null
   /** The method's own. */
   readonly chain: Json
 }

@@ -5,8 +5,8 @@ import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
+import { promisingStart, promisingStep } from './promising.ts'
 import { proposalOf } from './sampling.ts'
-import { drawStart } from './starts.ts'
 import { restoredStanding, storedStanding, type Standing, type StandingState } from './standing.ts'
 import type { Json } from './state.ts'
 
@@ -97,34 +97,34 @@ class TemperingChain implements Chain {
 
   /** A random candidate; the best of them are the replicas' first places, the best of all the coldest one's. */
   private scout(): void {
-    const polytope = this.book.draw()
-    if (polytope < 0) return
-    const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
-    const merit = this.judged(polytope, proposalOf(start))
+    const start = promisingStart(this.run, () => this.book.draw())
+    if (start === null) return
+    const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit === null) return
     const places = this.replicas.filter((standing) => standing !== null)
-    places.push({ polytope, place: start, merit })
+    places.push({ ...start, merit })
     places.sort((a, b) => compareMerits(a.merit, b.merit))
     for (const r of this.replicas.keys()) this.replicas[r] = places.at(r) ?? null
   }
 
   /** A random candidate on a polytope drawn from the open ones: a fresh start, or a proposal like any other. */
   private hop(r: number): void {
-    const polytope = this.book.draw()
-    if (polytope < 0) return
-    const start = drawStart(this.run.form(polytope).polytope, this.run.stream)
+    const start = promisingStart(this.run, () => this.book.draw())
+    if (start === null) return
     const standing = this.replicas[r]
-    const merit = this.judged(polytope, proposalOf(start))
+    const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit === null) return
     if (standing === null || this.book.isSpent(standing.polytope) || this.accepts(r, standing.merit, merit))
-      this.stand(r, { polytope, place: start, merit })
+      this.stand(r, { ...start, merit })
   }
 
   private move(r: number, standing: Standing): void {
     const { run, book, cooling } = this
     const moveBook = this.moveBooks[r]
-    const kind = moveBook.draw(run.stream)
-    const proposal = moves[kind](standing.place, run.stream)
+    const { kind, proposal } = promisingStep(run, () => {
+      const kind = moveBook.draw(run.stream)
+      return { from: standing, kind, proposal: moves[kind](standing.place, run.stream) }
+    })
     if (proposal === undefined || proposal.class === standing.place.class) {
       run.look()
       const heights = proposal?.heights()

@@ -13,7 +13,7 @@ import { advance, startState } from '../../../scoring/search/advance.ts'
 import { heightsOfCode } from '../../../scoring/search/heightsCode.ts'
 import { OutcomeMemo } from '../../../scoring/search/memo.ts'
 import { methodNames } from '../../../scoring/search/methods.ts'
-import type { SearchProblem } from '../../../scoring/search/problem.ts'
+import { problemDigest, type SearchProblem } from '../../../scoring/search/problem.ts'
 import type { SampledRow, SearchState } from '../../../scoring/search/state.ts'
 import { problemOf } from './problems.ts'
 
@@ -116,6 +116,77 @@ describe.each(methodNames)('segments of method %s', (method) => {
       expect(cls && canonicalClass(form, cls)).toMatchObject({ key: classKey, class: cls })
     }
     expect(advance(problem, startState(problem, 4), 5).sampled).toEqual([])
+  })
+})
+
+describe.each(['auto', 'annealing', 'tempering', 'genetic'] as const)(
+  'method %s with a surrogate',
+  (method) => {
+    const problem = problemOf(scope, rule, method, { budget: 110, keep: 10, sample: 20, surrogate: true })
+    const memo = new OutcomeMemo()
+
+    it('gives the same result however a run is cut, and its surrogate has its say', () => {
+      let chosen = 0
+      fc.assert(
+        fc.property(
+          fc.integer({ min: 1, max: 3 }),
+          fc.array(fc.integer({ min: 1, max: 40 }), { maxLength: 5 }),
+          (seed, cuts) => {
+            const whole = advance(problem, startState(problem, seed), Infinity, { memo }).state
+            let state = startState(problem, seed)
+            for (const proposals of cuts)
+              state = throughJson(advance(problem, state, Infinity, { proposals, memo }).state)
+            expect(JSON.stringify(advance(problem, state, Infinity, { memo }).state)).toBe(
+              JSON.stringify(whole),
+            )
+            chosen += whole.surrogate?.chosen ?? 0
+          },
+        ),
+        { numRuns: 4 },
+      )
+      expect(chosen).toBeGreaterThan(0)
+    })
+
+    it('lists what the rule says of each candidate, in its order', () => {
+      const { finds } = advance(problem, startState(problem, 4), Infinity)
+      for (const { polytopeKey, classKey, outcome, heights } of finds) {
+        const form = problem.polytopes.at(problem.polytopes.keys.indexOf(polytopeKey))
+        const cls = fineClass(form.polytope, heights)
+        if (cls === undefined) throw new Error('kept heights are not fine')
+        const again = evaluateRule(problem.rule, buildCandidate(form, cls, classKey))
+        expect(JSON.stringify(again)).toBe(JSON.stringify(outcome))
+      }
+      for (const [n, { outcome, classKey }] of finds.slice(1).entries())
+        expect(compareOutcomes(finds[n].outcome, finds[n].classKey, outcome, classKey)).toBeLessThan(0)
+    })
+  },
+)
+
+describe('a run without a surrogate', () => {
+  const settings = { budget: 40, keep: 5, sample: 5 }
+
+  it('is the same problem as before there was a choice, and its older states go on', () => {
+    const problem = problemOf(scope, rule, 'annealing', settings)
+    const { surrogate: off, ...older } = problem.settings
+    expect(off).toBe(false)
+    expect(problemDigest({ ...problem, settings: older as typeof problem.settings })).toBe(
+      problemDigest(problem),
+    )
+    expect(problemDigest({ ...problem, settings: { ...problem.settings, surrogate: true } })).not.toBe(
+      problemDigest(problem),
+    )
+    const { surrogate: none, ...state } = advance(problem, startState(problem, 1), 20).state
+    expect(none).toBeNull()
+    const straight = advance(problem, startState(problem, 1), Infinity).state
+    expect(advance(problem, state as SearchState, Infinity).state).toEqual(straight)
+  })
+
+  it('is any run whose rule needs no reference point', () => {
+    const problem = problemOf(scope, 'score count(d in divisors : d.rigid)', 'annealing', {
+      ...settings,
+      surrogate: true,
+    })
+    expect(advance(problem, startState(problem, 1), Infinity).state.surrogate).toBeNull()
   })
 })
 
