@@ -18,6 +18,7 @@ import { eventRoutes } from './routes/events.ts'
 import { healthRoutes } from './routes/health.ts'
 import { importedCandidateRoutes } from './routes/importedCandidates.ts'
 import { polytopeRoutes } from './routes/polytopes.ts'
+import { comparisonRoutes } from './routes/comparisons.ts'
 import { searchRoutes } from './routes/searches.ts'
 import { sessionRoutes } from './routes/session.ts'
 import { shortlistRoutes } from './routes/shortlists.ts'
@@ -49,6 +50,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   targetRoutes(app, context)
   explorationRoutes(app, context)
   searchRoutes(app, context)
+  comparisonRoutes(app, context)
   shortlistRoutes(app, context)
   candidateRoutes(app, context)
   certificateRoutes(app, context)

@@ -63,7 +63,12 @@ export function targetRoutes(app: Express, context: ServerContext): void {
     body: renameTargetSchema,
     answer: targetDetailSchema,
     handle: async ({ campaign, params, body }) => {
-      const { target, versions, latestScope } = await renameTarget(context, campaign.id, params.target, body.name)
+      const { target, versions, latestScope } = await renameTarget(
+        context,
+        campaign.id,
+        params.target,
+        body.name,
+      )
       return presentTarget(target, versions, latestScope)
     },
   })

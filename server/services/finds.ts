@@ -70,7 +70,7 @@ export async function topFinds(manager: EntityManager, search: Search, count: nu
   })
 }
 
-async function outcomesOf(
+export async function outcomesOf(
   manager: EntityManager,
   scoringHash: string,
   candidateKeys: readonly string[],

@@ -75,6 +75,7 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/campaigns/:campaign/explorations/:exploration/export.json', everyone],
   ['GET /api/campaigns/:campaign/searches', everyone],
   ['POST /api/campaigns/:campaign/searches', builders],
+  ['GET /api/campaigns/:campaign/comparisons', everyone],
   ['GET /api/campaigns/:campaign/searches/:search', everyone],
   ['POST /api/campaigns/:campaign/searches/:search/pause', builders],
   ['POST /api/campaigns/:campaign/searches/:search/resume', builders],
