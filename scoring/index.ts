@@ -56,6 +56,7 @@ export * from './rules/index.ts'
 // The search: one primitive, `advance`, and what is made of it.
 export { advance, startState, type Segment, type SegmentOptions } from './search/advance.ts'
 export {
+  easyRate,
   enrichment,
   fewestIslands,
   isEasy,

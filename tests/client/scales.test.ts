@@ -1,7 +1,7 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
 import { coveredRange } from '../../src/components/charts/HodgeScatter.tsx'
-import { alignCurves } from '../../src/components/charts/alignCurves.ts'
+import { alignCurves, bestAt, lastKnownEnd } from '../../src/components/charts/runCurves.ts'
 import { linearScale, linearTicks, logScale, logTicks } from '../../src/components/charts/scales.ts'
 
 describe('scales', () => {
@@ -25,20 +25,47 @@ describe('scales', () => {
   })
 })
 
-describe('the two curves of a search', () => {
-  it('share one list of evaluation counts; the found one is level up to now', () => {
-    const found = [
+describe('the curves of searches', () => {
+  const run = {
+    label: 'A',
+    curve: [
       [1, -6.5],
       [40, -6],
-    ] as const
-    const expected = [
+    ] as const,
+    evaluations: 90,
+  }
+  const sample = {
+    size: 60,
+    best: -5.9,
+    expected: [
       [1, -6.4],
-      [10, -6.2],
-    ] as const
-    expect(alignCurves(found, expected, 90)).toEqual([
-      [1, 10, 40, 90],
-      [-6.5, undefined, -6, -6],
-      [-6.4, -6.2, undefined, undefined],
-    ])
+      [60, -5.9],
+    ] as const,
+    range: [
+      [1, -7, -6],
+      [60, -6.1, null],
+    ] as const,
+  }
+
+  it('share one list of evaluation counts; a found one is level up to now', () => {
+    expect(alignCurves([run], { ...sample, size: 90, expected: [[10, -6.2]], range: [] }, 90)).toMatchObject({
+      counts: [1, 10, 40, 90],
+      runs: [[-6.5, undefined, -6, -6]],
+      expected: [undefined, -6.2, undefined, undefined],
+    })
+  })
+
+  it('show the null’s best as a bound beyond its size, and for an end that the sample does not know', () => {
+    const { counts, high, low, bound } = alignCurves([run], sample, 90)
+    expect(counts).toEqual([1, 40, 60, 90])
+    expect(bound).toEqual([undefined, undefined, -5.9, -5.9])
+    expect(low).toEqual([-7, undefined, -6.1, undefined])
+    expect(high).toEqual([-6, undefined, -5.9, undefined])
+    expect(lastKnownEnd(sample.range)).toBe(1)
+    expect(alignCurves([run], sample, 60).bound).toEqual([undefined, undefined, undefined, undefined])
+  })
+
+  it('have no value before the first feasible candidate, nor after the last evaluation', () => {
+    expect([0, 1, 39, 40, 90, 91].map((n) => bestAt(run, n))).toEqual([null, -6.5, -6.5, -6, -6, null])
   })
 })

@@ -1,76 +1,145 @@
-import { enrichment, fewestIslands, isEasy, searchRate } from '../../../scoring/index.ts'
+import { easyRate, fewestIslands } from '../../../scoring/index.ts'
+import { type NullSummary } from '../../../shared/nullSamples.ts'
 import { type SearchDetail } from '../../../shared/searches.ts'
 import { Facts } from '../../components/ui/Layout.tsx'
+import { Num } from '../../components/ui/Num.tsx'
+import { Rate } from '../../components/ui/Rate.tsx'
 import { Empty } from '../../components/ui/States.tsx'
+import {
+  againstNull,
+  enrichmentText,
+  expectedBestOf,
+  levelsReached,
+  type AgainstNull as Compared,
+} from '../../lib/againstNull.ts'
 import { formatNumber, formatPercent } from '../../lib/numbers.ts'
+import { HowRare } from './HowRare.tsx'
 
-/** The search's hit rate beside the null's, and how rare its best score is; only what the counts can carry. */
+/** What the search found beside what chance finds with the same rule. */
 export function AgainstNull({ search }: { search: SearchDetail }) {
-  const { null: summary, progress } = search
-  if (!summary?.hit) return <Empty title="Compared as soon as the null sample has been evaluated." />
-  const counts = progress.islands.flatMap(({ hits, evaluations }) =>
-    hits === undefined ? [] : [{ hits, evaluations }],
+  const { null: sample } = search
+  if (!sample?.hit) return <Empty title="Compared as soon as the null sample has been evaluated." />
+  const compared = againstNull(search)
+  return (
+    <div className="flex flex-col gap-4">
+      <div>
+        <Facts
+          rows={[
+            ['A hit is', <HitLine key="v" search={search} sample={sample} />],
+            ['Hits of the search', <SearchHits key="v" compared={compared} />],
+            ['Hits of the null', <Rate key="v" rate={sample.hit} />],
+            [
+              'Search over null',
+              compared.enrichment ? enrichmentText(compared.enrichment, compared.isExact) : '–',
+            ],
+          ]}
+        />
+        <p className="prose-line mt-1 text-xs text-soft">
+          Distinct hits per distinct evaluation, counted within each island. Null: {lawName(sample)}, seed{' '}
+          {sample.seed}, {formatNumber(sample.evaluated)} candidates
+          {sample.complete ? '' : ', still being drawn'}.
+        </p>
+        {compared.easy && (
+          <p role="note" className="prose-line mt-2 border-l-2 border-null pl-3">
+            More than {formatPercent(easyRate)} of the null hits already: most of what this search finds,
+            chance finds as well. A stricter hit line would say more.
+          </p>
+        )}
+      </div>
+      <Progress search={search} sample={sample} />
+      <HowRare sample={sample} best={search.progress.best} />
+    </div>
   )
-  const isCounted = search.ownHitLine && counts.length === progress.islands.length
-  const found = isCounted ? searchRate(counts) : null
-  const compared = found && enrichment(found, summary.hit)
-  const isExact = progress.exhausted && search.method === 'exhaustive'
+}
+
+/** "quadratic-noise/1" of "quadratic-noise/1: Polytope uniform over ...". */
+const lawName = ({ law }: NullSummary) => law.split(':')[0]
+
+function HitLine({ search, sample }: { search: SearchDetail; sample: NullSummary }) {
+  if (search.ownHitLine) return 'what the rule’s hit line says'
   return (
     <>
-      <Facts
-        rows={[
-          [
-            'Hit rate of the search',
-            found ? <SearchHits key="v" rate={found} isExact={isExact} /> : search.ownHitLine ? '–' : noLine,
-          ],
-          ['Over the null’s', compared ? ratioText(compared, isExact) : '–'],
-          ['Best score', rarityText(search)],
-        ]}
-      />
-      {search.ownHitLine && isEasy(summary.hit) && (
-        <p className="prose-line mt-3 text-soft">
-          The null hits often already: most of what this search finds, chance finds as well. A stricter hit
-          line would say more.
-        </p>
-      )}
+      a score above <Num value={sample.quantile99} digits={5} />, the null’s 99 % quantile
     </>
   )
 }
 
-const noLine = 'not counted: the rule has no hit line'
-
-type Rate = NonNullable<ReturnType<typeof searchRate>>
-
-function SearchHits({ rate, isExact }: { rate: Rate; isExact: boolean }) {
+function SearchHits({ compared: { rate, unsure, isExact } }: { compared: Compared }) {
+  if (rate === null) return 'not known yet'
   const { hits, evaluations, interval, islands } = rate
+  const bins =
+    unsure > 0 ? `; ±\u2009${formatNumber(Math.ceil(unsure / 2))} hits by the histogram’s bins` : ''
+  const count = `${formatNumber(hits)} of ${formatNumber(evaluations)}`
+  if (hits === 0 && !isExact) {
+    return (
+      <span data-raw={0}>
+        none{' '}
+        <span className="text-soft">
+          ({count}
+          {bins})
+        </span>
+      </span>
+    )
+  }
   const error = isExact
     ? 'exact: every class has been scored'
     : interval
-      ? `${formatPercent(interval[0])} to ${formatPercent(interval[1])}, 95 %, from ${islands} islands`
-      : `no interval: it takes ${fewestIslands} islands`
+      ? `${formatPercent(interval[0])} to ${formatPercent(interval[1])}, 95 %, resampling ${islands} islands`
+      : `no interval: that takes ${fewestIslands} islands, here ${islands === 1 ? 'is 1' : `are ${islands}`}`
   return (
     <span data-raw={rate.rate}>
       {formatPercent(rate.rate)}{' '}
       <span className="text-soft">
-        ({error}; {formatNumber(hits)} of {formatNumber(evaluations)} distinct classes)
+        ({error}; {count}
+        {bins})
       </span>
     </span>
   )
 }
 
-function ratioText({ ratio, interval }: ReturnType<typeof enrichment>, isExact: boolean): string {
-  const times = ratio === null ? null : `${formatNumber(ratio, 3)} times`
-  if (interval === null || isExact) return times ?? 'the null has no hit'
-  const [low, high] = interval
-  const range =
-    high === null
-      ? `at least ${formatNumber(low, 3)} times`
-      : `${formatNumber(low, 3)} to ${formatNumber(high, 3)}`
-  return times === null ? `${range} (95 %)` : `${times} (${range}, 95 %)`
-}
-
-function rarityText({ null: summary, progress }: SearchDetail): string {
-  if (!summary || progress.best === null) return '–'
-  if (summary.best !== null && progress.best <= summary.best) return 'reached by the null sample, too'
-  return `none of ${formatNumber(summary.evaluated)} is as good: below ${formatPercent(Math.min(1, 3 / summary.evaluated))} (95 %)`
+/** How far the search got with how many evaluations, beside the null. */
+function Progress({ search, sample }: { search: SearchDetail; sample: NullSummary }) {
+  const { evaluations, best } = search.progress
+  const expected = expectedBestOf(sample, evaluations)
+  return (
+    <Facts
+      rows={[
+        [
+          'Best score',
+          <span key="v">
+            <Num value={best} digits={6} className="font-medium text-found" />{' '}
+            <span className="text-soft">after {formatNumber(evaluations)} evaluations</span>
+          </span>,
+        ],
+        [
+          'Expected of the null',
+          expected ? (
+            <span key="v">
+              {expected.isBound && 'at least '}
+              <Num value={expected.score} digits={6} />{' '}
+              <span className="text-soft">
+                {expected.isBound
+                  ? `for as many: its best of ${formatNumber(sample.evaluated)}, nothing is extrapolated`
+                  : 'best of as many'}
+              </span>
+            </span>
+          ) : (
+            '–'
+          ),
+        ],
+        ...levelsReached(search, sample).map(
+          ({ name, level, evaluations: at }) =>
+            [
+              `Null’s ${name}`,
+              <span key="v">
+                <Num value={level} digits={6} />{' '}
+                <span className="text-soft">
+                  {at === null ? 'not reached' : `reached after ${formatNumber(at)}`}
+                </span>
+              </span>,
+            ] as const,
+        ),
+      ]}
+    />
+  )
 }

@@ -1,10 +1,10 @@
-import { useState } from 'react'
+import { useMemo, useState } from 'react'
 import { Link, useParams } from 'react-router-dom'
 import { toast } from 'sonner'
 import { searchMethods, type SearchDetail } from '../../../shared/searches.ts'
 import { explain } from '../../api/request.ts'
 import { useSearch, useSearchCommand, type SearchCommand } from '../../api/searches.ts'
-import { LiveCurve } from '../../components/charts/LiveCurve.tsx'
+import { BestCurves } from '../../components/charts/BestCurves.tsx'
 import { describeScope } from '../../components/scope/scopeAddress.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button, ButtonLink } from '../../components/ui/Button.tsx'
@@ -16,6 +16,7 @@ import { Progress } from '../../components/ui/Progress.tsx'
 import { ScoredTable } from '../../components/ui/ScoredTable.tsx'
 import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { nullCurves } from '../../lib/againstNull.ts'
 import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
 import { AgainstNull } from './AgainstNull.tsx'
 import { EventLog } from './EventLog.tsx'
@@ -35,6 +36,9 @@ export function SearchPage() {
 
 function Search({ campaign, search }: { campaign: string; search: SearchDetail }) {
   const { progress } = search
+  const { curve, evaluations } = progress
+  const runs = useMemo(() => [{ label: 'this search', curve, evaluations }], [curve, evaluations])
+  const sample = useMemo(() => nullCurves(search.null), [search.null])
   return (
     <>
       <PageHead
@@ -65,12 +69,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
       <StateLine search={search} />
       <div className="grid grid-cols-1 gap-x-8 gap-y-4 border-t py-4 lg:grid-cols-[minmax(0,1fr)_300px]">
         {progress.curve.length > 0 ? (
-          <LiveCurve
-            found={progress.curve}
-            expected={search.null?.expectedBest ?? []}
-            evaluations={progress.evaluations}
-            budget={progress.budget ?? search.budget}
-          />
+          <BestCurves runs={runs} sample={sample} budget={progress.budget ?? search.budget} />
         ) : (
           <Empty title="No feasible candidate yet.">
             {search.state === 'queued'
@@ -99,7 +98,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
             <AgainstNull search={search} />
           </Section>
           <Section title="Islands">
-            <IslandTable islands={progress.islands} />
+            <IslandTable search={search} />
           </Section>
         </div>
       </div>

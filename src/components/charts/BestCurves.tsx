@@ -5,40 +5,43 @@ import { useDark } from '../../lib/theme.ts'
 import { useWidth } from '../../lib/useWidth.ts'
 import { resolvedColour } from '../../lib/colours.ts'
 import { formatNumber } from '../../lib/numbers.ts'
-import { Num } from '../ui/Num.tsx'
-import { Table, Td, Th } from '../ui/Table.tsx'
-import { alignCurves, type Curve } from './alignCurves.ts'
+import { alignCurves, type AlignedCurves, type NullCurves, type RunCurve } from './runCurves.ts'
+import { BestCurvesTable } from './BestCurvesTable.tsx'
+import { CurveKey } from './CurveKey.tsx'
+import { runLooks } from './runLooks.ts'
 import { tickFormat } from './scales.ts'
 import { ChartFrame } from './ChartFrame.tsx'
 
-interface LiveCurveProps {
-  /** Best score so far over evaluations: what the search found, in amber. */
-  found: Curve
-  /** Expected best of as many null candidates, in grey. */
-  expected: Curve
-  /** Evaluations so far; the found curve is level up to here. */
-  evaluations: number
+interface BestCurvesProps {
+  runs: readonly RunCurve[]
+  /** Drawn in grey; null: none, or none that all runs are compared with. */
+  sample: NullCurves | null
+  /** The x axis goes at least as far as the runs have come, and no further than this. */
   budget: number
 }
 
 const height = 300
 
-export function LiveCurve({ found, expected, evaluations, budget }: LiveCurveProps) {
+/** Best score so far over distinct evaluations, with what the null would have found with as many. */
+export function BestCurves({ runs, sample, budget }: BestCurvesProps) {
   const [frame, width] = useWidth<HTMLDivElement>(720)
   const dark = useDark()
   const plot = useRef<uPlot | null>(null)
-  const data = useMemo(() => alignCurves(found, expected, evaluations), [found, expected, evaluations])
-  const reach = Math.max(evaluations, Math.min(budget, expected.at(-1)?.[0] ?? 0), 10)
+  const evaluations = Math.max(0, ...runs.map((run) => run.evaluations))
+  const reach = Math.max(evaluations, Math.min(budget, sample?.expected.at(-1)?.[0] ?? 0), 10)
+  const aligned = useMemo(() => alignCurves(runs, sample, reach), [runs, sample, reach])
+  const data = useMemo(() => dataOf(aligned), [aligned])
   const latest = useRef({ data, reach })
   useEffect(() => {
     latest.current = { data, reach }
   })
+  const count = runs.length
 
   useEffect(() => {
     const host = frame.current
     if (!host) return
     const made = new uPlot(
-      options(width, () => latest.current.reach),
+      options(width, count, () => latest.current.reach),
       latest.current.data,
       host,
     )
@@ -48,35 +51,35 @@ export function LiveCurve({ found, expected, evaluations, budget }: LiveCurvePro
       plot.current = null
     }
     // The theme is part of the drawing: colours on a canvas do not follow the style sheet.
-  }, [frame, width, dark])
+  }, [frame, width, dark, count])
 
   useEffect(() => {
-    plot.current?.setData(data)
+    if (plot.current?.series.length === data.length) plot.current.setData(data)
   }, [data, reach])
 
   return (
-    <ChartFrame title="Best score so far" table={<CurveTable data={data} />}>
-      <p className="mb-1 flex flex-wrap gap-x-4 text-xs">
-        <span className="inline-flex items-center gap-1.5">
-          <span className="inline-block h-0.5 w-5 bg-found-fill" aria-hidden /> this search
-        </span>
-        <span className="inline-flex items-center gap-1.5">
-          <span className="inline-block w-5 border-t-2 border-dashed border-null" aria-hidden /> expected best
-          of as many null candidates
-        </span>
-      </p>
+    <ChartFrame
+      title="Best score so far"
+      table={<BestCurvesTable runs={runs} sample={sample} counts={aligned.counts} />}
+    >
+      <CurveKey runs={runs} sample={sample} reach={reach} />
       <div
         ref={frame}
         role="img"
-        aria-label={`Best score so far over ${formatNumber(evaluations)} evaluations, beside the expectation from the null sample`}
+        aria-label={`Best score so far over ${formatNumber(evaluations)} evaluations${sample ? ', beside what the null sample would have found with as many' : ''}`}
         style={{ minHeight: height }}
       />
     </ChartFrame>
   )
 }
 
-function options(width: number, reach: () => number): uPlot.Options {
-  const [ink, line, foundColour, nullColour] = ['ink-soft', 'line', 'found-fill', 'null'].map((name) =>
+/** Low and high first, so that the band lies under everything. */
+function dataOf({ counts, runs, expected, low, high, bound }: AlignedCurves): uPlot.AlignedData {
+  return [counts, low, high, expected, bound, ...runs]
+}
+
+function options(width: number, runs: number, reach: () => number): uPlot.Options {
+  const [ink, line, grey, wash] = ['ink-soft', 'line', 'null', 'null-wash'].map((name) =>
     resolvedColour(name),
   ) as [string, string, string, string]
   const font = '11px "IBM Plex Sans Variable", system-ui, sans-serif'
@@ -87,6 +90,7 @@ function options(width: number, reach: () => number): uPlot.Options {
     grid: { stroke: line, width: 1 },
     ticks: { stroke: line, width: 1 },
   }
+  const edge = { stroke: 'transparent', width: 0, spanGaps: true, points: { show: false } }
   return {
     width,
     height,
@@ -96,6 +100,7 @@ function options(width: number, reach: () => number): uPlot.Options {
       x: { time: false, range: () => [0, reach()] },
       y: { range: (_, low, high) => padded(low, high) },
     },
+    bands: [{ series: [2, 1], fill: wash }],
     axes: [
       {
         ...axis,
@@ -113,15 +118,18 @@ function options(width: number, reach: () => number): uPlot.Options {
     ],
     series: [
       {},
-      {
-        label: 'this search',
-        stroke: foundColour,
+      edge,
+      edge,
+      { stroke: grey, width: 2, dash: [6, 4], spanGaps: true, points: { show: alone } },
+      { stroke: grey, width: 1.5, dash: [1, 5], spanGaps: true, points: { show: false } },
+      ...runLooks.slice(0, runs).map(({ colour, dash }) => ({
+        stroke: resolvedColour(colour),
         width: 2.5,
+        dash: [...dash],
         spanGaps: true,
         points: { show: alone },
         paths: uPlot.paths.stepped?.({ align: 1 }),
-      },
-      { label: 'null', stroke: nullColour, width: 2, dash: [6, 4], spanGaps: true, points: { show: alone } },
+      })),
     ],
   }
 }
@@ -135,34 +143,4 @@ function padded(low: number | null, high: number | null): [number, number] {
   if (low === null || high === null || !Number.isFinite(low) || !Number.isFinite(high)) return [0, 1]
   const room = (high - low || Math.abs(high) || 1) * 0.08
   return [low - room, high + room]
-}
-
-function CurveTable({ data }: { data: ReturnType<typeof alignCurves> }) {
-  const [counts, found, expected] = data
-  return (
-    <Table label="Best score over evaluations">
-      <thead>
-        <tr>
-          <Th numeric>Evaluations</Th>
-          <Th numeric>This search</Th>
-          <Th numeric>Expected from the null</Th>
-        </tr>
-      </thead>
-      <tbody>
-        {counts.map((count, at) => (
-          <tr key={count}>
-            <Td numeric>
-              <Num value={count} />
-            </Td>
-            <Td numeric>
-              <Num value={found[at] ?? null} digits={6} />
-            </Td>
-            <Td numeric>
-              <Num value={expected[at] ?? null} digits={6} />
-            </Td>
-          </tr>
-        ))}
-      </tbody>
-    </Table>
-  )
 }
