@@ -67,6 +67,7 @@ export {
   type SearchRate,
 } from './search/islandRates.ts'
 export { interleaved, thinned, type Curve } from './search/curve.ts'
+export { extensionsSchema } from './search/extensions.ts'
 export type { Find } from './search/find.ts'
 export { codeOfHeights, heightsOfCode } from './search/heightsCode.ts'
 export { rankedScores, rarenessOf, type Rareness, type RankedScores } from './search/rankedScores.ts'
@@ -89,7 +90,7 @@ export {
 } from './search/jobs.ts'
 export { OutcomeMemo } from './search/memo.ts'
 export { feasibleKind } from './search/merit.ts'
-export { isMethodName, methodNames, methods, type MethodName } from './search/methods.ts'
+export { isMethodName, methodNames, methods, usesStarts, type MethodName } from './search/methods.ts'
 export { nullProblem, nullSample, nullSizeLimit, nullSummary, type NullSummary } from './search/nullSample.ts'
 export {
   FormCache,
@@ -111,6 +112,7 @@ export {
   stateLimitBytes,
   type SearchSettings,
 } from './search/settings.ts'
+export { startLimit, type GivenStart } from './search/givenStarts.ts'
 export { timedCandidate, type Clock, type StageCosts } from './search/stageClock.ts'
 export type { Json, RunEnd, SampledRow, SampleRow, SearchCounts, SearchState } from './search/state.ts'
 export { expectedBest, medianOf, quantileOf, rateOf, type Rate } from './search/statistics.ts'

@@ -5,6 +5,7 @@ import { evaluationUnits, scoreEntry } from '../evaluation.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import { scoringHash } from '../rules/hash.ts'
 import type { Find } from '../search/find.ts'
+import { usesStarts } from '../search/methods.ts'
 import { mergeIslands } from '../search/islands.ts'
 import type { SegmentInput } from '../search/jobs.ts'
 import { nullSummary } from '../search/nullSample.ts'
@@ -14,7 +15,7 @@ import { searchStatistics } from '../search/searchStatistics.ts'
 import { islandBudget } from '../search/settings.ts'
 import type { SearchState } from '../search/state.ts'
 import { engineVersion } from '../version.ts'
-import type { SearchSpec } from './searchSpec.ts'
+import { specOf, type SearchSpec } from './searchSpec.ts'
 import type { SegmentThreads } from './threads.ts'
 
 /** One line of a search's output. */
@@ -71,10 +72,12 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
     method: spec.method,
     seed: spec.seed,
     settings: spec.settings,
+    starts: startsLine(spec),
+    extensions: spec.extensions,
     units: evaluationUnits,
     caution,
   }
-  print({ kind: 'start', ...context })
+  print({ kind: 'start', ...context, spec: specOf(spec) })
   const started = (): SearchState[] => states.slice(0, islands).filter((state) => state !== null)
   let failed = false
   await Promise.all(
@@ -91,13 +94,13 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
         done = output.progress.done
         save?.(states)
         if (n >= islands) continue
-        const progress = mergedProgress(started())
+        const progress = mergedProgress(started(), spec)
         print({ kind: 'progress', island: n, ...progress })
         for (const find of output.finds) print({ kind: 'find', island: n, ...findLine(find) })
       }
     }),
   )
-  const merged = mergeIslands(started(), spec.settings.keep, polytopeSource(spec.polytopes))
+  const merged = mergeIslands(started(), spec.settings.keep, polytopeSource(spec.polytopes), spec)
   const sample = states.at(islands) ?? null
   print({
     kind: 'final',
@@ -116,12 +119,14 @@ export async function runSearch(spec: SearchSpec, options: SearchRunOptions): Pr
 
 /** A job per island, and one for the null sample. */
 function jobsOf(spec: SearchSpec): SegmentInput[] {
-  const { polytopes, ruleText, method, settings, seed } = spec
+  const { polytopes, ruleText, method, settings, seed, starts, extensions } = spec
   const jobs = Array.from({ length: settings.islands }, (_, island): SegmentInput => ({
     polytopes,
     ruleText,
     method,
     settings,
+    starts,
+    extensions,
     seed,
     island,
     state: null,
@@ -144,6 +149,11 @@ function jobsOf(spec: SearchSpec): SegmentInput[] {
       proposals: segmentProposals,
     },
   ]
+}
+
+/** How many candidates the search was given, and whether its method begins from them. */
+function startsLine({ starts, method }: SearchSpec): { readonly given: number; readonly used: boolean } {
+  return { given: starts.length, used: starts.length > 0 && usesStarts(method) }
 }
 
 /** Some fifty segments per island, none longer than a few seconds. */

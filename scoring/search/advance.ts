@@ -1,4 +1,5 @@
 import { findOf, type Find } from './find.ts'
+import { nextExtension, requireSameExtensions } from './extensions.ts'
 import { emptyHistogram } from './histogram.ts'
 import { Island, type IslandHooks, requireSameProblem } from './island.ts'
 import { methods } from './methods.ts'
@@ -7,14 +8,13 @@ import { progressOf, type IslandProgress } from './progress.ts'
 import { seededState } from './randomStream.ts'
 import { SeenTable } from './seenTable.ts'
 import { islandBudget, seenCapacity } from './settings.ts'
+import { requireSoundStarts } from './givenStarts.ts'
 import type { SampledRow, SearchState } from './state.ts'
 
 /** The state of an island before its first step. Islands of one seed have unrelated random streams. */
 export function startState(problem: SearchProblem, seed: number, island = 0): SearchState {
-  const { settings, polytopes } = problem
-  // Room is reckoned with the largest polytope that occurs; a scope of many is only looked at where it begins.
-  const slotsWanted = methods[problem.method].repeats === false ? 0 : 2 * islandBudget(settings, island)
-  const pointCount = polytopes.count === 1 ? polytopes.at(0).polytope.pointCount : 500
+  const { settings, polytopes, starts = [] } = problem
+  requireSoundStarts(starts, polytopes.keys)
   return {
     schema: 'tessellary.state/1',
     problem: problemDigest(problem),
@@ -40,9 +40,26 @@ export function startState(problem: SearchProblem, seed: number, island = 0): Se
     histogram: emptyHistogram,
     sample: { capacity: settings.sample, offered: 0, rows: [] },
     top: [],
-    seen: new SeenTable(seenCapacity(slotsWanted, settings, pointCount)).state(),
+    seen: new SeenTable(slotsFor(problem, islandBudget(settings, island))).state(),
     surrogate: null,
     chain: null,
+  }
+}
+
+/** Slots of the table of classes seen, for a budget. */
+function slotsFor({ method, settings, polytopes }: SearchProblem, budget: number): number {
+  // Room is reckoned with the largest polytope that occurs; a scope of many is only looked at where it begins.
+  const pointCount = polytopes.count === 1 ? polytopes.at(0).polytope.pointCount : 500
+  return seenCapacity(methods[method].repeats === false ? 0 : 2 * budget, settings, pointCount)
+}
+
+/** The state with every extension taken in that is due, and room for the classes to come. */
+function extended(problem: SearchProblem, state: SearchState): SearchState {
+  let next = state
+  for (;;) {
+    const longer = nextExtension(next, problem.extensions ?? [], problem.settings)
+    if (longer === null) return next
+    next = { ...longer, seen: SeenTable.restore(longer.seen).grown(slotsFor(problem, longer.budget)).state() }
   }
 }
 
@@ -65,7 +82,9 @@ export interface Segment {
  * budget. Pure and deterministic; the generator's state is in the state. Cutting a run into segments, of
  * whatever sizes, and passing the state through JSON in between give the same final state to the bit.
  *
- * @throws InputError when the state belongs to another problem
+ * Where the budget is used up and the problem holds an extension, it takes effect: see `extensionsSchema`.
+ *
+ * @throws InputError when the state belongs to another problem, or was extended otherwise
  */
 export function advance(
   problem: SearchProblem,
@@ -74,19 +93,39 @@ export function advance(
   options: SegmentOptions = {},
 ): Segment {
   requireSameProblem(state, problemDigest(problem))
-  const island = new Island(problem, state, options)
-  const lastEvaluation = island.evaluations + evaluations
-  const lastProposal = island.proposals + (options.proposals ?? Infinity)
-  while (
-    island.ended === null &&
-    island.evaluations < Math.min(island.budget, lastEvaluation) &&
-    island.proposals < lastProposal
-  ) {
-    island.chain.step()
-  }
-  const next = island.state()
+  requireSameExtensions(state, problem.extensions ?? [])
+  const lastEvaluation = state.evaluations + evaluations
+  const lastProposal = state.proposals + (options.proposals ?? Infinity)
+  const newcomers = new Set<string>()
+  const sampled = new Map<number, SampledRow>()
+  let next = state
+  let from: SearchState
+  // An extension is taken in between two openings, so that it makes no difference whether a segment ends there.
+  do {
+    from = extended(problem, next)
+    const island = new Island(problem, from, options)
+    while (
+      island.ended === null &&
+      island.evaluations < Math.min(island.budget, lastEvaluation) &&
+      island.proposals < lastProposal
+    ) {
+      island.chain.step()
+    }
+    next = island.state()
+    for (const key of island.newcomers) newcomers.add(key)
+    for (const row of island.sampled()) sampled.set(row.place, row)
+  } while (
+    next.evaluations < lastEvaluation &&
+    next.proposals < lastProposal &&
+    nextExtension(next, problem.extensions ?? [], problem.settings) !== null
+  )
   const finds = next.top
-    .filter((row) => island.newcomers.has(row.classKey))
+    .filter((row) => newcomers.has(row.classKey))
     .map((row) => findOf(row, problem.polytopes))
-  return { state: next, finds, progress: progressOf(next), sampled: island.sampled() }
+  return {
+    state: next,
+    finds,
+    progress: progressOf(next, problem),
+    sampled: [...sampled.values()].sort((a, b) => a.place - b.place),
+  }
 }

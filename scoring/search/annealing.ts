@@ -9,6 +9,7 @@ import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { exchangeCount, moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
+import type { Start } from './givenStarts.ts'
 import { promisingStart, promisingStep } from './promising.ts'
 import { proposalOf, type PlacedHeights } from './sampling.ts'
 import type { Json } from './state.ts'
@@ -39,7 +40,7 @@ interface AnnealingState {
  * Simulated annealing (Kirkpatrick, Gelatt, Vecchi 1983) over the heights of one polytope, with hops between
  * polytopes where the scope has several. Candidates are compared in the full order of outcomes, so that a chain
  * finds its way from infeasible candidates to feasible ones. A run consists of one or more descents, each from a
- * fresh start with its share of the budget.
+ * fresh start with its share of the budget; an extension brings as many further ones.
  */
 export const annealing: Method = {
   name: 'annealing',
@@ -95,6 +96,8 @@ class AnnealingChain implements Chain {
     const { run, book, place } = this
     if (book.open === 0) {
       run.end(book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
+    } else if (run.judgeStart()) {
+      return
     } else if (place === undefined || this.nextDescent() || book.isSpent(this.polytope)) {
       this.begin()
     } else if (this.scouted < Math.min(scouts, this.descentLength() / 20)) {
@@ -107,13 +110,17 @@ class AnnealingChain implements Chain {
     }
   }
 
-  /** A fresh start on a polytope drawn from the open ones. */
+  /** A fresh start on a polytope drawn from the open ones, or on the given candidate whose turn it is. */
   private begin(): void {
     const { run, book } = this
-    const start = promisingStart(run, () => book.draw())
+    const turn = run.starts[this.descent] as Start | undefined
+    const given = turn && !book.isSpent(turn.polytope) ? turn : undefined
+    const start = given
+      ? { polytope: given.polytope, place: given.place() }
+      : promisingStart(run, () => book.draw())
     if (start === null) return
     if (this.place !== undefined) run.countRestart()
-    this.scouted = 1
+    this.scouted = given === undefined ? 1 : scouts
     const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit !== null) this.stand(start.polytope, start.place, merit)
   }
@@ -179,19 +186,26 @@ class AnnealingChain implements Chain {
   }
 
   private descentLength(): number {
-    return this.run.budget / this.run.descents
+    return this.run.stage.budget / this.run.descents
   }
 
   /** True when the evaluations used have reached the next descent, which then begins. */
   private nextDescent(): boolean {
-    const descent = Math.min(this.run.descents - 1, Math.floor(this.run.evaluations / this.descentLength()))
+    const { descents, stage } = this.run
+    const nth = Math.min(descents - 1, Math.floor(this.stageEvaluations() / this.descentLength()))
+    const descent = stage.number * descents + nth
     if (descent === this.descent) return false
     this.descent = descent
     return true
   }
 
   private progress(): number {
-    return this.run.evaluations / this.descentLength() - this.descent
+    const { descents, stage } = this.run
+    return this.stageEvaluations() / this.descentLength() - (this.descent - stage.number * descents)
+  }
+
+  private stageEvaluations(): number {
+    return this.run.evaluations - this.run.stage.begun
   }
 
   private hopShare(): number {

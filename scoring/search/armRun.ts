@@ -1,8 +1,11 @@
 import type { NormalForm } from '../geometry/normalForm.ts'
 import { compareMerits, type Merit } from './merit.ts'
+import type { Stage } from './extensions.ts'
 import type { Judgement, Proposal, Prospective, Run } from './method.ts'
 import type { RandomStream } from './randomStream.ts'
+import type { PlacedHeights } from './sampling.ts'
 import type { SearchSettings } from './settings.ts'
+import type { Start } from './givenStarts.ts'
 import type { RunEnd } from './state.ts'
 
 /** What an arm has counted for itself. */
@@ -64,6 +67,29 @@ export class ArmRun implements Run {
 
   get patience(): number {
     return this.run.patience
+  }
+
+  /** An arm goes on with more budget; nothing begins anew. */
+  get stage(): Stage {
+    return { number: 0, begun: 0, budget: this.budget }
+  }
+
+  get starts(): readonly Start[] {
+    const { run, polytopes } = this
+    if (polytopes === null) return run.starts
+    return run.starts.flatMap((start) => {
+      const polytope = polytopes.indexOf(start.polytope)
+      return polytope < 0 ? [] : [{ ...start, polytope }]
+    })
+  }
+
+  /** They have been scored before the arms begin. */
+  judgeStart(): boolean {
+    return false
+  }
+
+  startOn(polytope: number): PlacedHeights | undefined {
+    return this.run.startOn(this.indexOf(polytope))
   }
 
   form(polytope: number): NormalForm {

@@ -32,7 +32,7 @@ interface ArmState {
 }
 
 interface AutoState {
-  readonly phase: 'enumeration' | 'scouting' | 'arms'
+  readonly phase: 'enumeration' | 'starts' | 'scouting' | 'arms'
   readonly enumeration: { readonly budget: number; readonly counts: ArmCounts; readonly chain: Json } | null
   readonly scouting: ScoutingState | null
   readonly arms: readonly ArmState[]
@@ -56,7 +56,7 @@ interface Arm {
  * before symmetry, are passed. Else, on one polytope, it runs a portfolio of annealing, genetic search and parallel
  * tempering by successive halving: each round gets an equal part of what is left of the budget, shared equally, and
  * the better half of the arms goes on, by their best candidates. On several polytopes a quarter of the budget at
- * most goes to scouting (see `Scouting`), and the best eight polytopes get an arm of annealing each. Everything is
+ * most goes to scouting (see `Scouting`; given candidates count as draws on their polytopes), and the best eight polytopes get an arm of annealing each. Everything is
  * counted in evaluations and draws.
  */
 export const auto: Method = {
@@ -128,6 +128,7 @@ class AutoChain implements Chain {
 
   step(): void {
     if (this.phase === 'enumeration') this.enumerate()
+    else if (this.phase === 'starts') this.takeStarts()
     else if (this.phase === 'scouting') this.scout()
     else this.runArms()
   }
@@ -140,10 +141,18 @@ class AutoChain implements Chain {
     } catch (error) {
       if (!(error instanceof InputError) || error.code !== 'search.too-many-classes') throw error
       this.enumeration = null
-      this.phase = run.polytopeCount === 1 ? 'arms' : 'scouting'
+      this.phase = 'starts'
       return
     }
     if (enumeration.run.ended !== null) run.end(enumeration.run.ended)
+  }
+
+  /** Scores what was given. Each arm begins from those on its own polytope. */
+  private takeStarts(): void {
+    const { run, scouting } = this
+    if (run.judgeStart()) return
+    for (const { polytope, merit } of run.starts) scouting.learn(polytope, merit)
+    this.phase = run.polytopeCount === 1 ? 'arms' : 'scouting'
   }
 
   private scout(): void {

@@ -46,6 +46,7 @@ export const exhaustive: Method = {
   name: 'exhaustive',
   version: 1,
   repeats: false,
+  ignoresStarts: true,
   description:
     'Every class of every polytope, each once: counts first, and refuses what has more classes than the budget ' +
     `or more than ${exhaustiveLimit.toLocaleString('en')} before symmetry.`,

@@ -8,6 +8,7 @@ import { PolytopeBook } from './polytopeBook.ts'
 import { promisingStart, promisingStep } from './promising.ts'
 import { proposalOf } from './sampling.ts'
 import { restoredStanding, storedStanding, type Standing, type StandingState } from './standing.ts'
+import type { Start } from './givenStarts.ts'
 import type { Json } from './state.ts'
 
 /** Members of one population. */
@@ -88,18 +89,35 @@ class GeneticChain implements Chain {
       run.end(book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
       return
     }
+    if (run.judgeStart()) return
     if (run.evaluations >= (this.migrations + 1) * migrationInterval * populations.length) this.migrate()
     const members = populations[run.proposals % populations.length]
     // Where a polytope has few classes a population never fills up; it breeds all the same.
     const stale = Math.min(0.5, run.stalled / 400)
     const share = members.length < this.size() ? filling : Math.max(newcomers, stale)
-    if (members.length === 0 || run.stream.uniform() < share) this.newcomer(members)
+    const given = this.givenTo(members)
+    if (given !== undefined) this.settle(members, given)
+    else if (members.length === 0 || run.stream.uniform() < share) this.newcomer(members)
     else this.breed(members)
   }
 
   /** Members to begin with: fewer when the budget is small. */
   private size(): number {
     return Math.max(4, Math.min(populationSize, Math.floor(this.run.budget / (10 * this.populations.length))))
+  }
+
+  /** The given candidate with which a population goes on filling up: they are dealt out, the best first. */
+  private givenTo(members: readonly Member[]): Start | undefined {
+    const { populations, run, book } = this
+    if (members.length >= this.size()) return undefined
+    const nth = members.length * populations.length + (run.proposals % populations.length)
+    const given = run.starts[nth] as Start | undefined
+    if (given === undefined || book.isSpent(given.polytope)) return undefined
+    return members.some(({ key }) => key === given.classKey) ? undefined : given
+  }
+
+  private settle(members: Member[], { polytope, place }: Start): void {
+    this.judged(members, polytope, proposalOf(place()), () => worstOf(members), undefined)
   }
 
   /** A random candidate; it takes the place of the worst member when the population is full. */

@@ -9,17 +9,20 @@ import { buildCandidate } from '../observables/buildCandidate.ts'
 import { evaluatePolytopeStage, evaluateRule } from '../rules/evaluate.ts'
 import type { Outcome } from '../rules/outcome.ts'
 import { withStep, type Curve } from './curve.ts'
+import type { ExtendedState, Stage } from './extensions.ts'
 import { codeOfHeights } from './heightsCode.ts'
 import { Histogram } from './histogram.ts'
 import type { OutcomeMemo } from './memo.ts'
 import { irregularKind, meritOf } from './merit.ts'
 import type { Chain, Judgement, Proposal, Prospective, Run } from './method.ts'
-import { methods } from './methods.ts'
+import { methods, usesStarts } from './methods.ts'
 import type { SearchProblem } from './problem.ts'
 import { RandomStream } from './randomStream.ts'
 import { Reservoir } from './reservoir.ts'
+import { proposalOf, type PlacedHeights } from './sampling.ts'
 import { SeenTable, seenKey } from './seenTable.ts'
 import type { SearchSettings } from './settings.ts'
+import { GivenCandidates, startsOfIsland, type Start } from './givenStarts.ts'
 import type { RunEnd, SampledRow, SampleRow, SearchState } from './state.ts'
 import { Surrogate } from './surrogate/surrogate.ts'
 import { helpsWith } from './surrogate/use.ts'
@@ -83,13 +86,16 @@ export class Island implements Run {
   private readonly entered = new Set<string>()
   private readonly samplers = new Map<number, () => Float64Array>()
   private readonly passes = new Map<number, boolean>()
+  private readonly given: GivenCandidates
+  private readonly extended: ExtendedState | undefined
   readonly chain: Chain
 
   constructor(
     private readonly problem: SearchProblem,
-    private readonly given: SearchState,
+    private readonly opened: SearchState,
     private readonly hooks: IslandHooks = {},
   ) {
+    const { opened: given } = this
     this.stream = new RandomStream(given.generator)
     this.polytopeCount = problem.polytopes.count
     this.settings = problem.settings
@@ -116,15 +122,19 @@ export class Island implements Run {
     this.top = new TopList(problem.settings.keep, given.top)
     this.seen = SeenTable.restore(given.seen)
     this.surrogate = helpsWith(problem) ? new Surrogate(given.surrogate) : null
+    this.given = givenCandidates(problem, given, (polytope) => this.form(polytope))
+    this.extended = given.extended
     this.chain = methods[problem.method].open(this, given.chain)
   }
 
   state(): SearchState {
+    const given = this.given.state()
+    const { extended } = this
     return {
       schema: 'tessellary.state/1',
-      problem: this.given.problem,
-      method: this.given.method,
-      seed: this.given.seed,
+      problem: this.opened.problem,
+      method: this.opened.method,
+      seed: this.opened.seed,
       island: this.island,
       budget: this.budget,
       evaluations: this.evaluations,
@@ -148,6 +158,8 @@ export class Island implements Run {
       seen: this.seen.state(),
       surrogate: this.surrogate?.state() ?? null,
       chain: this.chain.state(),
+      ...(given && { given }),
+      ...(extended && { extended }),
     }
   }
 
@@ -162,6 +174,41 @@ export class Island implements Run {
     return [...this.samplers]
       .sort(([a], [b]) => a - b)
       .map(([place, heights]) => ({ place, ...rows[place], heights: codeOfHeights(heights()) }))
+  }
+
+  get stage(): Stage {
+    const { by, begun } = this.extended ?? { by: [], begun: 0 }
+    return { number: by.length, begun, budget: this.budget - begun }
+  }
+
+  get starts(): readonly Start[] {
+    return this.given.ranked()
+  }
+
+  judgeStart(): boolean {
+    const next = this.given.next()
+    if (next === undefined) return false
+    const { given, polytope } = next
+    if (!this.polytopePasses(polytope)) {
+      this.look()
+      this.given.note(null)
+      return true
+    }
+    const judgement = this.judge(polytope, proposalOf(this.given.placed(polytope, given)))
+    if (judgement?.key !== given.classKey) {
+      throw new InputError(
+        'start.other-key',
+        `The heights given for the candidate ${given.classKey} are those of ${judgement?.key ?? 'no regular class'}.`,
+        'starts',
+        given.classKey,
+      )
+    }
+    this.given.note(judgement.merit)
+    return true
+  }
+
+  startOn(polytope: number): PlacedHeights | undefined {
+    return this.given.firstOn(polytope)
   }
 
   form(polytope: number): NormalForm {
@@ -203,9 +250,15 @@ export class Island implements Run {
     this.evaluations++
     if (!proposal.distinct) this.seen.add(high, low, merit.kind, merit.value)
     this.surrogate?.learn(form, proposal.class, merit)
-    this.count(outcome)
-    const place = this.sample.offer({ polytopeKey: form.key, classKey: canonical.key, ...merit }, this.stream)
-    if (place !== null && this.hooks.sampled) this.samplers.set(place, witness)
+    // An enumeration meets everything, given or not.
+    const isGiven = !proposal.distinct && this.given.has(canonical.key)
+    if (isGiven) this.given.evaluations++
+    this.count(outcome, isGiven)
+    if (!isGiven) {
+      const row = { polytopeKey: form.key, classKey: canonical.key, ...merit }
+      const place = this.sample.offer(row, this.stream)
+      if (place !== null && this.hooks.sampled) this.samplers.set(place, witness)
+    }
     if (this.top.admits(outcome, canonical.key)) {
       this.entered.add(canonical.key)
       this.top.insert({
@@ -272,13 +325,13 @@ export class Island implements Run {
     return outcome
   }
 
-  private count(outcome: Outcome): void {
+  private count(outcome: Outcome, isGiven: boolean): void {
     switch (outcome.kind) {
       case 'feasible':
         this.feasible++
-        if (outcome.hit === true) this.hits++
+        if (outcome.hit === true && !isGiven) this.hits++
         if (outcome.hitUndefined !== undefined) this.hitsUndefined++
-        this.histogram.add(outcome.score)
+        if (!isGiven) this.histogram.add(outcome.score)
         if (this.curve.length === 0 || outcome.score > this.curve[this.curve.length - 1][1])
           this.curve = withStep(this.curve, this.evaluations, outcome.score)
         break
@@ -292,6 +345,16 @@ export class Island implements Run {
           this.reasons.set(outcome.reason, (this.reasons.get(outcome.reason) ?? 0) + 1)
     }
   }
+}
+
+function givenCandidates(
+  { method, polytopes, settings, starts = [] }: SearchProblem,
+  { island, given }: SearchState,
+  form: (polytope: number) => NormalForm,
+): GivenCandidates {
+  const used = usesStarts(method) ? starts : []
+  const own = startsOfIsland(used.length, settings.islands, island)
+  return new GivenCandidates(used, own, polytopes.keys, form, given)
 }
 
 /** @throws InputError when the state belongs to another problem */

@@ -2,6 +2,7 @@ import { compareOutcomes } from '../rules/outcome.ts'
 import { findOf, type Find, type KeptFind } from './find.ts'
 import { Histogram, type HistogramView } from './histogram.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
+import type { SearchProblem } from './problem.ts'
 import { mergedProgress, type SearchProgressReport } from './progress.ts'
 import type { SearchState } from './state.ts'
 
@@ -27,12 +28,13 @@ export function mergeIslands(
   states: readonly SearchState[],
   keep = Infinity,
   source?: PolytopeSource,
+  problem?: Pick<SearchProblem, 'settings' | 'extensions'>,
 ): MergedIslands {
   const ordered = [...states].sort((a, b) => a.island - b.island)
   const histogram = new Histogram()
   for (const state of ordered) histogram.addAll(state.histogram)
   return {
-    progress: mergedProgress(ordered),
+    progress: mergedProgress(ordered, problem),
     top: mergedTop(ordered, keep).map((row) => findOf(row, source)),
     histogram: histogram.view(),
     reasons: added(ordered.map((state) => state.reasons)),

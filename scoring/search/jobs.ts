@@ -10,6 +10,7 @@ import { nullProblem, nullSummary, type NullSummary } from './nullSample.ts'
 import { FormCache, polytopeSource, type PolytopeEntry, type PolytopeSource } from './polytopeSource.ts'
 import type { SearchProblem } from './problem.ts'
 import { searchSettingsSchema, type SearchSettings } from './settings.ts'
+import type { GivenStart } from './givenStarts.ts'
 import { timedCandidate, type Clock, type StageCosts } from './stageClock.ts'
 import { stateShape, type SearchState } from './state.ts'
 
@@ -27,6 +28,9 @@ export interface SegmentInput {
   readonly ruleText: string
   readonly method: string
   readonly settings: Partial<SearchSettings> & Pick<SearchSettings, 'budget'>
+  /** See `SearchProblem`. */
+  readonly starts?: readonly GivenStart[]
+  readonly extensions?: readonly number[]
   /** Null: begin, with this seed and island. */
   readonly state: SearchState | null
   readonly seed: number
@@ -119,6 +123,8 @@ export function segmentJob(input: SegmentInput, session = new JobSession()): Seg
       rule,
       method: input.method,
       settings: checkedSettings(input.settings),
+      starts: input.starts ?? [],
+      extensions: input.extensions ?? [],
     }
     const state =
       input.state === null ? startState(problem, input.seed, input.island) : checkedState(input.state)

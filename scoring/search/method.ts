@@ -1,8 +1,11 @@
 import type { NormalForm } from '../geometry/normalForm.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
+import type { Stage } from './extensions.ts'
 import type { Merit } from './merit.ts'
 import type { RandomStream } from './randomStream.ts'
+import type { PlacedHeights } from './sampling.ts'
 import type { SearchSettings } from './settings.ts'
+import type { Start } from './givenStarts.ts'
 import type { Json, RunEnd } from './state.ts'
 
 /** What the run says of a proposed class. */
@@ -41,6 +44,8 @@ export interface Run {
   /** The island's share of the budget, and how much of it is used. */
   readonly budget: number
   readonly evaluations: number
+  /** The part of the run since the last extension of the budget. */
+  readonly stage: Stage
   /** Classes looked at so far. */
   readonly proposals: number
   readonly patience: number
@@ -48,6 +53,12 @@ export interface Run {
   readonly descents: number
   /** Proposals in a row without a new class. */
   readonly stalled: number
+  /** Given candidates of this island that were scored, the best first by the rule of this run. */
+  readonly starts: readonly Start[]
+  /** Scores the island's next given candidate, or passes it over; false when none is left. Calls `judge`. */
+  judgeStart(): boolean
+  /** The first of the island's given candidates on a polytope, scored or not. */
+  startOn(polytope: number): PlacedHeights | undefined
   form(polytope: number): NormalForm
   /** False when the rule's requirements on the polytope alone fail: no candidate on it can be feasible. */
   polytopePasses(polytope: number): boolean
@@ -90,6 +101,8 @@ export interface Method {
   readonly law?: { readonly name: string; readonly description: string }
   /** False when the method never proposes a class twice, so that the table of classes seen can stay small. */
   readonly repeats?: false
+  /** True when the method makes nothing of given candidates: its law allows no choice of where to begin. */
+  readonly ignoresStarts?: true
   /** A chain from its stored state; null: at its start. */
   open(run: Run, state: Json | null): Chain
 }

@@ -24,6 +24,11 @@ export const methodNames = Object.keys(methods) as MethodName[]
 
 export const isMethodName = (name: string): name is MethodName => Object.hasOwn(methods, name)
 
+/** False for a method that makes nothing of the candidates it is given to begin from. */
+export function usesStarts(name: string): boolean {
+  return isMethodName(name) && (methods[name] as Method).ignoresStarts !== true
+}
+
 /** The law by which a method draws its candidates, in words; null for a guided search, which is no sample. */
 export function lawOf(name: MethodName): string | null {
   const { law }: Method = methods[name]

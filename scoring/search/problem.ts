@@ -6,6 +6,7 @@ import { engineVersion } from '../version.ts'
 import { methods, type MethodName } from './methods.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
 import type { SearchSettings } from './settings.ts'
+import type { GivenStart } from './givenStarts.ts'
 
 /** What is searched, how, and by which rule. */
 export interface SearchProblem {
@@ -13,6 +14,10 @@ export interface SearchProblem {
   readonly rule: CheckedRule
   readonly method: MethodName
   readonly settings: SearchSettings
+  /** Candidates to begin from, the best first; see `Method.ignoresStarts`. */
+  readonly starts?: readonly GivenStart[]
+  /** Budget added since, see `extensionsSchema`. Not part of the digest: a state goes on with more of them. */
+  readonly extensions?: readonly number[]
 }
 
 const scopeDigests = new WeakMap<readonly string[], string>()
@@ -27,15 +32,31 @@ function scopeDigest(keys: readonly string[]): string {
   return digest
 }
 
+const startDigests = new WeakMap<readonly GivenStart[], string>()
+
+/** Hash of the given candidates, in order, with their heights. */
+function startsDigest(starts: readonly GivenStart[]): string {
+  let digest = startDigests.get(starts)
+  if (digest === undefined) {
+    digest = hashOf(
+      starts
+        .map(({ polytopeKey, classKey, heights }) => `${polytopeKey} ${classKey} ${heights.join(' ')}`)
+        .join('\n'),
+    )
+    startDigests.set(starts, digest)
+  }
+  return digest
+}
+
 function hashOf(text: string): string {
   return bytesToHex(sha256(utf8ToBytes(text)))
 }
 
 /**
  * 32 hexadecimal digits that say which problem a state belongs to: scope (in order), scoring hash (rule,
- * observables, engine), method and settings.
+ * observables, engine), method, settings, and the candidates it begins from, where there are any.
  */
-export function problemDigest({ polytopes, rule, method, settings }: SearchProblem): string {
+export function problemDigest({ polytopes, rule, method, settings, starts = [] }: SearchProblem): string {
   const content = JSON.stringify({
     scope: scopeDigest(polytopes.keys),
     scoring: scoringHash(rule, engineVersion),
@@ -44,6 +65,7 @@ export function problemDigest({ polytopes, rule, method, settings }: SearchProbl
     settings: Object.entries(settings)
       .filter(([name, value]) => name !== 'surrogate' || value !== false)
       .sort(([a], [b]) => (a < b ? -1 : 1)),
+    ...(starts.length > 0 && { starts: startsDigest(starts) }),
   })
   return hashOf(content).slice(0, 32)
 }

@@ -1,11 +1,16 @@
 import { interleaved, type Curve } from './curve.ts'
+import { pendingShares } from './extensions.ts'
 import type { HistogramState } from './histogram.ts'
+import type { SearchProblem } from './problem.ts'
 import type { RunEnd, SearchCounts, SearchState } from './state.ts'
 
 /** How far an island is. */
 export interface IslandProgress extends SearchCounts {
   readonly island: number
+  /** With the extensions that are still to come. */
   readonly budget: number
+  /** Evaluations of candidates that the search was given; they count in `evaluations`, not in `hits`. */
+  readonly given: number
   readonly best: number | null
   readonly bestKey: string | null
   readonly curve: Curve
@@ -16,11 +21,20 @@ export interface IslandProgress extends SearchCounts {
   readonly done: boolean
 }
 
-export function progressOf(state: SearchState): IslandProgress {
+/** Budget that was added to a search, and over how many islands. */
+type Extended = Pick<SearchProblem, 'extensions'> & {
+  readonly settings: Pick<SearchProblem['settings'], 'islands'>
+}
+
+export function progressOf(state: SearchState, problem?: Extended): IslandProgress {
   const best = bestOf(state)
+  const pending = problem ? pendingShares(state, problem.extensions ?? [], problem.settings.islands) : []
+  const budget =
+    state.ended === null ? pending.reduce((sum, share) => sum + share, state.budget) : state.budget
   return {
     island: state.island,
-    budget: state.budget,
+    budget,
+    given: state.given?.evaluations ?? 0,
     evaluations: state.evaluations,
     proposals: state.proposals,
     accepted: state.accepted,
@@ -35,7 +49,7 @@ export function progressOf(state: SearchState): IslandProgress {
     curve: state.curve,
     histogram: state.histogram,
     ended: state.ended,
-    done: state.ended !== null || state.evaluations >= state.budget,
+    done: state.ended !== null || state.evaluations >= budget,
   }
 }
 
@@ -48,6 +62,7 @@ function bestOf(state: SearchState): { score: number; key: string } | null {
 /** Islands as one search. */
 export interface SearchProgressReport extends SearchCounts {
   readonly budget: number
+  readonly given: number
   readonly best: number | null
   readonly bestKey: string | null
   /** Best so far over the evaluations of all islands, taken in turn. */
@@ -59,8 +74,8 @@ export interface SearchProgressReport extends SearchCounts {
 }
 
 /** @param islands one state per island, in order */
-export function mergedProgress(islands: readonly SearchState[]): SearchProgressReport {
-  const parts = islands.map(progressOf)
+export function mergedProgress(islands: readonly SearchState[], problem?: Extended): SearchProgressReport {
+  const parts = islands.map((state) => progressOf(state, problem))
   const total = (pick: (part: IslandProgress) => number): number =>
     parts.reduce((sum, part) => sum + pick(part), 0)
   const leader = parts.reduce<IslandProgress | null>(
@@ -70,6 +85,7 @@ export function mergedProgress(islands: readonly SearchState[]): SearchProgressR
   )
   return {
     budget: total((part) => part.budget),
+    given: total((part) => part.given),
     evaluations: total((part) => part.evaluations),
     proposals: total((part) => part.proposals),
     accepted: total((part) => part.accepted),

@@ -10,6 +10,7 @@ export const randomSampling: Method = {
   version: 1,
   description: `Independent random candidates. ${nullLaw.description}`,
   law: nullLaw,
+  ignoresStarts: true,
   open(run) {
     return {
       step() {

@@ -67,6 +67,14 @@ export class Scouting {
     return this.isDone
   }
 
+  /** Counts a candidate that is known already as one on its polytope. */
+  learn(polytope: number, merit: Merit): void {
+    if (this.kinds[polytope] === untried || compareMerits(merit, this.meritOf(polytope)) < 0) {
+      this.kinds[polytope] = merit.kind
+      this.values[polytope] = merit.value
+    }
+  }
+
   /** Draws one candidate, or finds that a polytope is refused. */
   step(): void {
     const start = this.drawn()
@@ -79,11 +87,7 @@ export class Scouting {
       const { polytope, place } = start
       this.draws++
       const merit = this.run.judge(polytope, proposalOf(place))?.merit
-      if (merit === undefined) return
-      if (this.kinds[polytope] === untried || compareMerits(merit, this.meritOf(polytope)) < 0) {
-        this.kinds[polytope] = merit.kind
-        this.values[polytope] = merit.value
-      }
+      if (merit !== undefined) this.learn(polytope, merit)
     }
   }
 

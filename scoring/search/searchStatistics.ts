@@ -28,6 +28,11 @@ export interface SearchStatistics {
   readonly rateFrom: 'all' | 'bins'
   /** Evaluations that may lie on either side of the hit line; half of them are taken for hits. */
   readonly unsure: number
+  /**
+   * Evaluations of candidates that the search was given to begin from. They are no fresh finds and play no part in
+   * `rate`; null: the search began by itself.
+   */
+  readonly given: number | null
   readonly enrichment: Enrichment | null
   /** The null hits so often that most of what the search finds, chance finds as well. */
   readonly easy: boolean
@@ -50,11 +55,12 @@ export function searchStatistics(
   const law = enumerated ? 'exhaustive' : first?.method
   const line = summary?.quantile99 ?? null
   const hitLine = rule.hit !== null ? 'rule' : line === null ? null : 'quantile'
-  const counts = islands.map(({ evaluations, hits, histogram }) =>
-    hitLine === 'rule' || line === null
-      ? { evaluations, hits, unsure: 0 }
-      : { evaluations, ...hitsAbove(histogram, line) },
-  )
+  const counts = islands.map(({ evaluations, hits, histogram, given }) => {
+    const own = evaluations - (given?.evaluations ?? 0)
+    return hitLine === 'rule' || line === null
+      ? { evaluations: own, hits, unsure: 0 }
+      : { evaluations: own, ...hitsAbove(histogram, line) }
+  })
   const unsure = hitLine === null ? 0 : counts.reduce((sum, count) => sum + count.unsure, 0)
   const pooled = hitLine === null ? null : searchRate(counts)
   const rate = pooled && enumerated ? { ...pooled, interval: null } : pooled
@@ -70,6 +76,10 @@ export function searchStatistics(
     rate,
     rateFrom: unsure === 0 ? 'all' : 'bins',
     unsure,
+    given:
+      first?.given === undefined
+        ? null
+        : islands.reduce((sum, { given }) => sum + (given?.evaluations ?? 0), 0),
     enrichment: rate && nullRate && enrichment(rate, nullRate),
     easy: hitLine === 'rule' && nullRate !== null && isEasy(nullRate),
     rarity: sample && best > -Infinity ? rarityOf(best, scores, sample.evaluations) : null,

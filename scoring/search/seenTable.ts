@@ -102,6 +102,16 @@ export class SeenTable {
     this.kinds[slot] = kind
   }
 
+  /** The same classes in a table of at least so many slots. */
+  grown(capacity: number): SeenTable {
+    if (capacity <= this.capacity) return this
+    const table = new SeenTable(capacity)
+    for (let slot = 0; slot < this.capacity; slot++)
+      if (this.kinds[slot] !== 0)
+        table.add(this.keys[2 * slot], this.keys[2 * slot + 1], this.kinds[slot], this.values[slot])
+    return table
+  }
+
   private bucketOf(high: number, low: number): number {
     return (((high ^ (low >>> 7)) >>> 0) % (this.capacity / bucket)) * bucket
   }

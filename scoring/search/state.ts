@@ -1,11 +1,13 @@
 import { z } from 'zod'
 import type { KeptFind } from './find.ts'
 import type { Curve } from './curve.ts'
+import type { ExtendedState } from './extensions.ts'
 import type { HistogramState } from './histogram.ts'
 import type { GeneratorState } from './randomStream.ts'
 import type { ReservoirState } from './reservoir.ts'
 import type { SurrogateState } from './surrogate/surrogate.ts'
 import type { SeenTableState } from './seenTable.ts'
+import type { GivenState } from './givenStarts.ts'
 
 /** Any plain JSON value. */
 export type Json = string | number | boolean | null | readonly Json[] | { readonly [key: string]: Json }
@@ -49,7 +51,7 @@ export interface SearchCounts {
   readonly feasible: number
   readonly infeasible: number
   readonly undefined: number
-  /** Candidates that the rule's own `hit` holds for, and those it is undefined for. */
+  /** Candidates that the rule's own `hit` holds for, given ones left out, and those it is undefined for. */
   readonly hits: number
   readonly hitsUndefined: number
 }
@@ -74,6 +76,7 @@ export interface SearchState extends SearchCounts {
   readonly failures: readonly (readonly [string, number])[]
   readonly curve: Curve
   readonly histogram: HistogramState
+  /** Uniform over the evaluations, given candidates left out. */
   readonly sample: ReservoirState<SampleRow>
   readonly top: readonly KeptFind[]
   readonly seen: SeenTableState
@@ -81,6 +84,10 @@ export interface SearchState extends SearchCounts {
   readonly surrogate: SurrogateState | null
   /** The method's own. */
   readonly chain: Json
+  /** Absent where the search was given no candidates. */
+  readonly given?: GivenState
+  /** Absent until an extension takes effect. */
+  readonly extended?: ExtendedState
 }
 
 /** Enough to refuse what is no state; its problem is compared by digest. */

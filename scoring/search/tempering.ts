@@ -83,7 +83,8 @@ class TemperingChain implements Chain {
       run.end(book.passing > 0 ? 'space-exhausted' : 'no-polytope-passes')
       return
     }
-    if (run.evaluations < Math.min(scouts, run.budget / 20)) {
+    if (run.judgeStart()) return
+    if (run.starts.length === 0 && run.evaluations < Math.min(scouts, run.budget / 20)) {
       this.scout()
       return
     }
@@ -109,9 +110,15 @@ class TemperingChain implements Chain {
 
   /** A random candidate on a polytope drawn from the open ones: a fresh start, or a proposal like any other. */
   private hop(r: number): void {
-    const start = promisingStart(this.run, () => this.book.draw())
-    if (start === null) return
     const standing = this.replicas[r]
+    const { starts } = this.run
+    // Replicas begin from the given candidates, the coldest from the best.
+    const turn = standing === null && starts.length > 0 ? starts[r % starts.length] : undefined
+    const given = turn && !this.book.isSpent(turn.polytope) ? turn : undefined
+    const start = given
+      ? { polytope: given.polytope, place: given.place() }
+      : promisingStart(this.run, () => this.book.draw())
+    if (start === null) return
     const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit === null) return
     if (standing === null || this.book.isSpent(standing.polytope) || this.accepts(r, standing.merit, merit))

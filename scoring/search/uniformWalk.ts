@@ -84,7 +84,7 @@ class UniformChain implements Chain {
     }
     const place = this.places.get(polytope)
     if (place === undefined) {
-      const start = walkStart(run.form(polytope).polytope)
+      const start = walkStart(run.form(polytope).polytope, run.startOn(polytope))
       this.visit(polytope, start, proposalOf(start))
       if (exchangeCount(start.class) === 0) book.spend(polytope)
       return
@@ -110,10 +110,10 @@ class UniformChain implements Chain {
 }
 
 /**
- * The class in which a walk begins.
+ * The class in which a walk begins: that of a given candidate, or always the same one.
  * @throws InputError search.walk-too-large
  */
-export function walkStart(polytope: Polytope): PlacedHeights {
+export function walkStart(polytope: Polytope, given?: PlacedHeights): PlacedHeights {
   if (polytope.pointCount > walkPoints) {
     throw new InputError(
       'search.walk-too-large',
@@ -123,6 +123,7 @@ export function walkStart(polytope: Polytope): PlacedHeights {
       polytope.pointCount,
     )
   }
+  if (given !== undefined) return given
   const cls = referenceClass(polytope)
   const answer = isRegular(cls)
   if (!answer.regular) throw new InvariantError('The reference class is not regular.')
