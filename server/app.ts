@@ -15,10 +15,12 @@ import { certificateRoutes } from './routes/certificates.ts'
 import { collectionRoutes } from './routes/collections.ts'
 import { explorationRoutes } from './routes/explorations.ts'
 import { eventRoutes } from './routes/events.ts'
+import { externalTableRoutes } from './routes/externalTables.ts'
 import { healthRoutes } from './routes/health.ts'
 import { importedCandidateRoutes } from './routes/importedCandidates.ts'
 import { polytopeRoutes } from './routes/polytopes.ts'
 import { comparisonRoutes } from './routes/comparisons.ts'
+import { rescoringRoutes } from './routes/rescorings.ts'
 import { searchRoutes } from './routes/searches.ts'
 import { sessionRoutes } from './routes/session.ts'
 import { shortlistRoutes } from './routes/shortlists.ts'
@@ -52,6 +54,8 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   searchRoutes(app, context)
   comparisonRoutes(app, context)
   shortlistRoutes(app, context)
+  rescoringRoutes(app, context)
+  externalTableRoutes(app, context)
   candidateRoutes(app, context)
   certificateRoutes(app, context)
   importedCandidateRoutes(app, context)

@@ -34,6 +34,7 @@ async function main(): Promise<void> {
     const later = await library.open(laterFiles)
     await jobs.searches.start()
     await jobs.certifications.start()
+    await jobs.rescorings.start()
     jobs.invariants.wake()
     await library.load(first)
     await Promise.all([

@@ -1,5 +1,5 @@
 import type { z } from 'zod'
-import type { ruleIssueSchema } from '../shared/problems.ts'
+import type { PlacedProblem, ruleIssueSchema } from '../shared/problems.ts'
 
 export type RuleIssueView = z.infer<typeof ruleIssueSchema>
 
@@ -7,6 +7,7 @@ interface RefusalDetails {
   readonly path?: string
   readonly found?: unknown
   readonly issues?: readonly RuleIssueView[]
+  readonly places?: readonly PlacedProblem[]
 }
 
 /**

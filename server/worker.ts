@@ -1,4 +1,5 @@
 import { InputError } from '../scoring/index.ts'
+import { assembleShortlist } from './jobs/compute/assembleShortlist.ts'
 import { candidateGeometry, candidateSpectra } from './jobs/compute/candidateGeometry.ts'
 import { certifyCandidate } from './jobs/compute/certifyCandidate.ts'
 import { classPictures } from './jobs/compute/classPictures.ts'
@@ -26,6 +27,7 @@ const tasks: Tasks = {
   'candidates-of-text': candidatesOfText,
   'place-candidates': placeCandidates,
   'score-candidates': scoreCandidates,
+  'assemble-shortlist': assembleShortlist,
   'weight-lines': weightLinesOfText,
   'facts-of-weight-lines': factsOfWeightLines,
   'polytope-shape': polytopeShape,

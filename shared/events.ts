@@ -2,6 +2,7 @@ import { z } from 'zod'
 import { certificateMarkSchema, certificationSchema } from './certificates.ts'
 import { explorationSchema } from './explorations.ts'
 import { candidateKeySchema } from './keys.ts'
+import { rescoringSchema } from './rescorings.ts'
 import { previewSchema } from './targets.ts'
 import { searchProgressSchema, searchStates } from './searches.ts'
 import { nullSummarySchema } from './nullSamples.ts'
@@ -26,6 +27,7 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
     /** The certificate that was just made; null when only the request moved. */
     made: certificateMarkSchema.extend({ candidateKey: candidateKeySchema }).nullable(),
   }),
+  z.object({ kind: z.literal('rescoring'), rescoring: rescoringSchema }),
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   /** Stored polytopes whose numbers are still being computed. */
   z.object({ kind: z.literal('undescribed'), left: z.number().int() }),
@@ -33,7 +35,16 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('class-count'), key: z.string(), seen: z.number().int(), ended: z.boolean() }),
   z.object({
     kind: z.literal('changed'),
-    what: z.enum(['targets', 'searches', 'shortlists', 'verdicts', 'members', 'imports', 'collections']),
+    what: z.enum([
+      'targets',
+      'searches',
+      'shortlists',
+      'verdicts',
+      'members',
+      'imports',
+      'collections',
+      'external-tables',
+    ]),
   }),
   z.object({ kind: z.literal('closed'), reason: z.enum(['signed-out', 'role-lost', 'shutting-down']) }),
 ])

@@ -16,6 +16,15 @@ export const ruleIssueSchema = z.object({
     .optional(),
 })
 
+/** A mistake in a table, with its place: line, and number of the cell in it, from 1. */
+export const placedProblemSchema = z.object({
+  line: z.number().int(),
+  column: z.number().int(),
+  code: z.string(),
+  message: z.string(),
+})
+export type PlacedProblem = z.infer<typeof placedProblemSchema>
+
 /** Body of every error answer (application/problem+json, RFC 9457, with a stable `code`). */
 export const problemSchema = z.object({
   type: z.string(),
@@ -26,5 +35,6 @@ export const problemSchema = z.object({
   path: z.string().optional(),
   found: z.unknown().optional(),
   issues: z.array(ruleIssueSchema).optional(),
+  places: z.array(placedProblemSchema).optional(),
 })
 export type Problem = z.infer<typeof problemSchema>

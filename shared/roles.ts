@@ -18,6 +18,8 @@ export const permissions = {
   'shortlists.edit': ['lead', 'investigator'],
   'verdicts.give': ['lead', 'investigator', 'reviewer'],
   'certificates.run': ['lead', 'investigator', 'reviewer'],
+  /** Tables of external columns: brought along, replaced, removed. */
+  'external.edit': ['lead', 'investigator', 'reviewer'],
   'exports.read': ['lead', 'investigator', 'reviewer', 'reader'],
 } as const satisfies Record<string, readonly Role[]>
 

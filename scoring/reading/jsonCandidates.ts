@@ -16,6 +16,7 @@ const schemas = {
   'tessellary.evaluation/1': 'evaluation',
   'tessellary.search/1': 'search',
   'tessellary.shortlist/1': 'shortlist',
+  'tessellary.shortlist/2': 'shortlist',
   'tessellary.certificate/1': 'certificate',
 } as const
 type SchemaName = keyof typeof schemas
@@ -98,6 +99,7 @@ class Reader {
         this.searchLine(at, value as { kind?: unknown })
         break
       case 'tessellary.shortlist/1':
+      case 'tessellary.shortlist/2':
         this.shortlist(at)
         break
       case 'tessellary.certificate/1': {

@@ -13,12 +13,15 @@ import { ExploredCandidate } from './exploredCandidate.ts'
 import { ExploredCells } from './exploredCells.ts'
 import { ExploredColumn } from './exploredColumn.ts'
 import { ExploredSample } from './exploredSample.ts'
+import { ExternalRow } from './externalRow.ts'
+import { ExternalTable } from './externalTable.ts'
 import { Find } from './find.ts'
 import { ImportedCandidate } from './importedCandidate.ts'
 import { LibraryFile } from './libraryFile.ts'
 import { Membership } from './membership.ts'
 import { NullSample } from './nullSample.ts'
 import { PolytopeRecord } from './polytope.ts'
+import { Rescoring } from './rescoring.ts'
 import { Search } from './search.ts'
 import { SearchEvent } from './searchEvent.ts'
 import { SearchIsland } from './searchIsland.ts'
@@ -47,12 +50,15 @@ export const entities = [
   ExploredCells,
   ExploredColumn,
   ExploredSample,
+  ExternalRow,
+  ExternalTable,
   Find,
   ImportedCandidate,
   LibraryFile,
   Membership,
   NullSample,
   PolytopeRecord,
+  Rescoring,
   Search,
   SearchEvent,
   SearchIsland,

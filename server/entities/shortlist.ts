@@ -1,4 +1,5 @@
 import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryColumn, type Relation } from 'typeorm'
+import type { ShortlistProvenance } from '../../shared/shortlists.ts'
 import { Account } from './account.ts'
 import { Campaign } from './campaign.ts'
 import { TargetVersion } from './targetVersion.ts'
@@ -40,6 +41,10 @@ export class Shortlist {
 
   @Column({ type: 'varchar' })
   engineVersion!: string
+
+  /** What it was made from, as it was then; null for lists made before it was kept. */
+  @Column({ type: 'simple-json', nullable: true })
+  provenance!: ShortlistProvenance | null
 
   @Column({ type: 'varchar' })
   authorId!: string

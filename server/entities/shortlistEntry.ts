@@ -36,4 +36,15 @@ export class ShortlistEntry {
 
   @Column({ type: 'simple-json' })
   outcome!: OutcomeView
+
+  /** Number of its Pareto front; null where the list is ranked by score. */
+  @Column({ type: 'integer', nullable: true })
+  front!: number | null
+
+  /** Its place in the list that was scored anew, and what it was worth there. */
+  @Column({ type: 'integer', nullable: true })
+  previousRank!: number | null
+
+  @Column({ type: 'simple-json', nullable: true })
+  previousOutcome!: OutcomeView | null
 }

@@ -27,7 +27,7 @@ export const answerProblem: ErrorRequestHandler = (error, request, response, nex
 
 /** Writes the problem document (RFC 9457). */
 export function sendProblem(response: Response, refusal: Refusal): void {
-  const { path, found, issues } = refusal.details
+  const { path, found, issues, places } = refusal.details
   const problem: Problem = {
     type: `urn:tessellary:problem:${refusal.code}`,
     title: STATUS_CODES[refusal.status] ?? 'Error',
@@ -37,6 +37,7 @@ export function sendProblem(response: Response, refusal: Refusal): void {
     ...(path === undefined ? {} : { path }),
     ...(found === undefined ? {} : { found }),
     ...(issues === undefined ? {} : { issues: [...issues] }),
+    ...(places === undefined ? {} : { places: [...places] }),
   }
   response.status(refusal.status).type('application/problem+json').send(JSON.stringify(problem))
 }

@@ -11,6 +11,7 @@ import { InvariantsFiller } from './invariantsFiller.ts'
 import type { JobParts } from './jobParts.ts'
 import { NullSampler } from './nullSampler.ts'
 import { Previews } from './previews.ts'
+import { RescoringRunner } from './rescoringRunner.ts'
 import { Scheduler } from './scheduler.ts'
 import { SearchRunner } from './searchRunner.ts'
 
@@ -23,6 +24,7 @@ export interface Jobs {
   readonly unhurried: ComputePool
   readonly searches: SearchRunner
   readonly certifications: CertificationRunner
+  readonly rescorings: RescoringRunner
   readonly previews: Previews
   /** Observables over samples. */
   readonly explorations: Explorations
@@ -76,6 +78,7 @@ export function openJobs(
   const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
   const certifications = new CertificationRunner(all)
   const explorations = new Explorations(all)
+  const rescorings = new RescoringRunner(all)
   const searches = new SearchRunner(all, new NullSampler(all, options.nullSize))
   return {
     scheduler,
@@ -84,6 +87,7 @@ export function openJobs(
     unhurried,
     searches,
     certifications,
+    rescorings,
     previews: new Previews(all),
     explorations,
     invariants: new InvariantsFiller(all),
@@ -99,6 +103,7 @@ export function openJobs(
       searches.stop()
       certifications.stop()
       explorations.stopAll()
+      rescorings.stop()
       await Promise.all([background.close(), interactive.close(), unhurried.close()])
     },
   }

@@ -1,3 +1,4 @@
+import type { assembleShortlist } from './compute/assembleShortlist.ts'
 import type { candidateGeometry, candidateSpectra } from './compute/candidateGeometry.ts'
 import type { certifyCandidate } from './compute/certifyCandidate.ts'
 import type { classPictures } from './compute/classPictures.ts'
@@ -25,6 +26,7 @@ export interface Tasks {
   'candidates-of-text': typeof candidatesOfText
   'place-candidates': typeof placeCandidates
   'score-candidates': typeof scoreCandidates
+  'assemble-shortlist': typeof assembleShortlist
   'weight-lines': typeof weightLinesOfText
   'facts-of-weight-lines': typeof factsOfWeightLines
   'polytope-shape': typeof polytopeShape

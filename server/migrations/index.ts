@@ -6,6 +6,8 @@ import { RigidAndFibres1796200200002 } from './1796200200002-rigidAndFibres.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 import { CandidateInvariants1796200400000 } from './1796200400000-candidateInvariants.ts'
 import { SearchEvents1796300200000 } from './1796300200000-searchEvents.ts'
+import { ShortlistAssembly1796300300000 } from './1796300300000-shortlistAssembly.ts'
+import { ExternalTables1796300300001 } from './1796300300001-externalTables.ts'
 import { SampledEvaluations1796300400000 } from './1796300400000-sampledEvaluations.ts'
 import { Explorations1796300400001 } from './1796300400001-explorations.ts'
 
@@ -19,6 +21,8 @@ export const migrations = [
   ImportedCandidates1796200300000,
   CandidateInvariants1796200400000,
   SearchEvents1796300200000,
+  ShortlistAssembly1796300300000,
+  ExternalTables1796300300001,
   SampledEvaluations1796300400000,
   Explorations1796300400001,
 ]

@@ -14,6 +14,9 @@ export const conventions = [
 const heightsConvention =
   'Vertices are in normal-form coordinates; heights refer to the points of the polytope in normal form, in the order of its page.'
 
+const externalConvention =
+  'External columns were brought along by people; neither rules nor searches can read them.'
+
 /** Units of the fixed columns; report columns carry the unit of their expression in the rule. */
 const units = {
   rank: '1 is the best',
@@ -29,6 +32,11 @@ const units = {
   reviewer: 'text',
   reason: 'text',
   certificate: 'passed, failed, waiting or none, of this scoring by the independent road',
+  verdictVersion: 'version of the target for which the verdict was given',
+  front: 'number of the Pareto front, or empty',
+  previousRank: 'in the list that was scored anew, or empty',
+  rankChange: 'places gained by the new scoring, or empty',
+  previousScore: 'by the rule of the list that was scored anew, or empty',
 }
 
 type FixedColumn = keyof typeof units
@@ -55,10 +63,10 @@ export function shortlistDocument(
   version: string,
 ): object {
   return {
-    schema: 'tessellary.shortlist/1',
+    schema: 'tessellary.shortlist/2',
     software: { name: 'Tessellary', version, engine: shortlist.engineVersion },
     caution,
-    conventions: [...conventions, heightsConvention],
+    conventions: [...conventions, heightsConvention, externalConvention],
     units,
     shortlist,
     candidates,
@@ -68,31 +76,87 @@ export function shortlistDocument(
 /** Comma-separated values (RFC 4180), introduced by comment lines that begin with "#". */
 export function shortlistTable(shortlist: ShortlistDetail): string {
   const remarks = [
-    'Tessellary shortlist, schema tessellary.shortlist-table/1',
+    'Tessellary shortlist, schema tessellary.shortlist-table/2',
     caution,
     ...conventions,
     `Shortlist: ${shortlist.name}; target: ${shortlist.targetName}, version ${shortlist.targetVersion}`,
-    `Searches: ${shortlist.searches.map(({ name, seed }) => `${name} (seed ${seed})`).join('; ')}`,
+    ...provenanceRemarks(shortlist),
     `Scoring hash: ${shortlist.scoringHash}; engine: ${shortlist.engineVersion}`,
     `Units: ${Object.entries(units)
       .map(([column, unit]) => `${column}: ${unit}`)
       .join('; ')}; report columns: as the rule defines them`,
+    ...externalRemarks(shortlist),
     'Rule:',
     ...shortlist.rule.split(/\r\n|\r|\n/).map((line) => `  ${line}`),
   ]
   const fixed = Object.keys(units) as FixedColumn[]
   const lines = [
     ...remarks.map((remark) => `# ${oneLine(remark)}`),
-    [...fixed, ...shortlist.columns.map((column) => `report: ${column}`)].map(text).join(','),
+    [
+      ...fixed,
+      ...shortlist.columns.map((column) => `report: ${column}`),
+      ...shortlist.external.map(({ name }) => `external: ${name}`),
+    ]
+      .map(text)
+      .join(','),
     ...shortlist.rows.map((row) => {
       const values = fixedValues(row)
       return [
         ...fixed.map((column) => values[column]),
         ...shortlist.columns.map((column) => reportCell(row, column)),
+        ...row.external.map((value) => (typeof value === 'string' ? text(value) : String(value ?? ''))),
       ].join(',')
     }),
   ]
   return lines.join('\r\n') + '\r\n'
+}
+
+/** What the list was made from, in words; lists of before name their searches only. */
+function provenanceRemarks({ provenance, searches }: ShortlistDetail): string[] {
+  if (provenance === null) {
+    return [`Searches: ${searches.map(({ name, seed }) => `${name} (seed ${seed})`).join('; ')}`]
+  }
+  const { assembly, counts, from } = provenance
+  const { pareto, perPolytope, apart, perInvariants, feasibleOnly } = assembly
+  const limits = [
+    `at most ${assembly.size}`,
+    ...(feasibleOnly ? ['feasible only'] : []),
+    ...(perPolytope === null ? [] : [`at most ${perPolytope} of a polytope`]),
+    ...(perInvariants === null ? [] : [`at most ${perInvariants} of equal invariants`]),
+    ...(apart === null ? [] : [`at least ${apart} triangles apart on a polytope`]),
+  ]
+  const order = pareto
+    ? `by Pareto fronts of ${pareto.map(({ column, direction }) => `${direction} ${column}`).join(', ')}`
+    : 'by score'
+  const left = Object.entries(counts.leftOut).filter(([, count]) => count > 0)
+  return [
+    ...provenance.searches.map(
+      (one) =>
+        `Search: ${one.name}; ${one.method}, seed ${one.seed}, ${one.evaluations} evaluations over ${one.polytopes} polytopes; target ${one.targetName}, version ${one.targetVersion}; scoring hash ${one.scoringHash}; engine ${one.engineVersion}; ${
+          one.null === null
+            ? 'no null sample yet'
+            : `null sample of ${one.null.evaluated}, seed ${one.null.seed}, ${one.null.law}`
+        }`,
+    ),
+    ...(from
+      ? [
+          `Scored anew from: ${from.name} (${from.size} candidates; ${from.targetName}, version ${from.targetVersion}; scoring hash ${from.scoringHash})`,
+        ]
+      : []),
+    `Drawn from ${counts.distinct} distinct candidates of ${counts.finds} finds, ranked ${order}: ${limits.join(', ')}; left out: ${
+      left.map(([why, count]) => `${count} ${why}`).join(', ') || 'none'
+    }`,
+  ]
+}
+
+function externalRemarks({ external }: ShortlistDetail): string[] {
+  if (external.length === 0) return []
+  return [
+    externalConvention,
+    `External columns: ${external
+      .map(({ name, tableName, author, createdAt }) => `${name} from ${tableName} (${author}, ${createdAt})`)
+      .join('; ')}`,
+  ]
 }
 
 function fixedValues({ outcome, verdict, ...row }: ShortlistRow): Record<FixedColumn, string> {
@@ -111,6 +175,11 @@ function fixedValues({ outcome, verdict, ...row }: ShortlistRow): Record<FixedCo
     reviewer: text(verdict?.author ?? ''),
     reason: text(verdict?.reason ?? ''),
     certificate: row.certificate.state,
+    verdictVersion: verdict === null ? '' : String(verdict.targetVersion),
+    front: String(row.front ?? ''),
+    previousRank: String(row.previous?.rank ?? ''),
+    rankChange: row.previous === null ? '' : String(row.previous.rank - row.rank),
+    previousScore: String(row.previous?.score ?? ''),
   }
 }
 

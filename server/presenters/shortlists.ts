@@ -4,6 +4,7 @@ import type { Search } from '../entities/search.ts'
 import type { Shortlist } from '../entities/shortlist.ts'
 import type { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import type { Verdict } from '../entities/verdict.ts'
+import type { ExternalContents } from '../services/externalTables.ts'
 import { presentVerdict } from './verdicts.ts'
 
 export interface Tally {
@@ -33,7 +34,9 @@ export function presentShortlistSummary(shortlist: Shortlist, tally: Tally): Sho
 
 export interface ShortlistContents {
   readonly tally: Tally
-  readonly searches: readonly Search[]
+  readonly searches: readonly Pick<Search, 'id' | 'name' | 'seed'>[]
+  /** Lists made from it by scoring it anew. */
+  readonly rescored: ShortlistDetail['rescored']
   /** By rank, with candidate and polytope loaded. */
   readonly entries: readonly ShortlistEntry[]
   /** The latest verdict per candidate key. */
@@ -41,6 +44,7 @@ export interface ShortlistContents {
   readonly certificateOf: (candidateKey: string) => CertificateMark
   /** The campaign's own names of its imports, by polytope key. */
   readonly names: ReadonlyMap<string, string>
+  readonly external: ExternalContents
 }
 
 export function presentShortlist(shortlist: Shortlist, contents: ShortlistContents): ShortlistDetail {
@@ -51,19 +55,24 @@ export function presentShortlist(shortlist: Shortlist, contents: ShortlistConten
     engineVersion: shortlist.engineVersion,
     columns: shortlist.columns,
     searches: contents.searches.map(({ id, name, seed }) => ({ id, name, seed })),
+    provenance: shortlist.provenance,
+    rescored: contents.rescored,
+    external: [...contents.external.columns],
     rows: contents.entries.map((entry) => presentEntry(entry, contents)),
   }
 }
 
 function presentEntry(
   entry: ShortlistEntry,
-  { verdicts, certificateOf, names }: ShortlistContents,
+  { verdicts, certificateOf, names, external }: ShortlistContents,
 ): ShortlistRow {
   const polytope = entry.candidate?.polytope
   if (!polytope) throw new Error('A shortlist entry was presented without its polytope.')
   const verdict = verdicts.get(entry.candidateKey)
   return {
     rank: entry.rank,
+    front: entry.front,
+    previous: presentPrevious(entry),
     candidateKey: entry.candidateKey,
     polytopeKey: polytope.key,
     polytopeName: names.get(polytope.key) ?? polytope.name,
@@ -73,5 +82,12 @@ function presentEntry(
     searchId: entry.searchId,
     certificate: certificateOf(entry.candidateKey),
     verdict: verdict ? presentVerdict(verdict) : null,
+    external: external.valuesOf(entry.candidateKey),
   }
+}
+
+function presentPrevious({ previousRank, previousOutcome }: ShortlistEntry): ShortlistRow['previous'] {
+  if (previousRank === null || previousOutcome === null) return null
+  const { kind } = previousOutcome
+  return { rank: previousRank, kind, score: kind === 'feasible' ? previousOutcome.score : null }
 }

@@ -2,7 +2,9 @@ import type { Express } from 'express'
 import { z } from 'zod'
 import {
   createShortlistSchema,
+  draftShortlistSchema,
   shortlistDetailSchema,
+  shortlistDraftSchema,
   shortlistSummarySchema,
 } from '../../shared/shortlists.ts'
 import type { ServerContext } from '../context.ts'
@@ -10,7 +12,13 @@ import { endpoint } from '../http/endpoint.ts'
 import { emptyTally } from '../presenters/campaigns.ts'
 import { fileName, shortlistDocument, shortlistTable } from '../presenters/shortlistExports.ts'
 import { presentShortlistSummary } from '../presenters/shortlists.ts'
-import { createShortlist, exportedCandidates, listShortlists, readShortlist } from '../services/shortlists.ts'
+import {
+  createShortlist,
+  draftShortlist,
+  exportedCandidates,
+  listShortlists,
+  readShortlist,
+} from '../services/shortlists.ts'
 import { tallyShortlists } from '../services/verdicts.ts'
 
 export function shortlistRoutes(app: Express, context: ServerContext): void {
@@ -36,6 +44,20 @@ export function shortlistRoutes(app: Express, context: ServerContext): void {
     answer: shortlistDetailSchema,
     status: 201,
     handle: ({ campaign, account, body }) => createShortlist(context, campaign.id, account.id, body),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/shortlists/draft',
+    access: 'campaign.read',
+    body: draftShortlistSchema,
+    answer: shortlistDraftSchema,
+    handle: ({ campaign, body, response }) => {
+      // Somebody who goes on typing gives the request up, and the work with it.
+      const given = new AbortController()
+      response.once('close', () => given.abort(new Error('The request was given up.')))
+      return draftShortlist(context, campaign.id, body, given.signal)
+    },
   })
 
   endpoint(app, context, {

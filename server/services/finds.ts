@@ -6,14 +6,6 @@ import { Find } from '../entities/find.ts'
 import type { Search } from '../entities/search.ts'
 import type { HitLine } from '../jobs/searchProgress.ts'
 
-/** A find with its value; `candidate` and its polytope are loaded. */
-export interface RankedFind {
-  readonly searchId: string
-  readonly candidateKey: string
-  readonly outcome: OutcomeView
-  readonly find: Find
-}
-
 /** The order of candidates of the scoring language: negative when a is better. */
 export function compareCandidates(
   a: { readonly candidateKey: string; readonly outcome: OutcomeView },
@@ -23,33 +15,11 @@ export function compareCandidates(
 }
 
 /** What the order looks at; reports and labels play no part in it. */
-function comparable(outcome: OutcomeView): Outcome {
+export function comparable(outcome: OutcomeView): Outcome {
   if (outcome.kind === 'feasible') return { ...outcome, report: {} }
   if (outcome.kind === 'infeasible')
     return { ...outcome, stage: outcome.stage as Infeasible['stage'], failed: [] }
   return { ...outcome, stage: outcome.stage as Infeasible['stage'] }
-}
-
-/** The distinct finds of searches with one scoring hash, best first; of equal finds the earlier search's. */
-export async function rankedFinds(
-  manager: EntityManager,
-  searches: readonly Search[],
-): Promise<RankedFind[]> {
-  const order = new Map(searches.map(({ id }, place) => [id, place]))
-  const finds = await manager.find(Find, {
-    where: { searchId: In([...order.keys()]) },
-    relations: { candidate: { polytope: true } },
-  })
-  finds.sort((a, b) => (order.get(a.searchId) ?? 0) - (order.get(b.searchId) ?? 0) || a.rank - b.rank)
-  const distinct = new Map<string, Find>()
-  for (const find of finds) if (!distinct.has(find.candidateKey)) distinct.set(find.candidateKey, find)
-  const outcomes = await outcomesOf(manager, searches[0].scoringHash, [...distinct.keys()])
-  return [...distinct.values()]
-    .flatMap((find) => {
-      const outcome = outcomes.get(find.candidateKey)
-      return outcome ? [{ searchId: find.searchId, candidateKey: find.candidateKey, outcome, find }] : []
-    })
-    .sort(compareCandidates)
 }
 
 /** The best finds of one search so far. */

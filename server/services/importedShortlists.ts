@@ -1,16 +1,15 @@
-import { randomUUID } from 'node:crypto'
 import { In } from 'typeorm'
 import type { z } from 'zod'
+import { assemblySchema } from '../../shared/assemblies.ts'
 import type { shortlistImportedSchema } from '../../shared/importedCandidates.ts'
 import type { ShortlistDetail } from '../../shared/shortlists.ts'
 import type { ServerContext } from '../context.ts'
 import { ImportedCandidate } from '../entities/importedCandidate.ts'
-import { Shortlist } from '../entities/shortlist.ts'
-import { ShortlistEntry } from '../entities/shortlistEntry.ts'
 import { unprocessable } from '../problems.ts'
+import { drawList, type ScoredEntrant } from './assemblies.ts'
 import { scoresOf } from './candidateScores.ts'
-import { compareCandidates } from './finds.ts'
 import { reportColumns, requireSoundRule } from './rules.ts'
+import { insertShortlist } from './shortlistCommits.ts'
 import { readShortlist } from './shortlists.ts'
 import { readVersion } from './targets.ts'
 
@@ -21,7 +20,7 @@ export async function shortlistImported(
   authorId: string,
   input: z.infer<typeof shortlistImportedSchema>,
 ): Promise<ShortlistDetail> {
-  const { source, writes, streams } = context
+  const { source, writes, streams, jobs } = context
   const version = await readVersion(source.manager, campaignId, input.targetVersionId)
   const { scoringHash, engineVersion } = requireSoundRule(version.text, 'targetVersionId')
   const wanted = input.candidateKeys && [...new Set(input.candidateKeys)]
@@ -41,35 +40,30 @@ export async function shortlistImported(
   }
   const candidates = rows.flatMap(({ candidate }) => (candidate ? [candidate] : []))
   const outcomes = await scoresOf(context, version.text, scoringHash, candidates)
-  const ranked = [...outcomes]
-    .map(([candidateKey, outcome]) => ({ candidateKey, outcome }))
-    .sort(compareCandidates)
-    .slice(0, input.size)
-  const id = randomUUID()
-  await writes.transaction(async (manager) => {
-    await manager.insert(Shortlist, {
-      id,
+  const entrants = candidates.flatMap(({ key, polytopeKey }): ScoredEntrant[] => {
+    const outcome = outcomes.get(key)
+    return outcome ? [{ candidateKey: key, polytopeKey, searchId: null, outcome }] : []
+  })
+  const assembly = assemblySchema.parse({ size: input.size })
+  const { chosen, counts } = await drawList(
+    { manager: source.manager, pool: jobs.unhurried },
+    { finds: entrants.length, broken: 0, entrants },
+    assembly,
+    reportColumns(version.text),
+  )
+  const id = await writes.transaction((manager) =>
+    insertShortlist(manager, {
       campaignId,
-      targetVersionId: version.id,
+      authorId,
       name: input.name,
-      searchIds: [],
-      columns: reportColumns(version.text),
+      version,
       scoringHash,
       engineVersion,
-      authorId,
-      createdAt: new Date().toISOString(),
-    })
-    await manager.insert(
-      ShortlistEntry,
-      ranked.map(({ candidateKey, outcome }, place) => ({
-        shortlistId: id,
-        rank: place + 1,
-        candidateKey,
-        searchId: null,
-        outcome,
-      })),
-    )
-  })
+      searches: [],
+      chosen,
+      provenance: { assembly, counts, searches: [], from: null },
+    }),
+  )
   streams.toCampaign(campaignId, { kind: 'changed', what: 'shortlists' })
   return readShortlist(source.manager, campaignId, id)
 }

@@ -9,6 +9,7 @@ import { type Certification } from '../../shared/certificates.ts'
 import { type ShortlistDetail } from '../../shared/shortlists.ts'
 import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
 import { withCertification } from './certificates.ts'
+import { placeRescoring } from './rescorings.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
 import { previewKey } from './previews.ts'
 import { apiUrl } from './request.ts'
@@ -28,6 +29,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       return
     case 'certification':
       return applyCertification(client, campaign, event)
+    case 'rescoring':
+      return placeRescoring(client, campaign, event.rescoring)
     case 'library':
       return applyLibrary(client, event)
     case 'class-count':
@@ -43,9 +46,11 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
         members: ['campaigns'],
         imports: ['imported-candidates', campaign],
         collections: ['collections'],
+        'external-tables': ['external-tables', campaign],
       } as const
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
+      if (event.what === 'external-tables') void client.invalidateQueries({ queryKey: ['shortlist'] })
       if (event.what === 'verdicts') {
         void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
         void client.invalidateQueries({ queryKey: ['relatives'] })

@@ -2,8 +2,10 @@ import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/r
 import { z } from 'zod'
 import {
   shortlistDetailSchema,
+  shortlistDraftSchema,
   shortlistSummarySchema,
-  type createShortlistSchema,
+  type CreateShortlist,
+  type DraftShortlist,
 } from '../../shared/shortlists.ts'
 import { apiUrl, request } from './request.ts'
 
@@ -21,6 +23,19 @@ export const shortlistQuery = (campaign: string, shortlist: string) =>
       request(`/campaigns/${campaign}/shortlists/${shortlist}`, { schema: shortlistDetailSchema, signal }),
   })
 
+/** What a list of these searches would be. */
+export const draftQuery = (campaign: string, body: DraftShortlist) =>
+  queryOptions({
+    queryKey: ['shortlist-draft', campaign, body] as const,
+    queryFn: ({ signal }) =>
+      request(`/campaigns/${campaign}/shortlists/draft`, {
+        method: 'POST',
+        body,
+        schema: shortlistDraftSchema,
+        signal,
+      }),
+  })
+
 export const useShortlists = (campaign: string) => useQuery(shortlistsQuery(campaign))
 export const useShortlist = (campaign: string, shortlist: string) =>
   useQuery(shortlistQuery(campaign, shortlist))
@@ -28,7 +43,7 @@ export const useShortlist = (campaign: string, shortlist: string) =>
 export function useCreateShortlist(campaign: string) {
   const client = useQueryClient()
   return useMutation({
-    mutationFn: (body: z.infer<typeof createShortlistSchema>) =>
+    mutationFn: (body: CreateShortlist) =>
       request(`/campaigns/${campaign}/shortlists`, { method: 'POST', body, schema: shortlistDetailSchema }),
     onSuccess: (shortlist) => {
       client.setQueryData(shortlistQuery(campaign, shortlist.id).queryKey, shortlist)

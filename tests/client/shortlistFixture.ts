@@ -28,6 +28,9 @@ export function row(rank: number, score: number, more: Partial<ShortlistRow> = {
     h21: 20,
     outcome: { kind: 'feasible', score, hit: score > -5, report: { reach: score, k3: rank % 2 === 0 } },
     rank,
+    front: null,
+    previous: null,
+    external: [],
     searchId: 's1',
     certificate: { state: 'none', id: null },
     verdict: null,
@@ -54,6 +57,9 @@ export function shortlist(rows: ShortlistRow[]): ShortlistDetail {
     engineVersion: '1',
     columns: ['reach', 'k3'],
     searches: [{ id: 's1', name: 'Search 1', seed: 7 }],
+    provenance: null,
+    rescored: [],
+    external: [],
     rows,
   }
 }

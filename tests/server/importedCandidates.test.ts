@@ -252,7 +252,7 @@ describe('a shortlist of imported candidates', () => {
       .send({ text })
       .expect(201)
     const { imported, problems, format } = body as CandidateImportReport
-    expect([problems, format]).toEqual([[], 'tessellary.shortlist/1, JSON'])
+    expect([problems, format]).toEqual([[], 'tessellary.shortlist/2, JSON'])
     expect(imported.map(({ key }) => key)).toEqual(list.rows.map(({ candidateKey }) => candidateKey))
     expect(imported.every(({ known }) => known === null)).toBe(true)
   })

@@ -7,7 +7,7 @@ import { CertificateRecord } from '../../server/entities/certificate.ts'
 import { Certification } from '../../server/entities/certification.ts'
 import { CertificationTask } from '../../server/entities/certificationTask.ts'
 import { Search } from '../../server/entities/search.ts'
-import { rankedFinds } from '../../server/services/finds.ts'
+import { topFinds } from '../../server/services/finds.ts'
 import { startProcess, startServerProcess } from './support/serverProcess.ts'
 
 const budget = 240
@@ -36,7 +36,7 @@ async function result(name: string) {
   const source = await openDataSource(join(folder, name, 'tessellary.sqlite'))
   try {
     const done = await source.manager.findOneByOrFail(Search, {})
-    const finds = await rankedFinds(source.manager, [done])
+    const finds = await topFinds(source.manager, done, search.settings.keep)
     return {
       state: done.state,
       // The pace is of the clock; all else is of the search.

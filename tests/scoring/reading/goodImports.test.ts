@@ -238,32 +238,35 @@ describe('several candidates', () => {
     expect(keyOf(candidates[0])).toBe(classKey)
   })
 
-  it('come from the export of a shortlist: complete where it carries them, by their addresses elsewhere', () => {
-    const placed = placeCandidate(readCandidates(JSON.stringify(evaluated)).candidates[0]).placed
-    if (!placed) throw new Error('not placed')
-    const { polytope, key: polytopeKey } = placed.form
-    const { candidateKey, heights } = placed
-    const vertices = Array.from({ length: polytope.vertexCount }, (_, v) => [
-      ...polytope.points.subarray(4 * v, 4 * v + 4),
-    ])
-    const rowsOfList = [
-      { rank: 1, candidateKey, polytopeKey },
-      { rank: 2, candidateKey: '0'.repeat(32), polytopeKey },
-    ]
-    const document = {
-      schema: 'tessellary.shortlist/1',
-      shortlist: { name: 'Best', rows: rowsOfList },
-      candidates: [{ candidateKey, polytopeKey, vertices, heights }],
-    }
-    const { candidates } = readCandidates(JSON.stringify(document, null, 1))
-    expect(candidates.map(({ name, triangulation }) => [name, triangulation.kind])).toEqual([
-      ['Best, rank 1', 'heights'],
-      ['Best, rank 2', 'address'],
-    ])
-    expect(keyOf(candidates[0])).toBe(candidateKey)
-    const table = readCandidates(`# remark\nrank,candidate,polytope\n1,${'0'.repeat(32)},${polytopeKey}\n`)
-    expect(table.candidates.map(({ claims }) => claims.candidateKey)).toEqual(['0'.repeat(32)])
-  })
+  it.each([1, 2])(
+    'come from the export of a shortlist (schema %i): complete or by their addresses',
+    (version) => {
+      const placed = placeCandidate(readCandidates(JSON.stringify(evaluated)).candidates[0]).placed
+      if (!placed) throw new Error('not placed')
+      const { polytope, key: polytopeKey } = placed.form
+      const { candidateKey, heights } = placed
+      const vertices = Array.from({ length: polytope.vertexCount }, (_, v) => [
+        ...polytope.points.subarray(4 * v, 4 * v + 4),
+      ])
+      const rowsOfList = [
+        { rank: 1, candidateKey, polytopeKey },
+        { rank: 2, candidateKey: '0'.repeat(32), polytopeKey },
+      ]
+      const document = {
+        schema: `tessellary.shortlist/${version}`,
+        shortlist: { name: 'Best', rows: rowsOfList },
+        candidates: [{ candidateKey, polytopeKey, vertices, heights }],
+      }
+      const { candidates } = readCandidates(JSON.stringify(document, null, 1))
+      expect(candidates.map(({ name, triangulation }) => [name, triangulation.kind])).toEqual([
+        ['Best, rank 1', 'heights'],
+        ['Best, rank 2', 'address'],
+      ])
+      expect(keyOf(candidates[0])).toBe(candidateKey)
+      const table = readCandidates(`# remark\nrank,candidate,polytope\n1,${'0'.repeat(32)},${polytopeKey}\n`)
+      expect(table.candidates.map(({ claims }) => claims.candidateKey)).toEqual(['0'.repeat(32)])
+    },
+  )
 
   it('nothing else is taken for data: such lines are listed', () => {
     const { candidates, skipped, problems } = readCandidates(

@@ -151,7 +151,7 @@ describe('a shortlist', () => {
     const lines = table.text.trimEnd().split('\r\n')
     const remarks = lines.filter((line) => line.startsWith('#'))
     expect(remarks).toContain(`# ${caution}`)
-    expect(remarks.join('\n')).toMatch(/schema tessellary\.shortlist-table\/1/)
+    expect(remarks.join('\n')).toMatch(/schema tessellary\.shortlist-table\/2/)
     expect(remarks.join('\n')).toMatch(/Units: .*h11: count/)
     expect(remarks.join('\n')).toMatch(/score log10\(metric\.divisor\.top\)/)
     const rows = lines.slice(remarks.length)
@@ -160,7 +160,7 @@ describe('a shortlist', () => {
     expect(rows[1].split(',').slice(0, 2)).toEqual(['1', shortlist.rows[0].candidateKey])
     const document = await hunt.lead.get(hunt.path(`/shortlists/${shortlist.id}/export.json`)).expect(200)
     expect(document.body).toMatchObject({
-      schema: 'tessellary.shortlist/1',
+      schema: 'tessellary.shortlist/2',
       caution,
       units: { h11: 'count' },
     })

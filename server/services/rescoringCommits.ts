@@ -1,0 +1,144 @@
+import { In, type EntityManager } from 'typeorm'
+import type { OutcomeView } from '../../shared/outcomes.ts'
+import type { ShortlistProvenance } from '../../shared/shortlists.ts'
+import { CandidateValue } from '../entities/candidateValue.ts'
+import { Rescoring } from '../entities/rescoring.ts'
+import { Search } from '../entities/search.ts'
+import { Shortlist } from '../entities/shortlist.ts'
+import type { TargetVersion } from '../entities/targetVersion.ts'
+import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
+import type { DrawnList, Entrant } from './assemblies.ts'
+import { insertShortlist } from './shortlistCommits.ts'
+import { frozenSearches } from './shortlistGround.ts'
+
+const open = In(['queued', 'running'])
+
+/** Takes a queued or abandoned request for this process; false when it was cancelled meanwhile. */
+export async function takeRescoring(manager: EntityManager, id: string): Promise<boolean> {
+  const { affected } = await manager.update(
+    Rescoring,
+    { id, state: open },
+    { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
+  )
+  return affected !== 0
+}
+
+/** Stores values; false when the request has been cancelled: the values are kept all the same. */
+export async function commitValues(
+  manager: EntityManager,
+  id: string,
+  scoringHash: string,
+  outcomes: readonly { readonly candidateKey: string; readonly outcome: OutcomeView }[],
+): Promise<boolean> {
+  if (outcomes.length > 0) {
+    await manager.upsert(
+      CandidateValue,
+      outcomes.map(({ candidateKey, outcome }) => ({ candidateKey, scoringHash, outcome })),
+      ['candidateKey', 'scoringHash'],
+    )
+  }
+  return takeRescoring(manager, id)
+}
+
+export async function failRescoring(manager: EntityManager, id: string, failure: string): Promise<void> {
+  await manager.update(
+    Rescoring,
+    { id, state: open },
+    { state: 'failed', failure, leaseOwner: null, leaseUntil: null, finishedAt: new Date().toISOString() },
+  )
+}
+
+/** Places of a list, best first. */
+export async function entriesOf(
+  manager: EntityManager,
+  shortlistId: string,
+): Promise<(Entrant & { readonly rank: number; readonly outcome: OutcomeView })[]> {
+  const rows = await manager.query<(Entrant & { rank: number; outcome: string })[]>(
+    `SELECT e.candidateKey AS candidateKey, c.polytopeKey AS polytopeKey, e.searchId AS searchId,
+       e.rank AS rank, e.outcome AS outcome
+     FROM shortlist_entry e JOIN candidate c ON c."key" = e.candidateKey
+     WHERE e.shortlistId = ? ORDER BY e.rank`,
+    [shortlistId],
+  )
+  return rows.map((row) => ({ ...row, outcome: JSON.parse(row.outcome) as OutcomeView }))
+}
+
+/** Where the candidates of a request come from. */
+interface RescoringSource {
+  readonly searches: readonly Search[]
+  readonly from: Shortlist | null
+  /** Places in the list that is scored anew. */
+  readonly previous: ReadonlyMap<string, { readonly rank: number; readonly outcome: OutcomeView }>
+}
+
+async function sourceOf(manager: EntityManager, { origin }: Rescoring): Promise<RescoringSource> {
+  const relations = { targetVersion: { target: true } } as const
+  const searchesOf = async (ids: readonly string[]) => {
+    const searches = await manager.find(Search, { where: { id: In([...ids]) }, relations })
+    return searches.sort((a, b) => ids.indexOf(a.id) - ids.indexOf(b.id))
+  }
+  if ('searchIds' in origin) {
+    return { searches: await searchesOf(origin.searchIds), from: null, previous: new Map() }
+  }
+  const from = await manager.findOneOrFail(Shortlist, { where: { id: origin.shortlistId }, relations })
+  const entries = await entriesOf(manager, from.id)
+  return {
+    searches: await searchesOf(from.searchIds),
+    from,
+    previous: new Map(entries.map(({ candidateKey, rank, outcome }) => [candidateKey, { rank, outcome }])),
+  }
+}
+
+/** Stores the list and ends the request, all or nothing; null when it was cancelled meanwhile. */
+export async function commitRescoring(
+  manager: EntityManager,
+  rescoring: Rescoring,
+  scoring: { readonly version: TargetVersion; readonly scoringHash: string; readonly engineVersion: string },
+  { chosen, counts }: DrawnList,
+): Promise<string | null> {
+  if (!(await takeRescoring(manager, rescoring.id))) return null
+  const { searches, from, previous } = await sourceOf(manager, rescoring)
+  const shortlistId = await insertShortlist(manager, {
+    campaignId: rescoring.campaignId,
+    authorId: rescoring.authorId,
+    name: rescoring.name,
+    ...scoring,
+    searches,
+    chosen,
+    provenance: {
+      assembly: rescoring.assembly,
+      counts,
+      searches: await frozenSearches(manager, searches, scoring.scoringHash),
+      from: from && frozenList(from, previous.size),
+    },
+    previous,
+  })
+  await manager.update(
+    Rescoring,
+    { id: rescoring.id },
+    {
+      state: 'finished',
+      shortlistId,
+      broken: counts.leftOut.broken,
+      leaseOwner: null,
+      leaseUntil: null,
+      finishedAt: new Date().toISOString(),
+    },
+  )
+  return shortlistId
+}
+
+/** @param list with target version and target loaded */
+function frozenList(list: Shortlist, size: number): ShortlistProvenance['from'] {
+  const { id, name, targetVersion, scoringHash, engineVersion } = list
+  return {
+    id,
+    name,
+    targetName: targetVersion?.target?.name ?? '',
+    targetVersion: targetVersion?.number ?? 0,
+    scoringHash,
+    engineVersion,
+    rule: targetVersion?.text ?? '',
+    size,
+  }
+}
