@@ -45,6 +45,10 @@ const signedIn: RouteObject[] = [
     lazy: page(async () => (await import('./routes/shortlists/ShortlistsPage.tsx')).ShortlistsPage),
   },
   {
+    path: 'campaigns/:campaignId/shortlists/new',
+    lazy: page(async () => (await import('./routes/shortlists/new/NewShortlistPage.tsx')).NewShortlistPage),
+  },
+  {
     path: 'campaigns/:campaignId/shortlists/:shortlistId',
     lazy: page(async () => (await import('./routes/shortlist/ShortlistPage.tsx')).ShortlistPage),
   },

@@ -6,10 +6,10 @@ import { request } from './request.ts'
 
 export type GiveVerdict = z.infer<typeof giveVerdictSchema> & { key: string }
 
-/** Puts a verdict into every shortlist of this target version that is in the cache, with its counts. */
-export function placeVerdict(client: QueryClient, key: string, versionId: string, verdict: Verdict): void {
+/** Puts a verdict into every shortlist of its target that is in the cache, with its counts. */
+export function placeVerdict(client: QueryClient, key: string, verdict: Verdict): void {
   client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
-    if (!list || list.targetVersionId !== versionId) return list
+    if (!list || list.targetId !== verdict.targetId) return list
     const rows = list.rows.map((row) => (row.candidateKey === key ? { ...row, verdict } : row))
     const count = (value: string) =>
       rows.filter((row) => (row.verdict?.value ?? 'undecided') === value).length
@@ -32,8 +32,8 @@ export function useGiveVerdict(campaign: string) {
         body,
         schema: verdictSchema,
       }),
-    onSuccess: (verdict, { key, targetVersionId }) => {
-      placeVerdict(client, key, targetVersionId, verdict)
+    onSuccess: (verdict, { key }) => {
+      placeVerdict(client, key, verdict)
       void client.invalidateQueries({ queryKey: ['candidate-record', campaign, key] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
       void client.invalidateQueries({ queryKey: ['shortlists', campaign] })

@@ -31,6 +31,7 @@ const pages = [
   'new-search',
   'search',
   'shortlists',
+  'new-shortlist',
   'shortlist',
   'candidate',
   'reference',
@@ -79,6 +80,7 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
       .set('new-search', `${base}/searches/new?target=${search.targetId}`)
       .set('search', `${base}/searches/${search.id}`)
       .set('shortlists', `${base}/shortlists`)
+      .set('new-shortlist', `${base}/shortlists/new?search=${search.id}`)
       .set('shortlist', `${base}/shortlists/${shortlist.id}`)
       .set('candidate', `/candidates/${rows[0].candidateKey}?campaign=${campaign}&shortlist=${shortlist.id}`)
       .set('reference', '/reference')

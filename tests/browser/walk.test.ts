@@ -170,9 +170,12 @@ describe.skipIf(chromiumPath === null)(
     })
 
     it('makes a shortlist and decides with one key', async () => {
-      await page.getByRole('button', { name: 'Make a shortlist' }).click()
-      await page.getByRole('dialog').getByLabel('Name').fill('First look')
-      await page.getByRole('button', { name: 'Make the shortlist' }).click()
+      await page.getByRole('link', { name: 'Make a shortlist' }).click()
+      await page.getByRole('heading', { level: 1, name: 'New shortlist' }).waitFor()
+      await page.getByLabel('Name', { exact: true }).fill('First look')
+      await page.getByRole('table', { name: 'The first of the list' }).waitFor()
+      await shot('6-assembly')
+      await page.getByRole('button', { name: /^Make the shortlist of \d+ candidates$/ }).click()
       await page.getByRole('heading', { level: 1, name: 'First look' }).waitFor()
       const rows = page.getByRole('row')
       await rows.filter({ hasText: 'undecided' }).nth(5).waitFor()

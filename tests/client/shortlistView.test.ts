@@ -1,7 +1,9 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
+import { type ExternalColumn } from '../../shared/externalTables.ts'
+import { conditionWords, listColumns, readConditions } from '../../src/routes/shortlist/listColumns.ts'
 import { nextKey, nextUndecided, readView, visibleRows } from '../../src/routes/shortlist/shortlistView.ts'
-import { key, row, verdict } from './shortlistFixture.ts'
+import { key, row, shortlist, verdict } from './shortlistFixture.ts'
 
 const rows = [
   row(1, -4.5),
@@ -10,7 +12,9 @@ const rows = [
   row(4, -5.6, { polytopeName: 'large-017' }),
 ]
 const view = (address: string) => readView(new URLSearchParams(address))
-const ranks = (address: string) => visibleRows(rows, view(address)).map(({ rank }) => rank)
+const shownOf = (list: ReturnType<typeof shortlist>, address: string) =>
+  visibleRows(list, listColumns(list), view(address)).map(({ rank }) => rank)
+const ranks = (address: string) => shownOf(shortlist(rows), address)
 
 describe('the view of a shortlist', () => {
   it('is read from the address', () => {
@@ -19,9 +23,12 @@ describe('the view of a shortlist', () => {
       certificate: 'all',
       hits: true,
       text: '',
+      conditions: [],
       sort: 'score',
       descending: true,
+      hidden: [],
     })
+    expect(view('hide=picture&hide=external:a,b').hidden).toEqual(['picture', 'external:a,b'])
     expect(view('verdict=splendid').verdict).toBe('all')
   })
 
@@ -36,6 +43,55 @@ describe('the view of a shortlist', () => {
     expect(ranks('sort=score')).toEqual([3, 4, 2, 1])
     expect(ranks('sort=score&order=desc')).toEqual([1, 2, 4, 3])
     expect(ranks('sort=report:k3&order=desc')).toEqual([2, 4, 1, 3])
+  })
+
+  it('filters by ranges of columns; what has no value meets none', () => {
+    expect(ranks('from:score=-5')).toEqual([1, 2])
+    expect(ranks('from:score=-5&to:score=-4.6')).toEqual([2])
+    expect(ranks('to:report:reach=-4.9')).toEqual([2, 4])
+    expect(ranks('from:score=some&to:none=3')).toEqual([1, 2, 3, 4])
+    const conditions = readConditions(new URLSearchParams('from:score=-5&to:score=3&has:external:note=ab'))
+    expect(conditions.map((one) => conditionWords(one, one.column))).toEqual([
+      '−5 ≤ score ≤ 3',
+      'external:note contains “ab”',
+    ])
+  })
+
+  it('filters and sorts by external columns, numbers and text', () => {
+    const column = (name: string, type: ExternalColumn['type']): ExternalColumn => ({
+      name,
+      type,
+      tableId: 'x1',
+      tableName: 'mass.csv',
+      author: 'Ada Quill',
+      createdAt: '2026-01-02T03:04:05.000Z',
+    })
+    const list = {
+      ...shortlist([
+        row(1, -4.5, { external: [10, 'beta'] }),
+        row(2, -4.6, { external: [9, null] }),
+        row(3, -4.7, { external: [null, 'Alpha'] }),
+      ]),
+      external: [column('mass', 'number'), column('note', 'text')],
+    }
+    expect(shownOf(list, 'sort=external:mass')).toEqual([3, 2, 1])
+    expect(shownOf(list, 'sort=external:note&order=desc')).toEqual([1, 3, 2])
+    expect(shownOf(list, 'from:external:mass=9.5')).toEqual([1])
+    expect(shownOf(list, 'has:external:note=ALPH')).toEqual([3])
+    expect(listColumns(list).map(({ name }) => name)).toContain('external:note')
+  })
+
+  it('sorts by the change of rank, and finds verdicts given for another version', () => {
+    const before = (rank: number) => ({ rank, kind: 'feasible', score: -1 }) as const
+    const list = shortlist([
+      row(1, -4.5, { previous: before(3), verdict: { ...verdict('rejected'), targetVersion: 7 } }),
+      row(2, -4.6, { previous: before(1), verdict: verdict('verified') }),
+      row(3, -4.7, { previous: before(3) }),
+    ])
+    expect(shownOf(list, 'sort=change&order=desc')).toEqual([1, 3, 2])
+    expect(shownOf(list, 'verdict=other-version')).toEqual([1])
+    expect(listColumns(list).map(({ name }) => name)).toContain('change')
+    expect(listColumns(shortlist(rows)).map(({ name }) => name)).not.toContain('change')
   })
 
   it('knows where to go next', () => {

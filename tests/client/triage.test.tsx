@@ -37,6 +37,7 @@ function open(
   const calls = stubApi({
     'GET /campaigns/c1/shortlists/l1': shortlist(rows),
     'GET /campaigns/c1/certifications': [],
+    'GET /campaigns/c1/rescorings': [],
     'POST /campaigns/c1/certifications': ({ body }: Call) =>
       certification((body as { candidateKeys: string[] }).candidateKeys.length),
     ...verdicts,
@@ -138,6 +139,24 @@ describe('triage of a shortlist', () => {
     await user.click(screen.getByRole('button', { name: 'Certify the 3 selected' }))
     expect(sent()[1]?.body).toMatchObject({ candidateKeys: [key(1), key(2), key(3)] })
     expect(await screen.findByRole('button', { name: /Certify all undecided/ })).toBeTruthy()
+  })
+
+  it('says how ranks changed, for which version a verdict was given, and hides columns by the address', async () => {
+    const previous = { rank: 3, kind: 'feasible', score: -4.8 } as const
+    const { router } = open('reviewer', [
+      row(1, -4.5, { previous, verdict: { ...verdict('rejected'), targetVersion: 4 } }),
+      row(2, -4.9, { previous: { ...previous, rank: 1 } }),
+      row(3, -5.2, { previous }),
+    ])
+    const table = await screen.findByRole('table', { name: 'Candidates' })
+    for (const word of ['up 2', 'down 1', 'same', '(given for v4)']) {
+      expect(within(table).getByText(word)).toBeTruthy()
+    }
+    expect(screen.getByRole('option', { name: 'given for another version (1)' })).toBeTruthy()
+    await userEvent.click(screen.getByRole('button', { name: 'Columns' }))
+    await userEvent.click(await screen.findByRole('checkbox', { name: 'change of rank' }))
+    await waitFor(() => expect(within(table).queryByText('up 2')).toBeNull())
+    expect(router.state.location.search).toContain('hide=change')
   })
 
   it('j and k move without deciding', async () => {

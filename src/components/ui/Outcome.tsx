@@ -16,7 +16,10 @@ export function outcomeFormat(outcomes: readonly OutcomeView[]): OutcomeFormat {
     if (outcome.kind !== 'feasible') continue
     scores.push(outcome.score)
     for (const [name, cell] of Object.entries(outcome.report)) {
-      if (typeof cell === 'number') columns.set(name, [...(columns.get(name) ?? []), cell])
+      if (typeof cell !== 'number') continue
+      const values = columns.get(name)
+      if (values) values.push(cell)
+      else columns.set(name, [cell])
     }
   }
   const report = new Map<string, number | null>()

@@ -9,23 +9,28 @@ export function ScoredTable({
   rows,
   campaign,
   ranked,
+  fronts,
 }: {
   label: string
   rows: readonly ScoredRow[]
   campaign: string
   ranked?: boolean
+  /** Number of the Pareto front of each row; null in lists that have none. */
+  fronts?: readonly (number | null)[]
 }) {
   const columns = [
     ...new Set(
       rows.flatMap(({ outcome }) => (outcome.kind === 'feasible' ? Object.keys(outcome.report) : [])),
     ),
   ]
+  const hasFronts = fronts?.some((front) => front !== null) ?? false
   const format = outcomeFormat(rows.map(({ outcome }) => outcome))
   return (
     <Table label={label} fit>
       <thead>
         <tr>
           {ranked && <Th numeric>Rank</Th>}
+          {hasFronts && <Th numeric>Front</Th>}
           <Th>Candidate</Th>
           <Th numeric>h11, h21</Th>
           <Th numeric>Score</Th>
@@ -41,6 +46,7 @@ export function ScoredTable({
         {rows.map((row, index) => (
           <tr key={`${index} ${row.candidateKey}`} className="hover:bg-action-wash">
             {ranked && <Td numeric>{index + 1}</Td>}
+            {hasFronts && <Td numeric>{fronts?.[index]}</Td>}
             <Td>
               <Link
                 to={`/candidates/${row.candidateKey}?campaign=${campaign}`}

@@ -14,13 +14,24 @@ export function verdictWord(verdict: Pick<Verdict, 'value' | 'override'> | null)
 }
 
 /** A verdict as shape and word, never by colour alone. */
-export function VerdictMark({ verdict }: { verdict: Pick<Verdict, 'value' | 'override'> | null }) {
+export function VerdictMark({
+  verdict,
+  version,
+}: {
+  verdict: (Pick<Verdict, 'value' | 'override'> & Partial<Pick<Verdict, 'targetVersion'>>) | null
+  /** Version of the target it is shown for; one that was given for another says so. */
+  version?: number
+}) {
   const value: VerdictValue = verdict?.value ?? 'undecided'
   const { Shape, colour } = looks[value]
+  const given = verdict?.targetVersion
   return (
     <span className={`inline-flex items-center gap-1 whitespace-nowrap ${colour}`}>
       <Shape size={14} strokeWidth={2.4} aria-hidden />
       {verdictWord(verdict)}
+      {version !== undefined && given !== undefined && given !== version && (
+        <span className="text-soft">(given for v{given})</span>
+      )}
     </span>
   )
 }

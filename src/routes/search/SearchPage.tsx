@@ -18,11 +18,11 @@ import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { nullCurves } from '../../lib/againstNull.ts'
 import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
+import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
 import { AgainstNull } from './AgainstNull.tsx'
 import { EventLog } from './EventLog.tsx'
 import { NullFacts } from './NullFacts.tsx'
 import { IslandTable } from './IslandTable.tsx'
-import { MakeShortlistDialog } from './MakeShortlistDialog.tsx'
 
 export function SearchPage() {
   const { campaignId = '', searchId = '' } = useParams()
@@ -203,7 +203,6 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
   const barred = useBarred('searches.run')
   const barredList = useBarred('shortlists.edit')
   const send = useSearchCommand(campaign, search.id)
-  const [making, setMaking] = useState(false)
   const [cancelling, setCancelling] = useState(false)
   const run = (command: SearchCommand) =>
     send.mutate(command, { onError: (error) => toast.error(explain(error)) })
@@ -225,15 +224,15 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
           {shortlist.name}
         </ButtonLink>
       ))}
-      <Button
-        kind="primary"
-        unavailable={
-          barredList || (search.progress.feasible === 0 && 'No feasible candidate has been found yet.')
-        }
-        onClick={() => setMaking(true)}
-      >
-        Make a shortlist
-      </Button>
+      {barredList || search.progress.feasible === 0 ? (
+        <Button unavailable={barredList || 'No feasible candidate has been found yet.'}>
+          Make a shortlist
+        </Button>
+      ) : (
+        <ButtonLink kind="primary" to={assemblyPath(campaign, [search.id])}>
+          Make a shortlist
+        </ButtonLink>
+      )}
       <ConfirmDialog
         open={cancelling}
         onOpenChange={setCancelling}
@@ -243,7 +242,6 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
       >
         What it has found is kept, but it cannot go on afterwards. To stop for a while, pause it.
       </ConfirmDialog>
-      <MakeShortlistDialog campaign={campaign} search={search} open={making} onOpenChange={setMaking} />
     </>
   )
 }

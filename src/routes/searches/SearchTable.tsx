@@ -10,15 +10,23 @@ export function SearchTable({
   campaign,
   list,
   label,
+  selection,
 }: {
   campaign: string
   list: SearchSummary[]
   label: string
+  /** Lets searches be ticked. */
+  selection?: { chosen: readonly string[]; onChange: (chosen: string[]) => void }
 }) {
   return (
     <Table label={label}>
       <thead>
         <tr>
+          {selection && (
+            <Th>
+              <span className="sr-only">Chosen</span>
+            </Th>
+          )}
           <Th>Search</Th>
           <Th>State</Th>
           <Th>Target</Th>
@@ -34,6 +42,23 @@ export function SearchTable({
       <tbody>
         {list.map((search) => (
           <tr key={search.id} className="hover:bg-action-wash">
+            {selection && (
+              <Td>
+                <input
+                  type="checkbox"
+                  className="align-middle"
+                  aria-label={`Choose ${search.name}`}
+                  checked={selection.chosen.includes(search.id)}
+                  onChange={(event) =>
+                    selection.onChange(
+                      event.target.checked
+                        ? [...selection.chosen, search.id]
+                        : selection.chosen.filter((id) => id !== search.id),
+                    )
+                  }
+                />
+              </Td>
+            )}
             <Td>
               <Link
                 to={`/campaigns/${campaign}/searches/${search.id}`}

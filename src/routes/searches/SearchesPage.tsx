@@ -1,3 +1,4 @@
+import { useState } from 'react'
 import { useParams } from 'react-router-dom'
 import { Plus } from 'lucide-react'
 import { useSearches } from '../../api/searches.ts'
@@ -6,12 +7,15 @@ import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
+import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
 import { SearchTable } from './SearchTable.tsx'
 
 export function SearchesPage() {
   const { campaignId = '' } = useParams()
   const searches = useSearches(campaignId)
   const barred = useBarred('searches.run')
+  const barredLists = useBarred('shortlists.edit')
+  const [ticked, setTicked] = useState<string[]>([])
   return (
     <>
       <PageHead
@@ -37,7 +41,23 @@ export function SearchesPage() {
             </Empty>
           ) : (
             <>
-              <SearchTable campaign={campaignId} list={list} label="Searches" />
+              <div className="mb-2 flex flex-wrap items-center gap-3">
+                {barredLists || ticked.length === 0 ? (
+                  <Button unavailable={barredLists || 'Tick searches to make one list of their finds.'}>
+                    Make a shortlist of those ticked
+                  </Button>
+                ) : (
+                  <ButtonLink to={assemblyPath(campaignId, ticked)}>
+                    Make a shortlist of the {ticked.length} ticked
+                  </ButtonLink>
+                )}
+              </div>
+              <SearchTable
+                campaign={campaignId}
+                list={list}
+                label="Searches"
+                selection={{ chosen: ticked, onChange: setTicked }}
+              />
               <Caution className="mt-4" />
             </>
           )

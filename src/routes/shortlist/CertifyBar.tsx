@@ -1,3 +1,4 @@
+import { type ReactNode } from 'react'
 import { BadgeCheck } from 'lucide-react'
 import { toast } from 'sonner'
 import { certificationLimit } from '../../../shared/certificates.ts'
@@ -20,10 +21,13 @@ export function CertifyBar({
   campaign,
   shortlist,
   selection,
+  children,
 }: {
   campaign: string
   shortlist: ShortlistDetail
   selection: Selection
+  /** At the end of the line. */
+  children?: ReactNode
 }) {
   const barred = useBarred('certificates.run')
   const ask = useRequestCertification(campaign)
@@ -61,6 +65,7 @@ export function CertifyBar({
             Let go of the selection
           </Button>
         )}
+        <span className="ml-auto">{children}</span>
       </div>
       <CertificationProgress campaign={campaign} targetVersionId={shortlist.targetVersionId} />
     </>

@@ -9,6 +9,7 @@ import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 /** The row in hand with everything that can be done to it: for fingers, and as a reminder of the keys. */
 export function DecisionBar({
   row,
+  version,
   place,
   barred,
   busy,
@@ -17,6 +18,8 @@ export function DecisionBar({
   onStep,
 }: {
   row: ShortlistRow
+  /** Of the list's target. */
+  version: number
   place: string
   barred: string | false
   busy: boolean
@@ -38,7 +41,7 @@ export function DecisionBar({
         <span className="text-found">
           <Outcome outcome={row.outcome} />
         </span>
-        <VerdictMark verdict={row.verdict} />
+        <VerdictMark verdict={row.verdict} version={version} />
         <span className="inline-flex items-center gap-1">
           <span className="text-soft">certificate:</span> <CertificateMark state={row.certificate.state} />
         </span>

@@ -1,17 +1,24 @@
-import { useMemo } from 'react'
-import { Link, useParams, useSearchParams } from 'react-router-dom'
+import { useMemo, useState } from 'react'
+import { Link, useNavigate, useParams, useSearchParams } from 'react-router-dom'
 import { Download } from 'lucide-react'
+import { toast } from 'sonner'
 import { type ShortlistDetail } from '../../../shared/shortlists.ts'
 import { exportUrl, useShortlist } from '../../api/shortlists.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { Select, TextField } from '../../components/ui/Field.tsx'
-import { PageHead, Section } from '../../components/ui/Layout.tsx'
+import { RescoringProgress } from '../../components/shortlist/RescoringProgress.tsx'
+import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
-import { formatNumber, formatTime } from '../../lib/numbers.ts'
+import { formatNumber } from '../../lib/numbers.ts'
 import { certificateWord } from '../../components/ui/CertificateMark.tsx'
-import { certificateStates, readView, visibleRows, type ShortlistView } from './shortlistView.ts'
+import { ConditionChips, ConditionFields } from './ColumnConditions.tsx'
+import { ExternalDialog } from './ExternalDialog.tsx'
+import { conditionParts, listColumns, type ListColumn } from './listColumns.ts'
+import { ProvenanceSection } from './Provenance.tsx'
+import { RescoreDialog } from './RescoreDialog.tsx'
+import { certificateStates, isForOther, readView, visibleRows, type ShortlistView } from './shortlistView.ts'
 import { Triage } from './Triage.tsx'
 
 export function ShortlistPage() {
@@ -27,19 +34,33 @@ export function ShortlistPage() {
 function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: ShortlistDetail }) {
   const [search, setSearch] = useSearchParams()
   const view = useMemo(() => readView(search), [search])
-  const rows = useMemo(() => visibleRows(shortlist.rows, view), [shortlist.rows, view])
-  const change = (changes: Record<string, string>) =>
+  const columns = useMemo(() => listColumns(shortlist), [shortlist])
+  const rows = useMemo(() => visibleRows(shortlist, columns, view), [shortlist, columns, view])
+  /** A list writes a part of the address as often as it has entries. */
+  const change = (changes: Record<string, string | readonly string[]>) =>
     setSearch(
       (before) => {
         const next = new URLSearchParams(before)
         for (const [name, value] of Object.entries(changes)) {
-          if (value === '') next.delete(name)
-          else next.set(name, value)
+          next.delete(name)
+          for (const one of typeof value === 'string' ? [value] : value) {
+            if (one !== '') next.append(name, one)
+          }
         }
         return next
       },
       { replace: true },
     )
+  const clear = () =>
+    change({
+      verdict: '',
+      certificate: '',
+      hits: '',
+      text: '',
+      ...Object.fromEntries(
+        view.conditions.flatMap(({ column }) => conditionParts(column)).map((part) => [part, '']),
+      ),
+    })
   return (
     <>
       <PageHead
@@ -51,6 +72,7 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
         }
         actions={
           <>
+            <ListActions campaign={campaign} shortlist={shortlist} />
             <ExportLink campaign={campaign} shortlist={shortlist.id} format="csv" />
             <ExportLink campaign={campaign} shortlist={shortlist.id} format="json" />
           </>
@@ -81,9 +103,11 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
         .
       </PageHead>
       <div className="mb-3 flex flex-wrap items-end justify-between gap-x-8 gap-y-3">
-        <Filters view={view} shortlist={shortlist} onChange={change} />
+        <Filters view={view} shortlist={shortlist} columns={columns} onChange={change} />
         <Caution />
       </div>
+      <ConditionChips columns={columns} conditions={view.conditions} onChange={change} />
+      <Rescorings campaign={campaign} shortlist={shortlist.id} />
       {rows.length === 0 ? (
         <Empty
           title={shortlist.rows.length === 0 ? 'The shortlist is empty.' : 'No candidate matches the filter.'}
@@ -91,9 +115,7 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
           {shortlist.rows.length === 0 ? (
             'Nothing feasible had been found when it was made.'
           ) : (
-            <Button onClick={() => change({ verdict: '', certificate: '', hits: '', text: '' })}>
-              Show all candidates
-            </Button>
+            <Button onClick={clear}>Show all candidates</Button>
           )}
         </Empty>
       ) : (
@@ -101,8 +123,9 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
           campaign={campaign}
           shortlist={shortlist}
           rows={rows}
-          sort={view.sort}
-          descending={view.descending}
+          columns={columns}
+          view={view}
+          onHidden={(hide) => change({ hide })}
           onSort={(sort) =>
             change({
               sort: sort === 'rank' ? '' : sort,
@@ -113,20 +136,54 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
           onCurrent={(key) => change({ row: key ?? '' })}
         />
       )}
-      <Section
-        title="The rule it was ranked by"
-        note={`Engine ${shortlist.engineVersion}; made ${formatTime(shortlist.createdAt)} by ${shortlist.author}.`}
-      >
-        <pre
-          tabIndex={0}
-          aria-label="The rule"
-          className="max-h-64 overflow-auto font-mono text-xs leading-5"
-        >
-          {shortlist.rule}
-        </pre>
-        <p className="mt-2 font-mono text-xs break-all text-soft">{shortlist.scoringHash}</p>
-      </Section>
+      <ProvenanceSection campaign={campaign} shortlist={shortlist} />
     </>
+  )
+}
+
+function ListActions({ campaign, shortlist }: { campaign: string; shortlist: ShortlistDetail }) {
+  const barred = useBarred('shortlists.edit')
+  const [open, setOpen] = useState<'rescore' | 'external' | null>(null)
+  const follow = (dialog: 'rescore' | 'external') => (on: boolean) => setOpen(on ? dialog : null)
+  return (
+    <>
+      <Button unavailable={barred} onClick={() => setOpen('rescore')}>
+        Score anew
+      </Button>
+      <Button onClick={() => setOpen('external')}>External columns</Button>
+      <RescoreDialog
+        campaign={campaign}
+        shortlist={shortlist}
+        open={open === 'rescore'}
+        onOpenChange={follow('rescore')}
+      />
+      <ExternalDialog
+        campaign={campaign}
+        shortlist={shortlist.id}
+        open={open === 'external'}
+        onOpenChange={follow('external')}
+      />
+    </>
+  )
+}
+
+/** Re-scorings of this list that are under way; the list that comes of one is offered. */
+function Rescorings({ campaign, shortlist }: { campaign: string; shortlist: string }) {
+  const navigate = useNavigate()
+  return (
+    <RescoringProgress
+      campaign={campaign}
+      fits={({ fromId }) => fromId === shortlist}
+      onFinished={(id) =>
+        toast('The list has been scored anew.', {
+          duration: 20_000,
+          action: {
+            label: 'Open the new list',
+            onClick: () => void navigate(`/campaigns/${campaign}/shortlists/${id}`),
+          },
+        })
+      }
+    />
   )
 }
 
@@ -156,12 +213,15 @@ function ExportLink({
 function Filters({
   view,
   shortlist,
+  columns,
   onChange,
 }: {
   view: ShortlistView
   shortlist: ShortlistDetail
+  columns: readonly ListColumn[]
   onChange: (changes: Record<string, string>) => void
 }) {
+  const others = shortlist.rows.filter((row) => isForOther(row, shortlist)).length
   const { size, undecided, verified, rejected } = shortlist
   return (
     <form
@@ -179,6 +239,9 @@ function Filters({
           ['undecided', `undecided (${undecided})`],
           ['verified', `verified (${verified})`],
           ['rejected', `rejected (${rejected})`],
+          ...(others > 0 || view.verdict === 'other-version'
+            ? [['other-version', `given for another version (${others})`] as const]
+            : []),
         ]}
       />
       <Select
@@ -200,6 +263,7 @@ function Filters({
         value={view.text}
         onChange={(event) => onChange({ text: event.target.value })}
       />
+      <ConditionFields columns={columns} conditions={view.conditions} onChange={onChange} />
       <label className="flex min-h-8 items-center gap-2">
         <input
           type="checkbox"

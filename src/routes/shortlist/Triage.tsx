@@ -1,32 +1,33 @@
 import { useMemo, useRef, useState } from 'react'
-import { Link, useNavigate } from 'react-router-dom'
+import { useNavigate } from 'react-router-dom'
 import { toast } from 'sonner'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
 import { type VerdictValue } from '../../../shared/verdicts.ts'
 import { explain } from '../../api/request.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
-import { ClassThumb } from '../../components/geometry/ClassThumb.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
-import { HitMark, Outcome, ReportCell, outcomeFormat } from '../../components/ui/Outcome.tsx'
-import { SortButton } from '../../components/ui/Table.tsx'
-import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
+import { outcomeFormat } from '../../components/ui/Outcome.tsx'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
 import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
 import { useShortcut } from '../../lib/shortcuts.ts'
+import { ColumnChooser } from './ColumnConditions.tsx'
 import { CertifyBar } from './CertifyBar.tsx'
 import { DecisionBar } from './DecisionBar.tsx'
 import { useSelection } from './useSelection.ts'
-import { nextKey, nextUndecided } from './shortlistView.ts'
+import { type ListColumn } from './listColumns.ts'
+import { nextKey, nextUndecided, type ShortlistView } from './shortlistView.ts'
+import { triageColumns } from './triageColumns.tsx'
 
 interface TriageProps {
   campaign: string
   shortlist: ShortlistDetail
   rows: readonly ShortlistRow[]
-  sort: string
-  descending: boolean
+  /** All columns of the list. */
+  columns: readonly ListColumn[]
+  view: ShortlistView
   onSort: (sort: string) => void
+  onHidden: (hidden: string[]) => void
   /** Key of the row in hand. */
   current: string | null
   onCurrent: (key: string | null) => void
@@ -38,9 +39,10 @@ export function Triage({
   campaign,
   shortlist,
   rows,
-  sort,
-  descending,
+  columns: listed,
+  view,
   onSort,
+  onHidden,
   current,
   onCurrent,
 }: TriageProps) {
@@ -126,14 +128,6 @@ export function Triage({
     () => row && void navigate(dossier(row.candidateKey)),
   )
 
-  const sortable = (by: string, name: string) => ({
-    header: (
-      <SortButton active={by === sort} order={descending ? 'desc' : 'asc'} onClick={() => onSort(by)}>
-        {name}
-      </SortButton>
-    ),
-    sorted: by === sort ? (descending ? ('descending' as const) : ('ascending' as const)) : undefined,
-  })
   const columns: Column<ShortlistRow>[] = [
     {
       key: 'select',
@@ -162,74 +156,14 @@ export function Triage({
         />
       ),
     },
-    {
-      key: 'rank',
-      numeric: true,
-      className: 'w-14',
-      ...sortable('rank', 'Rank'),
-      cell: (item) => (
-        <Link
-          to={dossier(item.candidateKey)}
-          className="text-action hover:underline"
-          aria-label={`Rank ${item.rank}, open the dossier`}
-        >
-          {item.rank}
-        </Link>
-      ),
-    },
-    { key: 'verdict', header: 'Verdict', cell: (item) => <VerdictMark verdict={item.verdict} /> },
-    {
-      key: 'certificate',
-      header: 'Certificate',
-      cell: (item) => <CertificateMark state={item.certificate.state} />,
-    },
-    {
-      key: 'score',
-      numeric: true,
-      ...sortable('score', 'Score'),
-      cell: (item) => <Outcome outcome={item.outcome} decimals={format.score} />,
-    },
-    { key: 'hit', header: 'Hit', cell: (item) => <HitMark outcome={item.outcome} /> },
-    ...shortlist.columns.map((name): Column<ShortlistRow> => ({
-      key: `report:${name}`,
-      numeric: true,
-      ...sortable(`report:${name}`, name),
-      cell: (item) => (
-        <ReportCell
-          decimals={format.report.get(name)}
-          cell={item.outcome.kind === 'feasible' ? item.outcome.report[name] : undefined}
-        />
-      ),
-    })),
-    {
-      key: 'picture',
-      header: 'Largest 2-faces',
-      cell: (item) => <ClassThumb candidate={item.candidateKey} />,
-    },
-    {
-      key: 'polytope',
-      header: 'Polytope',
-      cell: (item) => (
-        <Link to={`/library/${item.polytopeKey}?campaign=${campaign}`} className="hover:underline">
-          {item.polytopeName}
-        </Link>
-      ),
-    },
-    {
-      key: 'h11',
-      numeric: true,
-      ...sortable('h11', 'h11, h21'),
-      cell: (item) => (
-        <>
-          {item.h11}, {item.h21}
-        </>
-      ),
-    },
+    ...triageColumns({ campaign, list: shortlist, columns: listed, format, view, onSort }),
   ]
 
   return (
     <div ref={table}>
-      <CertifyBar campaign={campaign} shortlist={shortlist} selection={selection} />
+      <CertifyBar campaign={campaign} shortlist={shortlist} selection={selection}>
+        <ColumnChooser columns={listed} hidden={view.hidden} onHidden={onHidden} />
+      </CertifyBar>
       <VirtualTable
         label="Candidates"
         className="max-h-[62vh]"
@@ -252,6 +186,7 @@ export function Triage({
       {row && (
         <DecisionBar
           row={row}
+          version={shortlist.targetVersion}
           place={`${at + 1} of ${rows.length} shown`}
           barred={barred}
           busy={give.isPending}
