@@ -106,6 +106,7 @@ export {
   type SearchProgressReport,
 } from './search/progress.ts'
 export { nullLaw } from './search/sampling.ts'
+export { mergedSurrogate, type SurrogateReport } from './search/surrogate/report.ts'
 export {
   islandBudget,
   searchSettingsSchema,

@@ -37,8 +37,21 @@ export const createSearchSchema = z.object({
   islands: z.number().int().min(1).max(16).default(2),
   /** How many of the best distinct candidates to keep. */
   keep: z.number().int().min(1).max(500).default(100),
+  /** A surrogate chooses among proposals where the rule needs a reference point; it never decides a rank. */
+  surrogate: z.boolean().default(true),
 })
 export type CreateSearch = z.infer<typeof createSearchSchema>
+
+/** See the engine's `SurrogateReport`. */
+export const surrogateReportSchema = z.object({
+  /** Rank correlation of predictions, made before the evaluation, with the outcomes. */
+  skill: z.number().nullable(),
+  predictions: z.number().int(),
+  aside: z.boolean(),
+  offered: z.number().int(),
+  chosen: z.number().int(),
+})
+export type SurrogateReport = z.infer<typeof surrogateReportSchema>
 
 export const searchProgressSchema = z.object({
   /** Evaluations the search is going to make at most; less than allowed where an exhaustive one has counted less. */
@@ -69,6 +82,8 @@ export const searchProgressSchema = z.object({
       exhausted: z.boolean(),
     }),
   ),
+  /** Null where the search has none, or its rule needs none; absent in progress of earlier versions. */
+  surrogate: surrogateReportSchema.nullish(),
   exhausted: z.boolean(),
   evaluationsPerSecond: z.number().nullable(),
   secondsLeft: z.number().nullable(),
@@ -102,6 +117,7 @@ export const searchDetailSchema = searchSummarySchema.extend({
   scope: scopeSchema,
   islands: z.number().int(),
   keep: z.number().int(),
+  surrogate: z.boolean(),
   progress: searchProgressSchema,
   null: nullSummarySchema.nullable(),
   /** False: the rule leaves it open what a hit is, and one is a score above the null's 99 % quantile. */

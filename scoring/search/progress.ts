@@ -2,6 +2,7 @@ import { interleaved, type Curve } from './curve.ts'
 import { pendingShares } from './extensions.ts'
 import type { HistogramState } from './histogram.ts'
 import type { SearchProblem } from './problem.ts'
+import { mergedSurrogate, type SurrogateReport } from './surrogate/report.ts'
 import type { RunEnd, SearchCounts, SearchState } from './state.ts'
 
 /** How far an island is. */
@@ -16,6 +17,7 @@ export interface IslandProgress extends SearchCounts {
   readonly curve: Curve
   /** Scores of the feasible candidates. */
   readonly histogram: HistogramState
+  readonly surrogate: SurrogateReport | null
   readonly ended: RunEnd | null
   /** Budget used up, or ended before. */
   readonly done: boolean
@@ -47,10 +49,18 @@ export function progressOf(state: SearchState, problem?: Extended): IslandProgre
     best: best?.score ?? null,
     bestKey: best?.key ?? null,
     curve: state.curve,
+    surrogate: surrogateOf(state),
     histogram: state.histogram,
     ended: state.ended,
     done: state.ended !== null || state.evaluations >= budget,
   }
+}
+
+/** Without the lessons: they are many, and for the next segment only. */
+function surrogateOf({ surrogate }: Partial<Pick<SearchState, 'surrogate'>>): SurrogateReport | null {
+  if (!surrogate) return null
+  const { skill, predictions, aside, offered, chosen } = surrogate
+  return { skill, predictions, aside, offered, chosen }
 }
 
 /** Score and key of the best feasible candidate. */
@@ -67,6 +77,7 @@ export interface SearchProgressReport extends SearchCounts {
   readonly bestKey: string | null
   /** Best so far over the evaluations of all islands, taken in turn. */
   readonly curve: Curve
+  readonly surrogate: SurrogateReport | null
   readonly islands: readonly Pick<IslandProgress, 'island' | 'evaluations' | 'best' | 'ended' | 'done'>[]
   readonly done: boolean
   /** Every island ended because the space holds nothing new. */
@@ -98,6 +109,7 @@ export function mergedProgress(islands: readonly SearchState[], problem?: Extend
     best: leader?.best ?? null,
     bestKey: leader?.bestKey ?? null,
     curve: interleaved(parts),
+    surrogate: mergedSurrogate(parts.map((part) => part.surrogate)),
     islands: parts.map(({ island, evaluations, best, ended, done }) => ({
       island,
       evaluations,

@@ -57,6 +57,10 @@ export class Search {
   @Column({ type: 'integer' })
   keep!: number
 
+  /** Whether a surrogate chooses among proposals; it had no say in searches made before there was one. */
+  @Column({ type: 'boolean', default: false })
+  surrogate!: boolean
+
   @Column({ type: 'varchar' })
   scoringHash!: string
 

@@ -17,7 +17,12 @@ export interface SearchProblem extends ScoredScope {
   readonly seed: number
   readonly island: number
   /** Over all islands; the engine gives each its share. */
-  readonly settings: { readonly budget: number; readonly islands: number; readonly keep: number }
+  readonly settings: {
+    readonly budget: number
+    readonly islands: number
+    readonly keep: number
+    readonly surrogate: boolean
+  }
 }
 
 /** A null sample or preview: the candidates are drawn by the engine's null law. */

@@ -1,4 +1,4 @@
-import { hitsAbove, interleaved } from '../../scoring/index.ts'
+import { hitsAbove, interleaved, mergedSurrogate } from '../../scoring/index.ts'
 import type { SearchProgress } from '../../shared/searches.ts'
 import { compareCandidates } from '../services/finds.ts'
 import type { IslandFind } from '../services/searchCommits.ts'
@@ -48,6 +48,7 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
       best: island?.best ?? null,
       exhausted: island?.exhausted ?? false,
     })),
+    surrogate: mergedSurrogate(begun.map((island) => island.surrogate ?? null)),
     exhausted: islands.every((island) => island?.exhausted === true),
     evaluationsPerSecond,
     secondsLeft: evaluationsPerSecond ? Math.max(0, budget - evaluations) / evaluationsPerSecond : null,

@@ -80,7 +80,12 @@ export class SearchRunner {
         method: search.method,
         seed: search.seed,
         island: row.number,
-        settings: { budget: search.budget, islands: search.islands, keep: search.keep },
+        settings: {
+          budget: search.budget,
+          islands: search.islands,
+          keep: search.keep,
+          surrogate: search.surrogate,
+        },
       },
       segment: row.segment,
       state: row.state,

@@ -1,4 +1,4 @@
-import type { HistogramState, SampledRow } from '../../scoring/index.ts'
+import type { HistogramState, SampledRow, SurrogateReport } from '../../scoring/index.ts'
 import type { OutcomeView } from '../../shared/outcomes.ts'
 import type { SearchProblem } from './searchProblem.ts'
 
@@ -36,6 +36,8 @@ export interface IslandProgress {
   /** Best so far over this island's evaluations. */
   readonly curve: readonly (readonly [number, number])[]
   readonly exhausted: boolean
+  /** Null where the search has none; absent in progress stored by earlier versions. */
+  readonly surrogate?: SurrogateReport | null
   /** Scores of the feasible candidates; absent in progress stored by earlier versions. */
   readonly histogram?: HistogramState
 }

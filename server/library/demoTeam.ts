@@ -58,6 +58,7 @@ export const demoSearch = {
   seed: 11,
   islands: 2,
   keep: 100,
+  surrogate: true,
 } as const
 
 export const demoShortlist = { name: 'First run, best 40', size: 40 } as const

@@ -45,6 +45,7 @@ export function presentSearch(search: Search, around: SearchSurroundings): Searc
     scope: search.scope,
     islands: search.islands,
     keep: search.keep,
+    surrogate: search.surrogate,
     progress: around.progress,
     null: around.nullSummary,
     ownHitLine: around.ownHitLine,

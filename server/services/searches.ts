@@ -108,6 +108,7 @@ export async function createSearch(
       seed: input.seed,
       islands: input.islands,
       keep: input.keep,
+      surrogate: input.surrogate,
       scoringHash,
       engineVersion,
       state: 'queued',

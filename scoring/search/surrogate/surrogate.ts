@@ -4,6 +4,7 @@ import { compareMerits, type Merit } from '../merit.ts'
 import type { RandomStream } from '../randomStream.ts'
 import { classFeatures } from './classFeatures.ts'
 import { midranks, normalScores, rankCorrelation } from './ranks.ts'
+import type { SurrogateReport } from './report.ts'
 import { fitRidge, type RidgeModel } from './ridge.ts'
 import { emptyWindow, LessonWindow, type WindowState } from './window.ts'
 
@@ -19,11 +20,14 @@ const [choices, exploration] = [12, 0.1]
 /** Bytes of a state that is full, as JSON, rounded up. */
 export const surrogateStateBytes = 200_000
 
-export interface SurrogateState {
+export interface SurrogateState extends SurrogateReport {
   readonly window: WindowState
-  /** Proposals compared, and how many were chosen from them. */
-  readonly offered: number
-  readonly chosen: number
+}
+
+interface Measured {
+  readonly at: number
+  readonly skill: number | null
+  readonly predictions: number
 }
 
 /** A class that could be proposed. */
@@ -47,7 +51,7 @@ export class Surrogate {
   private chosen: number
   /** The model in force and the number of lessons it was fitted after. */
   private model: { readonly at: number; readonly fitted: RidgeModel } | undefined
-  private measured: { readonly at: number; readonly skill: number | null } | undefined
+  private measured: Measured | undefined
 
   constructor(state: SurrogateState | null) {
     this.window = new LessonWindow(
@@ -59,7 +63,15 @@ export class Surrogate {
   }
 
   state(): SurrogateState {
-    return { window: this.window.state(), offered: this.offered, chosen: this.chosen }
+    const { skill, predictions } = this.measure()
+    return {
+      skill,
+      predictions,
+      aside: !this.isTrusted,
+      offered: this.offered,
+      chosen: this.chosen,
+      window: this.window.state(),
+    }
   }
 
   /** Takes in what an evaluation came to, after noting what would have been said of it. */
@@ -73,9 +85,7 @@ export class Surrogate {
    * there are too few.
    */
   get skill(): number | null {
-    const at = this.lastFit()
-    if (this.measured?.at !== at) this.measured = { at, skill: this.skillBefore(at) }
-    return this.measured.skill
+    return this.measure().skill
   }
 
   get isTrusted(): boolean {
@@ -132,20 +142,26 @@ export class Surrogate {
     return this.model.fitted
   }
 
-  private skillBefore(at: number): number | null {
+  private measure(): Measured {
+    const at = this.lastFit()
+    if (this.measured?.at !== at) this.measured = { at, ...this.skillBefore(at) }
+    return this.measured
+  }
+
+  private skillBefore(at: number): Omit<Measured, 'at'> {
     const lessons = this.window
       .between(at - skillWindow, at)
       .filter(({ predicted }) => !Number.isNaN(predicted))
-    if (lessons.length < fewestPredictions) return null
-    return rankCorrelation(
-      midranks(
-        lessons.map(({ predicted }) => predicted),
-        (a, b) => a - b,
-      ),
-      midranks(
-        lessons.map(({ merit }) => merit),
-        (a, b) => compareMerits(b, a),
-      ),
+    const predictions = lessons.length
+    if (predictions < fewestPredictions) return { skill: null, predictions }
+    const said = midranks(
+      lessons.map(({ predicted }) => predicted),
+      (a, b) => a - b,
     )
+    const came = midranks(
+      lessons.map(({ merit }) => merit),
+      (a, b) => compareMerits(b, a),
+    )
+    return { skill: rankCorrelation(said, came), predictions }
   }
 }

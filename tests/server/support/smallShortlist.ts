@@ -19,6 +19,7 @@ export async function smallShortlist(
     budget: Math.max(10, input.size),
     seed: 5,
     islands: 1,
+    surrogate: false,
     keep: input.size,
   })
   await context.jobs.searches.ended(search.id)
