@@ -23,6 +23,7 @@ import { AgainstNull } from './AgainstNull.tsx'
 import { EventLog } from './EventLog.tsx'
 import { NullFacts } from './NullFacts.tsx'
 import { IslandTable } from './IslandTable.tsx'
+import { SurrogateFacts } from './SurrogateFacts.tsx'
 
 export function SearchPage() {
   const { campaignId = '', searchId = '' } = useParams()
@@ -99,6 +100,9 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
           </Section>
           <Section title="Islands">
             <IslandTable search={search} />
+          </Section>
+          <Section title="Surrogate" note="What chose among proposals; it never decides a rank.">
+            <SurrogateFacts search={search} />
           </Section>
         </div>
       </div>

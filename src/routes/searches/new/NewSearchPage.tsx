@@ -15,6 +15,7 @@ import { Select, TextField } from '../../../components/ui/Field.tsx'
 import { PageHead, Section } from '../../../components/ui/Layout.tsx'
 import { Empty, Failure, QueryView } from '../../../components/ui/States.tsx'
 import { formatNumber } from '../../../lib/numbers.ts'
+import { SurrogateBox } from './SurrogateBox.tsx'
 
 export function NewSearchPage() {
   const { campaignId = '' } = useParams()
@@ -67,6 +68,7 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
   const [seed, setSeed] = useState(drawSeed)
   const [islands, setIslands] = useState('2')
   const [keep, setKeep] = useState('100')
+  const [surrogate, setSurrogate] = useState(true)
   const [name, setName] = useState('')
   const [tried, setTried] = useState(false)
 
@@ -83,6 +85,7 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
     seed: wholeNumber(seed),
     islands: wholeNumber(islands),
     keep: wholeNumber(keep),
+    surrogate,
   })
   const fault = (field: string, says: string) =>
     tried && !parsed.success && parsed.error.issues.some((issue) => issue.path[0] === field) ? says : null
@@ -167,6 +170,12 @@ function Composer({ campaign, targets }: { campaign: string; targets: TargetSumm
             hint="Distinct candidates."
             error={fault('keep', 'A whole number from 1 to 500.')}
             onChange={(event) => setKeep(event.target.value)}
+          />
+          <SurrogateBox
+            className="col-span-2 sm:col-span-4"
+            method={method}
+            on={surrogate}
+            onChange={setSurrogate}
           />
           <TextField
             label="Name (optional)"

@@ -1,0 +1,32 @@
+import { expect, it } from 'vitest'
+import { createDataSource } from '../../../server/data-source.ts'
+import { Surrogate1796300600000 as Migration } from '../../../server/migrations/1796300600000-surrogate.ts'
+import { migrations } from '../../../server/migrations/index.ts'
+
+it('older searches go on without a surrogate, and the step can be undone', async () => {
+  const source = createDataSource(':memory:')
+  await source.initialize()
+  const runner = source.createQueryRunner()
+  for (const Earlier of migrations) {
+    if (Earlier === Migration) break
+    await new Earlier().up(runner)
+  }
+  await source.query('PRAGMA foreign_keys = OFF')
+  await source.query(
+    `INSERT INTO search ("id", campaignId, targetVersionId, name, method, scope, polytopeKeys, scopeHash, budget,
+       seed, islands, keep, scoringHash, engineVersion, state, progress, evaluations, workMilliseconds, authorId,
+       createdAt)
+     VALUES ('old', 'c', 'v', 'S', 'annealing', '{}', '[]', '', 10, 1, 1, 1, 'hash', '1', 'running', '{}', 7, 0,
+       'a', '2026-01-02')`,
+  )
+  const migration = new Migration()
+  await migration.up(runner)
+  expect(await source.query('SELECT "id", surrogate FROM search')).toEqual([{ id: 'old', surrogate: 0 }])
+  await migration.down(runner)
+  const [row] = await source.query<Record<string, unknown>[]>('SELECT * FROM search')
+  expect(row).toMatchObject({ id: 'old', evaluations: 7 })
+  expect(row).not.toHaveProperty('surrogate')
+  await migration.up(runner)
+  expect(await source.query('SELECT surrogate FROM search')).toEqual([{ surrogate: 0 }])
+  await source.destroy()
+})
