@@ -37,6 +37,10 @@ const signedIn: RouteObject[] = [
     lazy: page(async () => (await import('./routes/searches/new/NewSearchPage.tsx')).NewSearchPage),
   },
   {
+    path: 'campaigns/:campaignId/searches/compare',
+    lazy: page(async () => (await import('./routes/searches/compare/ComparePage.tsx')).ComparePage),
+  },
+  {
     path: 'campaigns/:campaignId/searches/:searchId',
     lazy: page(async () => (await import('./routes/search/SearchPage.tsx')).SearchPage),
   },

@@ -8,8 +8,10 @@ import { type StreamEvent } from '../../shared/events.ts'
 import { type Certification } from '../../shared/certificates.ts'
 import { type ShortlistDetail } from '../../shared/shortlists.ts'
 import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
+import { type Comparison } from '../../shared/comparisons.ts'
 import { withCertification } from './certificates.ts'
 import { placeRescoring } from './rescorings.ts'
+import { withReport } from './comparisons.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
 import { previewKey } from './previews.ts'
 import { apiUrl } from './request.ts'
@@ -51,6 +53,7 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
       if (event.what === 'external-tables') void client.invalidateQueries({ queryKey: ['shortlist'] })
+      if (event.what === 'searches') void client.invalidateQueries({ queryKey: ['comparison', campaign] })
       if (event.what === 'verdicts') {
         void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
         void client.invalidateQueries({ queryKey: ['relatives'] })
@@ -64,11 +67,14 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
 }
 
 /** Where the null decides what a hit is, hits are counted anew when it is complete. */
-function applyNull(client: QueryClient, { searchId, summary }: StreamEvent & { kind: 'null' }): void {
+function applyNull(client: QueryClient, event: StreamEvent & { kind: 'null' }): void {
+  const { searchId, summary } = event
   const known = client.getQueryData<SearchDetail>(['search', searchId])
   if (known) client.setQueryData<SearchDetail>(['search', searchId], { ...known, null: summary })
-  if (known?.ownHitLine === false && summary.complete)
-    void client.invalidateQueries({ queryKey: ['search', searchId] })
+  reportToComparisons(client, event)
+  if (!summary.complete) return
+  if (known?.ownHitLine === false) void client.invalidateQueries({ queryKey: ['search', searchId] })
+  void client.invalidateQueries({ queryKey: ['comparison'] })
 }
 
 /** A certificate that was made goes into the shortlists of its target version; what only moved is asked for again. */
@@ -134,8 +140,13 @@ function applyClassCount(client: QueryClient, event: StreamEvent & { kind: 'clas
   void client.invalidateQueries({ queryKey: ['polytopes'] })
 }
 
+function reportToComparisons(client: QueryClient, event: StreamEvent & { kind: 'search' | 'null' }): void {
+  client.setQueriesData<Comparison>({ queryKey: ['comparison'] }, (old) => old && withReport(old, event))
+}
+
 function applySearch(client: QueryClient, campaign: string, event: StreamEvent & { kind: 'search' }): void {
   const { id, state, progress } = event
+  reportToComparisons(client, event)
   const known = client.getQueryData<SearchDetail>(['search', id])
   const moved = { state, evaluations: progress.evaluations, best: progress.best }
   if (known) client.setQueryData<SearchDetail>(['search', id], { ...known, ...moved, progress })

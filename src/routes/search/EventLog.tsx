@@ -21,7 +21,7 @@ export function EventLog({ events }: { events: readonly SearchEventView[] }) {
             <Td>
               <time dateTime={at}>{formatTime(at)}</time>
             </Td>
-            <Td className="whitespace-normal">
+            <Td className="whitespace-normal!">
               {searchEventKinds[kind]}
               {note && <span className="block max-w-[50ch] pb-1 text-xs text-soft">{note}</span>}
             </Td>

@@ -20,6 +20,7 @@ import { nullCurves } from '../../lib/againstNull.ts'
 import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
 import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
 import { AgainstNull } from './AgainstNull.tsx'
+import { CompareWith } from './CompareWith.tsx'
 import { EventLog } from './EventLog.tsx'
 import { NullFacts } from './NullFacts.tsx'
 import { IslandTable } from './IslandTable.tsx'
@@ -223,6 +224,7 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
           {words[command]}
         </Button>
       ))}
+      <CompareWith campaign={campaign} search={search} />
       {search.shortlists.map((shortlist) => (
         <ButtonLink key={shortlist.id} to={`/campaigns/${campaign}/shortlists/${shortlist.id}`}>
           {shortlist.name}

@@ -1,6 +1,7 @@
 import { useState } from 'react'
-import { useParams } from 'react-router-dom'
+import { useNavigate, useParams } from 'react-router-dom'
 import { Plus } from 'lucide-react'
+import { fewestCompared, mostCompared } from '../../../shared/comparisons.ts'
 import { useSearches } from '../../api/searches.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button, ButtonLink } from '../../components/ui/Button.tsx'
@@ -8,6 +9,7 @@ import { Caution } from '../../components/ui/Caution.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
+import { compareAddress } from './compare/compareAddress.ts'
 import { SearchTable } from './SearchTable.tsx'
 
 export function SearchesPage() {
@@ -42,6 +44,7 @@ export function SearchesPage() {
           ) : (
             <>
               <div className="mb-2 flex flex-wrap items-center gap-3">
+                <CompareButton campaign={campaignId} ids={ticked} />
                 {barredLists || ticked.length === 0 ? (
                   <Button unavailable={barredLists || 'Tick searches to make one list of their finds.'}>
                     Make a shortlist of those ticked
@@ -64,5 +67,18 @@ export function SearchesPage() {
         }
       </QueryView>
     </>
+  )
+}
+
+function CompareButton({ campaign, ids }: { campaign: string; ids: readonly string[] }) {
+  const navigate = useNavigate()
+  const fits = ids.length >= fewestCompared && ids.length <= mostCompared
+  return (
+    <Button
+      unavailable={!fits && `Tick ${fewestCompared} to ${mostCompared} searches to lay them side by side.`}
+      onClick={() => void navigate(compareAddress(campaign, { ids: [...ids] }))}
+    >
+      Compare{ids.length > 0 && ` (${ids.length})`}
+    </Button>
   )
 }
