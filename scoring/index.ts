@@ -113,6 +113,7 @@ export {
   stateLimitBytes,
   type SearchSettings,
 } from './search/settings.ts'
+export { checkedFind, readSearchResult, type ListedFind, type SearchResult } from './reading/searchResult.ts'
 export { startLimit, type GivenStart } from './search/givenStarts.ts'
 export { timedCandidate, type Clock, type StageCosts } from './search/stageClock.ts'
 export type { Json, RunEnd, SampledRow, SampleRow, SearchCounts, SearchState } from './search/state.ts'

@@ -22,6 +22,7 @@ import { polytopeRoutes } from './routes/polytopes.ts'
 import { comparisonRoutes } from './routes/comparisons.ts'
 import { rescoringRoutes } from './routes/rescorings.ts'
 import { searchRoutes } from './routes/searches.ts'
+import { searchRunningRoutes } from './routes/searchRunning.ts'
 import { sessionRoutes } from './routes/session.ts'
 import { shortlistRoutes } from './routes/shortlists.ts'
 import { targetRoutes } from './routes/targets.ts'
@@ -52,6 +53,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   targetRoutes(app, context)
   explorationRoutes(app, context)
   searchRoutes(app, context)
+  searchRunningRoutes(app, context)
   comparisonRoutes(app, context)
   shortlistRoutes(app, context)
   rescoringRoutes(app, context)

@@ -17,6 +17,7 @@ import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
 import { summaryOfEach } from './jobs/compute/polytopeSummary.ts'
 import { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
+import { checkSearchResult, readSearchResultText } from './jobs/compute/searchResults.ts'
 import { invariantsOfEach, nearDuplicates } from './jobs/compute/relatives.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
@@ -41,6 +42,8 @@ const tasks: Tasks = {
   'class-pictures': classPictures,
   'invariants-of-each': invariantsOfEach,
   'near-duplicates': nearDuplicates,
+  'read-search-result': readSearchResultText,
+  'check-search-result': checkSearchResult,
   'search-segment': searchSegment,
   'null-chunk': nullChunk,
   'preview-chunk': previewChunk,

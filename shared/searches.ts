@@ -1,6 +1,12 @@
 import { z } from 'zod'
 import type { MethodName } from '../scoring/index.ts'
 import { scopeSchema } from './polytopes.ts'
+import {
+  importedResultSchema,
+  methodSettingsSchema,
+  startsFromSchema,
+  startsSourceSchema,
+} from './searchRunning.ts'
 import { nullSummarySchema } from './nullSamples.ts'
 import { scoredRowSchema } from './outcomes.ts'
 import { searchEventSchema } from './searchEvents.ts'
@@ -18,6 +24,9 @@ export const searchMethods = {
   uniform: 'Uniform walk: flips at random, uniform over classes before symmetry in the long run',
   random: 'Random heights: no guidance, for comparison',
 } as const satisfies Record<MethodName, string>
+
+/** Methods that make nothing of candidates to begin from. */
+export const startless: readonly MethodName[] = ['exhaustive', 'random']
 
 const methodNames = Object.keys(searchMethods) as [MethodName, ...MethodName[]]
 
@@ -39,6 +48,9 @@ export const createSearchSchema = z.object({
   keep: z.number().int().min(1).max(500).default(100),
   /** A surrogate chooses among proposals where the rule needs a reference point; it never decides a rank. */
   surrogate: z.boolean().default(true),
+  settings: methodSettingsSchema.optional(),
+  /** Candidates to begin from. */
+  starts: startsSourceSchema.optional(),
 })
 export type CreateSearch = z.infer<typeof createSearchSchema>
 
@@ -56,6 +68,8 @@ export type SurrogateReport = z.infer<typeof surrogateReportSchema>
 export const searchProgressSchema = z.object({
   /** Evaluations the search is going to make at most; less than allowed where an exhaustive one has counted less. */
   budget: z.number().int().optional(),
+  /** Evaluations of candidates that the search was given: no finds of its own. */
+  given: z.number().int().optional(),
   evaluations: z.number().int(),
   proposals: z.number().int(),
   accepted: z.number().int(),
@@ -76,6 +90,8 @@ export const searchProgressSchema = z.object({
        * null's 99 % quantile. Absent while that is not known.
        */
       hits: z.number().int().optional(),
+      /** Evaluations of candidates that the search was given; none of them is among the hits. */
+      given: z.number().int().optional(),
       /** How many of them may lie on either side of the quantile; half of these are among `hits`. */
       unsure: z.number().int().optional(),
       best: z.number().nullable(),
@@ -106,6 +122,8 @@ export const searchSummarySchema = z.object({
   createdAt: z.string(),
   finishedAt: z.string().nullable(),
   author: z.string(),
+  /** Run elsewhere, its result imported. */
+  isImported: z.boolean().optional(),
 })
 export type SearchSummary = z.infer<typeof searchSummarySchema>
 
@@ -118,6 +136,14 @@ export const searchDetailSchema = searchSummarySchema.extend({
   islands: z.number().int(),
   keep: z.number().int(),
   surrogate: z.boolean(),
+  settings: methodSettingsSchema,
+  /** Budgets added since it was made. */
+  extensions: z.array(z.number().int()),
+  /** Null: it began by itself. */
+  starts: startsFromSchema.nullable(),
+  imported: importedResultSchema.nullable(),
+  /** Of a search that is queued: searches that were queued before it, of any campaign. */
+  ahead: z.number().int().nullable(),
   progress: searchProgressSchema,
   null: nullSummarySchema.nullable(),
   /** False: the rule leaves it open what a hit is, and one is a score above the null's 99 % quantile. */

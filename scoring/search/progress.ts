@@ -78,7 +78,10 @@ export interface SearchProgressReport extends SearchCounts {
   /** Best so far over the evaluations of all islands, taken in turn. */
   readonly curve: Curve
   readonly surrogate: SurrogateReport | null
-  readonly islands: readonly Pick<IslandProgress, 'island' | 'evaluations' | 'best' | 'ended' | 'done'>[]
+  readonly islands: readonly Pick<
+    IslandProgress,
+    'island' | 'evaluations' | 'given' | 'hits' | 'best' | 'ended' | 'done'
+  >[]
   readonly done: boolean
   /** Every island ended because the space holds nothing new. */
   readonly exhausted: boolean
@@ -110,9 +113,11 @@ export function mergedProgress(islands: readonly SearchState[], problem?: Extend
     bestKey: leader?.bestKey ?? null,
     curve: interleaved(parts),
     surrogate: mergedSurrogate(parts.map((part) => part.surrogate)),
-    islands: parts.map(({ island, evaluations, best, ended, done }) => ({
+    islands: parts.map(({ island, evaluations, given, hits, best, ended, done }) => ({
       island,
       evaluations,
+      given,
+      hits,
       best,
       ended,
       done,

@@ -26,6 +26,7 @@ import { Search } from './search.ts'
 import { SearchEvent } from './searchEvent.ts'
 import { SearchIsland } from './searchIsland.ts'
 import { SearchSample } from './searchSample.ts'
+import { SearchStart } from './searchStart.ts'
 import { SetUpLink } from './setUpLink.ts'
 import { Shortlist } from './shortlist.ts'
 import { ShortlistEntry } from './shortlistEntry.ts'
@@ -63,6 +64,7 @@ export const entities = [
   SearchEvent,
   SearchIsland,
   SearchSample,
+  SearchStart,
   SetUpLink,
   Shortlist,
   ShortlistEntry,

@@ -1,6 +1,8 @@
 import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryColumn, type Relation } from 'typeorm'
 import type { Scope } from '../../shared/polytopes.ts'
 import type { SearchProgress, SearchState } from '../../shared/searches.ts'
+import type { NullSummary } from '../../shared/nullSamples.ts'
+import type { ImportedResult, MethodSettings, StartsFrom } from '../../shared/searchRunning.ts'
 import { Account } from './account.ts'
 import { Campaign } from './campaign.ts'
 import { TargetVersion } from './targetVersion.ts'
@@ -45,8 +47,25 @@ export class Search {
   @Column({ type: 'varchar' })
   scopeHash!: string
 
+  /** With all extensions. */
   @Column({ type: 'integer' })
   budget!: number
+
+  /** Budgets added since it was made, in order; they are part of what the result depends on. */
+  @Column({ type: 'simple-json', default: '[]' })
+  extensions!: number[]
+
+  /** Settings of the method that were chosen; for the others the engine's own hold. */
+  @Column({ type: 'simple-json', default: '{}' })
+  settings!: MethodSettings
+
+  /** Where the candidates it begins from are from; null: it begins by itself. */
+  @Column({ type: 'simple-json', nullable: true })
+  startsFrom!: StartsFrom | null
+
+  /** Set where it was run elsewhere and its result imported, with the null sample that the result reports. */
+  @Column({ type: 'simple-json', nullable: true })
+  imported!: (ImportedResult & { null: NullSummary | null }) | null
 
   @Column({ type: 'integer' })
   seed!: number

@@ -9,7 +9,8 @@ import { ComputePool } from './computePool.ts'
 import { Explorations } from './explorations.ts'
 import { InvariantsFiller } from './invariantsFiller.ts'
 import type { JobParts } from './jobParts.ts'
-import { NullSampler } from './nullSampler.ts'
+import { CostProbes } from './costProbes.ts'
+import { NullSampler, nullSampleSize } from './nullSampler.ts'
 import { Previews } from './previews.ts'
 import { RescoringRunner } from './rescoringRunner.ts'
 import { Scheduler } from './scheduler.ts'
@@ -26,6 +27,10 @@ export interface Jobs {
   readonly certifications: CertificationRunner
   readonly rescorings: RescoringRunner
   readonly previews: Previews
+  /** What evaluations cost, by scope and rule. */
+  readonly costs: CostProbes
+  /** Candidates of a null sample, by the number of points of the largest polytope. */
+  readonly nullSize: (pointsMax: number) => number
   /** Observables over samples. */
   readonly explorations: Explorations
   /** Wall-type invariants of candidates, in the background. */
@@ -89,6 +94,8 @@ export function openJobs(
     certifications,
     rescorings,
     previews: new Previews(all),
+    costs: new CostProbes(interactive),
+    nullSize: options.nullSize ?? nullSampleSize,
     explorations,
     invariants: new InvariantsFiller(all),
     shapes: new RecentResults(200),

@@ -102,6 +102,11 @@ export class LeasedRuns<Run extends LeasedRun> {
     this.#listeners.delete(run.id)
   }
 
+  /** Resolves when no work of a row that was let go of is in hand any more. */
+  async settled(id: string): Promise<void> {
+    await this.#settling.get(id)
+  }
+
   /** Resolves when this process has nothing more to do for a row that was queued with `enqueue`. */
   ended(id: string): Promise<void> {
     return new Promise((resolve) => {

@@ -1,4 +1,5 @@
 import { In, type DataSource } from 'typeorm'
+import type { MethodSettings } from '../../shared/searchRunning.ts'
 import { PolytopeRecord } from '../entities/polytope.ts'
 
 /** What candidates are drawn from, and by what they are judged: plain data for the worker threads. */
@@ -17,12 +18,17 @@ export interface SearchProblem extends ScoredScope {
   readonly seed: number
   readonly island: number
   /** Over all islands; the engine gives each its share. */
-  readonly settings: {
+  readonly settings: MethodSettings & {
+    /** Before any extension. */
     readonly budget: number
     readonly islands: number
     readonly keep: number
     readonly surrogate: boolean
   }
+  /** Candidates to begin from, as JSON text of `GivenStart[]`, for the same reason as `polytopes`. */
+  readonly starts: string
+  /** Budgets added since. */
+  readonly extensions: readonly number[]
 }
 
 /** A null sample or preview: the candidates are drawn by the engine's null law. */

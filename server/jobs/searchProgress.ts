@@ -1,4 +1,4 @@
-import { hitsAbove, interleaved, mergedSurrogate } from '../../scoring/index.ts'
+import { hitsAbove, interleaved, islandBudget, mergedSurrogate } from '../../scoring/index.ts'
 import type { SearchProgress } from '../../shared/searches.ts'
 import { compareCandidates } from '../services/finds.ts'
 import type { IslandFind } from '../services/searchCommits.ts'
@@ -30,8 +30,18 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
   const sum = shares.reduce((total, share) => total + share, 0)
   // An exhaustive search has counted what there is to do, which may be less than it was allowed.
   const budget = Number.isNaN(sum) ? pace.budget : sum
+  // What an exhausted island leaves of its share is never used.
+  const left = islands.reduce(
+    (all, island, n) =>
+      all +
+      (island?.exhausted
+        ? 0
+        : Math.max(0, shareOf(pace.budget, islands.length, n, island) - (island?.evaluations ?? 0))),
+    0,
+  )
   return {
     budget,
+    given: begun.reduce((all, island) => all + (island.given ?? 0), 0),
     evaluations,
     proposals: total('proposals'),
     accepted: total('accepted'),
@@ -45,14 +55,20 @@ export function mergeProgress(islands: readonly (IslandProgress | null)[], pace:
     islands: islands.map((island) => ({
       evaluations: island?.evaluations ?? 0,
       ...(island && islandHits(island, pace.hitLine)),
+      ...(island?.given ? { given: island.given } : {}),
       best: island?.best ?? null,
       exhausted: island?.exhausted ?? false,
     })),
     surrogate: mergedSurrogate(begun.map((island) => island.surrogate ?? null)),
     exhausted: islands.every((island) => island?.exhausted === true),
     evaluationsPerSecond,
-    secondsLeft: evaluationsPerSecond ? Math.max(0, budget - evaluations) / evaluationsPerSecond : null,
+    secondsLeft: evaluationsPerSecond ? left / evaluationsPerSecond : null,
   }
+}
+
+/** What an island may evaluate: as it said itself, or its part of the whole before its first report. */
+function shareOf(budget: number, islands: number, number: number, island: IslandProgress | null): number {
+  return island?.budget ?? islandBudget({ budget, islands }, number)
 }
 
 /** An island's hits; none where they are not known, or not counted by the version that ran it. */

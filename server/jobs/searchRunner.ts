@@ -6,6 +6,8 @@ import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
 import { unfinishedNulls } from '../services/nullSamples.ts'
 import { failSearch, takeLease, type IslandFind } from '../services/searchCommits.ts'
+import { originalBudget } from '../services/searchSpecifications.ts'
+import { readStarts } from '../services/searchStarts.ts'
 import type { JobParts } from './jobParts.ts'
 import { isFree } from './lease.ts'
 import { LeasedRuns } from './leasedRuns.ts'
@@ -53,6 +55,11 @@ export class SearchRunner {
     this.#runs.release(searchId)
   }
 
+  /** Resolves when no segment of a search that was let go of is in hand any more. */
+  settled(searchId: string): Promise<void> {
+    return this.#runs.settled(searchId)
+  }
+
   /** Resolves when this process has nothing more to do for a search that was queued with `enqueue`. */
   ended(searchId: string): Promise<void> {
     return this.#runs.ended(searchId)
@@ -72,6 +79,15 @@ export class SearchRunner {
       return
     }
     const { scope, pointsMax } = await this.#scopeOf(search)
+    const starts = JSON.stringify(await readStarts(source.manager, searchId))
+    const { islands: count, keep, surrogate, extensions } = search
+    const settings = {
+      ...search.settings,
+      budget: originalBudget(search),
+      islands: count,
+      keep,
+      surrogate,
+    }
     const rows = await source.manager.find(SearchIsland, { where: { searchId }, order: { number: 'ASC' } })
     const islands = rows.map((row): Island => ({
       number: row.number,
@@ -80,12 +96,9 @@ export class SearchRunner {
         method: search.method,
         seed: search.seed,
         island: row.number,
-        settings: {
-          budget: search.budget,
-          islands: search.islands,
-          keep: search.keep,
-          surrogate: search.surrogate,
-        },
+        settings,
+        starts,
+        extensions,
       },
       segment: row.segment,
       state: row.state,

@@ -22,6 +22,8 @@ export interface SegmentFind {
 export interface IslandProgress {
   /** Evaluations that the island is going to make at most; absent in progress stored by earlier versions. */
   readonly budget?: number
+  /** Evaluations of candidates that the search was given; absent in progress stored by earlier versions. */
+  readonly given?: number
   readonly evaluations: number
   readonly proposals: number
   readonly accepted: number

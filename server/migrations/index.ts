@@ -5,6 +5,7 @@ import { ExactClassCounts1796200200001 } from './1796200200001-exactClassCounts.
 import { RigidAndFibres1796200200002 } from './1796200200002-rigidAndFibres.ts'
 import { ImportedCandidates1796200300000 } from './1796200300000-importedCandidates.ts'
 import { CandidateInvariants1796200400000 } from './1796200400000-candidateInvariants.ts'
+import { SearchRunning1796300100000 } from './1796300100000-searchRunning.ts'
 import { SearchEvents1796300200000 } from './1796300200000-searchEvents.ts'
 import { ShortlistAssembly1796300300000 } from './1796300300000-shortlistAssembly.ts'
 import { ExternalTables1796300300001 } from './1796300300001-externalTables.ts'
@@ -21,6 +22,7 @@ export const migrations = [
   RigidAndFibres1796200200002,
   ImportedCandidates1796200300000,
   CandidateInvariants1796200400000,
+  SearchRunning1796300100000,
   SearchEvents1796300200000,
   ShortlistAssembly1796300300000,
   ExternalTables1796300300001,

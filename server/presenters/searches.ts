@@ -23,6 +23,7 @@ export function presentSearchSummary(search: Search): SearchSummary {
     createdAt: search.createdAt,
     finishedAt: search.finishedAt,
     author: search.author?.name ?? '',
+    isImported: search.imported !== null,
   }
 }
 
@@ -31,6 +32,7 @@ export interface SearchSurroundings {
   readonly nullSummary: NullSummary | null
   readonly ownHitLine: boolean
   readonly top: readonly ScoredRow[]
+  readonly ahead: number | null
   readonly shortlists: readonly { readonly id: string; readonly name: string }[]
   readonly events: readonly SearchEventView[]
 }
@@ -46,6 +48,11 @@ export function presentSearch(search: Search, around: SearchSurroundings): Searc
     islands: search.islands,
     keep: search.keep,
     surrogate: search.surrogate,
+    settings: search.settings,
+    extensions: search.extensions,
+    starts: search.startsFrom,
+    imported: search.imported && { source: search.imported.source, checked: search.imported.checked },
+    ahead: around.ahead,
     progress: around.progress,
     null: around.nullSummary,
     ownHitLine: around.ownHitLine,

@@ -110,7 +110,8 @@ export async function failSearch(
   if (affected) await recordSearchEvent(manager, searchId, 'failed', { note: failure.message })
 }
 
-async function storeFinds(
+/** Puts the finds of a search in the place of those it had. */
+export async function storeFinds(
   manager: EntityManager,
   searchId: string,
   scoringHash: string,

@@ -1,6 +1,8 @@
 import { randomUUID } from 'node:crypto'
-import { In, type EntityManager } from 'typeorm'
+import { In, LessThan, type EntityManager } from 'typeorm'
+import { startless } from '../../shared/searches.ts'
 import type { CreateSearch, SearchDetail, SearchProgress, SearchState } from '../../shared/searches.ts'
+import { engineVersion as presentEngine, islandBudget } from '../../scoring/index.ts'
 import type { ServerContext } from '../context.ts'
 import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
@@ -13,8 +15,11 @@ import { topFinds, withHitLine } from './finds.ts'
 import { readHitLine, readNullSummary } from './nullSamples.ts'
 import { requireSoundRule } from './rules.ts'
 import { namedScope, resolveScope, scopeHash } from './scopes.ts'
+import { requireInScope, resolveStarts, storeStarts } from './searchStarts.ts'
 import { readSearchEvents, recordSearchEvent } from './searchEvents.ts'
 import { readVersion } from './targets.ts'
+
+const [mostEvaluations, mostExtensions] = [1_000_000, 100]
 
 const withWords = { author: true, targetVersion: { target: true } } as const
 
@@ -35,11 +40,19 @@ export async function readSearch(
   const search = await manager.findOne(Search, { where: { campaignId, id: searchId }, relations: withWords })
   if (search === null) throw notFound('search')
   const shortlists = await manager.find(Shortlist, { where: { campaignId }, order: { createdAt: 'ASC' } })
-  const line = await readHitLine(manager, search, search.targetVersion?.text ?? '')
+  const { imported } = search
+  const nullSummary = imported ? imported.null : await readNullSummary(manager, search)
+  const known = await readHitLine(manager, search, search.targetVersion?.text ?? '')
+  // A result is compared with the null sample that it reports itself.
+  const line = imported && known !== 'rule' ? (imported.null?.quantile99 ?? null) : known
   const top = await topFinds(manager, search, 20)
   return presentSearch(search, {
-    progress: await progressWithHits(manager, search, line),
-    nullSummary: await readNullSummary(manager, search),
+    progress: imported ? search.progress : await progressWithHits(manager, search, line),
+    nullSummary,
+    ahead:
+      search.state === 'queued'
+        ? await manager.countBy(Search, { state: 'queued', createdAt: LessThan(search.createdAt) })
+        : null,
     ownHitLine: line === 'rule',
     top: top.map((row) => ({ ...row, outcome: withHitLine(row.outcome, line) })),
     shortlists: shortlists.filter(({ searchIds }) => searchIds.includes(search.id)),
@@ -78,7 +91,7 @@ function withoutHits({ hits, unsure, ...island }: SearchProgress['islands'][numb
 
 /**
  * Queues a search: its rule is checked, and the polytopes its scope holds now are written down. With the same
- * polytopes, rule, method, budget, islands and seed it gives the same result.
+ * polytopes, rule, method, settings, budget, islands, seed and candidates to begin from it gives the same result.
  */
 export async function createSearch(
   context: ServerContext,
@@ -92,6 +105,8 @@ export async function createSearch(
   const scope = await namedScope(source.manager, campaignId, input.scope)
   const polytopes = await resolveScope(source.manager, campaignId, scope)
   const polytopeKeys = polytopes.map(({ key }) => key)
+  const given = input.starts && (await resolveStarts(source.manager, campaignId, input.starts))
+  if (given) requireInScope(given.starts, polytopeKeys)
   const id = randomUUID()
   await writes.transaction(async (manager) => {
     const earlier = await manager.countBy(Search, { campaignId })
@@ -109,6 +124,18 @@ export async function createSearch(
       islands: input.islands,
       keep: input.keep,
       surrogate: input.surrogate,
+      settings: input.settings ?? {},
+      startsFrom: given
+        ? {
+            kind: given.kind,
+            id: given.id,
+            name: given.name,
+            count: given.starts.length,
+            used: !startless.includes(input.method),
+          }
+        : null,
+      extensions: [],
+      imported: null,
       scoringHash,
       engineVersion,
       state: 'queued',
@@ -135,6 +162,7 @@ export async function createSearch(
         done: false,
       })),
     )
+    if (given) await storeStarts(manager, id, given.starts)
     await recordSearchEvent(manager, id, 'queued', { accountId: authorId })
   })
   streams.toCampaign(campaignId, { kind: 'changed', what: 'searches' })
@@ -183,6 +211,105 @@ export async function resumeSearch(
   await move(context, campaignId, searchId, { from, to: 'queued', word: 'resumed', accountId })
   context.jobs.searches.enqueue(searchId)
   return readSearch(context.source.manager, campaignId, searchId)
+}
+
+/**
+ * Adds budget to a search that has ended or is paused; one that has ended goes on at once. When it is asked for makes no
+ * difference: see `extensionsSchema` of the engine.
+ */
+export async function extendSearch(
+  context: ServerContext,
+  campaignId: string,
+  searchId: string,
+  evaluations: number,
+  accountId: string,
+): Promise<SearchDetail> {
+  const { source, writes, streams, jobs } = context
+  // A segment that is still in hand was begun without the extension.
+  await jobs.searches.settled(searchId)
+  const isOver = await writes.transaction(async (manager) => {
+    const search = await manager.findOneBy(Search, { campaignId, id: searchId })
+    if (search === null) throw notFound('search')
+    requireExtendable(search, evaluations)
+    const { state, budget, extensions, progress } = search
+    const isOver = state === 'finished'
+    await manager.update(
+      Search,
+      { id: searchId },
+      {
+        budget: budget + evaluations,
+        extensions: [...extensions, evaluations],
+        progress: { ...progress, budget: (progress.budget ?? budget) + evaluations, secondsLeft: null },
+        ...(isOver && { state: 'queued' as const, finishedAt: null }),
+      },
+    )
+    await extendIslands(manager, search, evaluations)
+    await recordSearchEvent(manager, searchId, 'extended', {
+      accountId,
+      note: `+ ${evaluations} evaluations`,
+    })
+    return isOver
+  })
+  if (isOver) jobs.searches.enqueue(searchId)
+  const detail = await readSearch(source.manager, campaignId, searchId)
+  streams.toCampaign(campaignId, {
+    kind: 'search',
+    id: searchId,
+    state: detail.state,
+    progress: detail.progress,
+  })
+  streams.toCampaign(campaignId, { kind: 'changed', what: 'searches' })
+  return detail
+}
+
+/** Each island gets its share; one that has nothing left to find says so again at its next segment. */
+async function extendIslands(
+  manager: EntityManager,
+  { id, islands: count }: Search,
+  evaluations: number,
+): Promise<void> {
+  for (const { number, progress } of await manager.findBy(SearchIsland, { searchId: id })) {
+    const before = progress === null ? null : (JSON.parse(progress) as IslandProgress)
+    const share = islandBudget({ budget: evaluations, islands: count }, number)
+    const budget = before?.budget === undefined || before.exhausted ? before?.budget : before.budget + share
+    await manager.update(
+      SearchIsland,
+      { searchId: id, number },
+      { done: false, progress: before && JSON.stringify({ ...before, budget }) },
+    )
+  }
+}
+
+/** @throws Refusal 409 */
+function requireExtendable(search: Search, evaluations: number): void {
+  const { state, imported, method, progress, budget, extensions } = search
+  if (imported !== null) {
+    throw conflict('imported-result', 'This result was run elsewhere; its state is not here to go on from.')
+  }
+  if (state !== 'finished' && state !== 'paused') {
+    throw conflict(
+      'wrong-state',
+      `This search is ${state}; one that is paused or has finished can be extended.`,
+    )
+  }
+  if (method === 'exhaustive' || progress.exhausted) {
+    throw conflict(
+      'nothing-left',
+      'This search has ended because nothing new turns up: more budget would not be used.',
+    )
+  }
+  if (search.engineVersion !== presentEngine) {
+    throw conflict(
+      'engine-changed',
+      `This search ran with engine ${search.engineVersion}; the engine is ${presentEngine} now. Start a new search.`,
+    )
+  }
+  if (budget + evaluations > mostEvaluations || extensions.length >= mostExtensions) {
+    throw conflict(
+      'too-long',
+      `A search makes at most ${mostEvaluations} evaluations in all, with at most ${mostExtensions} extensions.`,
+    )
+  }
 }
 
 /** Ends a search for good; what it found stays. */

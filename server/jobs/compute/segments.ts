@@ -5,6 +5,7 @@ import {
   previewChunk as previewJob,
   segmentJob,
   type Find,
+  type GivenStart,
   type PolytopeEntry,
   type PolytopeSource,
   type SearchState,
@@ -16,11 +17,12 @@ import { outcomeView } from './outcomeView.ts'
 /** What this thread keeps between jobs; it spares time and alters no result. */
 const session = new JobSession()
 const scopes = new Map<string, readonly PolytopeEntry[]>()
+const starts = new Map<string, readonly GivenStart[]>()
 
 /** Carries one island of a search on. */
 export function searchSegment({ problem, state, evaluations }: SegmentInput): SegmentOutput {
   const begun = performance.now()
-  const { rule, polytopes, method, seed, island, settings } = problem
+  const { rule, polytopes, method, seed, island, settings, extensions } = problem
   const output = sound(
     segmentJob(
       {
@@ -31,6 +33,8 @@ export function searchSegment({ problem, state, evaluations }: SegmentInput): Se
         seed,
         island,
         evaluations,
+        starts: kept(starts, problem.starts),
+        extensions,
         state: stateOf(state),
         // Near the end of a small space new classes get rare: a segment must end all the same.
         proposals: 20 * evaluations + 2_000,
@@ -120,15 +124,18 @@ export const stateOf = (text: string | null) => (text === null ? null : (JSON.pa
 export const scopeSource = (text: string): PolytopeSource => session.sourceOf(entriesOf(text))
 
 /** The polytopes of a scope; the last few scopes stay parsed. */
-function entriesOf(text: string): readonly PolytopeEntry[] {
-  const entries = scopes.get(text) ?? (JSON.parse(text) as PolytopeEntry[])
-  scopes.delete(text)
-  scopes.set(text, entries)
-  for (const oldest of scopes.keys()) {
-    if (scopes.size <= 4) break
-    scopes.delete(oldest)
+const entriesOf = (text: string): readonly PolytopeEntry[] => kept(scopes, text)
+
+/** A list as the same array for the same text, as long as it is among the last few. */
+function kept<Row>(lists: Map<string, readonly Row[]>, text: string): readonly Row[] {
+  const list = lists.get(text) ?? (JSON.parse(text) as Row[])
+  lists.delete(text)
+  lists.set(text, list)
+  for (const oldest of lists.keys()) {
+    if (lists.size <= 4) break
+    lists.delete(oldest)
   }
-  return entries
+  return list
 }
 
 interface Failed {
