@@ -20,7 +20,10 @@ export interface SearchRate {
   readonly evaluations: number
   readonly rate: number
   readonly islands: number
-  /** 95 % interval; null under five islands. */
+  /**
+   * 95 % interval; null under five islands. Without hits [0, 3 / n], which takes evaluations for independent and is
+   * too narrow where they are not.
+   */
   readonly interval: readonly [low: number, high: number] | null
 }
 
@@ -29,7 +32,8 @@ export interface SearchRate {
  * chain are correlated, its islands are independent. Islands are drawn with replacement, 2,000 times, and the
  * 2.5 % and 97.5 % quantiles of the pooled rate are the interval (Efron 1979); its width is multiplied by
  * sqrt(n / (n - 1)), since resampling n islands underestimates their spread by that much. With few islands it is
- * rough. Deterministic: the generator has a fixed seed.
+ * rough. Without any hit resampling says nothing, and the rule of three takes its place. Deterministic: the
+ * generator has a fixed seed.
  *
  * @returns null without evaluations
  */
@@ -39,7 +43,9 @@ export function searchRate(islands: readonly IslandCount[]): SearchRate | null {
   if (pooled === null) return null
   const hits = begun.reduce((sum, island) => sum + island.hits, 0)
   const evaluations = begun.reduce((sum, island) => sum + island.evaluations, 0)
-  return { hits, evaluations, rate: pooled, islands: begun.length, interval: resampled(begun, pooled) }
+  const interval: [number, number] | null =
+    hits === 0 ? [0, Math.min(1, 3 / evaluations)] : resampled(begun, pooled)
+  return { hits, evaluations, rate: pooled, islands: begun.length, interval }
 }
 
 function resampled(islands: readonly IslandCount[], pooled: number): [number, number] | null {

@@ -29,10 +29,9 @@ export interface AgainstNull {
 }
 
 export function againstNull({ progress, null: sample, ownHitLine, method }: AgainstNullOf): AgainstNull {
-  const counts = progress.islands.flatMap(({ hits, evaluations }) =>
-    hits === undefined ? [] : [{ hits, evaluations }],
-  )
-  const rate = counts.length === progress.islands.length ? searchRate(counts) : null
+  const begun = progress.islands.filter(({ evaluations }) => evaluations > 0)
+  const counts = begun.flatMap(({ hits, evaluations }) => (hits === undefined ? [] : [{ hits, evaluations }]))
+  const rate = counts.length === begun.length ? searchRate(counts) : null
   const nullRate = sample?.hit ?? null
   return {
     rate,

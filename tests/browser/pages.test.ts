@@ -30,6 +30,7 @@ const pages = [
   'searches',
   'new-search',
   'search',
+  'compare',
   'shortlists',
   'new-shortlist',
   'shortlist',
@@ -42,6 +43,11 @@ interface SearchRow {
   targetId: string
   state: string
 }
+
+const pick = ({ targetVersionId, scope }: Record<'targetVersionId' | 'scope', unknown>) => ({
+  targetVersionId,
+  scope,
+})
 
 describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 240_000 }, () => {
   let application: Application
@@ -65,6 +71,17 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
     )
     const [search] = detail.searchList
     const [shortlist] = detail.shortlistList
+    // A second search, to compare with: what it is asked to do is what the first one was.
+    const asked = await read<Record<'targetVersionId' | 'scope', unknown>>(
+      `/campaigns/${campaign}/searches/${search.id}`,
+    )
+    const begun = await page.request.post(`${application.address}/api/campaigns/${campaign}/searches`, {
+      headers: { origin: application.address },
+      data: { ...pick(asked), name: 'By chance', method: 'random', budget: 20, seed: 1, islands: 5 },
+    })
+    const { id: second } = (await begun.json()) as { id: string }
+    await page.goto(`${application.address}/campaigns/${campaign}/searches/${second}`)
+    await page.getByText('finished', { exact: true }).waitFor({ timeout: 240_000 })
     const { rows } = await read<{ rows: { candidateKey: string; polytopeKey: string }[] }>(
       `/campaigns/${campaign}/shortlists/${shortlist.id}`,
     )
@@ -79,6 +96,7 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
       .set('searches', `${base}/searches`)
       .set('new-search', `${base}/searches/new?target=${search.targetId}`)
       .set('search', `${base}/searches/${search.id}`)
+      .set('compare', `${base}/searches/compare?with=${search.id},${second}&settings=all`)
       .set('shortlists', `${base}/shortlists`)
       .set('new-shortlist', `${base}/shortlists/new?search=${search.id}`)
       .set('shortlist', `${base}/shortlists/${shortlist.id}`)
@@ -131,5 +149,34 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
       ).toEqual([])
       expect(watched.complaints).toEqual([])
     })
+  })
+
+  it('lays searches side by side that were ticked in the list', async () => {
+    const { page, complaints } = await openPage(browser, 1440)
+    await signInAs(page, application, 'reader')
+    await page.goto(application.address + addresses.get('searches')!)
+    const boxes = page.locator('main table').getByRole('checkbox')
+    await boxes.nth(1).waitFor()
+    await boxes.nth(0).check()
+    await boxes.nth(1).check()
+    await page.getByRole('button', { name: 'Compare (2)' }).click()
+    await page.getByRole('heading', { name: 'Searches side by side' }).waitFor()
+    const figures = page.getByRole('table', { name: 'Figures of the searches' })
+    await figures.getByRole('rowheader', { name: 'Best score' }).waitFor()
+    const settings = page.getByRole('table', { name: 'Settings of the searches' })
+    expect(await settings.getByRole('rowheader').allTextContents()).toEqual([
+      'Method',
+      'Budget',
+      'Islands',
+      'Seed',
+    ])
+    await page.getByRole('radio', { name: '100' }).check()
+    await page.waitForURL(/best=100/)
+    const shared = page.getByRole('table', { name: 'Candidates shared among the best 100' })
+    expect(await shared.getByRole('row').nth(1).textContent()).toContain('(100)')
+    await page.getByRole('button', { name: 'Show “Best score so far” as a table' }).click()
+    await page.getByRole('table', { name: 'Best score over evaluations' }).waitFor()
+    expect(complaints).toEqual([])
+    await page.context().close()
   })
 })

@@ -73,11 +73,8 @@ function SearchHits({ compared: { rate, unsure, isExact } }: { compared: Compare
   if (hits === 0 && !isExact) {
     return (
       <span data-raw={0}>
-        none{' '}
-        <span className="text-soft">
-          ({count}
-          {bins})
-        </span>
+        none in {formatNumber(evaluations)}: below {formatPercent(Math.min(1, 3 / evaluations))}{' '}
+        <span className="text-soft">(95 %, if evaluations were independent{bins})</span>
       </span>
     )
   }

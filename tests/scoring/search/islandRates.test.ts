@@ -23,6 +23,8 @@ describe('hit rate of a search', () => {
     })
     expect(searchRate(new Array(5).fill(island))?.interval).toEqual([0.3, 0.3])
     expect(searchRate([{ hits: 0, evaluations: 0 }])).toBeNull()
+    // No hit at all: the rule of three, since resampling zeros gives zeros.
+    expect(searchRate(new Array(6).fill({ hits: 0, evaluations: 50 }))?.interval).toEqual([0, 0.01])
   })
 
   it('lies inside its interval, which does not depend on the order of islands by much', () => {

@@ -11,7 +11,7 @@ import {
   rarenessText,
 } from '../../../lib/againstNull.ts'
 import { columnDecimals, formatNumber, formatPercent } from '../../../lib/numbers.ts'
-import { SearchHead } from './SearchHead.tsx'
+import { RowName, SearchHead } from './SearchHead.tsx'
 
 type Row = readonly [name: string, cell: (search: ComparedSearch) => ReactNode]
 
@@ -42,7 +42,7 @@ export function FigureTable({
         {rows.map(([name, cell]) => (
           <tr key={name}>
             <th scope="row" className="h-8 border-b pr-4 text-left align-top font-normal text-soft">
-              <span className="inline-block py-1.5 whitespace-nowrap">{name}</span>
+              <RowName>{name}</RowName>
             </th>
             {searches.map((search) => (
               <Td key={search.id} className="min-w-40 py-1.5 align-top whitespace-normal! tabular-nums">
@@ -122,6 +122,13 @@ function hitsCell(search: ComparedSearch): ReactNode {
   const { rate, unsure, isExact } = againstNull(search)
   if (rate === null) return none
   const { hits, evaluations, interval } = rate
+  if (hits === 0 && !isExact)
+    return (
+      <>
+        none in {formatNumber(evaluations)}: below {formatPercent(Math.min(1, 3 / evaluations))}{' '}
+        <span className="text-soft">(95 %, if evaluations were independent)</span>
+      </>
+    )
   const error = isExact
     ? 'exact'
     : interval

@@ -11,3 +11,8 @@ export function SearchHead({ place, name }: { place: number; name?: string }) {
     </span>
   )
 }
+
+/** What a row of a comparison is about; narrow screens break it. */
+export function RowName({ children }: { children: string }) {
+  return <span className="inline-block max-w-28 py-1.5 sm:max-w-none sm:whitespace-nowrap">{children}</span>
+}

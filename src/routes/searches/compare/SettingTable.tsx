@@ -5,7 +5,7 @@ import { describeScope } from '../../../components/scope/scopeAddress.ts'
 import { Num } from '../../../components/ui/Num.tsx'
 import { Table, Td, Th } from '../../../components/ui/Table.tsx'
 import { settingsOf, type Setting } from './settings.ts'
-import { SearchHead } from './SearchHead.tsx'
+import { RowName, SearchHead } from './SearchHead.tsx'
 
 /** What the searches were asked to do: what differs, or everything. */
 export function SettingTable({
@@ -47,10 +47,14 @@ export function SettingTable({
             {shown.map((setting) => (
               <tr key={setting.name}>
                 <th scope="row" className="h-8 border-b pr-4 text-left align-top font-normal text-soft">
-                  <span className="inline-block py-1.5 whitespace-nowrap">{setting.name}</span>
+                  <RowName>{setting.name}</RowName>
                 </th>
-                {searches.map((search) => (
-                  <Td key={search.id} className="min-w-40 py-1.5 align-top whitespace-normal!">
+                {(setting.differs ? searches : searches.slice(0, 1)).map((search) => (
+                  <Td
+                    key={search.id}
+                    colSpan={setting.differs ? 1 : searches.length}
+                    className="min-w-40 py-1.5 align-top whitespace-normal!"
+                  >
                     {valueOf(setting, search, campaign)}
                   </Td>
                 ))}

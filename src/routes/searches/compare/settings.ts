@@ -16,6 +16,7 @@ const settings: readonly Omit<Setting, 'differs'>[] = [
   { name: 'Budget', read: ({ budget }) => budget },
   { name: 'Islands', read: ({ islands }) => islands },
   { name: 'Seed', read: ({ seed }) => seed },
+  { name: 'Surrogate', read: ({ surrogate }) => (surrogate ? 'on' : 'off') },
   { name: 'Keep the best', read: ({ keep }) => keep },
   { name: 'Engine', read: ({ engineVersion }) => engineVersion },
 ]
