@@ -17,6 +17,10 @@ const signedIn: RouteObject[] = [
     lazy: page(async () => (await import('./routes/campaign/CampaignPage.tsx')).CampaignPage),
   },
   {
+    path: 'campaigns/:campaignId/explore',
+    lazy: page(async () => (await import('./routes/explore/ExplorePage.tsx')).ExplorePage),
+  },
+  {
     path: 'campaigns/:campaignId/targets',
     lazy: page(async () => (await import('./routes/targets/TargetsPage.tsx')).TargetsPage),
   },

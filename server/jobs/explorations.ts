@@ -103,8 +103,8 @@ export class Explorations {
     this.#makeRoom(accountId)
     this.#all.set(running.view.id, running)
     // What is cached already is in the first answer.
-    await this.#look(running)
-    void this.#run(running)
+    if ((await this.#look(running)) === null) running.view = { ...running.view, state: 'done' }
+    else void this.#run(running)
     return running.view
   }
 

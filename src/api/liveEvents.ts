@@ -5,10 +5,12 @@ import { type z } from 'zod'
 import { type hodgeCountsSchema } from '../../shared/polytopes.ts'
 import { type PolytopeClasses } from '../../shared/polytopeStructure.ts'
 import { type StreamEvent } from '../../shared/events.ts'
+import { type Exploration } from '../../shared/explorations.ts'
 import { type Certification } from '../../shared/certificates.ts'
 import { type ShortlistDetail } from '../../shared/shortlists.ts'
 import { type SearchDetail, type SearchSummary } from '../../shared/searches.ts'
 import { type Comparison } from '../../shared/comparisons.ts'
+import { explorationKey, newerExploration } from './explorations.ts'
 import { withCertification } from './certificates.ts'
 import { placeRescoring } from './rescorings.ts'
 import { withReport } from './comparisons.ts'
@@ -29,6 +31,13 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
     case 'preview':
       client.setQueryData(previewKey(event.preview.id), event.preview)
       return
+    case 'exploration': {
+      const { exploration } = event
+      client.setQueryData<Exploration>(explorationKey(exploration.id), (known) =>
+        newerExploration(known, exploration),
+      )
+      return
+    }
     case 'certification':
       return applyCertification(client, campaign, event)
     case 'rescoring':
@@ -163,7 +172,10 @@ function applySearch(client: QueryClient, campaign: string, event: StreamEvent &
 }
 
 /** What never goes stale, and what would start work anew. */
-const lasting = new Set(['candidate', 'candidate-spectra', 'class-picture', 'preview', 'preview-start'])
+const lasting = new Set([
+  ...['candidate', 'candidate-spectra', 'class-picture', 'preview', 'preview-start'],
+  ...['exploration-start', 'exploration-rows', 'exploration-opened'],
+])
 
 /** Keeps the tab's stream open for a campaign; returns its state. */
 export function useLiveEvents(campaign: string | null, enabled: boolean): StreamState {

@@ -23,6 +23,7 @@ const views: [width: number, theme: Theme][] = everySize
 const pages = [
   'campaigns',
   'campaign',
+  'explore',
   'library',
   'polytope',
   'targets',
@@ -89,6 +90,10 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
     addresses
       .set('campaigns', '/campaigns')
       .set('campaign', base)
+      .set(
+        'explore',
+        `${base}/explore?polytopes=${rows[0].polytopeKey}&size=100&c=log10(metric.divisor.top)&c=max(d in divisors : d.cubic)&c=h11`,
+      )
       .set('library', '/library')
       .set('polytope', `/library/${rows[0].polytopeKey}`)
       .set('targets', `${base}/targets`)

@@ -29,11 +29,19 @@ function contentOf(hover: HoverResult): HTMLElement {
   return box
 }
 
-/** Definition and formula of what the pointer rests on. */
-export const ruleHover = hoverTooltip(
-  (view, position) => {
-    const hover = hoverAt(view.state.doc.toString(), position)
-    return hover && { pos: hover.from, end: hover.to, above: true, create: () => ({ dom: contentOf(hover) }) }
-  },
-  { hoverTime: 250 },
-)
+/**
+ * Definition and formula of what the pointer rests on.
+ * @param lead what stands before the text to make a rule of it
+ */
+export const hoverAfter = (lead: string) =>
+  hoverTooltip(
+    (view, position) => {
+      const hover = hoverAt(lead + view.state.doc.toString(), lead.length + position)
+      if (!hover) return null
+      const [pos, end] = [hover.from - lead.length, hover.to - lead.length]
+      return { pos, end, above: true, create: () => ({ dom: contentOf(hover) }) }
+    },
+    { hoverTime: 250 },
+  )
+
+export const ruleHover = hoverAfter('')

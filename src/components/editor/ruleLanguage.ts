@@ -3,13 +3,16 @@ import { snippet, type Completion as EditorCompletion, type CompletionSource } f
 import { tags } from '@lezer/highlight'
 import { completions, ruleHighlighting, ruleParser, type Completion } from '../../../scoring/index.ts'
 
+/** The parser of the language with what each piece is coloured as. */
+export const colouredParser = ruleParser.configure({ props: [ruleHighlighting] })
+
 const language = LRLanguage.define({
   name: 'rule',
-  parser: ruleParser.configure({ props: [ruleHighlighting] }),
+  parser: colouredParser,
   languageData: { commentTokens: { line: '#' }, closeBrackets: { brackets: ['(', '"'] } },
 })
 
-const highlighting = HighlightStyle.define([
+export const highlighting = HighlightStyle.define([
   { tag: tags.keyword, color: 'var(--action)', fontWeight: '600' },
   { tag: tags.operatorKeyword, color: 'var(--action)' },
   { tag: tags.function(tags.variableName), color: 'var(--rule-function)' },
@@ -62,22 +65,31 @@ export function fittingOptions(options: readonly Completion[], typed: string): r
   return fitting.some(({ label }) => label === typed) ? [] : fitting
 }
 
-const complete: CompletionSource = (context) => {
-  const result = completions(context.state.doc.toString(), context.pos)
-  if (!result) return null
-  const typed = context.state.sliceDoc(result.from, context.pos)
-  const afterDot = context.state.sliceDoc(result.from - 1, result.from) === '.'
-  if (!context.explicit && typed === '' && !afterDot) return null
-  const options = context.explicit && typed === '' ? result.options : fittingOptions(result.options, typed)
-  return options.length > 0
-    ? { from: result.from, options: options.map(editorCompletion), filter: false }
-    : null
+/**
+ * Completion in a text that is a whole rule, or the end of one.
+ * @param lead what stands before the text; with one, statements are not offered
+ */
+export function completionSource(lead = ''): CompletionSource {
+  return (context) => {
+    const result = completions(lead + context.state.doc.toString(), lead.length + context.pos)
+    if (!result) return null
+    const from = result.from - lead.length
+    const typed = context.state.sliceDoc(from, context.pos)
+    const afterDot = from > 0 && context.state.sliceDoc(from - 1, from) === '.'
+    if (!context.explicit && typed === '' && !afterDot) return null
+    const offered =
+      lead === ''
+        ? result.options
+        : result.options.filter(({ kind, label }) => kind !== 'statement' && label !== 'label')
+    const options = context.explicit && typed === '' ? offered : fittingOptions(offered, typed)
+    return options.length > 0 ? { from, options: options.map(editorCompletion), filter: false } : null
+  }
 }
 
 /** The scoring language for the editor: parser, colours, completion. */
 export function ruleLanguage(): LanguageSupport {
   return new LanguageSupport(language, [
     syntaxHighlighting(highlighting),
-    language.data.of({ autocomplete: complete }),
+    language.data.of({ autocomplete: completionSource() }),
   ])
 }

@@ -54,43 +54,47 @@ export function diagnosticOf(issue: RuleIssue, length: number): Diagnostic {
   }
 }
 
-/** Underlines what the shared checker finds, where it is, after a pause. */
-export const ruleLint = ViewPlugin.fromClass(
-  class {
-    private timers: ReturnType<typeof setTimeout>[] = []
+/** Underlines what a checker finds, where it is, after a pause. */
+export const lintBy = (issuesOf: (text: string) => readonly RuleIssue[]) =>
+  ViewPlugin.fromClass(
+    class {
+      private timers: ReturnType<typeof setTimeout>[] = []
 
-    constructor(private readonly view: EditorView) {
-      this.timers = [setTimeout(() => this.show(true), 0)]
-    }
+      constructor(private readonly view: EditorView) {
+        this.timers = [setTimeout(() => this.show(true), 0)]
+      }
 
-    update(update: ViewUpdate): void {
-      if (!update.docChanged) return
-      this.stop()
-      this.timers = [
-        setTimeout(() => this.show(false), firstDelay),
-        setTimeout(() => this.show(true), wordDelay),
-      ]
-    }
+      update(update: ViewUpdate): void {
+        if (!update.docChanged) return
+        this.stop()
+        this.timers = [
+          setTimeout(() => this.show(false), firstDelay),
+          setTimeout(() => this.show(true), wordDelay),
+        ]
+      }
 
-    destroy(): void {
-      this.stop()
-    }
+      destroy(): void {
+        this.stop()
+      }
 
-    private stop(): void {
-      for (const timer of this.timers) clearTimeout(timer)
-    }
+      private stop(): void {
+        for (const timer of this.timers) clearTimeout(timer)
+      }
 
-    private show(all: boolean): void {
-      const { state } = this.view
-      const text = state.doc.toString()
-      const { issues } = checkRule(text)
-      const shown = all ? issues : withoutWordAtCursor(issues, text, state.selection.main.head)
-      this.view.dispatch(
-        setDiagnostics(
-          state,
-          shown.map((issue) => diagnosticOf(issue, text.length)),
-        ),
-      )
-    }
-  },
-)
+      private show(all: boolean): void {
+        const { state } = this.view
+        const text = state.doc.toString()
+        const issues = issuesOf(text)
+        const shown = all ? issues : withoutWordAtCursor(issues, text, state.selection.main.head)
+        this.view.dispatch(
+          setDiagnostics(
+            state,
+            shown.map((issue) => diagnosticOf(issue, text.length)),
+          ),
+        )
+      }
+    },
+  )
+
+/** For whole rules, by the shared checker. */
+export const ruleLint = lintBy((text) => checkRule(text).issues)

@@ -146,6 +146,7 @@ function MainNavigation({ campaign }: { campaign: CampaignSummary | null }) {
     ...(base && campaign
       ? ([
           [base, campaign.name, true],
+          [`${base}/explore`, 'Explore', false],
           [`${base}/targets`, 'Targets', false],
           [`${base}/searches`, 'Searches', false],
           [`${base}/shortlists`, 'Shortlists', false],

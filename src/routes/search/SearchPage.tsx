@@ -225,6 +225,11 @@ function Commands({ campaign, search }: { campaign: string; search: SearchDetail
         </Button>
       ))}
       <CompareWith campaign={campaign} search={search} />
+      {search.progress.evaluations > 0 && (
+        <ButtonLink to={`/campaigns/${campaign}/explore?search=${search.id}`}>
+          Sample of evaluations
+        </ButtonLink>
+      )}
       {search.shortlists.map((shortlist) => (
         <ButtonLink key={shortlist.id} to={`/campaigns/${campaign}/shortlists/${shortlist.id}`}>
           {shortlist.name}

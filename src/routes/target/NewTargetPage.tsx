@@ -1,6 +1,6 @@
 import { useMemo, useState } from 'react'
 import { flushSync } from 'react-dom'
-import { Link, useNavigate, useParams } from 'react-router-dom'
+import { Link, useLocation, useNavigate, useParams } from 'react-router-dom'
 import { createTargetSchema } from '../../../shared/targets.ts'
 import { checkRule } from '../../../scoring/index.ts'
 import { explain } from '../../api/request.ts'
@@ -19,13 +19,20 @@ require favourable
 score log10(metric.divisor.top)
 `
 
+/** A rule that another page hands over to be worked on. */
+const draftIn = (state: unknown): string | null =>
+  typeof state === 'object' && state !== null && 'draft' in state && typeof state.draft === 'string'
+    ? state.draft
+    : null
+
 export function NewTargetPage() {
   const { campaignId = '' } = useParams()
   const navigate = useNavigate()
+  const location = useLocation()
   const create = useCreateTarget(campaignId)
   const barred = useBarred('targets.edit')
   const [name, setName] = useState('')
-  const [text, setText] = useState(start)
+  const [text, setText] = useState(() => draftIn(location.state) ?? start)
   const [fault, setFault] = useState<string | null>(null)
   const [saved, setSaved] = useState(false)
   const sound = useMemo(() => checkRule(text).ok, [text])
