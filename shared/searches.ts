@@ -20,6 +20,7 @@ export const searchMethods = {
   annealing: 'Annealing: flips and height jitters, cooling with restarts',
   tempering: 'Parallel tempering: four temperatures that exchange their places',
   genetic: 'Genetic: populations of distinct classes, blends and 2-face crossover',
+  lines: 'Line searches: flip after flip along lines of heights; made for rules on the topology',
   exhaustive: 'Exhaustive: every class once; counts first, refuses more than the budget',
   uniform: 'Uniform walk: flips at random, uniform over classes before symmetry in the long run',
   random: 'Random heights: no guidance, for comparison',

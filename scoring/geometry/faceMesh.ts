@@ -67,6 +67,20 @@ export function circuitCoefficient(mesh: FaceMesh, h: number): number {
   return (x[l] - x[i]) * (y[k] - y[i]) - (y[l] - y[i]) * (x[k] - x[i])
 }
 
+/** True when integer heights give the triangulation, every circuit positive. */
+export function isInside(mesh: FaceMesh, heights: ArrayLike<number>): boolean {
+  const { from, twin, sheets } = mesh
+  const { point } = sheets
+  for (let h = 0; h < twin.length; h++) {
+    const g = twin[h]
+    if (g <= h) continue
+    const b = circuitCoefficient(mesh, h)
+    const ends = (2 - b) * heights[point[from[h]]] + b * heights[point[from[g]]]
+    if (!(heights[point[from[previous(h)]]] + heights[point[from[previous(g)]]] - ends > 0)) return false
+  }
+  return true
+}
+
 /**
  * Exchanges the diagonal of the unit parallelogram around the interior half-edge a. Afterwards the four outer
  * edges are a, next(a), twin's b and next(b); the new diagonal is previous(a) and previous(b).

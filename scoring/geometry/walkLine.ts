@@ -2,7 +2,7 @@ import { isGeneric } from './circuits.ts'
 import { classOfMesh, meshOfClass } from './classMesh.ts'
 import { copyMesh } from './faceMesh.ts'
 import { heightBound } from './faceSheets.ts'
-import type { Fraction } from './moving/fractions.ts'
+import { heightsBetween } from './moving/heightsBetween.ts'
 import { LineMotion } from './moving/lineMotion.ts'
 import type { TwoFaceClass } from './twoFaceClass.ts'
 
@@ -48,31 +48,12 @@ export function walkLine(
   const walk = (end: LineWalk['end']): LineWalk => ({ steps, end, at: motion.at.over / motion.at.under })
   while (motion.ahead !== undefined) {
     if (steps.length >= maxSteps) return walk('enough')
-    if (motion.cross() === 'boundary') return walk('boundary')
+    const { over, under } = motion.ahead
+    if (motion.cross() === 'boundary') return { steps, end: 'boundary', at: over / under }
     const inside = heightsBetween(motion.at, motion.ahead, heights, direction, bound)
     if (inside === undefined) continue
     const candidate = classOfMesh(copyMesh(motion.mesh))
     if (isGeneric(candidate, inside)) steps.push({ class: candidate, heights: inside })
   }
   return walk('unbounded')
-}
-
-/** Rounded heights halfway between two walls, or a little past the last one; undefined beyond the bound. */
-function heightsBetween(
-  wall: Fraction,
-  following: Fraction | undefined,
-  heights: ArrayLike<number>,
-  direction: ArrayLike<number>,
-  bound: number,
-): Float64Array | undefined {
-  const t = wall.over / wall.under
-  let length = following === undefined ? Math.max(t, 1) : (following.over / following.under - t) / 2
-  for (let n = 0; n < 20; n++) {
-    const inside = new Float64Array(heights.length)
-    for (let p = 0; p < inside.length; p++)
-      inside[p] = Math.round(heights[p] + (t + length) * direction[p]) + 0
-    if (inside.every((height) => Math.abs(height) <= bound)) return inside
-    length /= 2
-  }
-  return undefined
 }

@@ -1,4 +1,5 @@
 import type { NormalForm } from '../geometry/normalForm.ts'
+import type { Motion } from './lines/motion.ts'
 import { compareMerits, type Merit } from './merit.ts'
 import type { Stage } from './extensions.ts'
 import type { Judgement, Proposal, Prospective, Run } from './method.ts'
@@ -101,7 +102,18 @@ export class ArmRun implements Run {
   }
 
   judge(polytope: number, proposal: Proposal): Judgement | null {
-    const judgement = this.run.judge(this.indexOf(polytope), proposal)
+    return this.counted(this.run.judge(this.indexOf(polytope), proposal))
+  }
+
+  motion(polytope: number, place: PlacedHeights): Motion {
+    return this.run.motion(this.indexOf(polytope), place)
+  }
+
+  judgeMotion(polytope: number, motion: Motion): Omit<Judgement, 'key'> | null {
+    return this.counted(this.run.judgeMotion(this.indexOf(polytope), motion))
+  }
+
+  private counted<J extends Omit<Judgement, 'key'>>(judgement: J | null): J | null {
     this.proposals++
     if (judgement?.isNew) {
       this.evaluations++

@@ -4,6 +4,7 @@ import type { NormalForm } from '../geometry/normalForm.ts'
 import { fineClass } from '../geometry/twoFaceClass.ts'
 import { compareMerits, type Merit } from './merit.ts'
 import type { PlacedHeights } from './sampling.ts'
+import { classWords } from './seenWords.ts'
 
 /** A candidate that a search is given to begin from. */
 export interface GivenStart {
@@ -97,7 +98,7 @@ export class GivenCandidates {
   private scored: number
   private readonly merits: [number, number, number][]
   private sorted: readonly Start[] | undefined
-  private readonly keys: ReadonlySet<string>
+  private words: ReadonlySet<string> | undefined
   evaluations: number
 
   /**
@@ -114,7 +115,6 @@ export class GivenCandidates {
     this.scored = state?.scored ?? 0
     this.merits = (state?.merits ?? []).map(([place, kind, value]) => [place, kind, value])
     this.evaluations = state?.evaluations ?? 0
-    this.keys = new Set(all.map(({ classKey }) => classKey))
   }
 
   state(): GivenState | undefined {
@@ -122,9 +122,11 @@ export class GivenCandidates {
     return { scored: this.scored, merits: [...this.merits], evaluations: this.evaluations }
   }
 
-  /** True of a class that was given, to this island or another. */
-  has(classKey: string): boolean {
-    return this.keys.has(classKey)
+  /** True of a class that was given, to this island or another, by the words of `classWords`. */
+  has(words: readonly [number, number]): boolean {
+    if (this.all.length === 0) return false
+    this.words ??= new Set(this.all.map((given) => this.wordsOf(given).join()))
+    return this.words.has(words.join())
   }
 
   /** The next candidate to score; undefined when none is left. */
@@ -172,5 +174,10 @@ export class GivenCandidates {
       'starts',
       classKey,
     )
+  }
+
+  private wordsOf(given: GivenStart): [number, number] {
+    const polytope = this.scope.indexOf(given.polytopeKey)
+    return classWords(this.form(polytope), this.placed(polytope, given).class, given.classKey)
   }
 }

@@ -11,16 +11,20 @@ import type { Outcome } from '../rules/outcome.ts'
 import { withStep, type Curve } from './curve.ts'
 import type { ExtendedState, Stage } from './extensions.ts'
 import { codeOfHeights } from './heightsCode.ts'
+import type { KeptFind } from './find.ts'
 import { Histogram } from './histogram.ts'
 import type { OutcomeMemo } from './memo.ts'
-import { irregularKind, meritOf } from './merit.ts'
+import { Motion } from './lines/motion.ts'
+import { irregularKind, meritOf, type Merit } from './merit.ts'
 import type { Chain, Judgement, Proposal, Prospective, Run } from './method.ts'
 import { methods, usesStarts } from './methods.ts'
 import type { SearchProblem } from './problem.ts'
+import { PendingFind } from './pendingFind.ts'
 import { RandomStream } from './randomStream.ts'
 import { Reservoir } from './reservoir.ts'
 import { proposalOf, type PlacedHeights } from './sampling.ts'
-import { SeenTable, seenKey } from './seenTable.ts'
+import { SeenTable } from './seenTable.ts'
+import { classWords } from './seenWords.ts'
 import type { SearchSettings } from './settings.ts'
 import { GivenCandidates, startsOfIsland, type Start } from './givenStarts.ts'
 import type { RunEnd, SampledRow, SampleRow, SearchState } from './state.ts'
@@ -53,6 +57,26 @@ export interface Evaluated {
   /** The same at less cost: strictly inside the class, and no more. */
   plainHeights(): Float64Array
 }
+
+/** A class that is evaluated, as far as lists need it. Parts are worked out when asked for. */
+interface Whole {
+  /**
+   * Its key, which decides among equal outcomes where the list of the best is full; null where working it out takes
+   * much longer than the evaluation: then those stay that came first.
+   */
+  readonly key: string | null
+  /** To be called before the search goes on, where parts are going to be asked for later. */
+  hold(): void
+  class(): TwoFaceClass
+  canonical(): CanonicalClass
+  /** Integer heights that give the class, perhaps only with ties or next to it. */
+  heights(): Float64Array
+  /** With the report. */
+  outcome(): Outcome
+}
+
+/** Greater than any key. */
+const afterAllKeys = 'z'
 
 /** An island at work: a state opened up, which the chain of its method drives. */
 export class Island implements Run {
@@ -154,7 +178,7 @@ export class Island implements Run {
       curve: this.curve,
       histogram: this.histogram.state(),
       sample: this.sample.state(),
-      top: [...this.top.list()],
+      top: this.settledTop(),
       seen: this.seen.state(),
       surrogate: this.surrogate?.state() ?? null,
       chain: this.chain.state(),
@@ -163,7 +187,18 @@ export class Island implements Run {
     }
   }
 
-  /** Class keys of the candidates that entered the list of the best since this island was opened. */
+  /** The list of the best as plain data. */
+  private settledTop(): readonly KeptFind[] {
+    this.top.replace((row) => {
+      if (!(row instanceof PendingFind)) return row
+      const settled = row.settled()
+      this.entered.add(settled.classKey)
+      return settled
+    })
+    return [...this.top.list()]
+  }
+
+  /** Class keys of the candidates that entered the list of the best since this island was opened, as of the last `state()`. */
   get newcomers(): ReadonlySet<string> {
     return this.entered
   }
@@ -229,7 +264,7 @@ export class Island implements Run {
   judge(polytope: number, proposal: Proposal): Judgement | null {
     const form = this.form(polytope)
     const canonical = this.canonical(form, proposal.class)
-    const [high, low] = seenKey(form.key, canonical.key)
+    const [high, low] = classWords(form, proposal.class, canonical.key)
     this.proposals++
     const known = proposal.distinct ? null : this.seen.find(high, low)
     if (known !== null) {
@@ -243,35 +278,76 @@ export class Island implements Run {
       return null
     }
     const outcome = this.outcome(form, canonical.class, canonical.key)
-    const witness = (): Float64Array =>
-      transportHeights(witnessHeights(proposal.class, heights), canonical.relabelling)
+    const merit = this.record(form, proposal.distinct ? null : [high, low], outcome, {
+      key: canonical.key,
+      hold() {},
+      class: () => proposal.class,
+      canonical: () => canonical,
+      heights: () => heights,
+      outcome: () => outcome,
+    })
+    this.surrogate?.learn(form, proposal.class, merit)
+    return { merit, key: canonical.key, isNew: true }
+  }
+
+  motion(polytope: number, place: PlacedHeights): Motion {
+    return new Motion(this.form(polytope), this.problem.rule, place)
+  }
+
+  judgeMotion(polytope: number, motion: Motion): Omit<Judgement, 'key'> | null {
+    const form = this.form(polytope)
+    const [high, low] = motion.words()
+    this.proposals++
+    const known = this.seen.find(high, low)
+    if (known !== null) {
+      this.stalled++
+      return known.kind === irregularKind ? null : { merit: known, isNew: false }
+    }
+    const held = once(() => motion.snapshot())
+    const canonical = once(() => canonicalClass(form, held().class()))
+    const usual = once(() => this.outcome(form, canonical().class, canonical().key))
+    const whole: Whole = {
+      key: null,
+      hold: held,
+      class: () => held().class(),
+      canonical,
+      heights: () => held().heights,
+      outcome: usual,
+    }
+    const merit = this.record(form, [high, low], motion.outcome() ?? usual(), whole)
+    return { merit, isNew: true }
+  }
+
+  /** Counts one evaluation and puts the class on the lists that it belongs to. */
+  private record(
+    form: NormalForm,
+    words: readonly [number, number] | null,
+    outcome: Outcome,
+    whole: Whole,
+  ): Merit {
     const merit = meritOf(outcome)
     this.stalled = 0
     this.evaluations++
-    if (!proposal.distinct) this.seen.add(high, low, merit.kind, merit.value)
-    this.surrogate?.learn(form, proposal.class, merit)
+    if (words !== null) this.seen.add(...words, merit.kind, merit.value)
     // An enumeration meets everything, given or not.
-    const isGiven = !proposal.distinct && this.given.has(canonical.key)
+    const isGiven = words !== null && this.given.has(words)
     if (isGiven) this.given.evaluations++
     this.count(outcome, isGiven)
     if (!isGiven) {
-      const row = { polytopeKey: form.key, classKey: canonical.key, ...merit }
-      const place = this.sample.offer(row, this.stream)
-      if (place !== null && this.hooks.sampled) this.samplers.set(place, witness)
+      const row = (): SampleRow => ({ polytopeKey: form.key, classKey: whole.canonical().key, ...merit })
+      const place = this.sample.offerMade(row, this.stream)
+      if (place !== null && this.hooks.sampled) this.samplers.set(place, witnesses(whole).heights)
     }
-    if (this.top.admits(outcome, canonical.key)) {
-      this.entered.add(canonical.key)
-      this.top.insert({
-        polytopeKey: form.key,
-        classKey: canonical.key,
-        outcome,
-        heights: codeOfHeights(witness()),
-      })
+    if (this.top.admits(outcome, whole.key ?? afterAllKeys)) {
+      const { canonical, outcome: full } = whole
+      this.top.insert(
+        new PendingFind(form.key, outcome, { canonical, outcome: full, heights: witnesses(whole).heights }),
+      )
     }
-    const plain = (): Float64Array =>
-      isGeneric(proposal.class, heights) ? transportHeights(heights, canonical.relabelling) : witness()
-    this.hooks.observe?.({ form, classKey: canonical.key, outcome, heights: witness, plainHeights: plain })
-    return { merit, key: canonical.key, isNew: true }
+    const { observe } = this.hooks
+    if (observe !== undefined)
+      observe({ form, classKey: whole.canonical().key, outcome: whole.outcome(), ...witnesses(whole) })
+    return merit
   }
 
   choose<T>(draw: () => T, placeOf: (drawn: T) => Prospective | null): T {
@@ -281,7 +357,7 @@ export class Island implements Run {
       const place = placeOf(drawn)
       if (place === null) return null
       const form = this.form(place.polytope)
-      const known = this.seen.find(...seenKey(form.key, this.canonical(form, place.class).key))
+      const known = this.seen.find(...classWords(form, place.class))
       return { form, class: place.class, isKnown: known !== null }
     })
   }
@@ -366,4 +442,20 @@ export function requireSameProblem(state: SearchState, digest: string): void {
     'state',
     state.problem,
   )
+}
+
+/** Heights of the canonical class, to be worked out when wanted. */
+function witnesses(whole: Whole): Pick<Evaluated, 'heights' | 'plainHeights'> {
+  whole.hold()
+  const moved = (heights: ArrayLike<number>): Float64Array =>
+    transportHeights(heights, whole.canonical().relabelling)
+  const heights = (): Float64Array => moved(witnessHeights(whole.class(), whole.heights()))
+  const isPlain = (): boolean => isGeneric(whole.class(), whole.heights())
+  return { heights, plainHeights: () => (isPlain() ? moved(whole.heights()) : heights()) }
+}
+
+/** Computes a value on the first call and keeps it. */
+function once<T>(compute: () => T): () => T {
+  let kept: { readonly value: T } | undefined
+  return () => (kept ??= { value: compute() }).value
 }

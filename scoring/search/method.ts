@@ -1,6 +1,7 @@
 import type { NormalForm } from '../geometry/normalForm.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import type { Stage } from './extensions.ts'
+import type { Motion } from './lines/motion.ts'
 import type { Merit } from './merit.ts'
 import type { RandomStream } from './randomStream.ts'
 import type { PlacedHeights } from './sampling.ts'
@@ -74,6 +75,10 @@ export interface Run {
    * @param placeOf where a draw leads; null when nowhere new
    */
   choose<T>(draw: () => T, placeOf: (drawn: T) => Prospective | null): T
+  /** A class of the polytope that can be moved along lines of heights, ready to be judged at every wall. */
+  motion(polytope: number, place: PlacedHeights): Motion
+  /** As `judge`, for the present class of a motion on the polytope. */
+  judgeMotion(polytope: number, motion: Motion): Omit<Judgement, 'key'> | null
   /** Counts a class that was looked at without being judged: progress for what ends segments. */
   look(): void
   /** Replaces the island's share of the budget by the number of classes that it is going to score. */

@@ -2,6 +2,7 @@ import { annealing } from './annealing.ts'
 import { auto } from './auto.ts'
 import { exhaustive } from './exhaustive.ts'
 import { genetic } from './genetic.ts'
+import { lineSearch } from './lines/lineSearch.ts'
 import type { Method } from './method.ts'
 import { randomSampling } from './randomSampling.ts'
 import { tempering } from './tempering.ts'
@@ -13,6 +14,7 @@ export const methods = {
   annealing,
   tempering,
   genetic,
+  lines: lineSearch,
   exhaustive,
   uniform: uniformWalk,
   random: randomSampling,

@@ -5,6 +5,7 @@ import { scoringHash } from '../rules/hash.ts'
 import { engineVersion } from '../version.ts'
 import { methods, type MethodName } from './methods.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
+import { seenWordsVersion } from './seenWords.ts'
 import type { SearchSettings } from './settings.ts'
 import type { GivenStart } from './givenStarts.ts'
 
@@ -66,6 +67,7 @@ export function problemDigest({ polytopes, rule, method, settings, starts = [] }
       .filter(([name, value]) => name !== 'surrogate' || value !== false)
       .sort(([a], [b]) => (a < b ? -1 : 1)),
     ...(starts.length > 0 && { starts: startsDigest(starts) }),
+    seen: seenWordsVersion,
   })
   return hashOf(content).slice(0, 32)
 }

@@ -31,11 +31,16 @@ export class Reservoir<Row> {
    * @returns the place that the row has taken, or null when it was not taken in
    */
   offer(row: Row, stream: RandomStream): number | null {
+    return this.offerMade(() => row, stream)
+  }
+
+  /** The same for a row that is made only when it is taken in. */
+  offerMade(make: () => Row, stream: RandomStream): number | null {
     this.offered++
-    if (this.rows.length < this.capacity) return this.rows.push(row) - 1
+    if (this.rows.length < this.capacity) return this.rows.push(make()) - 1
     const place = stream.below(this.offered)
     if (place >= this.capacity) return null
-    this.rows[place] = row
+    this.rows[place] = make()
     return place
   }
 }

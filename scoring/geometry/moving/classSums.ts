@@ -27,15 +27,29 @@ export class ClassSums {
   private readonly high: Int32Array
   private readonly low: Int32Array
 
-  /** @param cls a class on `form.polytope` */
-  constructor(form: NormalForm, { triangles }: TwoFaceClass) {
+  /** @param of a class on `form.polytope`, or its sums */
+  constructor(
+    private readonly form: NormalForm,
+    of: TwoFaceClass | ClassSums,
+  ) {
     this.group = form.automorphisms
     this.pointCount = form.polytope.pointCount
+    if (of instanceof ClassSums) {
+      this.high = of.high.slice()
+      this.low = of.low.slice()
+      return
+    }
     this.high = new Int32Array(this.group.length)
     this.low = new Int32Array(this.group.length)
+    const { triangles } = of
     for (let t = 0; t < triangles.length; t += 3) {
       this.add(1, triangles[t], triangles[t + 1], triangles[t + 2])
     }
+  }
+
+  /** The same, to move on by itself. */
+  copy(): ClassSums {
+    return new ClassSums(this.form, this)
   }
 
   /** The diagonal (i, j) of the parallelogram i, k, j, l gives way to (k, l). */

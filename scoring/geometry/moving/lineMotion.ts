@@ -60,7 +60,7 @@ export class LineMotion {
     for (let h = 0; h < twin.length; h++) {
       if (twin[h] <= h) continue
       this.halfOf[this.edgeOf[h]] = h
-      if (this.await(h) <= 0) {
+      if (this.await(h, ZERO) <= 0) {
         throw new InvariantError('The heights that a walk starts from do not lie inside the class.')
       }
     }
@@ -77,22 +77,28 @@ export class LineMotion {
     return edge < 0 ? undefined : this.queue.at(edge)
   }
 
-  /** Crosses the next wall. 'boundary': it is the end of the fine cone, and the triangulation is of no more use. */
+  /** Crosses the next wall. 'boundary': it is the end of the fine cone, and the triangulation stays as it is. */
   cross(): 'crossed' | 'boundary' | 'unbounded' {
     const { queue } = this
     const first = queue.first()
     if (first < 0) return 'unbounded'
     const wall = queue.at(first)
-    this.wall = wall
+    const crossed: number[] = []
     for (let edge = first; edge >= 0 && queue.isAt(edge, wall); edge = queue.first()) {
       const h = this.halfOf[edge]
-      if (circuitCoefficient(this.mesh, h) !== 1) return 'boundary'
-      this.exchange(h)
+      if (circuitCoefficient(this.mesh, h) !== 1) {
+        // An exchange is undone by exchanging the new diagonal.
+        for (const done of crossed.reverse()) this.exchange(this.halfOf[done], wall)
+        return 'boundary'
+      }
+      this.exchange(h, wall)
+      crossed.push(edge)
     }
+    this.wall = wall
     return 'crossed'
   }
 
-  private exchange(a: number): void {
+  private exchange(a: number, wall: Fraction): void {
     const { mesh, edgeOf, halfOf } = this
     const { from, twin, sheets } = mesh
     const b = twin[a]
@@ -110,9 +116,9 @@ export class LineMotion {
     for (const outer of [a, b, next(a), next(b)]) {
       if (edgeOf[outer] < 0) continue
       halfOf[edgeOf[outer]] = outer
-      this.await(outer)
+      this.await(outer, wall)
     }
-    this.await(ap)
+    this.await(ap, wall)
     const { point } = sheets
     this.exchanged?.(point[i], point[j], point[k], point[l], sheets.faceOfSlot[Math.floor(a / 3)])
   }
@@ -121,8 +127,10 @@ export class LineMotion {
    * Puts the wall of an interior edge into the queue, if it lies ahead. Where we stand no circuit is negative, so
    * one with a negative slope vanishes here or further on; without a slope it vanishes nowhere or everywhere.
    * Returns its value at t = 0.
+   *
+   * @param here where we stand
    */
-  private await(h: number): number {
+  private await(h: number, here: Fraction): number {
     const { mesh, heights, slopes, queue } = this
     const { from, twin, sheets } = mesh
     const g = twin[h]
@@ -141,7 +149,7 @@ export class LineMotion {
     const { point } = sheets
     const tied = slope === 0 && value === 0
     if (tied && Math.min(point[i], point[j]) < Math.min(point[k], point[l]))
-      queue.put(edge, this.wall.over, this.wall.under)
+      queue.put(edge, here.over, here.under)
     else queue.remove(edge)
     return value
   }

@@ -1,4 +1,5 @@
 import { intersectionNumbers, type IntersectionNumbers } from '../intersectionNumbers.ts'
+import type { Polytope } from '../polytope.ts'
 import type { TwoFaceClass } from '../twoFaceClass.ts'
 import { lowerBound, moveRow } from './sortedRows.ts'
 
@@ -30,7 +31,7 @@ export interface Exchanged {
  * L (v_j - v_l) = L (v_k - v_i). The Euler number stays. All integers, hence exact.
  */
 export class MovingNumbers {
-  readonly start: TwoFaceClass
+  private readonly polytope: Polytope
   readonly triangles: Int32Array
   readonly faceOf: Int32Array
   readonly triangleNumbers: Float64Array
@@ -41,9 +42,9 @@ export class MovingNumbers {
   readonly last: Exchanged
   private readonly euler: number
 
-  constructor(cls: TwoFaceClass) {
-    const numbers = intersectionNumbers(cls)
-    this.start = cls
+  /** @param numbers those of the class, in arrays that are left to the motion */
+  constructor(cls: TwoFaceClass, numbers: IntersectionNumbers = intersectionNumbers(cls)) {
+    this.polytope = cls.polytope
     this.triangles = cls.triangles.slice()
     this.faceOf = cls.faceOf.slice()
     this.triangleNumbers = numbers.triangleNumbers
@@ -62,22 +63,36 @@ export class MovingNumbers {
     }
   }
 
+  /** The same, to move on by itself. */
+  copy(): MovingNumbers {
+    const numbers = this.numbersNow()
+    return new MovingNumbers(this.classNow(), {
+      ...numbers,
+      triangleNumbers: numbers.triangleNumbers.slice(),
+      edges: numbers.edges.slice(),
+      edgeNumbers: numbers.edgeNumbers.slice(),
+      cubes: numbers.cubes.slice(),
+      secondChern: numbers.secondChern.slice(),
+    })
+  }
+
   /** The class as it stands: the arrays are ours and change with the next exchange. */
   classNow(): TwoFaceClass {
-    return { polytope: this.start.polytope, triangles: this.triangles, faceOf: this.faceOf }
+    const { polytope, triangles, faceOf } = this
+    return { polytope, triangles, faceOf }
   }
 
   /** The numbers as they stand: the arrays are ours and change with the next exchange. */
   numbersNow(): IntersectionNumbers {
     const { triangles, triangleNumbers, edges, edgeNumbers, cubes, secondChern, euler } = this
-    const { pointCount } = this.start.polytope
+    const { pointCount } = this.polytope
     return { pointCount, triangles, triangleNumbers, edges, edgeNumbers, cubes, secondChern, euler }
   }
 
   /** The diagonal (i, j) of the parallelogram i, k, j, l on a 2-face gives way to (k, l). */
   exchange(i: number, j: number, k: number, l: number, face: number): void {
     const { last, cubes, secondChern } = this
-    const number = this.start.polytope.twoFaces[face].dualLength
+    const number = this.polytope.twoFaces[face].dualLength
     last.points[0] = i
     last.points[1] = j
     last.points[2] = k
