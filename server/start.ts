@@ -6,6 +6,7 @@ import { isLoopback, StartError, type Config } from './config.ts'
 import type { ServerContext } from './context.ts'
 import { openDataSource } from './data-source.ts'
 import { openSessionStore } from './http/sessions.ts'
+import { recheckMilliseconds, whyClosed } from './http/streamAccess.ts'
 import { openJobs, type JobOptions } from './jobs/jobs.ts'
 import { hasDemo } from './library/demo.ts'
 import { Library } from './library/library.ts'
@@ -17,6 +18,8 @@ import { WriteLock } from './writeLock.ts'
 export interface OpenServer {
   readonly context: ServerContext
   readonly app: Express
+  /** Ends the event streams whose owners may not read them any more; done once a minute. */
+  recheckStreams(): Promise<void>
   /** Lets go of everything, in an order in which nothing is cut off half way. */
   close(): Promise<void>
 }
@@ -43,6 +46,7 @@ export async function openServer(config: Config, options: OpenOptions = {}): Pro
     streams,
     log,
     scheduler: jobs.scheduler,
+    storage: jobs.storage,
     pool: jobs.background,
   })
   const context: ServerContext = {
@@ -57,10 +61,17 @@ export async function openServer(config: Config, options: OpenOptions = {}): Pro
     checkAnswers: options.checkAnswers ?? false,
   }
   const app = buildApp(context, sessions.store)
+  const recheckStreams = () => streams.recheck((owner) => whyClosed(source, sessions.store, owner))
+  const rechecks = setInterval(() => {
+    recheckStreams().catch((error: unknown) => log.error({ err: error }, 'open streams were not checked'))
+  }, recheckMilliseconds)
+  rechecks.unref()
   return {
     context,
     app,
+    recheckStreams,
     close: async () => {
+      clearInterval(rechecks)
       streams.closeAll()
       await jobs.close()
       await writes.idle()

@@ -15,7 +15,7 @@ interface OpenStream extends StreamOwner {
   readonly response: Response
 }
 
-type ClosingReason = Extract<StreamEvent, { kind: 'closed' }>['reason']
+export type ClosingReason = Extract<StreamEvent, { kind: 'closed' }>['reason']
 
 /** The server-sent event streams that are open, one per tab. */
 export class Streams {
@@ -59,6 +59,18 @@ export class Streams {
   /** When an account leaves a campaign. */
   closeMembership(campaignId: string, accountId: string): void {
     this.#close('role-lost', (stream) => stream.campaignId === campaignId && stream.accountId === accountId)
+  }
+
+  /**
+   * Ends the streams whose owners may not read them any more.
+   *
+   * @param whyClosed null when a stream may stay
+   */
+  async recheck(whyClosed: (owner: StreamOwner) => Promise<ClosingReason | null>): Promise<void> {
+    for (const stream of [...this.#open]) {
+      const reason = await whyClosed(stream)
+      if (reason !== null) this.#close(reason, (other) => other === stream)
+    }
   }
 
   closeAll(): void {

@@ -107,6 +107,17 @@ export const searchProgressSchema = z.object({
 })
 export type SearchProgress = z.infer<typeof searchProgressSchema>
 
+/** How a search that runs or is queued stands just now. */
+export const searchStandingSchema = z.discriminatedUnion('kind', [
+  /** Threads that work on it now. */
+  z.object({ kind: z.literal('working'), threads: z.number().int() }),
+  /** Its place among all that wait for one of the server's threads; 1 is next. */
+  z.object({ kind: z.literal('waiting'), place: z.number().int(), threads: z.number().int() }),
+  /** What it has found cannot be saved for a passing reason; it goes on by itself. */
+  z.object({ kind: z.literal('held'), code: z.string(), message: z.string() }),
+])
+export type SearchStanding = z.infer<typeof searchStandingSchema>
+
 export const searchSummarySchema = z.object({
   id: z.string(),
   name: z.string(),
@@ -120,6 +131,8 @@ export const searchSummarySchema = z.object({
   seed: z.number().int(),
   evaluations: z.number().int(),
   best: z.number().nullable(),
+  /** Null when it has ended or rests, or is about to be taken up; absent where lists do not tell it. */
+  standing: searchStandingSchema.nullable().optional(),
   createdAt: z.string(),
   finishedAt: z.string().nullable(),
   author: z.string(),

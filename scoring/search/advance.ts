@@ -66,6 +66,11 @@ function extended(problem: SearchProblem, state: SearchState): SearchState {
 export interface SegmentOptions extends IslandHooks {
   /** End the segment after so many proposals too, whether or not they were new. */
   readonly proposals?: number
+  /**
+   * Asked after each step: end the segment here? Evaluations of one rule differ in cost by orders of magnitude, so
+   * whoever wants segments of some length of time measures it. Where a run is cut never changes its result.
+   */
+  readonly enough?: () => boolean
 }
 
 export interface Segment {
@@ -100,6 +105,7 @@ export function advance(
   const sampled = new Map<number, SampledRow>()
   let next = state
   let from: SearchState
+  let enough = false
   // An extension is taken in between two openings, so that it makes no difference whether a segment ends there.
   do {
     from = extended(problem, next)
@@ -110,11 +116,14 @@ export function advance(
       island.proposals < lastProposal
     ) {
       island.chain.step()
+      enough = options.enough?.() ?? false
+      if (enough) break
     }
     next = island.state()
     for (const key of island.newcomers) newcomers.add(key)
     for (const row of island.sampled()) sampled.set(row.place, row)
   } while (
+    !enough &&
     next.evaluations < lastEvaluation &&
     next.proposals < lastProposal &&
     nextExtension(next, problem.extensions ?? [], problem.settings) !== null

@@ -1,6 +1,6 @@
 import { checkRule } from '../rules/check.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
-import { advance, startState } from './advance.ts'
+import { advance, startState, type SegmentOptions } from './advance.ts'
 import { codeOfHeights } from './heightsCode.ts'
 import { nullProblem } from './nullSample.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
@@ -38,12 +38,14 @@ export function drawCandidates(
   seed: number,
   state: SearchState | null,
   count: number,
+  enough?: SegmentOptions['enough'],
 ): { readonly state: SearchState; readonly rows: readonly DrawnCandidate[]; readonly ended: boolean } {
   const problem = nullProblem({ polytopes, rule: anything }, drawnLimit, 1)
   const rows: DrawnCandidate[] = []
   const { state: next, progress } = advance(problem, state ?? startState(problem, seed), count, {
     // On a small space draws bring nothing new for long: a piece must end all the same.
-    proposals: 4 * count + 50,
+    proposals: enough ? undefined : 4 * count + 50,
+    enough,
     observe: ({ form, classKey, plainHeights }) =>
       rows.push({ candidateKey: classKey, polytopeKey: form.key, heights: codeOfHeights(plainHeights()) }),
   })

@@ -3,7 +3,7 @@ import { ruleOfInput } from '../evaluation/input.ts'
 import type { Hodge } from '../geometry/polytope.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import type { Outcome } from '../rules/outcome.ts'
-import { advance, type Segment, startState } from './advance.ts'
+import { advance, type Segment, startState, type SegmentOptions } from './advance.ts'
 import { OutcomeMemo } from './memo.ts'
 import { isMethodName, methodNames } from './methods.ts'
 import { nullProblem, nullSummary, type NullSummary } from './nullSample.ts'
@@ -106,8 +106,12 @@ export function checkedSettings(settings: unknown): SearchSettings {
   throw new InputError('search.settings', `settings.${path}: ${issue.message}`, `settings.${path}`)
 }
 
-/** Carries one island on by one segment. Pure but for `session`, which only spares time. */
-export function segmentJob(input: SegmentInput, session = new JobSession()): SegmentOutput {
+/** Carries one island on by one segment, of the length that `enough` gives; `session` only spares time. */
+export function segmentJob(
+  input: SegmentInput,
+  session = new JobSession(),
+  enough?: SegmentOptions['enough'],
+): SegmentOutput {
   return guarded(() => {
     if (!isMethodName(input.method)) {
       throw new InputError(
@@ -129,7 +133,7 @@ export function segmentJob(input: SegmentInput, session = new JobSession()): Seg
     const state =
       input.state === null ? startState(problem, input.seed, input.island) : checkedState(input.state)
     const { evaluations, proposals, sampled } = input
-    return advance(problem, state, evaluations, { memo, proposals, sampled })
+    return advance(problem, state, evaluations, { memo, proposals, sampled, enough })
   })
 }
 
@@ -141,6 +145,7 @@ export function previewChunk(
   input: PreviewInput,
   session = new JobSession(),
   clock: Clock = () => 0,
+  enough?: SegmentOptions['enough'],
 ): PreviewOutput {
   return guarded(() => {
     const { rule, memo } = session.ruleOf(input.ruleText)
@@ -150,6 +155,7 @@ export function previewChunk(
     const before = input.state === null ? startState(problem, input.seed) : checkedState(input.state)
     const { state } = advance(problem, before, input.count, {
       memo,
+      enough,
       instrument: (candidate) => timedCandidate(candidate, clock, costs),
       observe: ({ form, classKey, outcome, heights }) => {
         const { h11, h21 } = form.polytope.hodge

@@ -69,12 +69,12 @@ export class Rescoring {
   @Column({ type: 'varchar', nullable: true })
   shortlistId!: string | null
 
-  /** The process that works on it, and until when it may be taken for alive (epoch milliseconds). */
+  /** The process that works on it, and a number that changes while it lives. */
   @Column({ type: 'varchar', nullable: true })
   leaseOwner!: string | null
 
   @Column({ type: 'integer', nullable: true })
-  leaseUntil!: number | null
+  leaseBeat!: number | null
 
   @Column({ type: 'varchar' })
   authorId!: string

@@ -110,12 +110,12 @@ export class Search {
   @Column({ type: 'integer' })
   workMilliseconds!: number
 
-  /** The process that runs it, and until when it may be taken for alive (epoch milliseconds). */
+  /** The process that runs it, and a number that changes while it lives. */
   @Column({ type: 'varchar', nullable: true })
   leaseOwner!: string | null
 
   @Column({ type: 'integer', nullable: true })
-  leaseUntil!: number | null
+  leaseBeat!: number | null
 
   @Column({ type: 'varchar' })
   authorId!: string

@@ -5,10 +5,11 @@ import { z } from 'zod'
 import { uploadLimitBytes } from '../../shared/polytopes.ts'
 import type { Problem } from '../../shared/problems.ts'
 import { Refusal } from '../problems.ts'
+import { storageTrouble, type StorageTrouble } from '../storageTrouble.ts'
 
 /** The one error handler: every failure of a request ends here and becomes a problem document. */
 export const answerProblem: ErrorRequestHandler = (error, request, response, next) => {
-  const refusal = asRefusal(error)
+  const refusal = asRefusal(error) ?? fromStorage(error)
   if (refusal === null) request.log.error({ err: error }, 'a request failed through a fault of the server')
   if (response.headersSent) {
     next(error)
@@ -87,4 +88,16 @@ function fromBodyParser(error: unknown): Refusal | null {
     return new Refusal(error.status, 'bad-request', error.message)
   }
   return null
+}
+
+/** A full disk is neither the caller's mistake nor a bug: it passes. */
+function fromStorage(error: unknown): Refusal | null {
+  const trouble = storageTrouble(error)
+  return trouble && new Refusal(503, trouble.code, requestWords[trouble.code])
+}
+
+const requestWords: Record<StorageTrouble['code'], string> = {
+  'storage-full': 'The disk of the server is full: nothing can be saved. What was saved before is safe.',
+  'storage-busy': 'Another program keeps the database locked: nothing can be saved just now. Try again.',
+  'storage-failed': 'The database cannot be written just now: nothing can be saved. Try again later.',
 }

@@ -4,7 +4,6 @@ import { CertificationTask } from '../entities/certificationTask.ts'
 import { takeCertification } from '../services/certificationCommits.ts'
 import { readCertification } from '../services/certifications.ts'
 import type { JobParts } from './jobParts.ts'
-import { isFree } from './lease.ts'
 import { LeasedRuns } from './leasedRuns.ts'
 import { RunningCertification } from './runningCertification.ts'
 
@@ -18,7 +17,7 @@ export class CertificationRunner {
     this.#runs = new LeasedRuns(parts, {
       entity: Certification,
       word: 'certification',
-      takeUp: (id) => this.#takeUp(id),
+      takeUp: (id, holder) => this.#takeUp(id, holder),
     })
   }
 
@@ -46,13 +45,13 @@ export class CertificationRunner {
     return this.#runs.ended(id)
   }
 
-  async #takeUp(id: string): Promise<void> {
+  async #takeUp(id: string, holder: string | null): Promise<void> {
     const { source, writes, scheduler, streams, closing } = this.#parts
     const certification = await source.manager.findOne(Certification, {
       where: { id, state: In(['queued', 'running']) },
       relations: { targetVersion: true },
     })
-    if (!certification || !isFree(certification)) return
+    if (!certification) return
     const tasks = await source.manager.find(CertificationTask, {
       where: { certificationId: id, state: 'waiting' },
       relations: { candidate: { polytope: true } },
@@ -63,7 +62,7 @@ export class CertificationRunner {
       candidateKey,
       points: candidate?.polytope?.points ?? 0,
     }))
-    const taken = await writes.transaction((manager) => takeCertification(manager, id))
+    const taken = await writes.transaction((manager) => takeCertification(manager, id, holder))
     if (!taken || closing.aborted) return
     const rule = certification.targetVersion?.text ?? null
     const running = new RunningCertification(certification, rule, waiting, this.#parts, (ended) =>

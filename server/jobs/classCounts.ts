@@ -55,6 +55,7 @@ export class ClassCounts {
     let busy = false
     const work: WorkSource = {
       campaignId,
+      lane: 'counts',
       next: () => {
         if (busy) return null
         busy = true
@@ -107,7 +108,10 @@ export class ClassCounts {
   }
 
   #store(key: string, found: Partial<PolytopeRecord>): Promise<unknown> {
-    return this.#parts.writes.transaction((manager) => manager.update(PolytopeRecord, { key }, found))
+    const { storage, writes } = this.#parts
+    return storage.insist(() =>
+      writes.transaction((manager) => manager.update(PolytopeRecord, { key }, found)),
+    )
   }
 
   #tell(key: string, { campaigns, seen }: Count, ended: boolean): void {

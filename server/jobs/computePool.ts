@@ -32,17 +32,36 @@ export interface PoolOptions {
 const ownExtension = import.meta.url.endsWith('.ts') ? '.ts' : '.js'
 const ownWorker = new URL(`../worker${ownExtension}`, import.meta.url)
 
-/** How long a task may take before its thread is taken for stuck and ended. */
+/** How long a task may take before its thread is taken for stuck and ended. The dearest take a minute. */
 export const taskLimitMilliseconds = 10 * 60 * 1000
+
+/**
+ * The same for a piece of a search or of a null sample. Pieces aim at a second; the dearest single evaluation takes a
+ * quarter of one (h11 = 491), some seconds where the threads have a small part of a busy machine.
+ */
+export const pieceLimitMilliseconds = 5 * 60 * 1000
+
+export interface RunOptions {
+  readonly signal?: AbortSignal
+  /** See `taskLimitMilliseconds`. */
+  readonly limitMilliseconds?: number
+  /**
+   * Begin once more on a new thread when the first died or got stuck: tasks are pure, so nothing is done twice. Not
+   * when it ran out of memory or threw, which it would do again.
+   */
+  readonly again?: boolean
+}
 
 /** Worker threads that run named tasks of the engine. */
 export class ComputePool {
   readonly threads: number
   readonly #pool: Piscina
+  readonly #log: Logger
   readonly #closing = new AbortController()
 
   constructor({ threads, nice, log, workerFile = ownWorker, heapMegabytes = 1024 }: PoolOptions) {
     this.threads = threads
+    this.#log = log
     this.#pool = new Piscina({
       filename: fileURLToPath(workerFile),
       minThreads: 0,
@@ -66,9 +85,23 @@ export class ComputePool {
   async run<Name extends TaskName>(
     name: Name,
     input: TaskInput<Name>,
-    signal?: AbortSignal,
+    options: RunOptions = {},
   ): Promise<TaskOutput<Name>> {
-    const limit = AbortSignal.timeout(taskLimitMilliseconds)
+    try {
+      return await this.#once(name, input, options)
+    } catch (error) {
+      if (!options.again || !mayDoBetter(error)) throw error
+      this.#log.warn({ err: error, task: name }, 'a piece of work begins once more')
+    }
+    return this.#once(name, input, options)
+  }
+
+  async #once<Name extends TaskName>(
+    name: Name,
+    input: TaskInput<Name>,
+    { signal, limitMilliseconds = taskLimitMilliseconds }: RunOptions,
+  ): Promise<TaskOutput<Name>> {
+    const limit = AbortSignal.timeout(limitMilliseconds)
     const signals = [this.#closing.signal, limit, ...(signal ? [signal] : [])]
     let answer: TaskAnswer<TaskOutput<Name>>
     try {
@@ -78,8 +111,10 @@ export class ComputePool {
     } catch (error) {
       signal?.throwIfAborted()
       this.#closing.signal.throwIfAborted()
-      if (limit.aborted)
-        throw new ComputeFailure('worker-stuck', 'The computation did not end in ten minutes.')
+      if (limit.aborted) {
+        const seconds = Math.round(limitMilliseconds / 1000)
+        throw new ComputeFailure('worker-stuck', `The computation did not end within ${seconds} seconds.`)
+      }
       const reason = error instanceof Error ? error.message : String(error)
       throw new ComputeFailure('worker-died', `The worker thread ended: ${reason}`, { cause: error })
     }
@@ -96,4 +131,11 @@ export class ComputePool {
     this.#closing.abort(new Error('The server is shutting down.'))
     await this.#pool.destroy()
   }
+}
+
+/** Whether a second try has better prospects. */
+function mayDoBetter(error: unknown): boolean {
+  if (!(error instanceof ComputeFailure) || error.code === 'worker-threw') return false
+  const { cause } = error
+  return !(cause instanceof Error && 'code' in cause && cause.code === 'ERR_WORKER_OUT_OF_MEMORY')
 }

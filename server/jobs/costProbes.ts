@@ -1,6 +1,5 @@
 import { RecentResults } from '../services/recentResults.ts'
 import type { ComputePool } from './computePool.ts'
-import { SegmentPace } from './pace.ts'
 import type { ScoredScope, SearchProblem } from './searchProblem.ts'
 
 /** What an evaluation takes on one thread. */
@@ -53,16 +52,14 @@ export class CostProbes {
       extensions: [],
     }
     const run = (state: string | null, evaluations: number) =>
-      this.#pool.run('search-segment', { problem, state, evaluations })
+      this.#pool.run('search-segment', { problem, state, evaluations, milliseconds: pieceMilliseconds })
     const first = await run(null, 1)
-    const pace = new SegmentPace(pieceMilliseconds)
     let { state, done } = first
     let evaluations = first.progress.evaluations
     let [timed, spent] = [0, 0]
     while (!done && timed < enough && spent < milliseconds) {
-      const output = await run(state, pace.nextEvaluations)
+      const output = await run(state, enough)
       const made = output.progress.evaluations - evaluations
-      pace.note(made, output.milliseconds, Date.now())
       ;({ state, done } = output)
       evaluations = output.progress.evaluations
       timed += made

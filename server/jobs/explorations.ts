@@ -22,7 +22,6 @@ import { storeHeights } from '../services/searchCommits.ts'
 import type { ExploredCandidate } from '../entities/exploredCandidate.ts'
 import { ComputeFailure } from './computePool.ts'
 import type { JobParts } from './jobParts.ts'
-import { SegmentPace } from './pace.ts'
 
 /** Work of one piece on the interactive thread, which previews share. */
 const pieceMilliseconds = 50
@@ -44,7 +43,6 @@ interface Running {
   readonly columns: readonly SoundColumn[]
   /** Identifiers of the stored columns, in the same order. */
   readonly columnIds: readonly string[]
-  readonly pace: SegmentPace
   spent: number
   view: Exploration
 }
@@ -88,7 +86,6 @@ export class Explorations {
       opened,
       columns,
       columnIds,
-      pace: new SegmentPace(pieceMilliseconds),
       spent: 0,
       view: {
         id: randomUUID(),
@@ -287,11 +284,15 @@ export class Explorations {
 
   async #draw(running: Running, state: string | null, drawn: number, wanted: number): Promise<number> {
     const { interactive, writes } = this.#parts
-    const { opened, pace } = running
+    const { opened } = running
     const { polytopes, sampleId, seed } = opened
-    const count = Math.min(wanted, pace.nextEvaluations)
-    const piece = await interactive.run('draw-sample', { polytopes, seed, state, count })
-    pace.note(piece.rows.length, piece.milliseconds, Date.now())
+    const piece = await interactive.run('draw-sample', {
+      polytopes,
+      seed,
+      state,
+      count: wanted,
+      milliseconds: pieceMilliseconds,
+    })
     await writes.transaction((manager) => commitDrawn(manager, sampleId, drawn, piece))
     return piece.milliseconds
   }

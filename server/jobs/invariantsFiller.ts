@@ -81,13 +81,13 @@ export class InvariantsFiller implements WorkSource {
   }
 
   async #fill(): Promise<void> {
-    const { source, writes } = this.#parts
+    const { source, storage, writes } = this.#parts
     const candidates =
       this.#wanted.size > 0
         ? await readForInvariants(source.manager, this.#takeWanted())
         : await this.#nextInOrder()
     const computed = await this.#compute(candidates)
-    await writes.transaction((manager) => storeInvariants(manager, computed))
+    await storage.insist(() => writes.transaction((manager) => storeInvariants(manager, computed)))
   }
 
   #takeWanted(): string[] {

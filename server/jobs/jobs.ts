@@ -5,20 +5,23 @@ import type { PolytopeShape } from './compute/polytopeShape.ts'
 import { RecentResults } from '../services/recentResults.ts'
 import { CertificationRunner } from './certificationRunner.ts'
 import { ClassCounts } from './classCounts.ts'
-import { ComputePool } from './computePool.ts'
+import { ComputePool, pieceLimitMilliseconds } from './computePool.ts'
 import { Explorations } from './explorations.ts'
 import { InvariantsFiller } from './invariantsFiller.ts'
 import type { JobParts } from './jobParts.ts'
 import { CostProbes } from './costProbes.ts'
 import { NullSampler, nullSampleSize } from './nullSampler.ts'
+import { segmentMilliseconds } from './pace.ts'
 import { Previews } from './previews.ts'
 import { RescoringRunner } from './rescoringRunner.ts'
 import { Scheduler } from './scheduler.ts'
 import { SearchRunner } from './searchRunner.ts'
+import { StorageGate } from './storageGate.ts'
 
 /** Everything that runs beside the requests. */
 export interface Jobs {
   readonly scheduler: Scheduler
+  readonly storage: StorageGate
   readonly background: ComputePool
   readonly interactive: ComputePool
   /** A thread for what somebody waits for, but that takes seconds at the largest h11: whole spectra. */
@@ -52,6 +55,10 @@ export interface JobOptions {
   readonly backgroundWorker?: URL
   /** Heap of a background thread. */
   readonly heapMegabytes?: number
+  /** See `segmentMilliseconds`. */
+  readonly segmentMilliseconds?: number
+  /** See `pieceLimitMilliseconds`. */
+  readonly pieceLimitMilliseconds?: number
   /** Size of null samples, by the number of points of the largest polytope. */
   readonly nullSize?: (pointsMax: number) => number
 }
@@ -79,14 +86,40 @@ export function openJobs(
   })
   const interactive = new ComputePool({ threads: 1, nice: interactiveNice, log })
   const unhurried = new ComputePool({ threads: 1, nice: backgroundNice, log })
-  const scheduler = new Scheduler(workers)
-  const all: JobParts = { ...shared, scheduler, background, interactive, closing: closing.signal }
+  const scheduler = new Scheduler(workers, {
+    broken: (source, error) =>
+      log.error({ err: error, campaign: source.campaignId }, 'a source of work broke and was removed'),
+  })
+  const storage = new StorageGate({
+    closing: closing.signal,
+    changed: (trouble) => {
+      if (trouble === null) {
+        log.info('the storage takes writes again')
+        scheduler.release()
+      } else {
+        log.warn({ code: trouble.code }, trouble.message)
+        scheduler.hold()
+      }
+      shared.streams.toAll({ kind: 'changed', what: 'searches' })
+    },
+  })
+  const all: JobParts = {
+    ...shared,
+    scheduler,
+    storage,
+    background,
+    interactive,
+    segmentMilliseconds: options.segmentMilliseconds ?? segmentMilliseconds,
+    pieceLimitMilliseconds: options.pieceLimitMilliseconds ?? pieceLimitMilliseconds,
+    closing: closing.signal,
+  }
   const certifications = new CertificationRunner(all)
   const explorations = new Explorations(all)
   const rescorings = new RescoringRunner(all)
   const searches = new SearchRunner(all, new NullSampler(all, options.nullSize))
   return {
     scheduler,
+    storage,
     background,
     interactive,
     unhurried,

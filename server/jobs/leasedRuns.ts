@@ -1,6 +1,6 @@
 import { In, type EntityTarget } from 'typeorm'
 import type { JobParts } from './jobParts.ts'
-import { isFree, leaseMilliseconds, thisProcess } from './lease.ts'
+import { beatsPerLease, leaseMilliseconds, LeaseWatch, nextBeat, thisProcess } from './lease.ts'
 import type { WorkSource } from './scheduler.ts'
 
 /** A row that some process works on: its lease says which. */
@@ -8,7 +8,7 @@ export interface LeasedRow {
   id: string
   state: string
   leaseOwner: string | null
-  leaseUntil: number | null
+  leaseBeat: number | null
   createdAt: string
 }
 
@@ -25,8 +25,11 @@ interface LeasedRunsOptions {
   readonly entity: EntityTarget<LeasedRow>
   /** What a row is called in the log. */
   readonly word: string
-  /** Takes the lease of an open row that is free and hands its run to `hold`; called for one row at a time. */
-  readonly takeUp: (id: string) => Promise<void>
+  /**
+   * Takes the lease of an open row, if it is still held by `holder` (null: by nobody), and hands its run to `hold`.
+   * Called for one row at a time.
+   */
+  readonly takeUp: (id: string, holder: string | null) => Promise<void>
 }
 
 /** The rows of one table that this process works on: takes them up, keeps their leases, lets them go. */
@@ -38,6 +41,7 @@ export class LeasedRuns<Run extends LeasedRun> {
   /** Runs that were let go of with work still in hand. */
   readonly #settling = new Map<string, Promise<void>>()
   readonly #listeners = new Map<string, (() => void)[]>()
+  readonly #watch = new LeaseWatch()
   #heart: NodeJS.Timeout | null = null
 
   constructor(parts: JobParts, options: LeasedRunsOptions) {
@@ -50,7 +54,7 @@ export class LeasedRuns<Run extends LeasedRun> {
     await this.#takeUpFree()
     this.#heart = setInterval(() => {
       this.#beat().catch((error: unknown) => this.#parts.log.error({ err: error }, 'leases were not renewed'))
-    }, leaseMilliseconds / 3)
+    }, leaseMilliseconds / beatsPerLease)
     this.#heart.unref()
   }
 
@@ -59,13 +63,18 @@ export class LeasedRuns<Run extends LeasedRun> {
     for (const run of this.#running.values()) run.release()
   }
 
-  /** Takes up an open row. */
-  enqueue(id: string): void {
+  /** Those that this process works on. */
+  runs(): Iterable<Run> {
+    return this.#running.values()
+  }
+
+  /** Takes up an open row. `holder`: whose lease has been found to be left behind. */
+  enqueue(id: string, holder: string | null = null): void {
     const before = this.#takingUp.get(id) ?? Promise.resolve()
     const work = before
       .then(() => this.#settling.get(id))
       .then(() =>
-        this.#running.has(id) || this.#parts.closing.aborted ? undefined : this.#options.takeUp(id),
+        this.#running.has(id) || this.#parts.closing.aborted ? undefined : this.#options.takeUp(id, holder),
       )
       .catch((error: unknown) => {
         if (this.#parts.closing.aborted) return
@@ -121,7 +130,7 @@ export class LeasedRuns<Run extends LeasedRun> {
         manager.update(
           this.#options.entity,
           { id: In(ids), leaseOwner: thisProcess },
-          { leaseUntil: Date.now() + leaseMilliseconds },
+          { leaseBeat: nextBeat },
         ),
       )
     }
@@ -130,10 +139,10 @@ export class LeasedRuns<Run extends LeasedRun> {
 
   async #takeUpFree(): Promise<void> {
     const open = await this.#parts.source.manager.find(this.#options.entity, {
-      select: { id: true, leaseOwner: true, leaseUntil: true },
+      select: { id: true, leaseOwner: true, leaseBeat: true },
       where: { state: In(['queued', 'running']) },
       order: { createdAt: 'ASC' },
     })
-    for (const row of open) if (isFree(row)) this.enqueue(row.id)
+    for (const row of open) if (this.#watch.isFree(row.id, row)) this.enqueue(row.id, row.leaseOwner)
   }
 }

@@ -7,8 +7,9 @@ export interface NullChunkInput {
   readonly problem: NullProblem
   /** JSON text of the state after the piece before; null at the beginning. */
   readonly state: string | null
-  /** Candidates of this piece. */
+  /** Candidates of this piece at most, and the time after which no other is begun. */
   readonly evaluations: number
+  readonly milliseconds: number
 }
 
 export interface NullChunkOutput {

@@ -56,12 +56,13 @@ export class NullSampler {
 
 class NullSource implements WorkSource {
   readonly campaignId: string
+  readonly lane = 'samples'
   readonly #address: NullAddress
   readonly #id: string
   readonly #problem: NullProblem
   readonly #parts: JobParts
   readonly #ended: () => void
-  readonly #pace = new SegmentPace()
+  readonly #pace: SegmentPace
   #state: string | null
   #evaluated: number
   #busy = false
@@ -81,6 +82,7 @@ class NullSource implements WorkSource {
     this.#evaluated = sample.summary?.evaluated ?? 0
     this.#problem = problem
     this.#parts = parts
+    this.#pace = new SegmentPace(parts.segmentMilliseconds)
     this.#ended = ended
   }
 
@@ -89,17 +91,24 @@ class NullSource implements WorkSource {
     this.#busy = true
     return this.#draw()
       .catch((error: unknown) => this.#fail(error))
+      .catch((error: unknown) => {
+        const { closing, log } = this.#parts
+        if (!closing.aborted) log.error({ err: error, nullSample: this.#id }, 'no end was written')
+      })
       .finally(() => {
         this.#busy = false
       })
   }
 
   async #draw(): Promise<void> {
-    const { background, writes, source, streams } = this.#parts
-    const input = { problem: this.#problem, state: this.#state, evaluations: this.#pace.nextEvaluations }
-    const output = await background.run('null-chunk', input)
-    this.#pace.note(output.summary.evaluated - this.#evaluated, output.milliseconds, Date.now())
-    await writes.transaction((manager) => commitNullChunk(manager, this.#id, output))
+    const { background, pieceLimitMilliseconds, storage, writes, source, streams } = this.#parts
+    const input = { problem: this.#problem, state: this.#state, ...this.#pace.next }
+    const output = await background.run('null-chunk', input, {
+      limitMilliseconds: pieceLimitMilliseconds,
+      again: true,
+    })
+    this.#pace.note(output.summary.evaluated - this.#evaluated, performance.now())
+    await storage.insist(() => writes.transaction((manager) => commitNullChunk(manager, this.#id, output)))
     this.#state = output.state
     this.#evaluated = output.summary.evaluated
     if (output.done) {
@@ -112,12 +121,12 @@ class NullSource implements WorkSource {
   }
 
   async #fail(error: unknown): Promise<void> {
-    const { closing, log, writes } = this.#parts
+    const { closing, log, storage, writes } = this.#parts
     this.#over = true
     this.#ended()
     if (closing.aborted) return
     log.error({ err: error, nullSample: this.#id }, 'a null sample failed')
     const reason = error instanceof Error ? error.message : String(error)
-    await writes.transaction((manager) => failNullSample(manager, this.#id, reason))
+    await storage.insist(() => writes.transaction((manager) => failNullSample(manager, this.#id, reason)))
   }
 }

@@ -1,34 +1,37 @@
 /** Work of about this length is handed to a thread at a time: often enough for progress, rarely enough for speed. */
-export const segmentMilliseconds = 900
+export const segmentMilliseconds = 1_000
 
 /** How far back the rate of evaluations looks. */
 const windowMilliseconds = 15_000
 
-/** Learns how long evaluations take: sizes segments, and tells the rate by the clock on the wall. */
+/** The size of a segment: evaluations and milliseconds, whichever comes first. */
+export interface SegmentSize {
+  readonly evaluations: number
+  readonly milliseconds: number
+}
+
+/** Sizes the segments of a run, and tells its rate by the time that goes by. */
 export class SegmentPace {
-  readonly #aim: number
-  #millisecondsEach: number | null = null
+  readonly #milliseconds: number
   readonly #recent: { readonly at: number; readonly evaluations: number }[] = []
 
-  /** @param aim milliseconds that a segment should take */
-  constructor(aim = segmentMilliseconds) {
-    this.#aim = aim
+  /**
+   * @param milliseconds that a segment takes. It is the thread that measures them: evaluations of one rule differ in
+   *   cost by a factor of ten thousand (those that fail at the polytope, those that need a spectrum), so no estimate
+   *   from earlier ones would do.
+   */
+  constructor(milliseconds: number) {
+    this.#milliseconds = milliseconds
   }
 
-  /** Evaluations for the next segment. A first segment is small: nothing is known yet. */
-  get nextEvaluations(): number {
-    if (this.#millisecondsEach === null) return 2
-    return Math.max(1, Math.min(20_000, Math.floor(this.#aim / this.#millisecondsEach)))
+  /** The next segment. The first is small, so that there is something to see soon. */
+  get next(): SegmentSize {
+    const evaluations = this.#recent.length === 0 ? 2 : 1_000_000
+    return { evaluations, milliseconds: this.#milliseconds }
   }
 
-  /** Takes note of a segment that ended at `now`. */
-  note(evaluations: number, milliseconds: number, now: number): void {
-    if (evaluations > 0) {
-      const each = Math.max(0.001, milliseconds / evaluations)
-      // Grow carefully: one lucky segment must not make the next one last for minutes.
-      this.#millisecondsEach =
-        this.#millisecondsEach === null ? each : Math.max(each, this.#millisecondsEach / 4)
-    }
+  /** Takes note of a segment that ended at `now`, by a clock that never jumps (milliseconds). */
+  note(evaluations: number, now: number): void {
     this.#recent.push({ at: now, evaluations })
     while (this.#recent.length > 2 && now - this.#recent[0].at > windowMilliseconds) this.#recent.shift()
   }

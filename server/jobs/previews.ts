@@ -90,14 +90,14 @@ export class Previews {
     let state: string | null = null
     let reported = 0
     while (running.preview.state === 'running') {
-      const piece: NullChunkInput = { problem: running.problem, state, evaluations: pace.nextEvaluations }
+      const piece: NullChunkInput = { problem: running.problem, state, ...pace.next }
       const output: PreviewChunkOutput = await interactive.run('preview-chunk', piece)
       if (running.preview.state !== 'running') return
       state = output.state
       rows.push(...output.rows)
-      pace.note(output.rows.length, output.milliseconds, Date.now())
-      if (!output.done && Date.now() - reported < reportMilliseconds) continue
-      reported = Date.now()
+      pace.note(output.rows.length, performance.now())
+      if (!output.done && performance.now() - reported < reportMilliseconds) continue
+      reported = performance.now()
       const { view, shown } = previewView(rows, output.summary, running.requires)
       if (output.done) {
         // So that the pages of the candidates shown can be opened.

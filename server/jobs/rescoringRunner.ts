@@ -4,7 +4,6 @@ import { failRescoring, takeRescoring } from '../services/rescoringCommits.ts'
 import { readRescoring } from '../services/rescorings.ts'
 import { requireSoundRule } from '../services/rules.ts'
 import type { JobParts } from './jobParts.ts'
-import { isFree } from './lease.ts'
 import { LeasedRuns } from './leasedRuns.ts'
 import { RunningRescoring } from './runningRescoring.ts'
 
@@ -18,7 +17,7 @@ export class RescoringRunner {
     this.#runs = new LeasedRuns(parts, {
       entity: Rescoring,
       word: 're-scoring',
-      takeUp: (id) => this.#takeUp(id),
+      takeUp: (id, holder) => this.#takeUp(id, holder),
     })
   }
 
@@ -41,7 +40,7 @@ export class RescoringRunner {
     this.#runs.release(id)
   }
 
-  async #takeUp(id: string): Promise<void> {
+  async #takeUp(id: string, holder: string | null): Promise<void> {
     const { source, writes, scheduler, streams, closing } = this.#parts
     const rescoring = await source.manager
       .createQueryBuilder(Rescoring, 'rescoring')
@@ -50,8 +49,8 @@ export class RescoringRunner {
       .where('rescoring.id = :id', { id })
       .andWhere("rescoring.state IN ('queued', 'running')")
       .getOne()
-    if (!rescoring?.targetVersion || !isFree(rescoring)) return
-    const taken = await writes.transaction((manager) => takeRescoring(manager, id))
+    if (!rescoring?.targetVersion) return
+    const taken = await writes.transaction((manager) => takeRescoring(manager, id, holder))
     if (!taken || closing.aborted) return
     const { targetVersion: version, campaignId } = rescoring
     const tell = async () =>

@@ -23,6 +23,7 @@ const largePoints = 150
  */
 export class RunningCertification implements WorkSource {
   readonly campaignId: string
+  readonly lane = 'certificates'
   readonly id: string
   readonly #rule: string | null
   readonly #waiting: CertificationCandidate[]
@@ -80,7 +81,7 @@ export class RunningCertification implements WorkSource {
       if (result !== null) await this.#commit(candidate, result)
     } catch (error) {
       if (closing.aborted) return
-      // The database would not take it: let go; the request is taken up again when its lease has run out.
+      // The database would not take it: let go; the request is taken up again at the next beat.
       log.error({ err: error, certification: this.id }, 'a certificate could not be stored')
       this.#end()
     }
@@ -96,7 +97,10 @@ export class RunningCertification implements WorkSource {
       })
       if (!polytope) throw new Error('The candidate was read without its polytope.')
       const input = { key: candidateKey, vertices: polytope.coordinates, heights, rule: this.#rule }
-      const output = await background.run('certify-candidate', input, this.#stopped.signal)
+      const output = await background.run('certify-candidate', input, {
+        signal: this.#stopped.signal,
+        again: true,
+      })
       return { kind: 'made', output }
     } catch (error) {
       if (closing.aborted || this.#stopped.signal.aborted) return null
@@ -110,9 +114,10 @@ export class RunningCertification implements WorkSource {
   }
 
   async #commit({ place, candidateKey }: CertificationCandidate, result: TaskResult): Promise<void> {
-    const { writes, source, streams } = this.#parts
-    const committed = await writes.transaction((manager) =>
-      commitTask(manager, { certificationId: this.id, place, candidateKey }, result),
+    const { storage, writes, source, streams } = this.#parts
+    const task = { certificationId: this.id, place, candidateKey }
+    const committed = await storage.insist(() =>
+      writes.transaction((manager) => commitTask(manager, task, result)),
     )
     if (!committed) {
       this.#end()

@@ -18,6 +18,7 @@ const stretchLength = 40
  */
 export class RunningRescoring implements LeasedRun {
   readonly campaignId: string
+  readonly lane = 'lists'
   readonly id: string
   readonly #rescoring: Rescoring
   readonly #scoring: {
@@ -98,14 +99,14 @@ export class RunningRescoring implements LeasedRun {
       await work()
     } catch (error) {
       if (this.#parts.closing.aborted || this.#stopped.signal.aborted) return
-      // Let go; the request is taken up again when its lease has run out.
+      // Let go; the request is taken up again at the next beat.
       this.#parts.log.error({ err: error, rescoring: this.id }, 'a re-scoring came to a halt')
       this.#end()
     }
   }
 
   async #score(keys: readonly string[]): Promise<void> {
-    const { source, writes, background, log, closing } = this.#parts
+    const { source, storage, writes, background, log, closing } = this.#parts
     const candidates = await source.manager.find(CandidateRecord, {
       where: { key: In([...keys]) },
       relations: { polytope: true },
@@ -122,7 +123,7 @@ export class RunningRescoring implements LeasedRun {
           ),
           candidates: candidates.map(({ key, polytopeKey, heights }) => ({ key, polytopeKey, heights })),
         },
-        this.#stopped.signal,
+        { signal: this.#stopped.signal, again: true },
       )
     } catch (error) {
       if (closing.aborted || this.#stopped.signal.aborted) return
@@ -136,8 +137,9 @@ export class RunningRescoring implements LeasedRun {
       outcomes = [] as const
     }
     const values = outcomes.map((outcome, at) => ({ candidateKey: candidates[at].key, outcome }))
-    const open = await writes.transaction((manager) =>
-      commitValues(manager, this.id, this.#scoring.scoringHash, values),
+    const { scoringHash } = this.#scoring
+    const open = await storage.insist(() =>
+      writes.transaction((manager) => commitValues(manager, this.id, scoringHash, values)),
     )
     if (!open) {
       this.#end()
@@ -150,14 +152,13 @@ export class RunningRescoring implements LeasedRun {
   }
 
   async #finish(): Promise<void> {
-    const { source, writes, background, streams } = this.#parts
+    const { source, storage, writes, background, streams } = this.#parts
     const { entrants, finds, assembly } = this.#rescoring
     const { scoringHash, version } = this.#scoring
     const scored = await scoredEntrants(source.manager, scoringHash, entrants)
     if (scored.length === 0) {
-      await writes.transaction((manager) =>
-        failRescoring(manager, this.id, 'None of the candidates could be scored.'),
-      )
+      const failure = 'None of the candidates could be scored.'
+      await storage.insist(() => writes.transaction((manager) => failRescoring(manager, this.id, failure)))
       this.#end()
       await this.#tell()
       return
@@ -169,8 +170,8 @@ export class RunningRescoring implements LeasedRun {
       reportColumns(version.text),
       this.#stopped.signal,
     )
-    const shortlistId = await writes.transaction((manager) =>
-      commitRescoring(manager, this.#rescoring, this.#scoring, list),
+    const shortlistId = await storage.insist(() =>
+      writes.transaction((manager) => commitRescoring(manager, this.#rescoring, this.#scoring, list)),
     )
     this.#end()
     await this.#tell()

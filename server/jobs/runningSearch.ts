@@ -1,3 +1,4 @@
+import type { EntityManager } from 'typeorm'
 import { readHitLine } from '../services/nullSamples.ts'
 import { commitSegment, failSearch, type IslandFind } from '../services/searchCommits.ts'
 import type { Search } from '../entities/search.ts'
@@ -27,7 +28,7 @@ export class RunningSearch implements WorkSource {
   readonly #search: Search
   readonly #islands: readonly Island[]
   readonly #parts: JobParts
-  readonly #pace = new SegmentPace()
+  readonly #pace: SegmentPace
   readonly #ended: (search: RunningSearch) => void
   #finds: readonly IslandFind[]
   #hitLine: HitLine = null
@@ -47,6 +48,7 @@ export class RunningSearch implements WorkSource {
     this.#islands = islands
     this.#finds = finds
     this.#parts = parts
+    this.#pace = new SegmentPace(parts.segmentMilliseconds)
     this.#ended = ended
   }
 
@@ -78,20 +80,28 @@ export class RunningSearch implements WorkSource {
 
   async #runSegment(island: Island): Promise<void> {
     try {
-      const input = { problem: island.problem, state: island.state, evaluations: this.#pace.nextEvaluations }
-      const output = await this.#parts.background.run('search-segment', input)
+      const input = { problem: island.problem, state: island.state, ...this.#pace.next }
+      const { background, pieceLimitMilliseconds } = this.#parts
+      const output = await background.run('search-segment', input, {
+        limitMilliseconds: pieceLimitMilliseconds,
+        again: true,
+      })
       await this.#commit(island, output)
     } catch (error) {
-      await this.#fail(error)
+      await this.#fail(error).catch((error: unknown) => {
+        // Not even that could be written; the row stays ours and is taken up again at the next beat.
+        if (!this.#parts.closing.aborted)
+          this.#parts.log.error({ err: error, search: this.id }, 'no end was written')
+      })
     }
   }
 
   async #commit(island: Island, output: SegmentOutput): Promise<void> {
-    const { writes, streams } = this.#parts
+    const { storage, writes, streams } = this.#parts
     const before = island.progress?.evaluations ?? 0
-    this.#pace.note(output.progress.evaluations - before, output.milliseconds, Date.now())
+    this.#pace.note(output.progress.evaluations - before, performance.now())
     // What other islands have committed meanwhile is read inside the transaction's turn, not before it.
-    const committed = await writes.transaction(async (manager) => {
+    const write = async (manager: EntityManager) => {
       const finds = mergeFinds(this.#finds, island.number, output.finds, this.#search.keep)
       const islands = this.#islands.map((other) => (other === island ? output.progress : other.progress))
       this.#hitLine ??= await readHitLine(manager, this.#search, this.#search.targetVersion?.text ?? '')
@@ -111,7 +121,8 @@ export class RunningSearch implements WorkSource {
         finished: this.#islands.every((other) => (other === island ? output.done : other.done)),
       })
       return state === null ? null : { state, progress, finds }
-    })
+    }
+    const committed = await storage.insist(() => writes.transaction(write))
     if (committed === null) {
       this.#end()
       return
@@ -130,7 +141,7 @@ export class RunningSearch implements WorkSource {
   }
 
   async #fail(error: unknown): Promise<void> {
-    const { writes, streams, log, closing } = this.#parts
+    const { storage, writes, streams, log, closing } = this.#parts
     // A server that shuts down abandons its segments; they are run again at the next start.
     if (closing.aborted || this.#released) return
     this.#end()
@@ -141,7 +152,7 @@ export class RunningSearch implements WorkSource {
     // What a person can put right, such as a scope too large to enumerate, is no fault of the server.
     if (error instanceof Refusal) log.info({ code: error.code, search: this.id }, 'a search was refused')
     else log.error({ err: error, search: this.id }, 'a search failed')
-    await writes.transaction((manager) => failSearch(manager, this.id, failure))
+    await storage.insist(() => writes.transaction((manager) => failSearch(manager, this.id, failure)))
     const progress = mergeProgress(
       this.#islands.map((island) => island.progress),
       { evaluationsPerSecond: null, budget: this.#search.budget, hitLine: this.#hitLine },

@@ -1,5 +1,6 @@
 import { In } from 'typeorm'
 import { engineVersion } from '../../scoring/index.ts'
+import type { SearchStanding } from '../../shared/searches.ts'
 import { CandidateValue } from '../entities/candidateValue.ts'
 import { Find } from '../entities/find.ts'
 import { Search } from '../entities/search.ts'
@@ -9,7 +10,6 @@ import { failSearch, takeLease, type IslandFind } from '../services/searchCommit
 import { originalBudget } from '../services/searchSpecifications.ts'
 import { readStarts } from '../services/searchStarts.ts'
 import type { JobParts } from './jobParts.ts'
-import { isFree } from './lease.ts'
 import { LeasedRuns } from './leasedRuns.ts'
 import type { NullSampler } from './nullSampler.ts'
 import { RunningSearch, type Island } from './runningSearch.ts'
@@ -28,7 +28,7 @@ export class SearchRunner {
     this.#runs = new LeasedRuns(parts, {
       entity: Search,
       word: 'search',
-      takeUp: (id) => this.#takeUp(id),
+      takeUp: (id, holder) => this.#takeUp(id, holder),
     })
   }
 
@@ -65,13 +65,28 @@ export class SearchRunner {
     return this.#runs.ended(searchId)
   }
 
-  async #takeUp(searchId: string): Promise<void> {
+  /** How the searches in the hands of this process stand, by their identifiers. */
+  standings(): Map<string, SearchStanding> {
+    const { scheduler, storage } = this.#parts
+    const inLine = scheduler.standings()
+    const standings = new Map<string, SearchStanding>()
+    for (const run of this.#runs.runs()) {
+      const standing = inLine.get(run)
+      if (storage.trouble) standings.set(run.id, { kind: 'held', ...storage.trouble })
+      else if (!standing) continue
+      else if (standing.place === null) standings.set(run.id, { kind: 'working', threads: standing.inHand })
+      else standings.set(run.id, { kind: 'waiting', place: standing.place, threads: scheduler.slots })
+    }
+    return standings
+  }
+
+  async #takeUp(searchId: string, holder: string | null): Promise<void> {
     const { source, writes, scheduler, streams, closing } = this.#parts
     const search = await source.manager.findOne(Search, {
       where: { id: searchId, state: In(['queued', 'running']) },
       relations: { targetVersion: true },
     })
-    if (!search?.targetVersion || !isFree(search)) return
+    if (!search?.targetVersion) return
     if (search.engineVersion !== engineVersion) {
       await writes.transaction((manager) =>
         failSearch(manager, searchId, engineChanged(search.engineVersion)),
@@ -107,7 +122,7 @@ export class SearchRunner {
       busy: false,
     }))
     const finds = await this.#readFinds(search)
-    const taken = await writes.transaction((manager) => takeLease(manager, searchId))
+    const taken = await writes.transaction((manager) => takeLease(manager, searchId, holder))
     if (!taken || closing.aborted) return
     const running = new RunningSearch(search, islands, finds, this.#parts, (ended) =>
       this.#runs.forget(ended),

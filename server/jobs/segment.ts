@@ -7,8 +7,9 @@ export interface SegmentInput {
   readonly problem: SearchProblem
   /** JSON text of the state after the segment before; null at the beginning. */
   readonly state: string | null
-  /** Evaluations to make at most. */
+  /** Evaluations to make at most, and the time after which no other is begun. */
   readonly evaluations: number
+  readonly milliseconds: number
 }
 
 export interface SegmentFind {

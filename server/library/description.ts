@@ -1,10 +1,11 @@
 import type { Logger } from 'pino'
-import type { DataSource } from 'typeorm'
+import type { DataSource, EntityManager } from 'typeorm'
 import { PolytopeRecord } from '../entities/polytope.ts'
 import type { ComputePool } from '../jobs/computePool.ts'
 import { summaryVersion } from '../jobs/compute/polytopeSummary.ts'
 import type { Scheduler, WorkSource } from '../jobs/scheduler.ts'
 import { readPolytopes } from '../jobs/searchProblem.ts'
+import type { StorageGate } from '../jobs/storageGate.ts'
 import type { Streams } from '../streams.ts'
 import type { WriteLock } from '../writeLock.ts'
 
@@ -15,6 +16,7 @@ export interface DescriptionParts {
   readonly writes: WriteLock
   readonly streams: Streams
   readonly scheduler: Scheduler
+  readonly storage: StorageGate
   readonly pool: ComputePool
   readonly log: Logger
 }
@@ -74,16 +76,17 @@ export class Description {
   }
 
   async #describe(keys: readonly string[]): Promise<void> {
-    const { source, pool, writes } = this.#parts
+    const { source, pool, storage, writes } = this.#parts
     const polytopes = await readPolytopes(source, keys)
     const summaries = await pool.run('summary-of-each', {
       vertices: polytopes.map(({ coordinates }) => coordinates),
     })
-    await writes.transaction(async (manager) => {
+    const write = async (manager: EntityManager) => {
       for (const [at, { key }] of polytopes.entries()) {
         await manager.update(PolytopeRecord, { key }, summaries[at])
       }
-    })
+    }
+    await storage.insist(() => writes.transaction(write))
   }
 }
 

@@ -56,7 +56,7 @@ export class Library {
   }
 
   #loadFrom(file: BundledFile, from: number): Promise<void> {
-    const { scheduler, pool, writes, streams, log } = this.#parts
+    const { scheduler, pool, storage, writes, streams, log } = this.#parts
     let cursor = from
     let failed = false
     // Stretches may be computed side by side, but are stored in order: the stored count must have no gaps.
@@ -81,7 +81,9 @@ export class Library {
             await before
             const answers = await computed
             const rows = stretch.map((source, i) => ({ source, facts: assertedFacts(source, answers[i]) }))
-            await writes.transaction((manager) => storeBundled(manager, file, rows, loaded))
+            await storage.insist(() =>
+              writes.transaction((manager) => storeBundled(manager, file, rows, loaded)),
+            )
             this.#loaded += stretch.length
             streams.toAll({ kind: 'library', loaded: this.#loaded, total: this.#total })
             if (loaded === file.polytopes.length) end(resolve)

@@ -11,6 +11,7 @@ import { ShortlistAssembly1796300300000 } from './1796300300000-shortlistAssembl
 import { ExternalTables1796300300001 } from './1796300300001-externalTables.ts'
 import { SampledEvaluations1796300400000 } from './1796300400000-sampledEvaluations.ts'
 import { Explorations1796300400001 } from './1796300400001-explorations.ts'
+import { LeaseBeats1796300500000 } from './1796300500000-leaseBeats.ts'
 import { Surrogate1796300600000 } from './1796300600000-surrogate.ts'
 
 /** In order. A migration that has been released is never edited. */
@@ -28,5 +29,6 @@ export const migrations = [
   ExternalTables1796300300001,
   SampledEvaluations1796300400000,
   Explorations1796300400001,
+  LeaseBeats1796300500000,
   Surrogate1796300600000,
 ]

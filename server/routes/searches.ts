@@ -15,13 +15,21 @@ import {
 
 export function searchRoutes(app: Express, context: ServerContext): void {
   const { manager } = context.source
+  const { jobs } = context
 
   endpoint(app, context, {
     method: 'get',
     path: '/api/campaigns/:campaign/searches',
     access: 'campaign.read',
     answer: z.array(searchSummarySchema),
-    handle: async ({ campaign }) => (await listSearches(manager, campaign.id)).map(presentSearchSummary),
+    handle: async ({ campaign }) => {
+      const standings = jobs.searches.standings()
+      const searches = await listSearches(manager, campaign.id)
+      return searches.map((search) => ({
+        ...presentSearchSummary(search),
+        standing: standings.get(search.id) ?? null,
+      }))
+    },
   })
 
   endpoint(app, context, {
@@ -39,7 +47,10 @@ export function searchRoutes(app: Express, context: ServerContext): void {
     path: '/api/campaigns/:campaign/searches/:search',
     access: 'campaign.read',
     answer: searchDetailSchema,
-    handle: ({ campaign, params }) => readSearch(manager, campaign.id, params.search),
+    handle: async ({ campaign, params }) => {
+      const search = await readSearch(manager, campaign.id, params.search)
+      return { ...search, standing: jobs.searches.standings().get(search.id) ?? null }
+    },
   })
 
   for (const [word, act] of [

@@ -108,7 +108,7 @@ export async function drawList(
       : await pool.run(
           'assemble-shortlist',
           { contenders, rule, apart: settings.apart, ...(await geometryOf(manager, entrants)) },
-          signal,
+          { signal },
         )
   return {
     chosen: result.chosen.flatMap(({ key, front }) => {

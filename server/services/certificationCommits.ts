@@ -4,14 +4,21 @@ import { CertificateRecord } from '../entities/certificate.ts'
 import { Certification } from '../entities/certification.ts'
 import { CertificationTask } from '../entities/certificationTask.ts'
 import type { CertifyOutput } from '../jobs/compute/certifyCandidate.ts'
-import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
+import { heldBy, nextBeat, thisProcess } from '../jobs/lease.ts'
 
-/** Takes a queued or abandoned request for this process; false when it was cancelled meanwhile. */
-export async function takeCertification(manager: EntityManager, id: string): Promise<boolean> {
+/**
+ * Takes a request that is free (`holder` null) or was left behind by `holder` for this process; false when it was
+ * cancelled or taken by another process meanwhile.
+ */
+export async function takeCertification(
+  manager: EntityManager,
+  id: string,
+  holder: string | null,
+): Promise<boolean> {
   const { affected } = await manager.update(
     Certification,
-    { id, state: In(['queued', 'running']) },
-    { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
+    { id, state: In(['queued', 'running']), leaseOwner: heldBy(holder) },
+    { state: 'running', leaseOwner: thisProcess, leaseBeat: nextBeat },
   )
   return affected !== 0
 }
@@ -37,6 +44,8 @@ export async function commitTask(
     state: In(['queued', 'running']),
   })
   if (certification === null) return undefined
+  // Another process took it over while this one gave no sign of life.
+  if (certification.leaseOwner !== null && certification.leaseOwner !== thisProcess) return undefined
   const mine = { certificationId, place, state: 'waiting' as const }
   if (!(await manager.existsBy(CertificationTask, mine))) return undefined
   let certificateId: string | null = null
@@ -64,8 +73,8 @@ export async function commitTask(
     Certification,
     { id: certificationId },
     finished
-      ? { state: 'finished', leaseOwner: null, leaseUntil: null, finishedAt: new Date().toISOString() }
-      : { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
+      ? { state: 'finished', leaseOwner: null, leaseBeat: null, finishedAt: new Date().toISOString() }
+      : { state: 'running', leaseOwner: thisProcess, leaseBeat: nextBeat },
   )
   return { certificateId, finished }
 }

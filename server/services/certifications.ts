@@ -118,7 +118,7 @@ export async function requestCertification(
       targetVersionId,
       state: 'queued',
       leaseOwner: null,
-      leaseUntil: null,
+      leaseBeat: null,
       authorId,
       createdAt: now,
       finishedAt: null,
@@ -156,7 +156,7 @@ export async function cancelCertification(
     await manager.update(
       Certification,
       { id },
-      { state: 'cancelled', leaseOwner: null, leaseUntil: null, finishedAt: new Date().toISOString() },
+      { state: 'cancelled', leaseOwner: null, leaseBeat: null, finishedAt: new Date().toISOString() },
     )
   })
   jobs.certifications.release(id)

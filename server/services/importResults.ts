@@ -83,7 +83,7 @@ export async function importResult(
       best: progress.best,
       workMilliseconds: 0,
       leaseOwner: null,
-      leaseUntil: null,
+      leaseBeat: null,
       authorId,
       createdAt: now,
       finishedAt: now,

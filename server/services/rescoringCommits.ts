@@ -6,19 +6,26 @@ import { Rescoring } from '../entities/rescoring.ts'
 import { Search } from '../entities/search.ts'
 import { Shortlist } from '../entities/shortlist.ts'
 import type { TargetVersion } from '../entities/targetVersion.ts'
-import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
+import { heldBy, nextBeat, thisProcess } from '../jobs/lease.ts'
 import type { DrawnList, Entrant } from './assemblies.ts'
 import { insertShortlist } from './shortlistCommits.ts'
 import { frozenSearches } from './shortlistGround.ts'
 
 const open = In(['queued', 'running'])
 
-/** Takes a queued or abandoned request for this process; false when it was cancelled meanwhile. */
-export async function takeRescoring(manager: EntityManager, id: string): Promise<boolean> {
+/**
+ * Takes a request that is free (`holder` null) or was left behind by `holder` for this process; false when it was
+ * cancelled or taken by another process meanwhile.
+ */
+export async function takeRescoring(
+  manager: EntityManager,
+  id: string,
+  holder: string | null,
+): Promise<boolean> {
   const { affected } = await manager.update(
     Rescoring,
-    { id, state: open },
-    { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
+    { id, state: open, leaseOwner: heldBy(holder) },
+    { state: 'running', leaseOwner: thisProcess, leaseBeat: nextBeat },
   )
   return affected !== 0
 }
@@ -37,14 +44,14 @@ export async function commitValues(
       ['candidateKey', 'scoringHash'],
     )
   }
-  return takeRescoring(manager, id)
+  return takeRescoring(manager, id, thisProcess)
 }
 
 export async function failRescoring(manager: EntityManager, id: string, failure: string): Promise<void> {
   await manager.update(
     Rescoring,
     { id, state: open },
-    { state: 'failed', failure, leaseOwner: null, leaseUntil: null, finishedAt: new Date().toISOString() },
+    { state: 'failed', failure, leaseOwner: null, leaseBeat: null, finishedAt: new Date().toISOString() },
   )
 }
 
@@ -96,7 +103,7 @@ export async function commitRescoring(
   scoring: { readonly version: TargetVersion; readonly scoringHash: string; readonly engineVersion: string },
   { chosen, counts }: DrawnList,
 ): Promise<string | null> {
-  if (!(await takeRescoring(manager, rescoring.id))) return null
+  if (!(await takeRescoring(manager, rescoring.id, thisProcess))) return null
   const { searches, from, previous } = await sourceOf(manager, rescoring)
   const shortlistId = await insertShortlist(manager, {
     campaignId: rescoring.campaignId,
@@ -121,7 +128,7 @@ export async function commitRescoring(
       shortlistId,
       broken: counts.leftOut.broken,
       leaseOwner: null,
-      leaseUntil: null,
+      leaseBeat: null,
       finishedAt: new Date().toISOString(),
     },
   )

@@ -97,7 +97,7 @@ export async function requestRescoring(
       failure: null,
       shortlistId: null,
       leaseOwner: null,
-      leaseUntil: null,
+      leaseBeat: null,
       authorId,
       createdAt: new Date().toISOString(),
       finishedAt: null,
@@ -140,7 +140,7 @@ export async function cancelRescoring(
     await manager.update(
       Rescoring,
       { id },
-      { state: 'cancelled', leaseOwner: null, leaseUntil: null, finishedAt: new Date().toISOString() },
+      { state: 'cancelled', leaseOwner: null, leaseBeat: null, finishedAt: new Date().toISOString() },
     )
   })
   jobs.rescorings.release(id)

@@ -1,9 +1,9 @@
-import { In, type EntityManager } from 'typeorm'
 import type { SampledRow } from '../../scoring/index.ts'
+import { In, type EntityManager } from 'typeorm'
 import type { SearchProgress } from '../../shared/searches.ts'
 import { Search } from '../entities/search.ts'
 import { SearchIsland } from '../entities/searchIsland.ts'
-import { leaseMilliseconds, thisProcess } from '../jobs/lease.ts'
+import { heldBy, nextBeat, thisProcess } from '../jobs/lease.ts'
 import type { SegmentFind, SegmentOutput } from '../jobs/segment.ts'
 import { recordSearchEvent } from './searchEvents.ts'
 
@@ -27,7 +27,8 @@ export interface SegmentCommit {
 
 /**
  * Commits a segment: the island's state, the search's progress and its finds, all or nothing. A segment that
- * ended after the search was paused is kept, too; one of a cancelled search is not. Returns the search's state
+ * ended after the search was paused is kept, too; one of a cancelled search is not, nor one of a search that another
+ * process works on now. Returns the search's state
  * afterwards, or null when nothing was committed.
  */
 export async function commitSegment(
@@ -35,8 +36,13 @@ export async function commitSegment(
   commit: SegmentCommit,
 ): Promise<Search['state'] | null> {
   const { searchId, island, segment, output, progress, finds } = commit
-  const search = await manager.findOne(Search, { select: { id: true, state: true }, where: { id: searchId } })
+  const search = await manager.findOne(Search, {
+    select: { id: true, state: true, leaseOwner: true },
+    where: { id: searchId },
+  })
   if (search === null || search.state === 'cancelled') return null
+  // Another process took it over while this one gave no sign of life.
+  if (search.leaseOwner !== null && search.leaseOwner !== thisProcess) return null
   const { affected } = await manager.update(
     SearchIsland,
     { searchId, number: island, segment },
@@ -63,7 +69,7 @@ export async function commitSegment(
       best: progress.best,
       workMilliseconds: () => `workMilliseconds + ${Math.round(output.milliseconds)}`,
       leaseOwner: holding ? thisProcess : null,
-      leaseUntil: holding ? Date.now() + leaseMilliseconds : null,
+      leaseBeat: holding ? nextBeat : null,
       ...(state === 'finished' ? { finishedAt: new Date().toISOString() } : {}),
     },
   )
@@ -71,19 +77,25 @@ export async function commitSegment(
   return state
 }
 
-/** Takes a queued or abandoned search for this process; false when it was paused or cancelled meanwhile. */
-export async function takeLease(manager: EntityManager, searchId: string): Promise<boolean> {
+/**
+ * Takes a search that is free (`holder` null) or was left behind by `holder` for this process; false when it was
+ * paused, cancelled or taken by another process meanwhile.
+ */
+export async function takeLease(
+  manager: EntityManager,
+  searchId: string,
+  holder: string | null,
+): Promise<boolean> {
   const before = await manager.findOne(Search, {
-    select: { id: true, leaseOwner: true, evaluations: true },
+    select: { id: true, evaluations: true },
     where: { id: searchId },
   })
   const { affected } = await manager.update(
     Search,
-    { id: searchId, state: In(['queued', 'running']) },
-    { state: 'running', leaseOwner: thisProcess, leaseUntil: Date.now() + leaseMilliseconds },
+    { id: searchId, state: In(['queued', 'running']), leaseOwner: heldBy(holder) },
+    { state: 'running', leaseOwner: thisProcess, leaseBeat: nextBeat },
   )
   if (!affected) return false
-  const holder = before?.leaseOwner ?? null
   if (holder !== null && holder !== thisProcess) await recordSearchEvent(manager, searchId, 'taken-over')
   else if (before?.evaluations === 0) await recordSearchEvent(manager, searchId, 'started')
   return true
@@ -103,7 +115,7 @@ export async function failSearch(
       failureCode: failure.code,
       failureMessage: failure.message,
       leaseOwner: null,
-      leaseUntil: null,
+      leaseBeat: null,
       finishedAt: new Date().toISOString(),
     },
   )

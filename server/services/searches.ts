@@ -146,7 +146,7 @@ export async function createSearch(
       best: null,
       workMilliseconds: 0,
       leaseOwner: null,
-      leaseUntil: null,
+      leaseBeat: null,
       authorId,
       createdAt: new Date().toISOString(),
       finishedAt: null,
@@ -346,7 +346,7 @@ async function move(
       {
         state: step.to,
         leaseOwner: null,
-        leaseUntil: null,
+        leaseBeat: null,
         finishedAt: step.to === 'cancelled' ? new Date().toISOString() : null,
         ...(step.to === 'queued' ? { failureCode: null, failureMessage: null } : {}),
       },

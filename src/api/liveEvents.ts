@@ -63,6 +63,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
       if (event.what === 'external-tables') void client.invalidateQueries({ queryKey: ['shortlist'] })
       if (event.what === 'searches') void client.invalidateQueries({ queryKey: ['comparison', campaign] })
+      // Also whether they are held up, which no event of a single search tells.
+      if (event.what === 'searches') void client.invalidateQueries({ queryKey: ['search'] })
       if (event.what === 'verdicts') {
         void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
         void client.invalidateQueries({ queryKey: ['relatives'] })

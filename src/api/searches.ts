@@ -1,6 +1,11 @@
 import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query'
 import { z } from 'zod'
-import { searchDetailSchema, searchSummarySchema, type CreateSearch } from '../../shared/searches.ts'
+import {
+  searchDetailSchema,
+  searchSummarySchema,
+  type CreateSearch,
+  type SearchState,
+} from '../../shared/searches.ts'
 import { request } from './request.ts'
 
 export const searchesQuery = (campaign: string) =>
@@ -17,8 +22,20 @@ export const searchQuery = (campaign: string, search: string) =>
       request(`/campaigns/${campaign}/searches/${search}`, { schema: searchDetailSchema, signal }),
   })
 
-export const useSearches = (campaign: string) => useQuery(searchesQuery(campaign))
-export const useSearch = (campaign: string, search: string) => useQuery(searchQuery(campaign, search))
+/** How searches stand in line is told by no event: it changes with every piece of anybody's work. */
+const standingMilliseconds = 5_000
+const underWay = ({ state }: { readonly state: SearchState }) => state === 'running' || state === 'queued'
+
+export const useSearches = (campaign: string) =>
+  useQuery({
+    ...searchesQuery(campaign),
+    refetchInterval: ({ state }) => (state.data?.some(underWay) ? standingMilliseconds : false),
+  })
+export const useSearch = (campaign: string, search: string) =>
+  useQuery({
+    ...searchQuery(campaign, search),
+    refetchInterval: ({ state }) => (state.data && underWay(state.data) ? standingMilliseconds : false),
+  })
 
 export function useCreateSearch(campaign: string) {
   const client = useQueryClient()

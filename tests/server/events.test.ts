@@ -1,4 +1,4 @@
-import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it, vi } from 'vitest'
 import { listening, OpenStream, type Listening } from './support/listening.ts'
 import { openTestServer, type TestServer } from './support/testServer.ts'
 
@@ -65,6 +65,38 @@ describe('the event stream', () => {
     await open.ended
     expect(open.events.at(-1)).toEqual({ kind: 'closed', reason: 'role-lost' })
     await expect(stream(cookie)).rejects.toThrow(/404/)
+  })
+
+  it('ends at the next check when its session has run out or its owner was removed by another process', async () => {
+    const { source } = server.context
+    const [lost, expired] = [
+      await stream(await http.cookie('reader')),
+      await stream(await http.cookie('lead')),
+    ]
+    await server.recheckStreams()
+    const { campaignId, accounts } = server
+    await source.query('DELETE FROM membership WHERE campaignId = ? AND accountId = ?', [
+      campaignId,
+      accounts.reader,
+    ])
+    await server.recheckStreams()
+    await lost.ended
+    expect(lost.events.at(-1)).toEqual({ kind: 'closed', reason: 'role-lost' })
+    expect(expired.events).toEqual([])
+    vi.useFakeTimers({ toFake: ['Date'], now: Date.now() + 15 * 24 * 3600 * 1000 })
+    try {
+      await server.recheckStreams()
+    } finally {
+      vi.useRealTimers()
+    }
+    await expired.ended
+    expect(expired.events.at(-1)).toEqual({ kind: 'closed', reason: 'signed-out' })
+    await server.context.writes.transaction((manager) =>
+      manager.query("INSERT INTO membership (campaignId, accountId, role) VALUES (?, ?, 'reader')", [
+        campaignId,
+        accounts.reader,
+      ]),
+    )
   })
 
   it('is forgotten when the tab closes it', async () => {

@@ -6,8 +6,7 @@ import { openDataSource } from '../../server/data-source.ts'
 import { CertificateRecord } from '../../server/entities/certificate.ts'
 import { Certification } from '../../server/entities/certification.ts'
 import { CertificationTask } from '../../server/entities/certificationTask.ts'
-import { Search } from '../../server/entities/search.ts'
-import { topFinds } from '../../server/services/finds.ts'
+import { leftBehind } from './support/leftBehind.ts'
 import { startProcess, startServerProcess } from './support/serverProcess.ts'
 
 const budget = 240
@@ -15,6 +14,7 @@ const search = {
   polytope: 'w50-7-newton-2-2-3-3-7',
   rule: 'score log10(metric.divisor.top)\nreport volume\n',
   settings: { budget, seed: 3, islands: 2, keep: 30 },
+  segmentMilliseconds: 40,
 }
 
 let folder: string
@@ -32,21 +32,7 @@ const evaluations = (lines: readonly string[]): number[] =>
     .flatMap(([word, count]) => (word === 'running' || word === 'finished' ? [Number(count)] : []))
 
 /** All that a finished search left behind. */
-async function result(name: string) {
-  const source = await openDataSource(join(folder, name, 'tessellary.sqlite'))
-  try {
-    const done = await source.manager.findOneByOrFail(Search, {})
-    const finds = await topFinds(source.manager, done, search.settings.keep)
-    return {
-      state: done.state,
-      // The pace is of the clock; all else is of the search.
-      progress: { ...done.progress, evaluationsPerSecond: null, secondsLeft: null },
-      finds: finds.map(({ candidateKey, outcome }) => ({ candidateKey, outcome })),
-    }
-  } finally {
-    await source.destroy()
-  }
-}
+const result = (name: string) => leftBehind(join(folder, name))
 
 describe('a search whose server is killed', () => {
   it('goes on at the next start from the last committed segment, and ends as an undisturbed one', async () => {
@@ -54,11 +40,11 @@ describe('a search whose server is killed', () => {
     await whole.until((lines) => lines.some((line) => line.startsWith('finished')))
     await whole.end('SIGTERM')
 
-    // Killed twice, each time between a commit and the end.
+    // Killed three times: as soon as it has begun anew, between commits, and past the middle.
     let committed = 0
-    for (let n = 0; n < 2; n += 1) {
+    for (const further of [0, 15, 60]) {
       const victim = serve('killed')
-      await victim.until((lines) => evaluations(lines).some((count) => count > committed + 15))
+      await victim.until((lines) => evaluations(lines).some((count) => count > committed + further))
       await victim.end('SIGKILL')
       const counts = evaluations(victim.lines)
       // What was committed before is not done again.
@@ -72,7 +58,7 @@ describe('a search whose server is killed', () => {
     await heir.end('SIGTERM')
 
     const [undisturbed, killed] = [await result('undisturbed'), await result('killed')]
-    expect(undisturbed.state).toBe('finished')
+    expect(undisturbed).toMatchObject({ state: 'finished', integrity: 'ok' })
     expect(undisturbed.progress.evaluations).toBe(budget)
     expect(undisturbed.finds).toHaveLength(30)
     expect(killed).toEqual(undisturbed)

@@ -12,6 +12,7 @@ import {
   type DrawnCandidate,
 } from '../../../scoring/index.ts'
 import type { Cell } from '../../../shared/outcomes.ts'
+import { pieceLength } from './pieceLength.ts'
 import { scopeSource, stateOf } from './segments.ts'
 
 export interface DrawInput {
@@ -20,7 +21,9 @@ export interface DrawInput {
   readonly seed: number
   /** JSON text of the state after the piece before; null at the beginning. */
   readonly state: string | null
+  /** Candidates at most, and the time after which no other is begun. */
   readonly count: number
+  readonly milliseconds: number
 }
 
 export interface DrawnPiece {
@@ -33,9 +36,15 @@ export interface DrawnPiece {
 }
 
 /** Draws the next candidates of the null sample of a scope, as no rule sees them. */
-export function drawSample({ polytopes, seed, state, count }: DrawInput): DrawnPiece {
+export function drawSample({ polytopes, seed, state, count, milliseconds }: DrawInput): DrawnPiece {
   const begun = performance.now()
-  const drawn = drawCandidates(scopeSource(polytopes), seed, stateOf(state), count)
+  const drawn = drawCandidates(
+    scopeSource(polytopes),
+    seed,
+    stateOf(state),
+    count,
+    pieceLength(milliseconds, begun),
+  )
   const { rows, ended } = drawn
   return { rows, ended, state: JSON.stringify(drawn.state), milliseconds: performance.now() - begun }
 }

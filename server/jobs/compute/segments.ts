@@ -13,6 +13,7 @@ import {
 import type { NullChunkInput, NullChunkOutput, PreviewChunkOutput } from '../nullChunk.ts'
 import type { SegmentFind, SegmentInput, SegmentOutput } from '../segment.ts'
 import { outcomeView } from './outcomeView.ts'
+import { pieceLength } from './pieceLength.ts'
 
 /** What this thread keeps between jobs; it spares time and alters no result. */
 const session = new JobSession()
@@ -20,7 +21,7 @@ const scopes = new Map<string, readonly PolytopeEntry[]>()
 const starts = new Map<string, readonly GivenStart[]>()
 
 /** Carries one island of a search on. */
-export function searchSegment({ problem, state, evaluations }: SegmentInput): SegmentOutput {
+export function searchSegment({ problem, state, evaluations, milliseconds }: SegmentInput): SegmentOutput {
   const begun = performance.now()
   const { rule, polytopes, method, seed, island, settings, extensions } = problem
   const output = sound(
@@ -36,11 +37,10 @@ export function searchSegment({ problem, state, evaluations }: SegmentInput): Se
         starts: kept(starts, problem.starts),
         extensions,
         state: stateOf(state),
-        // Near the end of a small space new classes get rare: a segment must end all the same.
-        proposals: 20 * evaluations + 2_000,
         sampled: true,
       },
       session,
+      pieceLength(milliseconds, begun),
     ),
   )
   const { ended, done, ...progress } = output.progress
@@ -61,7 +61,12 @@ export function nullChunk(input: NullChunkInput): NullChunkOutput {
 }
 
 /** The same, with every candidate and what it cost. */
-export function previewChunk({ problem, state, evaluations }: NullChunkInput): PreviewChunkOutput {
+export function previewChunk({
+  problem,
+  state,
+  evaluations,
+  milliseconds,
+}: NullChunkInput): PreviewChunkOutput {
   const begun = performance.now()
   const { rule, polytopes, seed, size } = problem
   const output = sound(
@@ -76,6 +81,7 @@ export function previewChunk({ problem, state, evaluations }: NullChunkInput): P
       },
       session,
       () => performance.now(),
+      pieceLength(milliseconds, begun),
     ),
   )
   const { hitLine, ...summary } = output.summary

@@ -14,6 +14,7 @@ import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { Progress } from '../../components/ui/Progress.tsx'
 import { ScoredTable } from '../../components/ui/ScoredTable.tsx'
+import { SearchStanding } from '../../components/ui/SearchStanding.tsx'
 import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { nullCurves } from '../../lib/againstNull.ts'
@@ -150,6 +151,7 @@ function StateLine({ search }: { search: SearchDetail }) {
   return (
     <div className="mb-4 flex flex-wrap items-center gap-x-6 gap-y-2">
       <SearchStateMark state={search.state} />
+      <SearchStanding standing={search.standing} />
       <div className="flex min-w-60 flex-1 items-center gap-3">
         <Progress value={progress.evaluations} most={budget} label="Evaluations" />
         <span className="whitespace-nowrap">

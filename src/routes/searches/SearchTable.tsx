@@ -1,5 +1,6 @@
 import { Link } from 'react-router-dom'
 import { type SearchSummary } from '../../../shared/searches.ts'
+import { SearchStanding } from '../../components/ui/SearchStanding.tsx'
 import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { Progress } from '../../components/ui/Progress.tsx'
@@ -69,6 +70,9 @@ export function SearchTable({
             </Td>
             <Td>
               <SearchStateMark state={search.state} />
+              <div className="text-xs">
+                <SearchStanding standing={search.standing} />
+              </div>
             </Td>
             <Td>
               <Link to={`/campaigns/${campaign}/targets/${search.targetId}`} className="hover:underline">

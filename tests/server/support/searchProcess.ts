@@ -11,8 +11,13 @@ import { createSearchSchema } from '../../../shared/searches.ts'
 import { bundledEntries, loadEntries } from './bundledSample.ts'
 import { addAccount } from './testServer.ts'
 
-const [polytope, rule, settings] = process.argv.slice(2)
-const server = await openServer(readConfig(process.env), { jobs: { nullSize: () => 50 } })
+const [polytope, rule, settings, segmentMilliseconds] = process.argv.slice(2)
+const server = await openServer(readConfig(process.env), {
+  jobs: {
+    nullSize: () => 50,
+    ...(segmentMilliseconds ? { segmentMilliseconds: Number(segmentMilliseconds) } : {}),
+  },
+})
 const { context } = server
 const { source, streams, jobs } = context
 const report = (line: string) => process.stdout.write(`${line}\n`)
@@ -21,6 +26,13 @@ const send = streams.toCampaign.bind(streams)
 streams.toCampaign = (campaignId, event) => {
   if (event.kind === 'search') report(`${event.state} ${event.progress.evaluations}`)
   send(campaignId, event)
+}
+
+const sendToAll = streams.toAll.bind(streams)
+streams.toAll = (event) => {
+  const { trouble } = jobs.storage
+  if (event.kind === 'changed' && trouble !== null) report(`held ${trouble.code}`)
+  sendToAll(event)
 }
 
 await jobs.searches.start()

@@ -21,10 +21,17 @@ export interface SearchSettings {
 
 export function startServerProcess(
   folder: string,
-  search: { readonly polytope: string; readonly rule: string; readonly settings: SearchSettings },
+  search: {
+    readonly polytope: string
+    readonly rule: string
+    readonly settings: SearchSettings
+    /** Shorter than usual gives more moments between commits. */
+    readonly segmentMilliseconds?: number
+  },
 ): ServerProcess {
-  const { polytope, rule, settings } = search
-  return startProcess(folder, 'searchProcess.ts', [polytope, rule, JSON.stringify(settings)])
+  const { polytope, rule, settings, segmentMilliseconds } = search
+  const length = segmentMilliseconds === undefined ? [] : [String(segmentMilliseconds)]
+  return startProcess(folder, 'searchProcess.ts', [polytope, rule, JSON.stringify(settings), ...length])
 }
 
 /** Runs a script of this folder as a server process. */

@@ -1,3 +1,4 @@
+import type { JobOptions } from '../../../server/jobs/jobs.ts'
 import type { SearchDetail } from '../../../shared/searches.ts'
 import type { StreamEvent } from '../../../shared/events.ts'
 import { bundledEntries, loadEntries } from './bundledSample.ts'
@@ -34,8 +35,11 @@ export interface SmallHunt {
   close(): Promise<void>
 }
 
-export async function openSmallHunt(): Promise<SmallHunt> {
-  const server = await openTestServer({ environment: { WORKERS: '2' }, jobs: { nullSize: () => 60 } })
+export async function openSmallHunt(jobs: JobOptions = {}): Promise<SmallHunt> {
+  const server = await openTestServer({
+    environment: { WORKERS: '2' },
+    jobs: { nullSize: () => 60, ...jobs },
+  })
   await loadEntries(
     server,
     bundledEntries('large', (id) => /^w(9-39|10-46|20-17)-newton/.test(id)),
