@@ -29,7 +29,10 @@ export interface AgainstNull {
 }
 
 export function againstNull({ progress, null: sample, ownHitLine, method }: AgainstNullOf): AgainstNull {
-  const begun = progress.islands.filter(({ evaluations }) => evaluations > 0)
+  // Candidates that the search was given are no finds of its own.
+  const begun = progress.islands
+    .map(({ hits, evaluations, given = 0 }) => ({ hits, evaluations: evaluations - given }))
+    .filter(({ evaluations }) => evaluations > 0)
   const counts = begun.flatMap(({ hits, evaluations }) => (hits === undefined ? [] : [{ hits, evaluations }]))
   const rate = counts.length === begun.length ? searchRate(counts) : null
   const nullRate = sample?.hit ?? null

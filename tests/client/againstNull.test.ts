@@ -37,7 +37,9 @@ const sample: NullSummary = {
   ],
 }
 
-const progressOf = (islands: readonly { evaluations: number; hits?: number; unsure?: number }[]) =>
+const progressOf = (
+  islands: readonly { evaluations: number; given?: number; hits?: number; unsure?: number }[],
+) =>
   ({
     islands: islands.map((island) => ({ best: null, exhausted: false, ...island })),
     curve: [
@@ -63,6 +65,14 @@ describe('a search against its null', () => {
     expect(five.rate?.interval).toEqual([0.2, 0.2])
     expect(five.enrichment && enrichmentText(five.enrichment, false)).toBe('20 times (3.70 to 100, 95 %)')
     expect(two.enrichment && enrichmentText(two.enrichment, false)).toBe('20 times')
+  })
+
+  it('leaves out what the search was given', () => {
+    const given = search([
+      { evaluations: 30, given: 10, hits: 5 },
+      { evaluations: 5, given: 5 },
+    ])
+    expect(againstNull(given).rate).toMatchObject({ hits: 5, evaluations: 20, rate: 0.25 })
   })
 
   it('calls a rule easy whose own hit line the null often meets', () => {

@@ -24,7 +24,8 @@ describe('the address of a comparison', () => {
   })
 })
 
-const search = (id: string, budget: number) => ({ id, budget, seed: 1, state: 'running' }) as ComparedSearch
+const search = (id: string, budget: number) =>
+  ({ id, budget, seed: 1, state: 'running', extensions: [], settings: {} }) as unknown as ComparedSearch
 
 describe('compared searches', () => {
   it('differ where any two of them do', () => {

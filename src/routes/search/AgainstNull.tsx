@@ -39,6 +39,12 @@ export function AgainstNull({ search }: { search: SearchDetail }) {
           {sample.seed}, {formatNumber(sample.evaluated)} candidates
           {sample.complete ? '' : ', still being drawn'}.
         </p>
+        {(search.progress.given ?? 0) > 0 && (
+          <p className="prose-line mt-1 text-xs text-soft">
+            Begun from chosen candidates: {formatNumber(search.progress.given ?? 0)} of the evaluations were
+            given to it, not found, and are left out of these counts. Its curve holds them.
+          </p>
+        )}
         {compared.easy && (
           <p role="note" className="prose-line mt-2 border-l-2 border-null pl-3">
             More than {formatPercent(easyRate)} of the null hits already: most of what this search finds,

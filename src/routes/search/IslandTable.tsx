@@ -27,7 +27,7 @@ export function IslandTable({ search: { progress, state } }: { search: SearchDet
           </tr>
         </thead>
         <tbody>
-          {islands.map(({ evaluations, hits, best, exhausted }, index) => (
+          {islands.map(({ evaluations, given = 0, hits, best, exhausted }, index) => (
             <tr key={index}>
               <Td numeric>{index + 1}</Td>
               <Td numeric>
@@ -37,10 +37,12 @@ export function IslandTable({ search: { progress, state } }: { search: SearchDet
                 <Num value={hits ?? null} />
               </Td>
               <Td numeric>
-                {hits === undefined || evaluations === 0 ? (
+                {hits === undefined || evaluations <= given ? (
                   <span className="text-soft">–</span>
                 ) : (
-                  <span data-raw={hits / evaluations}>{formatPercent(hits / evaluations)}</span>
+                  <span data-raw={hits / (evaluations - given)}>
+                    {formatPercent(hits / (evaluations - given))}
+                  </span>
                 )}
               </Td>
               <Td numeric className="text-found">

@@ -14,9 +14,16 @@ const settings: readonly Omit<Setting, 'differs'>[] = [
   { name: 'Polytopes', read: ({ polytopes }) => polytopes },
   { name: 'Method', read: ({ method }) => method },
   { name: 'Budget', read: ({ budget }) => budget },
+  { name: 'Extensions', read: ({ extensions }) => extensions.map((more) => `+${more}`).join(', ') || 'none' },
+  {
+    name: 'Begun from',
+    read: ({ starts }) => (starts?.used ? `${starts.count} candidates: ${starts.name}` : 'nothing given'),
+  },
   { name: 'Islands', read: ({ islands }) => islands },
   { name: 'Seed', read: ({ seed }) => seed },
   { name: 'Surrogate', read: ({ surrogate }) => (surrogate ? 'on' : 'off') },
+  { name: 'Descents', read: ({ settings: { descents } }) => descents ?? 'default' },
+  { name: 'Patience', read: ({ settings: { patience } }) => patience ?? 'default' },
   { name: 'Keep the best', read: ({ keep }) => keep },
   { name: 'Engine', read: ({ engineVersion }) => engineVersion },
 ]
