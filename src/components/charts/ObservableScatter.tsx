@@ -180,7 +180,7 @@ export function ObservableScatter({
                     fill="none"
                     strokeLinecap="round"
                     strokeWidth={size}
-                    opacity={inside ? (colour ? 0.95 : 0.62) : faint ? 0.22 : 0.62}
+                    opacity={inside ? (colour ? 0.95 : 0.62) : faint ? 0.36 : 0.62}
                     className={
                       colour && shade >= 0
                         ? undefined

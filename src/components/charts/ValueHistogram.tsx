@@ -66,7 +66,7 @@ export function ValueHistogram({
       : null
   // Names that would stand on each other: the first one stays, the others are told by their lines.
   const apart = new Set<string>()
-  let taken = left + 52
+  let taken = left + 68
   for (const [name, value] of marks) {
     if (value === null || (axis.log && value <= 0)) continue
     const half = 3.2 * name.length
