@@ -35,7 +35,7 @@ async function ended(body: object): Promise<Exploration> {
 const rowsOf = async (id: string, from = 0): Promise<ExplorationRows> =>
   (await reader.get(path(`/${id}/rows?from=${from}`)).expect(200)).body as ExplorationRows
 
-describe('an exploration of a null sample', () => {
+describe('an exploration of a null sample', { timeout: 180_000 }, () => {
   it('evaluates columns on candidates nobody selected, with reasons for what is undefined', async () => {
     const done = await ended({ source: nullOf(40), columns })
     expect(done).toMatchObject({ state: 'done', size: 40, evaluated: 40, polytopes: 3, search: null })
@@ -165,7 +165,7 @@ describe('an exploration of a null sample', () => {
   })
 })
 
-describe('tables', () => {
+describe('tables', { timeout: 180_000 }, () => {
   it('carry caution, units, provenance and the chosen columns', async () => {
     const done = await ended({ source: nullOf(20), columns })
     const csv = await reader.get(path(`/${done.id}/export.csv`)).expect(200)

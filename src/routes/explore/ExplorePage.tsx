@@ -45,8 +45,9 @@ export function ExplorePage() {
   return (
     <>
       <PageHead title="Explore" actions={<Commands campaign={campaignId} view={view} state={state} />}>
-        How observables lie on candidates {view.search === null ? 'nobody selected' : 'a search looked at'},
-        before a rule is written.
+        {view.search === null
+          ? 'How observables lie on candidates nobody selected, before a rule is written.'
+          : 'How observables lie on the candidates a search looked at.'}
       </PageHead>
       <div className="grid grid-cols-1 gap-x-8 gap-y-6 border-t pt-4 lg:grid-cols-[340px_minmax(0,1fr)]">
         <div className="flex min-w-0 flex-col gap-5">
