@@ -6,11 +6,12 @@ import { fanFromHeights } from './geometry/fans/fan.ts'
 import { isStrict } from './geometry/fans/fanWalls.ts'
 import { quadraticHeights } from './geometry/heights.ts'
 import { intersectionNumbers } from './geometry/intersectionNumbers.ts'
-import { normalForm } from './geometry/normalForm.ts'
+import { normalForm, type NormalForm } from './geometry/normalForm.ts'
 import { classFromHeights } from './geometry/twoFaceClass.ts'
 import { polytopeFromWeights } from './geometry/weights.ts'
 import { evaluationMemory } from './bench/memory.ts'
-import { candidateOf, largest, small, twentyVertices, workload } from './bench/workloads.ts'
+import { alongFlips } from './bench/alongFlips.ts'
+import { candidateOf, hundred, largest, small, twentyVertices, workload } from './bench/workloads.ts'
 
 interface Measure {
   readonly name: string
@@ -27,6 +28,7 @@ const tolerated = 1.5
 const warmUp = 0.5
 
 const large = workload(largest).form
+const middle = workload(hundred).form
 const little = workload(small).form
 
 const measures: readonly Measure[] = [
@@ -95,13 +97,12 @@ const measures: readonly Measure[] = [
       return milliseconds(() => candidate.topEigenvalue())
     },
   },
-  {
-    name: 'h11 = 10: heights to top eigenvalue',
-    figure: 1.5,
-    unit: 'ms',
-    runs: 400,
-    measure: (run) => milliseconds(() => candidateOf(little, run).topEigenvalue()),
-  },
+  wholeCandidate('h11 = 491', large, 100, 20),
+  wholeCandidate('h11 = 100', middle, 5, 100),
+  wholeCandidate('h11 = 10', little, 0.5, 400),
+  followed('divisors', 'score count(d in divisors : d.k3) + 0.01 * max(d in divisors : d.cubic)'),
+  followed('pairs, curves', 'score min(p in pairs : p.genus) + count(c in curves : c.least < -2)'),
+  followed('nested', 'score count(t in triples : all(d in t.divisors : d.cubic > 0))'),
   {
     name: 'h11 = 491: memory of an evaluation',
     figure: 150,
@@ -110,6 +111,28 @@ const measures: readonly Measure[] = [
     measure: evaluationMemory,
   },
 ]
+
+/** From heights to the top eigenvalue of the metric: what a rule on it costs per candidate. */
+function wholeCandidate(name: string, form: NormalForm, figure: number, runs: number): Measure {
+  return {
+    name: `${name}: heights to top eigenvalue`,
+    figure,
+    unit: 'ms',
+    runs,
+    measure: (run) => milliseconds(() => candidateOf(form, run).topEigenvalue()),
+  }
+}
+
+/** A topological rule at h11 = 491 along flips: 50 ms for a thousand classes are 20,000 a second. */
+function followed(name: string, rule: string): Measure {
+  return {
+    name: `h11 = 491: 1,000 classes along flips, rule on ${name}`,
+    figure: 50,
+    unit: 'ms',
+    runs: 9,
+    measure: (run) => alongFlips(large, rule, run, milliseconds),
+  }
+}
 
 /**
  * Time on one core: the processor time of the process or the time on the clock, whichever is less. The first

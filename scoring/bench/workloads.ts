@@ -16,6 +16,8 @@ export interface Workload {
 
 /** The largest one, h11 = 491 with 495 points. */
 export const largest = [1, 1, 12, 28, 42]
+/** One of middle size, h11 = 100 with 104 points. */
+export const hundred = [1, 2, 5, 5, 13]
 /** A small one, h11 = 10 with 14 points. */
 export const small = [6, 7, 7, 9, 13]
 

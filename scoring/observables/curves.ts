@@ -1,5 +1,6 @@
 import { curveRow, type CurveRows } from '../geometry/curves.ts'
 import { ofCone, ofTopology, SOURCES } from './described.ts'
+import { startsOfEqual } from './memberLists.ts'
 import type { RecordSet, ValueField } from './observable.ts'
 
 /** An integer per row of the curve classes, folded from the row's entries. */
@@ -88,7 +89,7 @@ export const curves: RecordSet = {
       }),
       members: (candidate) => {
         const { edges } = candidate.numbers()
-        return { starts: Int32Array.from({ length: edges.length / 2 + 1 }, (_, e) => 2 * e), items: edges }
+        return { starts: startsOfEqual(2, edges), items: edges }
       },
     },
   ],

@@ -1,5 +1,5 @@
 import { curveRows, type CurveRows } from '../geometry/curves.ts'
-import { divisorTopology } from '../geometry/divisors.ts'
+import { divisorTopology, type DivisorTopology } from '../geometry/divisors.ts'
 import { fibrations, type Fibrations } from '../geometry/fibrations.ts'
 import type { IntersectionNumbers } from '../geometry/intersectionNumbers.ts'
 import type { MovingNumbers } from '../geometry/moving/movingNumbers.ts'
@@ -22,6 +22,8 @@ export class MovingCandidate implements Candidate {
   readonly classKey = ''
   private now: TwoFaceClass
   private itsNumbers: IntersectionNumbers
+  /** Of the polytope, hence never forgotten. */
+  private itsTopology: DivisorTopology | undefined
   private itsCurves: CurveRows | undefined
   private itsFibrations: Fibrations | undefined
 
@@ -59,8 +61,8 @@ export class MovingCandidate implements Candidate {
     return this.itsNumbers
   }
 
-  divisorTopology(): ReturnType<Candidate['divisorTopology']> {
-    return divisorTopology(this.polytope)
+  divisorTopology(): DivisorTopology {
+    return (this.itsTopology ??= divisorTopology(this.polytope))
   }
 
   curves(): CurveRows {

@@ -1,8 +1,9 @@
 import { ofTopology } from './described.ts'
+import { startsOfEqual } from './memberLists.ts'
 import type { RecordSet } from './observable.ts'
 
 const threeEach = (triangles: ArrayLike<number>) => ({
-  starts: Int32Array.from({ length: triangles.length / 3 + 1 }, (_, t) => 3 * t),
+  starts: startsOfEqual(3, triangles),
   items: triangles,
 })
 
