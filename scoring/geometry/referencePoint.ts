@@ -2,7 +2,7 @@ import { InvariantError } from '../errors.ts'
 import { curveRows, type CurveRows } from './curves.ts'
 import { InnerCone } from './innerCone.ts'
 import type { IntersectionNumbers } from './intersectionNumbers.ts'
-import { leastNormPoint } from './quadraticProgram.ts'
+import { leastNormPoint, type LeastNormPoint } from './quadraticProgram.ts'
 import { distinctRows, rowCount, rowsBelow, stackRows } from './sparseRows.ts'
 import type { TwoFaceClass } from './twoFaceClass.ts'
 
@@ -35,8 +35,11 @@ export function referencePoint(
 ): ReferencePoint {
   const cone = new InnerCone(twoFaceClass)
   let rows = distinctRows(curves)
+  let solution: LeastNormPoint | undefined
   for (let rounds = 0; rounds < maximalRounds; rounds++) {
-    const weights = leastNormPoint(numbers.pointCount, rows).point
+    // The rows of the round before come first, in the same order.
+    solution = leastNormPoint(numbers.pointCount, rows, solution)
+    const weights = solution.point
     const violated = rowsBelow(cone.violatedCircuits(weights, violatedBelow), weights, violatedBelow)
     if (rowCount(violated) === 0) return { weights, edgeCurvesSuffice: rounds === 0, rounds }
     rows = distinctRows(stackRows(rows, violated))
