@@ -67,7 +67,7 @@ describe('a time of day that jumps by days, forwards and back', () => {
   it('changes nothing of a search under way', async () => {
     const hunt = await openSmallHunt({ segmentMilliseconds: 20 })
     try {
-      const settings = { seed: 41, budget: 200 }
+      const settings = { seed: 41, budget: 100 }
       const undisturbed = await hunt.finished((await hunt.start(settings)).id)
       const real = Date.now.bind(Date)
       let offset = 0

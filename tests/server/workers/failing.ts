@@ -55,7 +55,7 @@ volume.read = (candidate, scale) => {
   return readVolume(candidate, scale)
 }
 
-/** Ends the thread, once for every thirty evaluations of an island. */
+/** Ends the thread, once for every thirty evaluations of an island, before a segment that is not its first. */
 function dieOnce(folder: string, island: number, state: string): void {
   const { evaluations } = JSON.parse(state) as { readonly evaluations: number }
   const stretch = Math.floor(evaluations / 30)
