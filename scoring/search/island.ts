@@ -357,8 +357,8 @@ export class Island implements Run {
       const place = placeOf(drawn)
       if (place === null) return null
       const form = this.form(place.polytope)
-      const known = this.seen.find(...classWords(form, place.class))
-      return { form, class: place.class, isKnown: known !== null }
+      const isKnown = (): boolean => this.seen.find(...classWords(form, place.class)) !== null
+      return { form, class: place.class, isKnown }
     })
   }
 

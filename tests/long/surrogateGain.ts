@@ -40,7 +40,7 @@ const median = (list: readonly number[]): number => [...list].sort((a, b) => a -
 const shown = (n: number): string => (n === Infinity ? `> ${budget}` : String(n))
 
 /** Best scores after so many evaluations. */
-const marks = [50, 100, 200, budget]
+const marks = [...new Set([50, 100, 200, budget])].filter((mark) => mark <= budget)
 
 interface Outing {
   readonly toHigh: number

@@ -15,7 +15,7 @@ const [skillWindow, fewestPredictions] = [200, 16]
 /** Below this skill the surrogate steps aside. */
 const leastSkill = 0.2
 /** Proposals among which one is chosen, and the share of steps where it has no say. */
-const [choices, exploration] = [12, 0.1]
+const [choices, exploration] = [6, 0.1]
 
 /** Bytes of a state that is full, as JSON, rounded up. */
 export const surrogateStateBytes = 200_000
@@ -34,8 +34,8 @@ interface Measured {
 export interface Prospect {
   readonly form: NormalForm
   readonly class: TwoFaceClass
-  /** Scored before, or found to be irregular. */
-  readonly isKnown: boolean
+  /** Scored before, or found to be irregular. Asked of the most promising ones only. */
+  isKnown(): boolean
 }
 
 /**
@@ -101,18 +101,17 @@ export class Surrogate {
   choose<T>(stream: RandomStream, draw: () => T, prospectOf: (drawn: T) => Prospect | null): T {
     const model = this.isTrusted ? this.fitted() : undefined
     if (model === undefined || stream.uniform() < exploration) return draw()
-    let first: { readonly drawn: T } | undefined
-    let best: { readonly drawn: T; readonly predicted: number } | undefined
-    for (let n = 0; n < choices; n++) {
-      const drawn = draw()
-      first ??= { drawn }
-      const prospect = prospectOf(drawn)
-      if (prospect === null || prospect.isKnown) continue
-      this.offered++
-      const predicted = model.predict(classFeatures(prospect.form, prospect.class))
-      if (best === undefined || predicted > best.predicted) best = { drawn, predicted }
-    }
-    if (best === undefined) return (first as { drawn: T }).drawn
+    const draws = Array.from({ length: choices }, draw)
+    const ranked = draws
+      .flatMap((drawn) => {
+        const prospect = prospectOf(drawn)
+        if (prospect === null) return []
+        return [{ drawn, prospect, predicted: model.predict(classFeatures(prospect.form, prospect.class)) }]
+      })
+      .sort((a, b) => b.predicted - a.predicted)
+    this.offered += ranked.length
+    const best = ranked.find(({ prospect }) => !prospect.isKnown())
+    if (best === undefined) return draws[0]
     this.chosen++
     return best.drawn
   }

@@ -38,7 +38,7 @@ function chooses(surrogate: Surrogate): { mean: number; draws: number } {
     const cls = surrogate.choose(
       stream,
       () => classes[(7 * draws++) % classes.length],
-      (drawn) => ({ form, class: drawn, isKnown: false }),
+      (drawn) => ({ form, class: drawn, isKnown: () => false }),
     )
     sum += worth(cls)
   }
@@ -77,7 +77,7 @@ describe('the surrogate', () => {
       const cls = surrogate.choose(
         stream,
         () => (drawn++ === 0 ? classes[0] : best),
-        (candidate) => (n % 2 ? null : { form, class: candidate, isKnown: true }),
+        (candidate) => (n % 2 ? null : { form, class: candidate, isKnown: () => true }),
       )
       expect(cls).toBe(classes[0])
     }
