@@ -4,12 +4,13 @@ import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { Plus } from 'lucide-react'
 import { importedCandidatesQuery } from '../../api/importedCandidates.ts'
 import { useBarred, useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
-import { Button } from '../../components/ui/Button.tsx'
+import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { TextField } from '../../components/ui/Field.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { counted, formatNumber } from '../../lib/numbers.ts'
 import { useDelayed } from '../../lib/useDelayed.ts'
+import { candidatesInAddress, startAddress } from '../searches/new/searchPreset.ts'
 import { ImportDialog } from '../library/ImportDialog.tsx'
 import { ImportedTable } from './ImportedTable.tsx'
 import { ShortlistDialog } from './ShortlistDialog.tsx'
@@ -22,6 +23,7 @@ export function ImportedPage() {
   const text = search.get('text') ?? ''
   const barred = useBarred('polytopes.import')
   const barredShortlist = useBarred('shortlists.edit')
+  const barredSearch = useBarred('searches.run')
   const [importing, setImporting] = useState(false)
   const [listing, setListing] = useState(false)
   const [selected, setSelected] = useState<ReadonlySet<string>>(new Set())
@@ -38,6 +40,7 @@ export function ImportedPage() {
       return next
     })
   }, [])
+  const chosenKeys = selected.size > 0 ? [...selected] : undefined
   const nothing = first.data?.total === 0 && settled === ''
   return (
     <>
@@ -51,6 +54,22 @@ export function ImportedPage() {
             >
               {selected.size > 0 ? `Make a shortlist of ${formatNumber(selected.size)}` : 'Make a shortlist'}
             </Button>
+            {nothing || barredSearch || selected.size > candidatesInAddress ? (
+              <Button
+                unavailable={
+                  barredSearch ||
+                  (nothing
+                    ? 'Import candidates first.'
+                    : `Select at most ${candidatesInAddress}, or none to begin from all.`)
+                }
+              >
+                Search from these…
+              </Button>
+            ) : (
+              <ButtonLink to={startAddress(campaignId, { kind: 'imported', candidateKeys: chosenKeys })}>
+                Search from these…
+              </ButtonLink>
+            )}
             <Button kind="primary" unavailable={barred} onClick={() => setImporting(true)}>
               <Plus size={16} aria-hidden />
               Import candidates

@@ -1,15 +1,10 @@
-import { useMemo, useState } from 'react'
+import { useMemo } from 'react'
 import { Link, useParams } from 'react-router-dom'
-import { toast } from 'sonner'
-import { searchMethods, type SearchDetail } from '../../../shared/searches.ts'
-import { explain } from '../../api/request.ts'
-import { useSearch, useSearchCommand, type SearchCommand } from '../../api/searches.ts'
+import { type SearchDetail } from '../../../shared/searches.ts'
+import { useSearch } from '../../api/searches.ts'
 import { BestCurves } from '../../components/charts/BestCurves.tsx'
 import { describeScope } from '../../components/scope/scopeAddress.ts'
-import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
-import { ConfirmDialog } from '../../components/ui/ConfirmDialog.tsx'
 import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { Progress } from '../../components/ui/Progress.tsx'
@@ -18,13 +13,13 @@ import { SearchStanding } from '../../components/ui/SearchStanding.tsx'
 import { SearchStateMark } from '../../components/ui/SearchStateMark.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { nullCurves } from '../../lib/againstNull.ts'
-import { counted, formatDuration, formatNumber, formatPercent, formatTime } from '../../lib/numbers.ts'
-import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
+import { counted, formatDuration, formatNumber, formatPercent } from '../../lib/numbers.ts'
 import { AgainstNull } from './AgainstNull.tsx'
-import { CompareWith } from './CompareWith.tsx'
 import { EventLog } from './EventLog.tsx'
 import { NullFacts } from './NullFacts.tsx'
 import { IslandTable } from './IslandTable.tsx'
+import { RunFacts } from './RunFacts.tsx'
+import { SearchCommands } from './SearchCommands.tsx'
 import { SurrogateFacts } from './SurrogateFacts.tsx'
 
 export function SearchPage() {
@@ -51,7 +46,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
             Searches
           </Link>
         }
-        actions={<Commands campaign={campaign} search={search} />}
+        actions={<SearchCommands campaign={campaign} search={search} />}
       >
         {search.method} over {describeScope(search.scope)} for{' '}
         <Link
@@ -62,6 +57,13 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         </Link>
         , version {search.targetVersion}
       </PageHead>
+      {search.imported && (
+        <p className="prose-line mb-4 border-l-2 border-line pl-3">
+          <strong className="font-medium">Imported result</strong> from {search.imported.source}: it was run
+          elsewhere. {counted(search.imported.checked, 'listed candidate')} placed and scored again here;
+          counts, curve and null sample are as the file reports them.
+        </p>
+      )}
       {search.failure && (
         <div role="alert" className="mb-4 border-l-2 border-rejected pl-3">
           <p className="font-medium">The search failed; what it had found until then is kept.</p>
@@ -76,7 +78,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
         ) : (
           <Empty title="No feasible candidate yet.">
             {search.state === 'queued'
-              ? 'The search waits for a free worker.'
+              ? queueWords(search.ahead)
               : progress.evaluations > 0
                 ? `${counted(progress.evaluations, 'class', 'classes')} evaluated so far, none of which meets every require.`
                 : 'The curve appears with the first report of a worker.'}
@@ -113,22 +115,7 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
       </Section>
       <Section title="How it was run">
         <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2">
-          <Facts
-            rows={[
-              ['Method', methodLine(search.method)],
-              ['Seed', <Num key="v" value={search.seed} />],
-              ['Polytopes in scope', <Num key="v" value={search.polytopes} />],
-              ['Started', `${formatTime(search.createdAt)} by ${search.author}`],
-              ['Ended', search.finishedAt ? formatTime(search.finishedAt) : '–'],
-              ['Engine', search.engineVersion],
-              [
-                'Scoring hash',
-                <code key="v" className="font-mono text-xs break-all">
-                  {search.scoringHash}
-                </code>,
-              ],
-            ]}
-          />
+          <RunFacts campaign={campaign} search={search} />
           <pre
             tabIndex={0}
             aria-label="The rule"
@@ -142,8 +129,10 @@ function Search({ campaign, search }: { campaign: string; search: SearchDetail }
   )
 }
 
-const methodLine = (method: string) =>
-  method in searchMethods ? searchMethods[method as keyof typeof searchMethods] : method
+const queueWords = (ahead: number | null) =>
+  ahead
+    ? `The search waits for a free worker, behind ${counted(ahead, 'search', 'searches')} queued before it.`
+    : 'The search waits for a free worker.'
 
 function StateLine({ search }: { search: SearchDetail }) {
   const { progress } = search
@@ -160,6 +149,16 @@ function StateLine({ search }: { search: SearchDetail }) {
       </div>
       {search.state === 'running' && progress.secondsLeft !== null && (
         <span className="text-soft">about {formatDuration(progress.secondsLeft)} left</span>
+      )}
+      {search.state === 'queued' && (
+        <span className="text-soft">
+          {search.ahead ? `${formatNumber(search.ahead)} before it` : 'next in the queue'}
+        </span>
+      )}
+      {search.extensions.length > 0 && (
+        <span className="text-soft">
+          extended by {search.extensions.map((more) => formatNumber(more)).join(', ')}
+        </span>
       )}
       {progress.exhausted && (
         <span className="text-soft">The space is exhausted: no new class turns up any more.</span>
@@ -193,68 +192,5 @@ function Figures({ search }: { search: SearchDetail }) {
         ['Evaluations per second', <Num key="v" value={progress.evaluationsPerSecond} digits={3} />],
       ]}
     />
-  )
-}
-
-const commandsOf: Record<SearchDetail['state'], readonly SearchCommand[]> = {
-  queued: ['cancel'],
-  running: ['pause', 'cancel'],
-  paused: ['resume', 'cancel'],
-  finished: [],
-  cancelled: [],
-  failed: [],
-}
-const words = { pause: 'Pause', resume: 'Resume', cancel: 'Cancel the search' }
-
-function Commands({ campaign, search }: { campaign: string; search: SearchDetail }) {
-  const barred = useBarred('searches.run')
-  const barredList = useBarred('shortlists.edit')
-  const send = useSearchCommand(campaign, search.id)
-  const [cancelling, setCancelling] = useState(false)
-  const run = (command: SearchCommand) =>
-    send.mutate(command, { onError: (error) => toast.error(explain(error)) })
-  return (
-    <>
-      {commandsOf[search.state].map((command) => (
-        <Button
-          key={command}
-          kind={command === 'cancel' ? 'danger' : 'plain'}
-          unavailable={barred}
-          busy={send.isPending}
-          onClick={() => (command === 'cancel' ? setCancelling(true) : run(command))}
-        >
-          {words[command]}
-        </Button>
-      ))}
-      <CompareWith campaign={campaign} search={search} />
-      {search.progress.evaluations > 0 && (
-        <ButtonLink to={`/campaigns/${campaign}/explore?search=${search.id}`}>
-          Sample of evaluations
-        </ButtonLink>
-      )}
-      {search.shortlists.map((shortlist) => (
-        <ButtonLink key={shortlist.id} to={`/campaigns/${campaign}/shortlists/${shortlist.id}`}>
-          {shortlist.name}
-        </ButtonLink>
-      ))}
-      {barredList || search.progress.feasible === 0 ? (
-        <Button unavailable={barredList || 'No feasible candidate has been found yet.'}>
-          Make a shortlist
-        </Button>
-      ) : (
-        <ButtonLink kind="primary" to={assemblyPath(campaign, [search.id])}>
-          Make a shortlist
-        </ButtonLink>
-      )}
-      <ConfirmDialog
-        open={cancelling}
-        onOpenChange={setCancelling}
-        title="Cancel this search?"
-        word="Cancel the search"
-        onConfirm={() => run('cancel')}
-      >
-        What it has found is kept, but it cannot go on afterwards. To stop for a while, pause it.
-      </ConfirmDialog>
-    </>
   )
 }

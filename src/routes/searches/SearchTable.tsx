@@ -67,6 +67,7 @@ export function SearchTable({
               >
                 {search.name}
               </Link>
+              {search.isImported && <span className="text-soft"> imported result</span>}
             </Td>
             <Td>
               <SearchStateMark state={search.state} />

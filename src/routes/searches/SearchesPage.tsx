@@ -10,6 +10,7 @@ import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
 import { compareAddress } from './compare/compareAddress.ts'
+import { ImportResultDialog } from './ImportResultDialog.tsx'
 import { SearchTable } from './SearchTable.tsx'
 
 export function SearchesPage() {
@@ -18,19 +19,25 @@ export function SearchesPage() {
   const barred = useBarred('searches.run')
   const barredLists = useBarred('shortlists.edit')
   const [ticked, setTicked] = useState<string[]>([])
+  const [importing, setImporting] = useState(false)
   return (
     <>
       <PageHead
         title="Searches"
         actions={
-          barred ? (
-            <Button unavailable={barred}>New search</Button>
-          ) : (
-            <ButtonLink kind="primary" to={`/campaigns/${campaignId}/searches/new`}>
-              <Plus size={16} aria-hidden />
-              New search
-            </ButtonLink>
-          )
+          <>
+            <Button unavailable={barred} onClick={() => setImporting(true)}>
+              Import a result
+            </Button>
+            {barred ? (
+              <Button unavailable={barred}>New search</Button>
+            ) : (
+              <ButtonLink kind="primary" to={`/campaigns/${campaignId}/searches/new`}>
+                <Plus size={16} aria-hidden />
+                New search
+              </ButtonLink>
+            )}
+          </>
         }
       >
         A search runs a method over a scope of polytopes for one version of a target.
@@ -66,6 +73,7 @@ export function SearchesPage() {
           )
         }
       </QueryView>
+      <ImportResultDialog campaign={campaignId} open={importing} onOpenChange={setImporting} />
     </>
   )
 }

@@ -7,8 +7,9 @@ import { useRequestCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
 import { CertificationProgress } from '../../components/certificate/CertificationProgress.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { Button } from '../../components/ui/Button.tsx'
+import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { counted } from '../../lib/numbers.ts'
+import { candidatesInAddress, startAddress } from '../searches/new/searchPreset.ts'
 import { verdictOf } from './shortlistView.ts'
 import { type Selection } from './useSelection.ts'
 
@@ -60,6 +61,7 @@ export function CertifyBar({
             ? `Certify the ${selected.length} selected`
             : `Certify all undecided (${open.length})`}
         </Button>
+        <SearchFrom campaign={campaign} shortlist={shortlist} selected={selected} />
         {selected.length > 0 && (
           <Button kind="quiet" onClick={selection.clear}>
             Let go of the selection
@@ -70,4 +72,28 @@ export function CertifyBar({
       <CertificationProgress campaign={campaign} targetVersionId={shortlist.targetVersionId} />
     </>
   )
+}
+
+/** A search that begins from the selected candidates, or from all. */
+function SearchFrom({
+  campaign,
+  shortlist,
+  selected,
+}: {
+  campaign: string
+  shortlist: ShortlistDetail
+  selected: readonly string[]
+}) {
+  const barred = useBarred('searches.run')
+  const tooMany =
+    selected.length > candidatesInAddress && `Select at most ${candidatesInAddress}, or none for all.`
+  const words = selected.length > 0 ? `Search from the ${selected.length} selected…` : 'Search from these…'
+  if (barred || tooMany) return <Button unavailable={barred || tooMany}>{words}</Button>
+  const chosen = selected.length > 0 ? { candidateKeys: [...selected] } : {}
+  const to = startAddress(
+    campaign,
+    { kind: 'shortlist', id: shortlist.id, ...chosen },
+    { target: shortlist.targetId },
+  )
+  return <ButtonLink to={to}>{words}</ButtonLink>
 }
