@@ -53,7 +53,7 @@ export function CostLine({
       </p>
       <p className="text-xs text-soft">
         {formatNumber(budget)} evaluations at {formatNumber(millisecondsEach, 3)} ms, the mean of{' '}
-        {counted(timed, 'candidate')} timed on this server.
+        {counted(timed, 'candidate')} timed on this server, as busy as it is now.
         {nullLeft > 0 &&
           ` The null sample it is compared with takes another ${formatDuration(seconds(nullLeft, threads))} in between: ${formatNumber(nullLeft)} candidates, once for this scope and rule.`}
       </p>

@@ -89,8 +89,8 @@ export function StartFields({ campaign, starts, onStarts, scope, onScope, ignore
       )}
       {starts !== null && !ignored && (
         <p className="prose-line text-xs text-soft">
-          They are scored first, as evaluations of this search, and count neither as its hits nor as its
-          finds.
+          They are scored first, as evaluations of this search. They may be listed among its best, but are not
+          counted as its hits.
         </p>
       )}
     </div>
