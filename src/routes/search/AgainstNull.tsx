@@ -35,16 +35,8 @@ export function AgainstNull({ search }: { search: SearchDetail }) {
           ]}
         />
         <p className="prose-line mt-1 text-xs text-soft">
-          Distinct hits per distinct evaluation, counted within each island.
-          {search.starts?.used && (
-            <>
-              {' '}
-              <strong className="font-medium">Started from chosen candidates</strong>:{' '}
-              {formatNumber(search.progress.given ?? 0)} evaluations of them are left out, but what is near
-              them is no fresh find either.
-            </>
-          )}{' '}
-          Null: {lawName(sample)}, seed {sample.seed}, {formatNumber(sample.evaluated)} candidates
+          Distinct hits per distinct evaluation, counted within each island. Null: {lawName(sample)}, seed{' '}
+          {sample.seed}, {formatNumber(sample.evaluated)} candidates
           {sample.complete ? '' : ', still being drawn'}.
         </p>
         {(search.progress.given ?? 0) > 0 && (
