@@ -178,7 +178,7 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
     await page.getByRole('radio', { name: '100' }).check()
     await page.waitForURL(/best=100/)
     const shared = page.getByRole('table', { name: 'Candidates shared among the best 100' })
-    expect(await shared.getByRole('row').nth(1).textContent()).toContain('(100)')
+    expect(await shared.getByRole('row').nth(1).textContent()).toContain('(20)')
     await page.getByRole('button', { name: 'Show “Best score so far” as a table' }).click()
     await page.getByRole('table', { name: 'Best score over evaluations' }).waitFor()
     expect(complaints).toEqual([])

@@ -26,7 +26,10 @@ export function AgainstNull({ search }: { search: SearchDetail }) {
         <Facts
           rows={[
             ['A hit is', <HitLine key="v" search={search} sample={sample} />],
-            ['Hits of the search', <SearchHits key="v" compared={compared} />],
+            [
+              'Hits of the search',
+              <SearchHits key="v" compared={compared} waits={!search.ownHitLine && !sample.complete} />,
+            ],
             ['Hits of the null', <Rate key="v" rate={sample.hit} />],
             [
               'Search over null',
@@ -66,12 +69,13 @@ function HitLine({ search, sample }: { search: SearchDetail; sample: NullSummary
   return (
     <>
       a score above <Num value={sample.quantile99} digits={5} />, the null’s 99 % quantile
+      {!sample.complete && ' so far'}
     </>
   )
 }
 
-function SearchHits({ compared: { rate, unsure, isExact } }: { compared: Compared }) {
-  if (rate === null) return 'not known yet'
+function SearchHits({ compared: { rate, unsure, isExact }, waits }: { compared: Compared; waits: boolean }) {
+  if (rate === null) return waits ? 'counted when the null sample is complete' : 'not known yet'
   const { hits, evaluations, interval, islands } = rate
   const bins =
     unsure > 0 ? `; ±\u2009${formatNumber(Math.ceil(unsure / 2))} hits by the histogram’s bins` : ''
