@@ -5,6 +5,7 @@ import { candidateKeySchema } from './keys.ts'
 import { rescoringSchema } from './rescorings.ts'
 import { previewSchema } from './targets.ts'
 import { searchProgressSchema, searchStates } from './searches.ts'
+import { verdictSchema } from './verdicts.ts'
 import { nullSummarySchema } from './nullSamples.ts'
 
 /**
@@ -27,6 +28,7 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
     /** The certificate that was just made; null when only the request moved. */
     made: certificateMarkSchema.extend({ candidateKey: candidateKeySchema }).nullable(),
   }),
+  z.object({ kind: z.literal('verdict'), candidateKey: candidateKeySchema, verdict: verdictSchema }),
   z.object({ kind: z.literal('rescoring'), rescoring: rescoringSchema }),
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   /** Stored polytopes whose numbers are still being computed. */
@@ -39,7 +41,6 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
       'targets',
       'searches',
       'shortlists',
-      'verdicts',
       'members',
       'imports',
       'collections',

@@ -3,6 +3,7 @@ import type { VerdictValue } from '../../shared/verdicts.ts'
 import type { ServerContext } from '../context.ts'
 import { Verdict } from '../entities/verdict.ts'
 import type { Tally } from '../presenters/shortlists.ts'
+import { presentVerdict } from '../presenters/verdicts.ts'
 import { unprocessable } from '../problems.ts'
 import { latestCertificates } from './certificates.ts'
 import { readCampaignCandidate } from './candidates.ts'
@@ -42,8 +43,9 @@ export async function giveVerdict(
     })
     return Number(inserted.identifiers[0]?.id)
   })
-  streams.toCampaign(campaignId, { kind: 'changed', what: 'verdicts' })
-  return source.manager.findOneOrFail(Verdict, { where: { id }, relations: withWords })
+  const given = await source.manager.findOneOrFail(Verdict, { where: { id }, relations: withWords })
+  streams.toCampaign(campaignId, { kind: 'verdict', candidateKey, verdict: presentVerdict(given) })
+  return given
 }
 
 function reasonRequired(certificateFailed: boolean) {

@@ -14,6 +14,7 @@ import { explorationKey, newerExploration } from './explorations.ts'
 import { withCertification } from './certificates.ts'
 import { placeRescoring } from './rescorings.ts'
 import { withReport } from './comparisons.ts'
+import { placeVerdict } from './verdicts.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
 import { previewKey } from './previews.ts'
 import { apiUrl } from './request.ts'
@@ -40,6 +41,8 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
     }
     case 'certification':
       return applyCertification(client, campaign, event)
+    case 'verdict':
+      return applyVerdict(client, campaign, event)
     case 'rescoring':
       return placeRescoring(client, campaign, event.rescoring)
     case 'library':
@@ -53,7 +56,6 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
         targets: ['targets', campaign],
         searches: ['searches', campaign],
         shortlists: ['shortlists', campaign],
-        verdicts: ['shortlist'],
         members: ['campaigns'],
         imports: ['imported-candidates', campaign],
         collections: ['collections'],
@@ -65,10 +67,6 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       if (event.what === 'searches') void client.invalidateQueries({ queryKey: ['comparison', campaign] })
       // Also whether they are held up, which no event of a single search tells.
       if (event.what === 'searches') void client.invalidateQueries({ queryKey: ['search'] })
-      if (event.what === 'verdicts') {
-        void client.invalidateQueries({ queryKey: ['candidate-record', campaign] })
-        void client.invalidateQueries({ queryKey: ['relatives'] })
-      }
       return
     }
     case 'closed':
@@ -86,6 +84,19 @@ function applyNull(client: QueryClient, event: StreamEvent & { kind: 'null' }): 
   if (!summary.complete) return
   if (known?.ownHitLine === false) void client.invalidateQueries({ queryKey: ['search', searchId] })
   void client.invalidateQueries({ queryKey: ['comparison'] })
+}
+
+/** A verdict goes straight into the lists of its target: fetching thousands of rows again would be felt at each key. */
+function applyVerdict(
+  client: QueryClient,
+  campaign: string,
+  { candidateKey, verdict }: StreamEvent & { kind: 'verdict' },
+): void {
+  placeVerdict(client, candidateKey, verdict)
+  void client.invalidateQueries({ queryKey: ['campaign', campaign] })
+  void client.invalidateQueries({ queryKey: ['shortlists', campaign] })
+  void client.invalidateQueries({ queryKey: ['candidate-record', campaign, candidateKey] })
+  void client.invalidateQueries({ queryKey: ['relatives'] })
 }
 
 /** A certificate that was made goes into the shortlists of its target version; what only moved is asked for again. */

@@ -10,7 +10,9 @@ export type GiveVerdict = z.infer<typeof giveVerdictSchema> & { key: string }
 export function placeVerdict(client: QueryClient, key: string, verdict: Verdict): void {
   client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
     if (!list || list.targetId !== verdict.targetId) return list
-    const rows = list.rows.map((row) => (row.candidateKey === key ? { ...row, verdict } : row))
+    const rows = list.rows.map((row) =>
+      row.candidateKey === key && isNewer(verdict, row.verdict) ? { ...row, verdict } : row,
+    )
     const count = (value: string) =>
       rows.filter((row) => (row.verdict?.value ?? 'undecided') === value).length
     return {
@@ -22,6 +24,9 @@ export function placeVerdict(client: QueryClient, key: string, verdict: Verdict)
     }
   })
 }
+
+/** Answers and events come in no certain order; the numbers of verdicts count up. */
+const isNewer = (verdict: Verdict, known: Verdict | null) => !known || Number(verdict.id) >= Number(known.id)
 
 export function useGiveVerdict(campaign: string) {
   const client = useQueryClient()

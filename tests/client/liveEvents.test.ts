@@ -2,6 +2,8 @@
 import { describe, expect, it } from 'vitest'
 import { QueryClient } from '@tanstack/react-query'
 import { type SearchDetail, type SearchProgress } from '../../shared/searches.ts'
+import { type ShortlistDetail } from '../../shared/shortlists.ts'
+import { key, row, shortlist, verdict } from './shortlistFixture.ts'
 import { applyEvent } from '../../src/api/liveEvents.ts'
 
 const progress = (evaluations: number, best: number | null, bestKey: string | null): SearchProgress => ({
@@ -30,6 +32,28 @@ const search = {
 } as SearchDetail
 
 describe('events in the cache', () => {
+  it('put a verdict into the lists of its target, unless a later one is there', () => {
+    const client = new QueryClient()
+    const list = shortlist([row(1, -4), row(2, -5)])
+    client.setQueryData(['shortlist', 'l1'], list)
+    client.setQueryData(['shortlist', 'l2'], { ...list, id: 'l2', targetVersion: 2, targetVersionId: 'tv2' })
+    client.setQueryData(['shortlist', 'l3'], { ...list, id: 'l3', targetId: 't9' })
+    const told = (id: string, value: 'verified' | 'rejected') =>
+      applyEvent(client, 'c1', {
+        kind: 'verdict',
+        candidateKey: key(2),
+        verdict: { ...verdict(value), id },
+      })
+    told('7', 'rejected')
+    told('6', 'verified')
+    const read = (id: string) => client.getQueryData<ShortlistDetail>(['shortlist', id])
+    for (const id of ['l1', 'l2']) {
+      expect(read(id)).toMatchObject({ rejected: 1, undecided: 1, verified: 0 })
+      expect(read(id)?.rows[1]?.verdict).toMatchObject({ id: '7', value: 'rejected' })
+    }
+    expect(read('l3')?.rows[1]?.verdict).toBeNull()
+  })
+
   it('move a search and its line in the list', () => {
     const client = new QueryClient()
     client.setQueryData(['search', 's1'], search)

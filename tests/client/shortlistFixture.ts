@@ -6,7 +6,7 @@ export const key = (n: number) => String(n).padStart(32, '0')
 
 export function verdict(value: Verdict['value'], override = false): Verdict {
   return {
-    id: 'v1',
+    id: '1',
     value,
     override,
     certificateId: null,

@@ -1,7 +1,12 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
 import { type ExternalColumn } from '../../shared/externalTables.ts'
-import { conditionWords, listColumns, readConditions } from '../../src/routes/shortlist/listColumns.ts'
+import {
+  conditionWords,
+  givenDecimals,
+  listColumns,
+  readConditions,
+} from '../../src/routes/shortlist/listColumns.ts'
 import { nextKey, nextUndecided, readView, visibleRows } from '../../src/routes/shortlist/shortlistView.ts'
 import { key, row, shortlist, verdict } from './shortlistFixture.ts'
 
@@ -79,6 +84,8 @@ describe('the view of a shortlist', () => {
     expect(shownOf(list, 'from:external:mass=9.5')).toEqual([1])
     expect(shownOf(list, 'has:external:note=ALPH')).toEqual([3])
     expect(listColumns(list).map(({ name }) => name)).toContain('external:note')
+    expect(givenDecimals([1.25, 3, null, 'text'])).toBe(2)
+    expect([givenDecimals([1e-9]), givenDecimals([1 / 3])]).toEqual([null, null])
   })
 
   it('sorts by the change of rank, and finds verdicts given for another version', () => {

@@ -15,7 +15,7 @@ import { ColumnChooser } from './ColumnConditions.tsx'
 import { CertifyBar } from './CertifyBar.tsx'
 import { DecisionBar } from './DecisionBar.tsx'
 import { useSelection } from './useSelection.ts'
-import { type ListColumn } from './listColumns.ts'
+import { givenDecimals, type ListColumn } from './listColumns.ts'
 import { nextKey, nextUndecided, type ShortlistView } from './shortlistView.ts'
 import { triageColumns } from './triageColumns.tsx'
 
@@ -59,6 +59,13 @@ export function Triage({
   const table = useRef<HTMLDivElement>(null)
 
   const format = useMemo(() => outcomeFormat(shortlist.rows.map(({ outcome }) => outcome)), [shortlist.rows])
+  const decimals = useMemo(
+    () =>
+      shortlist.external.map((_, at) =>
+        givenDecimals(shortlist.rows.map(({ external }) => external[at] ?? null)),
+      ),
+    [shortlist],
+  )
   const found = rows.findIndex((row) => row.candidateKey === current)
   const at = found >= 0 ? found : 0
   const row = rows[at]
@@ -156,7 +163,7 @@ export function Triage({
         />
       ),
     },
-    ...triageColumns({ campaign, list: shortlist, columns: listed, format, view, onSort }),
+    ...triageColumns({ campaign, list: shortlist, columns: listed, format, decimals, view, onSort }),
   ]
 
   return (

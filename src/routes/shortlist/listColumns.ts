@@ -71,6 +71,21 @@ export function valueOf(row: ShortlistRow, { name, external }: ListColumn): numb
   return typeof cell === 'number' || typeof cell === 'boolean' ? Number(cell) : null
 }
 
+/**
+ * Decimals with which a column of numbers that people brought along is written: as many as its longest value has, so
+ * that nothing is rounded and points stand under each other; null where that would be too many.
+ */
+export function givenDecimals(values: readonly (number | string | null)[]): number | null {
+  let most = 0
+  for (const value of values) {
+    if (typeof value !== 'number') continue
+    const text = String(value)
+    if (text.includes('e')) return null
+    most = Math.max(most, text.split('.')[1]?.length ?? 0)
+  }
+  return most <= 6 ? most : null
+}
+
 /** A range of a column of numbers, or a part of a text. What has no value meets none. */
 export interface Condition {
   readonly column: string

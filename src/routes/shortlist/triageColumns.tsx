@@ -20,6 +20,8 @@ interface ColumnSetting {
   list: Pick<ShortlistDetail, 'id' | 'targetVersion'>
   columns: readonly ListColumn[]
   format: OutcomeFormat
+  /** Of the external columns, in their order. */
+  decimals: readonly (number | null)[]
   view: Pick<ShortlistView, 'sort' | 'descending' | 'hidden'>
   onSort: (column: string) => void
 }
@@ -81,8 +83,11 @@ function ExternalHeading({ label, column }: { label: string; column: ExternalCol
 
 function cellOf(column: ListColumn, setting: ColumnSetting): Column<ShortlistRow>['cell'] {
   const { name, external } = column
-  const { campaign, list, format } = setting
-  if (external) return (row) => <ExternalCell value={row.external[external.at] ?? null} />
+  const { campaign, list, format, decimals } = setting
+  if (external) {
+    const shared = decimals[external.at] ?? null
+    return (row) => <ExternalCell value={row.external[external.at] ?? null} decimals={shared} />
+  }
   switch (name) {
     case 'rank':
       return (row) => (
@@ -136,9 +141,9 @@ function cellOf(column: ListColumn, setting: ColumnSetting): Column<ShortlistRow
   )
 }
 
-function ExternalCell({ value }: { value: number | string | null }) {
+function ExternalCell({ value, decimals }: { value: number | string | null; decimals: number | null }) {
   if (value === null) return <span className="text-soft">–</span>
-  if (typeof value === 'number') return <Num value={value} digits={6} />
+  if (typeof value === 'number') return <Num value={value} digits={6} decimals={decimals} />
   return (
     <span className="inline-block max-w-64 truncate align-middle" title={value} data-raw={value}>
       {value}

@@ -29,34 +29,36 @@ export function DraftView({ draft, ...rest }: DraftViewProps) {
       {(data) => (
         <div aria-busy={draft.isFetching}>
           {draft.isError && <Failure title="This list cannot be made." error={draft.error} />}
-          {data.counts ? (
-            <div className="grid gap-x-8 gap-y-4 md:grid-cols-[minmax(260px,340px)_minmax(0,1fr)]">
-              <AssemblyCountsView
-                counts={data.counts}
-                size={data.size}
-                assembly={rest.assembly.settings}
-                live
-              />
-              {data.best.length > 0 && (
-                <div className="min-w-0">
-                  <ScoredTable
-                    label="The first of the list"
-                    rows={data.best}
-                    campaign={rest.campaign}
-                    ranked
-                    fronts={data.best.map(({ front }) => front)}
-                  />
-                </div>
+          <div className="grid gap-x-8 gap-y-4 md:grid-cols-[minmax(260px,340px)_minmax(0,1fr)]">
+            <div>
+              {data.counts ? (
+                <AssemblyCountsView
+                  counts={data.counts}
+                  size={data.size}
+                  assembly={rest.assembly.settings}
+                  live
+                />
+              ) : (
+                <p>
+                  {counted(data.distinct, 'distinct candidate')}; {formatNumber(data.distinct - data.scored)}{' '}
+                  of them have no score under this version yet. They are scored first, and the list is made
+                  when that is done.
+                </p>
               )}
+              <MakeForm {...rest} data={data} />
             </div>
-          ) : (
-            <p className="prose-line">
-              {counted(data.distinct, 'distinct candidate')}; {formatNumber(data.distinct - data.scored)} of
-              them have no score under this version yet. They are scored first, and the list is made when that
-              is done.
-            </p>
-          )}
-          <MakeForm {...rest} data={data} />
+            {data.best.length > 0 && (
+              <div className="min-w-0">
+                <ScoredTable
+                  label="The first of the list"
+                  rows={data.best}
+                  campaign={rest.campaign}
+                  ranked
+                  fronts={data.best.map(({ front }) => front)}
+                />
+              </div>
+            )}
+          </div>
         </div>
       )}
     </QueryView>
