@@ -27,7 +27,7 @@ export function alongFlips(
   let met = 0
   let spent = 0
   while (met < classes) {
-    const law = directionLaws[3 + (met % 2)]
+    const law = directionLaws[directionLaws.length - 1]
     const direction = law(form.polytope, motion.heights, stream)
     spent += time(() => {
       const start = motion.checkpoint()

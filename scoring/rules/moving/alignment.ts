@@ -12,6 +12,26 @@ export interface Alignment {
   move(moving: MovingNumbers, kept: Float64Array): void
   /** Calls back for the touched elements, as they stand after the exchange. */
   touched(moving: MovingNumbers, element: (n: number) => void): void
+  /** Calls back for the elements that one of the parallelogram's four divisors belongs to, touched or not. */
+  incident(moving: MovingNumbers, element: (n: number) => void): void
+}
+
+/** Calls back for the rows of `width` points that hold one of the exchange's four. */
+function incidentRows(
+  points: Int32Array,
+  width: 2 | 3,
+  { last }: MovingNumbers,
+  row: (n: number) => void,
+): void {
+  const [i, j, k, l] = last.points
+  for (let at = 0; at < points.length; at += width) {
+    for (let c = 0; c < width; c++) {
+      const p = points[at + c]
+      if (p !== i && p !== j && p !== k && p !== l) continue
+      row(at / width)
+      break
+    }
+  }
 }
 
 const ofTriangles: Alignment = {
@@ -27,6 +47,7 @@ const ofTriangles: Alignment = {
     element(first > from && first <= to ? first - 1 : first < from && first >= to ? first + 1 : first)
     element(to)
   },
+  incident: (moving, element) => incidentRows(moving.triangles, 3, moving, element),
 }
 
 /** By the name of the set. Elements of the others are found anew after every exchange. */
@@ -37,6 +58,9 @@ export const alignments: ReadonlyMap<string, Alignment> = new Map<string, Alignm
       size: ({ cubes }) => cubes.length,
       move() {},
       touched({ last }, element) {
+        for (const point of last.points) element(point)
+      },
+      incident({ last }, element) {
         for (const point of last.points) element(point)
       },
     },
@@ -54,6 +78,11 @@ export const alignments: ReadonlyMap<string, Alignment> = new Map<string, Alignm
         element(2 * last.edgeTo)
         element(2 * last.edgeTo + 1)
       },
+      incident: (moving, element) =>
+        incidentRows(moving.edges, 2, moving, (row) => {
+          element(2 * row)
+          element(2 * row + 1)
+        }),
     },
   ],
   [
@@ -65,6 +94,7 @@ export const alignments: ReadonlyMap<string, Alignment> = new Map<string, Alignm
         for (const row of last.sides) element(row)
         element(last.edgeTo)
       },
+      incident: (moving, element) => incidentRows(moving.edges, 2, moving, element),
     },
   ],
   ['triples', ofTriangles],

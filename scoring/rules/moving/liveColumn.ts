@@ -1,6 +1,8 @@
 import type { MovingNumbers } from '../../geometry/moving/movingNumbers.ts'
 import type { Candidate } from '../../observables/candidate.ts'
-import type { ElementField, ValueField } from '../../observables/observable.ts'
+import { curves } from '../../observables/curves.ts'
+import type { ElementField, MembersField, ValueField } from '../../observables/observable.ts'
+import { triangles, triples } from '../../observables/triangles.ts'
 import type { Resource } from '../frame.ts'
 import type { Alignment } from './alignment.ts'
 
@@ -9,6 +11,13 @@ export type LocalField = (ValueField | ElementField) & Required<Pick<ValueField 
 
 export const isLocal = (field: { readonly kind: string; readonly at?: unknown }): field is LocalField =>
   field.at !== undefined
+
+/** The divisors of triples, triangles and curves: lists in the very arrays that follow exchanges. */
+const heldInPlace: readonly unknown[] = [triples, triangles, curves].map(({ fields }) =>
+  fields.find(({ name }) => name === 'divisors'),
+)
+
+export const isHeldInPlace = (entry: unknown): entry is MembersField => heldInPlace.includes(entry)
 
 /** A column that follows exchanges: of an exchange only the touched elements are read again. */
 export class LiveColumn {

@@ -10,8 +10,14 @@ export type LiveFoldName = Exclude<FoldName, 'quantile'>
 /** What an element left out by `where` contributes; values are finite, and NaN is an undefined one. */
 const LEFT_OUT = Infinity
 
+/**
+ * What an element's contribution depends on: on its own numbers, or on numbers of the divisors that belong to it, too.
+ */
+export type Dependence = 'own' | 'incident'
+
 /** The compiled parts of a fold over the elements of one set, each judged by itself. */
 export interface ElementParts {
+  readonly dependence: Dependence
   readonly name: LiveFoldName
   readonly slot: number
   readonly condition: Evaluate | undefined
@@ -49,9 +55,10 @@ export class LiveFold {
 
   /** To be called after every exchange, when the columns have followed it. */
   exchanged(moving: MovingNumbers, frame: Frame): void {
-    const { kept, alignment } = this
+    const { kept, alignment, parts } = this
     alignment.move(moving, kept)
-    alignment.touched(moving, (n) => {
+    const affected = parts.dependence === 'own' ? 'touched' : 'incident'
+    alignment[affected](moving, (n) => {
       const value = this.contribution(frame, n)
       if (value === kept[n]) return
       this.count(kept[n], -1)

@@ -8,9 +8,9 @@ import { runProgram } from '../evaluate.ts'
 import type { Outcome } from '../outcome.ts'
 import type { TypedExpression } from '../typed.ts'
 import { alignments } from './alignment.ts'
-import { isLocal, LiveColumn } from './liveColumn.ts'
+import { isHeldInPlace, isLocal, LiveColumn } from './liveColumn.ts'
 import { MovingFrame, movingProgram, type MovingProgram } from './movingProgram.ts'
-import { isOrderFree, rankingParts } from './orderFree.ts'
+import { isBounded, isOrderFree, rankingParts } from './orderFree.ts'
 
 /** True when classes are ranked by the stages up to "topology" alone, so that the rule can follow a motion. */
 export function isTopological({ program: { source } }: CheckedRule): boolean {
@@ -49,7 +49,7 @@ export class MovingEvaluation {
     const inOrder = form.automorphisms.length === 1
     this.isFollowed = inOrder || isOrderFree(source, form.polytope)
     this.trustsShortfalls = inOrder || !source.requires.some(({ condition }) => hasQuantifier(condition))
-    this.program = movingProgram(rule.program)
+    this.program = movingProgram(rule.program, isBounded(source, form.polytope))
     this.candidate = new MovingCandidate(form, moving)
     this.frame = new MovingFrame(this.program, moving, this.candidate)
     const { loadables } = this.program
@@ -57,6 +57,10 @@ export class MovingEvaluation {
     for (let index = 0; index < loadables.length; index++) {
       const entry = loadables[index]
       if (entry.stage === 'polytope') this.kept[index] = 1
+      if (isHeldInPlace(entry)) {
+        this.frame.resources[index] = { kind: 'members', lists: entry.members(this.candidate, 1) }
+        this.kept[index] = 1
+      }
       const alignment = alignments.get(setOf.get(entry) ?? '')
       if (alignment === undefined || !isLocal(entry)) continue
       const column = new LiveColumn(entry, alignment, this.candidate)

@@ -7,8 +7,8 @@ import { RULE_LIMITS } from '../limits.ts'
 import { compileProgram, type Program } from '../program.ts'
 import type { TypedExpression, TypedFold } from '../typed.ts'
 import { alignments, type Alignment } from './alignment.ts'
-import { isLocal } from './liveColumn.ts'
-import { LiveFold, type ElementParts, type LiveFoldName } from './liveFold.ts'
+import { isHeldInPlace, isLocal } from './liveColumn.ts'
+import { LiveFold, type Dependence, type ElementParts, type LiveFoldName } from './liveFold.ts'
 import { partsOf } from './orderFree.ts'
 
 /** A fold that can follow exchanges, with the closure that computes it whole. */
@@ -23,18 +23,25 @@ export interface MovingProgram extends Program {
   readonly followed: readonly FollowedFold[]
 }
 
-const known = new WeakMap<Program, MovingProgram>()
+const known = { bounded: new WeakMap<Program, MovingProgram>(), other: new WeakMap<Program, MovingProgram>() }
 
-/** The moving form of a program, without the report; compiled once. */
-export function movingProgram(program: Program): MovingProgram {
-  let moving = known.get(program)
+/**
+ * The moving form of a program, without the report; compiled once.
+ *
+ * @param bounded no candidate comes to the limit on steps: then folds with folds inside may follow, too, whose steps
+ *   are not those of the usual road
+ */
+export function movingProgram(program: Program, bounded: boolean): MovingProgram {
+  const programs = known[bounded ? 'bounded' : 'other']
+  let moving = programs.get(program)
   if (moving === undefined) {
     const followed: FollowedFold[] = []
-    const compiled = compileProgram({ ...program.source, columns: [] }, (compiler, expression) =>
-      isFollowed(expression) ? follow(compiler, expression, followed) : undefined,
-    )
+    const compiled = compileProgram({ ...program.source, columns: [] }, (compiler, expression) => {
+      const dependence = dependenceOf(expression, bounded)
+      return dependence && follow(compiler, expression, dependence, followed)
+    })
     moving = { ...compiled, followed }
-    known.set(program, moving)
+    programs.set(program, moving)
   }
   return moving
 }
@@ -60,17 +67,25 @@ export class MovingFrame extends Frame {
 
   /** To be called after every exchange, when the columns have followed it. */
   exchanged(): void {
+    // Folds inside others count steps here that no evaluation takes.
+    this.steps = 0
     for (const fold of this.folds) fold?.exchanged(this.moving, this)
   }
 }
 
-function follow(compiler: Compiler, expression: TypedFold, followed: FollowedFold[]): Evaluate {
+function follow(
+  compiler: Compiler,
+  expression: TypedFold,
+  dependence: Dependence,
+  followed: FollowedFold[],
+): Evaluate {
   const { slot, condition, body, source } = expression
   const index = followed.length
   const { open, parts } = compiler.inside(() => ({
     // Counts the steps as if the elements were visited, so that the limit is the same.
     open: compileSource(compiler, expression),
     parts: {
+      dependence,
       name: expression.fold.name as LiveFoldName,
       slot,
       condition: condition && compiler.compile(condition),
@@ -83,20 +98,24 @@ function follow(compiler: Compiler, expression: TypedFold, followed: FollowedFol
 }
 
 /**
- * A fold over one of the sets that exchanges rearrange, whose condition and body depend on the element's own numbers
- * and on the polytope only, and which does not depend on the order of the elements.
+ * For a fold over one of the sets that exchanges rearrange, whose value does not depend on the order of the elements:
+ * what condition and body depend on, beside the polytope. Undefined when that is more than can be followed.
  */
-function isFollowed({ fold, source, open, slot, condition, body }: TypedFold): boolean {
-  if (open || source.kind !== 'set' || !alignments.has(source.set.name) || fold.name === 'quantile')
-    return false
-  if ((fold.name === 'sum' || fold.name === 'mean') && body.type !== 'integer') return false
-  return isOwn(body, slot) && (condition === undefined || isOwn(condition, slot))
+function dependenceOf(expression: TypedFold, bounded: boolean): Dependence | undefined {
+  const { source, open, slot, condition, body } = expression
+  if (open || source.kind !== 'set' || !alignments.has(source.set.name) || !isOrderless(expression))
+    return undefined
+  const parts = condition === undefined ? [body] : [condition, body]
+  if (parts.every((part) => isOwn(part, slot))) return 'own'
+  return bounded && parts.every((part) => isIncident(part, [slot])) ? 'incident' : undefined
 }
 
+const isOrderless = ({ fold, body }: TypedFold): boolean =>
+  fold.name !== 'quantile' && !((fold.name === 'sum' || fold.name === 'mean') && body.type !== 'integer')
+
+/** Depends on the element's own numbers only. */
 function isOwn(expression: TypedExpression, slot: number): boolean {
   switch (expression.kind) {
-    case 'constant':
-      return true
     case 'element':
       return expression.slot === slot
     case 'field': {
@@ -104,6 +123,36 @@ function isOwn(expression: TypedExpression, slot: number): boolean {
       const ofElement = target.kind === 'element' && isLocal(field)
       return (ofElement || field.stage === 'polytope') && isOwn(target, slot)
     }
+    default:
+      return isPlain(expression, (part) => isOwn(part, slot))
+  }
+}
+
+/** Depends on numbers of the element and of the divisors that belong to it: its members, or ends of a pair. */
+function isIncident(expression: TypedExpression, slots: readonly number[]): boolean {
+  switch (expression.kind) {
+    case 'element':
+      return slots.includes(expression.slot)
+    case 'field':
+      return (
+        (isLocal(expression.field) || expression.field.stage === 'polytope') &&
+        isIncident(expression.target, slots)
+      )
+    case 'fold': {
+      const { source, slot, condition, body } = expression
+      if (source.kind !== 'members' || !isHeldInPlace(source.field) || !isOrderless(expression)) return false
+      const parts = condition === undefined ? [source.target, body] : [source.target, condition, body]
+      return parts.every((part) => isIncident(part, [...slots, slot]))
+    }
+    default:
+      return isPlain(expression, (part) => isIncident(part, slots))
+  }
+}
+
+function isPlain(expression: TypedExpression, holds: (part: TypedExpression) => boolean): boolean {
+  switch (expression.kind) {
+    case 'constant':
+      return true
     case 'negation':
     case 'not':
     case 'arithmetic':
@@ -111,7 +160,7 @@ function isOwn(expression: TypedExpression, slot: number): boolean {
     case 'fallback':
     case 'comparison':
     case 'function':
-      return partsOf(expression).every((part) => isOwn(part, slot))
+      return partsOf(expression).every(holds)
     default:
       return !expression.open && expression.stage === 'polytope'
   }

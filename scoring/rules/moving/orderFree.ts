@@ -60,8 +60,12 @@ export function isOrderFree(source: ProgramSource, polytope: Polytope): boolean 
         each.body.type !== 'integer',
     ),
   )
-  if (rounded) return false
-  const steps = parts.reduce((sum, part) => sum + mostSteps(part, polytope), 0)
+  return !rounded && isBounded(source, polytope)
+}
+
+/** True when no candidate of this polytope takes a rule's ranking to the limit on steps. */
+export function isBounded(source: ProgramSource, polytope: Polytope): boolean {
+  const steps = rankingParts(source).reduce((sum, part) => sum + mostSteps(part, polytope), 0)
   return steps <= RULE_LIMITS.steps
 }
 

@@ -58,6 +58,10 @@ const further = [
   'score count(t in triangles where t.face.dualLength > 1 : true) + max(t in triples : t.number)',
   'score count(p in pairs where p.a.carrier == 0 : p.b.rigid and p.aab < 0)',
   'score h11\nhit all(p in pairs : p.genus >= 0) and any(p in pairs : p.genus == 1)',
+  'score count(t in triples : all(d in t.divisors : d.cubic > 0)) + count(t in triangles : any(d in t.divisors : d.k3))',
+  'score max(c in curves where c.negative == 2 : sum(d in c.divisors : d.c2)) else 0',
+  'score count(p in pairs : p.a.cubic < p.b.cubic and p.aab >= 0) - sum(p in pairs : p.a.euler * p.genus)',
+  'score sum(t in triples : t.number * min(d in t.divisors where d.cubic > -2 : d.c2)) else -1',
   'score quantile(0.9, d in divisors : d.c2)',
 ]
 
