@@ -12,11 +12,11 @@ import type { SearchTask } from './searchTasks.ts'
 const portionSize = 250
 const firstSeed = 2 ** 20
 
-const folder = fileURLToPath(new URL('../../node_modules/.cache/tessellary-bench/', import.meta.url))
+const folder = fileURLToPath(new URL('../../var/bench/', import.meta.url))
 
 /**
  * The merits of `size` distinct null candidates of a task, best first: independent portions taken together, each class
- * counted once. They are kept in a file under node_modules/.cache, by task, scoring hash and law, because they take
+ * counted once. They are kept in files under var/bench, by task, scoring hash and law, because they take
  * minutes at h11 = 491.
  */
 export async function nullMerits(

@@ -36,8 +36,16 @@ export const searchTasks: readonly SearchTask[] = [
     rule: top,
     scope: ['w20-17-newton-4-4-5-5-7'],
     demanding: false,
-    watched: 150,
-    enumerable: 6000,
+    watched: 100,
+  },
+  {
+    name: 'top-20-few',
+    title: 'metric.divisor.top at (20, 20), where there are 192 classes',
+    rule: top,
+    scope: ['w20-20-fan-3-5-6-7-7'],
+    demanding: false,
+    watched: 100,
+    enumerable: taskBudget,
   },
   {
     name: 'top-50',
@@ -45,7 +53,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: top,
     scope: ['w50-7-newton-2-2-3-3-7'],
     demanding: true,
-    watched: 150,
+    watched: 100,
   },
   {
     name: 'top-100',
@@ -53,7 +61,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: top,
     scope: ['w100-10-newton-1-2-5-5-13'],
     demanding: true,
-    watched: 150,
+    watched: 100,
   },
   {
     name: 'top-251',
@@ -61,7 +69,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: top,
     scope: ['w251-5-newton-1-1-3-10-15'],
     demanding: true,
-    watched: 100,
+    watched: 30,
     slow: true,
   },
   {
@@ -70,7 +78,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: top,
     scope: ['w491-11-newton-1-1-12-28-42'],
     demanding: true,
-    watched: 100,
+    watched: 30,
     slow: true,
   },
   {
@@ -79,7 +87,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: 'score log10(metric.basis.top)',
     scope: ['w50-7-newton-2-2-3-3-7'],
     demanding: true,
-    watched: 150,
+    watched: 100,
   },
   {
     name: 'pattern-100',
@@ -87,7 +95,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: 'score count(p in pairs where p.aab == -1 and p.abb == -1 : p.a.rigid and p.b.rigid)',
     scope: ['w100-10-newton-1-2-5-5-13'],
     demanding: true,
-    watched: 150,
+    watched: 100,
   },
   {
     name: 'mixed-50',
@@ -100,7 +108,7 @@ export const searchTasks: readonly SearchTask[] = [
     ].join('\n'),
     scope: ['w50-7-newton-2-2-3-3-7'],
     demanding: true,
-    watched: 150,
+    watched: 100,
   },
   {
     name: 'small-scope',
@@ -108,7 +116,7 @@ export const searchTasks: readonly SearchTask[] = [
     rule: top,
     scope: { h11: 4 },
     demanding: false,
-    watched: 150,
+    watched: 100,
     enumerable: 2000,
   },
 ]

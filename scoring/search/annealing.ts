@@ -7,7 +7,7 @@ import { codeOfHeights, heightsOfCode } from './heightsCode.ts'
 import { compareMerits, undefinedKind, type Merit } from './merit.ts'
 import type { Chain, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
-import { exchangeCount, moves } from './moves.ts'
+import { exchangeCount, firstWorths, moves } from './moves.ts'
 import { PolytopeBook } from './polytopeBook.ts'
 import type { Start } from './givenStarts.ts'
 import { promisingStart, promisingStep } from './promising.ts'
@@ -17,8 +17,16 @@ import type { Json } from './state.ts'
 /** A descent begins at the best of so many random candidates, but with no more than a twentieth of its budget. */
 const scouts = 6
 
+/**
+ * A descent begins anew when its best has stood for so many evaluations and for so large a part of its budget: a
+ * valley that has not been left by then is better left by a fresh start.
+ */
+const [leastIdle, idleShare] = [25, 0.2]
+
 /** Share of hops to another polytope at the beginning and at the end of a descent. */
 const [hopsFirst, hopsLast] = [0.3, 0.06]
+
+const nothing: Merit = { kind: undefinedKind, value: 0 }
 
 interface AnnealingState {
   readonly descent: number
@@ -27,6 +35,9 @@ interface AnnealingState {
   readonly cooling: CoolingState
   readonly moves: readonly number[]
   readonly book: string
+  /** The best since the latest start, and the evaluations used when it was found. */
+  readonly best: Merit
+  readonly bestAt: number
   /** Where the chain stands; null before its first start. */
   readonly place: {
     readonly polytope: number
@@ -40,13 +51,15 @@ interface AnnealingState {
  * Simulated annealing (Kirkpatrick, Gelatt, Vecchi 1983) over the heights of one polytope, with hops between
  * polytopes where the scope has several. Candidates are compared in the full order of outcomes, so that a chain
  * finds its way from infeasible candidates to feasible ones. A run consists of one or more descents, each from a
- * fresh start with its share of the budget; an extension brings as many further ones.
+ * fresh start with its share of the budget; an extension brings as many further ones. A descent that
+ * has found nothing better for long begins anew on the same polytope.
  */
 export const annealing: Method = {
   name: 'annealing',
-  version: 2,
+  version: 3,
   description:
-    'Simulated annealing over heights: exchanges of one diagonal, noise on points, 2-faces or everywhere, hops between polytopes.',
+    'Simulated annealing over heights: exchanges of one diagonal, noise on points, 2-faces or everywhere, ' +
+    'changes of the whole shape, hops between polytopes.',
   open: (run, state) => new AnnealingChain(run, state as unknown as AnnealingState | null),
 }
 
@@ -58,7 +71,9 @@ class AnnealingChain implements Chain {
   private scouted: number
   private polytope = -1
   private place: PlacedHeights | undefined
-  private merit: Merit = { kind: undefinedKind, value: 0 }
+  private merit: Merit = nothing
+  private best: Merit
+  private bestAt: number
 
   constructor(
     private readonly run: Run,
@@ -66,9 +81,11 @@ class AnnealingChain implements Chain {
   ) {
     this.book = new PolytopeBook(run, state?.book)
     this.cooling = new Cooling(state?.cooling)
-    this.moveBook = new MoveBook(moves.length, state?.moves)
+    this.moveBook = new MoveBook(state?.moves ?? firstWorths)
     this.descent = state?.descent ?? 0
     this.scouted = state?.scouted ?? 0
+    this.best = state?.best ?? nothing
+    this.bestAt = state?.bestAt ?? 0
     if (state === null || state.place === null) return
     const { polytope, heights, kind, value } = state.place
     const restored = heightsOfCode(heights)
@@ -87,6 +104,8 @@ class AnnealingChain implements Chain {
       cooling: this.cooling.state(),
       moves: this.moveBook.state(),
       book: this.book.code(),
+      best: this.best,
+      bestAt: this.bestAt,
       place: place === undefined ? null : { polytope, heights: codeOfHeights(place.heights), ...merit },
     }
     return state as unknown as Json
@@ -99,7 +118,9 @@ class AnnealingChain implements Chain {
     } else if (run.judgeStart()) {
       return
     } else if (place === undefined || this.nextDescent() || book.isSpent(this.polytope)) {
-      this.begin()
+      this.begin(() => book.draw())
+    } else if (this.isIdle()) {
+      this.begin(() => this.polytope)
     } else if (this.scouted < Math.min(scouts, this.descentLength() / 20)) {
       this.scouted++
       this.hop(true)
@@ -110,17 +131,17 @@ class AnnealingChain implements Chain {
     }
   }
 
-  /** A fresh start on a polytope drawn from the open ones, or on the given candidate whose turn it is. */
-  private begin(): void {
+  /** A fresh start on a polytope, or on the given candidate whose turn it is. */
+  private begin(draw: () => number): void {
     const { run, book } = this
     const turn = run.starts[this.descent] as Start | undefined
     const given = turn && !book.isSpent(turn.polytope) ? turn : undefined
-    const start = given
-      ? { polytope: given.polytope, place: given.place() }
-      : promisingStart(run, () => book.draw())
+    const start = given ? { polytope: given.polytope, place: given.place() } : promisingStart(run, draw)
     if (start === null) return
     if (this.place !== undefined) run.countRestart()
     this.scouted = given === undefined ? 1 : scouts
+    this.best = nothing
+    this.bestAt = run.evaluations
     const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit !== null) this.stand(start.polytope, start.place, merit)
   }
@@ -169,7 +190,16 @@ class AnnealingChain implements Chain {
     const judgement = this.run.judge(polytope, proposal)
     if (judgement?.isNew) this.book.found(polytope)
     else this.book.stall(polytope)
+    if (judgement !== null && compareMerits(judgement.merit, this.best) < 0) {
+      this.best = judgement.merit
+      this.bestAt = this.run.evaluations
+    }
     return judgement?.merit ?? null
+  }
+
+  private isIdle(): boolean {
+    const idle = this.run.evaluations - this.bestAt
+    return idle >= leastIdle && idle >= idleShare * this.descentLength()
   }
 
   private accepts(merit: Merit): boolean {

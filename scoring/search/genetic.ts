@@ -59,7 +59,7 @@ class GeneticChain implements Chain {
     state: GeneticState | null,
   ) {
     this.book = new PolytopeBook(run, state?.book)
-    this.operators = new MoveBook(crossings.length + moves.length, state?.moves)
+    this.operators = new MoveBook(state?.moves ?? MoveBook.even(crossings.length + moves.length))
     this.migrations = state?.migrations ?? 0
     const count = Math.max(1, Math.min(4, Math.floor(run.budget / 300)))
     this.populations =

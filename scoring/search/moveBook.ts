@@ -13,13 +13,18 @@ const common = 0.3
 export class MoveBook {
   private readonly worth: number[]
 
-  /** @param worth as `state()` gave it; absent: all the same */
-  constructor(count: number, worth?: readonly number[]) {
-    this.worth = worth === undefined ? new Array<number>(count).fill(0.5) : [...worth]
+  /** @param worth one number per move, 0 to 1: as `state()` gave it, or to begin with */
+  constructor(worth: readonly number[]) {
+    this.worth = [...worth]
   }
 
   state(): readonly number[] {
     return [...this.worth]
+  }
+
+  /** So many moves, all worth the same. */
+  static even(count: number): readonly number[] {
+    return new Array<number>(count).fill(0.5)
   }
 
   /** Index of a move. */

@@ -12,9 +12,12 @@ import { proposalOf, type PlacedHeights } from './sampling.ts'
 /** One kind of random step from a place. Undefined when it leads nowhere; the class may be the old one. */
 export type Move = (place: PlacedHeights, stream: RandomStream) => Proposal | undefined
 
+/** The last of the moves: those along facet potentials. */
+const shapeMoves = 3
+
 /**
- * All kinds of steps: the exchange of one diagonal (across one wall of the class), and normal noise on few
- * points, on 2-faces or everywhere, wide or narrow. Widths are powers of two in units of the largest height.
+ * All kinds of steps: the exchange of one diagonal (across one wall of the class); normal noise on few
+ * points, on 2-faces or everywhere, wide or narrow; potentials of one facet or of all, wide or narrow. Widths are powers of two in units of the largest height.
  */
 export const moves: readonly Move[] = [
   exchanged,
@@ -29,6 +32,11 @@ export const moves: readonly Move[] = [
   (place, stream) => reshaped(place, stream, Infinity, 0, 5),
   (place, stream) => reshaped(place, stream, Infinity, 4, 10),
 ]
+
+/** What the moves count as worth before anything is known: changes of the whole shape gain most at the beginning. */
+export const firstWorths: readonly number[] = moves.map((_, kind) =>
+  kind < moves.length - shapeMoves ? 0.2 : 0.8,
+)
 
 /** Number of diagonals that can be exchanged. */
 export function exchangeCount(cls: TwoFaceClass): number {

@@ -58,7 +58,7 @@ class TemperingChain implements Chain {
   ) {
     this.book = new PolytopeBook(run, state?.book)
     this.cooling = new Cooling(state?.cooling)
-    this.moveBooks = ladder.map((_, r) => new MoveBook(moves.length, state?.moves[r]))
+    this.moveBooks = ladder.map((_, r) => new MoveBook(state?.moves[r] ?? MoveBook.even(moves.length)))
     this.sweeps = state?.sweeps ?? 0
     this.replicas = ladder.map((_, r) => {
       const stored = state?.replicas[r] ?? null
