@@ -80,7 +80,7 @@ class LineChain implements Chain {
   ) {
     this.book = new PolytopeBook(run, state?.book)
     this.cooling = new Cooling(state?.cooling)
-    this.lawBook = new MoveBook(directionLaws.length, state?.laws)
+    this.lawBook = new MoveBook(state?.laws ?? MoveBook.even(directionLaws.length))
     if (state === null || state.place === null) return
     const { polytope, heights, kind, value } = state.place
     this.polytope = polytope
