@@ -38,10 +38,16 @@ const evaluations = ({ lines }: ServerProcess) =>
   lines.flatMap((line) => (/^(running|finished) \d/.test(line) ? [Number(line.split(' ')[1])] : []))
 
 let failed = false
-function compare(what: string, one: unknown, other: unknown): void {
+function compare(what: string, one: object, other: object): void {
   const same = isDeepStrictEqual(one, other)
   if (!same) failed = true
   process.stdout.write(`${what}: ${same ? 'the same result' : 'ANOTHER RESULT'}\n`)
+  if (same) return
+  for (const [key, value] of Object.entries(one)) {
+    const wanted = (other as Record<string, unknown>)[key]
+    if (isDeepStrictEqual(value, wanted)) continue
+    process.stdout.write(`${key}: ${JSON.stringify(value)}\n  in place of ${JSON.stringify(wanted)}\n`)
+  }
 }
 
 try {
@@ -56,8 +62,11 @@ try {
   let made = 0
   while (made < kills) {
     const victim = start(join(folder, 'killed'))
-    await victim.until((lines) => lines.some((line) => /^(running|finished)/.test(line)))
-    const pause = Math.floor(2_500 * random.uniform())
+    // Counted in reports, so that a busy machine gets as far as a quiet one; then somewhere in the next piece.
+    const reports = 1 + Math.floor(12 * random.uniform())
+    const reported = (line: string) => /^(running|finished)/.test(line)
+    await victim.until((lines) => ended(lines) || lines.filter(reported).length >= reports)
+    const pause = Math.floor(400 * random.uniform())
     await new Promise((resolve) => setTimeout(resolve, pause))
     if (ended(victim.lines)) {
       await victim.end('SIGTERM')
@@ -71,7 +80,7 @@ try {
       process.stdout.write(`LOST: ${committed} were committed, then ${Math.min(...counts)}\n`)
     }
     committed = Math.max(...counts)
-    process.stdout.write(`killed after ${pause} ms at ${committed} evaluations\n`)
+    process.stdout.write(`killed ${pause} ms after report ${reports}, at ${committed} evaluations\n`)
   }
   const heir = start(join(folder, 'killed'))
   await heir.until(ended)

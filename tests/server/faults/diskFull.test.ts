@@ -65,6 +65,9 @@ describe('a full disk', () => {
     const done = await finished(id)
     expect(result(done)).toEqual(result(undisturbed))
     expect(server.context.jobs.storage.trouble).toBeNull()
+    // Nothing was left open in which all of this would be lost.
+    await query('BEGIN')
+    await query('ROLLBACK')
     expect(await query('PRAGMA integrity_check')).toEqual([{ integrity_check: 'ok' }])
     await lead.post(path('/targets')).send({ name: 'Room again', text: 'score 1' }).expect(201)
   }, 240_000)
