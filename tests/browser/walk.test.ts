@@ -264,7 +264,13 @@ describe.skipIf(chromiumPath === null)(
       const rows = page.getByRole('row')
       const passed = rows.filter({ hasText: 'passed' })
       await passed.nth(3).waitFor({ timeout: 120_000 })
-      await rows.filter({ hasText: 'undecided' }).filter({ hasText: 'passed' }).first().click()
+      const waiting = rows.filter({ hasText: 'undecided' }).filter({ hasText: 'passed' }).first()
+      const rank = (await waiting.getByRole('cell').nth(1).innerText()).trim()
+      await waiting.click()
+      await page
+        .getByRole('group', { name: 'Candidate in hand' })
+        .getByText(`Rank ${rank}`, { exact: true })
+        .waitFor()
       await page.keyboard.press('v')
       await rows
         .filter({ hasText: /verified(?! by override)/ })

@@ -49,7 +49,8 @@ function Shortlist({ campaign, shortlist }: { campaign: string; shortlist: Short
         }
         return next
       },
-      { replace: true },
+      // At once: the next key must already mean the row that was just taken in hand.
+      { replace: true, flushSync: true },
     )
   const clear = () =>
     change({
