@@ -169,16 +169,17 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
     const figures = page.getByRole('table', { name: 'Figures of the searches' })
     await figures.getByRole('rowheader', { name: 'Best score' }).waitFor()
     const settings = page.getByRole('table', { name: 'Settings of the searches' })
+    await settings.getByRole('rowheader', { name: 'Seed' }).waitFor()
     expect(await settings.getByRole('rowheader').allTextContents()).toEqual([
       'Method',
       'Budget',
       'Islands',
       'Seed',
     ])
-    await page.getByRole('radio', { name: '100' }).check()
+    await page.getByRole('radio', { name: '100' }).click()
     await page.waitForURL(/best=100/)
     const shared = page.getByRole('table', { name: 'Candidates shared among the best 100' })
-    expect(await shared.getByRole('row').nth(1).textContent()).toContain('(20)')
+    await shared.getByRole('row').nth(1).filter({ hasText: '(20)' }).waitFor()
     await page.getByRole('button', { name: 'Show “Best score so far” as a table' }).click()
     await page.getByRole('table', { name: 'Best score over evaluations' }).waitFor()
     expect(complaints).toEqual([])

@@ -62,7 +62,11 @@ function SideBySide({
 }) {
   const navigate = useNavigate()
   const change = (next: Partial<CompareView>) =>
-    void navigate(compareAddress(campaign, { ...view, ...next }), { replace: true, preventScrollReset: true })
+    void navigate(compareAddress(campaign, { ...view, ...next }), {
+      replace: true,
+      preventScrollReset: true,
+      flushSync: true,
+    })
   const { sameScoring } = comparison
   return (
     <>
