@@ -1,18 +1,15 @@
 import { InputError } from '../errors.ts'
-import { isGeneric } from '../geometry/circuits.ts'
 import { canonicalClass, type CanonicalClass } from '../geometry/classKey.ts'
 import type { NormalForm } from '../geometry/normalForm.ts'
-import { transportHeights } from '../geometry/transport.ts'
 import type { TwoFaceClass } from '../geometry/twoFaceClass.ts'
 import type { Candidate } from '../observables/candidate.ts'
 import { buildCandidate } from '../observables/buildCandidate.ts'
 import { evaluatePolytopeStage, evaluateRule } from '../rules/evaluate.ts'
 import type { Outcome } from '../rules/outcome.ts'
-import { withStep, type Curve } from './curve.ts'
+import { once, witnesses, type EvaluatedClass, type Witnesses } from './evaluatedClass.ts'
 import type { ExtendedState, Stage } from './extensions.ts'
 import { codeOfHeights } from './heightsCode.ts'
 import type { KeptFind } from './find.ts'
-import { Histogram } from './histogram.ts'
 import type { OutcomeMemo } from './memo.ts'
 import { Motion } from './lines/motion.ts'
 import { irregularKind, meritOf, type Merit } from './merit.ts'
@@ -30,10 +27,8 @@ import { GivenCandidates, startsOfIsland, type Start } from './givenStarts.ts'
 import type { RunEnd, SampledRow, SampleRow, SearchState } from './state.ts'
 import { Surrogate } from './surrogate/surrogate.ts'
 import { helpsWith } from './surrogate/use.ts'
+import { Tally } from './tally.ts'
 import { TopList } from './topList.ts'
-import { witnessHeights } from './witness.ts'
-
-const mostReasons = 20
 
 /** What may look on while an island works. None of it can alter a result. */
 export interface IslandHooks {
@@ -48,31 +43,10 @@ export interface IslandHooks {
 }
 
 /** One evaluation, as it happens. */
-export interface Evaluated {
+export interface Evaluated extends Witnesses {
   readonly form: NormalForm
   readonly classKey: string
   readonly outcome: Outcome
-  /** Integer heights that give the canonical class, strictly inside it and in general position. */
-  heights(): Float64Array
-  /** The same at less cost: strictly inside the class, and no more. */
-  plainHeights(): Float64Array
-}
-
-/** A class that is evaluated, as far as lists need it. Parts are worked out when asked for. */
-interface Whole {
-  /**
-   * Its key, which decides among equal outcomes where the list of the best is full; null where working it out takes
-   * much longer than the evaluation: then those stay that came first.
-   */
-  readonly key: string | null
-  /** To be called before the search goes on, where parts are going to be asked for later. */
-  hold(): void
-  class(): TwoFaceClass
-  canonical(): CanonicalClass
-  /** Integer heights that give the class, perhaps only with ties or next to it. */
-  heights(): Float64Array
-  /** With the report. */
-  outcome(): Outcome
 }
 
 /** Greater than any key. */
@@ -93,15 +67,7 @@ export class Island implements Run {
   ended: RunEnd | null
   private accepted: number
   private restarts: number
-  private feasible: number
-  private infeasible: number
-  private undefined: number
-  private hits: number
-  private hitsUndefined: number
-  private readonly reasons: Map<string, number>
-  private readonly failures: Map<string, number>
-  private curve: Curve
-  private readonly histogram: Histogram
+  private readonly tally: Tally
   private readonly sample: Reservoir<SampleRow>
   private readonly top: TopList
   private readonly seen: SeenTable
@@ -133,15 +99,7 @@ export class Island implements Run {
     this.ended = given.ended
     this.accepted = given.accepted
     this.restarts = given.restarts
-    this.feasible = given.feasible
-    this.infeasible = given.infeasible
-    this.undefined = given.undefined
-    this.hits = given.hits
-    this.hitsUndefined = given.hitsUndefined
-    this.reasons = new Map(given.reasons)
-    this.failures = new Map(given.failures)
-    this.curve = given.curve
-    this.histogram = new Histogram(given.histogram)
+    this.tally = new Tally(given)
     this.sample = new Reservoir(given.sample)
     this.top = new TopList(problem.settings.keep, given.top)
     this.seen = SeenTable.restore(given.seen)
@@ -165,18 +123,10 @@ export class Island implements Run {
       proposals: this.proposals,
       accepted: this.accepted,
       restarts: this.restarts,
-      feasible: this.feasible,
-      infeasible: this.infeasible,
-      undefined: this.undefined,
-      hits: this.hits,
-      hitsUndefined: this.hitsUndefined,
+      ...this.tally.state(),
       generator: this.stream.state(),
       stalled: this.stalled,
       ended: this.ended,
-      reasons: [...this.reasons],
-      failures: [...this.failures],
-      curve: this.curve,
-      histogram: this.histogram.state(),
       sample: this.sample.state(),
       top: this.settledTop(),
       seen: this.seen.state(),
@@ -306,7 +256,7 @@ export class Island implements Run {
     const held = once(() => motion.snapshot())
     const canonical = once(() => canonicalClass(form, held().class()))
     const usual = once(() => this.outcome(form, canonical().class, canonical().key))
-    const whole: Whole = {
+    const whole: EvaluatedClass = {
       key: null,
       hold: held,
       class: () => held().class(),
@@ -323,7 +273,7 @@ export class Island implements Run {
     form: NormalForm,
     words: readonly [number, number] | null,
     outcome: Outcome,
-    whole: Whole,
+    whole: EvaluatedClass,
   ): Merit {
     const merit = meritOf(outcome)
     this.stalled = 0
@@ -332,7 +282,7 @@ export class Island implements Run {
     // An enumeration meets everything, given or not.
     const isGiven = words !== null && this.given.has(words)
     if (isGiven) this.given.evaluations++
-    this.count(outcome, isGiven)
+    this.tally.count(outcome, this.evaluations, isGiven)
     if (!isGiven) {
       const row = (): SampleRow => ({ polytopeKey: form.key, classKey: whole.canonical().key, ...merit })
       const place = this.sample.offerMade(row, this.stream)
@@ -400,27 +350,6 @@ export class Island implements Run {
     memo?.set(key, outcome)
     return outcome
   }
-
-  private count(outcome: Outcome, isGiven: boolean): void {
-    switch (outcome.kind) {
-      case 'feasible':
-        this.feasible++
-        if (outcome.hit === true && !isGiven) this.hits++
-        if (outcome.hitUndefined !== undefined) this.hitsUndefined++
-        if (!isGiven) this.histogram.add(outcome.score)
-        if (this.curve.length === 0 || outcome.score > this.curve[this.curve.length - 1][1])
-          this.curve = withStep(this.curve, this.evaluations, outcome.score)
-        break
-      case 'infeasible':
-        this.infeasible++
-        for (const { label } of outcome.failed) this.failures.set(label, (this.failures.get(label) ?? 0) + 1)
-        break
-      case 'undefined':
-        this.undefined++
-        if (this.reasons.has(outcome.reason) || this.reasons.size < mostReasons)
-          this.reasons.set(outcome.reason, (this.reasons.get(outcome.reason) ?? 0) + 1)
-    }
-  }
 }
 
 function givenCandidates(
@@ -431,31 +360,4 @@ function givenCandidates(
   const used = usesStarts(method) ? starts : []
   const own = startsOfIsland(used.length, settings.islands, island)
   return new GivenCandidates(used, own, polytopes.keys, form, given)
-}
-
-/** @throws InputError when the state belongs to another problem */
-export function requireSameProblem(state: SearchState, digest: string): void {
-  if (state.problem === digest) return
-  throw new InputError(
-    'state.other-problem',
-    'This state belongs to another search: scope, rule, method, settings or the engine version differ.',
-    'state',
-    state.problem,
-  )
-}
-
-/** Heights of the canonical class, to be worked out when wanted. */
-function witnesses(whole: Whole): Pick<Evaluated, 'heights' | 'plainHeights'> {
-  whole.hold()
-  const moved = (heights: ArrayLike<number>): Float64Array =>
-    transportHeights(heights, whole.canonical().relabelling)
-  const heights = (): Float64Array => moved(witnessHeights(whole.class(), whole.heights()))
-  const isPlain = (): boolean => isGeneric(whole.class(), whole.heights())
-  return { heights, plainHeights: () => (isPlain() ? moved(whole.heights()) : heights()) }
-}
-
-/** Computes a value on the first call and keeps it. */
-function once<T>(compute: () => T): () => T {
-  let kept: { readonly value: T } | undefined
-  return () => (kept ??= { value: compute() }).value
 }

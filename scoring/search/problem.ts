@@ -1,5 +1,6 @@
 import { sha256 } from '@noble/hashes/sha2.js'
 import { bytesToHex, utf8ToBytes } from '@noble/hashes/utils.js'
+import { InputError } from '../errors.ts'
 import type { CheckedRule } from '../rules/checkedRule.ts'
 import { scoringHash } from '../rules/hash.ts'
 import { engineVersion } from '../version.ts'
@@ -7,6 +8,7 @@ import { methods, type MethodName } from './methods.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
 import { seenWordsVersion } from './seenWords.ts'
 import type { SearchSettings } from './settings.ts'
+import type { SearchState } from './state.ts'
 import type { GivenStart } from './givenStarts.ts'
 
 /** What is searched, how, and by which rule. */
@@ -70,4 +72,15 @@ export function problemDigest({ polytopes, rule, method, settings, starts = [] }
     seen: seenWordsVersion,
   })
   return hashOf(content).slice(0, 32)
+}
+
+/** @throws InputError when the state belongs to another problem */
+export function requireSameProblem(state: Pick<SearchState, 'problem'>, digest: string): void {
+  if (state.problem === digest) return
+  throw new InputError(
+    'state.other-problem',
+    'This state belongs to another search: scope, rule, method, settings or the engine version differ.',
+    'state',
+    state.problem,
+  )
 }
