@@ -2,9 +2,8 @@ import { type z } from 'zod'
 import { type histogramSchema } from '../../../shared/outcomes.ts'
 import { useWidth } from '../../lib/useWidth.ts'
 import { formatNumber } from '../../lib/numbers.ts'
-import { Num } from '../ui/Num.tsx'
-import { Table, Td, Th } from '../ui/Table.tsx'
 import { BottomAxis, LeftAxis } from './Axis.tsx'
+import { BinTable } from './BinTable.tsx'
 import { ChartFrame } from './ChartFrame.tsx'
 import { linearScale } from './scales.ts'
 
@@ -47,30 +46,7 @@ export function Histogram({
       title={title}
       note={note}
       file={file}
-      table={
-        <Table label={title}>
-          <thead>
-            <tr>
-              <Th numeric>From</Th>
-              <Th numeric>To</Th>
-              <Th numeric>Candidates</Th>
-            </tr>
-          </thead>
-          <tbody>
-            {counts.map((count, at) => (
-              <tr key={at}>
-                <Td numeric>
-                  <Num value={edges[at] ?? null} digits={5} />
-                </Td>
-                <Td numeric>
-                  <Num value={edges[at + 1] ?? null} digits={5} />
-                </Td>
-                <Td numeric>{formatNumber(count)}</Td>
-              </tr>
-            ))}
-          </tbody>
-        </Table>
-      }
+      table={<BinTable label={title} edges={edges} counts={counts} />}
     >
       <div ref={frame}>
         <svg

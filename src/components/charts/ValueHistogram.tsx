@@ -1,10 +1,9 @@
 import { useMemo } from 'react'
 import { useWidth } from '../../lib/useWidth.ts'
 import { formatNumber } from '../../lib/numbers.ts'
-import { Num } from '../ui/Num.tsx'
-import { Table, Td, Th } from '../ui/Table.tsx'
 import { BottomAxis, LeftAxis } from './Axis.tsx'
 import { type AxisOf, scaleOver } from './axisScale.ts'
+import { BinTable } from './BinTable.tsx'
 import { ChartFrame } from './ChartFrame.tsx'
 import { linearScale } from './scales.ts'
 import { useBrush } from './useBrush.ts'
@@ -80,30 +79,7 @@ export function ValueHistogram({
       title={title}
       note={off > 0 ? `${formatNumber(off)} not positive, not on this axis` : undefined}
       file={file}
-      table={
-        <Table label={title}>
-          <thead>
-            <tr>
-              <Th numeric>From</Th>
-              <Th numeric>To</Th>
-              <Th numeric>Candidates</Th>
-            </tr>
-          </thead>
-          <tbody>
-            {counts.map((count, at) => (
-              <tr key={at}>
-                <Td numeric>
-                  <Num value={edges[at] ?? null} digits={5} />
-                </Td>
-                <Td numeric>
-                  <Num value={edges[at + 1] ?? null} digits={5} />
-                </Td>
-                <Td numeric>{formatNumber(count)}</Td>
-              </tr>
-            ))}
-          </tbody>
-        </Table>
-      }
+      table={<BinTable label={title} edges={edges} counts={counts} />}
     >
       <div ref={frame}>
         <svg

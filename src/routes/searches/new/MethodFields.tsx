@@ -8,6 +8,50 @@ const methods = Object.entries(searchMethods)
 /** Methods that end by themselves when nothing new turns up; the others have nothing to be patient about. */
 const patient: readonly Draft['method'][] = ['auto', 'annealing', 'tempering', 'genetic', 'uniform', 'random']
 
+interface NumberSetting {
+  readonly field: 'budget' | 'seed' | 'islands' | 'keep' | 'descents' | 'patience'
+  readonly label: string
+  readonly limits: string
+  readonly hint?: string
+  /** What an empty field stands for. */
+  readonly usual?: string
+  /** All methods have it unless some are named. */
+  readonly methods?: readonly Draft['method'][]
+}
+
+const numbers: readonly NumberSetting[] = [
+  {
+    field: 'budget',
+    label: 'Budget, evaluations',
+    limits: '10 to 1 000 000',
+    hint: 'Distinct classes, over all islands.',
+  },
+  { field: 'seed', label: 'Seed', limits: '0 to 2^31' },
+  {
+    field: 'islands',
+    label: 'Islands',
+    limits: '1 to 16',
+    hint: 'Independent chains. Five or more give the hit rate an interval; fewer go further in short runs.',
+  },
+  { field: 'keep', label: 'Keep the best', limits: '1 to 500', hint: 'Distinct candidates.' },
+  {
+    field: 'descents',
+    label: 'Descents',
+    limits: '1 to 1000',
+    hint: 'Fresh starts that share an island’s budget.',
+    usual: '1',
+    methods: ['annealing'],
+  },
+  {
+    field: 'patience',
+    label: 'Patience',
+    limits: '10 to 1 000 000',
+    hint: 'Proposals without a new class before a polytope is given up.',
+    usual: '2000',
+    methods: patient,
+  },
+]
+
 /** The method and its few settings. */
 export function MethodFields({
   draft,
@@ -32,59 +76,20 @@ export function MethodFields({
         onChange={(event) => onChange({ method: event.target.value as Draft['method'] })}
         options={methods}
       />
-      <TextField
-        label="Budget, evaluations"
-        inputMode="numeric"
-        value={draft.budget}
-        hint="Distinct classes, over all islands."
-        error={fault('budget', 'A whole number from 10 to 1 000 000.')}
-        onChange={(event) => onChange({ budget: event.target.value })}
-      />
-      <TextField
-        label="Seed"
-        inputMode="numeric"
-        value={draft.seed}
-        error={fault('seed', 'A whole number from 0 to 2^31.')}
-        onChange={(event) => onChange({ seed: event.target.value })}
-      />
-      <TextField
-        label="Islands"
-        inputMode="numeric"
-        value={draft.islands}
-        hint="Independent chains. Five or more give the hit rate an interval; fewer go further in short runs."
-        error={fault('islands', 'A whole number from 1 to 16.')}
-        onChange={(event) => onChange({ islands: event.target.value })}
-      />
-      <TextField
-        label="Keep the best"
-        inputMode="numeric"
-        value={draft.keep}
-        hint="Distinct candidates."
-        error={fault('keep', 'A whole number from 1 to 500.')}
-        onChange={(event) => onChange({ keep: event.target.value })}
-      />
-      {method === 'annealing' && (
-        <TextField
-          label="Descents"
-          inputMode="numeric"
-          placeholder="1"
-          value={draft.descents}
-          hint="Fresh starts that share an island’s budget."
-          error={fault('descents', 'A whole number from 1 to 1000.')}
-          onChange={(event) => onChange({ descents: event.target.value })}
-        />
-      )}
-      {patient.includes(method) && (
-        <TextField
-          label="Patience"
-          inputMode="numeric"
-          placeholder="2000"
-          value={draft.patience}
-          hint="Proposals without a new class before a polytope is given up."
-          error={fault('patience', 'A whole number from 10 to 1 000 000.')}
-          onChange={(event) => onChange({ patience: event.target.value })}
-        />
-      )}
+      {numbers
+        .filter(({ methods: only }) => only === undefined || only.includes(method))
+        .map(({ field, label, limits, hint, usual }) => (
+          <TextField
+            key={field}
+            label={label}
+            inputMode="numeric"
+            placeholder={usual}
+            value={draft[field]}
+            hint={hint}
+            error={fault(field, `A whole number from ${limits}.`)}
+            onChange={(event) => onChange({ [field]: event.target.value })}
+          />
+        ))}
       <SurrogateBox
         className="col-span-2 sm:col-span-4"
         method={method}
