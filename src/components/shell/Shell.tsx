@@ -1,4 +1,4 @@
-import { Suspense, useEffect, useMemo, useState } from 'react'
+import { Suspense, useEffect, useMemo, useRef, useState } from 'react'
 import { Link, NavLink, Navigate, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom'
 import { CircleHelp } from 'lucide-react'
 import { Toaster } from 'sonner'
@@ -154,8 +154,18 @@ function MainNavigation({ campaign }: { campaign: CampaignSummary | null }) {
       : []),
     [base && campaign ? `/library?campaign=${campaign.id}` : '/library', 'Library', false],
   ]
+  const nav = useRef<HTMLElement>(null)
+  const { pathname } = useLocation()
+  // On narrow screens the line scrolls: the page one is on is brought into it.
+  useEffect(() => {
+    const line = nav.current
+    const here = line?.querySelector<HTMLElement>('[aria-current="page"]')
+    if (line && here)
+      line.scrollLeft = here.offsetLeft - line.offsetLeft - (line.clientWidth - here.offsetWidth) / 2
+  }, [pathname, campaign])
   return (
     <nav
+      ref={nav}
       aria-label="Main"
       className="order-last flex w-full min-w-0 gap-4 overflow-x-auto sm:order-none sm:w-auto sm:flex-1"
     >

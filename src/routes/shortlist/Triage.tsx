@@ -138,7 +138,8 @@ export function Triage({
   const columns: Column<ShortlistRow>[] = [
     {
       key: 'select',
-      className: 'w-8',
+      // Clear of the mark on the row in hand.
+      className: 'w-8 first:pl-2',
       header: (
         <input
           type="checkbox"
