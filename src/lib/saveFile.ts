@@ -8,6 +8,14 @@ export function saveFile(name: string, content: BlobPart, type: string): void {
   setTimeout(() => URL.revokeObjectURL(url), 1_000)
 }
 
+/** Saves what an address of the server answers with. */
+export function saveFrom(url: string): void {
+  const link = document.createElement('a')
+  link.href = url
+  link.download = ''
+  link.click()
+}
+
 const kept = [
   'fill',
   'stroke',

@@ -5,7 +5,7 @@ import { createMemoryRouter, RouterProvider } from 'react-router-dom'
 import { type CampaignSummary } from '../../shared/campaigns.ts'
 import { type Role } from '../../shared/roles.ts'
 import { CurrentCampaign } from '../../src/components/shell/currentCampaign.tsx'
-import { dispatchShortcut } from '../../src/lib/shortcuts.ts'
+import { dispatchShortcut } from '../../src/actions/keys.ts'
 
 /** Waits end with the event; the limit only has to hold on a machine that is busy with other things. */
 configure({ asyncUtilTimeout: 20_000 })

@@ -1,13 +1,13 @@
 import { Suspense, useEffect, useMemo, useRef, useState } from 'react'
 import { Link, NavLink, Navigate, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom'
 import { CircleHelp } from 'lucide-react'
-import { Toaster } from 'sonner'
+import { toast, Toaster } from 'sonner'
 import { type CampaignSummary } from '../../../shared/campaigns.ts'
 import { type StreamState } from '../../api/eventStream.ts'
 import { useCampaigns } from '../../api/campaigns.ts'
 import { useLiveEvents } from '../../api/liveEvents.ts'
 import { useSession } from '../../api/session.ts'
-import { dispatchShortcut, useShortcut, useShortcutsOn } from '../../lib/shortcuts.ts'
+import { dispatchShortcut } from '../../actions/keys.ts'
 import { recall, remember } from '../../lib/remembered.ts'
 import { useTheme } from '../../lib/theme.ts'
 import { IconButton } from '../ui/Button.tsx'
@@ -15,8 +15,11 @@ import { Failure, Loading } from '../ui/States.tsx'
 import { AccountMenu } from './AccountMenu.tsx'
 import { CurrentCampaign } from './currentCampaign.tsx'
 import { Mark } from './Mark.tsx'
+import { ActionPalette, PaletteButton } from './PaletteButton.tsx'
 import { ShortcutDialog } from './ShortcutDialog.tsx'
 import { ThemeButton } from './ThemeButton.tsx'
+import { useFocusOnNewPage } from './useFocusOnNewPage.ts'
+import { useShellActions } from './useShellActions.ts'
 
 /** Frame of every page behind sign-in: session, campaign in hand, event stream, head line. */
 export function Shell() {
@@ -73,15 +76,15 @@ function SignedIn({
   const stream = useLiveEvents(campaign?.id ?? null, true)
   const [helpOpen, setHelpOpen] = useState(false)
   const [theme] = useTheme()
-  const [shortcutsOn] = useShortcutsOn()
-  useShortcut({ key: '?', does: 'Show this list', group: 'Everywhere' }, () => setHelpOpen(true))
+  const [paletteOpen, setPaletteOpen] = useState(false)
+  useShellActions({ campaign, onHelp: () => setHelpOpen(true), onPalette: () => setPaletteOpen(true) })
   useEffect(() => {
-    const listen = (event: KeyboardEvent) => {
-      if (shortcutsOn || event.key === '?') dispatchShortcut(event)
-    }
+    const listen = (event: KeyboardEvent) =>
+      void dispatchShortcut(event, ({ unavailable }) => toast.error(unavailable))
     window.addEventListener('keydown', listen)
     return () => window.removeEventListener('keydown', listen)
-  }, [shortcutsOn])
+  }, [])
+  useFocusOnNewPage()
 
   return (
     <CurrentCampaign value={campaign}>
@@ -101,6 +104,7 @@ function SignedIn({
           <MainNavigation campaign={campaign} />
           <div className="ml-auto flex items-center">
             <StreamNote state={stream} quiet={campaign === null} />
+            <PaletteButton onOpen={() => setPaletteOpen(true)} />
             <ThemeButton />
             <IconButton label="Shortcuts" onClick={() => setHelpOpen(true)}>
               <CircleHelp size={16} aria-hidden />
@@ -119,6 +123,9 @@ function SignedIn({
           <Loading what="your campaigns" />
         )}
       </main>
+      <Suspense fallback={null}>
+        {paletteOpen && <ActionPalette open onOpenChange={setPaletteOpen} />}
+      </Suspense>
       <ShortcutDialog open={helpOpen} onOpenChange={setHelpOpen} />
       <Toaster
         theme={theme}

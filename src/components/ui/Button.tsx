@@ -20,6 +20,10 @@ export interface ButtonProps extends ButtonHTMLAttributes<HTMLButtonElement> {
   busy?: boolean
 }
 
+/** The look of a button, for what is one to the eye and a link to everything else. */
+export const buttonLook = (kind: ButtonKind = 'plain', className = ''): string =>
+  `${shape} ${kinds[kind]} ${className}`
+
 export function Button({ kind = 'plain', unavailable, busy, className = '', onClick, ...rest }: ButtonProps) {
   const off = Boolean(unavailable) || busy
   return (
@@ -29,7 +33,7 @@ export function Button({ kind = 'plain', unavailable, busy, className = '', onCl
       aria-disabled={off || undefined}
       aria-busy={busy || undefined}
       title={unavailable || rest.title}
-      className={`${shape} ${kinds[kind]} ${className}`}
+      className={buttonLook(kind, className)}
       onClick={(event) => {
         if (off) event.preventDefault()
         else onClick?.(event)
@@ -39,7 +43,7 @@ export function Button({ kind = 'plain', unavailable, busy, className = '', onCl
 }
 
 export function ButtonLink({ kind = 'plain', className = '', ...rest }: LinkProps & { kind?: ButtonKind }) {
-  return <Link {...rest} className={`${shape} ${kinds[kind]} ${className}`} />
+  return <Link {...rest} className={buttonLook(kind, className)} />
 }
 
 /** A square button that shows only a symbol; `label` is its name for everyone. */

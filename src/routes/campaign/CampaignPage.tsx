@@ -1,8 +1,9 @@
 import { Link, useParams } from 'react-router-dom'
 import { type CampaignDetail } from '../../../shared/campaigns.ts'
 import { may } from '../../../shared/roles.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
+import { useCampaignActions } from '../../actions/useCampaignActions.ts'
 import { useCampaign } from '../../api/campaigns.ts'
-import { ButtonLink } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
@@ -24,6 +25,7 @@ export function CampaignPage() {
 
 function Campaign({ campaign }: { campaign: CampaignDetail }) {
   const base = `/campaigns/${campaign.id}`
+  const { newTarget, newSearch } = useCampaignActions()
   const active = campaign.searchList.filter(({ state }) => /^(running|queued|paused|failed)$/.test(state))
   const running = campaign.searchList.filter(({ state }) => state === 'running' || state === 'queued').length
   const open = campaign.shortlistList.filter(({ undecided }) => undecided > 0)
@@ -35,14 +37,8 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
         actions={
           <>
             {may(campaign.role, 'campaign.edit') && <EditCampaign campaign={campaign} />}
-            {may(campaign.role, 'targets.edit') && (
-              <ButtonLink to={`${base}/targets/new`}>New target</ButtonLink>
-            )}
-            {may(campaign.role, 'searches.run') && (
-              <ButtonLink kind="primary" to={`${base}/searches/new`}>
-                New search
-              </ButtonLink>
-            )}
+            {may(campaign.role, 'targets.edit') && <ActionButton action={newTarget} />}
+            {may(campaign.role, 'searches.run') && <ActionButton kind="primary" action={newSearch} />}
           </>
         }
       >

@@ -1,7 +1,7 @@
 import { useState } from 'react'
 import { type CampaignDetail } from '../../../shared/campaigns.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { useEditCampaign } from '../../api/campaigns.ts'
-import { Button } from '../../components/ui/Button.tsx'
 import { Dialog } from '../../components/ui/Dialog.tsx'
 import { CampaignForm } from '../campaigns/CampaignForm.tsx'
 
@@ -10,9 +10,15 @@ export function EditCampaign({ campaign }: { campaign: CampaignDetail }) {
   const edit = useEditCampaign(campaign.id)
   return (
     <>
-      <Button kind="quiet" onClick={() => setOpen(true)}>
+      <ActionButton
+        kind="quiet"
+        action={{
+          ...{ id: 'campaign.edit', label: 'Edit the campaign', section: 'Campaign' },
+          run: () => setOpen(true),
+        }}
+      >
         Edit
-      </Button>
+      </ActionButton>
       <Dialog open={open} onOpenChange={setOpen} title="Edit the campaign">
         <CampaignForm
           word="Save"

@@ -2,8 +2,8 @@ import { useState } from 'react'
 import { Link, useNavigate } from 'react-router-dom'
 import { Plus } from 'lucide-react'
 import { type CampaignSummary } from '../../../shared/campaigns.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { useCampaigns, useCreateCampaign } from '../../api/campaigns.ts'
-import { Button } from '../../components/ui/Button.tsx'
 import { Dialog } from '../../components/ui/Dialog.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
@@ -19,10 +19,16 @@ export function CampaignsPage() {
       <PageHead
         title="Campaigns"
         actions={
-          <Button kind="primary" onClick={() => setCreating(true)}>
+          <ActionButton
+            kind="primary"
+            action={{
+              ...{ id: 'campaign.new', label: 'New campaign', section: 'Campaigns' },
+              run: () => setCreating(true),
+            }}
+          >
             <Plus size={16} aria-hidden />
             New campaign
-          </Button>
+          </ActionButton>
         }
       >
         A campaign is one team’s hunt: its members, targets, searches and shortlists.

@@ -1,8 +1,7 @@
-import { useNavigate } from 'react-router-dom'
 import { ChevronLeft, ChevronRight } from 'lucide-react'
 import { type CandidateRecord } from '../../../shared/candidates.ts'
-import { Button } from '../../components/ui/Button.tsx'
-import { useShortcut } from '../../lib/shortcuts.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
+import { type Action } from '../../actions/registry.ts'
 
 /** Previous and next in the shortlist the reader came from. */
 export function Steps({
@@ -12,27 +11,33 @@ export function Steps({
   campaign: string
   appearance: CandidateRecord['appearances'][number]
 }) {
-  const navigate = useNavigate()
   const { previousKey, nextKey, rank, size, shortlistId } = appearance
-  const go = (key: string | null) => {
-    if (key) void navigate(`/candidates/${key}?campaign=${campaign}&shortlist=${shortlistId}`)
-  }
-  useShortcut({ key: 'k', does: 'Previous in the shortlist', group: 'Dossier' }, () => go(previousKey))
-  useShortcut({ key: 'j', does: 'Next in the shortlist', group: 'Dossier' }, () => go(nextKey))
+  const step = (id: string, shortcut: string, label: string, key: string | null, end: string): Action => ({
+    ...{ id: `dossier.${id}`, label, section: 'Dossier', shortcut },
+    to: `/candidates/${key ?? ''}?campaign=${campaign}&shortlist=${shortlistId}`,
+    unavailable: key === null && end,
+  })
   return (
     <>
       <span className="text-soft">
         rank {rank} of {size}
       </span>
-      <Button
-        unavailable={previousKey === null && 'This is the first of the list.'}
-        onClick={() => go(previousKey)}
+      <ActionButton
+        action={step(
+          'previous',
+          'k',
+          'Previous in the shortlist',
+          previousKey,
+          'This is the first of the list.',
+        )}
       >
         <ChevronLeft size={14} aria-hidden /> Previous
-      </Button>
-      <Button unavailable={nextKey === null && 'This is the last of the list.'} onClick={() => go(nextKey)}>
+      </ActionButton>
+      <ActionButton
+        action={step('next', 'j', 'Next in the shortlist', nextKey, 'This is the last of the list.')}
+      >
         Next <ChevronRight size={14} aria-hidden />
-      </Button>
+      </ActionButton>
     </>
   )
 }

@@ -4,6 +4,7 @@ import { Check, Circle, X } from 'lucide-react'
 import { toast } from 'sonner'
 import { type CandidateRecord, type CandidateScore } from '../../../shared/candidates.ts'
 import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
+import { useActions } from '../../actions/useActions.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
@@ -17,7 +18,6 @@ import { QueryView } from '../../components/ui/States.tsx'
 import { VerdictMark } from '../../components/ui/VerdictMark.tsx'
 import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
 import { ScoreUnderTarget } from './ScoreUnderTarget.tsx'
-import { useShortcut } from '../../lib/shortcuts.ts'
 import { formatTime } from '../../lib/numbers.ts'
 
 type Appearance = CandidateRecord['appearances'][number]
@@ -143,14 +143,19 @@ function Decide({
       },
     )
   const ask = (value: VerdictValue) => {
-    if (barred) return void toast.error(barred)
     setFault(null)
     if (value === 'undecided') send(value, '')
     else setAsked(value)
   }
-  useShortcut({ key: 'v', does: 'Verify', group: 'Dossier' }, () => ask('verified'))
-  useShortcut({ key: 'r', does: 'Reject', group: 'Dossier' }, () => ask('rejected'))
-  useShortcut({ key: 'u', does: 'Put back to undecided', group: 'Dossier' }, () => ask('undecided'))
+  const decide = (value: VerdictValue, shortcut: string, label: string) => ({
+    ...{ id: `dossier.${value}`, section: 'Dossier', shortcut, label },
+    ...{ unavailable: barred, run: () => ask(value) },
+  })
+  useActions([
+    decide('verified', 'v', 'Verify'),
+    decide('rejected', 'r', 'Reject'),
+    decide('undecided', 'u', 'Put back to undecided'),
+  ])
   return (
     <div>
       <p className="mb-2 flex flex-wrap items-center gap-x-2">

@@ -5,6 +5,7 @@ import { explorationMinutes } from '../../../shared/explorations.ts'
 import { explorationTableUrl } from '../../api/explorations.ts'
 import { describeScope } from '../../components/scope/scopeAddress.ts'
 import { isEmptyScope } from '../../components/scope/ScopeFields.tsx'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
@@ -107,28 +108,32 @@ function Commands({
   return (
     <>
       {(['csv', 'json'] as const).map((format) => (
-        <Button
+        <ActionButton
           key={format}
-          unavailable={empty && 'There are no rows to export yet.'}
-          onClick={() => {
-            if (exploration) window.location.assign(explorationTableUrl(campaign, exploration.id, format))
+          action={{
+            ...{
+              id: `explore.${format}`,
+              label: `Export table, ${format.toUpperCase()}`,
+              section: 'Explore',
+            },
+            file: explorationTableUrl(campaign, exploration?.id ?? '', format),
+            unavailable: empty && 'There are no rows to export yet.',
           }}
         >
           <Download size={14} aria-hidden />
           Export table, {format.toUpperCase()}
-        </Button>
+        </ActionButton>
       ))}
-      <Button
+      <ActionButton
         kind="primary"
-        unavailable={
-          barred ||
-          (empty && 'There is nothing to write a target from yet.') ||
-          (scored?.type === 'truth' && 'A score is a number; order by a column that is no truth value.')
-        }
-        onClick={write}
-      >
-        Write a target from this
-      </Button>
+        action={{
+          ...{ id: 'explore.target', label: 'Write a target from this', section: 'Explore', run: write },
+          unavailable:
+            barred ||
+            (empty && 'There is nothing to write a target from yet.') ||
+            (scored?.type === 'truth' && 'A score is a number; order by a column that is no truth value.'),
+        }}
+      />
     </>
   )
 }

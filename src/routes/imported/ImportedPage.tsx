@@ -2,9 +2,10 @@ import { useCallback, useState } from 'react'
 import { useParams, useSearchParams } from 'react-router-dom'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { Plus } from 'lucide-react'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { importedCandidatesQuery } from '../../api/importedCandidates.ts'
 import { useBarred, useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
+import { Button } from '../../components/ui/Button.tsx'
 import { TextField } from '../../components/ui/Field.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
@@ -14,6 +15,8 @@ import { candidatesInAddress, startAddress } from '../searches/new/searchPreset.
 import { ImportDialog } from '../library/ImportDialog.tsx'
 import { ImportedTable } from './ImportedTable.tsx'
 import { ShortlistDialog } from './ShortlistDialog.tsx'
+
+const section = 'Imported candidates'
 
 /** Candidates that members brought from elsewhere, to be looked at, ranked and decided on. */
 export function ImportedPage() {
@@ -48,32 +51,37 @@ export function ImportedPage() {
         title="Imported candidates"
         actions={
           <>
-            <Button
-              unavailable={barredShortlist || (nothing && 'Import candidates first.')}
-              onClick={() => setListing(true)}
-            >
-              {selected.size > 0 ? `Make a shortlist of ${formatNumber(selected.size)}` : 'Make a shortlist'}
-            </Button>
-            {nothing || barredSearch || selected.size > candidatesInAddress ? (
-              <Button
-                unavailable={
+            <ActionButton
+              action={{
+                ...{ id: 'imported.shortlist', section, run: () => setListing(true) },
+                label:
+                  selected.size > 0
+                    ? `Make a shortlist of ${formatNumber(selected.size)}`
+                    : 'Make a shortlist',
+                unavailable: barredShortlist || (nothing && 'Import candidates first.'),
+              }}
+            />
+            <ActionButton
+              action={{
+                ...{ id: 'imported.search', label: 'Search from these…', section },
+                to: startAddress(campaignId, { kind: 'imported', candidateKeys: chosenKeys }),
+                unavailable:
                   barredSearch ||
-                  (nothing
-                    ? 'Import candidates first.'
-                    : `Select at most ${candidatesInAddress}, or none to begin from all.`)
-                }
-              >
-                Search from these…
-              </Button>
-            ) : (
-              <ButtonLink to={startAddress(campaignId, { kind: 'imported', candidateKeys: chosenKeys })}>
-                Search from these…
-              </ButtonLink>
-            )}
-            <Button kind="primary" unavailable={barred} onClick={() => setImporting(true)}>
+                  (nothing && 'Import candidates first.') ||
+                  (selected.size > candidatesInAddress &&
+                    `Select at most ${candidatesInAddress}, or none to begin from all.`),
+              }}
+            />
+            <ActionButton
+              kind="primary"
+              action={{
+                ...{ id: 'imported.import', label: 'Import candidates', section },
+                ...{ unavailable: barred, run: () => setImporting(true) },
+              }}
+            >
               <Plus size={16} aria-hidden />
               Import candidates
-            </Button>
+            </ActionButton>
           </>
         }
       >

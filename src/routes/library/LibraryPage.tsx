@@ -2,6 +2,7 @@ import { useCallback, useState } from 'react'
 import { Link, useNavigate } from 'react-router-dom'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { FolderPlus, Plus, SlidersHorizontal } from 'lucide-react'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { useCollections } from '../../api/collections.ts'
 import { hodgeQuery, type LibraryFilter } from '../../api/polytopes.ts'
 import { HodgeScatter } from '../../components/charts/HodgeScatter.tsx'
@@ -69,29 +70,41 @@ export function LibraryPage() {
         title="Library"
         actions={
           <>
-            <Button
-              unavailable={!campaign && 'You are not in a campaign yet.'}
-              onClick={() => setDialog('collections')}
-            >
-              Collections
-            </Button>
-            <Button
-              onClick={() => {
-                setPasted('')
-                setDialog('find')
+            <ActionButton
+              action={{
+                ...{ id: 'library.collections', label: 'Collections', section: 'Library' },
+                unavailable: !campaign && 'You are not in a campaign yet.',
+                run: () => setDialog('collections'),
+              }}
+            />
+            <ActionButton
+              action={{
+                ...{ id: 'library.find', label: 'Find by points', section: 'Library' },
+                run: () => {
+                  setPasted('')
+                  setDialog('find')
+                },
+              }}
+            />
+            <ActionButton
+              action={{
+                ...{ id: 'library.search', section: 'Library', unavailable: barredSearch, run: searchFrom },
+                label:
+                  selected.size > 0
+                    ? `Search in the ${counted(selected.size, 'selected', 'selected')}`
+                    : 'Search in these',
+              }}
+            />
+            <ActionButton
+              kind="primary"
+              action={{
+                ...{ id: 'library.import', label: 'Import polytopes', section: 'Library' },
+                ...{ unavailable: barred, run: () => setDialog('import') },
               }}
             >
-              Find by points
-            </Button>
-            <Button unavailable={barredSearch} onClick={searchFrom}>
-              {selected.size > 0
-                ? `Search in the ${counted(selected.size, 'selected', 'selected')}`
-                : 'Search in these'}
-            </Button>
-            <Button kind="primary" unavailable={barred} onClick={() => setDialog('import')}>
               <Plus size={16} aria-hidden />
               Import polytopes
-            </Button>
+            </ActionButton>
           </>
         }
       >

@@ -4,9 +4,9 @@ import { useQuery } from '@tanstack/react-query'
 import { type PolytopeDetail } from '../../../shared/polytopes.ts'
 import { polytopeQuery, structureQuery } from '../../api/polytopes.ts'
 import { FaceAtlas } from '../../components/geometry/FaceAtlas.tsx'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { drawingsOf } from '../../components/geometry/faceDrawing.ts'
 import { useBarred, useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { PageHead, Section } from '../../components/ui/Layout.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { Classes } from './Classes.tsx'
@@ -44,13 +44,14 @@ function Polytope({ polytope, campaign }: { polytope: PolytopeDetail; campaign?:
           </Link>
         }
         actions={
-          barred || !campaign ? (
-            <Button unavailable={barred || 'You are not in a campaign yet.'}>Search in this polytope</Button>
-          ) : (
-            <ButtonLink kind="primary" to={`/campaigns/${campaign}/searches/new?polytopes=${polytope.key}`}>
-              Search in this polytope
-            </ButtonLink>
-          )
+          <ActionButton
+            kind="primary"
+            action={{
+              ...{ id: 'polytope.search', label: 'Search in this polytope', section: 'Polytope' },
+              to: `/campaigns/${campaign ?? ''}/searches/new?polytopes=${polytope.key}`,
+              unavailable: barred,
+            }}
+          />
         }
       >
         Hodge numbers ({polytope.h11}, {polytope.h21}), {polytope.origin}

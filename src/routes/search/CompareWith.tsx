@@ -2,6 +2,7 @@ import { useState } from 'react'
 import { useNavigate } from 'react-router-dom'
 import { mostCompared } from '../../../shared/comparisons.ts'
 import { type SearchDetail } from '../../../shared/searches.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { useSearches } from '../../api/searches.ts'
 import { Button } from '../../components/ui/Button.tsx'
 import { Dialog } from '../../components/ui/Dialog.tsx'
@@ -14,7 +15,12 @@ export function CompareWith({ campaign, search }: { campaign: string; search: Se
   const [open, setOpen] = useState(false)
   return (
     <>
-      <Button onClick={() => setOpen(true)}>Compare with…</Button>
+      <ActionButton
+        action={{
+          ...{ id: 'search.compare', label: 'Compare with…', section: 'Search' },
+          run: () => setOpen(true),
+        }}
+      />
       <Dialog
         open={open}
         onOpenChange={setOpen}

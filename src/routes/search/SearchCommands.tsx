@@ -2,10 +2,12 @@ import { useState } from 'react'
 import { Download } from 'lucide-react'
 import { toast } from 'sonner'
 import { type SearchDetail } from '../../../shared/searches.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
+import { type Action } from '../../actions/registry.ts'
 import { explain } from '../../api/request.ts'
 import { specificationUrl, useSearchCommand, type SearchCommand } from '../../api/searches.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
+import { ButtonLink } from '../../components/ui/Button.tsx'
 import { ConfirmDialog } from '../../components/ui/ConfirmDialog.tsx'
 import { assemblyPath } from '../shortlists/new/assemblyAddress.ts'
 import { cloneAddress } from '../searches/new/searchPreset.ts'
@@ -33,6 +35,13 @@ function whyNotExtend({ imported, method, progress, state }: SearchDetail): stri
 /** How many of the best a search goes on from, unless the composer is told otherwise. */
 const usualStarts = 50
 
+type Deed = { unavailable?: string | false } & ({ run: () => void } | { to: string } | { file: string })
+
+const act = (name: string, label: string, deed: Deed): Action => ({
+  ...{ id: `search.${name}`, label, section: 'Search' },
+  ...deed,
+})
+
 /** Everything that can be done with a search. */
 export function SearchCommands({ campaign, search }: { campaign: string; search: SearchDetail }) {
   const barred = useBarred('searches.run')
@@ -47,56 +56,56 @@ export function SearchCommands({ campaign, search }: { campaign: string; search:
   return (
     <>
       {commandsOf[search.state].map((command) => (
-        <Button
+        <ActionButton
           key={command}
           kind={command === 'cancel' ? 'danger' : 'plain'}
-          unavailable={barred}
           busy={send.isPending}
-          onClick={() => (command === 'cancel' ? setCancelling(true) : run(command))}
-        >
-          {words[command]}
-        </Button>
+          action={act(command, words[command], {
+            unavailable: barred,
+            run: () => (command === 'cancel' ? setCancelling(true) : run(command)),
+          })}
+        />
       ))}
       {canExtend && (
-        <Button unavailable={barred || whyNotExtend(search)} onClick={() => setExtending(true)}>
-          Extend…
-        </Button>
-      )}
-      {barred || noFinds ? (
-        <Button unavailable={barred || noFinds}>Continue from these…</Button>
-      ) : (
-        <ButtonLink
-          to={cloneAddress(campaign, search, {
-            starts: { kind: 'search', id: search.id, size: Math.min(usualStarts, search.keep) },
+        <ActionButton
+          action={act('extend', 'Extend…', {
+            unavailable: barred || whyNotExtend(search),
+            run: () => setExtending(true),
           })}
-        >
-          Continue from these…
-        </ButtonLink>
+        />
       )}
-      {barred ? (
-        <Button unavailable={barred}>Clone settings</Button>
-      ) : (
-        <ButtonLink to={cloneAddress(campaign, search)}>Clone settings</ButtonLink>
-      )}
+      <ActionButton
+        action={act('continue', 'Continue from these…', {
+          unavailable: barred || noFinds,
+          to: cloneAddress(campaign, search, {
+            starts: { kind: 'search', id: search.id, size: Math.min(usualStarts, search.keep) },
+          }),
+        })}
+      />
+      <ActionButton
+        action={act('clone', 'Clone settings', { unavailable: barred, to: cloneAddress(campaign, search) })}
+      />
       <SpecificationLink campaign={campaign} search={search.id} />
       <CompareWith campaign={campaign} search={search} />
       {search.progress.evaluations > 0 && !search.imported && (
-        <ButtonLink to={`/campaigns/${campaign}/explore?search=${search.id}`}>
-          Sample of evaluations
-        </ButtonLink>
+        <ActionButton
+          action={act('sample', 'Sample of evaluations', {
+            to: `/campaigns/${campaign}/explore?search=${search.id}`,
+          })}
+        />
       )}
       {search.shortlists.map((shortlist) => (
         <ButtonLink key={shortlist.id} to={`/campaigns/${campaign}/shortlists/${shortlist.id}`}>
           {shortlist.name}
         </ButtonLink>
       ))}
-      {barredList || noFinds ? (
-        <Button unavailable={barredList || noFinds}>Make a shortlist</Button>
-      ) : (
-        <ButtonLink kind="primary" to={assemblyPath(campaign, [search.id])}>
-          Make a shortlist
-        </ButtonLink>
-      )}
+      <ActionButton
+        kind="primary"
+        action={act('shortlist', 'Make a shortlist', {
+          unavailable: barredList || noFinds,
+          to: assemblyPath(campaign, [search.id]),
+        })}
+      />
       <ConfirmDialog
         open={cancelling}
         onOpenChange={setCancelling}
@@ -114,16 +123,16 @@ export function SearchCommands({ campaign, search }: { campaign: string; search:
 /** The file that the headless search takes, with the same result to the bit. */
 function SpecificationLink({ campaign, search }: { campaign: string; search: string }) {
   const barred = useBarred('exports.read')
-  if (barred) return <Button unavailable={barred}>Headless SPEC</Button>
   return (
-    <a
-      href={specificationUrl(campaign, search)}
-      download
+    <ActionButton
       title="The file for “npm run search”, which ends with the same result to the bit"
-      className="inline-flex min-h-8 items-center gap-1.5 rounded border border-edge bg-sheet px-3 text-sm font-medium hover:bg-action-wash"
+      action={act('specification', 'Headless SPEC', {
+        unavailable: barred,
+        file: specificationUrl(campaign, search),
+      })}
     >
       <Download size={14} aria-hidden />
       Headless SPEC
-    </a>
+    </ActionButton>
   )
 }

@@ -1,10 +1,11 @@
 import { useState } from 'react'
-import { useNavigate, useParams } from 'react-router-dom'
+import { useParams } from 'react-router-dom'
 import { Plus } from 'lucide-react'
 import { fewestCompared, mostCompared } from '../../../shared/comparisons.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
+import { useCampaignActions } from '../../actions/useCampaignActions.ts'
 import { useSearches } from '../../api/searches.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
@@ -16,6 +17,7 @@ import { SearchTable } from './SearchTable.tsx'
 export function SearchesPage() {
   const { campaignId = '' } = useParams()
   const searches = useSearches(campaignId)
+  const { newSearch } = useCampaignActions()
   const barred = useBarred('searches.run')
   const barredLists = useBarred('shortlists.edit')
   const [ticked, setTicked] = useState<string[]>([])
@@ -26,17 +28,16 @@ export function SearchesPage() {
         title="Searches"
         actions={
           <>
-            <Button unavailable={barred} onClick={() => setImporting(true)}>
-              Import a result
-            </Button>
-            {barred ? (
-              <Button unavailable={barred}>New search</Button>
-            ) : (
-              <ButtonLink kind="primary" to={`/campaigns/${campaignId}/searches/new`}>
-                <Plus size={16} aria-hidden />
-                New search
-              </ButtonLink>
-            )}
+            <ActionButton
+              action={{
+                ...{ id: 'search.import', label: 'Import a result', section: 'Searches' },
+                ...{ unavailable: barred, run: () => setImporting(true) },
+              }}
+            />
+            <ActionButton kind="primary" action={newSearch}>
+              <Plus size={16} aria-hidden />
+              {newSearch.label}
+            </ActionButton>
           </>
         }
       >
@@ -52,15 +53,22 @@ export function SearchesPage() {
             <>
               <div className="mb-2 flex flex-wrap items-center gap-3">
                 <CompareButton campaign={campaignId} ids={ticked} />
-                {barredLists || ticked.length === 0 ? (
-                  <Button unavailable={barredLists || 'Tick searches to make one list of their finds.'}>
-                    Make a shortlist of those ticked
-                  </Button>
-                ) : (
-                  <ButtonLink to={assemblyPath(campaignId, ticked)}>
-                    Make a shortlist of the {ticked.length} ticked
-                  </ButtonLink>
-                )}
+                <ActionButton
+                  action={{
+                    ...{
+                      id: 'searches.shortlist',
+                      section: 'Searches',
+                      to: assemblyPath(campaignId, ticked),
+                    },
+                    label:
+                      ticked.length === 0
+                        ? 'Make a shortlist of those ticked'
+                        : `Make a shortlist of the ${ticked.length} ticked`,
+                    unavailable:
+                      barredLists ||
+                      (ticked.length === 0 && 'Tick searches to make one list of their finds.'),
+                  }}
+                />
               </div>
               <SearchTable
                 campaign={campaignId}
@@ -79,14 +87,14 @@ export function SearchesPage() {
 }
 
 function CompareButton({ campaign, ids }: { campaign: string; ids: readonly string[] }) {
-  const navigate = useNavigate()
   const fits = ids.length >= fewestCompared && ids.length <= mostCompared
   return (
-    <Button
-      unavailable={!fits && `Tick ${fewestCompared} to ${mostCompared} searches to lay them side by side.`}
-      onClick={() => void navigate(compareAddress(campaign, { ids: [...ids] }))}
-    >
-      Compare{ids.length > 0 && ` (${ids.length})`}
-    </Button>
+    <ActionButton
+      action={{
+        ...{ id: 'searches.compare', section: 'Searches', to: compareAddress(campaign, { ids: [...ids] }) },
+        label: ids.length > 0 ? `Compare (${ids.length})` : 'Compare',
+        unavailable: !fits && `Tick ${fewestCompared} to ${mostCompared} searches to lay them side by side.`,
+      }}
+    />
   )
 }

@@ -3,6 +3,7 @@ import { Link, useNavigate, useParams, useSearchParams } from 'react-router-dom'
 import { Download } from 'lucide-react'
 import { toast } from 'sonner'
 import { type ShortlistDetail } from '../../../shared/shortlists.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { exportUrl, useShortlist } from '../../api/shortlists.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
@@ -148,10 +149,18 @@ function ListActions({ campaign, shortlist }: { campaign: string; shortlist: Sho
   const follow = (dialog: 'rescore' | 'external') => (on: boolean) => setOpen(on ? dialog : null)
   return (
     <>
-      <Button unavailable={barred} onClick={() => setOpen('rescore')}>
-        Score anew
-      </Button>
-      <Button onClick={() => setOpen('external')}>External columns</Button>
+      <ActionButton
+        action={{
+          ...{ id: 'shortlist.rescore', label: 'Score anew', section: 'Shortlist' },
+          ...{ unavailable: barred, run: () => setOpen('rescore') },
+        }}
+      />
+      <ActionButton
+        action={{
+          ...{ id: 'shortlist.external', label: 'External columns', section: 'Shortlist' },
+          run: () => setOpen('external'),
+        }}
+      />
       <RescoreDialog
         campaign={campaign}
         shortlist={shortlist}
@@ -198,16 +207,17 @@ function ExportLink({
   format: 'csv' | 'json'
 }) {
   const barred = useBarred('exports.read')
-  if (barred) return <Button unavailable={barred}>Export {format.toUpperCase()}</Button>
+  const label = `Export ${format.toUpperCase()}`
   return (
-    <a
-      href={exportUrl(campaign, shortlist, format)}
-      download
-      className="inline-flex min-h-8 items-center gap-1.5 rounded border border-edge bg-sheet px-3 font-medium hover:bg-action-wash"
+    <ActionButton
+      action={{
+        ...{ id: `shortlist.${format}`, label, section: 'Shortlist', unavailable: barred },
+        file: exportUrl(campaign, shortlist, format),
+      }}
     >
       <Download size={14} aria-hidden />
-      Export {format.toUpperCase()}
-    </a>
+      {label}
+    </ActionButton>
   )
 }
 

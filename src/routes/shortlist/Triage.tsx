@@ -3,6 +3,7 @@ import { useNavigate } from 'react-router-dom'
 import { toast } from 'sonner'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
 import { type VerdictValue } from '../../../shared/verdicts.ts'
+import { useActions } from '../../actions/useActions.ts'
 import { explain } from '../../api/request.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
@@ -10,7 +11,6 @@ import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { outcomeFormat } from '../../components/ui/Outcome.tsx'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
 import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
-import { useShortcut } from '../../lib/shortcuts.ts'
 import { ColumnChooser } from './ColumnConditions.tsx'
 import { CertifyBar } from './CertifyBar.tsx'
 import { DecisionBar } from './DecisionBar.tsx'
@@ -32,8 +32,6 @@ interface TriageProps {
   current: string | null
   onCurrent: (key: string | null) => void
 }
-
-const group = 'Triage'
 
 export function Triage({
   campaign,
@@ -101,10 +99,7 @@ export function Triage({
     )
   }
   const ask = (value: VerdictValue) => {
-    if (!row || barred) {
-      if (barred) toast.error(barred)
-      return
-    }
+    if (!row) return
     setFault(null)
     // On a passing certificate one key decides; without one a reason is asked for.
     if (value === 'verified' && row.certificate.state !== 'passed') setAsked(row.candidateKey)
@@ -115,25 +110,29 @@ export function Triage({
     if (next) onCurrent(next.candidateKey)
   }
 
-  useShortcut({ key: 'v', does: 'Verify (asks for a reason when there is no certificate)', group }, () =>
-    ask('verified'),
-  )
-  useShortcut({ key: 'r', does: 'Reject and go on', group }, () => ask('rejected'))
-  useShortcut({ key: 'u', does: 'Put back to undecided and go on', group }, () => ask('undecided'))
-  useShortcut({ key: 'j', does: 'Next candidate', group }, () => move(1))
-  useShortcut({ key: 'k', does: 'Previous candidate', group }, () => move(-1))
-  useShortcut({ key: 'ArrowDown', does: 'Next candidate', group }, () => move(1))
-  useShortcut({ key: 'ArrowUp', does: 'Previous candidate', group }, () => move(-1))
-  useShortcut({ key: 'x', does: 'Select or let go', group }, () => row && selection.toggle(row.candidateKey))
-  useShortcut({ key: 'n', does: 'Next undecided', group }, () => {
-    const next = nextUndecided(rows, row?.candidateKey ?? null)
-    if (next) onCurrent(next)
-    else toast('No undecided candidate is left among those shown.')
+  const act = (id: string, shortcut: string | string[], label: string, run: () => void) => ({
+    ...{ id: `triage.${id}`, section: 'Triage', shortcut, label, run },
   })
-  useShortcut(
-    { key: 'o', does: 'Open the dossier', group },
-    () => row && void navigate(dossier(row.candidateKey)),
-  )
+  useActions([
+    {
+      ...act('verify', 'v', 'Verify (asks for a reason when there is no certificate)', () => ask('verified')),
+      unavailable: barred,
+    },
+    { ...act('reject', 'r', 'Reject and go on', () => ask('rejected')), unavailable: barred },
+    {
+      ...act('undecided', 'u', 'Put back to undecided and go on', () => ask('undecided')),
+      unavailable: barred,
+    },
+    act('next', ['j', 'ArrowDown'], 'Next candidate', () => move(1)),
+    act('previous', ['k', 'ArrowUp'], 'Previous candidate', () => move(-1)),
+    act('select', 'x', 'Select or let go', () => row && selection.toggle(row.candidateKey)),
+    act('next-undecided', 'n', 'Next undecided', () => {
+      const next = nextUndecided(rows, row?.candidateKey ?? null)
+      if (next) onCurrent(next)
+      else toast('No undecided candidate is left among those shown.')
+    }),
+    act('dossier', 'o', 'Open the dossier', () => row && void navigate(dossier(row.candidateKey))),
+  ])
 
   const columns: Column<ShortlistRow>[] = [
     {

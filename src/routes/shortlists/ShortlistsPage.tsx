@@ -1,9 +1,9 @@
 import { useParams } from 'react-router-dom'
 import { Plus } from 'lucide-react'
+import { ActionButton } from '../../actions/ActionButton.tsx'
+import { useCampaignActions } from '../../actions/useCampaignActions.ts'
 import { useShortlists } from '../../api/shortlists.ts'
-import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { RescoringProgress } from '../../components/shortlist/RescoringProgress.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
@@ -12,22 +12,18 @@ import { ShortlistTable } from './ShortlistTable.tsx'
 export function ShortlistsPage() {
   const { campaignId = '' } = useParams()
   const shortlists = useShortlists(campaignId)
-  const barred = useBarred('shortlists.edit')
+  const { newShortlist, imported } = useCampaignActions()
   return (
     <>
       <PageHead
         title="Shortlists"
         actions={
           <>
-            <ButtonLink to={`/campaigns/${campaignId}/imported`}>Imported candidates</ButtonLink>
-            {barred ? (
-              <Button unavailable={barred}>New shortlist</Button>
-            ) : (
-              <ButtonLink kind="primary" to={`/campaigns/${campaignId}/shortlists/new`}>
-                <Plus size={16} aria-hidden />
-                New shortlist
-              </ButtonLink>
-            )}
+            <ActionButton action={imported} />
+            <ActionButton kind="primary" action={newShortlist}>
+              <Plus size={16} aria-hidden />
+              {newShortlist.label}
+            </ActionButton>
           </>
         }
       >

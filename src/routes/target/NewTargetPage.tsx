@@ -3,6 +3,7 @@ import { flushSync } from 'react-dom'
 import { Link, useLocation, useNavigate, useParams } from 'react-router-dom'
 import { createTargetSchema } from '../../../shared/targets.ts'
 import { checkRule } from '../../../scoring/index.ts'
+import { useActions } from '../../actions/useActions.ts'
 import { explain } from '../../api/request.ts'
 import { useCreateTarget } from '../../api/targets.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
@@ -54,6 +55,14 @@ export function NewTargetPage() {
     })
   }
 
+  const unavailable = barred || (!sound && 'The rule has errors; mend them first.')
+  useActions([
+    {
+      ...{ id: 'target.save', label: 'Save the target', section: 'Target' },
+      ...{ shortcut: 'Mod+s', unavailable, run: save },
+    },
+  ])
+
   return (
     <>
       <PageHead
@@ -68,7 +77,7 @@ export function NewTargetPage() {
         className="flex flex-wrap items-start gap-3 pb-4"
         onSubmit={(event) => {
           event.preventDefault()
-          if (!barred && sound) save()
+          if (!unavailable) save()
         }}
       >
         <TextField
@@ -84,7 +93,7 @@ export function NewTargetPage() {
           type="submit"
           className="mt-5"
           busy={create.isPending}
-          unavailable={barred || (!sound && 'The rule has errors; mend them first.')}
+          unavailable={unavailable}
         >
           Save the target
         </Button>

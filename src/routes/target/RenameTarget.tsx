@@ -1,5 +1,6 @@
 import { useState, type FormEvent } from 'react'
 import { createTargetSchema, type TargetDetail } from '../../../shared/targets.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { explain } from '../../api/request.ts'
 import { useRenameTarget } from '../../api/targets.ts'
 import { Button } from '../../components/ui/Button.tsx'
@@ -26,9 +27,15 @@ export function RenameTarget({ campaign, target }: { campaign: string; target: T
   }
   return (
     <>
-      <Button kind="quiet" onClick={() => setOpen(true)}>
+      <ActionButton
+        kind="quiet"
+        action={{
+          ...{ id: 'target.rename', label: 'Rename the target', section: 'Target' },
+          run: () => setOpen(true),
+        }}
+      >
         Rename
-      </Button>
+      </ActionButton>
       <Dialog open={open} onOpenChange={setOpen} title="Rename the target">
         <form onSubmit={submit} noValidate className="flex flex-col gap-4">
           <TextField

@@ -4,10 +4,10 @@ import { useQuery } from '@tanstack/react-query'
 import { toast } from 'sonner'
 import { type TargetDetail } from '../../../shared/targets.ts'
 import { checkRule } from '../../../scoring/index.ts'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { explain } from '../../api/request.ts'
 import { targetQuery, useSaveVersion } from '../../api/targets.ts'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { formatTime } from '../../lib/numbers.ts'
@@ -53,27 +53,27 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
         actions={
           <>
             {!barred && <RenameTarget campaign={campaign} target={target} />}
-            <Button
+            <ActionButton
               kind={changed ? 'primary' : 'plain'}
               busy={save.isPending}
-              unavailable={
-                barred ||
-                (!changed && 'Nothing has changed since the last version.') ||
-                (!sound && 'The rule has errors; mend them first.')
-              }
-              onClick={saveNow}
-            >
-              Save as version {(latest?.number ?? 0) + 1}
-            </Button>
-            {barredSearch || changed ? (
-              <Button unavailable={barredSearch || 'Save this version first; a search runs a saved version.'}>
-                Search with it
-              </Button>
-            ) : (
-              <ButtonLink kind="primary" to={`/campaigns/${campaign}/searches/new?target=${target.id}`}>
-                Search with it
-              </ButtonLink>
-            )}
+              action={{
+                ...{ id: 'target.save', section: 'Target', shortcut: 'Mod+s', run: saveNow },
+                label: `Save as version ${(latest?.number ?? 0) + 1}`,
+                unavailable:
+                  barred ||
+                  (!changed && 'Nothing has changed since the last version.') ||
+                  (!sound && 'The rule has errors; mend them first.'),
+              }}
+            />
+            <ActionButton
+              kind="primary"
+              action={{
+                ...{ id: 'target.search', label: 'Search with it', section: 'Target' },
+                to: `/campaigns/${campaign}/searches/new?target=${target.id}`,
+                unavailable:
+                  barredSearch || (changed && 'Save this version first; a search runs a saved version.'),
+              }}
+            />
           </>
         }
       >

@@ -1,8 +1,8 @@
 import { useParams } from 'react-router-dom'
 import { Plus } from 'lucide-react'
+import { ActionButton } from '../../actions/ActionButton.tsx'
+import { useCampaignActions } from '../../actions/useCampaignActions.ts'
 import { useTargets } from '../../api/targets.ts'
-import { useBarred } from '../../components/shell/currentCampaign.tsx'
-import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
 import { TargetTable } from './TargetTable.tsx'
@@ -10,22 +10,18 @@ import { TargetTable } from './TargetTable.tsx'
 export function TargetsPage() {
   const { campaignId = '' } = useParams()
   const targets = useTargets(campaignId)
-  const barred = useBarred('targets.edit')
+  const { newTarget, reference } = useCampaignActions()
   return (
     <>
       <PageHead
         title="Targets"
         actions={
           <>
-            <ButtonLink to="/reference">Observables</ButtonLink>
-            {barred ? (
-              <Button unavailable={barred}>New target</Button>
-            ) : (
-              <ButtonLink kind="primary" to={`/campaigns/${campaignId}/targets/new`}>
-                <Plus size={16} aria-hidden />
-                New target
-              </ButtonLink>
-            )}
+            <ActionButton action={reference} />
+            <ActionButton kind="primary" action={newTarget}>
+              <Plus size={16} aria-hidden />
+              {newTarget.label}
+            </ActionButton>
           </>
         }
       >

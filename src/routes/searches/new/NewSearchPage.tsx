@@ -3,6 +3,7 @@ import { Link, useNavigate, useParams, useSearchParams } from 'react-router-dom'
 import { useQuery } from '@tanstack/react-query'
 import { createSearchSchema, startless } from '../../../../shared/searches.ts'
 import { type TargetSummary } from '../../../../shared/targets.ts'
+import { useActions } from '../../../actions/useActions.ts'
 import { ApiError } from '../../../api/request.ts'
 import { searchQuery, useCreateSearch } from '../../../api/searches.ts'
 import { useTargets } from '../../../api/targets.ts'
@@ -102,14 +103,23 @@ function Composer({ campaign, targets, base }: ComposerProps) {
       ? says
       : null
 
-  const submit = (event: FormEvent) => {
-    event.preventDefault()
+  const start = () => {
     setTried(true)
     if (!parsed.success || barred) return
     create.mutate(parsed.data, {
       onSuccess: (search) => void navigate(`/campaigns/${campaign}/searches/${search.id}`),
     })
   }
+  const submit = (event: FormEvent) => {
+    event.preventDefault()
+    start()
+  }
+  useActions([
+    {
+      ...{ id: 'search.start', label: 'Start the search', section: 'New search' },
+      ...{ shortcut: 'Mod+Enter', unavailable: barred, run: start },
+    },
+  ])
 
   return (
     <form onSubmit={submit} noValidate>

@@ -3,6 +3,7 @@ import { useNavigate } from 'react-router-dom'
 import { type UseQueryResult } from '@tanstack/react-query'
 import { type SearchSummary } from '../../../../shared/searches.ts'
 import { type ShortlistDraft } from '../../../../shared/shortlists.ts'
+import { useActions } from '../../../actions/useActions.ts'
 import { useRequestRescoring } from '../../../api/rescorings.ts'
 import { useCreateShortlist } from '../../../api/shortlists.ts'
 import { useBarred } from '../../../components/shell/currentCampaign.tsx'
@@ -80,8 +81,7 @@ function MakeForm({
     searches.length === 1 ? `Best of ${searches[0]!.name}` : `Best of ${searches.length} searches`
   const name = typed ?? suggested.slice(0, 80)
   const scored = data.counts !== null
-  const submit = (event: FormEvent) => {
-    event.preventDefault()
+  const make = () => {
     if (barred || name.trim() === '') return
     const { searchIds, settings, versionId } = assembly
     if (!scored) {
@@ -103,6 +103,16 @@ function MakeForm({
       { onSuccess: ({ id }) => void navigate(`/campaigns/${campaign}/shortlists/${id}`) },
     )
   }
+  const submit = (event: FormEvent) => {
+    event.preventDefault()
+    make()
+  }
+  useActions([
+    {
+      ...{ id: 'shortlist.make', label: 'Make the shortlist', section: 'New shortlist' },
+      ...{ shortcut: 'Mod+Enter', unavailable: barred, run: make },
+    },
+  ])
   const failure = create.error ?? rescore.error
   const asked = rescore.data?.id
   return (

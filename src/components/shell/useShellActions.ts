@@ -1,0 +1,51 @@
+import { toast } from 'sonner'
+import { type CampaignSummary } from '../../../shared/campaigns.ts'
+import { useShortcutsOn } from '../../actions/keys.ts'
+import { type Action } from '../../actions/registry.ts'
+import { useActions } from '../../actions/useActions.ts'
+import { campaignActions } from '../../actions/useCampaignActions.ts'
+import { explain } from '../../api/request.ts'
+import { useSignOut } from '../../api/session.ts'
+import { useTheme, type Theme } from '../../lib/theme.ts'
+
+const themes: readonly [Theme, string][] = [
+  ['light', 'Light theme'],
+  ['dark', 'Dark theme'],
+  ['system', 'Theme as the system has it'],
+]
+
+interface ShellActions {
+  campaign: CampaignSummary | null
+  onHelp: () => void
+  onPalette: () => void
+}
+
+/** What can be done on every page. */
+export function useShellActions({ campaign, onHelp, onPalette }: ShellActions): void {
+  const [theme, setTheme] = useTheme()
+  const [shortcutsOn, setShortcutsOn] = useShortcutsOn()
+  const signOut = useSignOut()
+  const everywhere: Action[] = [
+    {
+      id: 'palette',
+      label: 'Find an action or a thing',
+      section: 'Everywhere',
+      shortcut: 'Mod+k',
+      run: onPalette,
+    },
+    { id: 'shortcuts', label: 'Shortcuts of this page', section: 'Everywhere', shortcut: '?', run: onHelp },
+    {
+      ...{ id: 'shortcuts.switch', section: 'Everywhere', run: () => setShortcutsOn(!shortcutsOn) },
+      label: `Switch single-key shortcuts ${shortcutsOn ? 'off' : 'on'}`,
+    },
+    ...themes.map(([value, label]): Action => ({
+      ...{ id: `theme.${value}`, label, section: 'Everywhere', run: () => setTheme(value) },
+      unavailable: theme === value && 'It is so now.',
+    })),
+    {
+      ...{ id: 'sign-out', label: 'Sign out', section: 'Account' },
+      run: () => signOut.mutate(undefined, { onError: (error) => toast.error(explain(error)) }),
+    },
+  ]
+  useActions([...Object.values(campaignActions(campaign)), ...everywhere])
+}
