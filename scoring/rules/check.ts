@@ -2,17 +2,18 @@ import type { Stage, ValueType } from '../observables/observable.ts'
 import type { NameNode, ReportColumn, Statement } from './ast.ts'
 import { ExpressionChecker } from './checkExpression.ts'
 import type { CheckedRule, PlaceOnRay } from './checkedRule.ts'
-import { canonicalText, formatExpression } from './format.ts'
-import { type IssueDraft, locateIssues, type RuleIssue, TextPositions } from './issues.ts'
+import { canonicalText, formatExpression, quoted } from './format.ts'
+import { type IssueDraft, locateIssues, type RuleIssue, TextPositions, writing } from './issues.ts'
 import { RULE_LIMITS } from './limits.ts'
 import { dearest, mentionsOf } from './mentions.ts'
 import { nearestName } from './nearest.ts'
+import { definedAbove, withoutStatement } from './statementRepairs.ts'
 import { later } from './node.ts'
-import { type BrokenStatement, readRule } from './parse.ts'
+import { type BrokenStatement, type Reading, readRule } from './parse.ts'
 import { compileProgram } from './program.ts'
 import { Scope } from './scope.ts'
 import { isNumeric, type TypedExpression, typeName } from './typed.ts'
-import { findBasisDependence } from './warnings.ts'
+import { findBasisDependence, withoutBasis } from './warnings.ts'
 
 /** What checking a text gives: a rule ready to run with its warnings, or the errors (and warnings) found. */
 export type RuleCheck =
@@ -52,12 +53,9 @@ class RuleChecker {
     for (const statement of statements) this.statement(statement)
     if (!this.first.has('score')) {
       const end = this.text.trimEnd().length
-      this.issue(
-        { from: end, to: end },
-        'no-score',
-        'a rule has exactly one `score`; this one has none',
-        'score expression',
-      )
+      this.issue({ from: end, to: end }, 'no-score', 'a rule has exactly one `score`; this one has none', {
+        expected: 'score expression',
+      })
     }
     if (statements.some((statement) => statement.kind === 'broken')) return
     for (const entry of this.scope.lets.values())
@@ -68,11 +66,21 @@ class RuleChecker {
           from: entry.name.from,
           to: entry.name.to,
           severity: 'warning',
+          ...withoutStatement(this.text, statements, entry.name),
         })
+    this.drafts.forEach((draft, at) => {
+      if (draft.code === 'used-before-definition')
+        this.drafts[at] = { ...draft, ...definedAbove(this.text, statements, draft) }
+    })
   }
 
-  private issue(span: { from: number; to: number }, code: string, message: string, expected?: string): void {
-    this.drafts.push({ code, message, from: span.from, to: span.to, ...(expected ? { expected } : {}) })
+  private issue(
+    span: { from: number; to: number },
+    code: string,
+    message: string,
+    more: Pick<IssueDraft, 'expected' | 'suggestion'> = {},
+  ): void {
+    this.drafts.push({ code, message, from: span.from, to: span.to, ...more })
   }
 
   /** True for the first statement of a kind that may stand only once; reports the others. */
@@ -84,6 +92,7 @@ class RuleChecker {
         { from: span.from, to: span.from + kind.length },
         `second-${kind}`,
         `${rule}; the first is in line ${line}`,
+        withoutStatement(this.text, [span], span),
       )
       return false
     }
@@ -170,12 +179,9 @@ class RuleChecker {
       return
     }
     if (!(value > 0 && Number.isFinite(value))) {
-      this.issue(
-        valueSpan,
-        'place-not-positive',
-        `\`at ${kind}\` takes a positive number`,
-        'a positive number',
-      )
+      this.issue(valueSpan, 'place-not-positive', `\`at ${kind}\` takes a positive number`, {
+        expected: 'a positive number',
+      })
       return
     }
     this.place = { kind, value }
@@ -189,9 +195,15 @@ class RuleChecker {
         label,
         'label-too-long',
         `a label has at most ${RULE_LIMITS.label} characters; this one has ${label.text.length}`,
+        writing(label, quoted(label.text.slice(0, RULE_LIMITS.label).trim())),
       )
     if (label && label.text.trim() === '')
-      this.issue(label, 'empty-label', 'this label is empty; leave it out, or name the condition')
+      this.issue(
+        label,
+        'empty-label',
+        'this label is empty; leave it out, or name the condition',
+        writing({ from: statement.condition.to, to: label.to }, ''),
+      )
     this.requires.push({ label: label?.text ?? formatExpression(statement.condition), condition })
   }
 
@@ -199,8 +211,19 @@ class RuleChecker {
     const value = this.plain(this.expressions.check(column.value), column.value, 'a report column is a value')
     const name = column.name?.text ?? formatExpression(column.value)
     if (this.columns.some((earlier) => earlier.name === name))
-      this.issue(column.name ?? column, 'second-column', `the report already has a column \`${name}\``)
+      this.issue(
+        column.name ?? column,
+        'second-column',
+        `the report already has a column \`${name}\``,
+        column.name ? writing(column.name, this.freeColumn(name)) : {},
+      )
     this.columns.push({ name, value })
+  }
+
+  private freeColumn(name: string): string {
+    let count = 2
+    while (this.columns.some((earlier) => earlier.name === `${name}_${count}`)) count += 1
+    return `${name}_${count}`
   }
 
   /** Warnings about rules that are right but hardly meant. */
@@ -220,6 +243,7 @@ class RuleChecker {
           from: found.from,
           to: found.to,
           severity: 'warning',
+          ...writing(found, withoutBasis(found)),
         })
     }
     if (this.score?.stage === 'polytope')
@@ -237,16 +261,32 @@ class RuleChecker {
 const valueType = (expression: TypedExpression): ValueType =>
   expression.type === 'truth' || expression.type === 'integer' ? expression.type : 'number'
 
+/** A text as the checker leaves it, sound or not. */
+export function checkedText(text: string): { readonly reading: Reading; readonly checker: Checked } {
+  const reading = readRule(text)
+  const checker = new RuleChecker(text)
+  checker.drafts.push(...reading.drafts)
+  if (!reading.drafts.some((draft) => draft.code === 'too-long')) checker.run(reading.statements)
+  return { reading, checker }
+}
+
+/** What the checker knows after its run. */
+export type Checked = Pick<
+  RuleChecker,
+  'drafts' | 'scope' | 'lets' | 'requires' | 'columns' | 'place' | 'score' | 'hit' | 'warn'
+>
+
 /**
  * Reads and checks the text of a rule: names, types, limits, the rules of `let`, and that there is exactly one
  * score. Mistakes come back as located issues, several at once; nothing a person types makes it throw.
  */
 export function checkRule(text: string): RuleCheck {
-  const { statements, closing, drafts } = readRule(text)
-  const tooLong = drafts.some((draft) => draft.code === 'too-long')
-  const checker = new RuleChecker(text)
-  checker.drafts.push(...drafts)
-  if (!tooLong) checker.run(statements)
+  return ruleCheck(text, checkedText(text))
+}
+
+/** The outcome of a check that was made. */
+export function ruleCheck(text: string, { reading, checker }: ReturnType<typeof checkedText>): RuleCheck {
+  const { statements, closing } = reading
   const { score, hit, requires, columns, place, scope, lets } = checker
   const sound = checker.drafts.every((draft) => draft.severity === 'warning')
   if (sound) checker.warn()

@@ -7,6 +7,7 @@ import type { PathChecker } from './checkPath.ts'
 import { type Fold, findFold } from './folds.ts'
 import { findFunction } from './functions/registry.ts'
 import type { RuleFunction } from './functions/ruleFunction.ts'
+import { writing } from './issues.ts'
 import { RULE_LIMITS } from './limits.ts'
 import { nearestName } from './nearest.ts'
 import { later, nodeOf, unknownNode } from './node.ts'
@@ -158,7 +159,14 @@ export class CallChecker {
     if (!fold.ordered) return undefined
     const order = this.expressions.numeric(call.operands[0], 'the order of a quantile is a number')
     if (order.kind === 'constant' && (order.value < 0 || order.value > 1)) {
-      this.issue(call.operands[0], 'quantile-order', 'the order of a quantile lies between 0 and 1')
+      const percent = order.value > 1 && order.value <= 100 ? String(order.value / 100) : undefined
+      this.expressions.report({
+        code: 'quantile-order',
+        message: 'the order of a quantile lies between 0 and 1',
+        from: order.from,
+        to: order.to,
+        ...writing(order, percent),
+      })
       return 'wrong'
     }
     return isNumeric(order.type) && order.type !== 'unknown' ? order : 'wrong'
@@ -177,9 +185,8 @@ export class CallChecker {
       from: call.name.from,
       to: call.name.to,
       found: name,
-      ...(near && !observable
-        ? { suggestion: { label: `write ${near}`, from: call.name.from, to: call.name.to, insert: near } }
-        : {}),
+      ...(observable?.kind === 'scalar' ? writing(call, name) : {}),
+      ...(observable ? {} : writing(call.name, near)),
     })
   }
 }

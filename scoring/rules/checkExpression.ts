@@ -4,8 +4,8 @@ import type { CallExpression, ComparisonExpression, Expression, Span } from './a
 import { CallChecker } from './checkCall.ts'
 import { PathChecker } from './checkPath.ts'
 import { formatExpression } from './format.ts'
-import type { IssueDraft } from './issues.ts'
 import { nodeOf, unknownNode } from './node.ts'
+import { type IssueDraft, writing } from './issues.ts'
 import type { Scope } from './scope.ts'
 import { isNumeric, type Type, type TypedExpression, typeName } from './typed.ts'
 
@@ -73,14 +73,14 @@ export class ExpressionChecker {
     if (isNumeric(typed.type)) return typed
     const hint =
       typed.type === 'truth' ? `; \`indicator(${short(expression)})\` is 1 or 0` : fieldsHint(typed.type)
-    this.wrongType(
-      expression,
-      typed.type,
-      'a number',
-      demand,
-      hint,
-      typed.type === 'truth' ? 'indicator' : undefined,
-    )
+    const field = typeof typed.type === 'object' ? fieldOf(typed.type.of.name) : undefined
+    const insert =
+      typed.type === 'truth'
+        ? `indicator(${formatExpression(expression)})`
+        : expression.kind === 'path' && field !== undefined
+          ? `${formatExpression(expression)}.${field}`
+          : undefined
+    this.wrongType(expression, typed.type, 'a number', demand, hint, insert)
     return unknownNode(expression)
   }
 
@@ -91,7 +91,16 @@ export class ExpressionChecker {
     const hint = isNumeric(typed.type)
       ? `; compare it, as in \`${short(expression)} > 0\``
       : fieldsHint(typed.type)
-    this.wrongType(expression, typed.type, 'a truth value', demand, hint)
+    const operand = formatExpression(expression)
+    const insert = expression.kind === 'fallback' ? `(${operand}) > 0` : `${operand} > 0`
+    this.wrongType(
+      expression,
+      typed.type,
+      'a truth value',
+      demand,
+      hint,
+      isNumeric(typed.type) ? insert : undefined,
+    )
     return unknownNode(expression)
   }
 
@@ -113,7 +122,7 @@ export class ExpressionChecker {
       'an integer',
       demand,
       '; `floor`, `ceil` and `round` make integers',
-      'round',
+      `round(${formatExpression(expression)})`,
     )
     return unknownNode(expression)
   }
@@ -124,7 +133,7 @@ export class ExpressionChecker {
     expected: string,
     demand: string,
     hint: string,
-    wrap?: string,
+    insert?: string,
   ): void {
     this.report({
       code: 'type',
@@ -133,16 +142,7 @@ export class ExpressionChecker {
       to: span.to,
       expected,
       found: typeName(found),
-      ...(wrap
-        ? {
-            suggestion: {
-              label: `write ${wrap}(…)`,
-              from: span.from,
-              to: span.to,
-              insert: `${wrap}(${formatExpression(span as Expression)})`,
-            },
-          }
-        : {}),
+      ...writing(span, insert),
     })
   }
 
@@ -155,6 +155,7 @@ export class ExpressionChecker {
           'integers are exact up to 9007199254740991 (2^53 - 1); write a point, as in `1e16`, for a rounded number',
         from,
         to,
+        ...writing({ from, to }, `${value.toExponential()}`),
       })
     else if (!Number.isFinite(value))
       this.report({ code: 'number-too-large', message: 'numbers go up to about 1.8e308', from, to })
@@ -245,8 +246,10 @@ export class ExpressionChecker {
     if (equality && left === 'truth' && right === 'truth') return undefined
     if (equality && typeof left === 'object' && typeof right === 'object' && left.of === right.of)
       return undefined
+    const bare = equality && bareTruth(expression, left, right)
     return {
       code: 'type',
+      ...(bare ? writing(expression, bare) : {}),
       message: equality
         ? `\`${operator}\` compares two integers, two truth values or two elements of one set, but these are ${typeName(left)} and ${typeName(right)}`
         : `\`${operator}\` compares numbers, but these are ${typeName(left)} and ${typeName(right)}`,
@@ -261,10 +264,32 @@ export class ExpressionChecker {
   }
 }
 
+/** `rigid == 1` is `rigid`, `rigid == 0` and `rigid != 1` are `not rigid`; undefined for anything else. */
+function bareTruth(
+  { operands, operators }: ComparisonExpression,
+  left: Type,
+  right: Type,
+): string | undefined {
+  if (operands.length !== 2 || (left !== 'truth' && right !== 'truth')) return undefined
+  const [condition, number] = left === 'truth' ? operands : [operands[1], operands[0]]
+  if (number.kind !== 'number' || (number.value !== 0 && number.value !== 1)) return undefined
+  const holds = (number.value === 1) === (operators[0] === '==')
+  const text = formatExpression(condition)
+  const whole = condition.kind === 'path' || condition.kind === 'call'
+  return holds ? text : whole ? `not ${text}` : `not (${text})`
+}
+
+/** The first field of a set that is a number. */
+function fieldOf(set: string): string | undefined {
+  const observable = findObservable(set)
+  if (observable?.kind !== 'records') return undefined
+  return observable.fields.find((field) => field.kind === 'value' && field.type !== 'truth')?.name
+}
+
 function fieldsHint(type: Type): string {
   if (typeof type !== 'object') return ''
   const observable = findObservable(type.of.name) as RecordSet | NumberSet
   return observable.kind === 'records'
-    ? `; take one of its fields, such as \`${observable.fields[0].name}\``
+    ? `; take one of its fields, such as \`${fieldOf(observable.name) ?? observable.fields[0].name}\``
     : ''
 }

@@ -4,18 +4,13 @@ import { findField, findObservable, OBSERVABLES, recordSet } from '../observable
 import type { NameNode, PathExpression, Span } from './ast.ts'
 import { findFold } from './folds.ts'
 import { findFunction } from './functions/registry.ts'
-import type { IssueDraft } from './issues.ts'
+import { type IssueDraft, writing } from './issues.ts'
 import { nearestName } from './nearest.ts'
 import { later, nodeOf, unknownNode } from './node.ts'
 import { isGroup, type Scope } from './scope.ts'
 import { fieldTypeName, type FoldSource, type TypedExpression, typeName } from './typed.ts'
 
 const spelled = (names: readonly NameNode[]): string => names.map((name) => name.text).join('.')
-
-const replacing = (span: Span, insert: string | undefined): Pick<IssueDraft, 'suggestion'> =>
-  insert === undefined
-    ? {}
-    : { suggestion: { label: `write ${insert}`, from: span.from, to: span.to, insert } }
 
 /** Resolves names and fields. */
 export class PathChecker {
@@ -82,6 +77,7 @@ export class PathChecker {
             : `\`${name}\` is a set; it is used through a quantifier or fold, such as ${form}`,
         ...at(path),
         found: name,
+        ...(observable.kind === 'relation' ? {} : writing(path, this.foldOf(name, observable.kind))),
       })
       return unknownNode(path)
     }
@@ -133,7 +129,7 @@ export class PathChecker {
       ...at(path),
       expected: 'a set',
       found: name,
-      ...replacing(path, near),
+      ...writing(path, near),
     })
     return undefined
   }
@@ -149,6 +145,7 @@ export class PathChecker {
           message: `\`${spelled(names.slice(0, names.indexOf(name)))}\` is ${typeName(node.type)} and has no fields`,
           ...at(name),
           found: name.text,
+          ...writing({ from: names[names.indexOf(name) - 1].to, to: names[names.length - 1].to }, ''),
         })
         return unknownNode(span)
       }
@@ -165,6 +162,7 @@ export class PathChecker {
           message: `\`${path}\` is a set; it is used through a quantifier or fold, such as \`count(x in ${path} : condition)\``,
           ...at(span),
           found: path,
+          ...writing(span, this.foldOf(path, 'records')),
         })
         return unknownNode(span)
       }
@@ -180,6 +178,12 @@ export class PathChecker {
     return node
   }
 
+  /** The shortest use of a set that is a value: the number of its elements, or its largest number. */
+  private foldOf(name: string, kind: 'records' | 'numbers'): string {
+    const free = ['x', 'y', 'z', 'u'].find((letter) => this.scope.taken(letter) === undefined) ?? 'x1'
+    return kind === 'records' ? `count(${free} in ${name} : true)` : `max(${free} in ${name} : ${free})`
+  }
+
   private noFields(path: PathExpression, what: string): TypedExpression {
     const second = path.names[1]
     this.report({
@@ -187,6 +191,7 @@ export class PathChecker {
       message: `\`${path.names[0].text}\` is ${what} and has no fields`,
       ...at(second),
       found: second.text,
+      ...writing({ from: path.names[0].to, to: path.to }, ''),
     })
     return unknownNode(path)
   }
@@ -211,7 +216,7 @@ export class PathChecker {
       ...at(name),
       expected: names.join(', '),
       found: name.text,
-      ...replacing(name, near),
+      ...writing(name, near),
     })
   }
 
@@ -249,6 +254,7 @@ export class PathChecker {
         message: `\`${name}\` is a group of observables: ${inGroup.map((observable) => observable.name).join(', ')}`,
         ...at(path),
         found: name,
+        ...writing(path, inGroup.find(({ kind }) => kind === 'scalar')?.name),
       })
       return
     }
@@ -276,7 +282,7 @@ export class PathChecker {
       message: `there is no observable or name \`${shorten(name)}\`${hint ? `; did you mean \`${hint}\`?` : where}`,
       ...at(nearFirst ? first : path),
       found: name,
-      ...replacing(nearFirst ? first : path, hint),
+      ...writing(nearFirst ? first : path, hint),
     })
   }
 }

@@ -1,4 +1,6 @@
 import { OBSERVABLES } from '../observables/registry.ts'
+import type { CostClass } from '../observables/observable.ts'
+import type { OwnName } from './ownNames.ts'
 import { referenceEntries, type ReferenceEntry } from './reference.ts'
 import { pathEndingAt, setOf, type Surroundings, surroundingsAt } from './surroundings.ts'
 
@@ -10,6 +12,9 @@ export interface Completion {
   readonly detail: string
   /** Longer: the description. */
   readonly info: string
+  /** Of observables and own names. */
+  readonly unit?: string
+  readonly cost?: CostClass
   /** What replaces `from .. to`; the label when left out. */
   readonly insert?: string
   /** Where the cursor goes inside `insert`, counted from its start; its end when left out. */
@@ -26,14 +31,18 @@ const ENTRIES = referenceEntries()
 
 function plain(entry: ReferenceEntry): Completion {
   const detail = entry.type || entry.form
-  return { label: entry.name, kind: entry.kind, detail, info: entry.description }
+  return { label: entry.name, kind: entry.kind, detail, info: entry.description, ...worth(entry) }
 }
+
+const worth = ({ observable }: ReferenceEntry): Pick<Completion, 'unit' | 'cost'> =>
+  observable ? { unit: observable.unit, cost: observable.cost } : {}
 
 function callable(entry: ReferenceEntry, variable: string): Completion {
   const order = entry.name === 'quantile' ? '0.5, ' : ''
   const insert = entry.kind === 'fold' ? `${entry.name}(${order}${variable} in  : )` : `${entry.name}()`
   const cursor = entry.kind === 'fold' ? insert.indexOf(' in ') + 4 : insert.length - 1
-  return { label: entry.name, kind: entry.kind, detail: entry.form, info: entry.description, insert, cursor }
+  const { name, kind, form, description } = entry
+  return { label: name, kind, detail: form, info: description, insert, cursor, ...worth(entry) }
 }
 
 /** What can follow `words.`: fields of a variable's elements, or the next part of a group's names. */
@@ -84,7 +93,7 @@ function sets(around: Surroundings): Completion[] {
 }
 
 /** What can start or continue an expression. */
-function operands(around: Surroundings): Completion[] {
+function operands(around: Surroundings, names: readonly OwnName[]): Completion[] {
   const variables = [...around.variables].map(([label, set]): Completion => ({
     label,
     kind: 'variable',
@@ -93,12 +102,17 @@ function operands(around: Surroundings): Completion[] {
   }))
   const used = new Set([...around.variables.keys(), ...around.lets])
   const free = ['x', 'y', 'z', 'u', 'v', 'w'].find((letter) => !used.has(letter)) ?? 'x1'
-  const lets = around.lets.map((label): Completion => ({
-    label,
-    kind: 'name',
-    detail: 'let',
-    info: 'Defined above.',
-  }))
+  const lets = around.lets.map((label): Completion => {
+    const known = names.find(({ name }) => name === label)
+    return {
+      label,
+      kind: 'name',
+      detail: known?.type ?? 'let',
+      info: known?.definition || 'Defined above.',
+      ...(known?.unit ? { unit: known.unit } : {}),
+      ...(known?.cost ? { cost: known.cost } : {}),
+    }
+  })
   return [
     ...variables,
     ...lets,
@@ -125,8 +139,15 @@ const ENDS_OPERAND = /^(\)|[0-9]|")/
 /**
  * What could be written at `position`: the word being typed spans `from .. to`. Null inside comments and labels
  * and where only a new name fits. Works on texts that are half written.
+ *
+ * @param names what is known of the rule's own names, perhaps of a text some keys ago: names that are not among them
+ *   are offered without type
  */
-export function completions(text: string, position: number): CompletionResult | null {
+export function completions(
+  text: string,
+  position: number,
+  names: readonly OwnName[] = [],
+): CompletionResult | null {
   const around = surroundingsAt(text, position)
   if (around.inText) return null
   const from = position - (/[a-zA-Z0-9_]*$/.exec(text.slice(0, position))?.[0].length ?? 0)
@@ -166,7 +187,7 @@ export function completions(text: string, position: number): CompletionResult | 
   if (opener?.text === 'at') return newLine ? result(statements()) : null
   const operandBefore =
     ENDS_OPERAND.test(previous.text) || (previous.kind === 'word' && !joins(previous.text))
-  if (!operandBefore) return result(operands(around))
+  if (!operandBefore) return result(operands(around, names))
   const continuing = words('and', 'or', 'else', ...(around.variables.size > 0 ? ['in', 'where'] : []))
   const label = opener?.text === 'require' ? words('label') : []
   return result([...(newLine || around.variables.size === 0 ? statements() : []), ...continuing, ...label])

@@ -100,7 +100,8 @@ function formatColumn({ name, value }: ReportColumn): string {
   return name ? `${name.text} = ${formatExpression(value)}` : formatExpression(value)
 }
 
-const quoted = (text: string): string => `"${text.replace(/["\\]/g, '\\$&')}"`
+/** A text in quotes, as a rule holds it. */
+export const quoted = (text: string): string => `"${text.replace(/["\\]/g, '\\$&')}"`
 
 /** Canonical text of one statement, without its comments. */
 export function formatStatement(statement: Statement): string {

@@ -1,3 +1,4 @@
+import type { OwnName } from './ownNames.ts'
 import { referenceEntries, type ReferenceEntry } from './reference.ts'
 import { pathEndingAt, setOf, surroundingsAt } from './surroundings.ts'
 import { tokenise } from './segments.ts'
@@ -9,12 +10,14 @@ export interface HoverResult {
   readonly title: string
   readonly text: string
   readonly entry?: ReferenceEntry
+  /** Of a name given with `let`, where it is known. */
+  readonly own?: OwnName
 }
 
 const ENTRIES = referenceEntries()
 
-/** What stands at `position`, or null. Works on texts that are half written. */
-export function hoverAt(text: string, position: number): HoverResult | null {
+/** What stands at `position`, or null. Works on texts that are half written; `names` as for completions. */
+export function hoverAt(text: string, position: number, names: readonly OwnName[] = []): HoverResult | null {
   const tokens = tokenise(text).filter((token) => token.kind !== 'comment')
   const at = tokens.findIndex((token) => token.from <= position && position < token.to)
   if (at < 0) return null
@@ -57,8 +60,12 @@ export function hoverAt(text: string, position: number): HoverResult | null {
       if (entry) return about(entry, token.from, token.to)
     }
   }
-  if (around.lets.includes(first) && words.length === 1)
-    return { from: token.from, to: token.to, title: first, text: definitionOf(text, first) }
+  const defined = tokens[at - 1]?.text === 'let'
+  if ((around.lets.includes(first) || defined) && words.length === 1) {
+    const own = names.find(({ name }) => name === first)
+    const { from, to } = token
+    return { from, to, title: first, text: definitionOf(text, first), ...(own ? { own } : {}) }
+  }
 
   let end = at
   while (tokens[end + 1]?.text === '.' && tokens[end + 2]?.kind === 'word') end += 2

@@ -32,5 +32,9 @@ export {
   type Outcome,
   type Undefined,
 } from './outcome.ts'
+export { type OwnName, ownNames } from './ownNames.ts'
 export { parseRule } from './parse.ts'
+export type { Places } from './places.ts'
+export { nameAt, nameProblem, type RenamableName } from './rename.ts'
+export { reportOnRule, type RuleReport, type SoundReport } from './ruleReport.ts'
 export { referenceEntries, type ReferenceEntry, type ReferenceKind } from './reference.ts'

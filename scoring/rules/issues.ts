@@ -28,6 +28,24 @@ export type IssueDraft = Omit<RuleIssue, 'line' | 'column' | 'severity'> & {
   readonly severity?: RuleIssue['severity']
 }
 
+/** The repair of a draft: write `insert` where `span` is. Nothing when no repair is known. */
+export const writing = (
+  { from, to }: { readonly from: number; readonly to: number },
+  insert: string | undefined,
+): Pick<IssueDraft, 'suggestion'> =>
+  insert === undefined
+    ? {}
+    : {
+        suggestion: {
+          label: insert === '' ? 'leave it out' : `write ${shortened(insert)}`,
+          from,
+          to,
+          insert,
+        },
+      }
+
+const shortened = (text: string): string => (text.length > 48 ? `${text.slice(0, 47)}…` : text)
+
 /** Line and column (both from 1) of offsets into one text. */
 export class TextPositions {
   private readonly lineStarts: number[] = [0]

@@ -1,7 +1,7 @@
 import type { Tree } from '@lezer/common'
 import type { Span, StatementKind } from './ast.ts'
 import { parser } from './generated/parser.ts'
-import type { IssueDraft } from './issues.ts'
+import { type IssueDraft, writing } from './issues.ts'
 import { nearestName } from './nearest.ts'
 import type { Segment, Token } from './segments.ts'
 import { isReserved, opensStatement, STATEMENT_KEYWORDS } from './words.ts'
@@ -60,6 +60,19 @@ const FOREIGN: Record<string, { readonly insert: string; readonly why: string }>
   ';': { insert: '', why: 'statements need no sign at their end' },
 }
 
+/** Brackets that are open after `tokens`. */
+const openBrackets = (tokens: readonly Token[]): number =>
+  tokens.reduce(
+    (open, { text }) => (text === '(' ? open + 1 : text === ')' ? Math.max(0, open - 1) : open),
+    0,
+  )
+
+/** What is missing when it is closing brackets and nothing else. */
+function closingBrackets(statement: string, tokens: readonly Token[]): string | undefined {
+  const missing = ')'.repeat(openBrackets(tokens))
+  return missing !== '' && firstError(parser.parse(statement + missing)) === undefined ? missing : undefined
+}
+
 interface Remedy {
   readonly why: string
   readonly from: number
@@ -73,7 +86,11 @@ function remedyFor(
   before: Token | undefined,
   after: Token | undefined,
   text: string,
-  operatorFits: boolean,
+  {
+    operatorFits,
+    labelFits,
+    bracketOpen,
+  }: Readonly<Record<'operatorFits' | 'labelFits' | 'bracketOpen', boolean>>,
 ): Remedy | undefined {
   const whole = (why: string, insert: string, from = bad.from, to = bad.to): Remedy => ({
     why,
@@ -96,6 +113,14 @@ function remedyFor(
   if (bad.text === '.' && before?.kind === 'number') return whole('a number does not end in a point', '')
   if ((bad.text === '&' || bad.text === '|') && after?.text === bad.text && touches(bad, after))
     return whole(FOREIGN[bad.text].why, FOREIGN[bad.text].insert, bad.from, after.to)
+  if (bad.kind === 'string' && labelFits)
+    return whole('a label stands after the word `label`', `label ${bad.text}`)
+  if (bad.text === ')' && !bracketOpen) return whole('no bracket is open here', '')
+  if (bad.text === '"') {
+    const lineEnd = text.indexOf('\n', bad.from)
+    const line = text.slice(bad.from, lineEnd < 0 ? text.length : lineEnd).trimEnd()
+    return whole('a text ends with `"`', `${line}"`, bad.from, bad.from + line.length)
+  }
   const foreign = Object.hasOwn(FOREIGN, bad.text) ? FOREIGN[bad.text] : undefined
   if (foreign) return whole(foreign.why, foreign.insert)
   const firstOnLine = text.slice(text.lastIndexOf('\n', bad.from - 1) + 1, bad.from).trim() === ''
@@ -159,7 +184,11 @@ export function explainSyntaxError(
   const expected = expectedAfter(prefix, keyword, before)
 
   if (bad) {
-    const remedy = remedyFor(bad, before, tokens[index + 1], text, expected.includes('an operator'))
+    const remedy = remedyFor(bad, before, tokens[index + 1], text, {
+      operatorFits: expected.includes('an operator'),
+      labelFits: expected.includes('`label`'),
+      bracketOpen: openBrackets(tokens.slice(0, index)) > 0,
+    })
     const issue: IssueDraft = {
       code: bad.text === '"' ? 'open-text' : 'syntax',
       message: messageFor(bad, before, expected, remedy),
@@ -203,6 +232,7 @@ export function explainSyntaxError(
       to: last.to,
       expected: list(expected),
       found: 'end of statement',
+      ...writing({ from: last.to, to: last.to }, closingBrackets(prefix, tokens)),
     },
     spoilsNext: false,
   }

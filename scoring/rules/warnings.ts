@@ -1,3 +1,4 @@
+import { findObservable } from '../observables/registry.ts'
 import type { TypedExpression } from './typed.ts'
 
 /**
@@ -11,6 +12,13 @@ export function findBasisDependence(expression: TypedExpression): TypedExpressio
     if (found) return found
   }
   return expression
+}
+
+/** The same quantity of the divisor spectrum, where there is one. */
+export function withoutBasis(found: TypedExpression): string | undefined {
+  if (found.kind !== 'scalar') return undefined
+  const name = found.observable.name.replace('metric.basis.', 'metric.divisor.')
+  return name !== found.observable.name && findObservable(name)?.kind === 'scalar' ? name : undefined
 }
 
 function partsOf(expression: TypedExpression): readonly TypedExpression[] {
