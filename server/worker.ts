@@ -18,7 +18,7 @@ import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
 import { summaryOfEach } from './jobs/compute/polytopeSummary.ts'
 import { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './jobs/compute/segments.ts'
 import { checkSearchResult, readSearchResultText } from './jobs/compute/searchResults.ts'
-import { invariantsOfEach, nearDuplicates } from './jobs/compute/relatives.ts'
+import { alignCandidates, invariantsOfEach, nearDuplicates } from './jobs/compute/relatives.ts'
 import type { TaskAnswer, TaskInput, TaskName, TaskOutput, Tasks } from './jobs/tasks.ts'
 
 const tasks: Tasks = {
@@ -42,6 +42,7 @@ const tasks: Tasks = {
   'class-pictures': classPictures,
   'invariants-of-each': invariantsOfEach,
   'near-duplicates': nearDuplicates,
+  'align-candidates': alignCandidates,
   'read-search-result': readSearchResultText,
   'check-search-result': checkSearchResult,
   'search-segment': searchSegment,

@@ -73,6 +73,13 @@ const signedIn: RouteObject[] = [
     lazy: page(async () => (await import('./routes/polytope/PolytopePage.tsx')).PolytopePage),
   },
   {
+    path: 'candidates/compare',
+    lazy: page(
+      async () =>
+        (await import('./routes/candidates/compare/CompareCandidatesPage.tsx')).CompareCandidatesPage,
+    ),
+  },
+  {
     path: 'candidates/:candidateKey',
     lazy: page(async () => (await import('./routes/candidate/CandidatePage.tsx')).CandidatePage),
   },

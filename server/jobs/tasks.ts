@@ -17,7 +17,7 @@ import type { scoreCandidates } from './compute/scoreCandidates.ts'
 import type { summaryOfEach } from './compute/polytopeSummary.ts'
 import type { facetGenericFinds, nullChunk, previewChunk, searchSegment } from './compute/segments.ts'
 import type { checkSearchResult, readSearchResultText } from './compute/searchResults.ts'
-import type { invariantsOfEach, nearDuplicates } from './compute/relatives.ts'
+import type { alignCandidates, invariantsOfEach, nearDuplicates } from './compute/relatives.ts'
 
 /** The tasks of the worker threads: pure functions of plain data, by name. */
 export interface Tasks {
@@ -41,6 +41,7 @@ export interface Tasks {
   'class-pictures': typeof classPictures
   'invariants-of-each': typeof invariantsOfEach
   'near-duplicates': typeof nearDuplicates
+  'align-candidates': typeof alignCandidates
   'read-search-result': typeof readSearchResultText
   'check-search-result': typeof checkSearchResult
   'search-segment': typeof searchSegment

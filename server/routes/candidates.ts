@@ -1,5 +1,6 @@
 import type { Express } from 'express'
 import { z } from 'zod'
+import { candidateAlignmentSchema } from '../../shared/candidateAlignment.ts'
 import {
   candidateGeometrySchema,
   candidateRecordSchema,
@@ -16,7 +17,12 @@ import { endpoint } from '../http/endpoint.ts'
 import { presentVerdict } from '../presenters/verdicts.ts'
 import { readCandidateScore } from '../services/candidateScores.ts'
 import { readCandidateRecord } from '../services/candidates.ts'
-import { readCandidateGeometry, readCandidateSpectra, readClassPictures } from '../services/geometry.ts'
+import {
+  readAlignment,
+  readCandidateGeometry,
+  readCandidateSpectra,
+  readClassPictures,
+} from '../services/geometry.ts'
 import { readRelatives } from '../services/relatives.ts'
 import { giveVerdict } from '../services/verdicts.ts'
 import { viewerOf } from '../services/viewers.ts'
@@ -39,6 +45,15 @@ export function candidateRoutes(app: Express, context: ServerContext): void {
     answer: candidateSpectraSchema,
     lasting: true,
     handle: ({ account, params }) => readCandidateSpectra(context, account.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/candidates/:key/alignment/:other',
+    access: 'account',
+    answer: candidateAlignmentSchema,
+    lasting: true,
+    handle: ({ account, params }) => readAlignment(context, account.id, params.key, params.other),
   })
 
   endpoint(app, context, {

@@ -1,3 +1,4 @@
+import type { CandidateAlignment } from '../../shared/candidateAlignment.ts'
 import type { CandidateGeometry, CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
 import type { PolytopeDetail } from '../../shared/polytopes.ts'
 import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
@@ -62,6 +63,20 @@ export async function readCandidateSpectra(
     jobs.unhurried.run('candidate-spectra', inputOf(candidate)),
   )
   return { key, ...spectra }
+}
+
+/** How another candidate lies on one, for an account that may see the polytopes of both. */
+export async function readAlignment(
+  { source, jobs }: ServerContext,
+  accountId: string,
+  key: string,
+  other: string,
+): Promise<CandidateAlignment> {
+  const one = await readVisibleCandidate(source.manager, { accountId }, key)
+  const two = await readVisibleCandidate(source.manager, { accountId }, other)
+  if (one.polytopeKey !== two.polytopeKey) return { key, other, points: null }
+  const points = await jobs.interactive.run('align-candidates', { ...inputOf(one), other: inputOf(two) })
+  return { key, other, points }
 }
 
 /** Pictures of those of the candidates that the account may see; one computation per polytope. */

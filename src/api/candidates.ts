@@ -1,4 +1,5 @@
 import { queryOptions } from '@tanstack/react-query'
+import { candidateAlignmentSchema } from '../../shared/candidateAlignment.ts'
 import {
   candidateGeometrySchema,
   candidateRecordSchema,
@@ -12,6 +13,15 @@ export const candidateQuery = (key: string) =>
   queryOptions({
     queryKey: ['candidate', key] as const,
     queryFn: ({ signal }) => request(`/candidates/${key}`, { schema: candidateGeometrySchema, signal }),
+    staleTime: Infinity,
+  })
+
+/** How another candidate lies on one; a function of the two keys. */
+export const alignmentQuery = (key: string, other: string) =>
+  queryOptions({
+    queryKey: ['candidate', key, 'alignment', other] as const,
+    queryFn: ({ signal }) =>
+      request(`/candidates/${key}/alignment/${other}`, { schema: candidateAlignmentSchema, signal }),
     staleTime: Infinity,
   })
 

@@ -143,6 +143,15 @@ describe('relatives of a candidate', () => {
       }
     }
     expect(distance.size).toBeGreaterThan(0)
+    const [[pair, apart]] = distance
+    const [one, two] = pair.split(' ')
+    const { body } = await lead.get(`/api/candidates/${one}/alignment/${two}`).expect(200)
+    const { image, triangles } = body.points as { image: number[]; triangles: number }
+    expect(triangles).toBe(apart)
+    expect([...image].sort((a, b) => a - b)).toEqual(image.map((_, point) => point))
+    const elsewhereOn = await lead.get(`/api/candidates/${one}/alignment/${onOne}`).expect(200)
+    expect(elsewhereOn.body).toMatchObject({ key: one, other: onOne, points: null })
+    await lead.get(`/api/candidates/${one}/alignment/0123456789abcdef0123456789abcdef`).expect(404)
     const asked = new Set(relatives.map(({ key }) => key))
     for (const [pair, triangles] of distance) {
       const [key, other] = pair.split(' ')

@@ -2,6 +2,7 @@ import {
   classFromHeights,
   intersectionNumbers,
   InvariantError,
+  nearestLabelling,
   normalForm,
   polytopeFromPoints,
   trianglesApart,
@@ -73,6 +74,24 @@ export function nearDuplicates({
       return triangles === null ? [] : [{ key: other.key, triangles }]
     })
     .sort((a, b) => a.triangles - b.triangles || (a.key < b.key ? -1 : 1))
+}
+
+export interface AlignmentInput extends CandidateGeometryInput {
+  /** A stored candidate on the same polytope. */
+  readonly other: { readonly key: string; readonly heights: readonly number[] }
+}
+
+/** The symmetry of the polytope that lays another candidate on one with the least difference. */
+export function alignCandidates({ key, vertices, heights, other }: AlignmentInput): {
+  image: number[]
+  triangles: number
+} {
+  const form = normalForm(polytopeFromPoints(vertices))
+  const own = storedClass(form.polytope, key, heights)
+  const cls = storedClass(form.polytope, other.key, other.heights, own)
+  const nearest = nearestLabelling(form, own, cls, own.triangles.length / 3)
+  if (!nearest) throw new InvariantError('A polytope without automorphisms, not even the identity.')
+  return { image: Array.from(nearest.image), triangles: nearest.triangles }
 }
 
 function storedClass(

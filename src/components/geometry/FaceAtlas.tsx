@@ -17,11 +17,11 @@ interface FaceAtlasProps {
 const largestUnit = 30
 const smallestUnit = 3
 
-/** Pixels per lattice unit so that the widest face fits the page. */
-export function commonUnit(faces: readonly FaceDrawing[], width: number): number {
+/** Pixels per lattice unit so that the widest face fits the page; `most` where all are small. */
+export function commonUnit(faces: readonly FaceDrawing[], width: number, most = largestUnit): number {
   const widest = Math.max(1, ...faces.map((face) => face.width))
   const tallest = Math.max(1, ...faces.map((face) => face.height))
-  return Math.max(smallestUnit, Math.min(largestUnit, (width - 32) / widest, 520 / tallest))
+  return Math.max(smallestUnit, Math.min(most, (width - 32) / widest, 520 / tallest))
 }
 
 const contains = (face: FaceDrawing, highlight: Highlight) =>

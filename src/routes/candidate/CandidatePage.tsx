@@ -11,6 +11,7 @@ import { useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
 import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
+import { CompareWith } from './CompareWith.tsx'
 import { CertificateSection } from './CertificateSection.tsx'
 import { ComponentSection } from './ComponentSection.tsx'
 import { CurveTable } from './CurveTable.tsx'
@@ -45,7 +46,17 @@ export function CandidatePage() {
           <PageHead
             title={`Candidate ${detail.key.slice(0, 10)}`}
             above={<Trail campaign={campaign?.id} geometry={detail} shortlist={appearance} />}
-            actions={campaign && appearance && <Steps campaign={campaign.id} appearance={appearance} />}
+            actions={
+              <>
+                {campaign && appearance && <Steps campaign={campaign.id} appearance={appearance} />}
+                <CompareWith
+                  key={detail.key}
+                  campaign={campaign?.id ?? null}
+                  candidate={detail.key}
+                  shortlist={appearance?.shortlistId}
+                />
+              </>
+            }
           >
             A 2-face class of{' '}
             <Link

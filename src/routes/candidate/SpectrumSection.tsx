@@ -50,14 +50,14 @@ function Spectra({ spectra: { key, divisorSpectrum, basisSpectrum, basis } }: { 
         <SpectrumPlot
           key="divisor"
           title="Divisor spectrum"
-          values={divisorSpectrum}
+          series={[{ values: divisorSpectrum }]}
           file={`divisor-spectrum-${key.slice(0, 10)}`}
         />
       ) : (
         <SpectrumPlot
           key="basis"
           title="Basis spectrum"
-          values={basisSpectrum}
+          series={[{ values: basisSpectrum }]}
           file={`basis-spectrum-${key.slice(0, 10)}`}
         />
       )}
