@@ -11,6 +11,7 @@ export default {
       sheet: 'var(--sheet)',
       line: 'var(--line)',
       edge: 'var(--edge)',
+      veil: 'var(--veil)',
       ink: 'var(--ink)',
       soft: 'var(--ink-soft)',
       action: 'var(--action)',

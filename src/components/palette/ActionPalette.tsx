@@ -9,9 +9,13 @@ import { listAll, listFound, type Entry } from './ranking.ts'
 import { noteRecent, recentNames } from './recent.ts'
 import { useNamedThings, useTypedThing } from './useNamedThings.ts'
 
-/** Sections of the frame, which come after those of the page. */
-const last = ['Begin', 'Go to', 'Everywhere', 'Account']
-const standing = (section: string) => last.indexOf(section)
+/** Sections of the frame that come after those of the page, and those that come last of all. */
+const [later, last] = [
+  ['Begin', 'Go to'],
+  ['Everywhere', 'Account'],
+]
+const place = ({ section, named }: Entry) =>
+  later.includes(section) ? 1 : named ? 2 : last.includes(section) ? 3 : 0
 
 function useActionEntries(): Entry[] {
   return useLiveActions()
@@ -20,7 +24,6 @@ function useActionEntries(): Entry[] {
       const [first] = shortcutsOf({ shortcut })
       return { id, label, section, unavailable, run, shortcut: first && shortcutName(first) }
     })
-    .sort((a, b) => standing(a.section) - standing(b.section))
 }
 
 interface ActionPaletteProps {
@@ -41,7 +44,7 @@ export function ActionPalette({ open, onOpenChange }: ActionPaletteProps) {
   return (
     <Dialog.Root open={open} onOpenChange={onOpenChange}>
       <Dialog.Portal>
-        <Dialog.Overlay className="fixed inset-0 z-40 bg-black/40" />
+        <Dialog.Overlay className="fixed inset-0 z-40 bg-veil" />
         <Dialog.Content
           aria-describedby={undefined}
           className="fixed inset-x-2 top-2 z-50 mx-auto flex max-h-[calc(100dvh-1rem)] max-w-[640px] flex-col rounded border border-edge bg-sheet shadow-lifted sm:top-[10vh] sm:max-h-[70vh]"
@@ -70,7 +73,7 @@ function List({ onChoose, onLeave }: { onChoose: (entry: Entry) => void; onLeave
   const actions = useActionEntries()
   const named = useNamedThings(campaign?.id ?? null)
   const exact = useTypedThing(campaign?.id ?? null, typed)
-  const entries = [...exact, ...actions, ...named]
+  const entries = [...exact, ...[...actions, ...named].sort((a, b) => place(a) - place(b))]
   const line = (entry: Entry, aside: string) => (
     <Line key={entry.id} entry={entry} aside={aside} onChoose={() => onChoose(entry)} />
   )
@@ -122,15 +125,17 @@ function Line({ entry, aside, onChoose }: { entry: Entry; aside: string; onChoos
       value={id}
       disabled={Boolean(unavailable)}
       onSelect={onChoose}
-      className="flex min-h-8 cursor-pointer flex-wrap items-center gap-x-3 border-l-2 border-transparent px-4 py-1 data-[disabled=true]:cursor-default data-[disabled=true]:text-soft data-[selected=true]:border-action data-[selected=true]:bg-action-wash"
+      className="flex min-h-8 cursor-pointer items-center gap-x-3 border-l-2 border-transparent px-4 py-1 data-[disabled=true]:cursor-default data-[disabled=true]:text-soft data-[selected=true]:border-action data-[selected=true]:bg-action-wash"
     >
-      <span className="min-w-0 break-words">{label}</span>
-      {note && <span className="text-xs text-soft">{note}</span>}
-      <span className="ml-auto flex items-center gap-2 text-xs text-soft">
+      <span className="min-w-0 flex-1 break-words">
+        {label}
+        {note && <span className="ml-3 text-xs whitespace-nowrap text-soft">{note}</span>}
+        {unavailable && <span className="block text-xs">{unavailable}</span>}
+      </span>
+      <span className="flex shrink-0 items-center gap-2 text-xs text-soft">
         {aside}
         {shortcut && <kbd className="rounded border border-edge px-1 font-mono">{shortcut}</kbd>}
       </span>
-      {unavailable && <span className="basis-full text-xs">{unavailable}</span>}
     </Command.Item>
   )
 }

@@ -28,7 +28,7 @@ export function useNamedThings(campaign: string | null): Entry[] {
     note?: (id: string) => string,
   ) =>
     list.map(({ id, name }): Entry => ({
-      ...{ id: `${path}/${id}`, label: name, section, note: note?.(id) },
+      ...{ id: `${path}/${id}`, label: name, section, note: note?.(id), named: true },
       run: () => void navigate(`${path}/${id}`),
     }))
   const base = `/campaigns/${campaign ?? ''}`
@@ -87,7 +87,8 @@ export function useTypedThing(campaign: string | null, text: string): Entry[] {
     ]
   }
   if (!pair) return []
-  const total = counts.data?.total
+  const { total, loading } = counts.data ?? {}
+  const unfinished = loading !== undefined && loading !== null && loading.loaded < loading.total
   const query = new URLSearchParams(Object.entries(range).map(([name, value]) => [name, String(value)]))
   if (campaign) query.set('campaign', campaign)
   return [
@@ -98,8 +99,10 @@ export function useTypedThing(campaign: string | null, text: string): Entry[] {
         exact: true,
         label: `Polytopes with h11 = ${h11}, h21 = ${h21}`,
       },
-      note: total === undefined ? 'looking' : counted(total, 'polytope'),
-      unavailable: total === 0 && 'None is in the library.',
+      note: total === undefined ? 'looking' : total > 0 ? counted(total, 'polytope') : undefined,
+      unavailable:
+        total === 0 &&
+        (unfinished ? 'None so far; the library is still being loaded.' : 'None is in the library.'),
       run: go(`/library?${query}`),
     },
   ]

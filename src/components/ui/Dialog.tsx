@@ -16,7 +16,7 @@ export function Dialog({ open, onOpenChange, title, description, wide, children 
   return (
     <Primitive.Root open={open} onOpenChange={onOpenChange}>
       <Primitive.Portal>
-        <Primitive.Overlay className="fixed inset-0 z-40 bg-black/40" />
+        <Primitive.Overlay className="fixed inset-0 z-40 bg-veil" />
         <Primitive.Content
           className={`fixed inset-x-2 top-4 z-50 mx-auto flex max-h-[calc(100dvh-2rem)] flex-col rounded border border-edge bg-sheet shadow-lifted sm:top-[8vh] sm:max-h-[84vh] ${wide ? 'max-w-[760px]' : 'max-w-[520px]'}`}
           {...(description === undefined ? { 'aria-describedby': undefined } : {})}
