@@ -21,11 +21,13 @@ import { importedCandidateRoutes } from './routes/importedCandidates.ts'
 import { polytopeRoutes } from './routes/polytopes.ts'
 import { comparisonRoutes } from './routes/comparisons.ts'
 import { rescoringRoutes } from './routes/rescorings.ts'
+import { reviewingRoutes } from './routes/reviewing.ts'
 import { searchRoutes } from './routes/searches.ts'
 import { searchRunningRoutes } from './routes/searchRunning.ts'
 import { sessionRoutes } from './routes/session.ts'
 import { shortlistRoutes } from './routes/shortlists.ts'
 import { targetRoutes } from './routes/targets.ts'
+import { verdictRoutes } from './routes/verdicts.ts'
 
 /**
  * The Express application, built from its dependencies. Every route of the API is registered flat, under its full
@@ -59,6 +61,8 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   rescoringRoutes(app, context)
   externalTableRoutes(app, context)
   candidateRoutes(app, context)
+  verdictRoutes(app, context)
+  reviewingRoutes(app, context)
   certificateRoutes(app, context)
   importedCandidateRoutes(app, context)
   eventRoutes(app, context)

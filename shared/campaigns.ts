@@ -9,6 +9,8 @@ export const campaignSummarySchema = z.object({
   name: z.string(),
   description: z.string(),
   role: roleSchema,
+  /** Whether "verified" needs two people. */
+  secondReader: z.boolean(),
   targets: z.number().int(),
   searches: z.number().int(),
   runningSearches: z.number().int(),
@@ -37,7 +39,9 @@ export const createCampaignSchema = z.object({
   name: z.string().trim().min(1).max(80),
   description: z.string().trim().max(1000).default(''),
 })
-export const editCampaignSchema = createCampaignSchema.partial()
+export const editCampaignSchema = createCampaignSchema
+  .partial()
+  .extend({ secondReader: z.boolean().optional() })
 /** POST /api/campaigns/:campaign/members: an existing account, by e-mail address. */
 export const addMemberSchema = z.object({ email: z.email().max(200), role: roleSchema })
 export const editMemberSchema = z.object({ role: roleSchema })

@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import { assignedSchema } from './assignments.ts'
 import { certificateMarkSchema, certificationSchema } from './certificates.ts'
 import { explorationSchema } from './explorations.ts'
 import { candidateKeySchema } from './keys.ts'
@@ -29,6 +30,12 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
     made: certificateMarkSchema.extend({ candidateKey: candidateKeySchema }).nullable(),
   }),
   z.object({ kind: z.literal('verdict'), candidateKey: candidateKeySchema, verdict: verdictSchema }),
+  /** Many at once. */
+  z.object({
+    kind: z.literal('verdicts'),
+    verdicts: z.array(z.object({ candidateKey: candidateKeySchema, verdict: verdictSchema })),
+  }),
+  z.object({ kind: z.literal('assigned'), ...assignedSchema.shape }),
   z.object({ kind: z.literal('rescoring'), rescoring: rescoringSchema }),
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   /** Stored polytopes whose numbers are still being computed. */
@@ -45,6 +52,7 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
       'imports',
       'collections',
       'external-tables',
+      'shortlist-views',
     ]),
   }),
   z.object({ kind: z.literal('closed'), reason: z.enum(['signed-out', 'role-lost', 'shutting-down']) }),

@@ -24,6 +24,7 @@ export const importCandidatesSchema = importOptionsSchema.extend({
 export const earlierVerdictSchema = verdictSchema.pick({
   value: true,
   override: true,
+  readers: true,
   targetId: true,
   targetName: true,
   targetVersion: true,

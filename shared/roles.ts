@@ -17,6 +17,10 @@ export const permissions = {
   'searches.run': ['lead', 'investigator'],
   'shortlists.edit': ['lead', 'investigator'],
   'verdicts.give': ['lead', 'investigator', 'reviewer'],
+  /** Handing candidates to a reviewer. */
+  'verdicts.assign': ['lead', 'investigator', 'reviewer'],
+  /** Views of a shortlist under names; those of others are a lead's. */
+  'views.save': ['lead', 'investigator', 'reviewer'],
   'certificates.run': ['lead', 'investigator', 'reviewer'],
   /** Tables of external columns: brought along, replaced, removed. */
   'external.edit': ['lead', 'investigator', 'reviewer'],

@@ -1,8 +1,10 @@
 import { z } from 'zod'
 import { assemblyCountsSchema, assemblySchema } from './assemblies.ts'
+import { assigneeSchema } from './assignments.ts'
 import { certificateMarkSchema } from './certificates.ts'
 import { externalColumnSchema, externalValueSchema } from './externalTables.ts'
 import { scoredRowSchema } from './outcomes.ts'
+import { earlierIssueSchema, laterIssueSchema } from './reissues.ts'
 import { verdictSchema } from './verdicts.ts'
 
 const sourcesSchema = z.object({
@@ -51,6 +53,12 @@ export const shortlistSummarySchema = z.object({
   undecided: z.number().int(),
   verified: z.number().int(),
   rejected: z.number().int(),
+  /** Of the undecided ones, those verified by the first of two readers. */
+  oneReader: z.number().int(),
+  /** To whom undecided candidates are assigned, and how many. */
+  waiting: z.array(assigneeSchema.extend({ open: z.number().int() })),
+  /** Counts along a chain of issues, from 1. */
+  issue: z.number().int(),
   createdAt: z.string(),
   author: z.string(),
 })
@@ -90,6 +98,8 @@ export const shortlistProvenanceSchema = z.object({
       null: frozenNullSchema.nullable(),
     }),
   ),
+  /** Rows that were taken out by hand in this and earlier issues; absent for none. */
+  takenOut: z.number().int().optional(),
   /** The list that was scored anew; null for one of searches or imports. */
   from: z
     .object({
@@ -110,7 +120,7 @@ export const shortlistRowSchema = scoredRowSchema.extend({
   rank: z.number().int(),
   /** Number of its Pareto front; null where the list is ranked by score. */
   front: z.number().int().nullable(),
-  /** Its place in the list that was scored anew; null where there is none. */
+  /** Its place in the list that was scored anew, or in the issue before; null where there is none. */
   previous: z
     .object({
       rank: z.number().int(),
@@ -125,6 +135,8 @@ export const shortlistRowSchema = scoredRowSchema.extend({
   verdict: verdictSchema.nullable(),
   /** For the scoring of the target version under the present engine. */
   certificate: certificateMarkSchema,
+  /** Who is to give a verdict. */
+  assignee: assigneeSchema.nullable(),
   /** One per external column; null: the table has no value for the candidate. */
   external: z.array(externalValueSchema.nullable()),
 })
@@ -143,6 +155,9 @@ export const shortlistDetailSchema = shortlistSummarySchema.extend({
   rescored: z.array(
     z.object({ id: z.string(), name: z.string(), targetName: z.string(), targetVersion: z.number().int() }),
   ),
+  /** The issue before, and newer ones. */
+  reissueOf: earlierIssueSchema.nullable(),
+  reissues: z.array(laterIssueSchema),
   /** Columns that people brought along; no rule and no search can read them. */
   external: z.array(externalColumnSchema),
   rows: z.array(shortlistRowSchema),

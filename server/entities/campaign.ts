@@ -14,4 +14,8 @@ export class Campaign {
 
   @Column({ type: 'varchar' })
   createdAt!: string
+
+  /** Whether "verified" needs two people from now on. */
+  @Column({ type: 'boolean', default: false })
+  secondReader!: boolean
 }

@@ -1,4 +1,5 @@
 import { Account } from './account.ts'
+import { Assignment } from './assignment.ts'
 import { Campaign } from './campaign.ts'
 import { CampaignPolytope } from './campaignPolytope.ts'
 import { CandidateRecord } from './candidate.ts'
@@ -30,6 +31,7 @@ import { SearchStart } from './searchStart.ts'
 import { SetUpLink } from './setUpLink.ts'
 import { Shortlist } from './shortlist.ts'
 import { ShortlistEntry } from './shortlistEntry.ts'
+import { ShortlistView } from './shortlistView.ts'
 import { Target } from './target.ts'
 import { TargetVersion } from './targetVersion.ts'
 import { Verdict } from './verdict.ts'
@@ -37,6 +39,7 @@ import { Verdict } from './verdict.ts'
 /** Listed as classes, not found by file name: the same list serves source and compiled code. */
 export const entities = [
   Account,
+  Assignment,
   Campaign,
   CampaignPolytope,
   CandidateRecord,
@@ -68,6 +71,7 @@ export const entities = [
   SetUpLink,
   Shortlist,
   ShortlistEntry,
+  ShortlistView,
   Target,
   TargetVersion,
   Verdict,

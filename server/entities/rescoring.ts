@@ -6,8 +6,9 @@ import { Account } from './account.ts'
 import { Campaign } from './campaign.ts'
 import { TargetVersion } from './targetVersion.ts'
 
-/** What is scored anew: a list, or the finds of searches. */
-export type RescoringOrigin = { readonly shortlistId: string } | { readonly searchIds: readonly string[] }
+/** What is scored anew: a list, or the finds of searches, perhaps for a newer issue of a list. */
+export type RescoringOrigin =
+  { readonly shortlistId: string } | { readonly searchIds: readonly string[]; readonly reissueOf?: string }
 
 /**
  * A request to score candidates by a target version and make a list of them. Its progress is the values that are

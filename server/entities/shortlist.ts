@@ -55,4 +55,12 @@ export class Shortlist {
 
   @Column({ type: 'varchar' })
   createdAt!: string
+
+  /** The list that it is a newer issue of; the places there are kept with the entries. */
+  @Column({ type: 'varchar', nullable: true })
+  reissueOfId!: string | null
+
+  /** Counts along the chain of issues, from 1. */
+  @Column({ type: 'integer', default: 1 })
+  issue!: number
 }

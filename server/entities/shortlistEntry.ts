@@ -41,7 +41,7 @@ export class ShortlistEntry {
   @Column({ type: 'integer', nullable: true })
   front!: number | null
 
-  /** Its place in the list that was scored anew, and what it was worth there. */
+  /** Its place in the list that was scored anew or issued anew, and what it was worth there. */
   @Column({ type: 'integer', nullable: true })
   previousRank!: number | null
 

@@ -1,5 +1,5 @@
 import { Column, Entity, Index, JoinColumn, ManyToOne, PrimaryGeneratedColumn, type Relation } from 'typeorm'
-import type { VerdictValue } from '../../shared/verdicts.ts'
+import type { Reader, VerdictValue } from '../../shared/verdicts.ts'
 import { Account } from './account.ts'
 import { Campaign } from './campaign.ts'
 import { CandidateRecord } from './candidate.ts'
@@ -62,4 +62,20 @@ export class Verdict {
 
   @Column({ type: 'varchar' })
   createdAt!: string
+
+  /** Whose "verified" it rests on, where two people were asked for; else null. */
+  @Column({ type: 'simple-json', nullable: true })
+  readers!: Reader[] | null
+
+  /** The entry that this one takes back; all else is then what stood before. */
+  @Column({ type: 'integer', nullable: true })
+  undoesId!: number | null
+
+  /** The entry that stands again by the undoing; null: none had been given. */
+  @Column({ type: 'integer', nullable: true })
+  restoresId!: number | null
+
+  @ManyToOne(() => Verdict, { nullable: true, createForeignKeyConstraints: false })
+  @JoinColumn({ name: 'restoresId' })
+  restores?: Relation<Verdict> | null
 }

@@ -13,6 +13,9 @@ import { SampledEvaluations1796300400000 } from './1796300400000-sampledEvaluati
 import { Explorations1796300400001 } from './1796300400001-explorations.ts'
 import { LeaseBeats1796300500000 } from './1796300500000-leaseBeats.ts'
 import { Surrogate1796300600000 } from './1796300600000-surrogate.ts'
+import { SecondReader1796400000000 } from './1796400000000-secondReader.ts'
+import { Reviewing1796400000001 } from './1796400000001-reviewing.ts'
+import { Reissues1796400000002 } from './1796400000002-reissues.ts'
 
 /** In order. A migration that has been released is never edited. */
 export const migrations = [
@@ -31,4 +34,7 @@ export const migrations = [
   Explorations1796300400001,
   LeaseBeats1796300500000,
   Surrogate1796300600000,
+  SecondReader1796400000000,
+  Reviewing1796400000001,
+  Reissues1796400000002,
 ]

@@ -22,7 +22,8 @@ export function presentCampaignSummary(
   role: Role,
   counts: CampaignCounts,
 ): CampaignSummary {
-  return { id: campaign.id, name: campaign.name, description: campaign.description, role, ...counts }
+  const { id, name, description, secondReader } = campaign
+  return { id, name, description, secondReader, role, ...counts }
 }
 
 export interface CampaignContents {
@@ -52,4 +53,4 @@ export function presentCampaign(campaign: Campaign, role: Role, contents: Campai
   }
 }
 
-export const emptyTally: Tally = { size: 0, verified: 0, rejected: 0 }
+export const emptyTally: Tally = { size: 0, verified: 0, rejected: 0, oneReader: 0, waiting: [] }

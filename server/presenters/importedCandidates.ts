@@ -8,6 +8,7 @@ export function presentEarlierVerdict(verdict: Verdict): EarlierVerdict {
   return {
     value: verdict.value,
     override: verdict.override,
+    readers: verdict.readers,
     targetId: version?.targetId ?? '',
     targetName: version?.target?.name ?? '',
     targetVersion: version?.number ?? 0,

@@ -8,7 +8,7 @@ export function presentRescoring(rescoring: Rescoring, scored: number): Rescorin
     id,
     name,
     state,
-    fromId: 'shortlistId' in origin ? origin.shortlistId : null,
+    fromId: 'shortlistId' in origin ? origin.shortlistId : (origin.reissueOf ?? null),
     targetVersionId: rescoring.targetVersionId,
     targetName: targetVersion?.target?.name ?? '',
     targetVersion: targetVersion?.number ?? 0,

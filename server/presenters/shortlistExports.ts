@@ -1,6 +1,7 @@
 import { caution } from '../../shared/caution.ts'
 import type { Cell } from '../../shared/outcomes.ts'
 import type { ShortlistDetail, ShortlistRow } from '../../shared/shortlists.ts'
+import { verdictWord } from '../../shared/verdicts.ts'
 
 /** What every export says about its numbers. */
 export const conventions = [
@@ -28,7 +29,7 @@ const units = {
   outcome: 'feasible, infeasible or undefined',
   score: 'as the rule defines it',
   hit: 'yes, no or empty',
-  verdict: 'verified, verified by override, rejected, undecided or empty',
+  verdict: 'verified, verified by one reader, either by override, rejected, undecided or empty',
   reviewer: 'text',
   reason: 'text',
   certificate: 'passed, failed, waiting or none, of this scoring by the independent road',
@@ -171,8 +172,8 @@ function fixedValues({ outcome, verdict, ...row }: ShortlistRow): Record<FixedCo
     outcome: outcome.kind,
     score: outcome.kind === 'feasible' ? String(outcome.score) : '',
     hit: hit === null ? '' : hit ? 'yes' : 'no',
-    verdict: verdict === null ? '' : verdict.override ? 'verified by override' : verdict.value,
-    reviewer: text(verdict?.author ?? ''),
+    verdict: verdict === null ? '' : verdictWord(verdict),
+    reviewer: text(verdict?.readers?.map(({ name }) => name).join(' and ') ?? verdict?.author ?? ''),
     reason: text(verdict?.reason ?? ''),
     certificate: row.certificate.state,
     verdictVersion: verdict === null ? '' : String(verdict.targetVersion),

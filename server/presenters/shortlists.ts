@@ -1,3 +1,4 @@
+import type { Assignee } from '../../shared/assignments.ts'
 import type { CertificateMark } from '../../shared/certificates.ts'
 import type { ShortlistDetail, ShortlistRow, ShortlistSummary } from '../../shared/shortlists.ts'
 import type { Search } from '../entities/search.ts'
@@ -11,6 +12,9 @@ export interface Tally {
   readonly size: number
   readonly verified: number
   readonly rejected: number
+  /** Of the undecided ones, those verified by the first of two readers. */
+  readonly oneReader: number
+  readonly waiting: ShortlistSummary['waiting']
 }
 
 /** @param shortlist with author, target version and target loaded */
@@ -27,6 +31,9 @@ export function presentShortlistSummary(shortlist: Shortlist, tally: Tally): Sho
     undecided: tally.size - tally.verified - tally.rejected,
     verified: tally.verified,
     rejected: tally.rejected,
+    oneReader: tally.oneReader,
+    waiting: tally.waiting,
+    issue: shortlist.issue,
     createdAt: shortlist.createdAt,
     author: shortlist.author?.name ?? '',
   }
@@ -44,6 +51,10 @@ export interface ShortlistContents {
   readonly certificateOf: (candidateKey: string) => CertificateMark
   /** The campaign's own names of its imports, by polytope key. */
   readonly names: ReadonlyMap<string, string>
+  /** By candidate key. */
+  readonly assignees: ReadonlyMap<string, Assignee>
+  readonly reissueOf: ShortlistDetail['reissueOf']
+  readonly reissues: ShortlistDetail['reissues']
   readonly external: ExternalContents
 }
 
@@ -57,6 +68,8 @@ export function presentShortlist(shortlist: Shortlist, contents: ShortlistConten
     searches: contents.searches.map(({ id, name, seed }) => ({ id, name, seed })),
     provenance: shortlist.provenance,
     rescored: contents.rescored,
+    reissueOf: contents.reissueOf,
+    reissues: contents.reissues,
     external: [...contents.external.columns],
     rows: contents.entries.map((entry) => presentEntry(entry, contents)),
   }
@@ -64,7 +77,7 @@ export function presentShortlist(shortlist: Shortlist, contents: ShortlistConten
 
 function presentEntry(
   entry: ShortlistEntry,
-  { verdicts, certificateOf, names, external }: ShortlistContents,
+  { verdicts, certificateOf, names, assignees, external }: ShortlistContents,
 ): ShortlistRow {
   const polytope = entry.candidate?.polytope
   if (!polytope) throw new Error('A shortlist entry was presented without its polytope.')
@@ -82,6 +95,7 @@ function presentEntry(
     searchId: entry.searchId,
     certificate: certificateOf(entry.candidateKey),
     verdict: verdict ? presentVerdict(verdict) : null,
+    assignee: assignees.get(entry.candidateKey) ?? null,
     external: external.valuesOf(entry.candidateKey),
   }
 }

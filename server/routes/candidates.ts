@@ -24,7 +24,7 @@ import {
   readClassPictures,
 } from '../services/geometry.ts'
 import { readRelatives } from '../services/relatives.ts'
-import { giveVerdict } from '../services/verdicts.ts'
+import { giveVerdict } from '../services/verdictGiving.ts'
 import { viewerOf } from '../services/viewers.ts'
 
 export function candidateRoutes(app: Express, context: ServerContext): void {
@@ -104,7 +104,7 @@ export function candidateRoutes(app: Express, context: ServerContext): void {
     status: 201,
     handle: async ({ campaign, account, params, body }) =>
       presentVerdict(
-        await giveVerdict(context, { campaignId: campaign.id, candidateKey: params.key }, account.id, body),
+        await giveVerdict(context, { campaignId: campaign.id, candidateKey: params.key }, account, body),
       ),
   })
 }

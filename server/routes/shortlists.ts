@@ -1,5 +1,6 @@
 import type { Express } from 'express'
 import { z } from 'zod'
+import { reissuedSchema, reissueSchema } from '../../shared/reissues.ts'
 import {
   createShortlistSchema,
   draftShortlistSchema,
@@ -12,6 +13,7 @@ import { endpoint } from '../http/endpoint.ts'
 import { emptyTally } from '../presenters/campaigns.ts'
 import { fileName, shortlistDocument, shortlistTable } from '../presenters/shortlistExports.ts'
 import { presentShortlistSummary } from '../presenters/shortlists.ts'
+import { reissue } from '../services/reissues.ts'
 import {
   createShortlist,
   draftShortlist,
@@ -66,6 +68,18 @@ export function shortlistRoutes(app: Express, context: ServerContext): void {
     access: 'campaign.read',
     answer: shortlistDetailSchema,
     handle: ({ campaign, params }) => readShortlist(manager, campaign.id, params.shortlist),
+  })
+
+  endpoint(app, context, {
+    method: 'post',
+    path: '/api/campaigns/:campaign/shortlists/:shortlist/reissues',
+    access: 'shortlists.edit',
+    body: reissueSchema,
+    bodyLimit: 400_000,
+    answer: reissuedSchema,
+    status: 201,
+    handle: ({ campaign, account, params, body }) =>
+      reissue(context, campaign.id, account.id, { ...body, listId: params.shortlist }),
   })
 
   endpoint(app, context, {

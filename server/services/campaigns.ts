@@ -63,13 +63,14 @@ export async function createCampaign(
 }
 
 export async function editCampaign(
-  { writes, source }: ServerContext,
+  { writes, source, streams }: ServerContext,
   campaign: { id: string; role: Role },
-  input: { name?: string; description?: string },
+  input: { name?: string; description?: string; secondReader?: boolean },
 ): Promise<CampaignDetail> {
   const changes = Object.fromEntries(Object.entries(input).filter(([, value]) => value !== undefined))
   if (Object.keys(changes).length > 0) {
     await writes.transaction((manager) => manager.update(Campaign, { id: campaign.id }, changes))
+    streams.toCampaign(campaign.id, { kind: 'changed', what: 'members' })
   }
   return readCampaign(source.manager, campaign.id, campaign.role)
 }

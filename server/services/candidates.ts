@@ -34,6 +34,22 @@ export async function readVisibleCandidate(
   return candidate
 }
 
+/** Those of the keys that name stored candidates on polytopes that the viewer may see; without loading them. */
+export async function visibleKeys(
+  manager: EntityManager,
+  viewer: Viewer,
+  keys: readonly string[],
+): Promise<Set<string>> {
+  const rows = await manager
+    .createQueryBuilder(CandidateRecord, 'candidate')
+    .innerJoin('candidate.polytope', 'polytope')
+    .select('candidate.key', 'key')
+    .where('candidate.key IN (SELECT value FROM json_each(:keys))', { keys: JSON.stringify(keys) })
+    .andWhere(mayBeSeen(viewer), viewer)
+    .getRawMany<{ key: string }>()
+  return new Set(rows.map(({ key }) => key))
+}
+
 export function readCampaignCandidate(
   manager: EntityManager,
   campaignId: string,

@@ -1,10 +1,11 @@
 import type { EntityManager } from 'typeorm'
-import type { Role } from '../../shared/roles.ts'
+import { may, type Role } from '../../shared/roles.ts'
 import type { ServerContext } from '../context.ts'
 import { Account } from '../entities/account.ts'
 import { Membership } from '../entities/membership.ts'
 import { conflict, notFound, unprocessable } from '../problems.ts'
 import { normalAddress } from './accounts.ts'
+import { release } from './assignments.ts'
 
 export async function addMember(
   { writes, streams }: ServerContext,
@@ -41,6 +42,7 @@ export async function changeRole(
     const membership = await findMember(manager, campaignId, accountId)
     if (membership.role === 'lead' && role !== 'lead') await keepOneLead(manager, campaignId)
     await manager.update(Membership, { campaignId, accountId }, { role })
+    if (!may(role, 'verdicts.give')) await release(manager, campaignId, accountId)
   })
   streams.toCampaign(campaignId, { kind: 'changed', what: 'members' })
 }
@@ -55,6 +57,7 @@ export async function removeMember(
     const membership = await findMember(manager, campaignId, accountId)
     if (membership.role === 'lead') await keepOneLead(manager, campaignId)
     await manager.delete(Membership, { campaignId, accountId })
+    await release(manager, campaignId, accountId)
   })
   streams.closeMembership(campaignId, accountId)
   streams.toCampaign(campaignId, { kind: 'changed', what: 'members' })

@@ -89,7 +89,7 @@ export function visible(
 export async function ownNames(
   manager: EntityManager,
   viewer: Viewer,
-  polytopes: readonly PolytopeRecord[],
+  polytopes: readonly Pick<PolytopeRecord, 'key' | 'origin'>[],
 ): Promise<Map<string, string>> {
   const keys = polytopes.filter(({ origin }) => origin === 'imported').map(({ key }) => key)
   if (keys.length === 0) return new Map()

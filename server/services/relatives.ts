@@ -10,6 +10,7 @@ import { readInvariants, storeInvariants } from './candidateInvariants.ts'
 import { listVisibleCandidates, readVisibleCandidate } from './candidates.ts'
 import { campaignsOf, withKnown } from './knownCandidates.ts'
 import { ownNames, type Viewer } from './polytopes.ts'
+import { verdictWords } from './verdicts.ts'
 
 /** Lists longer than this are cut. */
 const listLimit = 50
@@ -177,7 +178,7 @@ async function latestVerdictsOn(
 ): Promise<Map<string, CampaignVerdict[]>> {
   const verdicts = await manager.find(Verdict, {
     where: { campaignId: In([...campaigns]), candidateKey: In([...keys]) },
-    relations: { author: true, targetVersion: { target: true } },
+    relations: verdictWords,
     order: { id: 'DESC' },
   })
   const titles = new Map(

@@ -55,14 +55,17 @@ export async function failRescoring(manager: EntityManager, id: string, failure:
   )
 }
 
+interface PlacedEntrant extends Entrant {
+  readonly rank: number
+  readonly front: number | null
+  readonly outcome: OutcomeView
+}
+
 /** Places of a list, best first. */
-export async function entriesOf(
-  manager: EntityManager,
-  shortlistId: string,
-): Promise<(Entrant & { readonly rank: number; readonly outcome: OutcomeView })[]> {
-  const rows = await manager.query<(Entrant & { rank: number; outcome: string })[]>(
+export async function entriesOf(manager: EntityManager, shortlistId: string): Promise<PlacedEntrant[]> {
+  const rows = await manager.query<(Omit<PlacedEntrant, 'outcome'> & { outcome: string })[]>(
     `SELECT e.candidateKey AS candidateKey, c.polytopeKey AS polytopeKey, e.searchId AS searchId,
-       e.rank AS rank, e.outcome AS outcome
+       e.rank AS rank, e.front AS front, e.outcome AS outcome
      FROM shortlist_entry e JOIN candidate c ON c."key" = e.candidateKey
      WHERE e.shortlistId = ? ORDER BY e.rank`,
     [shortlistId],
@@ -74,9 +77,16 @@ export async function entriesOf(
 interface RescoringSource {
   readonly searches: readonly Search[]
   readonly from: Shortlist | null
+  /** The list that this makes a newer issue of. */
+  readonly reissueOf: Shortlist | null
   /** Places in the list that is scored anew. */
   readonly previous: ReadonlyMap<string, { readonly rank: number; readonly outcome: OutcomeView }>
 }
+
+/** Entries by candidate key. */
+export const placesOf = <Entry extends { readonly candidateKey: string }>(
+  entries: readonly Entry[],
+): Map<string, Entry> => new Map(entries.map((entry) => [entry.candidateKey, entry]))
 
 async function sourceOf(manager: EntityManager, { origin }: Rescoring): Promise<RescoringSource> {
   const relations = { targetVersion: { target: true } } as const
@@ -85,14 +95,22 @@ async function sourceOf(manager: EntityManager, { origin }: Rescoring): Promise<
     return searches.sort((a, b) => ids.indexOf(a.id) - ids.indexOf(b.id))
   }
   if ('searchIds' in origin) {
-    return { searches: await searchesOf(origin.searchIds), from: null, previous: new Map() }
+    const { searchIds, reissueOf: id } = origin
+    const reissueOf = id === undefined ? null : await manager.findOneByOrFail(Shortlist, { id })
+    return {
+      searches: await searchesOf(searchIds),
+      from: null,
+      reissueOf,
+      previous: placesOf(id === undefined ? [] : await entriesOf(manager, id)),
+    }
   }
   const from = await manager.findOneOrFail(Shortlist, { where: { id: origin.shortlistId }, relations })
   const entries = await entriesOf(manager, from.id)
   return {
     searches: await searchesOf(from.searchIds),
     from,
-    previous: new Map(entries.map(({ candidateKey, rank, outcome }) => [candidateKey, { rank, outcome }])),
+    reissueOf: null,
+    previous: placesOf(entries),
   }
 }
 
@@ -104,7 +122,7 @@ export async function commitRescoring(
   { chosen, counts }: DrawnList,
 ): Promise<string | null> {
   if (!(await takeRescoring(manager, rescoring.id, thisProcess))) return null
-  const { searches, from, previous } = await sourceOf(manager, rescoring)
+  const { searches, from, reissueOf, previous } = await sourceOf(manager, rescoring)
   const shortlistId = await insertShortlist(manager, {
     campaignId: rescoring.campaignId,
     authorId: rescoring.authorId,
@@ -119,6 +137,7 @@ export async function commitRescoring(
       from: from && frozenList(from, previous.size),
     },
     previous,
+    reissueOf: reissueOf ?? undefined,
   })
   await manager.update(
     Rescoring,

@@ -75,6 +75,8 @@ export async function requestRescoring(
   campaignId: string,
   authorId: string,
   request: RequestRescoring,
+  /** The list that a newer issue is made of. */
+  reissueOf?: string,
 ): Promise<RescoringView> {
   const { name, targetVersionId, from, assembly } = requestRescoringSchema.parse(request)
   const version = await readVersion(source.manager, campaignId, targetVersionId)
@@ -87,7 +89,7 @@ export async function requestRescoring(
       campaignId,
       targetVersionId,
       name,
-      origin: from,
+      origin: 'searchIds' in from && reissueOf !== undefined ? { ...from, reissueOf } : from,
       assembly: assembly ?? everything(),
       entrants: [...entrants],
       total: entrants.length,

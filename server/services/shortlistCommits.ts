@@ -24,10 +24,13 @@ export interface NewShortlist {
   readonly engineVersion: string
   /** The searches whose finds are in it; their null samples draw the hit line of a rule without one. */
   readonly searches: readonly Pick<Search, 'id' | 'scopeHash'>[]
+  /** Those the list is said to come from, where its outcomes were taken over from another list. */
+  readonly searchIds?: readonly string[]
   readonly chosen: DrawnList['chosen']
-  readonly provenance: ShortlistProvenance
-  /** Places in the list that was scored anew, by candidate key. */
+  readonly provenance: ShortlistProvenance | null
+  /** Places in the list that was scored anew or issued anew, by candidate key. */
   readonly previous?: ReadonlyMap<string, { readonly rank: number; readonly outcome: OutcomeView }>
+  readonly reissueOf?: Pick<Shortlist, 'id' | 'issue'>
 }
 
 /** Stores a list with everything it was made from, frozen; returns its identifier. */
@@ -44,11 +47,13 @@ export async function insertShortlist(manager: EntityManager, list: NewShortlist
     campaignId: list.campaignId,
     targetVersionId: version.id,
     name: list.name,
-    searchIds: searches.map((search) => search.id),
+    searchIds: [...(list.searchIds ?? searches.map((search) => search.id))],
     columns: reportColumns(version.text),
     scoringHash,
     engineVersion: list.engineVersion,
     provenance: list.provenance,
+    reissueOfId: list.reissueOf?.id ?? null,
+    issue: (list.reissueOf?.issue ?? 0) + 1,
     authorId: list.authorId,
     createdAt: new Date().toISOString(),
   })

@@ -16,10 +16,12 @@ import type { ExportedCandidate } from '../presenters/shortlistExports.ts'
 import { presentShortlist } from '../presenters/shortlists.ts'
 import { conflict, notFound } from '../problems.ts'
 import { drawList, knownInvariants, scoredEntrants, type ScoredEntrant } from './assemblies.ts'
+import { assignees } from './assignments.ts'
 import { certificateMarks } from './certificates.ts'
 import { externalOf } from './externalTables.ts'
 import { compareCandidates } from './finds.ts'
 import { ownNames } from './polytopes.ts'
+import { earlierIssue, laterIssues } from './reissues.ts'
 import { reportColumns } from './rules.ts'
 import { insertShortlist } from './shortlistCommits.ts'
 import { frozenSearches, readGround } from './shortlistGround.ts'
@@ -77,6 +79,9 @@ export async function readShortlist(
     verdicts: await latestVerdicts(manager, campaignId, shortlist.targetVersion.targetId, keys),
     certificateOf: await certificateMarks(manager, campaignId, shortlist.targetVersion, keys),
     names: await ownNames(manager, { campaignId }, polytopesOf(entries)),
+    assignees: await assignees(manager, shortlist.targetVersion.targetId),
+    reissueOf: await earlierIssue(manager, shortlist),
+    reissues: await laterIssues(manager, shortlist),
     external: await externalOf(manager, campaignId, shortlistId, keys),
   })
 }

@@ -1,61 +1,48 @@
 import { In, type EntityManager } from 'typeorm'
-import type { VerdictValue } from '../../shared/verdicts.ts'
-import type { ServerContext } from '../context.ts'
 import { Verdict } from '../entities/verdict.ts'
 import type { Tally } from '../presenters/shortlists.ts'
-import { presentVerdict } from '../presenters/verdicts.ts'
-import { unprocessable } from '../problems.ts'
-import { latestCertificates } from './certificates.ts'
-import { readCampaignCandidate } from './candidates.ts'
-import { readVersion } from './targets.ts'
+import type { Standing } from './secondReading.ts'
 
-const withWords = { author: true, targetVersion: { target: true } } as const
+export const verdictWords = {
+  author: true,
+  restores: { author: true },
+  targetVersion: { target: true },
+} as const
 
-/**
- * Records a person's word on a candidate for a target. "Verified" rests on a passing certificate for this scoring
- * (the latest of the campaign counts); where there is none it needs a reason and is kept as an override.
- */
-export async function giveVerdict(
-  { source, writes, streams }: ServerContext,
-  place: { campaignId: string; candidateKey: string },
-  authorId: string,
-  input: { targetVersionId: string; value: VerdictValue; reason: string },
-): Promise<Verdict> {
-  const { campaignId, candidateKey } = place
-  await readCampaignCandidate(source.manager, campaignId, candidateKey)
-  const version = await readVersion(source.manager, campaignId, input.targetVersionId)
-  const verified = input.value === 'verified'
-  const id = await writes.transaction(async (manager) => {
-    const latest = await latestCertificates(manager, campaignId, version, [candidateKey])
-    const certificate = latest.get(candidateKey)
-    const override = verified && !certificate?.passed
-    if (override && input.reason === '') throw reasonRequired(certificate !== undefined)
-    const inserted = await manager.insert(Verdict, {
-      campaignId,
-      candidateKey,
-      targetVersionId: input.targetVersionId,
-      value: input.value,
-      reason: input.reason,
-      override,
-      certificateId: verified && !override ? (certificate?.id ?? null) : null,
-      authorId,
-      createdAt: new Date().toISOString(),
-    })
-    return Number(inserted.identifiers[0]?.id)
-  })
-  const given = await source.manager.findOneOrFail(Verdict, { where: { id }, relations: withWords })
-  streams.toCampaign(campaignId, { kind: 'verdict', candidateKey, verdict: presentVerdict(given) })
-  return given
+/** Entries in the order in which they were given, with all that is shown of them. */
+export function verdictsById(manager: EntityManager, ids: readonly number[]): Promise<Verdict[]> {
+  return manager.find(Verdict, { where: { id: In([...ids]) }, relations: verdictWords, order: { id: 'ASC' } })
 }
 
-function reasonRequired(certificateFailed: boolean) {
-  return unprocessable(
-    'reason-required',
-    certificateFailed
-      ? 'The latest certificate of this candidate did not pass; to verify it all the same, give a reason.'
-      : 'There is no passing certificate for this candidate; to verify it all the same, give a reason.',
-    { path: 'reason' },
+/** Rows per statement: SQLite takes a limited number of values in one. */
+const rowsPerInsert = 500
+
+/** Adds entries in their order; returns their numbers. Inside a transaction. */
+export async function insertVerdicts(
+  manager: EntityManager,
+  entries: readonly Partial<Verdict>[],
+): Promise<number[]> {
+  const [{ last }] = await manager.query<{ last: number }[]>(
+    'SELECT COALESCE(MAX(id), 0) AS last FROM verdict',
   )
+  for (let from = 0; from < entries.length; from += rowsPerInsert) {
+    await manager.insert(Verdict, entries.slice(from, from + rowsPerInsert))
+  }
+  const rows = await manager.query<{ id: number }[]>('SELECT id FROM verdict WHERE id > ? ORDER BY id', [
+    last,
+  ])
+  return rows.map(({ id }) => id)
+}
+
+/** @param entry the latest of its candidate, with its words loaded */
+export function standingEntry(entry: Verdict): Standing {
+  const { author, authorId } = entry.restores ?? entry
+  return {
+    value: entry.value,
+    readers: entry.readers,
+    author: { id: authorId, name: author?.name ?? '' },
+    targetVersionId: entry.targetVersionId,
+  }
 }
 
 /** All verdicts of the campaign on a candidate, newest first. */
@@ -66,7 +53,7 @@ export function listVerdicts(
 ): Promise<Verdict[]> {
   return manager.find(Verdict, {
     where: { campaignId, candidateKey },
-    relations: withWords,
+    relations: verdictWords,
     order: { id: 'DESC' },
   })
 }
@@ -80,7 +67,7 @@ export async function latestVerdicts(
 ): Promise<Map<string, Verdict>> {
   const verdicts = await manager.find(Verdict, {
     where: { campaignId, targetVersion: { targetId }, candidateKey: In([...candidateKeys]) },
-    relations: withWords,
+    relations: verdictWords,
     order: { id: 'ASC' },
   })
   return new Map(verdicts.map((verdict) => [verdict.candidateKey, verdict]))
@@ -92,7 +79,7 @@ export async function tallyShortlists(
   campaignIds: readonly string[],
 ): Promise<Map<string, Tally>> {
   const places = campaignIds.map(() => '?').join(', ')
-  const rows = await manager.query<{ id: string; size: number; verified: number; rejected: number }[]>(
+  const rows = await manager.query<(Omit<Tally, 'waiting'> & { id: string })[]>(
     `WITH latest AS (
        SELECT MAX(v.id) AS id
        FROM verdict v JOIN target_version t ON t.id = v.targetVersionId
@@ -100,12 +87,15 @@ export async function tallyShortlists(
        GROUP BY v.campaignId, v.candidateKey, t.targetId
      ),
      word AS (
-       SELECT v.campaignId, v.candidateKey, t.targetId, v.value
+       SELECT v.campaignId, v.candidateKey, t.targetId,
+         CASE WHEN v.value = 'verified' AND json_array_length(v.readers) = 1 THEN 'one-reader' ELSE v.value END
+           AS value
        FROM latest JOIN verdict v ON v.id = latest.id JOIN target_version t ON t.id = v.targetVersionId
      )
      SELECT s.id AS id, COUNT(*) AS size,
        COALESCE(SUM(w.value = 'verified'), 0) AS verified,
-       COALESCE(SUM(w.value = 'rejected'), 0) AS rejected
+       COALESCE(SUM(w.value = 'rejected'), 0) AS rejected,
+       COALESCE(SUM(w.value = 'one-reader'), 0) AS oneReader
      FROM shortlist s
      JOIN target_version st ON st.id = s.targetVersionId
      JOIN shortlist_entry e ON e.shortlistId = s.id
@@ -115,5 +105,34 @@ export async function tallyShortlists(
      GROUP BY s.id`,
     [...campaignIds, ...campaignIds],
   )
-  return new Map(rows.map(({ id, size, verified, rejected }) => [id, { size, verified, rejected }]))
+  const waiting = await waitingFor(manager, campaignIds)
+  return new Map(rows.map(({ id, ...tally }) => [id, { ...tally, waiting: waiting.get(id) ?? [] }]))
+}
+
+/** Per shortlist to whom undecided candidates are assigned, most first. */
+async function waitingFor(
+  manager: EntityManager,
+  campaignIds: readonly string[],
+): Promise<Map<string, Tally['waiting']>> {
+  const rows = await manager.query<{ shortlistId: string; id: string; name: string; open: number }[]>(
+    `SELECT s.id AS shortlistId, p.id AS id, p.name AS name, COUNT(*) AS open
+     FROM assignment a
+     JOIN account p ON p.id = a.reviewerId
+     JOIN target_version t ON t.targetId = a.targetId
+     JOIN shortlist s ON s.targetVersionId = t.id
+     JOIN shortlist_entry e ON e.shortlistId = s.id AND e.candidateKey = a.candidateKey
+     LEFT JOIN verdict v ON v.id = (
+       SELECT MAX(w.id) FROM verdict w JOIN target_version u ON u.id = w.targetVersionId
+       WHERE w.campaignId = a.campaignId AND w.candidateKey = a.candidateKey AND u.targetId = a.targetId)
+     WHERE a.campaignId IN (${campaignIds.map(() => '?').join(', ')})
+       AND (v.id IS NULL OR v.value = 'undecided'
+         OR (v.value = 'verified' AND json_array_length(v.readers) = 1))
+     GROUP BY s.id, p.id ORDER BY open DESC, p.name`,
+    [...campaignIds],
+  )
+  const waiting = new Map<string, Tally['waiting']>()
+  for (const { shortlistId, ...one } of rows) {
+    waiting.set(shortlistId, [...(waiting.get(shortlistId) ?? []), one])
+  }
+  return waiting
 }

@@ -14,7 +14,8 @@ import { explorationKey, newerExploration } from './explorations.ts'
 import { withCertification } from './certificates.ts'
 import { placeRescoring } from './rescorings.ts'
 import { withReport } from './comparisons.ts'
-import { placeVerdict } from './verdicts.ts'
+import { placeAssignment } from './assignments.ts'
+import { placeVerdicts } from './verdicts.ts'
 import { openEventStream, type StreamState } from './eventStream.ts'
 import { previewKey } from './previews.ts'
 import { apiUrl } from './request.ts'
@@ -42,7 +43,13 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
     case 'certification':
       return applyCertification(client, campaign, event)
     case 'verdict':
-      return applyVerdict(client, campaign, event)
+      return applyVerdicts(client, campaign, [event])
+    case 'verdicts':
+      return applyVerdicts(client, campaign, event.verdicts)
+    case 'assigned':
+      placeAssignment(client, event)
+      void client.invalidateQueries({ queryKey: ['campaign', campaign] })
+      return
     case 'rescoring':
       return placeRescoring(client, campaign, event.rescoring)
     case 'library':
@@ -60,6 +67,7 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
         imports: ['imported-candidates', campaign],
         collections: ['collections'],
         'external-tables': ['external-tables', campaign],
+        'shortlist-views': ['shortlist-views', campaign],
       } as const
       void client.invalidateQueries({ queryKey: keys[event.what] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
@@ -87,15 +95,17 @@ function applyNull(client: QueryClient, event: StreamEvent & { kind: 'null' }): 
 }
 
 /** A verdict goes straight into the lists of its target: fetching thousands of rows again would be felt at each key. */
-function applyVerdict(
+function applyVerdicts(
   client: QueryClient,
   campaign: string,
-  { candidateKey, verdict }: StreamEvent & { kind: 'verdict' },
+  verdicts: Parameters<typeof placeVerdicts>[1],
 ): void {
-  placeVerdict(client, candidateKey, verdict)
+  placeVerdicts(client, verdicts)
   void client.invalidateQueries({ queryKey: ['campaign', campaign] })
   void client.invalidateQueries({ queryKey: ['shortlists', campaign] })
-  void client.invalidateQueries({ queryKey: ['candidate-record', campaign, candidateKey] })
+  const [only] = verdicts
+  const key = verdicts.length === 1 && only ? [only.candidateKey] : []
+  void client.invalidateQueries({ queryKey: ['candidate-record', campaign, ...key] })
   void client.invalidateQueries({ queryKey: ['relatives'] })
 }
 

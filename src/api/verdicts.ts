@@ -1,32 +1,53 @@
 import { useMutation, useQueryClient, type QueryClient } from '@tanstack/react-query'
 import { type z } from 'zod'
-import { verdictSchema, type giveVerdictSchema, type Verdict } from '../../shared/verdicts.ts'
-import { type ShortlistDetail } from '../../shared/shortlists.ts'
+import {
+  byOneReader,
+  standingOf,
+  verdictSchema,
+  type giveVerdictSchema,
+  type Verdict,
+} from '../../shared/verdicts.ts'
+import { type ShortlistDetail, type ShortlistRow } from '../../shared/shortlists.ts'
 import { request } from './request.ts'
 
 export type GiveVerdict = z.infer<typeof giveVerdictSchema> & { key: string }
 
-/** Puts a verdict into every shortlist of its target that is in the cache, with its counts. */
-export function placeVerdict(client: QueryClient, key: string, verdict: Verdict): void {
+/** Puts verdicts into every shortlist of their target that is in the cache, with its counts. */
+export function placeVerdicts(
+  client: QueryClient,
+  placed: readonly { readonly candidateKey: string; readonly verdict: Verdict }[],
+): void {
+  const byKey = new Map<string, Verdict[]>()
+  for (const { candidateKey, verdict } of placed) {
+    byKey.set(candidateKey, [...(byKey.get(candidateKey) ?? []), verdict])
+  }
   client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
-    if (!list || list.targetId !== verdict.targetId) return list
-    const rows = list.rows.map((row) =>
-      row.candidateKey === key && isNewer(verdict, row.verdict) ? { ...row, verdict } : row,
-    )
-    const count = (value: string) =>
-      rows.filter((row) => (row.verdict?.value ?? 'undecided') === value).length
-    return {
-      ...list,
-      rows,
-      undecided: count('undecided'),
-      verified: count('verified'),
-      rejected: count('rejected'),
-    }
+    if (!list) return list
+    let moved = false
+    const rows = list.rows.map((row) => {
+      const news = byKey.get(row.candidateKey)?.filter(({ targetId }) => targetId === list.targetId) ?? []
+      const verdict = news.reduce(newer, row.verdict)
+      if (verdict === row.verdict) return row
+      moved = true
+      return { ...row, verdict }
+    })
+    return moved ? { ...list, rows, ...tallyOf(rows) } : list
   })
 }
 
+/** Counts of a list by what stands for its rows. */
+export function tallyOf(rows: readonly Pick<ShortlistRow, 'verdict'>[]) {
+  const tally = { undecided: 0, verified: 0, rejected: 0, oneReader: 0 }
+  for (const { verdict } of rows) {
+    tally[standingOf(verdict)] += 1
+    if (byOneReader(verdict)) tally.oneReader += 1
+  }
+  return tally
+}
+
 /** Answers and events come in no certain order; the numbers of verdicts count up. */
-const isNewer = (verdict: Verdict, known: Verdict | null) => !known || Number(verdict.id) >= Number(known.id)
+const newer = (known: Verdict | null, verdict: Verdict): Verdict =>
+  !known || Number(verdict.id) >= Number(known.id) ? verdict : known
 
 export function useGiveVerdict(campaign: string) {
   const client = useQueryClient()
@@ -38,7 +59,7 @@ export function useGiveVerdict(campaign: string) {
         schema: verdictSchema,
       }),
     onSuccess: (verdict, { key }) => {
-      placeVerdict(client, key, verdict)
+      placeVerdicts(client, [{ candidateKey: key, verdict }])
       void client.invalidateQueries({ queryKey: ['candidate-record', campaign, key] })
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
       void client.invalidateQueries({ queryKey: ['shortlists', campaign] })

@@ -16,6 +16,7 @@ export function campaignAs(role: Role): CampaignSummary {
     name: 'Long axions',
     description: '',
     role,
+    secondReader: false,
     targets: 1,
     searches: 1,
     runningSearches: 0,

@@ -12,6 +12,8 @@ export function verdict(value: Verdict['value'], override = false): Verdict {
     certificateId: null,
     reason: override ? 'recomputed by hand' : '',
     author: 'Ada Quill',
+    readers: null,
+    undoneBy: null,
     createdAt: '2026-01-02T03:04:05.000Z',
     targetId: 't1',
     targetName: 'Long reach',
@@ -34,6 +36,7 @@ export function row(rank: number, score: number, more: Partial<ShortlistRow> = {
     searchId: 's1',
     certificate: { state: 'none', id: null },
     verdict: null,
+    assignee: null,
     ...more,
   }
 }
@@ -50,6 +53,11 @@ export function shortlist(rows: ShortlistRow[]): ShortlistDetail {
     undecided: rows.filter(({ verdict: given }) => !given).length,
     verified: 0,
     rejected: 0,
+    oneReader: 0,
+    waiting: [],
+    issue: 1,
+    reissueOf: null,
+    reissues: [],
     createdAt: '2026-01-02T03:04:05.000Z',
     author: 'Ada Quill',
     rule: 'score log10(metric.divisor.top)',

@@ -1,6 +1,6 @@
 import { type CertificateMark } from '../../../shared/certificates.ts'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
-import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
+import { standingOf, verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
 import { meets, readConditions, valueOf, type Condition, type ListColumn } from './listColumns.ts'
 
 export const certificateStates = ['none', 'waiting', 'passed', 'failed'] as const
@@ -35,7 +35,7 @@ export function readView(search: URLSearchParams): ShortlistView {
   }
 }
 
-export const verdictOf = (row: ShortlistRow): VerdictValue => row.verdict?.value ?? 'undecided'
+export const verdictOf = (row: ShortlistRow): VerdictValue => standingOf(row.verdict)
 
 /** A verdict belongs to the target; it may have been given for another of its versions. */
 export const isForOther = (row: ShortlistRow, { targetVersion }: Pick<ShortlistDetail, 'targetVersion'>) =>

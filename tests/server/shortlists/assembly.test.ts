@@ -189,6 +189,9 @@ describe('a list scored anew', () => {
   const rescore = async (body: object): Promise<Rescoring> => {
     const asked = { name: 'Anew', targetVersionId: versionId, ...body }
     const { id } = (await hunt.lead.post(hunt.path('/rescorings')).send(asked).expect(201)).body as Rescoring
+    return ended(id)
+  }
+  const ended = async (id: string): Promise<Rescoring> => {
     const event = await hunt.stream.event(
       (told) =>
         told.kind === 'rescoring' &&
@@ -200,6 +203,25 @@ describe('a list scored anew', () => {
   }
   const read = async (id: string | null): Promise<ShortlistDetail> =>
     (await hunt.lead.get(hunt.path(`/shortlists/${id}`)).expect(200)).body as ShortlistDetail
+
+  it('may be a newer issue with finds of other searches, which are scored first', async () => {
+    const more = await hunt.start({ targetVersionId: versionId, seed: 77, budget: 12, islands: 1, keep: 5 })
+    await hunt.finished(more.id)
+    const { body } = await hunt.lead
+      .post(hunt.path(`/shortlists/${list.id}/reissues`))
+      .send({ name: 'Issue 2', how: { kind: 'drawn', moreSearchIds: [more.id] } })
+      .expect(201)
+    expect(body).toMatchObject({ shortlistId: null, rescoring: { fromId: list.id } })
+    const done = await ended(body.rescoring.id as string)
+    const next = await read(done.shortlistId)
+    expect(next).toMatchObject({ issue: 2, size: 15, reissueOf: { id: list.id }, provenance: { from: null } })
+    const before = new Map(list.rows.map(({ candidateKey, rank }) => [candidateKey, rank]))
+    for (const { candidateKey, previous } of next.rows) {
+      expect(previous?.rank).toBe(before.get(candidateKey))
+    }
+    const stayed = next.rows.filter(({ previous }) => previous !== null).length
+    expect(next.reissueOf?.left).toHaveLength(15 - stayed)
+  })
 
   it('is a new list with the change of every rank, and verdicts with the version they were given for', async () => {
     const done = await rescore({ from: { shortlistId: list.id } })
