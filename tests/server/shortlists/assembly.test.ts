@@ -205,7 +205,7 @@ describe('a list scored anew', () => {
     (await hunt.lead.get(hunt.path(`/shortlists/${id}`)).expect(200)).body as ShortlistDetail
 
   it('may be a newer issue with finds of other searches, which are scored first', async () => {
-    const more = await hunt.start({ targetVersionId: versionId, seed: 77, budget: 12, islands: 1, keep: 5 })
+    const more = await hunt.start({ targetVersionId: versionId, method: 'random', seed: 77, keep: 40 })
     await hunt.finished(more.id)
     const { body } = await hunt.lead
       .post(hunt.path(`/shortlists/${list.id}/reissues`))
