@@ -66,6 +66,7 @@ export {
   type Rarity,
   type SearchRate,
 } from './search/islandRates.ts'
+export { CandidateCache } from './search/candidateCache.ts'
 export { interleaved, thinned, type Curve } from './search/curve.ts'
 export { extensionsSchema } from './search/extensions.ts'
 export type { Find } from './search/find.ts'

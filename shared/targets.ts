@@ -1,6 +1,7 @@
 import { z } from 'zod'
 import { ruleIssueSchema } from './problems.ts'
 import { scopeSchema } from './polytopes.ts'
+import { searchStates } from './searches.ts'
 import { histogramSchema, rateSchema, scoredRowSchema } from './outcomes.ts'
 
 export const targetVersionSchema = z.object({
@@ -30,6 +31,19 @@ export const targetDetailSchema = z.object({
 })
 export type TargetDetail = z.infer<typeof targetDetailSchema>
 
+/** GET /api/campaigns/:campaign/targets/:target/uses; versions that nothing used are left out. */
+export const targetUsesSchema = z.array(
+  z.object({
+    versionId: z.string(),
+    /** Newest first. */
+    searches: z.array(
+      z.object({ id: z.string(), name: z.string(), state: z.enum(searchStates), createdAt: z.string() }),
+    ),
+    shortlists: z.array(z.object({ id: z.string(), name: z.string(), createdAt: z.string() })),
+  }),
+)
+export type TargetUses = z.infer<typeof targetUsesSchema>
+
 export const ruleTextLimit = 20_000
 export const createTargetSchema = z.object({
   name: z.string().trim().min(1).max(80),
@@ -49,7 +63,7 @@ export const checkRuleResponseSchema = z.object({
 export const previewRequestSchema = z.object({
   text: z.string().max(ruleTextLimit),
   scope: scopeSchema,
-  size: z.number().int().min(10).max(2000).default(300),
+  size: z.number().int().min(10).max(2000).default(200),
   seed: z
     .number()
     .int()

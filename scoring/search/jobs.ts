@@ -11,7 +11,8 @@ import { FormCache, polytopeSource, type PolytopeEntry, type PolytopeSource } fr
 import type { SearchProblem } from './problem.ts'
 import { searchSettingsSchema, type SearchSettings } from './settings.ts'
 import type { GivenStart } from './givenStarts.ts'
-import { timedCandidate, type Clock, type StageCosts } from './stageClock.ts'
+import { CandidateCache, type TimedEvaluation } from './candidateCache.ts'
+import type { Clock, StageCosts } from './stageClock.ts'
 import { stateShape, type SearchState } from './state.ts'
 
 /** Why a job could not be done; for people (`rule.*`, `state.*`, ...) or a bug of ours (`engine.failed`). */
@@ -140,27 +141,33 @@ export function segmentJob(
 /**
  * Evaluates the next candidates of a preview: the null sample's own run, candidate by candidate.
  * @param clock times the stages; without one all costs are 0
+ * @param candidates keeps stages for the next rule
  */
 export function previewChunk(
   input: PreviewInput,
   session = new JobSession(),
   clock: Clock = () => 0,
   enough?: SegmentOptions['enough'],
+  candidates = new CandidateCache(0),
 ): PreviewOutput {
   return guarded(() => {
     const { rule, memo } = session.ruleOf(input.ruleText)
     const problem = nullProblem({ polytopes: session.sourceOf(input.polytopes), rule }, input.size)
     const rows: PreviewRow[] = []
-    let costs: StageCosts = {}
+    let timed: TimedEvaluation | undefined
     const before = input.state === null ? startState(problem, input.seed) : checkedState(input.state)
     const { state } = advance(problem, before, input.count, {
       memo,
       enough,
-      instrument: (candidate) => timedCandidate(candidate, clock, costs),
+      instrument: (candidate) => {
+        timed = candidates.timed(candidate, clock)
+        return timed.candidate
+      },
       observe: ({ form, classKey, outcome, heights }) => {
         const { h11, h21 } = form.polytope.hodge
+        const costs = timed?.costs() ?? {}
         rows.push({ polytopeKey: form.key, classKey, h11, h21, outcome, heights: [...heights()], costs })
-        costs = {}
+        timed = undefined
       },
     })
     return { state, rows, summary: nullSummary(state, rule) }

@@ -26,6 +26,8 @@ export interface PoolOptions {
   readonly workerFile?: URL
   /** A worker's heap may grow to what the largest polytopes need, and no further. */
   readonly heapMegabytes?: number
+  /** How long a thread without work is kept, with all it has built. */
+  readonly idleMilliseconds?: number
 }
 
 /** The worker file lies beside the server's entry, in source (.ts) and in the build (.js). */
@@ -59,14 +61,21 @@ export class ComputePool {
   readonly #log: Logger
   readonly #closing = new AbortController()
 
-  constructor({ threads, nice, log, workerFile = ownWorker, heapMegabytes = 1024 }: PoolOptions) {
+  constructor({
+    threads,
+    nice,
+    log,
+    workerFile = ownWorker,
+    heapMegabytes = 1024,
+    idleMilliseconds = 60_000,
+  }: PoolOptions) {
     this.threads = threads
     this.#log = log
     this.#pool = new Piscina({
       filename: fileURLToPath(workerFile),
       minThreads: 0,
       maxThreads: threads,
-      idleTimeout: 60_000,
+      idleTimeout: idleMilliseconds,
       niceIncrement: nice,
       // Source needs the loader that the server itself runs under; the build needs nothing.
       execArgv: workerFile.pathname.endsWith('.ts') ? ['--import', import.meta.resolve('tsx')] : [],

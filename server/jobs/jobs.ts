@@ -70,6 +70,9 @@ export interface JobOptions {
 const backgroundNice = 10
 const interactiveNice = 2
 
+/** Somebody who thinks about a rule for some minutes finds the sample's geometry still there. */
+const interactiveIdleMilliseconds = 20 * 60_000
+
 export function openJobs(
   parts: Pick<JobParts, 'source' | 'writes' | 'streams' | 'log'> & { readonly workers: number },
   options: JobOptions = {},
@@ -84,7 +87,12 @@ export function openJobs(
     ...(options.backgroundWorker ? { workerFile: options.backgroundWorker } : {}),
     ...(options.heapMegabytes ? { heapMegabytes: options.heapMegabytes } : {}),
   })
-  const interactive = new ComputePool({ threads: 1, nice: interactiveNice, log })
+  const interactive = new ComputePool({
+    threads: 1,
+    nice: interactiveNice,
+    log,
+    idleMilliseconds: interactiveIdleMilliseconds,
+  })
   const unhurried = new ComputePool({ threads: 1, nice: backgroundNice, log })
   const scheduler = new Scheduler(workers, {
     broken: (source, error) =>

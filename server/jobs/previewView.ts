@@ -11,7 +11,7 @@ type Stage = Infeasible['stage']
 const stages: readonly Stage[] = ['polytope', 'topology', 'cone', 'metric', 'axions']
 
 /** Rows shown of each kind. */
-const shownEach = 8
+const shownEach = 5
 
 export interface PreviewRequire {
   readonly label: string

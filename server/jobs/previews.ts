@@ -3,14 +3,16 @@ import type { z } from 'zod'
 import type { Preview, previewRequestSchema } from '../../shared/targets.ts'
 import { notFound, Refusal } from '../problems.ts'
 import { requireSoundRule } from '../services/rules.ts'
-import { resolveScope } from '../services/scopes.ts'
+import { RecentResults } from '../services/recentResults.ts'
+import { scopeHash, scopeKeys } from '../services/scopes.ts'
 import { storeCandidates } from '../services/searchCommits.ts'
 import { ComputeFailure } from './computePool.ts'
 import type { JobParts } from './jobParts.ts'
 import type { NullChunkInput, PreviewChunkOutput, PreviewRow } from './nullChunk.ts'
 import { SegmentPace } from './pace.ts'
 import { previewView, type PreviewRequire } from './previewView.ts'
-import { polytopesText, type NullProblem } from './searchProblem.ts'
+import { polytopesText, readPolytopes, type NullProblem } from './searchProblem.ts'
+import { previewAddress, PreviewCache } from './previewCache.ts'
 
 /** Work of one piece: other previews, imports and dossiers get their turn in between. */
 const pieceMilliseconds = 50
@@ -23,6 +25,7 @@ type PreviewRequest = z.infer<typeof previewRequestSchema>
 interface RunningPreview {
   readonly accountId: string
   readonly scoringHash: string
+  readonly address: string
   readonly problem: NullProblem
   readonly requires: readonly PreviewRequire[]
   preview: Preview
@@ -32,6 +35,8 @@ interface RunningPreview {
 export class Previews {
   readonly #parts: JobParts
   readonly #latest = new Map<string, RunningPreview>()
+  readonly #cache = new PreviewCache()
+  readonly #scopes = new RecentResults<string>(6)
 
   constructor(parts: JobParts) {
     this.#parts = parts
@@ -40,19 +45,27 @@ export class Previews {
   async start(campaignId: string, accountId: string, request: PreviewRequest): Promise<Preview> {
     this.stop(accountId)
     const { scoringHash, rule } = requireSoundRule(request.text)
-    const polytopes = await resolveScope(this.#parts.source.manager, campaignId, request.scope)
+    const { source } = this.#parts
+    const keys = await scopeKeys(source.manager, campaignId, request.scope)
+    const { seed, size } = request
+    const scope = scopeHash(keys)
+    const address = previewAddress({ scoringHash, scopeHash: scope, size, seed })
+    const polytopes = this.#cache.answer(address)
+      ? ''
+      : await this.#scopes.get(scope, async () => polytopesText(await readPolytopes(source, keys)))
     // Another request of the same account may have come in between.
     this.stop(accountId)
-    const { text, seed, size } = request
     const running: RunningPreview = {
       accountId,
       scoringHash,
-      problem: { rule: text, polytopes: polytopesText(polytopes), seed, size },
+      address,
+      // Comments and layout stay behind, so that places in reasons do not depend on who asked first.
+      problem: { rule: rule.canonical, polytopes, seed, size },
       requires: rule.requires,
-      preview: { ...emptyPreview, id: randomUUID(), size },
+      preview: { ...emptyPreview, size, ...this.#cache.answer(address), id: randomUUID(), message: null },
     }
     this.#latest.set(accountId, running)
-    void this.#run(running)
+    if (running.preview.state === 'running') void this.#run(running)
     return running.preview
   }
 
@@ -85,28 +98,33 @@ export class Previews {
 
   async #evaluate(running: RunningPreview): Promise<void> {
     const { interactive, writes } = this.#parts
+    const { address, problem, requires, scoringHash } = running
     const pace = new SegmentPace(pieceMilliseconds)
-    const rows: PreviewRow[] = []
-    let state: string | null = null
+    const before = this.#cache.takePart(address)
+    const rows: PreviewRow[] = before?.rows ?? []
+    let state: string | null = before?.state ?? null
     let reported = 0
+    if (before)
+      this.#report(running, { ...running.preview, ...previewView(rows, before.summary, requires).view })
     while (running.preview.state === 'running') {
-      const piece: NullChunkInput = { problem: running.problem, state, ...pace.next }
-      const output: PreviewChunkOutput = await interactive.run('preview-chunk', piece)
-      if (running.preview.state !== 'running') return
+      const piece: NullChunkInput = { problem, state, ...pace.next }
+      const { summary, done, ...output }: PreviewChunkOutput = await interactive.run('preview-chunk', piece)
       state = output.state
       rows.push(...output.rows)
+      if (running.preview.state !== 'running') return this.#cache.keepPart(address, { rows, state, summary })
       pace.note(output.rows.length, performance.now())
-      if (!output.done && performance.now() - reported < reportMilliseconds) continue
+      if (!done && performance.now() - reported < reportMilliseconds) continue
       reported = performance.now()
-      const { view, shown } = previewView(rows, output.summary, running.requires)
-      if (output.done) {
+      const { view, shown } = previewView(rows, summary, requires)
+      if (done) {
         // So that the pages of the candidates shown can be opened.
-        const { polytopes } = running.problem
+        const { polytopes } = problem
         const finds = await interactive.run('facet-generic-finds', { polytopes, finds: shown })
-        await writes.transaction((manager) => storeCandidates(manager, running.scoringHash, finds))
+        await writes.transaction((manager) => storeCandidates(manager, scoringHash, finds))
+        this.#cache.keepAnswer(address, { ...view, state: 'done' })
         if (running.preview.state !== 'running') return
       }
-      this.#report(running, { ...running.preview, ...view, state: output.done ? 'done' : 'running' })
+      this.#report(running, { ...running.preview, ...view, state: done ? 'done' : 'running' })
     }
   }
 

@@ -9,11 +9,13 @@ import {
   previewSchema,
   targetDetailSchema,
   targetSummarySchema,
+  targetUsesSchema,
 } from '../../shared/targets.ts'
 import type { ServerContext } from '../context.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { presentTarget, presentTargetSummary } from '../presenters/targets.ts'
 import { checkRuleText } from '../services/rules.ts'
+import { readTargetUses } from '../services/targetUses.ts'
 import { addVersion, createTarget, listTargets, readTarget, renameTarget } from '../services/targets.ts'
 
 const renameTargetSchema = createTargetSchema.pick({ name: true })
@@ -54,6 +56,14 @@ export function targetRoutes(app: Express, context: ServerContext): void {
       const { target, versions, latestScope } = await readTarget(manager, campaign.id, params.target)
       return presentTarget(target, versions, latestScope)
     },
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/campaigns/:campaign/targets/:target/uses',
+    access: 'campaign.read',
+    answer: targetUsesSchema,
+    handle: ({ campaign, params }) => readTargetUses(manager, campaign.id, params.target),
   })
 
   endpoint(app, context, {

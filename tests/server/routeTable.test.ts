@@ -61,6 +61,7 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/campaigns/:campaign/targets', everyone],
   ['POST /api/campaigns/:campaign/targets', builders],
   ['GET /api/campaigns/:campaign/targets/:target', everyone],
+  ['GET /api/campaigns/:campaign/targets/:target/uses', everyone],
   ['PATCH /api/campaigns/:campaign/targets/:target', builders],
   ['POST /api/campaigns/:campaign/targets/:target/versions', builders],
   ['POST /api/campaigns/:campaign/rules/check', everyone],

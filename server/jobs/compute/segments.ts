@@ -1,4 +1,5 @@
 import {
+  CandidateCache,
   facetGenericHeights,
   InputError,
   JobSession,
@@ -56,17 +57,20 @@ export function searchSegment({ problem, state, evaluations, milliseconds }: Seg
 
 /** Draws the next candidates of a null sample. */
 export function nullChunk(input: NullChunkInput): NullChunkOutput {
-  const { state, summary, done, milliseconds } = previewChunk(input)
+  const { state, summary, done, milliseconds } = chunk(input)
   return { state, summary, done, milliseconds }
 }
 
+/** Candidates of the previews of late, for the next rule that is tried on the same sample. */
+const looked = new CandidateCache()
+
 /** The same, with every candidate and what it cost. */
-export function previewChunk({
-  problem,
-  state,
-  evaluations,
-  milliseconds,
-}: NullChunkInput): PreviewChunkOutput {
+export const previewChunk = (input: NullChunkInput): PreviewChunkOutput => chunk(input, looked)
+
+function chunk(
+  { problem, state, evaluations, milliseconds }: NullChunkInput,
+  candidates?: CandidateCache,
+): PreviewChunkOutput {
   const begun = performance.now()
   const { rule, polytopes, seed, size } = problem
   const output = sound(
@@ -82,6 +86,7 @@ export function previewChunk({
       session,
       () => performance.now(),
       pieceLength(milliseconds, begun),
+      candidates,
     ),
   )
   const { hitLine, ...summary } = output.summary

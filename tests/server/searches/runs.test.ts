@@ -29,6 +29,11 @@ describe('a search', () => {
     expect(list.body.map(({ id }: { id: string }) => id)).toContain(created.id)
     const target = await hunt.lead.get(hunt.path(`/targets/${hunt.targetId}`)).expect(200)
     expect(target.body.latestScope).toEqual(huntScope)
+    const uses = await hunt.lead.get(hunt.path(`/targets/${hunt.targetId}/uses`)).expect(200)
+    expect(uses.body).toMatchObject([
+      { versionId: hunt.targetVersionId, searches: [{ id: created.id, state: 'finished' }], shortlists: [] },
+    ])
+    await hunt.lead.get(hunt.path('/targets/none/uses')).expect(404)
   })
 
   it('gives the same result from the same seed, and another from another', async () => {
