@@ -1,6 +1,7 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
-import { pointedAt } from '../../src/components/geometry/FacePicture.tsx'
+import { pointedAt, stepTo } from '../../src/components/geometry/pointing.ts'
+import { classesOfValues } from '../../src/components/geometry/faceColouring.ts'
 import { drawingsOf } from '../../src/components/geometry/faceDrawing.ts'
 import { distinctCurves } from '../../src/routes/candidate/CurveTable.tsx'
 import { containing } from '../../src/routes/candidate/IntersectionTable.tsx'
@@ -93,5 +94,52 @@ describe('drawings of 2-faces', () => {
     const middle = [(place(4)[0] + place(6)[0]) / 2, (place(4)[1] + place(6)[1]) / 2] as const
     expect(pointedAt(drawing!, middle, 30)).toEqual([4, 6])
     expect(pointedAt(drawing!, [20, 20], 30)).toBeNull()
+  })
+
+  it('are walked through by keys: arrows to the nearest point that way, e around a point', () => {
+    const [drawing] = drawingsOf(
+      [square],
+      [
+        [4, 5, 6],
+        [4, 6, 7],
+      ],
+      [0, 0],
+    )
+    const at = (point: number) => drawing!.at.get(point)!
+    const first = stepTo(drawing!, null, 'ArrowRight')
+    expect(first).toEqual([4])
+    for (const [key, axis, sign] of [
+      ['ArrowRight', 0, 1],
+      ['ArrowLeft', 0, -1],
+      ['ArrowUp', 1, 1],
+      ['ArrowDown', 1, -1],
+    ] as const) {
+      for (const point of square.points) {
+        const next = stepTo(drawing!, [point], key)![0]
+        if (next !== point) expect(at(next)[axis] - at(point)[axis]).toBe(sign)
+      }
+    }
+    let here = stepTo(drawing!, [6], 'e')
+    const seen: unknown[] = []
+    while (here?.length === 2) {
+      seen.push([...here].sort())
+      here = stepTo(drawing!, here, 'e')
+    }
+    expect(here).toEqual([6])
+    expect(seen).toHaveLength(3)
+    expect(stepTo(drawing!, [6], 'x')).toBeUndefined()
+  })
+})
+
+describe('colours of points by a number', () => {
+  it('are one per distinct value while there are few', () => {
+    expect(classesOfValues([3, 1, 3, 2])).toEqual([[1], [2], [3]])
+  })
+  it('else hold about equally many points each, and never part equal values', () => {
+    const values = Array.from({ length: 100 }, (_, at) => (at < 40 ? 0 : at))
+    const groups = classesOfValues(values)
+    expect(groups.length).toBeLessThanOrEqual(7)
+    expect(groups.flat()).toEqual([...new Set(values)].sort((a, b) => a - b))
+    expect(groups[0]).toEqual([0])
   })
 })

@@ -1,19 +1,21 @@
-import { memo, type PointerEvent } from 'react'
+import { memo } from 'react'
 import { dualLengthColour } from '../../lib/colours.ts'
+import { type FaceColouring } from './faceColouring.ts'
 import { type FaceDrawing } from './faceDrawing.ts'
-import { distanceToSegment, type Point2 } from './facePlane.ts'
-
-/** What is pointed at: a point (one index) or an edge (two), shared by all 2-faces that contain it. */
-export type Highlight = readonly [number] | readonly [number, number] | null
+import { FaceHighlight } from './FaceHighlight.tsx'
 
 interface FacePictureProps {
   face: FaceDrawing
   /** Pixels per lattice unit. */
   unit: number
+  /** Distinct dual lengths of the polytope: they set the colours. */
   lengths: readonly number[]
-  highlight?: Highlight
-  onHighlight?: (highlight: Highlight) => void
-  onChoose?: (highlight: Highlight) => void
+  /** Colours the surroundings of each point in place of the whole face. */
+  colouring?: FaceColouring | null
+  /** With the index beside each point. */
+  labels?: boolean
+  /** Shows what is pointed at, here or in another face. */
+  live?: boolean
   label?: string
   /** Pixels left free around the polygon. */
   margin?: number
@@ -21,64 +23,48 @@ interface FacePictureProps {
   plain?: boolean
 }
 
-/** What lies under a place in lattice coordinates: a point first, else an edge. */
-export function pointedAt(face: FaceDrawing, place: Point2, unit: number): Highlight {
-  const reach = Math.min(0.45, 9 / unit)
-  let nearest: Highlight = null
-  let least = reach
-  for (const [point, [x, y]] of face.at) {
-    const distance = Math.hypot(x - place[0], y - place[1])
-    if (distance < least) {
-      least = distance
-      nearest = [point]
-    }
-  }
-  if (nearest) return nearest
-  for (const [i, j] of face.edges) {
-    const a = face.at.get(i)
-    const b = face.at.get(j)
-    if (!a || !b) continue
-    const distance = distanceToSegment(place, a, b)
-    if (distance < least) {
-      least = distance
-      nearest = [i, j]
-    }
-  }
-  return nearest
+export interface FacePlacing {
+  readonly width: number
+  readonly height: number
+  x(value: number): number
+  y(value: number): number
 }
 
-/** One 2-face to scale: lattice points, and its triangles in the colour of its dual length. */
+export const faceMargin = 7
+
+export function placingOf(face: FaceDrawing, unit: number, margin = faceMargin): FacePlacing {
+  const width = face.width * unit + 2 * margin
+  const height = face.height * unit + 2 * margin
+  return {
+    width,
+    height,
+    x: (value) => margin + value * unit,
+    y: (value) => height - margin - value * unit,
+  }
+}
+
+/** One 2-face to scale: lattice points, and its triangles in the colour of its dual length or of its points. */
 export const FacePicture = memo(function FacePicture({
   face,
   unit,
   lengths,
-  highlight = null,
-  onHighlight,
-  onChoose,
+  colouring,
+  labels = false,
+  live = false,
   label,
-  margin = 7,
+  margin = faceMargin,
   plain = false,
 }: FacePictureProps) {
-  const width = face.width * unit + 2 * margin
-  const height = face.height * unit + 2 * margin
-  const x = (value: number) => margin + value * unit
-  const y = (value: number) => height - margin - value * unit
-  const path = (points: readonly number[]) => {
-    const places = points.map((point) => face.at.get(point) ?? ([0, 0] as const))
-    return `M${places.map(([px, py]) => `${x(px)} ${y(py)}`).join('L')}Z`
+  const { width, height, x, y } = placingOf(face, unit, margin)
+  const at = (point: number): string => {
+    const [px, py] = face.at.get(point) ?? [0, 0]
+    return `${x(px)} ${y(py)}`
   }
-  const line = ([i, j]: readonly [number, number]) => {
-    const [ax, ay] = face.at.get(i) ?? [0, 0]
-    const [bx, by] = face.at.get(j) ?? [0, 0]
-    return `M${x(ax)} ${y(ay)}L${x(bx)} ${y(by)}`
-  }
-  const at = (event: PointerEvent<SVGSVGElement>): Point2 => {
-    const box = event.currentTarget.getBoundingClientRect()
-    return [(event.clientX - box.left - margin) / unit, (height - (event.clientY - box.top) - margin) / unit]
-  }
+  const outline = `M${face.corners.map(at).join('L')}Z`
   const dot = plain ? 0 : unit >= 22 ? 2.4 : unit >= 13 ? 1.7 : unit >= 5 ? 1.2 : 0
   const isCorner = new Set(face.corners)
-
+  // One path of round dots per size: a face may have hundreds of points.
+  const dots = (points: readonly number[]) => points.map((point) => `M${at(point)}h0`).join('')
   return (
     <svg
       data-chart
@@ -90,81 +76,97 @@ export const FacePicture = memo(function FacePicture({
         label ?? `2-face ${face.index}, ${face.points.length} points, dual length ${face.dualLength}`
       }
       className="block"
-      onPointerMove={onHighlight && ((event) => onHighlight(pointedAt(face, at(event), unit)))}
-      onPointerLeave={onHighlight && (() => onHighlight(null))}
-      onClick={
-        onChoose &&
-        ((event) => {
-          const box = event.currentTarget.getBoundingClientRect()
-          onChoose(
-            pointedAt(
-              face,
-              [
-                (event.clientX - box.left - margin) / unit,
-                (height - (event.clientY - box.top) - margin) / unit,
-              ],
-              unit,
-            ),
-          )
-        })
-      }
     >
       <path
-        d={path(face.corners)}
-        style={{ fill: dualLengthColour(face.dualLength, lengths) }}
+        d={outline}
+        style={{ fill: colouring ? 'var(--sheet)' : dualLengthColour(face.dualLength, lengths) }}
         stroke="none"
       />
+      {colouring && <Cells face={face} colouring={colouring} x={x} y={y} />}
       {face.edges.length > 0 && (
         <path
-          d={face.edges.map(line).join('')}
+          d={face.edges.map(([i, j]) => `M${at(i)}L${at(j)}`).join('')}
           className="fill-none stroke-ink"
           strokeWidth={unit >= 9 && !plain ? 1 : 0.6}
           opacity={0.8}
         />
       )}
       <path
-        d={path(face.corners)}
+        d={outline}
         className="fill-none stroke-ink"
         strokeWidth={plain ? 0.9 : 1.5}
         strokeLinejoin="round"
       />
-      {dot > 0 &&
+      {dot > 0 && (
+        <>
+          <path
+            d={dots(face.points.filter((point) => !isCorner.has(point)))}
+            className="fill-none stroke-ink"
+            strokeWidth={2 * dot}
+            strokeLinecap="round"
+          />
+          <path
+            d={dots(face.corners)}
+            className="fill-none stroke-ink"
+            strokeWidth={2 * dot + 1.2}
+            strokeLinecap="round"
+          />
+        </>
+      )}
+      {labels &&
         face.points.map((point) => {
           const [px, py] = face.at.get(point) ?? [0, 0]
           return (
-            <circle
-              key={point}
-              cx={x(px)}
-              cy={y(py)}
-              r={isCorner.has(point) ? dot + 0.6 : dot}
-              className="fill-ink"
-            />
+            <text key={point} x={x(px) + 3} y={y(py) - 3} fontSize="10" className="face-label">
+              {point}
+            </text>
           )
         })}
-      {highlight && highlight.length === 2 && face.at.has(highlight[0]) && face.at.has(highlight[1]) && (
-        <path
-          d={line([highlight[0], highlight[1]])}
-          stroke="var(--action)"
-          strokeWidth={4}
-          strokeLinecap="round"
-          fill="none"
-        />
-      )}
-      {highlight?.map((point) => {
-        const place = face.at.get(point)
-        return (
-          place && (
-            <circle
-              key={point}
-              cx={x(place[0])}
-              cy={y(place[1])}
-              r={6}
-              className="fill-none stroke-action"
-              strokeWidth={2.5}
-            />
-          )
-        )
-      })}
+      {live && <FaceHighlight face={face} x={x} y={y} />}
     </svg>
   )
 })
+
+/** The third of each triangle that is nearest to a corner, in the corner's colour; one path per colour. */
+function Cells({
+  face,
+  colouring,
+  x,
+  y,
+}: Pick<FacePlacing, 'x' | 'y'> & { face: FaceDrawing; colouring: FaceColouring }) {
+  const paths = colouring.classes.map((): string[] => [])
+  for (const triangle of face.triangles) {
+    const corners = triangle.map((point) => {
+      const [px, py] = face.at.get(point) ?? [0, 0]
+      return [x(px), y(py)] as const
+    })
+    const [a, b, c] = corners
+    if (!a || !b || !c) continue
+    const middle = `${round((a[0] + b[0] + c[0]) / 3)} ${round((a[1] + b[1] + c[1]) / 3)}`
+    triangle.forEach((point, k) => {
+      const own = corners[k] ?? a
+      const half = (other: readonly [number, number]) =>
+        `${round((own[0] + other[0]) / 2)} ${round((own[1] + other[1]) / 2)}`
+      const next = half(corners[(k + 1) % 3] ?? a)
+      const last = half(corners[(k + 2) % 3] ?? a)
+      paths[colouring.classOf[point] ?? 0]?.push(`M${own[0]} ${own[1]}L${next}L${middle}L${last}Z`)
+    })
+  }
+  return (
+    <>
+      {paths.map(
+        (parts, at) =>
+          parts.length > 0 && (
+            <path
+              key={at}
+              d={parts.join('')}
+              style={{ fill: colouring.classes[at]?.colour, stroke: colouring.classes[at]?.colour }}
+              strokeWidth="0.5"
+            />
+          ),
+      )}
+    </>
+  )
+}
+
+const round = (value: number) => Math.round(value * 100) / 100

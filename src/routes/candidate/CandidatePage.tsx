@@ -1,29 +1,25 @@
-import { useCallback, useMemo, useState } from 'react'
+import { useState } from 'react'
 import { Link, useParams, useSearchParams } from 'react-router-dom'
 import { useQuery } from '@tanstack/react-query'
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
 import { candidateQuery, candidateRecordQuery } from '../../api/candidates.ts'
-import { ChartFrame } from '../../components/charts/ChartFrame.tsx'
-import { drawingsOf } from '../../components/geometry/faceDrawing.ts'
-import { FaceAtlas } from '../../components/geometry/FaceAtlas.tsx'
-import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { HighlightContext, HighlightStore } from '../../components/geometry/highlight.ts'
 import { useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
 import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
+import { AtlasSection } from './AtlasSection.tsx'
 import { CompareWith } from './CompareWith.tsx'
 import { CertificateSection } from './CertificateSection.tsx'
 import { ComponentSection } from './ComponentSection.tsx'
 import { CurveTable } from './CurveTable.tsx'
 import { DivisorTable } from './DivisorTable.tsx'
 import { FibrationSection } from './FibrationSection.tsx'
-import { HighlightLine } from './HighlightLine.tsx'
 import { IntersectionTable } from './IntersectionTable.tsx'
 import { Provenance } from './Provenance.tsx'
 import { RelativesSection } from './RelativesSection.tsx'
 import { SpectrumSection } from './SpectrumSection.tsx'
 import { Steps } from './Steps.tsx'
-import { TriangleTable } from './TriangleTable.tsx'
 import { Verdicts } from './Verdicts.tsx'
 
 /** The dossier: geometry for everyone who may see the polytope, and what the campaign in hand knows of it. */
@@ -76,7 +72,7 @@ export function CandidatePage() {
               appearance={appearance}
             />
           )}
-          <Geometry geometry={detail} />
+          <Geometry key={`geometry-${detail.key}`} geometry={detail} />
           <CertificateSection
             key={`certificate-${detail.key}`}
             campaign={campaign?.id ?? null}
@@ -116,49 +112,21 @@ function Trail({
 }
 
 function Geometry({ geometry }: { geometry: CandidateGeometry }) {
-  const [highlight, setHighlight] = useState<Highlight>(null)
-  const [chosen, setChosen] = useState<Highlight>(null)
-  const faces = useMemo(
-    () => drawingsOf(geometry.polytope.twoFaces, geometry.triangles, geometry.faceOf),
-    [geometry],
-  )
-  const onHighlight = useCallback((next: Highlight) => {
-    setHighlight((before) => (same(before, next) ? before : next))
-  }, [])
-  const onChoose = useCallback((next: Highlight) => {
-    setChosen((before) => (same(before, next) ? null : next))
-  }, [])
-  const shown = highlight ?? chosen
+  const [highlights] = useState(() => new HighlightStore())
   const { polytope, reference } = geometry
   return (
-    <>
-      <Section
-        title="2-faces"
-        note="Each 2-face with its triangulation, to one scale. Pointing at a point or an edge shows it in every face that shares it; a click keeps it."
-      >
-        <ChartFrame
-          title={`${geometry.triangles.length} triangles`}
-          file={`two-faces-${geometry.key.slice(0, 10)}`}
-          table={<TriangleTable geometry={geometry} />}
-        >
-          <HighlightLine geometry={geometry} highlight={shown} kept={chosen !== null && highlight === null} />
-          <FaceAtlas faces={faces} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
-        </ChartFrame>
-      </Section>
+    <HighlightContext value={highlights}>
+      <AtlasSection geometry={geometry} />
       <Section
         title="Divisors"
         note="Prime toric divisors at the reference point, scale 1. Volumes in Einstein frame, units 2π√α′ = 1, leading order."
       >
-        <DivisorTable geometry={geometry} highlight={shown} onHighlight={onHighlight} onChoose={onChoose} />
+        <DivisorTable geometry={geometry} />
       </Section>
-      {geometry.components && <ComponentSection components={geometry.components} onHighlight={onHighlight} />}
+      {geometry.components && <ComponentSection components={geometry.components} />}
       <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
         <Section title="Intersection numbers" note="Non-zero κ with i ≤ j ≤ k.">
-          <IntersectionTable
-            intersections={geometry.intersections}
-            points={polytope.points}
-            onHighlight={onHighlight}
-          />
+          <IntersectionTable intersections={geometry.intersections} points={polytope.points} />
         </Section>
         <Section
           title="Curves"
@@ -205,8 +173,6 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
           <SpectrumSection geometry={geometry} />
         </Section>
       </div>
-    </>
+    </HighlightContext>
   )
 }
-
-const same = (a: Highlight, b: Highlight) => a?.[0] === b?.[0] && a?.[1] === b?.[1]

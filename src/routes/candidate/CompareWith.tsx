@@ -1,8 +1,7 @@
 import { useState } from 'react'
+import { ActionButton } from '../../actions/ActionButton.tsx'
 import { CandidateChoice } from '../../components/candidate/CandidateChoice.tsx'
-import { Button } from '../../components/ui/Button.tsx'
 import { Dialog } from '../../components/ui/Dialog.tsx'
-import { useShortcut } from '../../lib/shortcuts.ts'
 import { compareCandidatesAddress } from '../candidates/compare/compareAddress.ts'
 
 /** Opens a dialog to choose another candidate, and lays the two side by side. */
@@ -16,10 +15,17 @@ export function CompareWith({
   shortlist?: string
 }) {
   const [open, setOpen] = useState(false)
-  useShortcut({ key: 'c', does: 'Compare with another candidate', group: 'Dossier' }, () => setOpen(true))
   return (
     <>
-      <Button onClick={() => setOpen(true)}>Compare with…</Button>
+      <ActionButton
+        action={{
+          ...{ id: 'dossier.compare', label: 'Compare with another candidate', section: 'Dossier' },
+          shortcut: 'c',
+          run: () => setOpen(true),
+        }}
+      >
+        Compare with…
+      </ActionButton>
       <Dialog
         open={open}
         onOpenChange={setOpen}

@@ -1,6 +1,6 @@
 import { useMemo, useState } from 'react'
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
-import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { useHighlightStore } from '../../components/geometry/highlight.ts'
 import { Button } from '../../components/ui/Button.tsx'
 import { Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
@@ -57,13 +57,8 @@ export function splitRows(components: Components): { parts: ComponentRow[]; numb
 }
 
 /** Shown on polytopes that are not favourable: what the divisors' totals hide. */
-export function ComponentSection({
-  components,
-  onHighlight,
-}: {
-  components: Components
-  onHighlight: (highlight: Highlight) => void
-}) {
+export function ComponentSection({ components }: { components: Components }) {
+  const store = useHighlightStore()
   const { parts, numbers } = useMemo(() => splitRows(components), [components])
   const [open, setOpen] = useState(false)
   const columns: Column<ComponentRow>[] = [
@@ -113,8 +108,8 @@ export function ComponentSection({
           columns={columns}
           rowProps={({ point }) => ({
             className: 'hover:bg-action-wash',
-            onPointerEnter: () => onHighlight([point]),
-            onPointerLeave: () => onHighlight(null),
+            onPointerEnter: () => store.point([point]),
+            onPointerLeave: () => store.point(null),
           })}
         />
         <div className="flex flex-col items-start gap-2">

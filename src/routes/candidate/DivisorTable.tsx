@@ -1,6 +1,6 @@
 import { useMemo, useState } from 'react'
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
-import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { useHighlight, useHighlightStore } from '../../components/geometry/highlight.ts'
 import { columnDecimals } from '../../lib/numbers.ts'
 import { Num } from '../../components/ui/Num.tsx'
 import { SortButton } from '../../components/ui/Table.tsx'
@@ -44,17 +44,9 @@ const numbers = [
   ['volume', 'Volume τ'],
 ] as const
 
-export function DivisorTable({
-  geometry,
-  highlight,
-  onHighlight,
-  onChoose,
-}: {
-  geometry: CandidateGeometry
-  highlight: Highlight
-  onHighlight: (highlight: Highlight) => void
-  onChoose: (highlight: Highlight) => void
-}) {
+export function DivisorTable({ geometry }: { geometry: CandidateGeometry }) {
+  const highlight = useHighlight()
+  const store = useHighlightStore()
   const [sort, setSort] = useState<{ by: 'index' | (typeof numbers)[number][0]; down: boolean }>({
     by: 'index',
     down: false,
@@ -95,7 +87,7 @@ export function DivisorTable({
           type="button"
           className="min-w-6 text-right text-action hover:underline"
           title={`Show D${row.index} in the 2-faces`}
-          onClick={() => onChoose([row.index])}
+          onClick={() => store.keep([row.index])}
         >
           {row.index}
         </button>
@@ -129,8 +121,8 @@ export function DivisorTable({
       columns={columns}
       rowProps={(row) => ({
         className: highlight?.some((point) => point === row.index) ? 'bg-action-wash' : '',
-        onPointerEnter: () => onHighlight([row.index]),
-        onPointerLeave: () => onHighlight(null),
+        onPointerEnter: () => store.point([row.index]),
+        onPointerLeave: () => store.point(null),
       })}
     />
   )

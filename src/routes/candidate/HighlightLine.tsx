@@ -1,21 +1,15 @@
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
-import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { useHighlight, useHighlightStore, type Highlight } from '../../components/geometry/highlight.ts'
 import { formatNumber } from '../../lib/numbers.ts'
 
 const carriers = ['vertex', 'on an edge', 'inside a 2-face']
 
 /** What is pointed at in the atlas, in words and numbers. Keeps its height so that nothing jumps. */
-export function HighlightLine({
-  geometry,
-  highlight,
-  kept,
-}: {
-  geometry: CandidateGeometry
-  highlight: Highlight
-  kept: boolean
-}) {
+export function HighlightLine({ geometry }: { geometry: CandidateGeometry }) {
+  const highlight = useHighlight()
+  const kept = useHighlightStore().isKept()
   return (
-    <p aria-live="polite" className="mb-2 min-h-10 sm:min-h-5">
+    <p aria-live="polite" className="mb-2 min-h-10 sm:min-h-5 print:hidden">
       {highlight ? describe(geometry, highlight) : <span className="text-soft">Nothing is pointed at.</span>}
       {kept && <span className="text-soft"> (kept)</span>}
     </p>

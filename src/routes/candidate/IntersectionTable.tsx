@@ -1,6 +1,6 @@
 import { useMemo, useState } from 'react'
 import { type CandidateGeometry } from '../../../shared/candidates.ts'
-import { type Highlight } from '../../components/geometry/FacePicture.tsx'
+import { useHighlightStore } from '../../components/geometry/highlight.ts'
 import { TextField } from '../../components/ui/Field.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { Empty } from '../../components/ui/States.tsx'
@@ -35,12 +35,11 @@ const columns: Column<Intersection>[] = [
 export function IntersectionTable({
   intersections,
   points,
-  onHighlight,
 }: {
   intersections: CandidateGeometry['intersections']
   points: number
-  onHighlight: (highlight: Highlight) => void
 }) {
+  const store = useHighlightStore()
   const [text, setText] = useState('')
   const wanted = useMemo(() => (text.match(/\d+/g) ?? []).map(Number), [text])
   const rows = useMemo(() => containing(intersections, wanted), [intersections, wanted])
@@ -74,10 +73,10 @@ export function IntersectionTable({
           rowProps={(row) => ({
             className: 'hover:bg-action-wash',
             onPointerEnter: () =>
-              onHighlight(
+              store.point(
                 row[0] === row[1] ? (row[1] === row[2] ? [row[0]] : [row[0], row[2]]) : [row[0], row[1]],
               ),
-            onPointerLeave: () => onHighlight(null),
+            onPointerLeave: () => store.point(null),
           })}
         />
       )}
