@@ -1,12 +1,17 @@
-import { useEffect, useRef, useState, type RefObject } from 'react'
+import { useLayoutEffect, useRef, useState, type RefObject } from 'react'
 
-/** Width in pixels of the element the ref is put on, followed as it changes. */
+/**
+ * Width in pixels of the element the ref is put on, followed as it changes; measured before the first paint, so that
+ * nothing moves after it.
+ */
 export function useWidth<Kind extends HTMLElement>(initial: number): [RefObject<Kind | null>, number] {
   const ref = useRef<Kind>(null)
   const [width, setWidth] = useState(initial)
-  useEffect(() => {
+  useLayoutEffect(() => {
     const element = ref.current
-    if (!element || typeof ResizeObserver === 'undefined') return
+    if (!element) return
+    if (element.clientWidth > 0) setWidth(element.clientWidth)
+    if (typeof ResizeObserver === 'undefined') return
     const observer = new ResizeObserver(([entry]) => {
       if (entry && entry.contentRect.width > 0) setWidth(Math.floor(entry.contentRect.width))
     })

@@ -38,8 +38,9 @@ export function coveredRange(low: number, high: number): [number, number] {
 }
 
 /**
- * Polytopes by Hodge numbers, both axes logarithmic; darker where more share a place. Dragging over an area or
- * choosing a point narrows the library to it; the number fields of the filter do the same from the keyboard.
+ * Polytopes by Hodge numbers, both axes logarithmic and of one range, with the line that mirror symmetry reflects in;
+ * darker where more share a place. Dragging over an area or choosing a point narrows the library to it; the number
+ * fields of the filter do the same from the keyboard.
  */
 export function HodgeScatter({
   counts,
@@ -56,19 +57,10 @@ export function HodgeScatter({
   const [over, setOver] = useState<HodgeCount | null>(null)
   const right = width - 12
   const most = Math.max(1, ...counts.map(({ count }) => count))
-  const end = (pick: (c: HodgeCount) => number) => Math.max(10, ...counts.map(pick)) * 1.25
-  const x = logScale(
-    0.8,
-    end((c) => c.h11),
-    left,
-    right,
-  )
-  const y = logScale(
-    0.8,
-    end((c) => c.h21),
-    bottom,
-    top,
-  )
+  // One range for both: mirror pairs lie mirrored in the diagonal.
+  const end = Math.max(10, ...counts.map(({ h11, h21 }) => Math.max(h11, h21))) * 1.25
+  const x = logScale(0.8, end, left, right)
+  const y = logScale(0.8, end, bottom, top)
   const place = (h: number) => Math.max(0.85, h)
 
   const at = (event: PointerEvent) => {
@@ -147,6 +139,17 @@ export function HodgeScatter({
         >
           <BottomAxis scale={x} label="h11" left={left} right={right} top={top} bottom={bottom} />
           <LeftAxis scale={y} label="h21" left={left} right={right} top={top} bottom={bottom} />
+          <line
+            x1={x(0.8)}
+            y1={y(0.8)}
+            x2={x(end)}
+            y2={y(end)}
+            className="stroke-line"
+            strokeDasharray="3 3"
+          />
+          <text x={x(end) - 6} y={y(end) + 18} textAnchor="end" className="fill-soft text-xs">
+            h11 = h21
+          </text>
           {marked && (
             <rect
               x={Math.min(marked.x0, marked.x1)}
