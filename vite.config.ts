@@ -9,7 +9,16 @@ export default defineConfig({
   build: { outDir: 'dist/client', emptyOutDir: true, sourcemap: false },
   server: { host: '127.0.0.1', port: 4281, proxy: { '/api': api } },
   test: {
-    include: ['tests/**/*.test.{ts,tsx}'],
+    projects: [
+      // Pure functions and servers that are closed again: their modules need loading once per process only.
+      {
+        extends: true,
+        test: { name: 'engine', include: ['tests/{scoring,reference}/**/*.test.ts'], isolate: false },
+      },
+      { extends: true, test: { name: 'server', include: ['tests/server/**/*.test.ts'], isolate: false } },
+      { extends: true, test: { name: 'client', include: ['tests/client/**/*.test.{ts,tsx}'] } },
+      { extends: true, test: { name: 'browser', include: ['tests/browser/**/*.test.ts'] } },
+    ],
     pool: 'forks',
     maxWorkers: 2,
     testTimeout: 60_000,

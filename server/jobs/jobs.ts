@@ -51,6 +51,8 @@ export interface Jobs {
 }
 
 export interface JobOptions {
+  /** Worker file of all threads, where it is not the one beside the server's entry (tests take the built one). */
+  readonly worker?: URL
   /** Worker file of the background threads (tests put a misbehaving one here). */
   readonly backgroundWorker?: URL
   /** Heap of a background thread. */
@@ -80,7 +82,9 @@ export function openJobs(
   const { workers, ...shared } = parts
   const { log } = shared
   const closing = new AbortController()
+  const own = options.worker ? { workerFile: options.worker } : {}
   const background = new ComputePool({
+    ...own,
     threads: workers,
     nice: backgroundNice,
     log,
@@ -88,12 +92,13 @@ export function openJobs(
     ...(options.heapMegabytes ? { heapMegabytes: options.heapMegabytes } : {}),
   })
   const interactive = new ComputePool({
+    ...own,
     threads: 1,
     nice: interactiveNice,
     log,
     idleMilliseconds: interactiveIdleMilliseconds,
   })
-  const unhurried = new ComputePool({ threads: 1, nice: backgroundNice, log })
+  const unhurried = new ComputePool({ ...own, threads: 1, nice: backgroundNice, log })
   const scheduler = new Scheduler(workers, {
     broken: (source, error) =>
       log.error({ err: error, campaign: source.campaignId }, 'a source of work broke and was removed'),

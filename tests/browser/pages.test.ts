@@ -3,8 +3,9 @@ import { fileURLToPath } from 'node:url'
 import { AxeBuilder } from '@axe-core/playwright'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { Browser, Page } from 'playwright-core'
-import { startApplication, type Application } from './application.ts'
+import type { Application } from './application.ts'
 import { chromiumPath, launch, openPage, type Theme, type Watched } from './browser.ts'
+import { openDemoApplication } from './demoApplication.ts'
 import { signInAs } from './signIn.ts'
 
 const shots = fileURLToPath(new URL('./screenshots/', import.meta.url))
@@ -57,16 +58,13 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
 
   beforeAll(async () => {
     mkdirSync(shots, { recursive: true })
-    application = await startApplication()
+    application = await openDemoApplication()
     browser = await launch()
     const { page } = await openPage(browser, 1440)
     await signInAs(page, application, 'lead')
     const read = async <T>(path: string): Promise<T> =>
       (await (await page.request.get(`${application.address}/api${path}`)).json()) as T
-    // The demo search runs for real after the first start and ends in a shortlist; its page shows when.
     const [{ id: campaign }] = await read<{ id: string }[]>('/campaigns')
-    await page.goto(`${application.address}/campaigns/${campaign}/shortlists`)
-    await page.locator('main table a').first().waitFor({ timeout: 240_000 })
     const detail = await read<{ searchList: SearchRow[]; shortlistList: { id: string }[] }>(
       `/campaigns/${campaign}`,
     )
@@ -137,8 +135,10 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
       )
       expect(overflow, 'horizontal overflow in px').toBeLessThanOrEqual(0)
       // Typeset formulas are KaTeX's own markup, thousands of nodes on the reference page.
-      const { violations } = await new AxeBuilder({ page })
-        .exclude('.katex')
+      const audit = new AxeBuilder({ page }).exclude('.katex')
+      // Hundreds of entries of one make: five of each group stand for them.
+      if (name === 'reference') audit.exclude('main section li:nth-child(n+6)')
+      const { violations } = await audit
         .options({
           runOnly: { type: 'tag', values: ['wcag2a', 'wcag2aa', 'wcag21aa', 'wcag22aa'] },
           // What passed is a megabyte that nobody reads.

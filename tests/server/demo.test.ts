@@ -15,6 +15,7 @@ import { readConfig } from '../../server/config.ts'
 import { announce, hasDemo, runDemoSearch, seedDemo } from '../../server/library/demo.ts'
 import { demoPassword, demoSearch, demoTargets, demoTeam } from '../../server/library/demoTeam.ts'
 import { openServer, refuseExposedDemo } from '../../server/start.ts'
+import { builtWorker } from './support/builtWorker.ts'
 import { bundledEntries, loadEntries } from './support/bundledSample.ts'
 
 /** A server on an empty database, as at the first start. */
@@ -32,7 +33,7 @@ async function firstStart<T>(
   const server = await openServer(config, {
     inMemory: true,
     checkAnswers: true,
-    jobs: { nullSize: () => 20 },
+    jobs: { ...builtWorker, nullSize: () => 20 },
   })
   try {
     return await run(server)

@@ -7,7 +7,7 @@ import { startServerProcess, type ServerProcess } from './support/serverProcess.
 import { address, password } from './support/testServer.ts'
 
 const limitMilliseconds = 100
-const reads = 200
+const reads = 120
 
 let folder: string
 let server: ServerProcess

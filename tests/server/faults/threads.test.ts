@@ -111,14 +111,14 @@ describe('a worker thread', () => {
 describe('a worker thread that does not return', () => {
   it('is ended after the limit, its segment tried once more, and its search fails', async () => {
     // On a busy machine even a sound segment may take longer: then it is the first one that is tried twice.
-    const impatient = await open({ pieceLimitMilliseconds: 6_000 })
+    const impatient = await open({ pieceLimitMilliseconds: 3_000 })
     const [before, leadBefore] = [server, lead]
     try {
       server = impatient
       lead = await impatient.signIn('lead')
       expect(await ended(await start('never returns'))).toMatchObject({
         state: 'failed',
-        failure: { code: 'worker-stuck', message: 'The computation did not end within 6 seconds.' },
+        failure: { code: 'worker-stuck', message: 'The computation did not end within 3 seconds.' },
       })
       await lead.get('/api/health').expect(200)
     } finally {

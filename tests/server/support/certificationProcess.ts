@@ -5,12 +5,13 @@ import { Certification } from '../../../server/entities/certification.ts'
 import { createCampaign } from '../../../server/services/campaigns.ts'
 import { requestCertification } from '../../../server/services/certifications.ts'
 import { openServer } from '../../../server/start.ts'
+import { builtWorker } from './builtWorker.ts'
 import { bundledEntries, loadEntries } from './bundledSample.ts'
 import { smallShortlist } from './smallShortlist.ts'
 import { addAccount } from './testServer.ts'
 
 const [size] = process.argv.slice(2)
-const server = await openServer(readConfig(process.env), { jobs: { nullSize: () => 20 } })
+const server = await openServer(readConfig(process.env), { jobs: { ...builtWorker, nullSize: () => 20 } })
 const { context } = server
 const { source, streams, jobs } = context
 

@@ -8,12 +8,14 @@ import { createSearch } from '../../../server/services/searches.ts'
 import { createTarget } from '../../../server/services/targets.ts'
 import { listen, openServer } from '../../../server/start.ts'
 import { createSearchSchema } from '../../../shared/searches.ts'
+import { builtWorker } from './builtWorker.ts'
 import { bundledEntries, loadEntries } from './bundledSample.ts'
 import { addAccount } from './testServer.ts'
 
 const [polytope, rule, settings, segmentMilliseconds] = process.argv.slice(2)
 const server = await openServer(readConfig(process.env), {
   jobs: {
+    ...builtWorker,
     nullSize: () => 50,
     ...(segmentMilliseconds ? { segmentMilliseconds: Number(segmentMilliseconds) } : {}),
   },

@@ -11,6 +11,7 @@ import { createCampaign } from '../../../server/services/campaigns.ts'
 import { hashPassword } from '../../../server/services/passwords.ts'
 import { openServer, type OpenServer } from '../../../server/start.ts'
 import { roles, type Role } from '../../../shared/roles.ts'
+import { builtWorker } from './builtWorker.ts'
 
 export type Agent = ReturnType<typeof request.agent>
 
@@ -41,7 +42,11 @@ export async function openTestServer(options: TestServerOptions = {}): Promise<T
     DATA_DIR: folder,
     ...options.environment,
   })
-  const server = await openServer(config, { inMemory: true, checkAnswers: true, jobs: options.jobs })
+  const server = await openServer(config, {
+    inMemory: true,
+    checkAnswers: true,
+    jobs: { ...builtWorker, ...options.jobs },
+  })
   const { context } = server
   const accounts = {
     lead: await addAccount(server, 'lead'),
