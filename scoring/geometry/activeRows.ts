@@ -1,5 +1,12 @@
 import type { NormalMatrix } from './normalMatrix.ts'
-import { largestSize, squaredLength, timesColumn, timesRow, type SparseRows } from './sparseRows.ts'
+import {
+  largestSize,
+  selectedRows,
+  squaredLength,
+  timesColumn,
+  timesRow,
+  type SparseRows,
+} from './sparseRows.ts'
 
 /** Largest penalty of the multiplier iteration, and its share of the mean square of the singular values. */
 const largestPenalty = 1e-9
@@ -19,7 +26,7 @@ export interface PointOnRows {
 
 /**
  * The point of least norm from a point (w, s, y) near it, by a dual active-set method (after Goldfarb and Idnani
- * 1983, Math. Program. 27, 1): the rows with y > s in units of their typical sizes are taken as equations; then
+ * 1983, Math. Program. 27, 1): the rows without slack, and with y > s in units of their typical sizes, are taken as equations; then
  * rows with a negative multiplier are released, the most violated row is added, and where the equations
  * contradict each other the multipliers move along the contradiction until a row falls out. When nothing is left
  * to change, the point is optimal for all rows.
@@ -35,12 +42,17 @@ export function pointOnActiveRows(
   changes: number,
 ): PointOnRows | undefined {
   const typical = squaredLength(w) / s.length
-  const active = Uint8Array.from(s, (slack, r) => (y[r] > slack * typical ? 1 : 0))
+  const active = new Uint8Array(s.length)
+  const multipliers = new Float64Array(s.length)
+  for (let r = 0; r < s.length; r++) {
+    if (s[r] > 0 && !(y[r] > s[r] * typical)) continue
+    active[r] = 1
+    multipliers[r] = y[r]
+  }
   const equations = new Equations(rows, normal, active)
-  const multipliers = y.map((value, r) => (active[r] ? value : 0))
-  const point = Float64Array.from(w)
+  const point = w.slice()
   for (let change = 0; change <= changes; change++) {
-    const before = Float64Array.from(multipliers)
+    const before = multipliers.slice()
     const outcome = equations.solve(point, multipliers)
     if (outcome === 'unsolved') return undefined
     if (outcome === 'contradictory') {
@@ -118,29 +130,48 @@ class Equations {
    * harm: the start decides among their multipliers.
    */
   solve(point: Float64Array, multipliers: Float64Array): 'solved' | 'contradictory' | 'unsolved' {
-    const { active, shortfall, weight, step, residual, rows } = this
+    const { active, weight, step, residual } = this
+    const held = placesOf(active)
     // With A_a A_a^T y = 1 and |w|^2 = sum of y, the least squared singular values are about rows / |w|^2.
-    const held = active.reduce((count, yes) => count + yes, 0) || 1
-    const penalty = Math.min(largestPenalty, (penaltyShare * held) / (squaredLength(point) || 1))
-    for (let r = 0; r < active.length; r++) weight[r] = active[r] ? 1 / penalty : 0
+    const penalty = Math.min(
+      largestPenalty,
+      (penaltyShare * (held.length || 1)) / (squaredLength(point) || 1),
+    )
+    const stiffness = 1 / penalty
+    weight.fill(0)
+    for (let e = 0; e < held.length; e++) weight[held[e]] = stiffness
     if (!this.normal.factorise(weight)) return 'unsolved'
+
+    const rows = selectedRows(this.rows, held)
+    const lack = new Float64Array(held.length)
+    const y = new Float64Array(held.length)
+    for (let e = 0; e < held.length; e++) y[e] = multipliers[held[e]]
+    const measure = (): void => {
+      timesRow(rows, y, residual)
+      for (let k = 0; k < point.length; k++) residual[k] -= point[k]
+      timesColumn(rows, point, lack)
+      for (let e = 0; e < lack.length; e++) lack[e] = 1 - lack[e]
+    }
+    const change = new Float64Array(held.length)
     let before = Infinity
     for (let sweep = 0; sweep < maximalSweeps; sweep++) {
-      this.measure(point, multipliers)
-      const error = largestSize(shortfall) + largestSize(residual) / (largestSize(point) || 1)
+      measure()
+      const error = largestSize(lack) + largestSize(residual) / (largestSize(point) || 1)
       if (sweep > 1 && error > stagnation * before) break
       before = error
-      for (let r = 0; r < active.length; r++) shortfall[r] *= weight[r]
-      timesRow(rows, shortfall, step)
-      for (let k = 0; k < step.length; k++) step[k] += residual[k]
+      timesRow(rows, lack, step)
+      for (let k = 0; k < step.length; k++) step[k] = stiffness * step[k] + residual[k]
       this.normal.solve(step, step)
-      timesColumn(rows, step, this.values)
+      timesColumn(rows, step, change)
       for (let k = 0; k < point.length; k++) point[k] += step[k]
-      for (let r = 0; r < active.length; r++) multipliers[r] += shortfall[r] - weight[r] * this.values[r]
+      for (let e = 0; e < y.length; e++) y[e] += stiffness * (lack[e] - change[e])
     }
+    for (let e = 0; e < held.length; e++) multipliers[held[e]] = y[e]
     if (before < rounding(point)) return 'solved'
-    this.measure(point, multipliers)
-    return largestSize(shortfall) > contradiction ? 'contradictory' : 'unsolved'
+    measure()
+    this.shortfall.fill(0)
+    for (let e = 0; e < held.length; e++) this.shortfall[held[e]] = lack[e]
+    return largestSize(lack) > contradiction ? 'contradictory' : 'unsolved'
   }
 
   /** The row with the least value at the point, if that is below 1; otherwise -1. */
@@ -156,14 +187,14 @@ class Equations {
     }
     return worst
   }
+}
 
-  private measure(point: Float64Array, multipliers: Float64Array): void {
-    const { active, residual, shortfall, values } = this
-    timesRow(this.rows, multipliers, residual)
-    for (let k = 0; k < point.length; k++) residual[k] -= point[k]
-    timesColumn(this.rows, point, values)
-    for (let r = 0; r < active.length; r++) shortfall[r] = active[r] ? 1 - values[r] : 0
-  }
+/** Where the marks are set, ascending. */
+function placesOf(marks: Uint8Array): Int32Array {
+  const places = new Int32Array(marks.length)
+  let count = 0
+  for (let r = 0; r < marks.length; r++) if (marks[r] === 1) places[count++] = r
+  return places.subarray(0, count)
 }
 
 /** What rounding may leave of the value 1 of a row at w: sums of a few integer multiples of entries of w. */

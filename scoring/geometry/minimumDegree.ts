@@ -47,10 +47,23 @@ export function minimumDegreeOrder(size: number, cliques: CoupledSets): Eliminat
     used = eliminate(neighbours, words, pivot, degree, rows, used)
     starts[position + 1] = used
   }
-  const structure = rows.slice(0, used)
-  for (let k = 0; k < used; k++) structure[k] = positionOf[structure[k]]
-  for (let p = 0; p < size; p++) structure.subarray(starts[p], starts[p + 1]).sort()
-  return { size, order, positionOf, starts, rows: structure }
+  for (let k = 0; k < used; k++) rows[k] = positionOf[rows[k]]
+  return { size, order, positionOf, starts, rows: ascending(size, starts, rows.subarray(0, used)) }
+}
+
+/** The same columns with their rows ascending: listed by rows, then by columns again. */
+function ascending(size: number, starts: Int32Array, rows: Int32Array): Int32Array {
+  const ends = new Int32Array(size)
+  for (let k = 0; k < rows.length; k++) ends[rows[k]]++
+  for (let r = 1; r < size; r++) ends[r] += ends[r - 1]
+  const columns = new Int32Array(rows.length)
+  const next = new Int32Array(size)
+  for (let r = 1; r < size; r++) next[r] = ends[r - 1]
+  for (let p = 0; p < size; p++) for (let k = starts[p]; k < starts[p + 1]; k++) columns[next[rows[k]]++] = p
+  const sorted = new Int32Array(rows.length)
+  const place = starts.slice()
+  for (let r = 0, k = 0; r < size; r++) for (; k < ends[r]; k++) sorted[place[columns[k]]++] = r
+  return sorted
 }
 
 function cliqueGraph(size: number, words: number, cliques: CoupledSets): Int32Array {

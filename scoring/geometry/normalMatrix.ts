@@ -13,6 +13,7 @@ export class NormalMatrix {
   private readonly pairStarts: Int32Array
   private readonly pairProducts: Float64Array
   private readonly pairTargets: Int32Array
+  private readonly diagonalTargets: Int32Array
 
   constructor(size: number, rows: SparseRows) {
     this.rows = rows
@@ -26,6 +27,7 @@ export class NormalMatrix {
     }
     this.pairProducts = new Float64Array(this.pairStarts[count])
     this.pairTargets = new Int32Array(this.pairStarts[count])
+    this.diagonalTargets = Int32Array.from({ length: size }, (_, v) => this.factor.entryOf(v, v))
     let pair = 0
     for (let r = 0; r < count; r++) {
       for (let a = starts[r]; a < starts[r + 1]; a++) {
@@ -41,22 +43,18 @@ export class NormalMatrix {
     return this.factor.order.size
   }
 
-  /** Non-zeros of the triangular factor. */
-  get fill(): number {
-    return this.factor.values.length
-  }
-
   /** Factorises I + A^T D A; false when rounding has made it indefinite. */
   factorise(diagonal: Float64Array): boolean {
     const { pairStarts, pairProducts, pairTargets } = this
-    const { values, order } = this.factor
+    const { values } = this.factor
     values.fill(0)
     for (let r = 0; r < rowCount(this.rows); r++) {
       const weight = diagonal[r]
+      if (weight === 0) continue
       for (let k = pairStarts[r]; k < pairStarts[r + 1]; k++)
         values[pairTargets[k]] += weight * pairProducts[k]
     }
-    for (let p = 0; p < order.size; p++) values[order.starts[p]] += 1
+    for (const place of this.diagonalTargets) values[place] += 1
     return this.factor.factorise()
   }
 

@@ -1,3 +1,4 @@
+import { eliminationPlan, placeOf, type EliminationPlan } from './eliminationPlan.ts'
 import type { EliminationOrder } from './minimumDegree.ts'
 
 /**
@@ -8,53 +9,38 @@ const leastShareOfRow = 1e-6
 
 /**
  * Sparse Cholesky factor P M P^T = L L^T of a positive definite matrix in a fixed elimination order. The
- * values of L stand where `order.rows` says: write the lower triangle of P M P^T into `values` (zero where
- * M has none), call `factorise`, then `solve` as often as wanted. Everything is allocated once.
+ * values of L stand where the plan says: write the lower triangle of P M P^T into `values` by `entryOf` (zero where
+ * M has none), call `factorise`, then `solve` as often as wanted. Everything is allocated once. On the diagonal
+ * the factor keeps the inverses of its entries.
  */
 export class SparseCholesky {
   readonly order: EliminationOrder
   readonly values: Float64Array
   /** 1 for the variables (by index, not position) that the last factorisation set aside. */
   readonly aside: Uint8Array
-  private readonly column: Float64Array
+  private readonly plan: EliminationPlan
   private readonly permuted: Float64Array
-  /** First column in the list of those whose next row to be used is this one; then the next in the list. */
-  private readonly listHead: Int32Array
-  private readonly listNext: Int32Array
-  private readonly cursor: Int32Array
+  /** Least pivot of each position that is not set aside. */
+  private readonly least: Float64Array
 
   constructor(order: EliminationOrder) {
     this.order = order
-    this.values = new Float64Array(order.rows.length)
+    this.plan = eliminationPlan(order)
+    this.values = new Float64Array(this.plan.length)
     this.aside = new Uint8Array(order.size)
-    this.column = new Float64Array(order.size)
     this.permuted = new Float64Array(order.size)
-    this.listHead = new Int32Array(order.size)
-    this.listNext = new Int32Array(order.size)
-    this.cursor = new Int32Array(order.size)
+    this.least = new Float64Array(order.size)
   }
 
   /** Index into `values` of the entry that couples variables a and b; the pair must be in the pattern. */
   entryOf(a: number, b: number): number {
-    const { positionOf, starts, rows } = this.order
-    const p = Math.min(positionOf[a], positionOf[b])
-    const row = Math.max(positionOf[a], positionOf[b])
-    let low = starts[p]
-    let high = starts[p + 1] - 1
-    while (low < high) {
-      const middle = (low + high) >> 1
-      if (rows[middle] < row) low = middle + 1
-      else high = middle
-    }
-    return low
+    return placeOf(this.plan, a, b)
   }
 
-  /**
-   * Overwrites the matrix in `values` by its factor, column by column, each gathering the earlier columns that
-   * reach it. Returns false (with `values` spoilt) when a pivot is not positive.
-   */
+  /** Overwrites the matrix in `values` by its factor. Returns false (with `values` spoilt) when a pivot is not positive. */
   factorise(): boolean {
-    return this.eliminate(-1)
+    this.least.fill(0)
+    return this.eliminateSparse(false) && this.eliminateFull(false)
   }
 
   /**
@@ -63,84 +49,130 @@ export class SparseCholesky {
    * definite by construction, with bounded pivots.
    */
   factoriseSettingAside(ratio: number): void {
-    this.eliminate(ratio)
+    this.findLeastPivots(ratio)
+    this.eliminateSparse(true)
+    this.eliminateFull(true)
   }
 
-  private eliminate(ratio: number): boolean {
-    const { order, values, column, listHead, listNext, cursor, aside } = this
-    const { size, starts, rows } = order
-    listHead.fill(-1)
+  /** The sparse columns, each taking its products from the later ones at once. */
+  private eliminateSparse(setAside: boolean): boolean {
+    const { values, aside, least } = this
+    const { sparse, targets, order } = this.plan
+    const { starts } = order
     aside.fill(0)
-    const largest = ratio < 0 ? undefined : this.largestPerRow()
-    for (let j = 0; j < size; j++) {
+    let next = 0
+    for (let j = 0; j < sparse; j++) {
       const start = starts[j]
       const end = starts[j + 1]
-      for (let q = start; q < end; q++) column[rows[q]] = values[q]
-      let k = listHead[j]
-      while (k >= 0) {
-        const following = listNext[k]
-        const from = cursor[k]
-        const stop = starts[k + 1]
-        const factor = values[from]
-        for (let q = from; q < stop; q++) column[rows[q]] -= factor * values[q]
-        this.enlist(k, from + 1, stop)
-        k = following
-      }
-      const pivot = column[j]
-      const least =
-        largest === undefined ? 0 : Math.max(ratio * Math.abs(values[start]), leastShareOfRow * largest[j])
-      if (!(pivot > least)) {
-        if (ratio < 0) return false
+      const pivot = values[start]
+      if (!(pivot > least[j])) {
+        if (!setAside) return false
         aside[order.order[j]] = 1
         values[start] = 1
         values.fill(0, start + 1, end)
+        next += ((end - start) * (end - start - 1)) / 2
         continue
       }
-      const root = Math.sqrt(pivot)
-      values[start] = root
-      for (let q = start + 1; q < end; q++) values[q] = column[rows[q]] / root
-      this.enlist(j, start + 1, end)
+      const inverse = 1 / Math.sqrt(pivot)
+      values[start] = inverse
+      for (let q = start + 1; q < end; q++) values[q] *= inverse
+      for (let a = start + 1; a < end; a++) {
+        const factor = values[a]
+        for (let b = a; b < end; b++) values[targets[next++]] -= factor * values[b]
+      }
     }
     return true
   }
 
-  /** Largest entry of each row by size: what is far below it is a zero that rounding has moved. */
-  private largestPerRow(): Float64Array {
-    const { order, values } = this
-    const largest = new Float64Array(order.size)
-    for (let j = 0; j < order.size; j++) {
-      for (let q = order.starts[j]; q < order.starts[j + 1]; q++) {
-        const size = Math.abs(values[q])
-        if (size > largest[j]) largest[j] = size
-        if (size > largest[order.rows[q]]) largest[order.rows[q]] = size
+  /** The packed triangle, row by row, so that both factors of every inner product are contiguous. */
+  private eliminateFull(setAside: boolean): boolean {
+    const { values, aside, least } = this
+    const { sparse, order } = this.plan
+    const base = order.starts[sparse]
+    const count = order.size - sparse
+    for (let i = 0, own = base; i < count; own += ++i) {
+      for (let j = 0, other = base; j < i; other += ++j) {
+        values[own + j] = aside[order.order[sparse + j]]
+          ? 0
+          : (values[own + j] - product(values, own, other, j)) * values[other + j]
+      }
+      const pivot = values[own + i] - product(values, own, own, i)
+      if (!(pivot > least[sparse + i])) {
+        if (!setAside) return false
+        aside[order.order[sparse + i]] = 1
+        values[own + i] = 1
+      } else {
+        values[own + i] = 1 / Math.sqrt(pivot)
       }
     }
-    return largest
+    return true
   }
 
-  private enlist(k: number, next: number, stop: number): void {
-    if (next >= stop) return
-    const row = this.order.rows[next]
-    this.cursor[k] = next
-    this.listNext[k] = this.listHead[row]
-    this.listHead[row] = k
+  /** By the diagonal, and by the largest entry of each row: what is far below it is a zero that rounding has moved. */
+  private findLeastPivots(ratio: number): void {
+    const { values, least } = this
+    const { sparse, order } = this.plan
+    const { size, starts, rows } = order
+    const largest = new Float64Array(size)
+    const compare = (row: number, column: number, at: number): void => {
+      const entry = Math.abs(values[at])
+      if (entry > largest[row]) largest[row] = entry
+      if (entry > largest[column]) largest[column] = entry
+      if (row === column) least[row] = ratio * entry
+    }
+    for (let j = 0; j < sparse; j++) for (let q = starts[j]; q < starts[j + 1]; q++) compare(rows[q], j, q)
+    let at = starts[sparse]
+    for (let i = sparse; i < size; i++) for (let j = sparse; j <= i; j++) compare(i, j, at++)
+    for (let p = 0; p < size; p++) least[p] = Math.max(least[p], leastShareOfRow * largest[p])
   }
 
   /** Solves M x = right; `x` may be `right` itself. */
   solve(right: Float64Array, x: Float64Array): void {
-    const { order, values, aside, permuted: y } = this
+    const { values, aside, permuted: y } = this
+    const { sparse, order } = this.plan
     const { size, order: variables, starts, rows } = order
     for (let p = 0; p < size; p++) y[p] = right[variables[p]]
-    for (let p = 0; p < size; p++) {
-      const value = y[p] / values[starts[p]]
+    for (let p = 0; p < sparse; p++) {
+      const start = starts[p]
+      const value = y[p] * values[start]
       y[p] = value
-      for (let q = starts[p] + 1; q < starts[p + 1]; q++) y[rows[q]] -= values[q] * value
+      for (let q = start + 1, end = starts[p + 1]; q < end; q++) y[rows[q]] -= values[q] * value
     }
-    for (let p = size - 1; p >= 0; p--) {
+    let at = starts[sparse]
+    for (let p = sparse; p < size; p++) {
+      let value = y[p]
+      for (let k = sparse; k < p; k++) value -= values[at++] * y[k]
+      y[p] = value * values[at++]
+    }
+    for (let p = size - 1; p >= sparse; p--) {
+      const value = aside[variables[p]] ? 0 : y[p] * values[at - 1]
+      y[p] = value
+      at -= p - sparse + 1
+      for (let k = sparse; k < p; k++) y[k] -= values[at + k - sparse] * value
+    }
+    for (let p = sparse - 1; p >= 0; p--) {
+      const start = starts[p]
       let value = aside[variables[p]] ? 0 : y[p]
-      for (let q = starts[p] + 1; q < starts[p + 1]; q++) value -= values[q] * y[rows[q]]
-      y[p] = value / values[starts[p]]
+      for (let q = start + 1, end = starts[p + 1]; q < end; q++) value -= values[q] * y[rows[q]]
+      y[p] = value * values[start]
     }
     for (let p = 0; p < size; p++) x[variables[p]] = y[p]
   }
+}
+
+/** Inner product of `length` values from a and from b on, summed in four strands. */
+function product(values: Float64Array, a: number, b: number, length: number): number {
+  let s0 = 0
+  let s1 = 0
+  let s2 = 0
+  let s3 = 0
+  let k = 0
+  for (; k + 3 < length; k += 4) {
+    s0 += values[a + k] * values[b + k]
+    s1 += values[a + k + 1] * values[b + k + 1]
+    s2 += values[a + k + 2] * values[b + k + 2]
+    s3 += values[a + k + 3] * values[b + k + 3]
+  }
+  for (; k < length; k++) s0 += values[a + k] * values[b + k]
+  return s0 + s1 + (s2 + s3)
 }

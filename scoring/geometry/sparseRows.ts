@@ -28,6 +28,7 @@ export function timesRow(rows: SparseRows, y: Float64Array, x: Float64Array): vo
   x.fill(0)
   for (let r = 0; r + 1 < starts.length; r++) {
     const factor = y[r]
+    if (factor === 0) continue
     for (let e = starts[r]; e < starts[r + 1]; e++) x[points[e]] += coefficients[e] * factor
   }
 }
@@ -57,20 +58,26 @@ export function distinctRows(rows: SparseRows): SparseRows {
 export function rowsBelow(rows: SparseRows, x: Float64Array, threshold: number): SparseRows {
   const values = new Float64Array(rowCount(rows))
   timesColumn(rows, x, values)
-  const keep = Int32Array.from(values.keys()).filter((r) => values[r] < threshold)
-  return selectedRows(rows, keep)
+  const keep = new Int32Array(values.length)
+  let kept = 0
+  for (let r = 0; r < values.length; r++) if (values[r] < threshold) keep[kept++] = r
+  return selectedRows(rows, keep.subarray(0, kept))
 }
 
-function selectedRows(rows: SparseRows, keep: Int32Array): SparseRows {
+/** The rows listed, in that order. */
+export function selectedRows(rows: SparseRows, keep: Int32Array): SparseRows {
   const { starts, points, coefficients } = rows
   const newStarts = new Int32Array(keep.length + 1)
   for (let k = 0; k < keep.length; k++)
     newStarts[k + 1] = newStarts[k] + starts[keep[k] + 1] - starts[keep[k]]
   const newPoints = new Int32Array(newStarts[keep.length])
   const newCoefficients = new Float64Array(newStarts[keep.length])
+  let to = 0
   for (let k = 0; k < keep.length; k++) {
-    newPoints.set(points.subarray(starts[keep[k]], starts[keep[k] + 1]), newStarts[k])
-    newCoefficients.set(coefficients.subarray(starts[keep[k]], starts[keep[k] + 1]), newStarts[k])
+    for (let e = starts[keep[k]]; e < starts[keep[k] + 1]; e++) {
+      newPoints[to] = points[e]
+      newCoefficients[to++] = coefficients[e]
+    }
   }
   return { starts: newStarts, points: newPoints, coefficients: newCoefficients }
 }
