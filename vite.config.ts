@@ -1,6 +1,7 @@
 import { defineConfig } from 'vitest/config'
 import react from '@vitejs/plugin-react'
 import tailwindcss from '@tailwindcss/vite'
+import LongestFirst from './tests/setup/longestFirst.ts'
 
 const api = process.env.API_URL ?? 'http://127.0.0.1:4280'
 
@@ -20,6 +21,7 @@ export default defineConfig({
       { extends: true, test: { name: 'browser', include: ['tests/browser/**/*.test.ts'] } },
     ],
     pool: 'forks',
+    sequence: { sequencer: LongestFirst },
     maxWorkers: 2,
     testTimeout: 60_000,
     hookTimeout: 120_000,

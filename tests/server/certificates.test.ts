@@ -4,6 +4,7 @@ import type { StreamEvent } from '../../shared/events.ts'
 import type { ShortlistDetail } from '../../shared/shortlists.ts'
 import { certificateSchema, engineVersion, scoringHash, checkRule } from '../../scoring/index.ts'
 import { createCampaign } from '../../server/services/campaigns.ts'
+import { builtVariant } from './support/builtWorker.ts'
 import { bundledEntries, loadEntries } from './support/bundledSample.ts'
 import { listening, OpenStream, type Listening } from './support/listening.ts'
 import { smallShortlist } from './support/smallShortlist.ts'
@@ -24,7 +25,10 @@ const keyAt = (place: number) => list.rows[place].candidateKey
 beforeAll(async () => {
   server = await openTestServer({
     environment: { WORKERS: '2' },
-    jobs: { nullSize: () => 20, backgroundWorker: new URL('./workers/failing.ts', import.meta.url) },
+    jobs: {
+      nullSize: () => 20,
+      backgroundWorker: builtVariant(new URL('./workers/failing.ts', import.meta.url)),
+    },
   })
   await loadEntries(server, bundledEntries('small', (id) => /^r3-0/.test(id)).slice(0, 20))
   list = await smallShortlist(server, server.campaignId, server.accounts.lead, { rule, size: 10 })

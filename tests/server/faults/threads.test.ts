@@ -4,6 +4,7 @@ import { join } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import type { JobOptions } from '../../../server/jobs/jobs.ts'
 import type { SearchDetail } from '../../../shared/searches.ts'
+import { builtVariant } from '../support/builtWorker.ts'
 import { bundledEntries, loadEntries } from '../support/bundledSample.ts'
 import { openTestServer, type Agent, type TestServer } from '../support/testServer.ts'
 
@@ -25,7 +26,7 @@ async function open(jobs: JobOptions): Promise<TestServer> {
   const opened = await openTestServer({
     environment: { WORKERS: '2' },
     jobs: {
-      backgroundWorker: new URL('../workers/failing.ts', import.meta.url),
+      backgroundWorker: builtVariant(new URL('../workers/failing.ts', import.meta.url)),
       nullSize: () => 20,
       ...jobs,
     },

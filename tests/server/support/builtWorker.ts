@@ -1,6 +1,7 @@
-import { existsSync, readdirSync, statSync } from 'node:fs'
-import { join } from 'node:path'
+import { existsSync, mkdirSync, readdirSync, readFileSync, statSync, writeFileSync } from 'node:fs'
+import { basename, join } from 'node:path'
 import { fileURLToPath, pathToFileURL } from 'node:url'
+import ts from 'typescript'
 
 const root = fileURLToPath(new URL('../../..', import.meta.url))
 
@@ -11,6 +12,19 @@ const root = fileURLToPath(new URL('../../..', import.meta.url))
 export const builtWorker: { readonly worker?: URL } = isCurrent()
   ? { worker: pathToFileURL(join(root, 'dist/node/server/worker.js')) }
   : {}
+
+/** A worker file of the tests that wraps the worker, beside the build where that is current. */
+export function builtVariant(source: URL): URL {
+  if (!builtWorker.worker) return source
+  const folder = join(root, 'dist/node/tests')
+  const file = join(folder, basename(fileURLToPath(source)).replace(/\.ts$/, `-${process.pid}.js`))
+  const { outputText } = ts.transpileModule(readFileSync(source, 'utf8'), {
+    compilerOptions: { module: ts.ModuleKind.ESNext, target: ts.ScriptTarget.ES2022 },
+  })
+  mkdirSync(folder, { recursive: true })
+  writeFileSync(file, outputText.replace(/'(\.\.\/)+((scoring|shared|server)\/[^']+)\.ts'/g, "'../$2.js'"))
+  return pathToFileURL(file)
+}
 
 function isCurrent(): boolean {
   const stamp = join(root, 'dist/.built')
