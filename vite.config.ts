@@ -7,7 +7,25 @@ const api = process.env.API_URL ?? 'http://127.0.0.1:4280'
 
 export default defineConfig({
   plugins: [react(), tailwindcss()],
-  build: { outDir: 'dist/client', emptyOutDir: true, sourcemap: false },
+  build: {
+    outDir: 'dist/client',
+    emptyOutDir: true,
+    sourcemap: false,
+    manifest: true,
+    rolldownOptions: {
+      output: {
+        advancedChunks: {
+          // Small modules that nearly every page needs compress better together than as fifty files.
+          groups: [
+            {
+              name: 'common',
+              test: /\/(shared\/(?!targets|explorations)[a-zA-Z]+|src\/(api|actions)\/[a-zA-Z]+|src\/components\/ui\/(Button|Caution|CertificateMark|Layout|Num|States|Table|Field|VerdictMark|SearchStateMark|SearchStanding|Progress|Outcome)|src\/lib\/(numbers|remembered|theme|filterWords|saveFile))\.tsx?$/,
+            },
+          ],
+        },
+      },
+    },
+  },
   server: { host: '127.0.0.1', port: 4281, proxy: { '/api': api } },
   test: {
     projects: [

@@ -1,6 +1,7 @@
 import { existsSync } from 'node:fs'
 import { fileURLToPath } from 'node:url'
 import express, { type Express } from 'express'
+import { precompressed } from './precompressed.ts'
 
 /** Where the built client lies, seen from source (server/http) and from the build (dist/node/server/http). */
 export function findClientFolder(): string | null {
@@ -22,7 +23,11 @@ export function serveClient(app: Express, folder: string | null): void {
     })
     return
   }
-  app.use('/assets', express.static(`${folder}assets`, { immutable: true, maxAge: '1y', fallthrough: false }))
+  app.use(
+    '/assets',
+    precompressed(`${folder}assets`),
+    express.static(`${folder}assets`, { immutable: true, maxAge: '1y', fallthrough: false }),
+  )
   app.use(express.static(folder, { index: false, maxAge: '1h' }))
   app.get('/{*path}', (_request, response) => {
     response.set('Cache-Control', 'no-cache').sendFile('index.html', { root: folder })

@@ -1,42 +1,35 @@
-import { DropdownMenu } from 'radix-ui'
+import { useId } from 'react'
 import { ChevronDown } from 'lucide-react'
-import { toast } from 'sonner'
 import { type Account } from '../../../shared/session.ts'
-import { explain } from '../../api/request.ts'
-import { useSignOut } from '../../api/session.ts'
 import { Button } from '../ui/Button.tsx'
+import { useSignOutAction } from './useSignOutAction.ts'
 
+/** Who is signed in, and the way out. A native popover: Escape and a click elsewhere close it. */
 export function AccountMenu({ account, version }: { account: Account; version: string }) {
-  const signOut = useSignOut()
+  const signOut = useSignOutAction()
+  const id = useId()
   return (
-    <DropdownMenu.Root>
-      <DropdownMenu.Trigger asChild>
-        <Button kind="quiet" aria-label={`Account: ${account.name}`}>
-          <span className="hidden max-w-40 truncate sm:inline">{account.name}</span>
-          <span className="sm:hidden" aria-hidden>
-            {account.name.slice(0, 1)}
-          </span>
-          <ChevronDown size={14} aria-hidden />
+    <>
+      <Button kind="quiet" aria-label={`Account: ${account.name}`} popoverTarget={id}>
+        <span className="hidden max-w-40 truncate sm:inline">{account.name}</span>
+        <span className="sm:hidden" aria-hidden>
+          {account.name.slice(0, 1)}
+        </span>
+        <ChevronDown size={14} aria-hidden />
+      </Button>
+      <div
+        id={id}
+        popover="auto"
+        className="fixed inset-auto top-11 right-[max(1rem,calc((100vw-1440px)/2+1rem))] min-w-56 rounded border border-edge bg-sheet p-1 text-ink shadow-lifted"
+      >
+        <p className="px-2 py-1 text-xs break-words text-soft">
+          {account.email}
+          {version && <span className="block">Tessellary {version}</span>}
+        </p>
+        <Button kind="quiet" className="w-full justify-start" onClick={signOut}>
+          Sign out
         </Button>
-      </DropdownMenu.Trigger>
-      <DropdownMenu.Portal>
-        <DropdownMenu.Content
-          align="end"
-          sideOffset={4}
-          className="z-40 min-w-56 rounded border border-edge bg-sheet p-1 shadow-lifted"
-        >
-          <DropdownMenu.Label className="px-2 py-1 text-xs text-soft">
-            {account.email}
-            {version && <div>Tessellary {version}</div>}
-          </DropdownMenu.Label>
-          <DropdownMenu.Item
-            className="cursor-pointer rounded px-2 py-1.5 data-[highlighted]:bg-action-wash"
-            onSelect={() => signOut.mutate(undefined, { onError: (error) => toast.error(explain(error)) })}
-          >
-            Sign out
-          </DropdownMenu.Item>
-        </DropdownMenu.Content>
-      </DropdownMenu.Portal>
-    </DropdownMenu.Root>
+      </div>
+    </>
   )
 }

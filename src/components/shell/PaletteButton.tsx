@@ -1,19 +1,13 @@
-import { lazy, useEffect } from 'react'
+import { lazy } from 'react'
 import { Search } from 'lucide-react'
 import { ariaShortcut, shortcutName } from '../../actions/keys.ts'
 import { Button } from '../ui/Button.tsx'
 
-const load = () => import('../palette/ActionPalette.tsx')
+export const preparePalette = () => import('../palette/ActionPalette.tsx')
 
-/** Fetched when the page has come to rest, or earlier when it is asked for. */
-export const ActionPalette = lazy(async () => ({ default: (await load()).ActionPalette }))
+export const ActionPalette = lazy(async () => ({ default: (await preparePalette()).ActionPalette }))
 
 export function PaletteButton({ onOpen }: { onOpen: () => void }) {
-  useEffect(() => {
-    if (!('requestIdleCallback' in window)) return
-    const idle = window.requestIdleCallback(() => void load(), { timeout: 10_000 })
-    return () => window.cancelIdleCallback(idle)
-  }, [])
   const chord = shortcutName('Mod+k')
   return (
     <Button

@@ -1,7 +1,6 @@
-import { Suspense, useEffect, useMemo, useRef, useState } from 'react'
+import { lazy, Suspense, useEffect, useMemo, useRef, useState } from 'react'
 import { Link, NavLink, Navigate, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom'
 import { CircleHelp } from 'lucide-react'
-import { toast, Toaster } from 'sonner'
 import { type CampaignSummary } from '../../../shared/campaigns.ts'
 import { type StreamState } from '../../api/eventStream.ts'
 import { useCampaigns } from '../../api/campaigns.ts'
@@ -9,17 +8,21 @@ import { useLiveEvents } from '../../api/liveEvents.ts'
 import { useSession } from '../../api/session.ts'
 import { dispatchShortcut } from '../../actions/keys.ts'
 import { recall, remember } from '../../lib/remembered.ts'
-import { useTheme } from '../../lib/theme.ts'
+import { useAtRest } from '../../lib/useAtRest.ts'
 import { IconButton } from '../ui/Button.tsx'
+import { prepareDialogs } from '../ui/Dialog.tsx'
 import { Failure, Loading } from '../ui/States.tsx'
 import { AccountMenu } from './AccountMenu.tsx'
 import { CurrentCampaign } from './currentCampaign.tsx'
 import { Mark } from './Mark.tsx'
-import { ActionPalette, PaletteButton } from './PaletteButton.tsx'
+import { ActionPalette, PaletteButton, preparePalette } from './PaletteButton.tsx'
+import { sayFault } from './sayFault.ts'
 import { ShortcutDialog } from './ShortcutDialog.tsx'
 import { ThemeButton } from './ThemeButton.tsx'
 import { useFocusOnNewPage } from './useFocusOnNewPage.ts'
 import { useShellActions } from './useShellActions.ts'
+
+const Notices = lazy(async () => ({ default: (await import('./Notices.tsx')).Notices }))
 
 /** Frame of every page behind sign-in: session, campaign in hand, event stream, head line. */
 export function Shell() {
@@ -75,15 +78,18 @@ function SignedIn({
   const { campaign, settled } = useCampaignInHand()
   const stream = useLiveEvents(campaign?.id ?? null, true)
   const [helpOpen, setHelpOpen] = useState(false)
-  const [theme] = useTheme()
   const [paletteOpen, setPaletteOpen] = useState(false)
   useShellActions({ campaign, onHelp: () => setHelpOpen(true), onPalette: () => setPaletteOpen(true) })
   useEffect(() => {
     const listen = (event: KeyboardEvent) =>
-      void dispatchShortcut(event, ({ unavailable }) => toast.error(unavailable))
+      void dispatchShortcut(event, ({ unavailable }) => sayFault(unavailable || ''))
     window.addEventListener('keydown', listen)
     return () => window.removeEventListener('keydown', listen)
   }, [])
+  const atRest = useAtRest()
+  useEffect(() => {
+    if (atRest) void Promise.all([preparePalette(), prepareDialogs()])
+  }, [atRest])
   useFocusOnNewPage()
 
   return (
@@ -127,22 +133,7 @@ function SignedIn({
         {paletteOpen && <ActionPalette open onOpenChange={setPaletteOpen} />}
       </Suspense>
       <ShortcutDialog open={helpOpen} onOpenChange={setHelpOpen} />
-      <Toaster
-        theme={theme}
-        position="top-center"
-        offset={{ top: 64 }}
-        toastOptions={{
-          style: {
-            background: 'var(--sheet)',
-            color: 'var(--ink)',
-            borderColor: 'var(--edge)',
-            borderRadius: 4,
-            fontFamily: 'inherit',
-            fontSize: 14,
-          },
-          actionButtonStyle: { background: 'var(--action)', color: 'var(--on-action)', borderRadius: 4 },
-        }}
-      />
+      <Suspense fallback={null}>{atRest && <Notices />}</Suspense>
     </CurrentCampaign>
   )
 }

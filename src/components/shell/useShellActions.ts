@@ -1,12 +1,10 @@
-import { toast } from 'sonner'
 import { type CampaignSummary } from '../../../shared/campaigns.ts'
 import { useShortcutsOn } from '../../actions/keys.ts'
 import { type Action } from '../../actions/registry.ts'
 import { useActions } from '../../actions/useActions.ts'
 import { campaignActions } from '../../actions/useCampaignActions.ts'
-import { explain } from '../../api/request.ts'
-import { useSignOut } from '../../api/session.ts'
 import { useTheme, type Theme } from '../../lib/theme.ts'
+import { useSignOutAction } from './useSignOutAction.ts'
 
 const themes: readonly [Theme, string][] = [
   ['light', 'Light theme'],
@@ -24,7 +22,7 @@ interface ShellActions {
 export function useShellActions({ campaign, onHelp, onPalette }: ShellActions): void {
   const [theme, setTheme] = useTheme()
   const [shortcutsOn, setShortcutsOn] = useShortcutsOn()
-  const signOut = useSignOut()
+  const signOut = useSignOutAction()
   const everywhere: Action[] = [
     {
       id: 'palette',
@@ -42,10 +40,7 @@ export function useShellActions({ campaign, onHelp, onPalette }: ShellActions): 
       ...{ id: `theme.${value}`, label, section: 'Everywhere', run: () => setTheme(value) },
       unavailable: theme === value && 'It is so now.',
     })),
-    {
-      ...{ id: 'sign-out', label: 'Sign out', section: 'Account' },
-      run: () => signOut.mutate(undefined, { onError: (error) => toast.error(explain(error)) }),
-    },
+    { id: 'sign-out', label: 'Sign out', section: 'Account', run: signOut },
   ]
   useActions([...Object.values(campaignActions(campaign)), ...everywhere])
 }

@@ -1,5 +1,5 @@
 import { useState, type FormEvent } from 'react'
-import { toast } from 'sonner'
+import { sayFault } from '../../components/shell/sayFault.ts'
 import { addMemberSchema, type CampaignDetail } from '../../../shared/campaigns.ts'
 import { may, roles, type Role } from '../../../shared/roles.ts'
 import { useAddMember, useChangeRole, useRemoveMember } from '../../api/campaigns.ts'
@@ -22,7 +22,7 @@ export function Members({ campaign }: { campaign: CampaignDetail }) {
   const changeRole = useChangeRole(campaign.id)
   const remove = useRemoveMember(campaign.id)
   const [leaving, setLeaving] = useState<CampaignDetail['members'][number] | null>(null)
-  const tell = { onError: (error: Error) => void toast.error(explain(error)) }
+  const tell = { onError: (error: Error) => sayFault(explain(error)) }
   return (
     <>
       <Table label="Members" className="max-w-[760px]">
