@@ -79,7 +79,12 @@ function SignedIn({
   const stream = useLiveEvents(campaign?.id ?? null, true)
   const [helpOpen, setHelpOpen] = useState(false)
   const [paletteOpen, setPaletteOpen] = useState(false)
-  useShellActions({ campaign, onHelp: () => setHelpOpen(true), onPalette: () => setPaletteOpen(true) })
+  useShellActions({
+    account: account.id,
+    campaign,
+    onHelp: () => setHelpOpen(true),
+    onPalette: () => setPaletteOpen(true),
+  })
   useEffect(() => {
     const listen = (event: KeyboardEvent) =>
       void dispatchShortcut(event, ({ unavailable }) => sayFault(unavailable || ''))

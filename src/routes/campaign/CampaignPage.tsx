@@ -11,6 +11,7 @@ import { SearchTable } from '../searches/SearchTable.tsx'
 import { ShortlistTable } from '../shortlists/ShortlistTable.tsx'
 import { TargetTable } from '../targets/TargetTable.tsx'
 import { EditCampaign } from './EditCampaign.tsx'
+import { FirstSteps } from './FirstSteps.tsx'
 import { Members } from './Members.tsx'
 
 export function CampaignPage() {
@@ -45,6 +46,7 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
         {campaign.description}
       </PageHead>
 
+      <FirstSteps campaign={campaign} />
       <Section
         margin
         title="To review"
