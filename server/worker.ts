@@ -1,6 +1,7 @@
 import { InputError } from '../scoring/index.ts'
 import { assembleShortlist } from './jobs/compute/assembleShortlist.ts'
 import { candidateGeometry, candidateSpectra } from './jobs/compute/candidateGeometry.ts'
+import { coneSlice } from './jobs/compute/coneSlice.ts'
 import { certifyCandidate } from './jobs/compute/certifyCandidate.ts'
 import { classPictures } from './jobs/compute/classPictures.ts'
 import { columnCells, drawSample, genericHeights } from './jobs/compute/exploreSample.ts'
@@ -38,6 +39,7 @@ const tasks: Tasks = {
   'class-count': classCount,
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,
+  'cone-slice': coneSlice,
   'certify-candidate': certifyCandidate,
   'class-pictures': classPictures,
   'invariants-of-each': invariantsOfEach,

@@ -1,4 +1,5 @@
 import type { CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
+import type { ConeSliceView } from '../../shared/coneSlices.ts'
 import type { ComputedGeometry } from './compute/candidateGeometry.ts'
 import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
 import type { PolytopeShape } from './compute/polytopeShape.ts'
@@ -46,6 +47,8 @@ export interface Jobs {
   /** Dossiers, by candidate key. */
   readonly geometries: RecentResults<ComputedGeometry>
   readonly spectra: RecentResults<Omit<CandidateSpectra, 'key'>>
+  /** By candidate key and directions. */
+  readonly slices: RecentResults<ConeSliceView>
   readonly pictures: RecentResults<ClassPicture>
   close(): Promise<void>
 }
@@ -149,6 +152,7 @@ export function openJobs(
     classCounts: new ClassCounts(all),
     geometries: new RecentResults(60),
     spectra: new RecentResults(200),
+    slices: new RecentResults(200),
     pictures: new RecentResults(500),
     close: async () => {
       closing.abort(new Error('The server is shutting down.'))

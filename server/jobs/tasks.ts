@@ -1,5 +1,6 @@
 import type { assembleShortlist } from './compute/assembleShortlist.ts'
 import type { candidateGeometry, candidateSpectra } from './compute/candidateGeometry.ts'
+import type { coneSlice } from './compute/coneSlice.ts'
 import type { certifyCandidate } from './compute/certifyCandidate.ts'
 import type { classPictures } from './compute/classPictures.ts'
 import type { columnCells, drawSample, genericHeights } from './compute/exploreSample.ts'
@@ -37,6 +38,7 @@ export interface Tasks {
   'class-count': typeof classCount
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra
+  'cone-slice': typeof coneSlice
   'certify-candidate': typeof certifyCandidate
   'class-pictures': typeof classPictures
   'invariants-of-each': typeof invariantsOfEach

@@ -10,6 +10,7 @@ import {
   classPictureSchema,
   classPicturesQuerySchema,
 } from '../../shared/candidates.ts'
+import { coneSliceQuerySchema, coneSliceSchema } from '../../shared/coneSlices.ts'
 import { candidateRelativesSchema, relativesQuerySchema } from '../../shared/relatives.ts'
 import { giveVerdictSchema, verdictSchema } from '../../shared/verdicts.ts'
 import type { ServerContext } from '../context.ts'
@@ -22,6 +23,7 @@ import {
   readCandidateGeometry,
   readCandidateSpectra,
   readClassPictures,
+  readConeSlice,
 } from '../services/geometry.ts'
 import { readRelatives } from '../services/relatives.ts'
 import { giveVerdict } from '../services/verdictGiving.ts'
@@ -45,6 +47,16 @@ export function candidateRoutes(app: Express, context: ServerContext): void {
     answer: candidateSpectraSchema,
     lasting: true,
     handle: ({ account, params }) => readCandidateSpectra(context, account.id, params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/candidates/:key/slice',
+    access: 'account',
+    query: coneSliceQuerySchema,
+    answer: coneSliceSchema,
+    lasting: true,
+    handle: ({ account, params, query }) => readConeSlice(context, account.id, params.key, query),
   })
 
   endpoint(app, context, {

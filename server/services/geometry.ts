@@ -1,5 +1,6 @@
 import type { CandidateAlignment } from '../../shared/candidateAlignment.ts'
 import type { CandidateGeometry, CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
+import type { ConeSliceQuery, ConeSliceView } from '../../shared/coneSlices.ts'
 import type { PolytopeDetail } from '../../shared/polytopes.ts'
 import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
 import type { ServerContext } from '../context.ts'
@@ -63,6 +64,19 @@ export async function readCandidateSpectra(
     jobs.unhurried.run('candidate-spectra', inputOf(candidate)),
   )
   return { key, ...spectra }
+}
+
+/** A plane cut through the cone, for everybody who may see the polytope. */
+export async function readConeSlice(
+  { source, jobs }: ServerContext,
+  accountId: string,
+  key: string,
+  directions: ConeSliceQuery,
+): Promise<ConeSliceView> {
+  const candidate = await readVisibleCandidate(source.manager, { accountId }, key)
+  return jobs.slices.get(`${key} ${directions.first} ${directions.second}`, () =>
+    jobs.unhurried.run('cone-slice', { ...inputOf(candidate), directions }),
+  )
 }
 
 /** How another candidate lies on one, for an account that may see the polytopes of both. */

@@ -6,6 +6,7 @@ import {
   candidateScoreSchema,
   candidateSpectraSchema,
 } from '../../shared/candidates.ts'
+import { coneSliceSchema, type ConeSliceQuery } from '../../shared/coneSlices.ts'
 import { request } from './request.ts'
 
 /** Geometry of a candidate: a function of its key alone, so it never goes stale. */
@@ -13,6 +14,15 @@ export const candidateQuery = (key: string) =>
   queryOptions({
     queryKey: ['candidate', key] as const,
     queryFn: ({ signal }) => request(`/candidates/${key}`, { schema: candidateGeometrySchema, signal }),
+    staleTime: Infinity,
+  })
+
+/** A plane cut through the cone at the reference point. */
+export const coneSliceQuery = (key: string, directions: ConeSliceQuery) =>
+  queryOptions({
+    queryKey: ['candidate', key, 'slice', directions] as const,
+    queryFn: ({ signal }) =>
+      request(`/candidates/${key}/slice`, { schema: coneSliceSchema, query: { ...directions }, signal }),
     staleTime: Infinity,
   })
 

@@ -17,7 +17,7 @@ import { dossierOf, storedCandidate, type StoredCandidate } from './candidateFix
 import { renderPage } from './renderPage.tsx'
 import { stubApi } from './stubApi.ts'
 
-const weights = [1, 1, 2, 4, 4]
+const weights = [6, 7, 7, 9, 13]
 const stored: StoredCandidate[] = []
 let a: CandidateGeometry
 let b: CandidateGeometry

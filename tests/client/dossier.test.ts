@@ -4,7 +4,8 @@ import { pointedAt, stepTo } from '../../src/components/geometry/pointing.ts'
 import { classesOfValues } from '../../src/components/geometry/faceColouring.ts'
 import { drawingsOf } from '../../src/components/geometry/faceDrawing.ts'
 import { distinctCurves } from '../../src/routes/candidate/CurveTable.tsx'
-import { containing } from '../../src/routes/candidate/IntersectionTable.tsx'
+import { lineInside } from '../../src/routes/candidate/ConeSlice.tsx'
+import { answering, matrixOf, readQuery } from '../../src/routes/candidate/intersectionQuery.ts'
 
 describe('sparse intersection numbers', () => {
   const rows: [number, number, number, number][] = [
@@ -13,11 +14,26 @@ describe('sparse intersection numbers', () => {
     [0, 3, 3, 1],
     [1, 2, 3, 2],
   ]
+  const found = (text: string) => answering(rows, readQuery(text))
   it('are found by divisors, repeats included', () => {
-    expect(containing(rows, [])).toHaveLength(4)
-    expect(containing(rows, [3, 3])).toEqual([[0, 3, 3, 1]])
-    expect(containing(rows, [3, 1])).toEqual([[1, 2, 3, 2]])
-    expect(containing(rows, [1, 1])).toEqual([])
+    expect(found('')).toHaveLength(4)
+    expect(found('3 3')).toEqual([[0, 3, 3, 1]])
+    expect(found('contains 3 and D1')).toEqual([[1, 2, 3, 2]])
+    expect(found('1, 1')).toEqual([])
+  })
+  it('are found by value, alone or with divisors', () => {
+    expect(found('= 3')).toEqual([[0, 0, 3, 3]])
+    expect(found('contains 0 and < 3')).toEqual([[0, 3, 3, 1]])
+    expect(found('= −2')).toEqual([])
+    expect(found('!= 9')).toHaveLength(3)
+    expect(readQuery('between 3').unread).toBe('between')
+  })
+  it('are a symmetric matrix per divisor', () => {
+    expect(matrixOf(rows, 3)).toEqual([
+      { j: 0, k: 0, value: 3 },
+      { j: 0, k: 3, value: 1 },
+      { j: 1, k: 2, value: 2 },
+    ])
   })
 })
 
@@ -141,5 +157,22 @@ describe('colours of points by a number', () => {
     expect(groups.length).toBeLessThanOrEqual(7)
     expect(groups.flat()).toEqual([...new Set(values)].sort((a, b) => a - b))
     expect(groups[0]).toEqual([0])
+  })
+})
+
+describe('a wall of a slice', () => {
+  it('is drawn from side to side of the picture, on its line', () => {
+    const slope = [3, -4] as const
+    const [ax, ay, bx, by] = lineInside(2, slope, 10)!
+    for (const [x, y] of [
+      [ax, ay],
+      [bx, by],
+    ] as const) {
+      expect(2 + slope[0] * x + slope[1] * y).toBeCloseTo(0, 10)
+      expect(Math.max(Math.abs(x), Math.abs(y))).toBeCloseTo(10, 10)
+    }
+    expect(lineInside(100, [1, 0], 10)).toBeNull()
+    const straight = lineInside(5, [1, 0], 10)!
+    expect(straight.map((n) => Math.round(n)).sort((a, b) => a - b)).toEqual([-10, -5, -5, 10])
   })
 })

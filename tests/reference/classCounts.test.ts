@@ -12,7 +12,12 @@ interface Counts {
 }
 
 describe('2-face classes of all polytopes with h11 = 1 to 4, by walking flips', () => {
-  const counts: Counts[] = Array.from({ length: 5 }, () => ({ all: 0, favourable: 0, orbits: 0, irregular: 0 }))
+  const counts: Counts[] = Array.from({ length: 5 }, () => ({
+    all: 0,
+    favourable: 0,
+    orbits: 0,
+    irregular: 0,
+  }))
 
   beforeAll(() => {
     for (const { vertices, h11, favourable } of bundledPolytopes('small')) {

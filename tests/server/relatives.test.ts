@@ -65,6 +65,7 @@ describe('relatives of a candidate', () => {
   let list: ShortlistDetail
   let onOne: string
   let onOther: string
+  let nearPair: [pair: string, triangles: number]
 
   beforeAll(async () => {
     list = await shortlistIn(lead, server.campaignId, 2)
@@ -143,7 +144,16 @@ describe('relatives of a candidate', () => {
       }
     }
     expect(distance.size).toBeGreaterThan(0)
-    const [[pair, apart]] = distance
+    ;[nearPair] = distance
+    const asked = new Set(relatives.map(({ key }) => key))
+    for (const [pair, triangles] of distance) {
+      const [key, other] = pair.split(' ')
+      if (asked.has(other)) expect(distance.get(`${other} ${key}`)).toBe(triangles)
+    }
+  })
+
+  it('are laid on each other by a symmetry of the polytope, and cut by a plane', async () => {
+    const [pair, apart] = nearPair
     const [one, two] = pair.split(' ')
     const { body } = await lead.get(`/api/candidates/${one}/alignment/${two}`).expect(200)
     const { image, triangles } = body.points as { image: number[]; triangles: number }
@@ -152,11 +162,12 @@ describe('relatives of a candidate', () => {
     const elsewhereOn = await lead.get(`/api/candidates/${one}/alignment/${onOne}`).expect(200)
     expect(elsewhereOn.body).toMatchObject({ key: one, other: onOne, points: null })
     await lead.get(`/api/candidates/${one}/alignment/0123456789abcdef0123456789abcdef`).expect(404)
-    const asked = new Set(relatives.map(({ key }) => key))
-    for (const [pair, triangles] of distance) {
-      const [key, other] = pair.split(' ')
-      if (asked.has(other)) expect(distance.get(`${other} ${key}`)).toBe(triangles)
-    }
+    const cut = await lead.get(`/api/candidates/${one}/slice?first=ray&second=wall-0`).expect(200)
+    expect(cut.body.walls.length).toBeGreaterThan(1)
+    expect(cut.body.directions[0]).toEqual([1, 0])
+    const parallel = await lead.get(`/api/candidates/${one}/slice?first=ray&second=ray`).expect(422)
+    expect(parallel.body.code).toBe('slice.parallel')
+    await lead.get(`/api/candidates/${one}/slice?first=somewhere&second=ray`).expect(422)
   })
 
   it('are asked for with a key that exists', async () => {

@@ -31,6 +31,7 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/candidates/:key', 'account'],
   ['GET /api/candidates/:key/spectra', 'account'],
   ['GET /api/candidates/:key/alignment/:other', 'account'],
+  ['GET /api/candidates/:key/slice', 'account'],
   ['GET /api/candidates/:key/certificates', 'account'],
   ['GET /api/candidates/:key/certificates/:certificate', 'account'],
   ['GET /api/campaigns', 'account'],

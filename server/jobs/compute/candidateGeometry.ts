@@ -24,7 +24,7 @@ export interface CandidateGeometryInput {
 export type ComputedGeometry = Omit<CandidateGeometry, 'key' | 'polytope'>
 
 /** The candidate that is stored under a key, on its canonical representative. */
-function storedCandidate({ key, vertices, heights }: CandidateGeometryInput): Candidate {
+export function storedCandidate({ key, vertices, heights }: CandidateGeometryInput): Candidate {
   const form = normalForm(polytopeFromPoints(vertices))
   const given = classFromHeights(form.polytope, heights)
   if (!given.fine) throw new InvariantError(`The stored heights of candidate ${key} are not fine.`)

@@ -39,7 +39,9 @@ export function classesOfValues(values: readonly number[], most = mostClasses): 
 }
 
 /** Points coloured by a number, from light to dark (on dark the other way), with the range of each colour. */
-export function colouringBy(name: string, values: readonly number[]): FaceColouring {
+export function colouringBy(name: string, exact: readonly number[]): FaceColouring {
+  // Values that differ by rounding only are one colour.
+  const values = exact.map((value) => Number(value.toPrecision(6)))
   const groups = classesOfValues(values)
   const place = new Map<number, number>()
   groups.forEach((group, at) => group.forEach((value) => place.set(value, at)))

@@ -12,9 +12,11 @@ import { AtlasSection } from './AtlasSection.tsx'
 import { CompareWith } from './CompareWith.tsx'
 import { CertificateSection } from './CertificateSection.tsx'
 import { ComponentSection } from './ComponentSection.tsx'
+import { ConeSection } from './ConeSection.tsx'
 import { CurveTable } from './CurveTable.tsx'
 import { DivisorTable } from './DivisorTable.tsx'
 import { FibrationSection } from './FibrationSection.tsx'
+import { IntersectionMatrix } from './IntersectionMatrix.tsx'
 import { IntersectionTable } from './IntersectionTable.tsx'
 import { Provenance } from './Provenance.tsx'
 import { RelativesSection } from './RelativesSection.tsx'
@@ -125,8 +127,14 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
       </Section>
       {geometry.components && <ComponentSection components={geometry.components} />}
       <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
-        <Section title="Intersection numbers" note="Non-zero κ with i ≤ j ≤ k.">
+        <Section
+          title="Intersection numbers"
+          note="Non-zero κ with i ≤ j ≤ k; below, the matrix of one divisor over j and k."
+        >
           <IntersectionTable intersections={geometry.intersections} points={polytope.points} />
+          <div className="mt-4">
+            <IntersectionMatrix geometry={geometry} />
+          </div>
         </Section>
         <Section
           title="Curves"
@@ -173,6 +181,7 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
           <SpectrumSection geometry={geometry} />
         </Section>
       </div>
+      {polytope.points > 5 && <ConeSection geometry={geometry} />}
     </HighlightContext>
   )
 }

@@ -4,23 +4,11 @@ import { useHighlightStore } from '../../components/geometry/highlight.ts'
 import { TextField } from '../../components/ui/Field.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { Empty } from '../../components/ui/States.tsx'
+import { answering, readQuery } from './intersectionQuery.ts'
 import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
 import { counted, formatNumber } from '../../lib/numbers.ts'
 
 type Intersection = CandidateGeometry['intersections'][number]
-
-/** Rows that contain all the wanted indices, each as often as it is wanted ("3 3" asks for κ_33k). */
-export function containing(rows: readonly Intersection[], wanted: readonly number[]): Intersection[] {
-  return rows.filter((row) => {
-    const left = [row[0], row[1], row[2]]
-    return wanted.every((index) => {
-      const at = left.indexOf(index)
-      if (at < 0) return false
-      left.splice(at, 1)
-      return true
-    })
-  })
-}
 
 const columns: Column<Intersection>[] = [
   ...(['i', 'j', 'k'] as const).map((name, at): Column<Intersection> => ({
@@ -41,18 +29,23 @@ export function IntersectionTable({
 }) {
   const store = useHighlightStore()
   const [text, setText] = useState('')
-  const wanted = useMemo(() => (text.match(/\d+/g) ?? []).map(Number), [text])
-  const rows = useMemo(() => containing(intersections, wanted), [intersections, wanted])
-  const tooLarge = wanted.find((index) => index >= points)
+  const query = useMemo(() => readQuery(text), [text])
+  const rows = useMemo(() => answering(intersections, query), [intersections, query])
+  const tooLarge = query.divisors.find((index) => index >= points)
   return (
     <div className="flex flex-col gap-2">
       <TextField
-        label="With the divisors"
-        className="max-w-64"
-        inputMode="numeric"
-        placeholder="for instance 3 3 or 0 4 7"
+        label="Find"
+        className="max-w-80 print:hidden"
+        placeholder="contains 12, or 3 3, or = -2"
         value={text}
-        error={tooLarge !== undefined ? `There is no D${tooLarge}; the last is D${points - 1}.` : null}
+        error={
+          tooLarge !== undefined
+            ? `There is no D${tooLarge}; the last is D${points - 1}.`
+            : query.unread !== null
+              ? `“${query.unread}” is neither a divisor nor a comparison such as = −2 or > 0.`
+              : null
+        }
         onChange={(event) => setText(event.target.value)}
       />
       <p role="status" className="text-xs text-soft">
@@ -61,7 +54,7 @@ export function IntersectionTable({
           : `${formatNumber(rows.length)} of ${formatNumber(intersections.length)} numbers`}
       </p>
       {rows.length === 0 ? (
-        <Empty title="All of these are zero." />
+        <Empty title={query.value ? 'No number other than 0 fits.' : 'All of these are zero.'} />
       ) : (
         <VirtualTable
           label="Intersection numbers"
