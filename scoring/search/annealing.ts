@@ -5,9 +5,10 @@ import { isAccepted } from './acceptance.ts'
 import { Cooling, type CoolingState } from './cooling.ts'
 import { codeOfHeights, heightsOfCode } from './heightsCode.ts'
 import { compareMerits, undefinedKind, type Merit } from './merit.ts'
-import type { Chain, Method, Proposal, Run } from './method.ts'
+import type { Chain, Judgement, Method, Proposal, Run } from './method.ts'
 import { MoveBook } from './moveBook.ts'
 import { exchangeCount, firstWorths, moves } from './moves.ts'
+import { hasFewNeighbours, Neighbourhoods, type NeighbourhoodsState } from './neighbourhoods.ts'
 import { PolytopeBook } from './polytopeBook.ts'
 import type { Start } from './givenStarts.ts'
 import { promisingStart, promisingStep } from './promising.ts'
@@ -22,6 +23,8 @@ const scouts = 6
  * valley that has not been left by then is better left by a fresh start.
  */
 const [leastIdle, idleShare] = [25, 0.2]
+/** The same share where neighbours are tried one by one. */
+const idleShareOfFew = 0.3
 
 /** Share of hops to another polytope at the beginning and at the end of a descent. */
 const [hopsFirst, hopsLast] = [0.3, 0.06]
@@ -35,6 +38,7 @@ interface AnnealingState {
   readonly cooling: CoolingState
   readonly moves: readonly number[]
   readonly book: string
+  readonly neighbourhoods: NeighbourhoodsState
   /** The best since the latest start, and the evaluations used when it was found. */
   readonly best: Merit
   readonly bestAt: number
@@ -52,14 +56,15 @@ interface AnnealingState {
  * polytopes where the scope has several. Candidates are compared in the full order of outcomes, so that a chain
  * finds its way from infeasible candidates to feasible ones. A run consists of one or more descents, each from a
  * fresh start with its share of the budget; an extension brings as many further ones. A descent that
- * has found nothing better for long begins anew on the same polytope.
+ * has found nothing better for long begins anew on the same polytope. On one polytope where classes have few
+ * neighbours, all neighbours of the best classes are tried instead of random ones (`Neighbourhoods`).
  */
 export const annealing: Method = {
   name: 'annealing',
-  version: 3,
+  version: 4,
   description:
     'Simulated annealing over heights: exchanges of one diagonal, noise on points, 2-faces or everywhere, ' +
-    'changes of the whole shape, hops between polytopes.',
+    'changes of the whole shape, hops between polytopes; where classes have few neighbours, all those of the best classes.',
   open: (run, state) => new AnnealingChain(run, state as unknown as AnnealingState | null),
 }
 
@@ -67,6 +72,7 @@ class AnnealingChain implements Chain {
   private readonly book: PolytopeBook
   private readonly cooling: Cooling
   private readonly moveBook: MoveBook
+  private readonly neighbourhoods: Neighbourhoods
   private descent: number
   private scouted: number
   private polytope = -1
@@ -82,6 +88,7 @@ class AnnealingChain implements Chain {
     this.book = new PolytopeBook(run, state?.book)
     this.cooling = new Cooling(state?.cooling)
     this.moveBook = new MoveBook(state?.moves ?? firstWorths)
+    this.neighbourhoods = new Neighbourhoods(run, 0, state?.neighbourhoods)
     this.descent = state?.descent ?? 0
     this.scouted = state?.scouted ?? 0
     this.best = state?.best ?? nothing
@@ -104,6 +111,7 @@ class AnnealingChain implements Chain {
       cooling: this.cooling.state(),
       moves: this.moveBook.state(),
       book: this.book.code(),
+      neighbourhoods: this.neighbourhoods.state(),
       best: this.best,
       bestAt: this.bestAt,
       place: place === undefined ? null : { polytope, heights: codeOfHeights(place.heights), ...merit },
@@ -119,14 +127,14 @@ class AnnealingChain implements Chain {
       return
     } else if (place === undefined || this.nextDescent() || book.isSpent(this.polytope)) {
       this.begin(() => book.draw())
-    } else if (this.isIdle()) {
+    } else if (this.isIdle(place)) {
       this.begin(() => this.polytope)
     } else if (this.scouted < Math.min(scouts, this.descentLength() / 20)) {
       this.scouted++
       this.hop(true)
     } else if (run.polytopeCount > 1 && run.stream.uniform() < this.hopShare()) {
       this.hop(false)
-    } else {
+    } else if (!this.tryNeighbour(place)) {
       this.move(place)
     }
   }
@@ -142,6 +150,7 @@ class AnnealingChain implements Chain {
     this.scouted = given === undefined ? 1 : scouts
     this.best = nothing
     this.bestAt = run.evaluations
+    this.neighbourhoods.beginAnew()
     const merit = this.judged(start.polytope, proposalOf(start.place))
     if (merit !== null) this.stand(start.polytope, start.place, merit)
   }
@@ -154,6 +163,18 @@ class AnnealingChain implements Chain {
     if (merit === null) return
     const accepted = onlyBetter ? compareMerits(merit, this.merit) < 0 : this.accepts(merit)
     if (accepted) this.stand(start.polytope, start.place, merit)
+  }
+
+  /** Judges the next neighbour of the best classes; false where they have too many, or all have been tried. */
+  private tryNeighbour(place: PlacedHeights): boolean {
+    const proposal = this.hasFewNeighbours(place) ? this.neighbourhoods.next() : undefined
+    if (proposal === undefined) return false
+    this.judged(this.polytope, proposal)
+    return true
+  }
+
+  private hasFewNeighbours(place: PlacedHeights): boolean {
+    return this.run.polytopeCount === 1 && hasFewNeighbours(place.class, this.descentLength())
   }
 
   private move(place: PlacedHeights): void {
@@ -190,6 +211,7 @@ class AnnealingChain implements Chain {
     const judgement = this.run.judge(polytope, proposal)
     if (judgement?.isNew) this.book.found(polytope)
     else this.book.stall(polytope)
+    this.remember(judgement, proposal)
     if (judgement !== null && compareMerits(judgement.merit, this.best) < 0) {
       this.best = judgement.merit
       this.bestAt = this.run.evaluations
@@ -197,9 +219,17 @@ class AnnealingChain implements Chain {
     return judgement?.merit ?? null
   }
 
-  private isIdle(): boolean {
+  /** Where neighbours are tried one by one, a class waits for its turn. */
+  private remember(judgement: Judgement | null, proposal: Proposal): void {
+    if (judgement === null || this.run.polytopeCount > 1) return
+    const { class: cls } = this.place ?? proposal
+    if (hasFewNeighbours(cls, this.descentLength())) this.neighbourhoods.enter(judgement, proposal)
+  }
+
+  private isIdle(place: PlacedHeights): boolean {
     const idle = this.run.evaluations - this.bestAt
-    return idle >= leastIdle && idle >= idleShare * this.descentLength()
+    const share = this.hasFewNeighbours(place) ? idleShareOfFew : idleShare
+    return idle >= leastIdle && idle >= share * this.descentLength()
   }
 
   private accepts(merit: Merit): boolean {

@@ -61,7 +61,7 @@ interface Arm {
  */
 export const auto: Method = {
   name: 'auto',
-  version: 4,
+  version: 5,
   description:
     'Enumerates when the scope has no more classes than the budget; else a portfolio of annealing, genetic search ' +
     'and tempering, on several polytopes after scouting, where the better half goes on after each round.',

@@ -55,9 +55,13 @@ function exchangeRows(cls: TwoFaceClass): number[] {
  * the place, come from the test of regularity.
  */
 function exchanged(place: PlacedHeights, stream: RandomStream): Proposal | undefined {
-  const rows = exchangeRows(place.class)
-  if (rows.length === 0) return undefined
-  const row = rows[stream.below(rows.length)]
+  const count = exchangeCount(place.class)
+  return count === 0 ? undefined : exchangeAt(place, stream.below(count))
+}
+
+/** The n-th of the exchanges of a place, 0 <= n < `exchangeCount`. */
+export function exchangeAt(place: PlacedHeights, n: number): Proposal | undefined {
+  const row = exchangeRows(place.class)[n]
   const { i, j } = circuits(place.class)
   const cls = flip(place.class, { i: i[row], j: j[row] })
   if (cls === undefined) return undefined
