@@ -1,4 +1,5 @@
 import { streamEventSchema, type StreamEvent } from '../../shared/events.ts'
+import { onReached, suspectLoss } from './connection.ts'
 
 export type StreamState = 'connecting' | 'live' | 'waiting' | 'closed'
 
@@ -19,7 +20,8 @@ export interface EventStreamOptions {
 }
 
 /**
- * The one event stream of this tab. A lost connection is opened again with growing waits; `closed` with
+ * The one event stream of this tab. A lost connection is opened again with growing waits, and at once
+ * when another request has reached the server; `closed` with
  * reason signed-out or role-lost ends it for good. Returns the function that closes it.
  */
 export function openEventStream({ url, onEvent, onState }: EventStreamOptions): () => void {
@@ -31,6 +33,7 @@ export function openEventStream({ url, onEvent, onState }: EventStreamOptions): 
   const close = () => {
     ended = true
     clearTimeout(timer)
+    stopListening()
     source?.close()
     onState('closed')
   }
@@ -39,6 +42,7 @@ export function openEventStream({ url, onEvent, onState }: EventStreamOptions): 
     source?.close()
     if (ended) return
     onState('waiting')
+    suspectLoss()
     clearTimeout(timer)
     timer = setTimeout(connect, reconnectDelay(attempt++, Math.random()))
   }
@@ -63,6 +67,11 @@ export function openEventStream({ url, onEvent, onState }: EventStreamOptions): 
     for (const kind of kinds) source.addEventListener(kind, receive)
   }
 
+  const stopListening = onReached(() => {
+    clearTimeout(timer)
+    source?.close()
+    connect()
+  })
   connect()
   return close
 }

@@ -1,5 +1,6 @@
 import { type z } from 'zod'
 import { problemSchema, type Problem } from '../../shared/problems.ts'
+import { noteLost, noteReached } from './connection.ts'
 
 /** The server said no: a problem document with a stable code, or a plain failure given the same shape. */
 export class ApiError extends Error {
@@ -57,11 +58,14 @@ export function apiUrl(path: string, query: RequestOptions<z.ZodType>['query'] =
   return `/api${path}${text ? `?${text}` : ''}`
 }
 
+/** A gateway answers for a server that is away. */
+const isGatewayAlone = ({ status }: Response) => status === 502 || status === 504
+
 async function problemOf(response: Response): Promise<Problem> {
   const body: unknown = await response.json().catch(() => null)
   const parsed = problemSchema.safeParse(body)
   if (parsed.success) return parsed.data
-  const unreachable = response.status === 502 || response.status === 504
+  const unreachable = isGatewayAlone(response)
   return {
     type: 'about:blank',
     title: response.statusText || `Status ${response.status}`,
@@ -98,8 +102,11 @@ export async function request<Schema extends z.ZodType>(
     })
   } catch (error) {
     if (signal?.aborted) throw error
+    noteLost()
     throw new ConnectionError()
   }
+  if (isGatewayAlone(response)) noteLost()
+  else noteReached()
   if (!response.ok) throw new ApiError(await problemOf(response))
   if (!schema) return
   const answer: unknown = await response.json().catch(() => undefined)

@@ -1,6 +1,7 @@
 // @vitest-environment happy-dom
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { type StreamEvent } from '../../shared/events.ts'
+import { noteReached } from '../../src/api/connection.ts'
 import { openEventStream, reconnectDelay, type StreamState } from '../../src/api/eventStream.ts'
 
 class FakeSource extends EventTarget {
@@ -22,21 +23,35 @@ class FakeSource extends EventTarget {
 
 let events: StreamEvent[]
 let states: StreamState[]
+/** Whether the server is out of reach for requests as well. */
+let away = true
 const last = () => FakeSource.made.at(-1) as FakeSource
 
 beforeEach(() => {
   vi.useFakeTimers()
   vi.stubGlobal('EventSource', FakeSource)
+  vi.stubGlobal('fetch', () =>
+    away ? Promise.reject(new TypeError('away')) : Promise.resolve(new Response()),
+  )
+  away = true
   FakeSource.made = []
   events = []
   states = []
 })
 afterEach(() => {
+  close()
+  noteReached()
   vi.useRealTimers()
   vi.unstubAllGlobals()
 })
-const open = () =>
-  openEventStream({ url: '/api/events', onEvent: (e) => events.push(e), onState: (s) => states.push(s) })
+let close = () => {}
+const open = () => {
+  close = openEventStream({
+    url: '/api/events',
+    onEvent: (e) => events.push(e),
+    onState: (s) => states.push(s),
+  })
+}
 
 describe('the event stream', () => {
   it('hands on events of the agreed form and drops others', () => {
@@ -60,6 +75,24 @@ describe('the event stream', () => {
     expect(FakeSource.made).toHaveLength(3)
     last().onopen?.()
     expect(states.at(-1)).toBe('live')
+  })
+
+  it('connects again at once when another request has reached the server', async () => {
+    open()
+    for (let i = 0; i < 8; i++) {
+      last().onerror?.()
+      await vi.advanceTimersByTimeAsync(40_000)
+    }
+    last().onerror?.()
+    await vi.advanceTimersByTimeAsync(10)
+    const made = FakeSource.made.length
+    noteReached()
+    expect(FakeSource.made).toHaveLength(made + 1)
+    // A stream that is refused while the server is there keeps its growing waits.
+    away = false
+    last().onerror?.()
+    await vi.advanceTimersByTimeAsync(10)
+    expect(FakeSource.made).toHaveLength(made + 1)
   })
 
   it('ends for good when the session or the role is gone', () => {

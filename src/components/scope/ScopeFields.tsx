@@ -1,4 +1,4 @@
-import { useState } from 'react'
+import { useEffect, useState } from 'react'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { X } from 'lucide-react'
 import { maximumScope, type PolytopeFilter, type Scope } from '../../../shared/polytopes.ts'
@@ -9,6 +9,7 @@ import { counted, formatNumber } from '../../lib/numbers.ts'
 import { changedFilter } from '../../lib/libraryAddress.ts'
 import { CollectionSelect } from '../collection/CollectionSelect.tsx'
 import { FilterFields } from '../filter/FilterFields.tsx'
+import { LibraryLoading, useLibraryLoading } from '../library/LibraryLoading.tsx'
 import { IconButton } from '../ui/Button.tsx'
 import { TextField } from '../ui/Field.tsx'
 
@@ -103,7 +104,7 @@ export function ScopeSummary({ campaign, scope }: { campaign: string; scope: Sco
   }
   if (!summary.data) return <p className="text-soft">Counting…</p>
   const { count, h11Min, h11Max, pointsMax } = summary.data
-  if (count === 0) return <p className="text-rejected">No polytope matches; widen the filter.</p>
+  if (count === 0) return <NothingMatches campaign={campaign} again={summary.refetch} />
   return (
     <p role="status" className={count > maximumScope ? 'text-rejected' : ''}>
       <strong className="font-medium">{counted(count, 'polytope')}</strong>
@@ -113,6 +114,22 @@ export function ScopeSummary({ campaign, scope }: { campaign: string; scope: Sco
       {pointsMax !== null && <>, up to {counted(pointsMax, 'point')}</>}
       {count > maximumScope && `; a scope holds at most ${formatNumber(maximumScope)}`}
     </p>
+  )
+}
+
+/** While the bundled library is being loaded, what matches may still come: it is counted again as polytopes arrive. */
+function NothingMatches({ campaign, again }: { campaign: string; again: () => unknown }) {
+  const loading = useLibraryLoading(campaign)
+  const loaded = loading?.loaded
+  useEffect(() => {
+    if (loaded !== undefined) again()
+  }, [loaded, again])
+  if (!loading) return <p className="text-rejected">No polytope matches; widen the filter.</p>
+  return (
+    <>
+      <p className="text-soft">None of those loaded so far matches.</p>
+      <LibraryLoading loading={loading} />
+    </>
   )
 }
 

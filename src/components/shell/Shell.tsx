@@ -2,7 +2,6 @@ import { lazy, Suspense, useEffect, useMemo, useRef, useState } from 'react'
 import { Link, NavLink, Navigate, Outlet, useLocation, useParams, useSearchParams } from 'react-router-dom'
 import { CircleHelp } from 'lucide-react'
 import { type CampaignSummary } from '../../../shared/campaigns.ts'
-import { type StreamState } from '../../api/eventStream.ts'
 import { useCampaigns } from '../../api/campaigns.ts'
 import { useLiveEvents } from '../../api/liveEvents.ts'
 import { useSession } from '../../api/session.ts'
@@ -13,6 +12,7 @@ import { IconButton } from '../ui/Button.tsx'
 import { prepareDialogs } from '../ui/Dialog.tsx'
 import { Failure, Loading } from '../ui/States.tsx'
 import { AccountMenu } from './AccountMenu.tsx'
+import { ConnectionLine } from './ConnectionLine.tsx'
 import { CurrentCampaign } from './currentCampaign.tsx'
 import { Mark } from './Mark.tsx'
 import { ActionPalette, PaletteButton, preparePalette } from './PaletteButton.tsx'
@@ -114,7 +114,6 @@ function SignedIn({
           </Link>
           <MainNavigation campaign={campaign} />
           <div className="ml-auto flex items-center">
-            <StreamNote state={stream} quiet={campaign === null} />
             <PaletteButton onOpen={() => setPaletteOpen(true)} />
             <ThemeButton />
             <IconButton label="Shortcuts" onClick={() => setHelpOpen(true)}>
@@ -127,16 +126,17 @@ function SignedIn({
       </header>
       <main id="content" tabIndex={-1} className="mx-auto max-w-[1440px] px-4 pb-16 outline-none">
         {settled ? (
-          <Suspense fallback={<Loading what="the page" />}>
+          <Suspense fallback={<Loading what="the page" shape="page" />}>
             <Outlet />
           </Suspense>
         ) : (
-          <Loading what="your campaigns" />
+          <Loading what="your campaigns" shape="page" />
         )}
       </main>
       <Suspense fallback={null}>
         {paletteOpen && <ActionPalette open onOpenChange={setPaletteOpen} />}
       </Suspense>
+      <ConnectionLine stream={campaign === null ? null : stream} />
       <ShortcutDialog open={helpOpen} onOpenChange={setHelpOpen} />
       <Suspense fallback={null}>{atRest && <Notices />}</Suspense>
     </CurrentCampaign>
@@ -185,20 +185,5 @@ function MainNavigation({ campaign }: { campaign: CampaignSummary | null }) {
         </NavLink>
       ))}
     </nav>
-  )
-}
-
-const notes: Partial<Record<StreamState, string>> = {
-  waiting: 'Connection lost; trying again',
-  closed: 'Live updates ended',
-}
-
-/** Says only when live updates are not arriving. */
-function StreamNote({ state, quiet }: { state: StreamState; quiet: boolean }) {
-  const note = quiet ? undefined : notes[state]
-  return (
-    <span role="status" className="text-xs text-rejected">
-      {note}
-    </span>
   )
 }

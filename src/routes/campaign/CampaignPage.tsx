@@ -18,7 +18,7 @@ export function CampaignPage() {
   const { campaignId = '' } = useParams()
   const campaign = useCampaign(campaignId)
   return (
-    <QueryView query={campaign} what="the campaign">
+    <QueryView query={campaign} what="the campaign" shape="page">
       {(detail) => <Campaign campaign={detail} />}
     </QueryView>
   )

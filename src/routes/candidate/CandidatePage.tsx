@@ -38,7 +38,7 @@ export function CandidatePage() {
   const appearance =
     appearances.find(({ shortlistId }) => shortlistId === search.get('shortlist')) ?? appearances[0]
   return (
-    <QueryView query={geometry} what="the candidate">
+    <QueryView query={geometry} what="the candidate" shape="page">
       {(detail) => (
         <>
           <PageHead

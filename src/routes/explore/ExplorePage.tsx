@@ -1,8 +1,10 @@
-import { useCallback, useMemo } from 'react'
+import { useCallback, useEffect, useMemo } from 'react'
 import { useNavigate, useParams, useSearchParams } from 'react-router-dom'
 import { Download, Square } from 'lucide-react'
 import { explorationMinutes } from '../../../shared/explorations.ts'
 import { explorationTableUrl } from '../../api/explorations.ts'
+import { ApiError } from '../../api/request.ts'
+import { LibraryLoading, useLibraryLoading } from '../../components/library/LibraryLoading.tsx'
 import { describeScope } from '../../components/scope/scopeAddress.ts'
 import { isEmptyScope } from '../../components/scope/ScopeFields.tsx'
 import { ActionButton } from '../../actions/ActionButton.tsx'
@@ -150,6 +152,19 @@ function Answer({
   state: ExplorationState
 }) {
   const { exploration, rows, outdated, error, again, stop } = state
+  const nothingYet = error instanceof ApiError && error.code === 'scope-empty'
+  const loading = useLibraryLoading(campaign, nothingYet)
+  const loaded = loading?.loaded
+  useEffect(() => {
+    if (loaded !== undefined) again()
+  }, [loaded, again])
+  if (nothingYet && loading)
+    return (
+      <Empty title="None of the polytopes loaded so far matches.">
+        <LibraryLoading loading={loading} />
+        <p className="mt-2">The columns are computed by themselves when one arrives.</p>
+      </Empty>
+    )
   if (error !== null && error !== undefined)
     return <Failure title="The columns could not be computed." error={error} retry={again} />
   if (!exploration) {

@@ -1,5 +1,5 @@
-import { Progress } from '../../components/ui/Progress.tsx'
-import { counted, formatNumber } from '../../lib/numbers.ts'
+import { LibraryLoading } from '../../components/library/LibraryLoading.tsx'
+import { counted } from '../../lib/numbers.ts'
 
 /** What the server still computes of the library, while it does. */
 export function LibraryProgress({
@@ -12,12 +12,8 @@ export function LibraryProgress({
   return (
     <>
       {loading && (
-        <div className="mb-4 max-w-md">
-          <p className="mb-1 text-soft">
-            The bundled library is still being loaded: {formatNumber(loading.loaded)} of{' '}
-            {formatNumber(loading.total)}.
-          </p>
-          <Progress value={loading.loaded} most={loading.total} label="Bundled polytopes loaded" />
+        <div className="mb-4">
+          <LibraryLoading loading={loading} />
         </div>
       )}
       {undescribed > 0 && (

@@ -20,7 +20,7 @@ export function PolytopePage() {
   const campaign = useCurrentCampaign()
   const polytope = useQuery(polytopeQuery(polytopeKey, campaign?.id))
   return (
-    <QueryView query={polytope} what="the polytope">
+    <QueryView query={polytope} what="the polytope" shape="page">
       {(detail) => <Polytope key={detail.key} polytope={detail} campaign={campaign?.id} />}
     </QueryView>
   )

@@ -26,7 +26,7 @@ export function SearchPage() {
   const { campaignId = '', searchId = '' } = useParams()
   const search = useSearch(campaignId, searchId)
   return (
-    <QueryView query={search} what="the search">
+    <QueryView query={search} what="the search" shape="page">
       {(detail) => <Search campaign={campaignId} search={detail} />}
     </QueryView>
   )

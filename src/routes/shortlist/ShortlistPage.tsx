@@ -26,7 +26,7 @@ export function ShortlistPage() {
   const { campaignId = '', shortlistId = '' } = useParams()
   const shortlist = useShortlist(campaignId, shortlistId)
   return (
-    <QueryView query={shortlist} what="the shortlist">
+    <QueryView query={shortlist} what="the shortlist" shape="page">
       {(detail) => <Shortlist campaign={campaignId} shortlist={detail} />}
     </QueryView>
   )

@@ -21,7 +21,7 @@ export function TargetPage() {
   const { campaignId = '', targetId = '' } = useParams()
   const target = useQuery(targetQuery(campaignId, targetId))
   return (
-    <QueryView query={target} what="the target">
+    <QueryView query={target} what="the target" shape="page">
       {(detail) => <Target key={detail.id} campaign={campaignId} target={detail} />}
     </QueryView>
   )
