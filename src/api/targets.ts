@@ -1,6 +1,6 @@
 import { queryOptions, useMutation, useQuery, useQueryClient } from '@tanstack/react-query'
 import { z } from 'zod'
-import { targetDetailSchema, targetSummarySchema } from '../../shared/targets.ts'
+import { targetDetailSchema, targetSummarySchema, targetUsesSchema } from '../../shared/targets.ts'
 import { request } from './request.ts'
 
 export const targetsQuery = (campaign: string) =>
@@ -15,6 +15,14 @@ export const targetQuery = (campaign: string, target: string) =>
     queryKey: ['targets', campaign, target] as const,
     queryFn: ({ signal }) =>
       request(`/campaigns/${campaign}/targets/${target}`, { schema: targetDetailSchema, signal }),
+  })
+
+/** What the target's versions were used for. */
+export const targetUsesQuery = (campaign: string, target: string) =>
+  queryOptions({
+    queryKey: ['targets', campaign, target, 'uses'] as const,
+    queryFn: ({ signal }) =>
+      request(`/campaigns/${campaign}/targets/${target}/uses`, { schema: targetUsesSchema, signal }),
   })
 
 export const useTargets = (campaign: string) => useQuery(targetsQuery(campaign))

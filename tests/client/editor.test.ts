@@ -5,8 +5,10 @@ import { checkRule, completions } from '../../scoring/index.ts'
 import { codeParts } from '../../src/components/editor/codeParts.ts'
 import { fittingOptions } from '../../src/components/editor/ruleLanguage.ts'
 import { diagnosticOf, withoutWordAtCursor } from '../../src/components/editor/ruleLint.ts'
+import { findEntries, type ReferenceFilter } from '../../src/components/editor/ReferenceList.tsx'
+import { RuleReports } from '../../src/components/editor/ruleReports.ts'
+import { textDifference } from '../../src/routes/target/textDifference.ts'
 import { lineDifferences } from '../../src/routes/target/lineDifferences.ts'
-import { essence } from '../../src/routes/target/usePreview.ts'
 
 const misspelt = 'require favorable\nscore log10(metric.divisor.top)\n'
 
@@ -38,14 +40,6 @@ describe('messages in the editor', () => {
   })
 })
 
-describe('what a preview depends on', () => {
-  it('is not comments or blank lines', () => {
-    expect(essence('# a\n\n score h11 # b\n')).toBe(essence('score h11'))
-    expect(essence('require favourable label "a # b"')).toContain('# b')
-    expect(essence('score h11')).not.toBe(essence('score h21'))
-  })
-})
-
 describe('line differences', () => {
   it('lead from one text to the other', () => {
     const text = fc
@@ -59,6 +53,64 @@ describe('line differences', () => {
         expect(without('removed').join('\n')).toBe(after)
       }),
     )
+  })
+})
+
+describe('text differences', () => {
+  it('mark the words that changed, and leave lines without a common word whole', () => {
+    const [changed, other] = textDifference(
+      'score log10(volume) + 1\nhit h11 > 3',
+      'score log10(volume) + 2\nreport euler',
+    )
+    expect(changed?.before).toEqual([
+      { text: 'score log10(volume) + ', changed: false },
+      { text: '1', changed: true },
+    ])
+    expect(changed?.after?.at(-1)).toEqual({ text: '2', changed: true })
+    expect(other?.before).toEqual([{ text: 'hit h11 > 3', changed: true }])
+  })
+
+  it('keep both texts', () => {
+    const line = fc.constantFrom('score a + b', 'score a - b', 'let a = 1', '', 'hit x')
+    const text = fc.array(line, { maxLength: 6 }).map((lines) => lines.join('\n'))
+    fc.assert(
+      fc.property(text, text, (before, after) => {
+        const rows = textDifference(before, after)
+        const side = (of: 'before' | 'after') =>
+          rows.flatMap((row) => row[of]?.map((piece) => piece.text).join('') ?? []).join('\n')
+        expect([side('before'), side('after')]).toEqual([before, after])
+      }),
+      { numRuns: 60 },
+    )
+  })
+})
+
+describe('reports on rules', () => {
+  it('skip what is outdated before its turn', async () => {
+    const reports = new RuleReports(null)
+    const told: string[] = []
+    await new Promise<void>((resolve) => {
+      for (const text of ['score 1', 'score 2', 'score 3'])
+        reports.ask(text, (report) => {
+          told.push(report.text)
+          resolve()
+        })
+    })
+    expect(told).toEqual(['score 3'])
+  })
+})
+
+describe('the reference', () => {
+  const ids = (filter: Partial<ReferenceFilter>) =>
+    findEntries({ text: '', type: '', cost: '', ...filter }).map(({ id }) => id)
+
+  it('is filtered by words, type and cost', () => {
+    expect(ids({ text: 'rigid', type: 'truth value' })).toContain('divisors.rigid')
+    expect(ids({ text: 'rigid', type: 'truth value' })).not.toContain('polytope.rigidDivisors')
+    expect(ids({ cost: 'free' })).toContain('h11')
+    expect(ids({ cost: 'free' })).not.toContain('metric.divisor.top')
+    expect(ids({ type: 'set' })).toEqual(expect.arrayContaining(['divisors', 'divisors.neighbours']))
+    expect(ids({}).length).toBeGreaterThan(ids({ cost: 'dear' }).length)
   })
 })
 

@@ -1,9 +1,11 @@
-import { useMemo, useState } from 'react'
+import { memo, useMemo, useState } from 'react'
 import { CornerDownLeft } from 'lucide-react'
-import { referenceEntries, type ReferenceKind } from '../../../scoring/index.ts'
+import { referenceEntries, type OwnName, type ReferenceKind } from '../../../scoring/index.ts'
 import { Formula } from '../formula/Formula.tsx'
 import { IconButton } from '../ui/Button.tsx'
-import { TextField } from '../ui/Field.tsx'
+import { Select, TextField } from '../ui/Field.tsx'
+import { counted } from '../../lib/numbers.ts'
+import { worthOf } from './worth.ts'
 import { Empty } from '../ui/States.tsx'
 import { Message } from './Message.tsx'
 
@@ -19,11 +21,41 @@ const groups: readonly [title: string, kinds: readonly ReferenceKind[]][] = [
 
 const entries = referenceEntries()
 
+const types = [
+  ['number', 'Numbers'],
+  ['integer', 'Integers'],
+  ['truth value', 'Truth values'],
+  ['element', 'Elements of a set'],
+  ['set', 'Sets'],
+] as const
+const costs = ['free', 'cheap', 'moderate', 'dear'] as const
+
+export interface ReferenceFilter {
+  readonly text: string
+  /** One of `types`, or '' for all. */
+  readonly type: string
+  /** The dearest that may be; '' for all, words of the language among them. */
+  readonly cost: string
+}
+
+function ofType({ kind, type }: ReferenceEntry, wanted: string): boolean {
+  const isSet = type.startsWith('a set')
+  if (wanted === 'set') return isSet || kind === 'set'
+  if (wanted === 'element') return type.startsWith('an element')
+  return !isSet && type.includes(wanted)
+}
+
 /** Entries in which every wanted word occurs; those where it starts the name come first. */
-export function findEntries(text: string): readonly ReferenceEntry[] {
+export function findEntries({ text, type, cost }: ReferenceFilter): readonly ReferenceEntry[] {
   const words = text.toLowerCase().split(/\s+/).filter(Boolean)
-  if (words.length === 0) return entries
-  const found = entries.filter((entry) => {
+  const most = costs.findIndex((one) => one === cost)
+  const fitting = entries.filter(
+    (entry) =>
+      (type === '' || ofType(entry, type)) &&
+      (most < 0 || (entry.observable && costs.indexOf(entry.observable.cost) <= most)),
+  )
+  if (words.length === 0) return fitting
+  const found = fitting.filter((entry) => {
     const all =
       `${entry.id} ${entry.form} ${entry.type} ${entry.description} ${entry.observable?.stage ?? ''}`.toLowerCase()
     return words.every((word) => all.includes(word))
@@ -32,23 +64,62 @@ export function findEntries(text: string): readonly ReferenceEntry[] {
   return [...found].sort((a, b) => rank(a) - rank(b))
 }
 
-/** Everything a rule can say, made from the registries of the language. */
-export function ReferenceList({ onInsert, open }: { onInsert?: (text: string) => void; open?: boolean }) {
+const noNames: readonly OwnName[] = []
+
+/** Everything a rule can say, made from the registries of the language, and the names that a rule gives itself. */
+export const ReferenceList = memo(function ReferenceList({
+  onInsert,
+  open,
+  names = noNames,
+}: {
+  onInsert?: (text: string) => void
+  open?: boolean
+  names?: readonly OwnName[]
+}) {
   const [text, setText] = useState('')
-  const found = useMemo(() => findEntries(text), [text])
+  const [type, setType] = useState('')
+  const [cost, setCost] = useState('')
+  const found = useMemo(() => findEntries({ text, type, cost }), [text, type, cost])
+  const word = text.trim().toLowerCase()
+  const own = names.filter(({ name, definition }) => `${name} ${definition}`.toLowerCase().includes(word))
   return (
     <div>
-      <TextField
-        label="Search the reference"
-        type="search"
-        value={text}
-        placeholder="volume, rigid, log10, …"
-        className="max-w-md"
-        onChange={(event) => setText(event.target.value)}
-      />
+      <div className="flex flex-wrap items-end gap-x-3 gap-y-2">
+        <TextField
+          label="Search the reference"
+          type="search"
+          value={text}
+          placeholder="volume, rigid, log10, …"
+          className="min-w-44 flex-1 basis-52"
+          onChange={(event) => setText(event.target.value)}
+        />
+        <Select
+          label="Type"
+          value={type}
+          onChange={(event) => setType(event.target.value)}
+          options={[['', 'Any type'], ...types]}
+        />
+        <Select
+          label="Cost at most"
+          value={cost}
+          onChange={(event) => setCost(event.target.value)}
+          options={[['', 'Any cost'], ...costs.map((one) => [one, one] as const)]}
+        />
+      </div>
       <p role="status" className="mt-1 text-xs text-soft">
         {found.length} of {entries.length} entries
+        {own.length > 0 && `, and ${counted(own.length, 'name')} of this rule`}
       </p>
+      {own.length > 0 && (
+        <section aria-label="Names of this rule" className="mt-4">
+          <h2 className="border-b pb-1 text-sm">Names of this rule</h2>
+          <ul>
+            {own.map((name) => (
+              <OwnEntry key={name.name} own={name} onInsert={onInsert} />
+            ))}
+          </ul>
+        </section>
+      )}
       {found.length === 0 && (
         <Empty title="Nothing in the language matches.">Try a word of the trade, or part of a name.</Empty>
       )}
@@ -68,6 +139,30 @@ export function ReferenceList({ onInsert, open }: { onInsert?: (text: string) =>
         )
       })}
     </div>
+  )
+})
+
+function OwnEntry({ own, onInsert }: { own: OwnName; onInsert?: (text: string) => void }) {
+  const { name, definition, type, unit, cost } = own
+  return (
+    <li className="flex items-start gap-1 border-b py-1">
+      <div className="min-w-0 flex-1 py-0.5 leading-5">
+        <code className="font-mono text-xs font-semibold">{name}</code>
+        <span className="ml-2 text-xs text-soft">
+          {type === null
+            ? 'its definition has an error'
+            : worthOf({ detail: type, unit: unit ?? undefined, cost: cost ?? undefined })}
+        </span>
+        <code className="block truncate font-mono text-xs text-soft" title={definition}>
+          {definition}
+        </code>
+      </div>
+      {onInsert && (
+        <IconButton label={`Insert ${name}`} onClick={() => onInsert(name)}>
+          <CornerDownLeft size={14} aria-hidden />
+        </IconButton>
+      )}
+    </li>
   )
 }
 
@@ -92,7 +187,15 @@ function Entry({
           <summary className="list-inside py-0.5 leading-5">
             <code className="font-mono text-xs font-semibold break-words">{entry.form}</code>
             {entry.of && <span className="ml-2 text-xs text-soft">of {entry.of}</span>}
-            {entry.type && <span className="ml-2 text-xs text-soft">{entry.type}</span>}
+            {entry.type && (
+              <span className="ml-2 text-xs text-soft">
+                {worthOf({
+                  detail: entry.type,
+                  unit: entry.observable?.unit,
+                  cost: entry.observable?.cost,
+                })}
+              </span>
+            )}
           </summary>
           {shown && <EntryBody entry={entry} />}
         </details>

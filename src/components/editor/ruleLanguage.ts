@@ -1,7 +1,16 @@
 import { HighlightStyle, LanguageSupport, LRLanguage, syntaxHighlighting } from '@codemirror/language'
 import { snippet, type Completion as EditorCompletion, type CompletionSource } from '@codemirror/autocomplete'
+import { type EditorView } from '@codemirror/view'
 import { tags } from '@lezer/highlight'
-import { completions, ruleHighlighting, ruleParser, type Completion } from '../../../scoring/index.ts'
+import {
+  completions,
+  ruleHighlighting,
+  ruleParser,
+  type Completion,
+  type OwnName,
+} from '../../../scoring/index.ts'
+import { namesIn } from './shownReport.ts'
+import { worthOf } from './worth.ts'
 
 /** The parser of the language with what each piece is coloured as. */
 export const colouredParser = ruleParser.configure({ props: [ruleHighlighting] })
@@ -41,13 +50,13 @@ const icons: Record<Completion['kind'], string> = {
 
 /** A completion as the editor wants it; text with a place for the cursor becomes a snippet with one stop. */
 export function editorCompletion(option: Completion): EditorCompletion {
-  const { label, kind, detail, info, insert, cursor } = option
+  const { label, kind, info, insert, cursor } = option
   const text = insert ?? label
   const stop =
     cursor !== undefined && cursor < text.length
       ? snippet(`${text.slice(0, cursor)}#{}${text.slice(cursor)}`)
       : undefined
-  return { label, type: icons[kind], detail, info, apply: stop ?? text }
+  return { label, type: icons[kind], detail: worthOf(option), info, apply: stop ?? text }
 }
 
 /**
@@ -69,9 +78,13 @@ export function fittingOptions(options: readonly Completion[], typed: string): r
  * Completion in a text that is a whole rule, or the end of one.
  * @param lead what stands before the text; with one, statements are not offered
  */
-export function completionSource(lead = ''): CompletionSource {
+export function completionSource(
+  lead = '',
+  namesOf: (view: Pick<EditorView, 'state'>) => readonly OwnName[] = () => [],
+): CompletionSource {
   return (context) => {
-    const result = completions(lead + context.state.doc.toString(), lead.length + context.pos)
+    const names = namesOf(context)
+    const result = completions(lead + context.state.doc.toString(), lead.length + context.pos, names)
     if (!result) return null
     const from = result.from - lead.length
     const typed = context.state.sliceDoc(from, context.pos)
@@ -90,6 +103,6 @@ export function completionSource(lead = ''): CompletionSource {
 export function ruleLanguage(): LanguageSupport {
   return new LanguageSupport(language, [
     syntaxHighlighting(highlighting),
-    language.data.of({ autocomplete: completionSource() }),
+    language.data.of({ autocomplete: completionSource('', namesIn) }),
   ])
 }

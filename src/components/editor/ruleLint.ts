@@ -1,6 +1,6 @@
 import { setDiagnostics, type Diagnostic } from '@codemirror/lint'
 import { type EditorView, ViewPlugin, type ViewUpdate } from '@codemirror/view'
-import { checkRule, type RuleIssue, type RuleSuggestion } from '../../../scoring/index.ts'
+import { type RuleIssue, type RuleSuggestion } from '../../../scoring/index.ts'
 import { codeParts } from './codeParts.ts'
 
 const firstDelay = 300
@@ -54,7 +54,7 @@ export function diagnosticOf(issue: RuleIssue, length: number): Diagnostic {
   }
 }
 
-/** Underlines what a checker finds, where it is, after a pause. */
+/** Underlines what a checker finds, where it is, after a pause: for texts of a line, which take no time to check. */
 export const lintBy = (issuesOf: (text: string) => readonly RuleIssue[]) =>
   ViewPlugin.fromClass(
     class {
@@ -95,6 +95,3 @@ export const lintBy = (issuesOf: (text: string) => readonly RuleIssue[]) =>
       }
     },
   )
-
-/** For whole rules, by the shared checker. */
-export const ruleLint = lintBy((text) => checkRule(text).issues)

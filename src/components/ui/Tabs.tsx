@@ -25,7 +25,7 @@ export function Tabs({
           <Primitive.Trigger
             key={item.value}
             value={item.value}
-            className="-mb-px min-h-8 border-b-2 border-transparent whitespace-nowrap text-soft hover:text-ink data-[state=active]:border-action data-[state=active]:font-medium data-[state=active]:text-ink"
+            className="-mb-px min-h-8 border-b-2 border-transparent whitespace-nowrap text-soft focus-visible:-outline-offset-2 hover:text-ink data-[state=active]:border-action data-[state=active]:font-medium data-[state=active]:text-ink"
           >
             {item.label}
           </Primitive.Trigger>

@@ -2,19 +2,26 @@ import { type Blocker } from 'react-router-dom'
 import { Button } from '../../components/ui/Button.tsx'
 import { Dialog } from '../../components/ui/Dialog.tsx'
 
-export function LeaveDialog({ blocker }: { blocker: Blocker }) {
+export function LeaveDialog({ blocker, onDrop }: { blocker: Blocker; onDrop: () => void }) {
   return (
     <Dialog
       open={blocker.state === 'blocked'}
       onOpenChange={(open) => !open && blocker.reset?.()}
       title="Leave without saving?"
-      description="The rule in the editor differs from the saved version. Leaving drops the changes."
+      description="The rule in the editor is not saved. A draft stays in this browser and is offered when you come back, unless you drop it."
     >
       <div className="flex flex-wrap gap-2">
         <Button kind="primary" autoFocus onClick={() => blocker.reset?.()}>
           Stay
         </Button>
-        <Button kind="danger" onClick={() => blocker.proceed?.()}>
+        <Button onClick={() => blocker.proceed?.()}>Leave, keep the draft</Button>
+        <Button
+          kind="danger"
+          onClick={() => {
+            onDrop()
+            blocker.proceed?.()
+          }}
+        >
           Leave and drop the changes
         </Button>
       </div>

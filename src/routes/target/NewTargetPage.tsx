@@ -1,8 +1,9 @@
-import { useMemo, useState } from 'react'
+import { useState } from 'react'
 import { flushSync } from 'react-dom'
 import { Link, useLocation, useNavigate, useParams } from 'react-router-dom'
+import { toast } from 'sonner'
 import { createTargetSchema } from '../../../shared/targets.ts'
-import { checkRule } from '../../../scoring/index.ts'
+import { type StarterTarget } from '../../../shared/starterTargets.ts'
 import { useActions } from '../../actions/useActions.ts'
 import { explain } from '../../api/request.ts'
 import { useCreateTarget } from '../../api/targets.ts'
@@ -10,7 +11,12 @@ import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { TextField } from '../../components/ui/Field.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
+import { useRuleReport, whyUnsound } from '../../components/editor/useRuleReport.ts'
+import { recall, remember } from '../../lib/remembered.ts'
+import { DraftOffers } from './DraftOffers.tsx'
 import { LeaveDialog } from './LeaveDialog.tsx'
+import { StarterChoice } from './StarterChoice.tsx'
+import { useDraft } from './useDraft.ts'
 import { useLeaveGuard } from './useLeaveGuard.ts'
 import { Workbench } from './Workbench.tsx'
 
@@ -34,10 +40,28 @@ export function NewTargetPage() {
   const barred = useBarred('targets.edit')
   const [name, setName] = useState('')
   const [text, setText] = useState(() => draftIn(location.state) ?? start)
+  const [starter, setStarter] = useState<StarterTarget | null>(null)
   const [fault, setFault] = useState<string | null>(null)
   const [saved, setSaved] = useState(false)
-  const sound = useMemo(() => checkRule(text).ok, [text])
-  const blocker = useLeaveGuard(!saved && !barred && (text !== start || name !== ''))
+  const checked = useRuleReport(text)
+  const begun = starter?.text ?? start
+  const changed = text !== begun || (name !== '' && name !== starter?.name)
+  const draft = useDraft(`new.${campaignId}`, text, begun, null)
+  const { setAside, forget } = draft
+  const blocker = useLeaveGuard(!saved && !barred && changed)
+  const put = (next: string, what: string) => {
+    const before = text
+    const own = before !== begun && before !== next
+    if (own) setAside(before)
+    setText(next)
+    if (own) toast(what, { action: { label: 'Undo', onClick: () => setText(before) } })
+  }
+  const choose = (chosen: StarterTarget) => {
+    put(chosen.text, `“${chosen.name}” is in the editor; your text is kept as a draft.`)
+    if (name === '' || name === starter?.name) setName(chosen.name)
+    setStarter(chosen)
+    remember(`scope.${campaignId}`, null)
+  }
 
   const save = () => {
     const parsed = createTargetSchema.safeParse({ name, text })
@@ -49,13 +73,17 @@ export function NewTargetPage() {
     create.mutate(parsed.data, {
       onSuccess: (target) => {
         flushSync(() => setSaved(true))
+        forget()
+        // Previews of the saved target go on where those of the new one were.
+        const scope = recall(`scope.${campaignId}`) ?? (starter && JSON.stringify(starter.scope))
+        remember(`scope.${target.id}`, scope)
         void navigate(`/campaigns/${campaignId}/targets/${target.id}`, { replace: true })
       },
       onError: (error) => setFault(explain(error)),
     })
   }
 
-  const unavailable = barred || (!sound && 'The rule has errors; mend them first.')
+  const unavailable = barred || whyUnsound(checked)
   useActions([
     {
       ...{ id: 'target.save', label: 'Save the target', section: 'Target' },
@@ -91,15 +119,31 @@ export function NewTargetPage() {
         <Button
           kind="primary"
           type="submit"
-          className="mt-5"
+          className="sm:mt-5"
           busy={create.isPending}
           unavailable={unavailable}
         >
           Save the target
         </Button>
       </form>
-      <Workbench campaign={campaignId} text={text} onText={setText} />
-      <LeaveDialog blocker={blocker} />
+      <StarterChoice chosen={starter} onChoose={choose} />
+      <DraftOffers
+        offers={draft.offers}
+        text={text}
+        onDrop={draft.drop}
+        onTake={(offer) => {
+          draft.take(offer)
+          put(offer.text, 'The draft is in the editor.')
+        }}
+      />
+      <Workbench
+        campaign={campaignId}
+        text={text}
+        onText={setText}
+        checked={checked}
+        proposed={starter?.scope ?? null}
+      />
+      <LeaveDialog blocker={blocker} onDrop={forget} />
     </>
   )
 }

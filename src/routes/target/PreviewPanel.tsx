@@ -1,4 +1,5 @@
-import { type ReactNode } from 'react'
+import { memo, type ReactNode } from 'react'
+import { type Places } from '../../../scoring/index.ts'
 import { type Preview } from '../../../shared/targets.ts'
 import { Histogram } from '../../components/charts/Histogram.tsx'
 import { Button } from '../../components/ui/Button.tsx'
@@ -12,19 +13,27 @@ import { Table, Td, Th } from '../../components/ui/Table.tsx'
 import { formatNumber, formatPercent } from '../../lib/numbers.ts'
 import { type PreviewState } from './usePreview.ts'
 
-/** The live answer: what the rule says of candidates nobody selected. */
-export function PreviewPanel({
-  campaign,
-  state,
-  sound,
-  hitOpen,
-}: {
+interface PreviewPanelProps {
   campaign: string
   state: PreviewState
   sound: boolean
   /** The rule does not say what a hit is. */
   hitOpen: boolean
-}) {
+  /** Where the places that reasons name stand in the text of the editor; null while they are not known. */
+  places: Places | null
+  /** Shows a place, `line:column`, in the editor. */
+  onPlace: (place: string) => void
+}
+
+/** The live answer: what the rule says of candidates nobody selected. Drawn anew only when the answer changes. */
+export const PreviewPanel = memo(function PreviewPanel({
+  campaign,
+  state,
+  sound,
+  hitOpen,
+  places,
+  onPlace,
+}: PreviewPanelProps) {
   const { preview, outdated, error, retry, starting } = state
   if (error) return <Failure title="The preview did not start." error={error} retry={retry} />
   if (!preview) {
@@ -76,14 +85,20 @@ export function PreviewPanel({
         )}
       </div>
       <div className={outdated ? 'border-l-2 border-dashed border-null pl-3' : ''}>
-        <Answer campaign={campaign} preview={preview} hitOpen={hitOpen} />
+        <Answer campaign={campaign} preview={preview} hitOpen={hitOpen} places={places} onPlace={onPlace} />
       </div>
       <Caution className="mt-4" />
     </div>
   )
-}
+})
 
-function Answer({ campaign, preview, hitOpen }: { campaign: string; preview: Preview; hitOpen: boolean }) {
+function Answer({
+  campaign,
+  preview,
+  hitOpen,
+  places,
+  onPlace,
+}: Pick<PreviewPanelProps, 'campaign' | 'hitOpen' | 'places' | 'onPlace'> & { preview: Preview }) {
   const { feasible, infeasible, evaluated } = preview
   return (
     <div className="flex flex-col gap-5">
@@ -144,7 +159,9 @@ function Answer({ campaign, preview, hitOpen }: { campaign: string; preview: Pre
             {preview.undefinedReasons.map(({ reason, count }) => (
               <li key={reason} className="flex gap-3 border-b py-1">
                 <span className="w-12 text-right tabular-nums">{formatNumber(count)}</span>
-                <span className="min-w-0 flex-1">{reason}</span>
+                <span className="min-w-0 flex-1">
+                  <Reason reason={reason} places={places} onPlace={onPlace} />
+                </span>
               </li>
             ))}
           </ul>
@@ -153,7 +170,7 @@ function Answer({ campaign, preview, hitOpen }: { campaign: string; preview: Pre
       {(
         [
           ['Best', preview.best],
-          ['Typical', preview.typical],
+          ['Around the median', preview.typical],
           ['Worst', preview.worst],
         ] as const
       ).map(
@@ -166,6 +183,31 @@ function Answer({ campaign, preview, hitOpen }: { campaign: string; preview: Pre
           ),
       )}
     </div>
+  )
+}
+
+/** A reason names a place of the rule's canonical text; people want it where they wrote it. */
+function Reason({
+  reason,
+  places,
+  onPlace,
+}: { reason: string } & Pick<PreviewPanelProps, 'places' | 'onPlace'>) {
+  const [, words = reason, line, column] = /^(.*) \(line (\d+), column (\d+)\)$/.exec(reason) ?? []
+  const place = places?.[`${line}:${column}`]
+  return (
+    <>
+      {words}
+      {place && (
+        <button
+          type="button"
+          className="ml-2 font-mono text-xs text-action hover:underline"
+          aria-label={`Go to line ${place.replace(':', ', column ')}`}
+          onClick={() => onPlace(place)}
+        >
+          {place}
+        </button>
+      )}
+    </>
   )
 }
 

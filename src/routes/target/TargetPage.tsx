@@ -1,9 +1,8 @@
-import { useMemo, useState } from 'react'
+import { useCallback, useState } from 'react'
 import { Link, useParams } from 'react-router-dom'
 import { useQuery } from '@tanstack/react-query'
 import { toast } from 'sonner'
 import { type TargetDetail } from '../../../shared/targets.ts'
-import { checkRule } from '../../../scoring/index.ts'
 import { ActionButton } from '../../actions/ActionButton.tsx'
 import { explain } from '../../api/request.ts'
 import { targetQuery, useSaveVersion } from '../../api/targets.ts'
@@ -11,8 +10,11 @@ import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { PageHead } from '../../components/ui/Layout.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { formatTime } from '../../lib/numbers.ts'
+import { useRuleReport, whyUnsound } from '../../components/editor/useRuleReport.ts'
+import { DraftOffers } from './DraftOffers.tsx'
 import { LeaveDialog } from './LeaveDialog.tsx'
 import { RenameTarget } from './RenameTarget.tsx'
+import { useDraft } from './useDraft.ts'
 import { useLeaveGuard } from './useLeaveGuard.ts'
 import { VersionList } from './VersionList.tsx'
 import { Workbench } from './Workbench.tsx'
@@ -33,9 +35,32 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
   const save = useSaveVersion(campaign, target.id)
   const barred = useBarred('targets.edit')
   const barredSearch = useBarred('searches.run')
-  const changed = text !== (latest?.text ?? '')
-  const sound = useMemo(() => checkRule(text).ok, [text])
+  const saved = latest?.text ?? ''
+  // Somebody else has saved a version: an editor in which nothing was changed follows.
+  const [base, setBase] = useState(saved)
+  if (saved !== base) {
+    setBase(saved)
+    if (text === base) setText(saved)
+  }
+  const changed = text !== saved
+  const checked = useRuleReport(text)
+  const draft = useDraft(target.id, text, saved, latest?.number ?? null)
+  const { setAside } = draft
   const blocker = useLeaveGuard(changed && !barred)
+  const put = useCallback(
+    (next: string, what: string) => {
+      const before = text
+      if (before !== saved) setAside(before)
+      setText(next)
+      toast(what, before === saved ? {} : { action: { label: 'Undo', onClick: () => setText(before) } })
+    },
+    [text, saved, setAside],
+  )
+  const take = useCallback(
+    ({ text: older, number }: TargetDetail['versions'][number]) =>
+      put(older, `The text of version ${number} is in the editor; saving makes it a new version.`),
+    [put],
+  )
   const saveNow = () =>
     save.mutate(text, {
       onSuccess: (saved) => toast(`Version ${saved.versions[0]?.number ?? ''} is saved.`),
@@ -62,7 +87,7 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
                 unavailable:
                   barred ||
                   (!changed && 'Nothing has changed since the last version.') ||
-                  (!sound && 'The rule has errors; mend them first.'),
+                  whyUnsound(checked),
               }}
             />
             <ActionButton
@@ -80,14 +105,26 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
         {latest && `Version ${latest.number}, saved ${formatTime(latest.createdAt)} by ${latest.author}`}
         {changed && <span className="text-found"> · changed since</span>}
       </PageHead>
+      {!barred && (
+        <DraftOffers
+          offers={draft.offers}
+          text={text}
+          onDrop={draft.drop}
+          onTake={(offer) => {
+            draft.take(offer)
+            put(offer.text, 'The draft is in the editor.')
+          }}
+        />
+      )}
       <Workbench
         campaign={campaign}
         target={target}
         text={text}
         onText={setText}
-        versions={<VersionList campaign={campaign} target={target} text={text} onTake={setText} />}
+        checked={checked}
+        versions={<VersionList campaign={campaign} target={target} text={text} onTake={take} />}
       />
-      <LeaveDialog blocker={blocker} />
+      <LeaveDialog blocker={blocker} onDrop={draft.forget} />
     </>
   )
 }

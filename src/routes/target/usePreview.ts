@@ -1,13 +1,14 @@
-import { useCallback, useEffect, useRef } from 'react'
+import { useCallback, useEffect, useMemo, useRef } from 'react'
 import { keepPreviousData, useQuery, useQueryClient } from '@tanstack/react-query'
 import { type Scope } from '../../../shared/polytopes.ts'
 import { type Preview } from '../../../shared/targets.ts'
-import { previewKey, previewQuery, startPreview } from '../../api/previews.ts'
+import { previewKey, previewQuery, startPreview, stopPreview } from '../../api/previews.ts'
 import { isEmptyScope } from '../../components/scope/ScopeFields.tsx'
 import { useDelayed } from '../../lib/useDelayed.ts'
 
 export interface PreviewAsk {
-  text: string
+  /** The rule's canonical text: comments and layout ask nothing anew. Null while the rule has an error. */
+  rule: string | null
   scope: Scope
   size: number
   seed: number
@@ -22,17 +23,8 @@ export interface PreviewState {
   retry: () => void
 }
 
-const typingPause = 500
-
-/** The rule without comments and blank lines: what a preview depends on, so that a comment asks nothing anew. */
-const withoutComment = (line: string) => line.replace(/^((?:[^#"]|"(?:[^"\\]|\\.)*")*)#.*$/, '$1')
-
-export const essence = (text: string) =>
-  text
-    .split('\n')
-    .map((line) => withoutComment(line).trim())
-    .filter(Boolean)
-    .join('\n')
+/** After the checker's own pause. */
+const typingPause = 350
 
 /** States of one preview only grow; an older state that arrives late is dropped. */
 export function newerState(known: Preview | undefined, next: Preview): Preview {
@@ -41,19 +33,21 @@ export function newerState(known: Preview | undefined, next: Preview): Preview {
 }
 
 /**
- * The live answer to a rule: asks after a pause in typing, drops what is outdated, and follows the states that
- * the event stream brings. `sound` is whether the checker has no error; an unsound rule keeps the last answer.
+ * The live answer to a rule: asks after a pause in typing, stops what is outdated on the server, and follows the states
+ * that the event stream brings. A rule with an error keeps the last answer.
  */
-export function usePreview(campaign: string, ask: PreviewAsk, sound: boolean): PreviewState {
+export function usePreview(campaign: string, { rule, scope, size, seed }: PreviewAsk): PreviewState {
   const client = useQueryClient()
-  const wanted = JSON.stringify({ ...ask, text: essence(ask.text) })
+  const sound = rule !== null
+  const wanted = sound ? JSON.stringify({ text: rule, scope, size, seed }) : ''
   const settled = useDelayed(wanted, typingPause)
-  const ready = sound && settled === wanted && !isEmptyScope(ask.scope)
+  const ready = sound && settled === wanted && !isEmptyScope(scope)
 
   const start = useQuery({
     queryKey: ['preview-start', campaign, settled],
     queryFn: async ({ signal }) => {
-      const first = await startPreview(campaign, JSON.parse(settled) as PreviewAsk, signal)
+      const body = JSON.parse(settled) as Parameters<typeof startPreview>[1]
+      const first = await startPreview(campaign, body, signal)
       client.setQueryData<Preview>(previewKey(first.id), (known) => newerState(known, first))
       return first.id
     },
@@ -63,22 +57,43 @@ export function usePreview(campaign: string, ask: PreviewAsk, sound: boolean): P
     gcTime: 0,
     retry: false,
   })
-  const { data } = useQuery(previewQuery(start.data ?? null))
+  const id = start.data ?? null
+  const { data } = useQuery(previewQuery(id))
+  const outdated = data !== undefined && (start.isPlaceholderData || settled !== wanted || !sound)
+
+  const stopped = useRef<string | null>(null)
+  const running = data?.state === 'running' ? id : null
+  useEffect(() => {
+    if (running === null || !outdated || stopped.current === running) return
+    stopped.current = running
+    // The next preview replaces it in any case.
+    stopPreview(campaign).catch(() => {})
+  }, [campaign, running, outdated])
+  const stillRunning = useRef(false)
+  useEffect(() => {
+    stillRunning.current = running !== null
+  }, [running])
+  useEffect(
+    () => () => {
+      if (stillRunning.current) stopPreview(campaign).catch(() => {})
+    },
+    [campaign],
+  )
+
   const { refetch } = start
-  // Of two requests sent in haste the server may have taken the older one last; then this one is asked once more.
-  const replaced = data?.state === 'replaced' && ready && !start.isPlaceholderData
+  // Stopped by a change that was taken back; or of two requests sent in haste the server took the older one last.
+  const replaced = data?.state === 'replaced' && ready && !start.isPlaceholderData && !start.isFetching
   const askedAgain = useRef('')
   useEffect(() => {
-    if (!replaced || askedAgain.current === settled) return
+    if (!replaced || (askedAgain.current === settled && stopped.current !== id)) return
     askedAgain.current = settled
+    stopped.current = null
     void refetch()
-  }, [replaced, settled, refetch])
+  }, [replaced, settled, id, refetch])
   const retry = useCallback(() => void refetch(), [refetch])
-  return {
-    preview: data ?? null,
-    outdated: data !== undefined && (start.isPlaceholderData || settled !== wanted || !sound),
-    starting: start.isFetching,
-    error: ready && start.isError ? start.error : null,
-    retry,
-  }
+  const error = ready && start.isError ? start.error : null
+  return useMemo(
+    () => ({ preview: data ?? null, outdated, starting: start.isFetching, error, retry }),
+    [data, outdated, start.isFetching, error, retry],
+  )
 }
