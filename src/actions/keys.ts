@@ -4,10 +4,12 @@ import { liveActions, shortcutsOf, type LiveAction } from './registry.ts'
 const typing = 'input:not([type=checkbox]):not([type=radio]), textarea, select, [contenteditable=true]'
 const inFront = '[role=dialog], [role=alertdialog], [role=menu]'
 
-/** The name a key press goes by in `shortcut`: 's' or 'Mod+s'; null for presses that are never shortcuts. */
+/** The name a key press goes by in `shortcut`: 's', 'Shift+ArrowUp' or 'Mod+s'; null for presses that are never shortcuts. */
 function pressed(event: KeyboardEvent): string | null {
   if (event.altKey || event.isComposing) return null
-  if (!event.ctrlKey && !event.metaKey) return event.key
+  if (!event.ctrlKey && !event.metaKey) {
+    return event.shiftKey && event.key.startsWith('Arrow') ? `Shift+${event.key}` : event.key
+  }
   return `Mod+${event.shiftKey ? 'Shift+' : ''}${event.key.length === 1 ? event.key.toLowerCase() : event.key}`
 }
 

@@ -21,6 +21,8 @@ export const shortlistQuery = (campaign: string, shortlist: string) =>
     queryKey: ['shortlist', shortlist] as const,
     queryFn: ({ signal }) =>
       request(`/campaigns/${campaign}/shortlists/${shortlist}`, { schema: shortlistDetailSchema, signal }),
+    // Comparing thousands of rows deeply at each verdict would be felt; rows that stay are the same objects anyway.
+    structuralSharing: false,
   })
 
 /** What a list of these searches would be. */

@@ -4,8 +4,11 @@ import {
   byOneReader,
   standingOf,
   verdictSchema,
+  verdictsGivenSchema,
+  type GiveVerdicts,
   type giveVerdictSchema,
   type Verdict,
+  type VerdictsGiven,
 } from '../../shared/verdicts.ts'
 import { type ShortlistDetail, type ShortlistRow } from '../../shared/shortlists.ts'
 import { request } from './request.ts'
@@ -45,9 +48,81 @@ export function tallyOf(rows: readonly Pick<ShortlistRow, 'verdict'>[]) {
   return tally
 }
 
-/** Answers and events come in no certain order; the numbers of verdicts count up. */
+/** Answers and events come in no certain order; the numbers of verdicts count up. One on its way gives place to any. */
 const newer = (known: Verdict | null, verdict: Verdict): Verdict =>
-  !known || Number(verdict.id) >= Number(known.id) ? verdict : known
+  !known || onItsWay(known) || Number(verdict.id) >= Number(known.id) ? verdict : known
+
+const onItsWay = ({ id }: Verdict) => id.startsWith('sent ')
+
+/** Verdicts that are shown before the server has answered. */
+export interface SentVerdicts {
+  /** Takes those back that are still shown, for some candidates. */
+  takeBack(candidateKeys: readonly string[]): void
+}
+
+let sent = 0
+
+/** Shows verdicts at once, in the lists of their target; the answer replaces them. */
+export function showSent(
+  client: QueryClient,
+  candidateKeys: readonly string[],
+  draft: (before: Verdict | null) => Omit<Verdict, 'id'>,
+): SentVerdicts {
+  sent += 1
+  const id = `sent ${sent}`
+  const before = new Map<string, Map<string, Verdict | null>>()
+  const keys = new Set(candidateKeys)
+  client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
+    if (!list) return list
+    const known = new Map<string, Verdict | null>()
+    const rows = list.rows.map((row) => {
+      if (!keys.has(row.candidateKey)) return row
+      const verdict = { ...draft(row.verdict), id }
+      if (verdict.targetId !== list.targetId) return row
+      known.set(row.candidateKey, row.verdict)
+      return { ...row, verdict }
+    })
+    before.set(list.id, known)
+    return known.size > 0 ? { ...list, rows, ...tallyOf(rows) } : list
+  })
+  return {
+    takeBack(refused) {
+      const gone = new Set(refused)
+      client.setQueriesData<ShortlistDetail>({ queryKey: ['shortlist'] }, (list) => {
+        const known = list && before.get(list.id)
+        if (!list || !known) return list
+        const rows = list.rows.map((row) =>
+          gone.has(row.candidateKey) && row.verdict?.id === id
+            ? { ...row, verdict: known.get(row.candidateKey) ?? null }
+            : row,
+        )
+        return { ...list, rows, ...tallyOf(rows) }
+      })
+    },
+  }
+}
+
+/** One word on candidates of a target; refusals of single candidates are in the answer. */
+export async function sendVerdicts(campaign: string, body: GiveVerdicts): Promise<VerdictsGiven> {
+  const { candidateKeys, ...word } = body
+  const [only] = candidateKeys
+  if (candidateKeys.length > 1 || only === undefined) {
+    return request(`/campaigns/${campaign}/verdicts`, { method: 'POST', body, schema: verdictsGivenSchema })
+  }
+  const verdict = await request(`/campaigns/${campaign}/candidates/${only}/verdicts`, {
+    method: 'POST',
+    body: word,
+    schema: verdictSchema,
+  })
+  return { given: [{ candidateKey: only, verdict }], refused: [] }
+}
+
+export const undoVerdicts = (campaign: string, ids: readonly string[]): Promise<VerdictsGiven> =>
+  request(`/campaigns/${campaign}/verdicts/undo`, {
+    method: 'POST',
+    body: { ids },
+    schema: verdictsGivenSchema,
+  })
 
 export function useGiveVerdict(campaign: string) {
   const client = useQueryClient()

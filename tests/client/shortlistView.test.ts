@@ -25,6 +25,9 @@ describe('the view of a shortlist', () => {
   it('is read from the address', () => {
     expect(view('verdict=rejected&hits=yes&sort=score&order=desc')).toEqual({
       verdict: 'rejected',
+      reviewer: 'all',
+      scatter: null,
+      show: 'table',
       certificate: 'all',
       hits: true,
       text: '',

@@ -1,4 +1,4 @@
-import { useEffect, useRef, type HTMLAttributes, type ReactNode } from 'react'
+import { memo, useEffect, useRef, type HTMLAttributes, type ReactNode } from 'react'
 import { useVirtualizer } from '@tanstack/react-virtual'
 import { Td, Th } from './Table.tsx'
 
@@ -29,6 +29,8 @@ interface VirtualTableProps<Row> {
 }
 
 const rowHeight = 32
+/** The head of the table, and a bar for scrolling sideways. */
+const headAndBar = 49
 
 /** A table of any length: only the rows in view are in the document, between two spacers. */
 export function VirtualTable<Row>({
@@ -48,7 +50,9 @@ export function VirtualTable<Row>({
     count,
     getScrollElement: () => scroller.current,
     estimateSize: () => rowHeight,
-    overscan: 12,
+    overscan: 6,
+    // Rows that come into view are drawn with the next frame, not inside the event.
+    useFlushSync: false,
     scrollPaddingStart: rowHeight,
     initialRect: { width: 800, height: 600 },
   })
@@ -68,7 +72,9 @@ export function VirtualTable<Row>({
       tabIndex={0}
       role="group"
       aria-label={`${label}, scrolls`}
-      className={`relative overflow-auto ${className}`}
+      // Its size is known and its ground opaque: scrolling lays out and paints nothing around it.
+      className={`relative overflow-auto bg-paper contain-strict ${className}`}
+      style={{ height: virtualizer.getTotalSize() + headAndBar }}
     >
       <table
         aria-label={label}
@@ -104,15 +110,7 @@ export function VirtualTable<Row>({
                 {...(row && rowProps?.(row, index))}
               >
                 {row ? (
-                  columns.map((column) => (
-                    <Td
-                      key={column.key}
-                      numeric={column.numeric}
-                      className={`${column.className ?? ''} ${column.cellClass ?? ''}`}
-                    >
-                      {column.cell(row, index)}
-                    </Td>
-                  ))
+                  <Cells row={row} index={index} columns={columns} />
                 ) : (
                   <Td colSpan={columns.length} className="text-soft">
                     …
@@ -131,3 +129,24 @@ export function VirtualTable<Row>({
     </div>
   )
 }
+
+/** The cells of a row: drawn again when row or columns change, not while one scrolls past them. */
+const Cells = memo(function Cells<Row>({
+  row,
+  index,
+  columns,
+}: {
+  row: Row
+  index: number
+  columns: readonly Column<Row>[]
+}) {
+  return columns.map((column) => (
+    <Td
+      key={column.key}
+      numeric={column.numeric}
+      className={`${column.className ?? ''} ${column.cellClass ?? ''}`}
+    >
+      {column.cell(row, index)}
+    </Td>
+  ))
+}) as <Row>(props: { row: Row; index: number; columns: readonly Column<Row>[] }) => ReactNode

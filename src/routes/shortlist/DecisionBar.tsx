@@ -1,3 +1,4 @@
+import { type ReactNode } from 'react'
 import { ArrowDown, ArrowUp, Check, Circle, X } from 'lucide-react'
 import { type ShortlistRow } from '../../../shared/shortlists.ts'
 import { type VerdictValue } from '../../../shared/verdicts.ts'
@@ -12,8 +13,9 @@ export function DecisionBar({
   version,
   place,
   barred,
-  busy,
+  twoReaders,
   dossier,
+  assign,
   onDecide,
   onStep,
 }: {
@@ -22,8 +24,10 @@ export function DecisionBar({
   version: number
   place: string
   barred: string | false
-  busy: boolean
+  twoReaders: boolean
   dossier: string
+  /** Hands the candidate to somebody. */
+  assign: ReactNode
   onDecide: (value: VerdictValue) => void
   onStep: (step: number) => void
 }) {
@@ -41,10 +45,15 @@ export function DecisionBar({
         <span className="text-found">
           <Outcome outcome={row.outcome} />
         </span>
-        <VerdictMark verdict={row.verdict} version={version} />
+        <VerdictMark verdict={row.verdict} version={version} twoReaders={twoReaders} />
         <span className="inline-flex items-center gap-1">
           <span className="text-soft">certificate:</span> <CertificateMark state={row.certificate.state} />
         </span>
+        {row.assignee && (
+          <span>
+            <span className="text-soft">assigned to</span> {row.assignee.name}
+          </span>
+        )}
       </span>
       <span className="flex flex-wrap items-center gap-2 sm:ml-auto">
         <IconButton label="Previous candidate" onClick={() => onStep(-1)}>
@@ -53,21 +62,22 @@ export function DecisionBar({
         <IconButton label="Next candidate" onClick={() => onStep(1)}>
           <ArrowDown size={16} aria-hidden />
         </IconButton>
-        <Button unavailable={barred} busy={busy} onClick={() => onDecide('verified')}>
+        <Button unavailable={barred} onClick={() => onDecide('verified')}>
           <Check size={14} className="text-verified" aria-hidden />
           {row.certificate.state === 'passed' ? 'Verify' : 'Verify…'}
           <Key name="v" />
         </Button>
-        <Button unavailable={barred} busy={busy} onClick={() => onDecide('rejected')}>
+        <Button unavailable={barred} onClick={() => onDecide('rejected')}>
           <X size={14} className="text-rejected" aria-hidden />
           Reject
           <Key name="r" />
         </Button>
-        <Button unavailable={barred} busy={busy} onClick={() => onDecide('undecided')}>
+        <Button unavailable={barred} onClick={() => onDecide('undecided')}>
           <Circle size={14} className="text-soft" aria-hidden />
           Undecided
           <Key name="u" />
         </Button>
+        {assign}
         <ButtonLink kind="primary" to={dossier}>
           Dossier
         </ButtonLink>

@@ -1,9 +1,18 @@
 import { ArrowDown, ArrowUp, Equal } from 'lucide-react'
 import { type ShortlistRow } from '../../../shared/shortlists.ts'
 
-/** How a candidate moved when its list was scored anew: arrow and word. */
-export function RankChange({ row }: { row: Pick<ShortlistRow, 'rank' | 'previous'> }) {
-  if (row.previous === null) return <span className="text-soft">–</span>
+/** How a candidate moved when its list was scored or issued anew: arrow and word. */
+export function RankChange({
+  row,
+  entered,
+}: {
+  row: Pick<ShortlistRow, 'rank' | 'previous'>
+  /** Of a newer issue: what was not in the one before is new. */
+  entered: boolean
+}) {
+  if (row.previous === null) {
+    return entered ? <span className="font-medium">new</span> : <span className="text-soft">–</span>
+  }
   const gained = row.previous.rank - row.rank
   const [Shape, word] =
     gained > 0 ? [ArrowUp, `up ${gained}`] : gained < 0 ? [ArrowDown, `down ${-gained}`] : [Equal, 'same']

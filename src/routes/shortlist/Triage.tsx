@@ -1,232 +1,202 @@
-import { useMemo, useRef, useState } from 'react'
-import { useNavigate } from 'react-router-dom'
-import { toast } from 'sonner'
+import { useMemo, useState } from 'react'
+import { ChartScatter, Grid3x3, Table2 } from 'lucide-react'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
 import { type VerdictValue } from '../../../shared/verdicts.ts'
-import { useActions } from '../../actions/useActions.ts'
 import { explain } from '../../api/request.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
-import { useGiveVerdict } from '../../api/verdicts.ts'
-import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { useBarred, useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
+import { Button } from '../../components/ui/Button.tsx'
 import { outcomeFormat } from '../../components/ui/Outcome.tsx'
-import { VirtualTable, type Column } from '../../components/ui/VirtualTable.tsx'
 import { VerdictDialog } from '../../components/verdict/VerdictDialog.tsx'
+import { AssignSelect } from './AssignSelect.tsx'
+import { CandidateTable } from './CandidateTable.tsx'
 import { ColumnChooser } from './ColumnConditions.tsx'
-import { CertifyBar } from './CertifyBar.tsx'
 import { DecisionBar } from './DecisionBar.tsx'
+import { type ListColumn } from './listColumns.ts'
+import { ListScatter, scatterColumns } from './ListScatter.tsx'
+import { PictureGrid } from './PictureGrid.tsx'
+import { SelectionBar } from './SelectionBar.tsx'
+import { nextKey } from './shortlistView.ts'
+import { useDecisions } from './useDecisions.ts'
+import { type ListAddress } from './useListAddress.ts'
 import { useSelection } from './useSelection.ts'
-import { givenDecimals, type ListColumn } from './listColumns.ts'
-import { nextKey, nextUndecided, type ShortlistView } from './shortlistView.ts'
-import { triageColumns } from './triageColumns.tsx'
+import { useTriageActions } from './useTriageActions.ts'
+import { ViewMenu } from './ViewMenu.tsx'
 
 interface TriageProps {
   campaign: string
-  shortlist: ShortlistDetail
+  list: ShortlistDetail
   rows: readonly ShortlistRow[]
   /** All columns of the list. */
   columns: readonly ListColumn[]
-  view: ShortlistView
-  onSort: (sort: string) => void
-  onHidden: (hidden: string[]) => void
-  /** Key of the row in hand. */
-  current: string | null
-  onCurrent: (key: string | null) => void
+  address: ListAddress
+  /** Identifier of the account that looks. */
+  me: string | null
 }
 
-export function Triage({
-  campaign,
-  shortlist,
-  rows,
-  columns: listed,
-  view,
-  onSort,
-  onHidden,
-  current,
-  onCurrent,
-}: TriageProps) {
-  const navigate = useNavigate()
+/** The rows that are shown, as a table or as pictures, and everything that is decided about them. */
+export function Triage({ campaign, list, rows, columns, address, me }: TriageProps) {
+  const { view, current, change, step } = address
   const barred = useBarred('verdicts.give')
-  const give = useGiveVerdict(campaign)
-  const certify = useRequestCertification(campaign)
+  const twoReaders = useCurrentCampaign()?.secondReader ?? false
   const shown = useMemo(() => rows.map(({ candidateKey }) => candidateKey), [rows])
   const selection = useSelection(shown)
-  const [askedKey, setAsked] = useState<string | null>(null)
-  // Looked up anew at each drawing: its certificate may have come meanwhile.
-  const asked = shortlist.rows.find(({ candidateKey }) => candidateKey === askedKey) ?? null
-  const [fault, setFault] = useState<string | null>(null)
-  const table = useRef<HTMLDivElement>(null)
+  const [asked, setAsked] = useState<string | null>(null)
+  const [abreast, setAbreast] = useState(1)
+  const format = useMemo(() => outcomeFormat(list.rows.map(({ outcome }) => outcome)), [list.rows])
+  const onCurrent = (key: string | null) => change({ row: key ?? '' })
+  const decisions = useDecisions(campaign, list, onCurrent)
 
-  const format = useMemo(() => outcomeFormat(shortlist.rows.map(({ outcome }) => outcome)), [shortlist.rows])
-  const decimals = useMemo(
-    () =>
-      shortlist.external.map((_, at) =>
-        givenDecimals(shortlist.rows.map(({ external }) => external[at] ?? null)),
-      ),
-    [shortlist],
-  )
-  const found = rows.findIndex((row) => row.candidateKey === current)
+  const found = current === null ? -1 : shown.indexOf(current)
   const at = found >= 0 ? found : 0
   const row = rows[at]
-  const dossier = (key: string) => `/candidates/${key}?campaign=${campaign}&shortlist=${shortlist.id}`
+  const dossier = (key: string) => `/candidates/${key}?campaign=${campaign}&shortlist=${list.id}`
 
   const decide = (chosen: ShortlistRow, value: VerdictValue, reason = '') => {
+    setAsked(null)
     const following = nextKey(rows, chosen.candidateKey)
-    const before = chosen.verdict
-    give.mutate(
-      { key: chosen.candidateKey, targetVersionId: shortlist.targetVersionId, value, reason },
-      {
-        onSuccess: () => {
-          setAsked(null)
-          onCurrent(following)
-          toast(`Rank ${chosen.rank}: ${value}`, {
-            action: {
-              label: 'Undo',
-              onClick: () =>
-                give.mutate({
-                  key: chosen.candidateKey,
-                  targetVersionId: shortlist.targetVersionId,
-                  value: before?.value ?? 'undecided',
-                  reason: before?.reason ?? '',
-                }),
-            },
-          })
-        },
-        onError: (error) => {
-          setFault(explain(error))
-          if (value !== 'verified') toast.error(explain(error))
-        },
-      },
-    )
+    decisions.decide([chosen], value, reason)
+    onCurrent(following)
   }
   const ask = (value: VerdictValue) => {
     if (!row) return
-    setFault(null)
     // On a passing certificate one key decides; without one a reason is asked for.
     if (value === 'verified' && row.certificate.state !== 'passed') setAsked(row.candidateKey)
     else decide(row, value)
   }
-  const move = (step: number) => {
-    const next = rows[Math.min(rows.length - 1, Math.max(0, at + step))]
-    if (next) onCurrent(next.candidateKey)
-  }
-
-  const act = (id: string, shortcut: string | string[], label: string, run: () => void) => ({
-    ...{ id: `triage.${id}`, section: 'Triage', shortcut, label, run },
+  const pictures = view.show === 'pictures'
+  const { move } = useTriageActions({
+    ...{ rows, at, me, barred, selection, dossier, onCurrent },
+    abreast: pictures ? abreast : 1,
+    onDecide: ask,
+    onUndo: decisions.undo,
   })
-  useActions([
-    {
-      ...act('verify', 'v', 'Verify (asks for a reason when there is no certificate)', () => ask('verified')),
-      unavailable: barred,
-    },
-    { ...act('reject', 'r', 'Reject and go on', () => ask('rejected')), unavailable: barred },
-    {
-      ...act('undecided', 'u', 'Put back to undecided and go on', () => ask('undecided')),
-      unavailable: barred,
-    },
-    act('next', ['j', 'ArrowDown'], 'Next candidate', () => move(1)),
-    act('previous', ['k', 'ArrowUp'], 'Previous candidate', () => move(-1)),
-    act('select', 'x', 'Select or let go', () => row && selection.toggle(row.candidateKey)),
-    act('next-undecided', 'n', 'Next undecided', () => {
-      const next = nextUndecided(rows, row?.candidateKey ?? null)
-      if (next) onCurrent(next)
-      else toast('No undecided candidate is left among those shown.')
-    }),
-    act('dossier', 'o', 'Open the dossier', () => row && void navigate(dossier(row.candidateKey))),
-  ])
-
-  const columns: Column<ShortlistRow>[] = [
-    {
-      key: 'select',
-      // Clear of the mark on the row in hand.
-      className: 'w-8 first:pl-2',
-      header: (
-        <input
-          type="checkbox"
-          aria-label="Select all that are shown"
-          className="align-middle"
-          checked={rows.length > 0 && selection.keys.length === rows.length}
-          onChange={selection.toggleAll}
-        />
-      ),
-      cell: (item) => (
-        <input
-          type="checkbox"
-          aria-label={`Select rank ${item.rank}`}
-          className="align-middle"
-          checked={selection.has(item.candidateKey)}
-          onChange={(event) =>
-            selection.toggle(
-              item.candidateKey,
-              event.nativeEvent instanceof MouseEvent && event.nativeEvent.shiftKey,
-            )
-          }
-        />
-      ),
-    },
-    ...triageColumns({ campaign, list: shortlist, columns: listed, format, decimals, view, onSort }),
-  ]
+  const [first, second] = scatterColumns(columns).filter(({ name }) => name !== 'rank')
+  const common = { rows, at, follow: current !== null, selection, twoReaders, format, onCurrent }
 
   return (
-    <div ref={table}>
-      <CertifyBar campaign={campaign} shortlist={shortlist} selection={selection}>
-        <ColumnChooser columns={listed} hidden={view.hidden} onHidden={onHidden} />
-      </CertifyBar>
-      <VirtualTable
-        label="Candidates"
-        className="max-h-[62vh]"
-        count={rows.length}
-        rowAt={(index) => rows[index]}
-        rowKey={(item) => item.candidateKey}
-        columns={columns}
-        current={current === null ? undefined : at}
-        rowProps={(item, index) => ({
-          className:
-            index === at ? 'bg-action-wash shadow-[inset_3px_0_0_var(--action)]' : 'hover:bg-action-wash',
-          'aria-current': index === at ? true : undefined,
-          // A link in the row goes to its own page; taking the row in hand as well would navigate back at once.
-          onClick: (event) => {
-            if (!(event.target instanceof Element && event.target.closest('a, button, input')))
-              onCurrent(item.candidateKey)
-          },
-        })}
-      />
+    <div>
+      <SelectionBar campaign={campaign} shortlist={list} selection={selection} decisions={decisions}>
+        <ViewMenu campaign={campaign} shortlist={list.id} shown={address.saved} onOpen={address.open} />
+        {first && (
+          <Button
+            kind="quiet"
+            aria-pressed={view.scatter !== null}
+            onClick={() =>
+              step(view.scatter ? { across: '', up: '' } : { across: (second ?? first).name, up: first.name })
+            }
+          >
+            <ChartScatter size={15} aria-hidden />
+            Scatter
+          </Button>
+        )}
+        <Button
+          kind="quiet"
+          aria-pressed={pictures}
+          onClick={() => step({ show: pictures ? '' : 'pictures' })}
+        >
+          {pictures ? <Table2 size={15} aria-hidden /> : <Grid3x3 size={15} aria-hidden />}
+          {pictures ? 'Table' : 'Pictures'}
+        </Button>
+        {!pictures && (
+          <ColumnChooser columns={columns} hidden={view.hidden} onHidden={(hide) => change({ hide })} />
+        )}
+      </SelectionBar>
+      {view.scatter && (
+        <ListScatter
+          rows={rows}
+          columns={columns}
+          {...view.scatter}
+          selection={selection}
+          onChange={(axis, column) => change({ [axis]: column })}
+          onClose={() => step({ across: '', up: '' })}
+        />
+      )}
+      {pictures ? (
+        <PictureGrid {...common} version={list.targetVersion} onAbreast={setAbreast} />
+      ) : (
+        <CandidateTable
+          {...common}
+          {...{ campaign, list, columns, view }}
+          onSort={(sort) =>
+            change({
+              sort: sort === 'rank' ? '' : sort,
+              order: sort === view.sort && !view.descending ? 'desc' : '',
+            })
+          }
+        />
+      )}
       {row && (
         <DecisionBar
           row={row}
-          version={shortlist.targetVersion}
+          version={list.targetVersion}
           place={`${at + 1} of ${rows.length} shown`}
           barred={barred}
-          busy={give.isPending}
+          twoReaders={twoReaders}
           dossier={dossier(row.candidateKey)}
+          assign={
+            <AssignSelect
+              campaign={campaign}
+              targetId={list.targetId}
+              candidateKeys={[row.candidateKey]}
+              label={`Assign rank ${row.rank} to`}
+            />
+          }
           onDecide={ask}
           onStep={move}
         />
       )}
-      <VerdictDialog
-        asked={
-          asked && {
-            value: 'verified',
-            what: `The candidate of rank ${asked.rank}`,
-            certificate: asked.certificate,
-          }
-        }
-        busy={give.isPending}
-        fault={fault}
-        onGive={(reason) => asked && decide(asked, 'verified', reason)}
-        certifying={certify.isPending}
-        onCertify={() =>
-          asked &&
-          certify.mutate(
-            {
-              targetVersionId: shortlist.targetVersionId,
-              candidateKeys: [asked.candidateKey],
-              again: asked.certificate.id !== null,
-            },
-            { onError: (error) => setFault(explain(error)) },
-          )
-        }
+      <OverrideDialog
+        campaign={campaign}
+        list={list}
+        asked={asked}
+        onGive={(chosen, reason) => decide(chosen, 'verified', reason)}
         onClose={() => setAsked(null)}
       />
     </div>
+  )
+}
+
+/** Asks for the reason of "verified" without a passing certificate, and offers to make one. */
+function OverrideDialog({
+  campaign,
+  list,
+  asked,
+  onGive,
+  onClose,
+}: {
+  campaign: string
+  list: ShortlistDetail
+  asked: string | null
+  onGive: (row: ShortlistRow, reason: string) => void
+  onClose: () => void
+}) {
+  const certify = useRequestCertification(campaign)
+  // Looked up anew at each drawing: its certificate may have come meanwhile.
+  const row = asked === null ? undefined : list.rows.find(({ candidateKey }) => candidateKey === asked)
+  return (
+    <VerdictDialog
+      asked={
+        row
+          ? { value: 'verified', what: `The candidate of rank ${row.rank}`, certificate: row.certificate }
+          : null
+      }
+      busy={false}
+      fault={certify.isError ? explain(certify.error) : null}
+      onGive={(reason) => row && onGive(row, reason)}
+      certifying={certify.isPending}
+      onCertify={() =>
+        row &&
+        certify.mutate({
+          targetVersionId: list.targetVersionId,
+          candidateKeys: [row.candidateKey],
+          again: row.certificate.id !== null,
+        })
+      }
+      onClose={() => {
+        certify.reset()
+        onClose()
+      }}
+    />
   )
 }

@@ -15,10 +15,10 @@ export interface ListColumn {
 
 export const externalColumn = (name: string): string => `external:${name}`
 
-type Contents = Pick<ShortlistDetail, 'rows' | 'columns' | 'external'>
+type Contents = Pick<ShortlistDetail, 'rows' | 'columns' | 'external' | 'reissueOf'>
 
 /** The columns of a list, in their order; those that no row has a value for are left out. */
-export function listColumns({ rows, columns, external }: Contents): ListColumn[] {
+export function listColumns({ rows, columns, external, reissueOf }: Contents): ListColumn[] {
   const fronts = rows.some(({ front }) => front !== null)
   const previous = rows.some((row) => row.previous !== null)
   return [
@@ -27,10 +27,14 @@ export function listColumns({ rows, columns, external }: Contents): ListColumn[]
     ...(previous
       ? ([
           { name: 'change', label: 'change of rank', type: 'number' },
-          { name: 'previous', label: 'score before', type: 'number' },
+          // Scores do not change from issue to issue.
+          ...(reissueOf ? [] : [{ name: 'previous', label: 'score before', type: 'number' } as const]),
         ] as const)
       : []),
     { name: 'verdict', label: 'verdict', type: null },
+    ...(rows.some(({ assignee }) => assignee !== null)
+      ? [{ name: 'assignee', label: 'assigned to', type: 'text' } as const]
+      : []),
     { name: 'certificate', label: 'certificate', type: null },
     { name: scoreColumn, label: 'score', type: 'number' },
     { name: 'hit', label: 'hit', type: null },
@@ -64,6 +68,8 @@ export function valueOf(row: ShortlistRow, { name, external }: ListColumn): numb
       return row.polytopeName
     case 'h11':
       return row.h11
+    case 'assignee':
+      return row.assignee?.name ?? null
   }
   if (outcome.kind !== 'feasible') return null
   if (name === scoreColumn) return outcome.score

@@ -17,7 +17,9 @@ import { type ShortlistView } from './shortlistView.ts'
 
 interface ColumnSetting {
   campaign: string
-  list: Pick<ShortlistDetail, 'id' | 'targetVersion'>
+  list: Pick<ShortlistDetail, 'id' | 'targetVersion' | 'reissueOf'>
+  /** The campaign asks for two readers. */
+  twoReaders: boolean
   columns: readonly ListColumn[]
   format: OutcomeFormat
   /** Of the external columns, in their order. */
@@ -32,6 +34,7 @@ const headings: Record<string, string> = {
   change: 'Change',
   previous: 'Score before',
   verdict: 'Verdict',
+  assignee: 'Assigned to',
   certificate: 'Certificate',
   [scoreColumn]: 'Score',
   hit: 'Hit',
@@ -52,7 +55,7 @@ export function triageColumns(setting: ColumnSetting): Column<ShortlistRow>[] {
       const heading = external ? <ExternalHeading label={label} column={external.column} /> : title
       return {
         key: name,
-        numeric: name !== 'change' && name !== 'polytope' && type === 'number',
+        numeric: name !== 'change' && type === 'number',
         header:
           type === null ? (
             heading
@@ -83,7 +86,7 @@ function ExternalHeading({ label, column }: { label: string; column: ExternalCol
 
 function cellOf(column: ListColumn, setting: ColumnSetting): Column<ShortlistRow>['cell'] {
   const { name, external } = column
-  const { campaign, list, format, decimals } = setting
+  const { campaign, list, format, decimals, twoReaders } = setting
   if (external) {
     const shared = decimals[external.at] ?? null
     return (row) => <ExternalCell value={row.external[external.at] ?? null} decimals={shared} />
@@ -102,7 +105,7 @@ function cellOf(column: ListColumn, setting: ColumnSetting): Column<ShortlistRow
     case 'front':
       return (row) => <Num value={row.front} />
     case 'change':
-      return (row) => <RankChange row={row} />
+      return (row) => <RankChange row={row} entered={list.reissueOf !== null} />
     case 'previous':
       return ({ previous }) =>
         previous && previous.score === null ? (
@@ -111,7 +114,11 @@ function cellOf(column: ListColumn, setting: ColumnSetting): Column<ShortlistRow
           <Num value={previous?.score ?? null} digits={6} rounded />
         )
     case 'verdict':
-      return ({ verdict }) => <VerdictMark verdict={verdict} version={list.targetVersion} />
+      return ({ verdict }) => (
+        <VerdictMark verdict={verdict} version={list.targetVersion} twoReaders={twoReaders} />
+      )
+    case 'assignee':
+      return ({ assignee }) => assignee?.name ?? <span className="text-soft">–</span>
     case 'certificate':
       return (row) => <CertificateMark state={row.certificate.state} />
     case scoreColumn:

@@ -6,6 +6,10 @@ export interface Selection {
   has(key: string): boolean
   /** Selects or lets go; with `range` also everything between the last one touched and this. */
   toggle(key: string, range?: boolean): void
+  /** Adds everything between two rows, both included. */
+  extend(from: string, to: string): void
+  /** These and no others. */
+  only(keys: readonly string[]): void
   /** All of those shown, or none when all are. */
   toggleAll(): void
   clear(): void
@@ -16,15 +20,17 @@ export function useSelection(shown: readonly string[]): Selection {
   const [chosen, setChosen] = useState<ReadonlySet<string>>(new Set())
   const last = useRef<string | null>(null)
   return useMemo(() => {
-    const keys = shown.filter((key) => chosen.has(key))
+    const keys = chosen.size === 0 ? [] : shown.filter((key) => chosen.has(key))
+    const between = (from: string | null, key: string) => {
+      const [a, b] = [from === null ? -1 : shown.indexOf(from), shown.indexOf(key)]
+      return a < 0 || b < 0 ? [key] : shown.slice(Math.min(a, b), Math.max(a, b) + 1)
+    }
     return {
       keys,
       has: (key) => chosen.has(key),
       toggle(key, range = false) {
-        const from = last.current === null ? -1 : shown.indexOf(last.current)
-        const to = shown.indexOf(key)
-        const touched = range && from >= 0 ? shown.slice(Math.min(from, to), Math.max(from, to) + 1) : [key]
-        const on = !chosen.has(key)
+        const touched = range ? between(last.current, key) : [key]
+        const on = range || !chosen.has(key)
         const next = new Set(chosen)
         for (const one of touched) {
           if (on) next.add(one)
@@ -33,6 +39,11 @@ export function useSelection(shown: readonly string[]): Selection {
         last.current = key
         setChosen(next)
       },
+      extend(from, to) {
+        last.current = to
+        setChosen((before) => new Set([...before, ...between(from, to)]))
+      },
+      only: (wanted) => setChosen(new Set(wanted)),
       toggleAll: () => setChosen(new Set(keys.length === shown.length ? [] : shown)),
       clear: () => setChosen(new Set()),
     }

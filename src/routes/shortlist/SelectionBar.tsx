@@ -1,8 +1,9 @@
-import { type ReactNode } from 'react'
-import { BadgeCheck } from 'lucide-react'
+import { useState, type ReactNode } from 'react'
+import { BadgeCheck, Check, Circle, X } from 'lucide-react'
 import { toast } from 'sonner'
 import { certificationLimit } from '../../../shared/certificates.ts'
 import { type ShortlistDetail, type ShortlistRow } from '../../../shared/shortlists.ts'
+import { type VerdictValue } from '../../../shared/verdicts.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
 import { CertificationProgress } from '../../components/certificate/CertificationProgress.tsx'
@@ -10,6 +11,9 @@ import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { counted } from '../../lib/numbers.ts'
 import { candidatesInAddress, startAddress } from '../searches/new/searchPreset.ts'
+import { AssignSelect } from './AssignSelect.tsx'
+import { ManyVerifiedDialog } from './ManyVerifiedDialog.tsx'
+import { type Decisions } from './useDecisions.ts'
 import { verdictOf } from './shortlistView.ts'
 import { type Selection } from './useSelection.ts'
 
@@ -17,16 +21,18 @@ import { type Selection } from './useSelection.ts'
 export const toCertify = (rows: readonly ShortlistRow[]): ShortlistRow[] =>
   rows.filter((row) => verdictOf(row) === 'undecided' && row.certificate.state === 'none')
 
-/** Certificates in bulk: for the selected candidates, or for all undecided ones; and how far they have come. */
-export function CertifyBar({
+/** What can be done with many candidates at once: with the selected ones, or else with all. */
+export function SelectionBar({
   campaign,
   shortlist,
   selection,
+  decisions,
   children,
 }: {
   campaign: string
   shortlist: ShortlistDetail
   selection: Selection
+  decisions: Decisions
   /** At the end of the line. */
   children?: ReactNode
 }) {
@@ -41,7 +47,10 @@ export function CertifyBar({
       {
         onSuccess: ({ total }) => {
           selection.clear()
-          toast(`${counted(total, 'candidate')} to be certified.`)
+          const left = keys.length - certificationLimit
+          toast(
+            `${counted(total, 'candidate')} to be certified.${left > 0 ? ` ${left} more than one request takes: ask again for them.` : ''}`,
+          )
         },
         onError: (error) => void toast.error(explain(error)),
       },
@@ -49,6 +58,11 @@ export function CertifyBar({
   return (
     <>
       <div className="mb-2 flex flex-wrap items-center gap-x-3 gap-y-2">
+        {selected.length > 0 && (
+          <SelectedVerdicts {...{ campaign, shortlist, selection, decisions }}>
+            <strong className="font-medium">{selected.length} selected</strong>
+          </SelectedVerdicts>
+        )}
         <Button
           unavailable={
             barred || (keys.length === 0 && 'Every undecided candidate has a certificate or waits for one.')
@@ -67,10 +81,69 @@ export function CertifyBar({
             Let go of the selection
           </Button>
         )}
-        <span className="ml-auto">{children}</span>
+        <span className="ml-auto flex flex-wrap items-center gap-x-1">{children}</span>
       </div>
       <CertificationProgress campaign={campaign} targetVersionId={shortlist.targetVersionId} />
     </>
+  )
+}
+
+/** One word on all selected candidates, and handing them to somebody. */
+function SelectedVerdicts({
+  campaign,
+  shortlist,
+  selection,
+  decisions,
+  children,
+}: {
+  campaign: string
+  shortlist: ShortlistDetail
+  selection: Selection
+  decisions: Decisions
+  children: ReactNode
+}) {
+  const barred = useBarred('verdicts.give')
+  const [asking, setAsking] = useState(false)
+  const chosen = new Set(selection.keys)
+  const rows = shortlist.rows.filter(({ candidateKey }) => chosen.has(candidateKey))
+  const bare = rows.filter(({ certificate }) => certificate.state !== 'passed').length
+  const decide = (value: VerdictValue, reason = '') => {
+    decisions.decide(rows, value, reason)
+    selection.clear()
+  }
+  return (
+    <div
+      role="group"
+      aria-label="Selected candidates"
+      className="flex flex-wrap items-center gap-x-3 gap-y-2 border-r pr-3"
+    >
+      {children}
+      <Button unavailable={barred} onClick={() => (bare > 0 ? setAsking(true) : decide('verified'))}>
+        <Check size={14} className="text-verified" aria-hidden />
+        {bare > 0 ? 'Verify all…' : 'Verify all'}
+      </Button>
+      <Button unavailable={barred} onClick={() => decide('rejected')}>
+        <X size={14} className="text-rejected" aria-hidden />
+        Reject all
+      </Button>
+      <Button unavailable={barred} onClick={() => decide('undecided')}>
+        <Circle size={14} className="text-soft" aria-hidden />
+        Undecided
+      </Button>
+      <AssignSelect
+        campaign={campaign}
+        targetId={shortlist.targetId}
+        candidateKeys={selection.keys}
+        label={`Assign the ${rows.length} selected to`}
+      />
+      <ManyVerifiedDialog
+        open={asking}
+        onOpenChange={setAsking}
+        count={rows.length}
+        bare={bare}
+        onGive={(reason) => decide('verified', reason)}
+      />
+    </div>
   )
 }
 
