@@ -38,13 +38,13 @@ export function stubApi(answers: Record<string, Answer>): Call[] {
         : typeof found === 'function'
           ? (found as (call: Call) => unknown)(call)
           : found
-    const { status, body } = answer instanceof Status ? answer : new Status(200, answer)
-    return Promise.resolve(
-      new Response(body === undefined ? null : JSON.stringify(body), {
+    return Promise.resolve(answer).then((settled) => {
+      const { status, body } = settled instanceof Status ? settled : new Status(200, settled)
+      return new Response(body === undefined ? null : JSON.stringify(body), {
         status,
         headers: { 'content-type': status >= 400 ? 'application/problem+json' : 'application/json' },
-      }),
-    )
+      })
+    })
   })
   return calls
 }

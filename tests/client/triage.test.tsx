@@ -2,16 +2,18 @@
 import { afterEach, beforeEach, describe, expect, it, vi } from 'vitest'
 import { act, cleanup, screen, waitFor, within } from '@testing-library/react'
 import userEvent from '@testing-library/user-event'
+import { Toaster } from 'sonner'
 import type { ShortlistRow } from '../../shared/shortlists.ts'
 import { caution } from '../../shared/caution.ts'
 import { applyEvent } from '../../src/api/liveEvents.ts'
 import { ShortlistPage } from '../../src/routes/shortlist/ShortlistPage.tsx'
 import { renderPage } from './renderPage.tsx'
 import { certification, key, row, shortlist, verdict } from './shortlistFixture.ts'
-import { stubApi, type Call } from './stubApi.ts'
+import { problem, Status, stubApi, type Call } from './stubApi.ts'
 
 const path = '/campaigns/:campaignId/shortlists/:shortlistId'
 const address = '/campaigns/c1/shortlists/l1'
+const me = { id: 'a7', name: 'Ada Quill', email: 'ada@tests.example' }
 let stop = () => {}
 
 beforeEach(() => window.localStorage.clear())
@@ -24,13 +26,15 @@ afterEach(() => {
 function open(
   role: 'lead' | 'reviewer' | 'reader' = 'reviewer',
   rows: ShortlistRow[] = [row(1, -4.5), row(2, -4.9), row(3, -5.2)],
+  answers: Record<string, unknown> = {},
+  query = '',
 ) {
   const verdicts = Object.fromEntries(
     [1, 2, 3].map((n) => [
       `POST /campaigns/c1/candidates/${key(n)}/verdicts`,
       ({ body }: Call) => {
         const { value, reason } = body as { value: 'verified' | 'rejected'; reason: string }
-        return verdict(value, value === 'verified' && reason !== '')
+        return { ...verdict(value, value === 'verified' && reason !== ''), id: String(100 + n) }
       },
     ]),
   )
@@ -38,11 +42,22 @@ function open(
     'GET /campaigns/c1/shortlists/l1': shortlist(rows),
     'GET /campaigns/c1/certifications': [],
     'GET /campaigns/c1/rescorings': [],
+    'GET /session': { account: me, version: '1' },
+    'GET /campaigns/c1': { members: [] },
     'POST /campaigns/c1/certifications': ({ body }: Call) =>
       certification((body as { candidateKeys: string[] }).candidateKeys.length),
     ...verdicts,
+    ...answers,
   })
-  const page = renderPage(<ShortlistPage />, path, address, role)
+  const page = renderPage(
+    <>
+      <ShortlistPage />
+      <Toaster />
+    </>,
+    path,
+    address + query,
+    role,
+  )
   stop = page.stopKeys
   return { ...page, calls, sent: () => calls.filter(({ method }) => method === 'POST') }
 }
@@ -178,5 +193,143 @@ describe('triage of a shortlist', () => {
     await userEvent.click(reject)
     await userEvent.keyboard('r')
     expect(sent()).toHaveLength(0)
+  })
+
+  it('shows a verdict before the answer, takes it back when it is refused, and names the row', async () => {
+    let refuse = (): void => {}
+    const { router } = open('reviewer', undefined, {
+      [`POST /campaigns/c1/candidates/${key(1)}/verdicts`]: () =>
+        new Promise((answer) => {
+          refuse = () => answer(new Status(409, problem(409, 'closed', 'The target was closed.')))
+        }),
+    })
+    const table = await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.keyboard('r')
+    expect(await within(table).findByText('rejected')).toBeTruthy()
+    expect(router.state.location.search).toContain(`row=${key(2)}`)
+    refuse()
+    await waitFor(() => expect(within(table).queryByText('rejected')).toBeNull())
+    expect(await screen.findByText('Not rejected: rank 1 (r5-0001): The target was closed.')).toBeTruthy()
+    await userEvent.click(screen.getByRole('button', { name: 'Go to it' }))
+    expect(router.state.location.search).toContain(`row=${key(1)}`)
+  })
+
+  it('z takes verdicts back, the last one first', async () => {
+    const undone: string[][] = []
+    const { router } = open('reviewer', undefined, {
+      'POST /campaigns/c1/verdicts/undo': ({ body }: Call) => {
+        const { ids } = body as { ids: string[] }
+        undone.push(ids)
+        const n = Number(ids[0]) - 100
+        const back = { ...verdict('undecided'), id: String(200 + n), undoneBy: 'Ada Quill' }
+        return { given: [{ candidateKey: key(n), verdict: back }], refused: [] }
+      },
+    })
+    const table = await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.keyboard('rr')
+    expect(await within(table).findAllByText('rejected')).toHaveLength(2)
+    await userEvent.keyboard('z')
+    await waitFor(() => expect(within(table).getAllByText('rejected')).toHaveLength(1))
+    expect(router.state.location.search).toContain(`row=${key(2)}`)
+    await userEvent.keyboard('z')
+    await waitFor(() => expect(within(table).queryByText('rejected')).toBeNull())
+    expect(undone).toEqual([['102'], ['101']])
+    await userEvent.keyboard('z')
+    expect(await screen.findByText(/^Nothing to take back/)).toBeTruthy()
+    expect(undone).toHaveLength(2)
+  })
+
+  it('one word on many, selected with Shift and the arrow key; what is refused goes back', async () => {
+    const { sent } = open('reviewer', undefined, {
+      'POST /campaigns/c1/verdicts': ({ body }: Call) => {
+        const [first, second] = (body as { candidateKeys: string[] }).candidateKeys
+        return {
+          given: [{ candidateKey: first, verdict: { ...verdict('rejected'), id: '300' } }],
+          refused: [{ candidateKey: second, code: 'not-found', message: 'There is no such candidate.' }],
+        }
+      },
+    })
+    const table = await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.keyboard('{Shift>}{ArrowDown}{/Shift}')
+    const selected = screen.getByRole('group', { name: 'Selected candidates' })
+    expect(within(selected).getByText('2 selected')).toBeTruthy()
+    await userEvent.click(within(selected).getByRole('button', { name: 'Reject all' }))
+    expect(sent().at(-1)?.body).toMatchObject({ value: 'rejected', candidateKeys: [key(1), key(2)] })
+    expect(await screen.findByText(/^Not rejected: rank 2 \(r5-0001\)/)).toBeTruthy()
+    expect(within(table).getAllByText('rejected')).toHaveLength(1)
+    expect(await screen.findByText('1 candidate, rejected')).toBeTruthy()
+  })
+
+  it('shows who is to judge, keeps to one’s own rows, and says when a second reader is needed', async () => {
+    const half = { ...verdict('verified', true), readers: [{ id: 'b8', name: 'Bo Lind' }] }
+    open(
+      'reviewer',
+      [
+        row(1, -4.5, { assignee: me, verdict: half }),
+        row(2, -4.9, { assignee: { id: 'b8', name: 'Bo Lind' } }),
+      ],
+      {},
+      '?reviewer=me&sort=nothing',
+    )
+    const table = await screen.findByRole('table', { name: 'Candidates' })
+    expect(await within(table).findByText('Ada Quill')).toBeTruthy()
+    expect(within(table).queryByText('Bo Lind')).toBeNull()
+    expect(within(table).getByText('verified by one reader by override')).toBeTruthy()
+    expect(screen.getByRole('option', { name: 'me (1)' })).toBeTruthy()
+    expect(screen.getByText(/names a column that this list does not have.*nothing/)).toBeTruthy()
+  })
+
+  it('the same rows as pictures, with the same keys, and two columns as a scatter', async () => {
+    const { router, sent } = open()
+    await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.click(screen.getByRole('button', { name: 'Pictures' }))
+    const pictures = await screen.findByRole('list', { name: 'Candidates as pictures' })
+    expect(within(pictures).getAllByRole('listitem')).toHaveLength(3)
+    await userEvent.keyboard('jx')
+    expect(within(inHand()).getByText('Rank 2')).toBeTruthy()
+    expect(screen.getByText('1 selected')).toBeTruthy()
+    await userEvent.click(screen.getByRole('button', { name: 'Scatter' }))
+    expect(await screen.findByRole('img', { name: /^score against reach: 3 candidates/ })).toBeTruthy()
+    expect(router.state.location.search).toContain('across=report%3Areach&up=score')
+    await act(() => router.navigate(-1))
+    expect(screen.queryByRole('img', { name: /^score against reach/ })).toBeNull()
+    expect(sent()).toHaveLength(0)
+  })
+
+  it('views are opened and kept', async () => {
+    const view = {
+      ...{ id: 'w1', name: 'Hits only', address: 'hits=yes', shortlistId: null },
+      ...{ authorId: 'b8', author: 'Bo Lind', createdAt: '2026-01-02T03:04:05.000Z' },
+    }
+    const { router, sent } = open('reviewer', undefined, {
+      'GET /campaigns/c1/shortlist-views': [view],
+      'POST /campaigns/c1/shortlist-views': view,
+    })
+    await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.click(screen.getByRole('button', { name: 'Views' }))
+    await userEvent.click(await screen.findByRole('button', { name: /^Hits only/ }))
+    expect(router.state.location.search).toBe('?hits=yes')
+    await userEvent.click(screen.getByRole('button', { name: 'Views' }))
+    expect(screen.queryByRole('button', { name: 'Remove “Hits only”' })).toBeNull()
+    await userEvent.type(await screen.findByLabelText('Keep what is shown now as'), 'Mine')
+    await userEvent.click(screen.getByRole('button', { name: 'Keep' }))
+    expect(sent()[0]?.body).toEqual({ name: 'Mine', address: 'hits=yes', shortlistId: 'l1' })
+  })
+
+  it('a newer issue leaves the rejected rows out', async () => {
+    const { sent, router } = open('lead', [row(1, -4.5), row(2, -4.9, { verdict: verdict('rejected') })], {
+      'GET /campaigns/c1/searches': [],
+      'POST /campaigns/c1/shortlists/l1/reissues': { shortlistId: 'l2', rescoring: null },
+    })
+    await screen.findByRole('table', { name: 'Candidates' })
+    await userEvent.click(screen.getByRole('button', { name: 'New issue' }))
+    const dialog = await screen.findByRole('dialog', { name: 'New issue' })
+    await userEvent.click(within(dialog).getByRole('radio', { name: 'These rows without the 1 rejected' }))
+    await userEvent.click(within(dialog).getByRole('button', { name: 'Make issue 2' }))
+    await waitFor(() => expect(router.state.location.pathname).toBe('/campaigns/c1/shortlists/l2'))
+    expect(sent()[0]?.body).toEqual({
+      name: 'First pass, issue 2',
+      how: { kind: 'rows', without: [key(2)] },
+    })
   })
 })

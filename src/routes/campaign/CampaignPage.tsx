@@ -4,6 +4,7 @@ import { may } from '../../../shared/roles.ts'
 import { ActionButton } from '../../actions/ActionButton.tsx'
 import { useCampaignActions } from '../../actions/useCampaignActions.ts'
 import { useCampaign } from '../../api/campaigns.ts'
+import { useSession } from '../../api/session.ts'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
@@ -30,6 +31,10 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
   const active = campaign.searchList.filter(({ state }) => /^(running|queued|paused|failed)$/.test(state))
   const running = campaign.searchList.filter(({ state }) => state === 'running' || state === 'queued').length
   const open = campaign.shortlistList.filter(({ undecided }) => undecided > 0)
+  const me = useSession().data?.account?.id
+  const yours = open
+    .flatMap(({ waiting }) => waiting.filter(({ id }) => id === me))
+    .reduce((sum, { open }) => sum + open, 0)
   const finished = campaign.searchList.filter(({ state }) => state === 'finished').slice(0, 5)
   return (
     <>
@@ -52,7 +57,7 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
         title="To review"
         note={
           open.length > 0
-            ? `${open.reduce((sum, { undecided }) => sum + undecided, 0)} candidates wait for a verdict.`
+            ? `${open.reduce((sum, { undecided }) => sum + undecided, 0)} candidates wait for a verdict${yours > 0 ? `, ${yours} of them assigned to you` : ''}.`
             : undefined
         }
       >

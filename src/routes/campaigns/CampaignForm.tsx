@@ -16,18 +16,20 @@ export function CampaignForm({
   word: string
   busy: boolean
   error: Error | null
-  initial?: { name: string; description: string }
-  onSend: (body: z.output<typeof createCampaignSchema>) => void
+  /** Absent: a new campaign, whose setting comes later. */
+  initial?: { name: string; description: string; secondReader: boolean }
+  onSend: (body: z.output<typeof createCampaignSchema> & { secondReader?: boolean }) => void
 }) {
   const [name, setName] = useState(initial?.name ?? '')
   const [description, setDescription] = useState(initial?.description ?? '')
+  const [secondReader, setSecondReader] = useState(initial?.secondReader ?? false)
   const [tried, setTried] = useState(false)
   const parsed = createCampaignSchema.safeParse({ name, description })
   const fault = tried && !parsed.success ? 'A campaign needs a name of 1 to 80 characters.' : null
   const submit = (event: FormEvent) => {
     event.preventDefault()
     setTried(true)
-    if (parsed.success) onSend(parsed.data)
+    if (parsed.success) onSend(initial ? { ...parsed.data, secondReader } : parsed.data)
   }
   return (
     <form onSubmit={submit} noValidate className="flex flex-col gap-4">
@@ -46,6 +48,23 @@ export function CampaignForm({
         value={description}
         onChange={(event) => setDescription(event.target.value)}
       />
+      {initial && (
+        <label className="flex items-start gap-2">
+          <input
+            type="checkbox"
+            className="mt-1"
+            checked={secondReader}
+            onChange={(event) => setSecondReader(event.target.checked)}
+          />
+          <span>
+            “Verified” needs two people
+            <span className="block text-xs text-soft">
+              The first makes a candidate “verified by one reader”, which is still undecided; a second person
+              makes it verified. A rejection stands at once. Verdicts of before stay, with a mark.
+            </span>
+          </span>
+        </label>
+      )}
       <Button kind="primary" type="submit" busy={busy} className="self-start">
         {word}
       </Button>

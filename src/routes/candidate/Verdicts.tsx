@@ -3,12 +3,12 @@ import { type UseQueryResult } from '@tanstack/react-query'
 import { Check, Circle, X } from 'lucide-react'
 import { toast } from 'sonner'
 import { type CandidateRecord, type CandidateScore } from '../../../shared/candidates.ts'
-import { verdictValues, type VerdictValue } from '../../../shared/verdicts.ts'
+import { verdictValues, type Verdict, type VerdictValue } from '../../../shared/verdicts.ts'
 import { useActions } from '../../actions/useActions.ts'
 import { useRequestCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
 import { useGiveVerdict } from '../../api/verdicts.ts'
-import { useBarred } from '../../components/shell/currentCampaign.tsx'
+import { useBarred, useCurrentCampaign } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
@@ -127,6 +127,7 @@ function Decide({
   current?: CandidateRecord['verdicts'][number]
 }) {
   const barred = useBarred('verdicts.give')
+  const twoReaders = useCurrentCampaign()?.secondReader ?? false
   const give = useGiveVerdict(campaign)
   const [asked, setAsked] = useState<VerdictValue | null>(null)
   const [fault, setFault] = useState<string | null>(null)
@@ -159,7 +160,7 @@ function Decide({
   return (
     <div>
       <p className="mb-2 flex flex-wrap items-center gap-x-2">
-        Verdict: <VerdictMark verdict={current ?? null} />
+        Verdict: <VerdictMark verdict={current ?? null} twoReaders={twoReaders} />
         <span aria-hidden className="text-soft">
           ·
         </span>
@@ -224,6 +225,7 @@ function History({ verdicts }: { verdicts: CandidateRecord['verdicts'] }) {
               {verdict.targetName} v{verdict.targetVersion}
             </span>
           </p>
+          <HistoryNote verdict={verdict} />
           {verdict.reason && (
             <p className="prose-line mt-1 break-words whitespace-pre-wrap">{verdict.reason}</p>
           )}
@@ -231,4 +233,21 @@ function History({ verdicts }: { verdicts: CandidateRecord['verdicts'] }) {
       ))}
     </ol>
   )
+}
+
+/** Whose "verified" an entry rests on, and whether it stands again because a later one was taken back. */
+function HistoryNote({ verdict: { readers, undoneBy, value } }: { verdict: Verdict }) {
+  const names = readers?.map(({ name }) => name).join(' and ')
+  const notes = [
+    ...(readers?.length === 1 ? ['the first of two readers; a second person has to verify as well'] : []),
+    ...(readers && readers.length > 1 ? [`read by ${names}`] : []),
+    ...(undoneBy === null
+      ? []
+      : [
+          value === 'undecided'
+            ? `${undoneBy} took the verdict before back`
+            : `stands again: ${undoneBy} took the verdict after it back`,
+        ]),
+  ]
+  return notes.length > 0 ? <p className="text-xs text-soft">{notes.join('; ')}</p> : null
 }

@@ -1,5 +1,6 @@
 import { Link } from 'react-router-dom'
 import { type ShortlistSummary } from '../../../shared/shortlists.ts'
+import { useSession } from '../../api/session.ts'
 import { Num } from '../../components/ui/Num.tsx'
 import { Table, Td, Th } from '../../components/ui/Table.tsx'
 import { formatTime } from '../../lib/numbers.ts'
@@ -13,6 +14,8 @@ export function ShortlistTable({
   list: ShortlistSummary[]
   label: string
 }) {
+  const me = useSession().data?.account?.id
+  const mine = list.some(({ waiting }) => waiting.some(({ id }) => id === me))
   return (
     <Table label={label}>
       <thead>
@@ -21,6 +24,7 @@ export function ShortlistTable({
           <Th>Target</Th>
           <Th numeric>Candidates</Th>
           <Th numeric>Undecided</Th>
+          {mine && <Th numeric>Yours</Th>}
           <Th numeric>Verified</Th>
           <Th numeric>Rejected</Th>
           <Th>Made</Th>
@@ -48,8 +52,15 @@ export function ShortlistTable({
               <Num value={shortlist.size} />
             </Td>
             <Td numeric className={shortlist.undecided > 0 ? 'font-medium' : 'text-soft'}>
-              <Num value={shortlist.undecided} />
+              <span title={oneReaderWords(shortlist)}>
+                <Num value={shortlist.undecided} />
+              </span>
             </Td>
+            {mine && (
+              <Td numeric>
+                <Yours campaign={campaign} shortlist={shortlist} me={me} />
+              </Td>
+            )}
             <Td numeric>
               <Num value={shortlist.verified} />
             </Td>
@@ -62,5 +73,31 @@ export function ShortlistTable({
         ))}
       </tbody>
     </Table>
+  )
+}
+
+const oneReaderWords = ({ oneReader }: ShortlistSummary): string | undefined =>
+  oneReader > 0 ? `${oneReader} of them verified by one reader` : undefined
+
+/** Undecided candidates that are assigned to the person who looks, with a way to them. */
+function Yours({
+  campaign,
+  shortlist,
+  me,
+}: {
+  campaign: string
+  shortlist: ShortlistSummary
+  me: string | undefined
+}) {
+  const open = shortlist.waiting.find(({ id }) => id === me)?.open ?? 0
+  if (open === 0) return <span className="text-soft">0</span>
+  return (
+    <Link
+      to={`/campaigns/${campaign}/shortlists/${shortlist.id}?verdict=undecided&reviewer=me`}
+      className="font-medium text-action hover:underline"
+      aria-label={`${open} assigned to you in ${shortlist.name}`}
+    >
+      {open}
+    </Link>
   )
 }
