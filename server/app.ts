@@ -13,6 +13,7 @@ import { campaignRoutes } from './routes/campaigns.ts'
 import { candidateRoutes } from './routes/candidates.ts'
 import { certificateRoutes } from './routes/certificates.ts'
 import { collectionRoutes } from './routes/collections.ts'
+import { commentRoutes } from './routes/comments.ts'
 import { explorationRoutes } from './routes/explorations.ts'
 import { eventRoutes } from './routes/events.ts'
 import { externalTableRoutes } from './routes/externalTables.ts'
@@ -62,6 +63,7 @@ export function buildApp(context: ServerContext, sessions: session.Store): Expre
   externalTableRoutes(app, context)
   candidateRoutes(app, context)
   verdictRoutes(app, context)
+  commentRoutes(app, context)
   reviewingRoutes(app, context)
   certificateRoutes(app, context)
   importedCandidateRoutes(app, context)

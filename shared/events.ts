@@ -36,6 +36,8 @@ export const streamEventSchema = z.discriminatedUnion('kind', [
     verdicts: z.array(z.object({ candidateKey: candidateKeySchema, verdict: verdictSchema })),
   }),
   z.object({ kind: z.literal('assigned'), ...assignedSchema.shape }),
+  /** Somebody wrote, changed or removed a comment. */
+  z.object({ kind: z.literal('comment'), candidateKey: candidateKeySchema }),
   z.object({ kind: z.literal('rescoring'), rescoring: rescoringSchema }),
   z.object({ kind: z.literal('library'), loaded: z.number().int(), total: z.number().int() }),
   /** Stored polytopes whose numbers are still being computed. */

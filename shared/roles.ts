@@ -21,6 +21,7 @@ export const permissions = {
   'verdicts.assign': ['lead', 'investigator', 'reviewer'],
   /** Views of a shortlist under names; those of others are a lead's. */
   'views.save': ['lead', 'investigator', 'reviewer'],
+  'comments.write': ['lead', 'investigator', 'reviewer'],
   'certificates.run': ['lead', 'investigator', 'reviewer'],
   /** Tables of external columns: brought along, replaced, removed. */
   'external.edit': ['lead', 'investigator', 'reviewer'],

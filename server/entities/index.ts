@@ -10,6 +10,7 @@ import { Certification } from './certification.ts'
 import { CertificationTask } from './certificationTask.ts'
 import { Collection } from './collection.ts'
 import { CollectionPolytope } from './collectionPolytope.ts'
+import { Comment } from './comment.ts'
 import { ExploredCandidate } from './exploredCandidate.ts'
 import { ExploredCells } from './exploredCells.ts'
 import { ExploredColumn } from './exploredColumn.ts'
@@ -20,6 +21,7 @@ import { Find } from './find.ts'
 import { ImportedCandidate } from './importedCandidate.ts'
 import { LibraryFile } from './libraryFile.ts'
 import { Membership } from './membership.ts'
+import { Mention } from './mention.ts'
 import { NullSample } from './nullSample.ts'
 import { PolytopeRecord } from './polytope.ts'
 import { Rescoring } from './rescoring.ts'
@@ -50,6 +52,7 @@ export const entities = [
   CertificationTask,
   Collection,
   CollectionPolytope,
+  Comment,
   ExploredCandidate,
   ExploredCells,
   ExploredColumn,
@@ -60,6 +63,7 @@ export const entities = [
   ImportedCandidate,
   LibraryFile,
   Membership,
+  Mention,
   NullSample,
   PolytopeRecord,
   Rescoring,

@@ -16,6 +16,7 @@ import { Surrogate1796300600000 } from './1796300600000-surrogate.ts'
 import { SecondReader1796400000000 } from './1796400000000-secondReader.ts'
 import { Reviewing1796400000001 } from './1796400000001-reviewing.ts'
 import { Reissues1796400000002 } from './1796400000002-reissues.ts'
+import { Comments1796500000000 } from './1796500000000-comments.ts'
 
 /** In order. A migration that has been released is never edited. */
 export const migrations = [
@@ -37,4 +38,5 @@ export const migrations = [
   SecondReader1796400000000,
   Reviewing1796400000001,
   Reissues1796400000002,
+  Comments1796500000000,
 ]

@@ -50,6 +50,10 @@ export function applyEvent(client: QueryClient, campaign: string, event: StreamE
       placeAssignment(client, event)
       void client.invalidateQueries({ queryKey: ['campaign', campaign] })
       return
+    case 'comment':
+      void client.invalidateQueries({ queryKey: ['comments', campaign, event.candidateKey] })
+      void client.invalidateQueries({ queryKey: ['mentions', campaign] })
+      return
     case 'rescoring':
       return placeRescoring(client, campaign, event.rescoring)
     case 'library':

@@ -17,9 +17,13 @@ export interface StoredCandidate {
   readonly heights: number[]
 }
 
-/** A real candidate on the Newton polytope of a weight system, from |v|² and noise of a seed. */
-export function storedCandidate(weights: readonly number[], seed: number): StoredCandidate {
-  const polytope = polytopeFromWeights([...weights], 'newton')
+/** A real candidate on a polytope of a weight system, from |v|² and noise of a seed. */
+export function storedCandidate(
+  weights: readonly number[],
+  seed: number,
+  side: 'fan' | 'newton' = 'newton',
+): StoredCandidate {
+  const polytope = polytopeFromWeights([...weights], side)
   const form = normalForm(polytope)
   const heights = quadraticHeights(form.polytope, { seed, noise: 0.49 })
   const given = classFromHeights(form.polytope, heights)

@@ -13,6 +13,7 @@ import { ShortlistTable } from '../shortlists/ShortlistTable.tsx'
 import { TargetTable } from '../targets/TargetTable.tsx'
 import { EditCampaign } from './EditCampaign.tsx'
 import { FirstSteps } from './FirstSteps.tsx'
+import { Mentions } from './Mentions.tsx'
 import { Members } from './Members.tsx'
 
 export function CampaignPage() {
@@ -52,6 +53,7 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
       </PageHead>
 
       <FirstSteps campaign={campaign} />
+      <Mentions campaign={campaign.id} />
       <Section
         margin
         title="To review"

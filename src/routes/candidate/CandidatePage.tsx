@@ -9,6 +9,7 @@ import { Facts, PageHead, Section } from '../../components/ui/Layout.tsx'
 import { Num } from '../../components/ui/Num.tsx'
 import { QueryView } from '../../components/ui/States.tsx'
 import { AtlasSection } from './AtlasSection.tsx'
+import { CommentSection } from './CommentSection.tsx'
 import { CompareWith } from './CompareWith.tsx'
 import { CertificateSection } from './CertificateSection.tsx'
 import { ComponentSection } from './ComponentSection.tsx'
@@ -86,6 +87,9 @@ export function CandidatePage() {
             campaign={campaign?.id ?? null}
             candidate={detail.key}
           />
+          {campaign && (
+            <CommentSection key={`comments-${detail.key}`} campaign={campaign.id} candidate={detail.key} />
+          )}
           {campaign && <Provenance campaign={campaign.id} candidate={detail.key} record={record} />}
         </>
       )}
