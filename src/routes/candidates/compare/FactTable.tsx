@@ -3,6 +3,7 @@ import { Link } from 'react-router-dom'
 import { type CandidateGeometry } from '../../../../shared/candidates.ts'
 import { Num } from '../../../components/ui/Num.tsx'
 import { Table, Td, Th } from '../../../components/ui/Table.tsx'
+import { volumePrecision } from './candidateDifferences.ts'
 
 type Fact = readonly [name: string, of: (geometry: CandidateGeometry) => number | string]
 
@@ -26,6 +27,11 @@ const facts: readonly Fact[] = [
   ['Cone: edge curves suffice', ({ reference }) => (reference.edgeCurvesSuffice ? 'yes' : 'no')],
   ['Largest eigenvalue, divisor spectrum', ({ topEigenvalue }) => topEigenvalue],
 ]
+
+const agree = (a: number | string, b: number | string): boolean =>
+  typeof a === 'number' && typeof b === 'number'
+    ? Math.abs(a - b) <= volumePrecision * Math.max(Math.abs(a), Math.abs(b))
+    : a === b
 
 /** What two candidates are, line by line; what differs is marked. */
 export function FactTable({
@@ -68,7 +74,7 @@ export function FactTable({
                   {shown(value)}
                 </Td>
               ))}
-              <Td>{values[0] === values[1] ? <span className="text-soft">–</span> : 'yes'}</Td>
+              <Td>{agree(...values) ? <span className="text-soft">–</span> : 'yes'}</Td>
             </tr>
           )
         })}

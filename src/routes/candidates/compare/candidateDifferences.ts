@@ -126,8 +126,8 @@ export interface DivisorDifference {
   readonly change: number
 }
 
-/** Volumes that agree to this relative precision count as equal: both are solutions of a quadratic program. */
-const volumePrecision = 1e-7
+/** Volumes and eigenvalues that agree to this relative precision count as equal: both are solutions of a quadratic program. */
+export const volumePrecision = 1e-7
 
 /** Every divisor with its numbers in both classes; `differs` says in which. */
 export function divisorDifferences(a: CandidateGeometry, b: Relabelled): DivisorDifference[] {
