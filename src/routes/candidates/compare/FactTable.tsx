@@ -46,21 +46,21 @@ export function FactTable({
   const shown = (value: number | string): ReactNode =>
     typeof value === 'number' ? <Num value={value} digits={6} /> : value
   return (
-    <Table label="Facts of both candidates">
+    <Table label="Facts of both candidates" className="max-sm:table-fixed">
       <thead>
         <tr>
           <Th>
             <span className="sr-only">Fact</span>
           </Th>
           {([a, b] as const).map(({ key }, place) => (
-            <Th key={key} numeric>
+            <Th key={key} numeric className="whitespace-normal">
               {'AB'[place]}{' '}
               <Link to={addressOf(key)} className="font-mono text-action hover:underline">
                 {key.slice(0, 10)}
               </Link>
             </Th>
           ))}
-          <Th>Differs</Th>
+          <Th className="max-sm:w-14">Differs</Th>
         </tr>
       </thead>
       <tbody>
@@ -68,7 +68,7 @@ export function FactTable({
           const values = [of(a), of(b)] as const
           return (
             <tr key={name}>
-              <Td className="text-soft whitespace-normal">{name}</Td>
+              <Td className="py-1 text-soft whitespace-normal">{name}</Td>
               {values.map((value, place) => (
                 <Td key={place} numeric className="whitespace-normal [overflow-wrap:anywhere]">
                   {shown(value)}
