@@ -108,6 +108,7 @@ export {
   type SearchProgressReport,
 } from './search/progress.ts'
 export { nullLaw } from './search/sampling.ts'
+export { nullLawNames, nullLaws, type NullLawName } from './search/nullLaws.ts'
 export { mergedSurrogate, type SurrogateReport } from './search/surrogate/report.ts'
 export {
   islandBudget,

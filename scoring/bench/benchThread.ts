@@ -4,6 +4,7 @@ import type { Evaluated } from '../search/island.ts'
 import { OutcomeMemo } from '../search/memo.ts'
 import { meritOf, type Merit } from '../search/merit.ts'
 import type { MethodName } from '../search/methods.ts'
+import type { NullLawName } from '../search/nullLaws.ts'
 import type { SearchProblem } from '../search/problem.ts'
 import type { RunEnd } from '../search/state.ts'
 import { searchTasks, taskScope } from './searchTasks.ts'
@@ -16,6 +17,8 @@ export interface BenchJob {
   readonly budget: number
   /** Evaluations after which to stop; absent: the whole budget. */
   readonly evaluations?: number
+  /** Random sampling: the law of its draws. */
+  readonly law?: NullLawName
 }
 
 /** What a run evaluated, in order. */
@@ -35,6 +38,7 @@ export default function benchRun({
   seed,
   budget,
   evaluations = budget,
+  law,
 }: BenchJob): BenchRun {
   let scope = opened.get(name)
   if (scope === undefined) {
@@ -47,7 +51,7 @@ export default function benchRun({
     polytopes: scope.polytopes,
     rule: scope.rule,
     method,
-    settings: searchSettingsSchema.parse({ budget, keep: 1, sample: 0 }),
+    settings: searchSettingsSchema.parse({ budget, keep: 1, sample: 0, law }),
   }
   const merits: Merit[] = []
   const classKeys: string[] = []

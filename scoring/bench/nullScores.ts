@@ -3,7 +3,7 @@ import { fileURLToPath } from 'node:url'
 import { scoringHash } from '../rules/hash.ts'
 import { ruleOfInput } from '../evaluation/input.ts'
 import { compareMerits, type Merit } from '../search/merit.ts'
-import { nullLaw } from '../search/sampling.ts'
+import { nullLaws, type NullLawName } from '../search/nullLaws.ts'
 import { engineVersion } from '../version.ts'
 import type { BenchThreads } from './benchThreads.ts'
 import type { SearchTask } from './searchTasks.ts'
@@ -23,16 +23,18 @@ export async function nullMerits(
   task: SearchTask,
   size: number,
   threads: BenchThreads,
+  law: NullLawName,
 ): Promise<readonly Merit[]> {
   const hash = scoringHash(ruleOfInput(task.rule), engineVersion)
   const portions = await Promise.all(
     Array.from({ length: Math.ceil(size / portionSize) }, async (_, portion) => {
-      const path = `${folder}null-${task.name}-${nullLaw.name.replace('/', '-')}-${hash.slice(0, 16)}-${portion}.json`
+      const path = `${folder}null-${task.name}-${nullLaws[law].name.replace('/', '-')}-${hash.slice(0, 16)}-${portion}.json`
       const kept = readPortion(path)
       if (kept !== undefined) return kept
       const { merits, classKeys } = await threads.run({
         task: task.name,
         method: 'random',
+        law,
         seed: firstSeed + portion,
         budget: portionSize,
       })

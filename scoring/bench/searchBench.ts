@@ -1,10 +1,11 @@
 /**
  * `npm run bench:search`: how many distinct evaluations each method takes to come by candidates that are rare among
- * random ones, on fixed tasks. Exit status 1 when a stated aim is missed.
+ * random ones, by either law of null samples, on fixed tasks. Exit status 1 when a stated aim, which is against the usual
+ * law, is missed.
  *
  *     npm run bench:search -- [--task NAME,...] [--seeds N] [--from SEED] [--threads N] [--quick]
  *
- * The null samples, 3,000 candidates each, are kept under var/bench: the first run takes some minutes longer.
+ * The null samples, 3,000 candidates for each law, are kept under var/bench: the first run takes some minutes longer.
  * `--quick`: five seeds, without the tasks at h11 = 251 and 491.
  */
 import { availableParallelism } from 'node:os'
@@ -18,7 +19,9 @@ import {
   measuredRandom,
   quartiles,
   type Measured,
+  type MeritSequence,
 } from './searchMeasures.ts'
+import { nullLawNames, usualNullLaw, type NullLawName } from '../search/nullLaws.ts'
 import { searchTasks, taskBudget, type SearchTask } from './searchTasks.ts'
 
 const { values } = parseArgs({
@@ -55,28 +58,41 @@ const print = (line: string): boolean => process.stdout.write(`${line}\n`)
 const table: string[] = []
 const missed: string[] = []
 
-/** One task: its null, its methods, and what auto has missed. */
+/** A task's null by one of the laws. */
+interface NullOfTask {
+  readonly law: NullLawName
+  readonly merits: MeritSequence
+  readonly random: Measured
+}
+
+/** One task: its nulls, its methods, and what auto has missed. */
 async function runTask(task: SearchTask): Promise<void> {
   const { name, watched } = task
-  const merits = await nullMerits(task, nullSize, threads)
+  const nulls: NullOfTask[] = []
+  for (const law of nullLawNames) {
+    const merits = await nullMerits(task, nullSize, threads, law)
+    nulls.push({ law, merits, random: measuredRandom(merits, watched) })
+  }
   print(`${name}: ${task.title}`)
-  const random = measuredRandom(merits, watched)
-  row(task, 'random', random)
+  for (const { law, random } of nulls) row(task, 'random', law, random)
   for (const method of guided) {
     const jobs = Array.from({ length: seeds }, (_, n) =>
       threads.run({ task: name, method, seed: from + n, budget: taskBudget, evaluations: watched }),
     )
     const runs = await Promise.all(jobs)
-    const ours = measured(
-      runs.map((run) => run.merits),
-      merits,
-      watched,
-    )
-    row(task, method, ours)
-    if (method === 'auto' && task.demanding) judge(name, ours, random)
+    const found = runs.map((run) => run.merits)
+    for (const { law, merits, random } of nulls) {
+      const ours = measured(found, merits, watched)
+      row(task, method, law, ours)
+      if (method === 'auto' && law === usualNullLaw && task.demanding) judge(name, ours, random)
+    }
   }
-  const high = highMerit(merits)
-  table.push(`${' '.repeat(24)}null: 99.9 % ${score(high.value)}, best ${score(merits[0].value)}`)
+  for (const { law, merits } of nulls) {
+    const high = highMerit(merits)
+    table.push(
+      `${' '.repeat(24)}null ${law}: 99.9 % ${score(high.value)}, best of ${merits.length} ${score(merits[0].value)}`,
+    )
+  }
   if (task.enumerable !== undefined) await enumerate(task, task.enumerable)
 }
 
@@ -106,7 +122,12 @@ function judge(name: string, auto: Measured, random: Measured): void {
 const count = (n: number): string => (n === Infinity ? 'more' : String(n))
 const score = (value: number): string => (Number.isInteger(value) ? String(value) : value.toFixed(3))
 
-function row({ name }: SearchTask, method: string, { toHigh, toBest, early, late }: Measured): void {
+function row(
+  { name }: SearchTask,
+  method: string,
+  law: NullLawName,
+  { toHigh, toBest, early, late }: Measured,
+): void {
   const evaluations = (values: readonly number[]): string => {
     const [low, median, high] = quartiles(values)
     return `${count(median)} [${count(low)}, ${count(high)}]`.padEnd(20)
@@ -115,6 +136,7 @@ function row({ name }: SearchTask, method: string, { toHigh, toBest, early, late
   const line = [
     name.padEnd(12),
     method.padEnd(10),
+    law.padEnd(10),
     evaluations(toHigh),
     evaluations(toBest),
     middle(early),
@@ -134,7 +156,7 @@ print(
     `${earlyCount} evaluations and after all that are watched: medians. Budget ${taskBudget}; random is drawn from the null itself.`,
 )
 print(
-  `${'task'.padEnd(12)} ${'method'.padEnd(10)} ${'to 99.9 %'.padEnd(20)} ${'to the best'.padEnd(20)} ${`after ${earlyCount}`.padStart(9)}   watched`,
+  `${'task'.padEnd(12)} ${'method'.padEnd(10)} ${'null'.padEnd(10)} ${'to 99.9 %'.padEnd(20)} ${'to the best'.padEnd(20)} ${`after ${earlyCount}`.padStart(9)}   watched`,
 )
 for (const line of table) print(line)
 for (const line of missed) print(`MISSED ${line}`)

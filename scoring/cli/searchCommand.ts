@@ -134,14 +134,14 @@ function jobsOf(spec: SearchSpec): SegmentInput[] {
     proposals: segmentProposals,
   }))
   if (spec.null === undefined) return jobs
-  const { size } = spec.null
+  const { size, law } = spec.null
   return [
     ...jobs,
     {
       polytopes,
       ruleText,
       method: 'random',
-      settings: { budget: size, islands: 1, keep: 20, sample: size },
+      settings: { budget: size, islands: 1, keep: 20, sample: size, ...(law && { law }) },
       seed: spec.null.seed,
       island: 0,
       state: null,

@@ -5,6 +5,7 @@ import { canonicalClass } from '../geometry/classKey.ts'
 import { normalForm, type NormalForm } from '../geometry/normalForm.ts'
 import { classFromHeights } from '../geometry/twoFaceClass.ts'
 import { isMethodName, methodNames } from '../search/methods.ts'
+import type { NullLawName } from '../search/nullLaws.ts'
 import { nullSizeLimit } from '../search/nullSample.ts'
 import { extensionsSchema } from '../search/extensions.ts'
 import type { PolytopeEntry } from '../search/polytopeSource.ts'
@@ -43,6 +44,7 @@ export const searchSpecSchema = z.strictObject({
         .min(0)
         .max(2 ** 31)
         .default(1),
+      law: settings.law,
     })
     .optional(),
 })
@@ -56,7 +58,7 @@ export interface SearchSpec {
   readonly settings: SearchSettings
   readonly starts: readonly GivenStart[]
   readonly extensions: readonly number[]
-  readonly null?: { readonly size: number; readonly seed: number }
+  readonly null?: { readonly size: number; readonly seed: number; readonly law?: NullLawName | undefined }
 }
 
 /**

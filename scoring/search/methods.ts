@@ -4,7 +4,9 @@ import { exhaustive } from './exhaustive.ts'
 import { genetic } from './genetic.ts'
 import { lineSearch } from './lines/lineSearch.ts'
 import type { Method } from './method.ts'
+import { lawOfState, lawText } from './nullLaws.ts'
 import { randomSampling } from './randomSampling.ts'
+import type { Json } from './state.ts'
 import { tempering } from './tempering.ts'
 import { uniformWalk } from './uniformWalk.ts'
 
@@ -31,8 +33,13 @@ export function usesStarts(name: string): boolean {
   return isMethodName(name) && (methods[name] as Method).ignoresStarts !== true
 }
 
-/** The law by which a method draws its candidates, in words; null for a guided search, which is no sample. */
-export function lawOf(name: MethodName): string | null {
+/**
+ * The law by which a method draws its candidates, in words; null for a guided search, which is no sample.
+ *
+ * @param chain the state of the method's chain
+ */
+export function lawOf(name: MethodName, chain: Json): string | null {
+  if (name === 'random') return lawText(lawOfState(chain))
   const { law }: Method = methods[name]
   return law === undefined ? null : `${law.name}: ${law.description}`
 }

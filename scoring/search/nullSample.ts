@@ -3,9 +3,9 @@ import { advance, startState } from './advance.ts'
 import { Histogram, type HistogramView } from './histogram.ts'
 import type { IslandHooks } from './island.ts'
 import { feasibleKind } from './merit.ts'
+import { lawOfState, lawText, usualNullLaw, type NullLawName } from './nullLaws.ts'
 import type { SearchProblem } from './problem.ts'
 import { rankedScores, type RankedScores } from './rankedScores.ts'
-import { nullLaw } from './sampling.ts'
 import { searchSettingsSchema } from './settings.ts'
 import type { SearchState } from './state.ts'
 import { bestRange, expectedBest, medianOf, quantileOf, rateOf, type Rate } from './statistics.ts'
@@ -50,12 +50,13 @@ export function nullProblem(
   scope: Pick<SearchProblem, 'polytopes' | 'rule'>,
   size: number,
   keep = 20,
+  law: NullLawName = usualNullLaw,
 ): SearchProblem {
   return {
     polytopes: scope.polytopes,
     rule: scope.rule,
     method: 'random',
-    settings: searchSettingsSchema.parse({ budget: size, islands: 1, keep, sample: size }),
+    settings: searchSettingsSchema.parse({ budget: size, islands: 1, keep, sample: size, law }),
   }
 }
 
@@ -68,8 +69,9 @@ export function nullSample(
   seed: number,
   size: number,
   hooks: IslandHooks = {},
+  law: NullLawName = usualNullLaw,
 ): { readonly state: SearchState; readonly summary: NullSummary } {
-  const problem = nullProblem(scope, size)
+  const problem = nullProblem(scope, size, undefined, law)
   const { state } = advance(problem, startState(problem, seed), size, hooks)
   return { state, summary: nullSummary(state, scope.rule) }
 }
@@ -85,7 +87,7 @@ export function nullSummary(state: SearchState, rule: Pick<CheckedRule, 'hit'>):
   const above = quantile99 === null ? null : scores.filter((score) => score > quantile99).length
   const hits = rule.hit === null ? above : state.hits
   return {
-    law: `${nullLaw.name}: ${nullLaw.description}`,
+    law: lawText(lawOfState(state.chain)),
     seed: state.seed,
     size: state.budget,
     evaluated,

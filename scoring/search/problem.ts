@@ -5,6 +5,7 @@ import type { CheckedRule } from '../rules/checkedRule.ts'
 import { scoringHash } from '../rules/hash.ts'
 import { engineVersion } from '../version.ts'
 import { methods, type MethodName } from './methods.ts'
+import { usualNullLaw } from './nullLaws.ts'
 import type { PolytopeSource } from './polytopeSource.ts'
 import { seenWordsVersion } from './seenWords.ts'
 import type { SearchSettings } from './settings.ts'
@@ -64,9 +65,13 @@ export function problemDigest({ polytopes, rule, method, settings, starts = [] }
     scope: scopeDigest(polytopes.keys),
     scoring: scoringHash(rule, engineVersion),
     method: [method, methods[method].version],
-    // Left out when off, so that states from before there was a choice stay what they were.
+    // Left out where they are as usual, so that states from before there was a choice stay what they were.
     settings: Object.entries(settings)
-      .filter(([name, value]) => name !== 'surrogate' || value !== false)
+      .filter(
+        ([name, value]) =>
+          !(name === 'surrogate' && value === false) &&
+          !(name === 'law' && (value ?? usualNullLaw) === usualNullLaw),
+      )
       .sort(([a], [b]) => (a < b ? -1 : 1)),
     ...(starts.length > 0 && { starts: startsDigest(starts) }),
     seen: seenWordsVersion,

@@ -70,7 +70,7 @@ export function searchStatistics(
     .map(({ value }) => value)
   const best = Math.max(...islands.flatMap(({ curve }) => curve.slice(-1).map(([, score]) => score)))
   return {
-    law: law !== undefined && isMethodName(law) ? lawOf(law) : null,
+    law: law !== undefined && isMethodName(law) ? lawOf(law, first?.chain ?? null) : null,
     exact: enumerated,
     hitLine,
     rate,

@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { heightCodeBytes } from './heightsCode.ts'
+import { nullLawNames } from './nullLaws.ts'
 import { seenSlotBytes } from './seenTable.ts'
 import { surrogateStateBytes } from './surrogate/surrogate.ts'
 
@@ -22,6 +23,8 @@ export const searchSettingsSchema = z.strictObject({
   sample: z.number().int().min(0).max(10_000).default(256),
   /** A surrogate chooses among proposals of the guided methods, where the rule needs a reference point. */
   surrogate: z.boolean().default(false),
+  /** Random sampling: the law of its draws; absent: the usual one. */
+  law: z.enum(nullLawNames).optional(),
 })
 export type SearchSettings = z.infer<typeof searchSettingsSchema>
 

@@ -10,13 +10,16 @@ const nullShare = 0.2
 /** Spreads of the logarithms of the facets' coefficients. */
 const spreads = [0.5, 1, 2] as const
 
-/**
- * Where a guided search begins: a fifth by the null's law, which stays near one quadratic form; else heights
- * sum_a c_a f_a with the potentials of `facetPotentials`, log c_a normal with a spread of 1/2, 1 or 2, and noise that
- * breaks ties. These reach triangulations of quite different shapes.
- */
+/** Where a guided search begins: a fifth by the usual null law, which stays near one quadratic form; else `drawShaped`. */
 export function drawStart(polytope: Polytope, stream: RandomStream): PlacedHeights {
-  if (stream.uniform() < nullShare) return drawNull(polytope, stream)
+  return stream.uniform() < nullShare ? drawNull(polytope, stream) : drawShaped(polytope, stream)
+}
+
+/**
+ * Heights sum_a c_a f_a with the potentials of `facetPotentials`, log c_a normal with a spread of 1/2, 1 or 2, and noise
+ * that breaks ties. These reach triangulations of quite different shapes.
+ */
+export function drawShaped(polytope: Polytope, stream: RandomStream): PlacedHeights {
   const offset = potentialOffsets[stream.below(potentialOffsets.length)]
   const spread = spreads[stream.below(spreads.length)]
   const scale = searchHeightBound / 4
