@@ -15,7 +15,7 @@ export function Loading({ what, shape = 'lines' }: { what: string; shape?: Loadi
       <span role="status" className="sr-only">
         Loading {what}…
       </span>
-      <div aria-hidden>
+      <div aria-hidden className="opacity-60">
         {shape === 'page' && (
           <div className="border-b pt-5 pb-4">
             <div className="my-1 h-7 w-64 max-w-full rounded bg-line" />

@@ -1,7 +1,8 @@
 import { Link } from 'react-router-dom'
 import { explorationSizeLimit, type Place } from '../../../shared/explorations.ts'
 import { describeScope } from '../../components/scope/scopeAddress.ts'
-import { isEmptyScope, ScopeFields } from '../../components/scope/ScopeFields.tsx'
+import { ScopeFold } from '../../components/scope/ScopeFold.tsx'
+import { ScopeFields } from '../../components/scope/ScopeFields.tsx'
 import { Select, TextField } from '../../components/ui/Field.tsx'
 import { formatNumber } from '../../lib/numbers.ts'
 import { type ExploreView } from './exploreAddress.ts'
@@ -18,10 +19,14 @@ interface SourceFieldsProps {
 export function NullSourceFields({ campaign, view, onChange }: SourceFieldsProps) {
   const { scope, size, seed } = view
   return (
-    <details open={isEmptyScope(scope) || undefined}>
-      <summary className="text-soft">
-        Null sample of {formatNumber(size)} from <span className="text-ink">{describeScope(scope)}</span>
-      </summary>
+    <ScopeFold
+      scope={scope}
+      summary={
+        <>
+          Null sample of {formatNumber(size)} from <span className="text-ink">{describeScope(scope)}</span>
+        </>
+      }
+    >
       <div className="mt-3 flex flex-col gap-3 pb-1">
         <ScopeFields campaign={campaign} scope={scope} onScope={(next) => onChange({ scope: next })} />
         <div className="flex flex-wrap gap-3">
@@ -45,7 +50,7 @@ export function NullSourceFields({ campaign, view, onChange }: SourceFieldsProps
           />
         </div>
       </div>
-    </details>
+    </ScopeFold>
   )
 }
 
