@@ -1,3 +1,4 @@
+import { memo } from 'react'
 import { type EditorView } from '@codemirror/view'
 import { CircleAlert, TriangleAlert, Wrench } from 'lucide-react'
 import { type RuleIssue } from '../../../scoring/index.ts'
@@ -5,8 +6,15 @@ import { Button } from '../ui/Button.tsx'
 import { Message } from './Message.tsx'
 import { applySuggestion } from './ruleLint.ts'
 
+interface IssueListProps {
+  issues: readonly RuleIssue[]
+  view: EditorView | null
+  /** The text has changed since: places and repairs are those of a text some keys ago. */
+  outdated: boolean
+}
+
 /** What the checker says, in words and with its place; a repair that is known takes one click. */
-export function IssueList({ issues, view }: { issues: readonly RuleIssue[]; view: EditorView | null }) {
+export const IssueList = memo(function IssueList({ issues, view, outdated }: IssueListProps) {
   if (issues.length === 0) return null
   const goTo = (issue: RuleIssue) => {
     if (!view) return
@@ -48,6 +56,7 @@ export function IssueList({ issues, view }: { issues: readonly RuleIssue[]; view
               <Button
                 kind="quiet"
                 className="-my-1"
+                unavailable={outdated && 'The rule has changed and is being checked.'}
                 onClick={() => view && applySuggestion(view, suggestion)}
               >
                 <Wrench size={13} aria-hidden />
@@ -59,4 +68,4 @@ export function IssueList({ issues, view }: { issues: readonly RuleIssue[]; view
       })}
     </ul>
   )
-}
+})

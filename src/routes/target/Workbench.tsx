@@ -97,7 +97,7 @@ export function Workbench({ campaign, target, text, onText, checked, proposed, v
           onRename={ask}
           label="Scoring rule"
         />
-        {current && report && <IssueList issues={report.issues} view={view} />}
+        {report && <IssueList issues={report.issues} view={view} outdated={!current} />}
         <div className="mt-2 flex flex-wrap items-center gap-x-2 gap-y-1 text-xs text-soft">
           <span role="status" className="min-w-48 flex-1">
             {standing(checked)}

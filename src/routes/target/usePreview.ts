@@ -24,7 +24,7 @@ export interface PreviewState {
 }
 
 /** After the checker's own pause. */
-const typingPause = 350
+const typingPause = 200
 
 /** States of one preview only grow; an older state that arrives late is dropped. */
 export function newerState(known: Preview | undefined, next: Preview): Preview {
