@@ -57,17 +57,18 @@ describe('line differences', () => {
 })
 
 describe('text differences', () => {
-  it('mark the words that changed, and leave lines without a common word whole', () => {
-    const [changed, other] = textDifference(
+  it('mark the words that changed, and lay lines beside those they became', () => {
+    const [added, changed, removed] = textDifference(
       'score log10(volume) + 1\nhit h11 > 3',
-      'score log10(volume) + 2\nreport euler',
+      'let a = 1\nscore log10(volume) + 2',
     )
+    expect(added).toEqual({ before: null, after: [{ text: 'let a = 1', changed: true }], same: false })
     expect(changed?.before).toEqual([
       { text: 'score log10(volume) + ', changed: false },
       { text: '1', changed: true },
     ])
     expect(changed?.after?.at(-1)).toEqual({ text: '2', changed: true })
-    expect(other?.before).toEqual([{ text: 'hit h11 > 3', changed: true }])
+    expect(removed).toEqual({ before: [{ text: 'hit h11 > 3', changed: true }], after: null, same: false })
   })
 
   it('keep both texts', () => {

@@ -11,9 +11,15 @@ interface DifferencesProps {
 
 /** Two texts of a rule, compared. Removed and added are told apart by sign and word, too. */
 export function Differences({ before, after, names, sideBySide }: DifferencesProps) {
-  const rows = useMemo(() => textDifference(before, after), [before, after])
+  const rows = useMemo(() => withoutLastBreak(textDifference(before, after)), [before, after])
   if (before === after) return <p className="mt-2 text-soft">The two texts are the same.</p>
   return sideBySide ? <Beside rows={rows} names={names} /> : <Inline rows={rows} names={names} />
+}
+
+/** The line break at the end of both texts is no line to look at. */
+function withoutLastBreak(rows: readonly DifferenceRow[]): readonly DifferenceRow[] {
+  const last = rows.at(-1)
+  return last?.same && last.after?.every(({ text }) => text === '') ? rows.slice(0, -1) : rows
 }
 
 interface RowsProps {

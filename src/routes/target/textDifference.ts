@@ -19,8 +19,7 @@ export function textDifference(before: string, after: string): DifferenceRow[] {
   let removed: string[] = []
   let added: string[] = []
   const flush = () => {
-    for (let at = 0; at < Math.max(removed.length, added.length); at++)
-      rows.push(pairOf(removed[at] ?? null, added[at] ?? null))
+    rows.push(...pairsOf(removed, added))
     removed = []
     added = []
   }
@@ -37,6 +36,41 @@ export function textDifference(before: string, after: string): DifferenceRow[] {
   return rows
 }
 
+/** Lines that were changed, each beside the one it became: the pairs in order that share the most words. */
+function pairsOf(removed: readonly string[], added: readonly string[]): DifferenceRow[] {
+  const width = added.length + 1
+  const most = new Float64Array((removed.length + 1) * width)
+  const shared = (i: number, j: number) => sharedWords(removed[i] ?? '', added[j] ?? '')
+  for (let i = removed.length - 1; i >= 0; i--)
+    for (let j = added.length - 1; j >= 0; j--)
+      most[i * width + j] = Math.max(
+        most[(i + 1) * width + j] ?? 0,
+        most[i * width + j + 1] ?? 0,
+        (most[(i + 1) * width + j + 1] ?? 0) + shared(i, j),
+      )
+  const rows: DifferenceRow[] = []
+  let [i, j] = [0, 0]
+  while (i < removed.length || j < added.length) {
+    const worth = most[i * width + j] ?? 0
+    if (i < removed.length && j < added.length && worth > 0) {
+      if (worth === (most[(i + 1) * width + j] ?? 0)) rows.push(pairOf(removed[i++] ?? '', null))
+      else if (worth === (most[i * width + j + 1] ?? 0)) rows.push(pairOf(null, added[j++] ?? ''))
+      else rows.push(pairOf(removed[i++] ?? '', added[j++] ?? ''))
+    } else if (i < removed.length) rows.push(pairOf(removed[i++] ?? '', null))
+    else rows.push(pairOf(null, added[j++] ?? ''))
+  }
+  return rows
+}
+
+/** Names and numbers that two lines have in common, in order; the word that opens the statement counts most. */
+function sharedWords(a: string, b: string): number {
+  const common = lineDifferences(wordsOf(a), wordsOf(b)).filter(
+    ({ kind, text }) => kind === 'same' && /\w/.test(text),
+  ).length
+  const opens = common > 0 && a.trim().split(/\s/)[0] === b.trim().split(/\s/)[0]
+  return common + (opens ? 3 : 0)
+}
+
 const whole = (text: string): Piece[] => [{ text, changed: true }]
 
 function pairOf(before: string | null, after: string | null): DifferenceRow {
@@ -47,9 +81,6 @@ function pairOf(before: string | null, after: string | null): DifferenceRow {
       same: false,
     }
   const words = lineDifferences(wordsOf(before), wordsOf(after))
-  const kept = words.filter(({ kind, text }) => kind === 'same' && /\w/.test(text)).length
-  // Two lines that share no word are two lines, not one that has changed.
-  if (kept === 0) return { before: whole(before), after: whole(after), same: false }
   return {
     before: piecesOf(words.filter(({ kind }) => kind !== 'added')),
     after: piecesOf(words.filter(({ kind }) => kind !== 'removed')),
