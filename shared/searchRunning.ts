@@ -1,4 +1,5 @@
 import { z } from 'zod'
+import type { NullLawName } from '../scoring/index.ts'
 import { candidateKeySchema } from './keys.ts'
 import { pastedLimitBytes, polytopeKeySchema, scopeSchema } from './polytopes.ts'
 
@@ -18,6 +19,8 @@ export const startsSourceSchema = z.discriminatedUnion('kind', [
 ])
 export type StartsSource = z.infer<typeof startsSourceSchema>
 
+const nullLawNames = ['quadratic', 'potentials'] as const satisfies readonly NullLawName[]
+
 /** Settings of methods, beyond those of every search. */
 export const methodSettingsSchema = z.object({
   /** Annealing: fresh starts among which an island's budget is divided. */
@@ -26,6 +29,8 @@ export const methodSettingsSchema = z.object({
   patience: z.number().int().min(10).max(1_000_000).optional(),
   /** Rows of the uniform sample of evaluations that an island keeps. */
   sample: z.number().int().min(0).max(10_000).optional(),
+  /** Random: the law of its draws, where it is not the usual one. */
+  law: z.enum(nullLawNames).optional(),
 })
 export type MethodSettings = z.infer<typeof methodSettingsSchema>
 

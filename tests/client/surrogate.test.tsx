@@ -3,6 +3,8 @@ import { render, screen } from '@testing-library/react'
 import { userEvent } from '@testing-library/user-event'
 import { describe, expect, it } from 'vitest'
 import { SurrogateFacts } from '../../src/routes/search/SurrogateFacts.tsx'
+import { MethodFields } from '../../src/routes/searches/new/MethodFields.tsx'
+import type { Draft } from '../../src/routes/searches/new/searchPreset.ts'
 import { SurrogateBox } from '../../src/routes/searches/new/SurrogateBox.tsx'
 import type { SearchDetail, SurrogateReport } from '../../shared/searches.ts'
 
@@ -45,5 +47,26 @@ describe('the box of the composer', () => {
     expect(told).toEqual([false])
     rerender(box('random'))
     expect([input.checked, input.disabled]).toEqual([false, true])
+  })
+
+  it('is off at first for tempering, where it does not pay', async () => {
+    const changes: Partial<Draft>[] = []
+    const draft = { method: 'annealing', surrogate: true } as Draft
+    render(
+      <MethodFields
+        draft={draft}
+        onChange={(change) => changes.push(change)}
+        name=""
+        onName={() => undefined}
+        fault={() => null}
+      />,
+    )
+    const method = screen.getByLabelText('Method')
+    await userEvent.selectOptions(method, 'tempering')
+    await userEvent.selectOptions(method, 'genetic')
+    expect(changes).toEqual([
+      { method: 'tempering', surrogate: false },
+      { method: 'genetic', surrogate: true },
+    ])
   })
 })

@@ -1,6 +1,6 @@
 import { searchMethods } from '../../../../shared/searches.ts'
 import { Select, TextField } from '../../../components/ui/Field.tsx'
-import { type Draft } from './searchPreset.ts'
+import { surrogateByDefault, type Draft } from './searchPreset.ts'
 import { SurrogateBox } from './SurrogateBox.tsx'
 
 const methods = Object.entries(searchMethods)
@@ -73,7 +73,10 @@ export function MethodFields({
         label="Method"
         className="col-span-2 sm:col-span-4"
         value={method}
-        onChange={(event) => onChange({ method: event.target.value as Draft['method'] })}
+        onChange={(event) => {
+          const chosen = event.target.value as Draft['method']
+          onChange({ method: chosen, surrogate: surrogateByDefault(chosen) })
+        }}
         options={methods}
       />
       {numbers

@@ -24,6 +24,9 @@ export interface Draft {
 
 const texts = ['budget', 'seed', 'islands', 'keep', 'descents', 'patience'] as const
 
+/** Whether a method has a surrogate unless somebody decides otherwise: it pays for all guided ones but tempering. */
+export const surrogateByDefault = (method: Draft['method']): boolean => method !== 'tempering'
+
 /** Polytopes and candidates that an address names one by one; of more it would grow too long to be passed on. */
 export const namedInAddress = 60
 export const candidatesInAddress = 200
