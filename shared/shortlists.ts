@@ -59,6 +59,8 @@ export const shortlistSummarySchema = z.object({
   waiting: z.array(assigneeSchema.extend({ open: z.number().int() })),
   /** Counts along a chain of issues, from 1. */
   issue: z.number().int(),
+  /** The list that it is a newer issue of. */
+  reissueOfId: z.string().nullable(),
   createdAt: z.string(),
   author: z.string(),
 })

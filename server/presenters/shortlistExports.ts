@@ -144,6 +144,9 @@ function provenanceRemarks({ provenance, searches }: ShortlistDetail): string[] 
           `Scored anew from: ${from.name} (${from.size} candidates; ${from.targetName}, version ${from.targetVersion}; scoring hash ${from.scoringHash})`,
         ]
       : []),
+    ...(provenance.takenOut === undefined
+      ? []
+      : [`Rows of an earlier issue taken out by hand since it was drawn: ${provenance.takenOut}`]),
     `Drawn from ${counts.distinct} distinct candidates of ${counts.finds} finds, ranked ${order}: ${limits.join(', ')}; left out: ${
       left.map(([why, count]) => `${count} ${why}`).join(', ') || 'none'
     }`,

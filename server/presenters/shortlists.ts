@@ -34,6 +34,7 @@ export function presentShortlistSummary(shortlist: Shortlist, tally: Tally): Sho
     oneReader: tally.oneReader,
     waiting: tally.waiting,
     issue: shortlist.issue,
+    reissueOfId: shortlist.reissueOfId,
     createdAt: shortlist.createdAt,
     author: shortlist.author?.name ?? '',
   }

@@ -96,7 +96,8 @@ async function countContents(
   const undecided = new Map<string, number>()
   const tallies = await tallyShortlists(manager, campaignIds)
   const owners = await manager.query<{ id: string; campaignId: string }[]>(
-    `SELECT id, campaignId FROM shortlist WHERE campaignId IN (${places})`,
+    `SELECT s.id AS id, s.campaignId AS campaignId FROM shortlist s WHERE s.campaignId IN (${places})
+       AND NOT EXISTS (SELECT 1 FROM shortlist n WHERE n.reissueOfId = s.id)`,
     [...campaignIds],
   )
   for (const { id, campaignId } of owners) {

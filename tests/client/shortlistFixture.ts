@@ -56,6 +56,7 @@ export function shortlist(rows: ShortlistRow[]): ShortlistDetail {
     oneReader: 0,
     waiting: [],
     issue: 1,
+    reissueOfId: null,
     reissueOf: null,
     reissues: [],
     createdAt: '2026-01-02T03:04:05.000Z',

@@ -7,6 +7,7 @@ import {
   listColumns,
   readConditions,
 } from '../../src/routes/shortlist/listColumns.ts'
+import { differenceOf } from '../../src/routes/shortlist/Issues.tsx'
 import { nextKey, nextUndecided, readView, visibleRows } from '../../src/routes/shortlist/shortlistView.ts'
 import { key, row, shortlist, verdict } from './shortlistFixture.ts'
 
@@ -110,5 +111,18 @@ describe('the view of a shortlist', () => {
     expect(nextUndecided(rows, key(1))).toBe(key(3))
     expect(nextUndecided(rows, key(4))).toBe(key(1))
     expect(nextUndecided([rows[1]!], key(2))).toBeNull()
+  })
+})
+
+describe('the difference between two issues', () => {
+  const placed = (...ranks: (number | null)[]) =>
+    ranks.map((before, at) => ({
+      rank: at + 1,
+      previous: before === null ? null : { rank: before, kind: 'feasible' as const, score: 0 },
+    }))
+
+  it('counts what entered and what passed others, not what closed a gap', () => {
+    expect(differenceOf(placed(2, 5, 9))).toEqual({ entered: 0, up: 0, down: 0, stayed: 3 })
+    expect(differenceOf(placed(null, 4, 2, 6))).toEqual({ entered: 1, up: 1, down: 1, stayed: 1 })
   })
 })

@@ -31,7 +31,9 @@ function Campaign({ campaign }: { campaign: CampaignDetail }) {
   const { newTarget, newSearch } = useCampaignActions()
   const active = campaign.searchList.filter(({ state }) => /^(running|queued|paused|failed)$/.test(state))
   const running = campaign.searchList.filter(({ state }) => state === 'running' || state === 'queued').length
-  const open = campaign.shortlistList.filter(({ undecided }) => undecided > 0)
+  // A list with a newer issue is reviewed there.
+  const issuedAnew = new Set(campaign.shortlistList.map(({ reissueOfId }) => reissueOfId))
+  const open = campaign.shortlistList.filter(({ id, undecided }) => undecided > 0 && !issuedAnew.has(id))
   const me = useSession().data?.account?.id
   const yours = open
     .flatMap(({ waiting }) => waiting.filter(({ id }) => id === me))

@@ -35,7 +35,7 @@ export function DecisionBar({
     <div
       role="group"
       aria-label="Candidate in hand"
-      className="sticky bottom-0 z-10 mb-4 flex flex-wrap items-center gap-x-3 gap-y-2 border-t border-edge bg-paper py-2"
+      className="sticky bottom-0 z-10 mb-4 flex flex-wrap items-center gap-x-3 gap-y-1 border-t border-edge bg-paper py-2 sm:gap-y-2"
     >
       <span aria-live="polite" className="inline-flex flex-wrap items-center gap-x-3">
         <span>
@@ -46,16 +46,16 @@ export function DecisionBar({
           <Outcome outcome={row.outcome} />
         </span>
         <VerdictMark verdict={row.verdict} version={version} twoReaders={twoReaders} />
-        <span className="inline-flex items-center gap-1">
+        <span className="hidden items-center gap-1 sm:inline-flex">
           <span className="text-soft">certificate:</span> <CertificateMark state={row.certificate.state} />
         </span>
         {row.assignee && (
-          <span>
+          <span className="hidden sm:inline">
             <span className="text-soft">assigned to</span> {row.assignee.name}
           </span>
         )}
       </span>
-      <span className="flex flex-wrap items-center gap-2 sm:ml-auto">
+      <span className="flex flex-wrap items-center gap-1 sm:ml-auto sm:gap-2">
         <IconButton label="Previous candidate" onClick={() => onStep(-1)}>
           <ArrowUp size={16} aria-hidden />
         </IconButton>
@@ -74,10 +74,10 @@ export function DecisionBar({
         </Button>
         <Button unavailable={barred} onClick={() => onDecide('undecided')}>
           <Circle size={14} className="text-soft" aria-hidden />
-          Undecided
+          <span className="max-sm:sr-only">Undecided</span>
           <Key name="u" />
         </Button>
-        {assign}
+        <span className="hidden sm:inline">{assign}</span>
         <ButtonLink kind="primary" to={dossier}>
           Dossier
         </ButtonLink>

@@ -10,7 +10,7 @@ export function Issues({ campaign, list }: { campaign: string; list: ShortlistDe
   const { reissueOf, reissues } = list
   if (reissueOf === null && reissues.length === 0) return null
   const link = (id: string, name: string) => (
-    <Link to={`/campaigns/${campaign}/shortlists/${id}`} className="text-action hover:underline">
+    <Link to={`/campaigns/${campaign}/shortlists/${id}`} className="text-action underline">
       {name}
     </Link>
   )
@@ -37,26 +37,29 @@ export function Issues({ campaign, list }: { campaign: string; list: ShortlistDe
   )
 }
 
-/** How many rows entered, moved and stayed at their rank. */
+/**
+ * How many rows entered, and how many of those that were there before now stand before or behind others that they stood
+ * behind or before: rows that only close a gap have not moved.
+ */
 export function differenceOf(rows: readonly Pick<ShortlistDetail['rows'][number], 'rank' | 'previous'>[]): {
   entered: number
   up: number
   down: number
   stayed: number
 } {
-  const difference = { entered: 0, up: 0, down: 0, stayed: 0 }
-  for (const { rank, previous } of rows) {
-    if (previous === null) difference.entered += 1
-    else if (previous.rank > rank) difference.up += 1
-    else if (previous.rank < rank) difference.down += 1
-    else difference.stayed += 1
-  }
+  const both = rows.flatMap(({ previous }) => (previous === null ? [] : [previous.rank]))
+  const before = new Map([...both].sort((a, b) => a - b).map((rank, place) => [rank, place]))
+  const difference = { entered: rows.length - both.length, up: 0, down: 0, stayed: 0 }
+  both.forEach((rank, place) => {
+    const gained = (before.get(rank) ?? place) - place
+    difference[gained > 0 ? 'up' : gained < 0 ? 'down' : 'stayed'] += 1
+  })
   return difference
 }
 
 function differenceWords(list: ShortlistDetail, before: EarlierIssue): string {
   const { entered, up, down, stayed } = differenceOf(list.rows)
-  return `${entered} entered, ${before.left.length} left, ${up} moved up, ${down} moved down, ${stayed} at the same rank`
+  return `${entered} entered, ${before.left.length} left; of those in both, ${up} moved up, ${down} moved down, ${stayed} kept their place`
 }
 
 function LeftRows({ campaign, before }: { campaign: string; before: EarlierIssue }) {

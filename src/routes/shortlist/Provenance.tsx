@@ -5,7 +5,7 @@ import { AssemblyCountsView } from '../../components/shortlist/AssemblyCountsVie
 import { Num } from '../../components/ui/Num.tsx'
 import { Table, Td, Th } from '../../components/ui/Table.tsx'
 import { Facts, Section } from '../../components/ui/Layout.tsx'
-import { formatNumber, formatTime } from '../../lib/numbers.ts'
+import { counted, formatNumber, formatTime } from '../../lib/numbers.ts'
 
 /** What the list was made from, as it was then. */
 export function ProvenanceSection({ campaign, shortlist }: { campaign: string; shortlist: ShortlistDetail }) {
@@ -25,6 +25,12 @@ export function ProvenanceSection({ campaign, shortlist }: { campaign: string; s
                 size={shortlist.size}
                 assembly={provenance.assembly}
               />
+              {provenance.takenOut !== undefined && (
+                <p className="mt-2 text-soft">
+                  {counted(provenance.takenOut, 'row')} of an earlier issue taken out by hand since it was
+                  drawn.
+                </p>
+              )}
             </>
           ) : (
             <p className="text-soft">
