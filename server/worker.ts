@@ -13,6 +13,7 @@ import {
   weightLinesOfText,
 } from './jobs/compute/importCandidates.ts'
 import { classCount, classNumbers } from './jobs/compute/classCount.ts'
+import { nullCandidates, spectraOfEach } from './jobs/compute/nullSpectra.ts'
 import { polytopeStructure } from './jobs/compute/polytopeStructure.ts'
 import { polytopeShape } from './jobs/compute/polytopeShape.ts'
 import { scoreCandidates } from './jobs/compute/scoreCandidates.ts'
@@ -40,6 +41,8 @@ const tasks: Tasks = {
   'candidate-geometry': candidateGeometry,
   'candidate-spectra': candidateSpectra,
   'cone-slice': coneSlice,
+  'null-candidates': nullCandidates,
+  'spectra-of-each': spectraOfEach,
   'certify-candidate': certifyCandidate,
   'class-pictures': classPictures,
   'invariants-of-each': invariantsOfEach,

@@ -1,5 +1,6 @@
 import type { CandidateSpectra, ClassPicture } from '../../shared/candidates.ts'
 import type { ConeSliceView } from '../../shared/coneSlices.ts'
+import type { NullSpectra } from '../../shared/nullSpectra.ts'
 import type { ComputedGeometry } from './compute/candidateGeometry.ts'
 import type { PolytopeStructure } from '../../shared/polytopeStructure.ts'
 import type { PolytopeShape } from './compute/polytopeShape.ts'
@@ -49,6 +50,8 @@ export interface Jobs {
   readonly spectra: RecentResults<Omit<CandidateSpectra, 'key'>>
   /** By candidate key and directions. */
   readonly slices: RecentResults<ConeSliceView>
+  /** By polytope key. */
+  readonly nullSpectra: RecentResults<NullSpectra>
   readonly pictures: RecentResults<ClassPicture>
   close(): Promise<void>
 }
@@ -153,6 +156,7 @@ export function openJobs(
     geometries: new RecentResults(60),
     spectra: new RecentResults(200),
     slices: new RecentResults(200),
+    nullSpectra: new RecentResults(200),
     pictures: new RecentResults(500),
     close: async () => {
       closing.abort(new Error('The server is shutting down.'))

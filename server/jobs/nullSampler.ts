@@ -13,7 +13,7 @@ import type { WorkSource } from './scheduler.ts'
 import type { NullProblem, ScoredScope } from './searchProblem.ts'
 
 /** All null samples are drawn with this seed: one sample per scope and rule, whoever asks for it. */
-const nullSeed = 1
+export const nullSeed = 1
 
 /** Candidates of a null sample. Fewer where each takes long: the largest polytopes need a quarter of a second. */
 export function nullSampleSize(pointsMax: number): number {

@@ -12,6 +12,7 @@ import type {
   weightLinesOfText,
 } from './compute/importCandidates.ts'
 import type { classCount, classNumbers } from './compute/classCount.ts'
+import type { nullCandidates, spectraOfEach } from './compute/nullSpectra.ts'
 import type { polytopeStructure } from './compute/polytopeStructure.ts'
 import type { polytopeShape } from './compute/polytopeShape.ts'
 import type { scoreCandidates } from './compute/scoreCandidates.ts'
@@ -39,6 +40,8 @@ export interface Tasks {
   'candidate-geometry': typeof candidateGeometry
   'candidate-spectra': typeof candidateSpectra
   'cone-slice': typeof coneSlice
+  'null-candidates': typeof nullCandidates
+  'spectra-of-each': typeof spectraOfEach
   'certify-candidate': typeof certifyCandidate
   'class-pictures': typeof classPictures
   'invariants-of-each': typeof invariantsOfEach

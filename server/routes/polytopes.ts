@@ -20,6 +20,7 @@ import {
   polytopeClassesSchema,
   polytopeStructureSchema,
 } from '../../shared/polytopeStructure.ts'
+import { nullSpectraSchema } from '../../shared/nullSpectra.ts'
 import type { ServerContext } from '../context.ts'
 import { endpoint } from '../http/endpoint.ts'
 import { uploadedText } from '../http/uploadedText.ts'
@@ -31,6 +32,7 @@ import { findPolytopes } from '../services/polytopeLookup.ts'
 import { countByHodge, listPolytopes } from '../services/polytopes.ts'
 import { summariseScope } from '../services/scopes.ts'
 import { importWeightLines } from '../services/weightLines.ts'
+import { readNullSpectra } from '../services/nullSpectra.ts'
 import { viewerOf } from '../services/viewers.ts'
 
 const upload = multer({
@@ -83,6 +85,15 @@ export function polytopeRoutes(app: Express, context: ServerContext): void {
     answer: polytopeDetailSchema,
     handle: async ({ account, params, query }) =>
       readPolytopeDetail(context, await viewerOf(manager, account.id, query.campaign), params.key),
+  })
+
+  endpoint(app, context, {
+    method: 'get',
+    path: '/api/polytopes/:key/null-spectra',
+    access: 'account',
+    answer: nullSpectraSchema,
+    lasting: true,
+    handle: ({ account, params }) => readNullSpectra(context, { accountId: account.id }, params.key),
   })
 
   endpoint(app, context, {

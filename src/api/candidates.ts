@@ -7,6 +7,7 @@ import {
   candidateSpectraSchema,
 } from '../../shared/candidates.ts'
 import { coneSliceSchema, type ConeSliceQuery } from '../../shared/coneSlices.ts'
+import { nullSpectraSchema } from '../../shared/nullSpectra.ts'
 import { request } from './request.ts'
 
 /** Geometry of a candidate: a function of its key alone, so it never goes stale. */
@@ -14,6 +15,15 @@ export const candidateQuery = (key: string) =>
   queryOptions({
     queryKey: ['candidate', key] as const,
     queryFn: ({ signal }) => request(`/candidates/${key}`, { schema: candidateGeometrySchema, signal }),
+    staleTime: Infinity,
+  })
+
+/** Spectra of unselected candidates of a polytope: computed when first asked for, which takes a while. */
+export const nullSpectraQuery = (polytope: string) =>
+  queryOptions({
+    queryKey: ['candidate-spectra', 'null', polytope] as const,
+    queryFn: ({ signal }) =>
+      request(`/polytopes/${polytope}/null-spectra`, { schema: nullSpectraSchema, signal }),
     staleTime: Infinity,
   })
 

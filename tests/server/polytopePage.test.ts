@@ -50,6 +50,20 @@ const structureOf = async ({ key }: PolytopeRow): Promise<PolytopeStructure> =>
 const classesOf = async (agent: Agent, key: string): Promise<PolytopeClasses> =>
   (await agent.get(`/api/polytopes/${key}/classes`).expect(200)).body as PolytopeClasses
 
+it('the spectra of unselected candidates of a polytope are quantiles per rank, the same each time', async () => {
+  const { key, points } = at(2, 86)
+  const { body } = await reader.get(`/api/polytopes/${key}/null-spectra`).expect(200)
+  expect(body).toMatchObject({ key, from: 1 })
+  expect(body.size).toBeGreaterThan(0)
+  const quantiles = body.quantiles as number[][]
+  expect(quantiles).toHaveLength(points - 4)
+  for (const [rank, row] of quantiles.entries()) {
+    expect([...row].sort((a, b) => a - b)).toEqual(row)
+    expect(row[2]).toBeGreaterThanOrEqual(quantiles[rank - 1]?.[2] ?? 0)
+  }
+  await reader.get('/api/polytopes/0123456789abcdef0123456789abcdef/null-spectra').expect(404)
+})
+
 describe('the structure of a polytope', () => {
   it('has the divisors of the quintic: five copies of H, with h2(O) = 4', async () => {
     const { divisors, planar, solid } = await structureOf(at(1, 101))

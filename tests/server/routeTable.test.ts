@@ -23,6 +23,7 @@ const table: readonly (readonly [string, Who])[] = [
   ['GET /api/polytopes/hodge', 'account'],
   ['GET /api/polytopes/:key', 'account'],
   ['GET /api/polytopes/:key/structure', 'account'],
+  ['GET /api/polytopes/:key/null-spectra', 'account'],
   ['GET /api/polytopes/:key/classes', 'account'],
   ['POST /api/polytopes/find', 'account'],
   ['GET /api/candidates/pictures', 'account'],

@@ -67,6 +67,7 @@ export function SpectrumPlot({
             data-chart
             width={width}
             height={height}
+            viewBox={`0 0 ${width} ${height}`}
             role="img"
             aria-label={`${title}: ${series.map(({ name, values }) => `${name ? `${name}, ` : ''}${values.length} eigenvalues from ${formatNumber(values[0] ?? 0)} to ${formatNumber(values.at(-1) ?? 0)}`).join('; ')}`}
             className="block"

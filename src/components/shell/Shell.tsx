@@ -105,7 +105,7 @@ function SignedIn({
       >
         Skip to content
       </a>
-      <header className="sticky top-0 z-30 bg-paper">
+      <header className="sticky top-0 z-30 bg-paper print:hidden">
         <div className="mx-auto flex max-w-[1440px] flex-wrap items-center gap-x-2 px-4 pt-1.5 sm:flex-nowrap sm:gap-x-4 sm:pb-1.5">
           <Link to="/campaigns" className="flex items-center gap-2 font-serif text-base font-semibold">
             <Mark />
@@ -124,7 +124,7 @@ function SignedIn({
         </div>
         <div className="graduated" aria-hidden />
       </header>
-      <main id="content" tabIndex={-1} className="mx-auto max-w-[1440px] px-4 pb-16 outline-none">
+      <main id="content" tabIndex={-1} className="mx-auto max-w-[1440px] px-4 pb-16 outline-none print:p-0">
         {settled ? (
           <Suspense fallback={<Loading what="the page" shape="page" />}>
             <Outlet />

@@ -13,6 +13,9 @@ export interface Column<Row> {
   cell: (row: Row, index: number) => ReactNode
 }
 
+/** Rows of one table on paper. */
+const printedRows = 14
+
 interface VirtualTableProps<Row> {
   label: string
   count: number
@@ -64,69 +67,78 @@ export function VirtualTable<Row>({
     if (current !== undefined && current >= 0 && current < count) virtualizer.scrollToIndex(current)
   }, [virtualizer, current, count])
   const before = items[0]?.start ?? 0
+  const printed = Math.min(items.length, printedRows)
   const after = virtualizer.getTotalSize() - (items.at(-1)?.end ?? 0)
 
   return (
-    <div
-      ref={scroller}
-      tabIndex={0}
-      role="group"
-      aria-label={`${label}, scrolls`}
-      // Its size is known and its ground opaque: scrolling lays out and paints nothing around it.
-      className={`relative overflow-auto bg-paper contain-strict ${className}`}
-      style={{ height: virtualizer.getTotalSize() + headAndBar }}
-    >
-      <table
-        aria-label={label}
-        aria-rowcount={count + 1}
-        className="w-full border-separate border-spacing-0 text-sm"
+    <>
+      <div
+        ref={scroller}
+        tabIndex={0}
+        role="group"
+        aria-label={`${label}, scrolls`}
+        // Its size is known and its ground opaque: scrolling lays out and paints nothing around it.
+        className={`relative overflow-auto bg-paper contain-strict print:h-auto! print:max-h-none! print:overflow-visible print:bg-transparent print:[contain:none] ${className}`}
+        style={{ height: virtualizer.getTotalSize() + headAndBar }}
       >
-        <thead className="sticky top-0 z-10 bg-paper">
-          <tr aria-rowindex={1}>
-            {columns.map((column) => (
-              <Th
-                key={column.key}
-                numeric={column.numeric}
-                aria-sort={column.sorted}
-                className={column.className}
-              >
-                {column.header}
-              </Th>
-            ))}
-          </tr>
-        </thead>
-        <tbody>
-          {before > 0 && (
-            <tr aria-hidden="true">
-              <td colSpan={columns.length} style={{ height: before }} className="p-0" />
+        <table
+          aria-label={label}
+          aria-rowcount={count + 1}
+          className="w-full border-separate border-spacing-0 text-sm"
+        >
+          <thead className="sticky top-0 z-10 bg-paper">
+            <tr aria-rowindex={1}>
+              {columns.map((column) => (
+                <Th
+                  key={column.key}
+                  numeric={column.numeric}
+                  aria-sort={column.sorted}
+                  className={column.className}
+                >
+                  {column.header}
+                </Th>
+              ))}
             </tr>
-          )}
-          {items.map(({ index }) => {
-            const row = rowAt(index)
-            return (
-              <tr
-                key={row ? rowKey(row) : `waiting-${index}`}
-                aria-rowindex={index + 2}
-                {...(row && rowProps?.(row, index))}
-              >
-                {row ? (
-                  <Cells row={row} index={index} columns={columns} />
-                ) : (
-                  <Td colSpan={columns.length} className="text-soft">
-                    …
-                  </Td>
-                )}
+          </thead>
+          <tbody>
+            {before > 0 && (
+              <tr aria-hidden="true" className="print:hidden">
+                <td colSpan={columns.length} style={{ height: before }} className="p-0" />
               </tr>
-            )
-          })}
-          {after > 0 && (
-            <tr aria-hidden="true">
-              <td colSpan={columns.length} style={{ height: after }} className="p-0" />
-            </tr>
-          )}
-        </tbody>
-      </table>
-    </div>
+            )}
+            {items.map(({ index }, place) => {
+              const row = rowAt(index)
+              return (
+                <tr
+                  key={row ? rowKey(row) : `waiting-${index}`}
+                  aria-rowindex={index + 2}
+                  {...(row && rowProps?.(row, index))}
+                  data-beyond-paper={place >= printedRows || undefined}
+                >
+                  {row ? (
+                    <Cells row={row} index={index} columns={columns} />
+                  ) : (
+                    <Td colSpan={columns.length} className="text-soft">
+                      …
+                    </Td>
+                  )}
+                </tr>
+              )
+            })}
+            {after > 0 && (
+              <tr aria-hidden="true" className="print:hidden">
+                <td colSpan={columns.length} style={{ height: after }} className="p-0" />
+              </tr>
+            )}
+          </tbody>
+        </table>
+      </div>
+      {count > printed && (
+        <p className="hidden text-xs text-soft print:block">
+          Printed: rows {first + 1} to {first + printed} of {count}.
+        </p>
+      )}
+    </>
   )
 }
 

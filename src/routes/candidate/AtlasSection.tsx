@@ -54,7 +54,17 @@ export function AtlasSection({ geometry }: { geometry: CandidateGeometry }) {
   return (
     <Section
       title="2-faces"
-      note="Each 2-face with its triangulation, to one scale. Pointing at a point or an edge shows it in every face that shares it; a click keeps it. By keyboard: arrows from point to point, e through the edges there, Enter keeps, Page up and Page down change the face."
+      note={
+        <>
+          Each 2-face with its triangulation, to one scale.
+          <span className="print:hidden">
+            {' '}
+            Pointing at a point or an edge shows it in every face that shares it; a click keeps it. By
+            keyboard: arrows from point to point, e through the edges there, Enter keeps, Page up and Page
+            down change the face.
+          </span>
+        </>
+      }
     >
       <ChartFrame
         title={`${geometry.triangles.length} triangles`}

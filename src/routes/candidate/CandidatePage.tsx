@@ -46,7 +46,7 @@ export function CandidatePage() {
             title={`Candidate ${detail.key.slice(0, 10)}`}
             above={<Trail campaign={campaign?.id} geometry={detail} shortlist={appearance} />}
             actions={
-              <>
+              <span className="contents print:hidden">
                 {campaign && appearance && <Steps campaign={campaign.id} appearance={appearance} />}
                 <CompareWith
                   key={detail.key}
@@ -54,7 +54,7 @@ export function CandidatePage() {
                   candidate={detail.key}
                   shortlist={appearance?.shortlistId}
                 />
-              </>
+              </span>
             }
           >
             A 2-face class of{' '}
@@ -65,6 +65,12 @@ export function CandidatePage() {
               {detail.polytope.name}
             </Link>
             , Hodge numbers ({detail.polytope.h11}, {detail.polytope.h21}).
+            <span className="hidden print:block">
+              Key <span className="font-mono">{detail.key}</span>
+              <br />
+              Permanent address{' '}
+              <span className="font-mono">{`${location.origin}/candidates/${detail.key}`}</span>
+            </span>
           </PageHead>
           {campaign && (
             <Verdicts
@@ -82,11 +88,13 @@ export function CandidatePage() {
             candidate={detail.key}
             appearance={appearance}
           />
-          <RelativesSection
-            key={`relatives-${detail.key}`}
-            campaign={campaign?.id ?? null}
-            candidate={detail.key}
-          />
+          <div className="print:hidden">
+            <RelativesSection
+              key={`relatives-${detail.key}`}
+              campaign={campaign?.id ?? null}
+              candidate={detail.key}
+            />
+          </div>
           {campaign && (
             <CommentSection key={`comments-${detail.key}`} campaign={campaign.id} candidate={detail.key} />
           )}
@@ -130,13 +138,13 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
         <DivisorTable geometry={geometry} />
       </Section>
       {geometry.components && <ComponentSection components={geometry.components} />}
-      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2 print:grid-cols-2">
         <Section
           title="Intersection numbers"
           note="Non-zero κ with i ≤ j ≤ k; below, the matrix of one divisor over j and k."
         >
           <IntersectionTable intersections={geometry.intersections} points={polytope.points} />
-          <div className="mt-4">
+          <div className="mt-4 print:hidden">
             <IntersectionMatrix geometry={geometry} />
           </div>
         </Section>
@@ -153,7 +161,7 @@ function Geometry({ geometry }: { geometry: CandidateGeometry }) {
         </Section>
       </div>
       <FibrationSection fibrations={geometry.fibrations} />
-      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2">
+      <div className="grid grid-cols-1 gap-x-8 lg:grid-cols-2 print:grid-cols-2">
         <Section
           title="Reference point"
           note="The point of the Kähler cone nearest to the origin at which every curve class counted has volume at least 1."

@@ -1,25 +1,18 @@
-import { useState, type ReactNode } from 'react'
+import { useState } from 'react'
 import { useQuery } from '@tanstack/react-query'
-import { BadgeCheck, Download } from 'lucide-react'
 import { toast } from 'sonner'
 import { type CandidateRecord } from '../../../shared/candidates.ts'
 import { type CandidateCertificates, type CertificateReport } from '../../../shared/certificates.ts'
-import {
-  candidateCertificatesQuery,
-  certificateUrl,
-  useCancelCertification,
-  useRequestCertification,
-} from '../../api/certificates.ts'
+import { candidateCertificatesQuery, useCancelCertification } from '../../api/certificates.ts'
 import { explain } from '../../api/request.ts'
-import { useTargets } from '../../api/targets.ts'
-import { CheckTable } from '../../components/certificate/CheckTable.tsx'
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { CertificateMark } from '../../components/ui/CertificateMark.tsx'
-import { Select } from '../../components/ui/Field.tsx'
 import { Section } from '../../components/ui/Layout.tsx'
 import { Empty, QueryView } from '../../components/ui/States.tsx'
-import { counted, formatDuration, formatTime } from '../../lib/numbers.ts'
+import { Certificate, CertificateSummary } from './Certificate.tsx'
+import { CertifyButtons } from './CertifyButtons.tsx'
+import { counted } from '../../lib/numbers.ts'
 
 type Appearance = CandidateRecord['appearances'][number]
 
@@ -107,7 +100,7 @@ function Certificates({
                 key={certificate.id}
                 className="flex flex-wrap items-center gap-x-3 border-b py-1 last:border-b-0"
               >
-                <Summary certificate={certificate} />
+                <CertificateSummary certificate={certificate} />
                 <Button kind="quiet" onClick={() => setChosen(certificate.id)}>
                   Show
                 </Button>
@@ -117,91 +110,6 @@ function Certificates({
         </details>
       )}
     </>
-  )
-}
-
-const subject = ({ scoring }: CertificateReport) =>
-  scoring ? `${scoring.targetName} v${scoring.targetVersion}` : 'geometry alone'
-
-function Summary({ certificate }: { certificate: CertificateReport }) {
-  const { passed, createdAt, author, engineVersion, certifierVersion } = certificate
-  return (
-    <span className="flex flex-wrap items-center gap-x-3">
-      <CertificateMark state={passed ? 'passed' : 'failed'} />
-      <span>{subject(certificate)}</span>
-      <span className="text-soft">
-        {formatTime(createdAt)}
-        {author !== null && `, asked for by ${author}`}; engine {engineVersion}, certifier {certifierVersion}
-      </span>
-    </span>
-  )
-}
-
-function Certificate({
-  candidate,
-  certificate,
-  counts,
-}: {
-  candidate: string
-  certificate: CertificateReport
-  counts: boolean
-}) {
-  const failed = certificate.checks.filter(({ result }) => result === 'fail')
-  const done = certificate.checks.filter(({ result }) => result !== 'not-done')
-  return (
-    <article aria-label={`Certificate, ${subject(certificate)}`}>
-      <div className="mb-2 flex flex-wrap items-center gap-x-4 gap-y-2">
-        <Summary certificate={certificate} />
-        <a
-          href={certificateUrl(candidate, certificate.id)}
-          download
-          title="The whole certificate as JSON, to be checked again by the command of the README"
-          className="inline-flex min-h-8 items-center gap-1.5 rounded border border-edge bg-sheet px-3 font-medium hover:bg-action-wash print:hidden"
-        >
-          <Download size={14} aria-hidden />
-          Download JSON
-        </a>
-      </div>
-      {!counts && (
-        <p className="mb-2 text-soft">
-          This is not the certificate that counts for the scoring in hand: it is older, or of another scoring.
-        </p>
-      )}
-      {failed.length > 0 && (
-        <div role="alert" className="mb-3 border-l-2 border-rejected py-1 pl-3">
-          <p className="font-medium">
-            The two roads disagree in {counted(failed.length, 'comparison')}. The candidate’s numbers are not
-            to be relied on until this is explained.
-          </p>
-          <ul>
-            {failed.map(({ id, title }) => (
-              <li key={id}>
-                <a href={`#check-${id}`} className="text-action hover:underline">
-                  {title}
-                </a>
-              </li>
-            ))}
-          </ul>
-        </div>
-      )}
-      <p className="mb-2 text-soft">
-        {counted(done.length, 'comparison')} in {formatDuration(certificate.milliseconds / 1000)}.
-      </p>
-      <CheckTable checks={certificate.checks} />
-      {certificate.notCertified.length > 0 && (
-        <>
-          <h3 className="mt-4 mb-1 text-sm">Not certified</h3>
-          <dl className="grid gap-x-4 sm:grid-cols-[max-content_minmax(0,1fr)]">
-            {certificate.notCertified.map(({ what, why }) => (
-              <div key={what} className="col-span-full grid grid-cols-subgrid border-b py-1 last:border-b-0">
-                <dt className="font-mono text-xs leading-5">{what}</dt>
-                <dd className="prose-line text-soft">{why}</dd>
-              </div>
-            ))}
-          </dl>
-        </>
-      )}
-    </article>
   )
 }
 
@@ -246,86 +154,5 @@ function Waiting({
         </div>
       ))}
     </div>
-  )
-}
-
-interface CertifyProps {
-  campaign: string
-  candidate: string
-  known?: CandidateCertificates
-}
-
-/** For the scoring in hand; for a candidate in no shortlist, for a target one chooses; or for the geometry alone. */
-function CertifyButtons({ appearance, ...props }: CertifyProps & { appearance?: Appearance }) {
-  const hasScoring = appearance ? appearance.certificate.id !== null : false
-  const hasGeometry = props.known?.certificates.some(({ scoring }) => scoring === null) ?? false
-  return (
-    <span className="flex flex-wrap items-end gap-2 print:hidden">
-      {appearance ? (
-        <CertifyButton {...props} targetVersionId={appearance.targetVersionId} again={hasScoring}>
-          {hasScoring ? 'Certify again' : `Certify for ${appearance.targetName} v${appearance.targetVersion}`}
-        </CertifyButton>
-      ) : (
-        <ForTarget {...props} />
-      )}
-      {!hasScoring && (
-        <CertifyButton {...props} targetVersionId={null} again={hasGeometry}>
-          {hasGeometry ? 'Certify the geometry again' : 'Certify the geometry alone'}
-        </CertifyButton>
-      )}
-    </span>
-  )
-}
-
-function ForTarget(props: CertifyProps) {
-  const targets = useTargets(props.campaign)
-  const [chosen, setChosen] = useState<string | null>(null)
-  const target = targets.data?.find(({ id }) => id === chosen) ?? targets.data?.[0]
-  if (!targets.data || !target) return null
-  const before = props.known?.certificates.some(
-    ({ scoring }) => scoring?.targetVersionId === target.latest.id,
-  )
-  return (
-    <>
-      <Select
-        label="For the target"
-        value={target.id}
-        onChange={(event) => setChosen(event.target.value)}
-        options={targets.data.map(
-          ({ id, name, latest }) => [id, `${name}, version ${latest.number}`] as const,
-        )}
-      />
-      <CertifyButton {...props} targetVersionId={target.latest.id} again={before ?? false}>
-        {before ? 'Certify again' : 'Certify'}
-      </CertifyButton>
-    </>
-  )
-}
-
-function CertifyButton({
-  campaign,
-  candidate,
-  known,
-  targetVersionId,
-  again,
-  children,
-}: CertifyProps & { targetVersionId: string | null; again: boolean; children: ReactNode }) {
-  const barred = useBarred('certificates.run')
-  const ask = useRequestCertification(campaign)
-  const waits = known?.waiting.some((one) => one.targetVersionId === targetVersionId) ?? false
-  return (
-    <Button
-      unavailable={barred || (waits && 'It is being certified already.')}
-      busy={ask.isPending}
-      onClick={() =>
-        ask.mutate(
-          { targetVersionId, candidateKeys: [candidate], again },
-          { onError: (error) => void toast.error(explain(error)) },
-        )
-      }
-    >
-      <BadgeCheck size={14} aria-hidden />
-      {children}
-    </Button>
   )
 }

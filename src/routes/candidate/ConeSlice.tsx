@@ -88,7 +88,7 @@ export function ConeSlice({ slice, names }: { slice: ConeSliceView; names: reado
       }
       table={<WallTable walls={slice.walls} bounding={bounding} />}
     >
-      <div className="grid gap-x-8 gap-y-3 lg:grid-cols-[minmax(0,540px)_minmax(0,1fr)]">
+      <div className="grid gap-x-8 gap-y-3 lg:grid-cols-[minmax(0,540px)_minmax(0,1fr)] print:grid-cols-2">
         <div ref={frame} className="min-w-0">
           <p aria-live="polite" className="mb-1 min-h-10 text-xs sm:min-h-5 print:hidden">
             {wall ? (
@@ -112,7 +112,8 @@ export function ConeSlice({ slice, names }: { slice: ConeSliceView; names: reado
             height={bottom + below}
             role="group"
             aria-label={`The cone in a plane through the reference point, ${lines.filter(({ bounds }) => bounds).length} walls`}
-            className="block max-w-full"
+            viewBox={`0 0 ${right + 8} ${bottom + below}`}
+            className="block max-w-full print:max-h-60"
           >
             <defs>
               <clipPath id={`slice-${slice.key}`}>
@@ -180,7 +181,7 @@ export function ConeSlice({ slice, names }: { slice: ConeSliceView; names: reado
           </svg>
           <SliceKey empty={slice.stretched.length === 0} />
         </div>
-        <div className="hidden min-w-0 lg:block">
+        <div className="hidden min-w-0 lg:block print:block print:[&_td:nth-child(n+5)]:hidden print:[&_th:nth-child(n+5)]:hidden">
           <WallTable walls={slice.walls} bounding={bounding} onPoint={setPointed} pointed={pointed} />
         </div>
       </div>

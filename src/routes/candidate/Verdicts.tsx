@@ -49,7 +49,7 @@ export function Verdicts({
     >
       <QueryView query={record} what="what this campaign knows of the candidate">
         {({ verdicts }) => (
-          <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2">
+          <div className="grid grid-cols-1 gap-x-8 gap-y-4 lg:grid-cols-2 print:grid-cols-2">
             <div>
               {appearance ? (
                 <>
