@@ -64,7 +64,7 @@ async function makeList(page: Page): Promise<string> {
     text: rule,
   })
   const searches: string[] = []
-  for (let seed = 1; seed <= 13; seed++) {
+  for (let seed = 1; seed <= 15; seed++) {
     const { id } = await api<{ id: string }>('post', `${base}/searches`, {
       name: `Random ${seed}`,
       targetVersionId: target.versions[0].id,

@@ -53,7 +53,7 @@ export function VirtualTable<Row>({
     count,
     getScrollElement: () => scroller.current,
     estimateSize: () => rowHeight,
-    overscan: 6,
+    overscan: 4,
     // Rows that come into view are drawn with the next frame, not inside the event.
     useFlushSync: false,
     scrollPaddingStart: rowHeight,
