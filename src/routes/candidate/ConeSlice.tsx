@@ -113,7 +113,7 @@ export function ConeSlice({ slice, names }: { slice: ConeSliceView; names: reado
             role="group"
             aria-label={`The cone in a plane through the reference point, ${lines.filter(({ bounds }) => bounds).length} walls`}
             viewBox={`0 0 ${right + 8} ${bottom + below}`}
-            className="block max-w-full print:max-h-60"
+            className="block max-w-full"
           >
             <defs>
               <clipPath id={`slice-${slice.key}`}>

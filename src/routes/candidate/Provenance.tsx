@@ -101,7 +101,9 @@ export function Provenance({
           </>
         )}
       </QueryView>
-      <p className="mt-3 font-mono text-xs break-all text-soft">Permanent address: /candidates/{candidate}</p>
+      <p className="mt-3 font-mono text-xs break-all text-soft print:hidden">
+        Permanent address: /candidates/{candidate}
+      </p>
     </Section>
   )
 }

@@ -73,7 +73,7 @@ function Comparison({
       {data.from === 1
         ? 'the eigenvalues of equal rank'
         : 'the largest eigenvalue only, since whole spectra would take too long'}
-      . {data.law}
+      . <span className="print:hidden">{data.law}</span>
     </p>
   )
 }
