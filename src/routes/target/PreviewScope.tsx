@@ -1,6 +1,7 @@
 import { memo } from 'react'
 import { describeScope } from '../../components/scope/scopeAddress.ts'
-import { isEmptyScope, ScopeFields } from '../../components/scope/ScopeFields.tsx'
+import { ScopeFields } from '../../components/scope/ScopeFields.tsx'
+import { ScopeFold } from '../../components/scope/ScopeFold.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { Select } from '../../components/ui/Field.tsx'
 import { type WorkScope } from './useWorkScope.ts'
@@ -20,10 +21,15 @@ export const PreviewScope = memo(function PreviewScope({
   onSize: (size: number) => void
 }) {
   return (
-    <details className="mb-3 border-b pb-2" open={isEmptyScope(scope) || undefined}>
-      <summary className="text-soft">
-        Null sample of {size} from <span className="text-ink">{describeScope(scope)}</span> · {origin}
-      </summary>
+    <ScopeFold
+      className="mb-3 border-b pb-2"
+      scope={scope}
+      summary={
+        <>
+          Null sample of {size} from <span className="text-ink">{describeScope(scope)}</span> · {origin}
+        </>
+      }
+    >
       <div className="mt-3 flex flex-col gap-3 pb-1">
         {release && (
           <Button className="self-start" onClick={release.run}>
@@ -39,6 +45,6 @@ export const PreviewScope = memo(function PreviewScope({
           options={sizes}
         />
       </div>
-    </details>
+    </ScopeFold>
   )
 })

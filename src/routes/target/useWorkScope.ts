@@ -46,7 +46,8 @@ export function useWorkScope(place: string, searched: Scope | null, proposed: Sc
   }, [stored, searched, proposed, choose, store])
 }
 
-function readScope(stored: string | null): Scope | null {
+/** A scope as it is kept in this browser; null when there is none, or it is none any more. */
+export function readScope(stored: string | null): Scope | null {
   if (stored === null) return null
   try {
     return scopeSchema.safeParse(JSON.parse(stored)).data ?? null

@@ -15,6 +15,8 @@ import { Select } from '../../../components/ui/Field.tsx'
 import { PageHead, Section } from '../../../components/ui/Layout.tsx'
 import { Empty, Failure, QueryView } from '../../../components/ui/States.tsx'
 import { formatNumber } from '../../../lib/numbers.ts'
+import { recall } from '../../../lib/remembered.ts'
+import { readScope } from '../../target/useWorkScope.ts'
 import { CostLine } from './CostLine.tsx'
 import { MethodFields } from './MethodFields.tsx'
 import { draftOfSearch, type Draft } from './searchPreset.ts'
@@ -46,7 +48,11 @@ export function NewSearchPage() {
               <ButtonLink to={`/campaigns/${campaignId}/targets/new`}>Write a target</ButtonLink>
             </Empty>
           ) : clone === null ? (
-            <Composer campaign={campaignId} targets={list} base={{}} />
+            <Composer
+              campaign={campaignId}
+              targets={list}
+              base={previewedOn(address.get('target') ?? list[0]?.id)}
+            />
           ) : (
             <QueryView query={cloned} what="the search whose settings these are">
               {(search) => <Composer campaign={campaignId} targets={list} base={draftOfSearch(search)} />}
@@ -56,6 +62,12 @@ export function NewSearchPage() {
       </QueryView>
     </>
   )
+}
+
+/** A target is usually searched where it was previewed; an address that names a scope goes before that. */
+function previewedOn(target: string | undefined): Partial<Draft> {
+  const scope = target === undefined ? null : readScope(recall(`scope.${target}`))
+  return scope ? { scope } : {}
 }
 
 const wholeNumber = (text: string) => (/^\d+$/.test(text.trim()) ? Number(text) : Number.NaN)
