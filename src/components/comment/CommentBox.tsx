@@ -70,9 +70,8 @@ export function CommentBox({
             <textarea
               {...field}
               ref={area}
-              role="combobox"
               aria-autocomplete="list"
-              aria-expanded={fitting.length > 0}
+              aria-haspopup="listbox"
               aria-controls={listId}
               aria-activedescendant={fitting.length > 0 ? `${listId}-${at}` : undefined}
               rows={3}
