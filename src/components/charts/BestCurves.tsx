@@ -1,4 +1,4 @@
-import { useEffect, useMemo, useRef } from 'react'
+import { useCallback, useEffect, useMemo, useRef, useState } from 'react'
 import uPlot from 'uplot'
 import 'uplot/dist/uPlot.min.css'
 import { useDark } from '../../lib/theme.ts'
@@ -24,7 +24,8 @@ const height = 300
 
 /** Best score so far over distinct evaluations, with what the null would have found with as many. */
 export function BestCurves({ runs, sample, budget }: BestCurvesProps) {
-  const [frame, width] = useWidth<HTMLDivElement>(720)
+  const [measured, width] = useWidth<HTMLDivElement>(720)
+  const [host, setHost] = useState<HTMLDivElement | null>(null)
   const dark = useDark()
   const plot = useRef<uPlot | null>(null)
   const evaluations = Math.max(0, ...runs.map((run) => run.evaluations))
@@ -37,8 +38,15 @@ export function BestCurves({ runs, sample, budget }: BestCurvesProps) {
   })
   const count = runs.length
 
+  // The element goes while the table is shown, and another comes after it.
+  const frame = useCallback(
+    (element: HTMLDivElement | null) => {
+      setHost(element)
+      return measured(element)
+    },
+    [measured],
+  )
   useEffect(() => {
-    const host = frame.current
     if (!host) return
     const made = new uPlot(
       options(width, count, () => latest.current.reach),
@@ -51,7 +59,7 @@ export function BestCurves({ runs, sample, budget }: BestCurvesProps) {
       plot.current = null
     }
     // The theme is part of the drawing: colours on a canvas do not follow the style sheet.
-  }, [frame, width, dark, count])
+  }, [host, width, dark, count])
 
   useEffect(() => {
     if (plot.current?.series.length === data.length) plot.current.setData(data)

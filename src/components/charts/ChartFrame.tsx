@@ -43,7 +43,9 @@ export function ChartFrame({ title, note, table, file, actions, children }: Char
           {asTable ? <ChartLine size={14} aria-hidden /> : <Table2 size={14} aria-hidden />}
         </IconButton>
       </figcaption>
-      <div ref={body}>{asTable ? <div className="max-h-80 overflow-y-auto">{table}</div> : children}</div>
+      <div ref={body} className="overflow-x-clip">
+        {asTable ? <div className="max-h-80 overflow-y-auto">{table}</div> : children}
+      </div>
     </figure>
   )
 }
