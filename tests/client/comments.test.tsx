@@ -41,7 +41,12 @@ function section(list: CommentView[], role: 'lead' | 'reader' = 'lead') {
     'POST /campaigns/c1/mentions/1/seen': undefined,
     'GET /session': { account: { ...members[0], id: 'a1', demo: false }, version: '1' },
   })
-  renderPage(<CommentSection campaign="c1" candidate={key} />, '/candidates/x', '/candidates/x#comments', role)
+  renderPage(
+    <CommentSection campaign="c1" candidate={key} />,
+    '/candidates/x',
+    '/candidates/x#comments',
+    role,
+  )
   return calls
 }
 
