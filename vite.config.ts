@@ -19,7 +19,7 @@ export default defineConfig({
           groups: [
             {
               name: 'common',
-              test: /\/(shared\/(?!targets|starterTargets|externalTables|importedCandidates|relatives)[a-zA-Z]+|src\/(?:actions|api)\/(?!candidates|classPictures|collections|externalTables|importedCandidates|relatives|comments|views|assignments)[a-zA-Z]+|src\/components\/ui\/(Button|Caution|CertificateMark|Layout|Num|States|Table|Field|VerdictMark|SearchStateMark|SearchStanding|Progress|Outcome)|src\/lib\/(numbers|remembered|theme|filterWords|saveFile))\.tsx?$/,
+              test: /\/(shared\/(?!targets|starterTargets|externalTables|importedCandidates|relatives)[a-zA-Z]+|src\/(?:actions|api)\/(?!candidates|polytopes|targets|classPictures|collections|externalTables|importedCandidates|relatives|comments|views|assignments)[a-zA-Z]+|src\/components\/ui\/(Button|Caution|Layout|Num|States|Table|Field|SearchStateMark|SearchStanding|Progress)|src\/lib\/(numbers|remembered|theme|saveFile))\.tsx?$/,
             },
           ],
         },
