@@ -10,6 +10,7 @@ import { CertificationProgress } from '../../components/certificate/Certificatio
 import { useBarred } from '../../components/shell/currentCampaign.tsx'
 import { Button, ButtonLink } from '../../components/ui/Button.tsx'
 import { counted } from '../../lib/numbers.ts'
+import { compareCandidatesAddress } from '../candidates/compare/compareAddress.ts'
 import { candidatesInAddress, startAddress } from '../searches/new/searchPreset.ts'
 import { AssignSelect } from './AssignSelect.tsx'
 import { ManyVerifiedDialog } from './ManyVerifiedDialog.tsx'
@@ -75,6 +76,9 @@ export function SelectionBar({
             ? `Certify the ${selected.length} selected`
             : `Certify all undecided (${open.length})`}
         </Button>
+        {selected.length === 2 && (
+          <ButtonLink to={compareCandidatesAddress(selected, campaign)}>Compare the two</ButtonLink>
+        )}
         <SearchFrom campaign={campaign} shortlist={shortlist} selected={selected} />
         {selected.length > 0 && (
           <Button kind="quiet" onClick={selection.clear}>
