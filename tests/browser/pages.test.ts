@@ -161,6 +161,74 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
     })
   })
 
+  it('goes from sign-in to a verdict by the keyboard alone', async () => {
+    const { page, complaints } = await openPage(browser, 1440)
+    const { keyboard } = page
+    /** Tab by tab to what has this name; the focus is always somewhere one can see. */
+    const tabTo = async (name: string | RegExp) => {
+      for (let step = 0; step < 60; step += 1) {
+        await keyboard.press('Tab')
+        const focused = page.locator(':focus')
+        await expect.poll(() => focused.count()).toBe(1)
+        const text = await focused.evaluate(
+          (element) => element.getAttribute('aria-label') ?? element.textContent,
+        )
+        if (typeof name === 'string' ? text?.trim() === name : name.test(text ?? '')) return
+      }
+      throw new Error(`Tab does not lead to ${String(name)}.`)
+    }
+    const [, email] = /(\S+@tessellary\.example)\s+reviewer/.exec(application.greeting) ?? []
+    const [, password] = /password: (.+)/.exec(application.greeting) ?? []
+
+    await page.goto(`${application.address}/sign-in`)
+    // The address has the focus from the start.
+    await page.getByLabel('E-mail address').and(page.locator(':focus')).waitFor()
+    await keyboard.type(email)
+    await keyboard.press('Tab')
+    await keyboard.type(password.trim())
+    await keyboard.press('Enter')
+    await page.waitForURL('**/campaigns')
+    await tabTo('Long axion ranges')
+    await keyboard.press('Enter')
+    await page.getByRole('heading', { level: 1, name: 'Long axion ranges' }).waitFor()
+
+    await keyboard.press('Control+k')
+    await page.getByRole('dialog').waitFor()
+    await keyboard.type('first run, best')
+    await page
+      .getByRole('option', { name: /First run, best 40/ })
+      .first()
+      .waitFor()
+    await keyboard.press('Enter')
+    await page.getByRole('heading', { level: 1, name: 'First run, best 40' }).waitFor()
+
+    const decision = page.getByLabel('Candidate in hand')
+    await keyboard.press('j')
+    await decision.getByText('Rank 2').waitFor()
+    await keyboard.press('r')
+    // It is rejected, and the next one is in hand.
+    await decision.getByText('Rank 3').waitFor()
+    const rows = (word: string) =>
+      page.getByRole('row').filter({ has: page.getByText(word, { exact: true }) })
+    await rows('rejected').waitFor()
+    await keyboard.press('v')
+    await page.getByRole('dialog', { name: 'Verify by override' }).waitFor()
+    await page.locator('textarea:focus').waitFor()
+    await keyboard.type('compared with the list of the first paper by hand')
+    await tabTo('Verify by override')
+    await keyboard.press('Enter')
+    await rows('verified by override').waitFor()
+    await keyboard.press('?')
+    await page.getByRole('dialog').getByText('Triage').first().waitFor()
+    await keyboard.press('Escape')
+    await keyboard.press('z')
+    await rows('verified by override').waitFor({ state: 'detached' })
+    await keyboard.press('o')
+    await page.getByRole('heading', { level: 1, name: /^Candidate / }).waitFor()
+    expect(complaints).toEqual([])
+    await page.context().close()
+  })
+
   it('lays searches side by side that were ticked in the list', async () => {
     const { page, complaints } = await openPage(browser, 1440)
     await signInAs(page, application, 'reader')
