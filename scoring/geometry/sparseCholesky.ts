@@ -1,4 +1,5 @@
 import { eliminationPlan, placeOf, type EliminationPlan } from './eliminationPlan.ts'
+import { innerProduct } from './innerProduct.ts'
 import type { EliminationOrder } from './minimumDegree.ts'
 
 /**
@@ -94,9 +95,9 @@ export class SparseCholesky {
       for (let j = 0, other = base; j < i; other += ++j) {
         values[own + j] = aside[order.order[sparse + j]]
           ? 0
-          : (values[own + j] - product(values, own, other, j)) * values[other + j]
+          : (values[own + j] - innerProduct(values, own, other, j)) * values[other + j]
       }
-      const pivot = values[own + i] - product(values, own, own, i)
+      const pivot = values[own + i] - innerProduct(values, own, own, i)
       if (!(pivot > least[sparse + i])) {
         if (!setAside) return false
         aside[order.order[sparse + i]] = 1
@@ -158,21 +159,4 @@ export class SparseCholesky {
     }
     for (let p = 0; p < size; p++) x[variables[p]] = y[p]
   }
-}
-
-/** Inner product of `length` values from a and from b on, summed in four strands. */
-function product(values: Float64Array, a: number, b: number, length: number): number {
-  let s0 = 0
-  let s1 = 0
-  let s2 = 0
-  let s3 = 0
-  let k = 0
-  for (; k + 3 < length; k += 4) {
-    s0 += values[a + k] * values[b + k]
-    s1 += values[a + k + 1] * values[b + k + 1]
-    s2 += values[a + k + 2] * values[b + k + 2]
-    s3 += values[a + k + 3] * values[b + k + 3]
-  }
-  for (; k < length; k++) s0 += values[a + k] * values[b + k]
-  return s0 + s1 + (s2 + s3)
 }
