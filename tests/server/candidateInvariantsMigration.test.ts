@@ -1,21 +1,13 @@
 import { afterEach, beforeEach, expect, it } from 'vitest'
 import type { DataSource } from 'typeorm'
-import { createDataSource } from '../../server/data-source.ts'
 import { CandidateInvariants1796200400000 as Migration } from '../../server/migrations/1796200400000-candidateInvariants.ts'
-import { migrations } from '../../server/migrations/index.ts'
+import { schemaBefore } from './support/schemaBefore.ts'
 
 let source: DataSource
 
 /** The schema just before the migration, with a candidate in it. */
 beforeEach(async () => {
-  source = createDataSource(':memory:')
-  await source.initialize()
-  await source.query('PRAGMA foreign_keys = ON')
-  const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === Migration) break
-    await new Earlier().up(runner)
-  }
+  source = await schemaBefore(Migration)
   await source.query(
     `INSERT INTO polytope ("key", name, origin, h11, h21, points, vertices, facets, latticePoints,
        dualLatticePoints, favourable, symmetryOrder, coordinates)

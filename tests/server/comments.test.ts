@@ -1,15 +1,14 @@
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { createDataSource } from '../../server/data-source.ts'
 import { CandidateRecord } from '../../server/entities/candidate.ts'
 import { Comment } from '../../server/entities/comment.ts'
 import { Comments1796500000000 } from '../../server/migrations/1796500000000-comments.ts'
-import { migrations } from '../../server/migrations/index.ts'
 import type { StreamEvent } from '../../shared/events.ts'
 import type { CommentView, MentionView } from '../../shared/comments.ts'
 import type { Role } from '../../shared/roles.ts'
 import { storedCandidate } from '../client/candidateFixture.ts'
 import { bundledEntries, loadEntries } from './support/bundledSample.ts'
 import { openTestServer, type Agent, type TestServer } from './support/testServer.ts'
+import { schemaBefore } from './support/schemaBefore.ts'
 
 let server: TestServer
 const agents = {} as Record<Role | 'stranger', Agent>
@@ -120,13 +119,8 @@ describe('comments on a candidate', () => {
 })
 
 it('the migration adds its tables and takes them away, the rest untouched', async () => {
-  const source = createDataSource(':memory:')
-  await source.initialize()
+  const source = await schemaBefore(Comments1796500000000)
   const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === Comments1796500000000) break
-    await new Earlier().up(runner)
-  }
   const insert = (statement: string) => source.query(statement)
   await insert(
     `INSERT INTO account (id, email, name, demo, createdAt) VALUES ('a', 'a@tests.example', 'A', 0, '')`,

@@ -1,21 +1,13 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { DataSource } from 'typeorm'
-import { createDataSource } from '../../server/data-source.ts'
-import { migrations } from '../../server/migrations/index.ts'
 import { ImportedCandidates1796200300000 as Migration } from '../../server/migrations/1796200300000-importedCandidates.ts'
+import { schemaBefore } from './support/schemaBefore.ts'
 
 let source: DataSource
 
 /** The schema just before the migration, with a shortlist of a search in it. */
 beforeEach(async () => {
-  source = createDataSource(':memory:')
-  await source.initialize()
-  await source.query('PRAGMA foreign_keys = ON')
-  const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === Migration) break
-    await new Earlier().up(runner)
-  }
+  source = await schemaBefore(Migration)
   const now = '2026-01-01T00:00:00.000Z'
   const rows: [table: string, values: Record<string, unknown>][] = [
     ['account', { id: 'a', email: 'a@tests.example', name: 'A', createdAt: now }],

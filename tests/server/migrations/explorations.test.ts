@@ -1,9 +1,8 @@
 import { afterEach, beforeEach, describe, expect, it } from 'vitest'
 import type { DataSource } from 'typeorm'
-import { createDataSource } from '../../../server/data-source.ts'
-import { migrations } from '../../../server/migrations/index.ts'
 import { SampledEvaluations1796300400000 as Sampled } from '../../../server/migrations/1796300400000-sampledEvaluations.ts'
 import { Explorations1796300400001 as Explored } from '../../../server/migrations/1796300400001-explorations.ts'
+import { schemaBefore } from '../support/schemaBefore.ts'
 
 let source: DataSource
 
@@ -19,14 +18,7 @@ const insert = (table: string, values: Record<string, unknown>) =>
 
 /** The schema just before the two migrations, with a search in it that ran under the older one. */
 beforeEach(async () => {
-  source = createDataSource(':memory:')
-  await source.initialize()
-  await source.query('PRAGMA foreign_keys = ON')
-  const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === Sampled) break
-    await new Earlier().up(runner)
-  }
+  source = await schemaBefore(Sampled)
   const now = '2026-01-01T00:00:00.000Z'
   const rule = { number: 1, text: 'score 1', scoringHash: 'h', authorId: 'a', createdAt: now }
   await insert('account', { id: 'a', email: 'a@tests.example', name: 'A', createdAt: now })

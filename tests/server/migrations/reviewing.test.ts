@@ -1,23 +1,15 @@
 import { afterEach, beforeEach, expect, it } from 'vitest'
 import type { DataSource } from 'typeorm'
-import { createDataSource } from '../../../server/data-source.ts'
-import { migrations } from '../../../server/migrations/index.ts'
 import { SecondReader1796400000000 } from '../../../server/migrations/1796400000000-secondReader.ts'
 import { Reviewing1796400000001 } from '../../../server/migrations/1796400000001-reviewing.ts'
 import { Reissues1796400000002 } from '../../../server/migrations/1796400000002-reissues.ts'
+import { schemaBefore } from '../support/schemaBefore.ts'
 
 let source: DataSource
 
 /** The schema just before, with a list of one place and a verdict on it. */
 beforeEach(async () => {
-  source = createDataSource(':memory:')
-  await source.initialize()
-  await source.query('PRAGMA foreign_keys = ON')
-  const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === SecondReader1796400000000) break
-    await new Earlier().up(runner)
-  }
+  source = await schemaBefore(SecondReader1796400000000)
   for (const statement of [
     `INSERT INTO account (id, email, name, demo, createdAt) VALUES ('a', 'a@tests.example', 'A', 0, '')`,
     `INSERT INTO campaign (id, name, description, createdAt) VALUES ('c', 'C', '', '')`,

@@ -1,21 +1,13 @@
 import { afterEach, beforeEach, expect, it } from 'vitest'
 import type { DataSource } from 'typeorm'
-import { createDataSource } from '../../../server/data-source.ts'
 import { SearchEvents1796300200000 as Migration } from '../../../server/migrations/1796300200000-searchEvents.ts'
-import { migrations } from '../../../server/migrations/index.ts'
+import { schemaBefore } from '../support/schemaBefore.ts'
 
 let source: DataSource
 
 /** The schema just before the migration, with searches in every state of an ended one and a running one. */
 beforeEach(async () => {
-  source = createDataSource(':memory:')
-  await source.initialize()
-  await source.query('PRAGMA foreign_keys = ON')
-  const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === Migration) break
-    await new Earlier().up(runner)
-  }
+  source = await schemaBefore(Migration)
   await source.query(
     `INSERT INTO account ("id", email, name, createdAt) VALUES ('a', 'a@b.example', 'Ada', '2026-01-01')`,
   )

@@ -1,22 +1,14 @@
 import { afterEach, beforeEach, expect, it } from 'vitest'
 import type { DataSource } from 'typeorm'
-import { createDataSource } from '../../../server/data-source.ts'
-import { migrations } from '../../../server/migrations/index.ts'
 import { ExternalTables1796300300001 } from '../../../server/migrations/1796300300001-externalTables.ts'
 import { ShortlistAssembly1796300300000 } from '../../../server/migrations/1796300300000-shortlistAssembly.ts'
+import { schemaBefore } from '../support/schemaBefore.ts'
 
 let source: DataSource
 
 /** The schema just before, with a list of one place in it. */
 beforeEach(async () => {
-  source = createDataSource(':memory:')
-  await source.initialize()
-  await source.query('PRAGMA foreign_keys = ON')
-  const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === ShortlistAssembly1796300300000) break
-    await new Earlier().up(runner)
-  }
+  source = await schemaBefore(ShortlistAssembly1796300300000)
   for (const statement of [
     `INSERT INTO account (id, email, name, demo, createdAt) VALUES ('a', 'a@tests.example', 'A', 0, '')`,
     `INSERT INTO campaign (id, name, description, createdAt) VALUES ('c', 'C', '', '')`,

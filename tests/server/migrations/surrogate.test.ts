@@ -1,16 +1,10 @@
 import { expect, it } from 'vitest'
-import { createDataSource } from '../../../server/data-source.ts'
 import { Surrogate1796300600000 as Migration } from '../../../server/migrations/1796300600000-surrogate.ts'
-import { migrations } from '../../../server/migrations/index.ts'
+import { schemaBefore } from '../support/schemaBefore.ts'
 
 it('older searches go on without a surrogate, and the step can be undone', async () => {
-  const source = createDataSource(':memory:')
-  await source.initialize()
+  const source = await schemaBefore(Migration)
   const runner = source.createQueryRunner()
-  for (const Earlier of migrations) {
-    if (Earlier === Migration) break
-    await new Earlier().up(runner)
-  }
   await source.query('PRAGMA foreign_keys = OFF')
   await source.query(
     `INSERT INTO search ("id", campaignId, targetVersionId, name, method, scope, polytopeKeys, scopeHash, budget,
