@@ -255,6 +255,8 @@ describe.skipIf(chromiumPath === null)('every page, in a browser', { timeout: 24
     await shared.getByRole('row').nth(1).filter({ hasText: '(20)' }).waitFor()
     await page.getByRole('button', { name: 'Show “Best score so far” as a table' }).click()
     await page.getByRole('table', { name: 'Best score over evaluations' }).waitFor()
+    await page.getByRole('button', { name: 'Show “Best score so far” as a drawing' }).click()
+    await page.locator('main canvas').waitFor()
     expect(complaints).toEqual([])
     await page.context().close()
   })

@@ -1,21 +1,20 @@
-import { type Draft } from './drafts.ts'
 import { Button } from '../../components/ui/Button.tsx'
 import { counted, formatTime } from '../../lib/numbers.ts'
+import { type KeptDraft } from './useDraft.ts'
 
 /** Unsaved text of earlier visits, offered back. */
 export function DraftOffers({
-  offers,
+  kept,
   text,
-  onTake,
-  onDrop,
+  onPut,
 }: {
-  offers: readonly Draft[]
+  kept: KeptDraft
   /** In the editor; a draft that says the same needs no offer. */
   text: string
-  onTake: (draft: Draft) => void
-  onDrop: (draft: Draft) => void
+  /** Puts a text into the editor, and says so. */
+  onPut: (text: string, said: string) => void
 }) {
-  const shown = offers.filter((draft) => draft.text !== text)
+  const shown = kept.offers.filter((draft) => draft.text !== text)
   if (shown.length === 0) return null
   return (
     <section aria-label="Unsaved drafts" className="mb-3 border-l-2 border-action py-1 pl-3">
@@ -28,8 +27,15 @@ export function DraftOffers({
               <span className="text-soft"> ({counted(draft.text.trim().split('\n').length, 'line')})</span>
             </span>
             <span className="flex gap-1">
-              <Button onClick={() => onTake(draft)}>Go on with it</Button>
-              <Button kind="quiet" onClick={() => onDrop(draft)}>
+              <Button
+                onClick={() => {
+                  kept.take(draft)
+                  onPut(draft.text, 'The draft is in the editor.')
+                }}
+              >
+                Go on with it
+              </Button>
+              <Button kind="quiet" onClick={() => kept.drop(draft)}>
                 Drop it
               </Button>
             </span>

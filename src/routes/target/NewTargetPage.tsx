@@ -127,15 +127,7 @@ export function NewTargetPage() {
         </Button>
       </form>
       <StarterChoice chosen={starter} onChoose={choose} />
-      <DraftOffers
-        offers={draft.offers}
-        text={text}
-        onDrop={draft.drop}
-        onTake={(offer) => {
-          draft.take(offer)
-          put(offer.text, 'The draft is in the editor.')
-        }}
-      />
+      <DraftOffers kept={draft} text={text} onPut={put} />
       <Workbench
         campaign={campaignId}
         text={text}

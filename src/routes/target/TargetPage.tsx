@@ -105,17 +105,7 @@ function Target({ campaign, target }: { campaign: string; target: TargetDetail }
         {latest && `Version ${latest.number}, saved ${formatTime(latest.createdAt)} by ${latest.author}`}
         {changed && <span className="text-found"> · changed since</span>}
       </PageHead>
-      {!barred && (
-        <DraftOffers
-          offers={draft.offers}
-          text={text}
-          onDrop={draft.drop}
-          onTake={(offer) => {
-            draft.take(offer)
-            put(offer.text, 'The draft is in the editor.')
-          }}
-        />
-      )}
+      {!barred && <DraftOffers kept={draft} text={text} onPut={put} />}
       <Workbench
         campaign={campaign}
         target={target}
