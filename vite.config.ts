@@ -14,7 +14,7 @@ export default defineConfig({
     manifest: true,
     rolldownOptions: {
       output: {
-        advancedChunks: {
+        codeSplitting: {
           // Small modules that nearly every page needs compress better together than as fifty files.
           groups: [
             {
