@@ -59,9 +59,10 @@ export function superscript(exponent: number): string {
 
 /**
  * Decimals that a column of rounded values is written with so that their points stand under each other, or null
- * when they are too far apart for that and each keeps its own significant digits.
+ * when they are too far apart for that and each keeps its own significant digits. None where all are whole.
  */
 export function columnDecimals(values: readonly number[], digits: number): number | null {
+  if (values.length > 0 && values.every(Number.isInteger)) return 0
   const sizes = values.map(Math.abs).filter((size) => size > 0 && Number.isFinite(size))
   if (sizes.length === 0) return null
   const most = Math.floor(Math.log10(Math.max(...sizes)))

@@ -1,8 +1,14 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
-import { counted, formatDuration, formatNumber, formatPercent, numberParts } from '../../src/lib/numbers.ts'
+import { columnDecimals, counted, formatDuration, formatNumber, formatPercent, numberParts } from '../../src/lib/numbers.ts'
 
 describe('numbers as they are written', () => {
+  it('keeps whole columns whole, and lines the points of others up', () => {
+    expect(columnDecimals([86, 7, -3], 6)).toBe(0)
+    expect(columnDecimals([86, 7.5], 6)).toBe(4)
+    expect(columnDecimals([], 6)).toBeNull()
+  })
+
   it('keeps integers exact and groups long ones', () => {
     expect(formatNumber(491)).toBe('491')
     expect(formatNumber(9999)).toBe('9999')

@@ -2,7 +2,7 @@ import { type Cell, type OutcomeView } from '../../../shared/outcomes.ts'
 import { columnDecimals, formatNumber } from '../../lib/numbers.ts'
 import { Num } from './Num.tsx'
 
-/** How the score and the report columns of one table are written: shared decimals, null for exact integers. */
+/** How the score and the report columns of one table are written: shared decimals, or null where each has its own digits. */
 export interface OutcomeFormat {
   score: number | null
   report: ReadonlyMap<string, number | null>
@@ -24,7 +24,7 @@ export function outcomeFormat(outcomes: readonly OutcomeView[]): OutcomeFormat {
   }
   const report = new Map<string, number | null>()
   for (const [name, values] of columns) {
-    report.set(name, values.every(Number.isInteger) ? null : columnDecimals(values, 5))
+    report.set(name, columnDecimals(values, 5))
   }
   return { score: columnDecimals(scores, 6), report }
 }
@@ -33,7 +33,7 @@ export function outcomeFormat(outcomes: readonly OutcomeView[]): OutcomeFormat {
 export function Outcome({ outcome, decimals }: { outcome: OutcomeView; decimals?: number | null }) {
   switch (outcome.kind) {
     case 'feasible':
-      return <Num value={outcome.score} digits={6} decimals={decimals} rounded />
+      return <Num value={outcome.score} digits={6} decimals={decimals} />
     case 'infeasible':
       return (
         <span
