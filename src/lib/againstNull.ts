@@ -50,6 +50,7 @@ export function enrichmentText({ ratio, interval }: Enrichment, isExact: boolean
   const times = ratio === null ? null : `${formatNumber(ratio, 3)} times`
   if (interval === null || isExact) return times ?? 'the null has no hit'
   const [low, high] = interval
+  if (low === 0 && high === null) return 'neither has a hit'
   const range =
     high === null
       ? `at least ${formatNumber(low, 3)} times`

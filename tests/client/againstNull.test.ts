@@ -65,6 +65,7 @@ describe('a search against its null', () => {
     expect(five.rate?.interval).toEqual([0.2, 0.2])
     expect(five.enrichment && enrichmentText(five.enrichment, false)).toBe('20 times (3.70 to 100, 95 %)')
     expect(two.enrichment && enrichmentText(two.enrichment, false)).toBe('20 times')
+    expect(enrichmentText({ ratio: null, interval: [0, null] }, false)).toBe('neither has a hit')
   })
 
   it('leaves out what the search was given', () => {
