@@ -9,6 +9,7 @@ export function Notices() {
       theme={theme}
       position="top-center"
       offset={{ top: 64 }}
+      style={{ fontFamily: "'IBM Plex Sans Variable', system-ui, sans-serif" }}
       toastOptions={{
         style: {
           background: 'var(--sheet)',
