@@ -57,6 +57,8 @@ const running: Preview = {
   worst: [],
 }
 
+const one = { count: 1, h11Min: 50, h11Max: 50, pointsMax: 60 }
+let scope: object = one
 let calls: Call[] = []
 let asked = 0
 
@@ -81,13 +83,14 @@ const previews = () => calls.filter(({ path }) => path === '/campaigns/c1/previe
 
 beforeEach(() => {
   localStorage.clear()
+  scope = one
   asked = 0
   calls = stubApi({
     'GET /campaigns/c1/targets/t1': target,
     'GET /campaigns/c1/targets/t1/uses': uses,
     'POST /campaigns/c1/previews': () => ({ ...running, id: `p${++asked}` }),
     'DELETE /campaigns/c1/previews': undefined,
-    'GET /campaigns/c1/scope': { count: 1, h11Min: 50, h11Max: 50, pointsMax: 60 },
+    'POST /campaigns/c1/scope': () => scope,
   })
 })
 afterEach(() => {
@@ -112,6 +115,16 @@ describe('the page of a target', () => {
     expect((previews()[2]?.body as { text: string }).text).toContain('score -reach')
     unmount()
     await waitFor(() => expect(previews().at(-1)?.method).toBe('DELETE'))
+  })
+
+  it('asks for no preview while no polytope is in the scope, and for one when there is', async () => {
+    scope = { count: 0, h11Min: null, h11Max: null, pointsMax: null }
+    const { client } = open()
+    await screen.findByText('No polytope matches; widen the filter.')
+    expect(previews()).toEqual([])
+    scope = one
+    await act(() => client.invalidateQueries({ queryKey: ['polytopes'] }))
+    await waitFor(() => expect(previews()).toHaveLength(1))
   })
 
   it('shows reasons at the place where they were written', async () => {

@@ -1,4 +1,4 @@
-import { useEffect, useState } from 'react'
+import { useState } from 'react'
 import { keepPreviousData, useQuery } from '@tanstack/react-query'
 import { X } from 'lucide-react'
 import { maximumScope, type PolytopeFilter, type Scope } from '../../../shared/polytopes.ts'
@@ -9,9 +9,9 @@ import { counted, formatNumber } from '../../lib/numbers.ts'
 import { changedFilter } from '../../lib/libraryAddress.ts'
 import { CollectionSelect } from '../collection/CollectionSelect.tsx'
 import { FilterFields } from '../filter/FilterFields.tsx'
-import { LibraryLoading, useLibraryLoading } from '../library/LibraryLoading.tsx'
 import { IconButton } from '../ui/Button.tsx'
 import { TextField } from '../ui/Field.tsx'
+import { NothingMatches } from './NothingMatches.tsx'
 
 interface ScopeFieldsProps {
   campaign: string
@@ -114,22 +114,6 @@ export function ScopeSummary({ campaign, scope }: { campaign: string; scope: Sco
       {pointsMax !== null && <>, up to {counted(pointsMax, 'point')}</>}
       {count > maximumScope && `; a scope holds at most ${formatNumber(maximumScope)}`}
     </p>
-  )
-}
-
-/** While the bundled library is being loaded, what matches may still come: it is counted again as polytopes arrive. */
-function NothingMatches({ campaign, again }: { campaign: string; again: () => unknown }) {
-  const loading = useLibraryLoading(campaign)
-  const loaded = loading?.loaded
-  useEffect(() => {
-    if (loaded !== undefined) again()
-  }, [loaded, again])
-  if (!loading) return <p className="text-rejected">No polytope matches; widen the filter.</p>
-  return (
-    <>
-      <p className="text-soft">None of those loaded so far matches.</p>
-      <LibraryLoading loading={loading} />
-    </>
   )
 }
 

@@ -2,6 +2,7 @@ import { memo, type ReactNode } from 'react'
 import { type Places } from '../../../scoring/index.ts'
 import { type Preview } from '../../../shared/targets.ts'
 import { Histogram } from '../../components/charts/Histogram.tsx'
+import { NothingMatches } from '../../components/scope/NothingMatches.tsx'
 import { Button } from '../../components/ui/Button.tsx'
 import { Caution } from '../../components/ui/Caution.tsx'
 import { Num } from '../../components/ui/Num.tsx'
@@ -34,7 +35,8 @@ export const PreviewPanel = memo(function PreviewPanel({
   places,
   onPlace,
 }: PreviewPanelProps) {
-  const { preview, outdated, error, retry, starting } = state
+  const { preview, outdated, countAgain, error, retry, starting } = state
+  if (countAgain) return <NothingMatches campaign={campaign} again={countAgain} />
   if (error) return <Failure title="The preview did not start." error={error} retry={retry} />
   if (!preview) {
     if (!sound) return <Empty title="The preview waits for a rule without errors." />

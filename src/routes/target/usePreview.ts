@@ -2,6 +2,7 @@ import { useCallback, useEffect, useMemo, useRef } from 'react'
 import { keepPreviousData, useQuery, useQueryClient } from '@tanstack/react-query'
 import { type Scope } from '../../../shared/polytopes.ts'
 import { type Preview } from '../../../shared/targets.ts'
+import { scopeQuery } from '../../api/polytopes.ts'
 import { previewKey, previewQuery, startPreview, stopPreview } from '../../api/previews.ts'
 import { isEmptyScope } from '../../components/scope/ScopeFields.tsx'
 import { useDelayed } from '../../lib/useDelayed.ts'
@@ -19,6 +20,8 @@ export interface PreviewState {
   preview: Preview | null
   outdated: boolean
   starting: boolean
+  /** Nothing is asked while no polytope is in the scope; counts again. */
+  countAgain: (() => unknown) | null
   error: unknown
   retry: () => void
 }
@@ -41,7 +44,11 @@ export function usePreview(campaign: string, { rule, scope, size, seed }: Previe
   const sound = rule !== null
   const wanted = sound ? JSON.stringify({ text: rule, scope, size, seed }) : ''
   const settled = useDelayed(wanted, typingPause)
-  const ready = sound && settled === wanted && !isEmptyScope(scope)
+  const counted = useDelayed(scope, typingPause)
+  const count = useQuery({ ...scopeQuery(campaign, counted), enabled: !isEmptyScope(counted) })
+  const isVoid = count.data?.count === 0
+  const ready =
+    sound && settled === wanted && !isEmptyScope(scope) && (count.isError || (count.isSuccess && !isVoid))
 
   const start = useQuery({
     queryKey: ['preview-start', campaign, settled],
@@ -92,8 +99,9 @@ export function usePreview(campaign: string, { rule, scope, size, seed }: Previe
   }, [replaced, settled, id, refetch])
   const retry = useCallback(() => void refetch(), [refetch])
   const error = ready && start.isError ? start.error : null
+  const countAgain = isVoid ? count.refetch : null
   return useMemo(
-    () => ({ preview: data ?? null, outdated, starting: start.isFetching, error, retry }),
-    [data, outdated, start.isFetching, error, retry],
+    () => ({ preview: data ?? null, outdated, starting: start.isFetching, countAgain, error, retry }),
+    [data, outdated, start.isFetching, countAgain, error, retry],
   )
 }
