@@ -1,6 +1,13 @@
 // @vitest-environment happy-dom
 import { describe, expect, it } from 'vitest'
-import { columnDecimals, counted, formatDuration, formatNumber, formatPercent, numberParts } from '../../src/lib/numbers.ts'
+import {
+  columnDecimals,
+  counted,
+  formatDuration,
+  formatNumber,
+  formatPercent,
+  numberParts,
+} from '../../src/lib/numbers.ts'
 
 describe('numbers as they are written', () => {
   it('keeps whole columns whole, and lines the points of others up', () => {
